@@ -1,0 +1,15 @@
+/** What defines a homogeneous universe here. Masses in eV, temperatures in kelvin, H0 in km/s/Mpc. */
+export interface CosmologyParameters {
+  readonly h0KmSMpc: number;
+  /** Baryons plus cold dark matter today. Neutrinos are NOT inside: they are added from their masses. */
+  readonly omegaM0: number;
+  /** Dark energy today, or 'flat': whatever closes the sum to 1. */
+  readonly omegaDe0: number | 'flat';
+  /** Chevallier-Polarski-Linder: w(a) = w0 + wa (1 - a). */
+  readonly w0: number;
+  readonly wa: number;
+  /** 0 leaves out radiation and neutrinos. */
+  readonly tCmbK: number;
+  readonly nEff: number;
+  readonly neutrinoMassesEv: readonly number[];
+}

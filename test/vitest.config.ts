@@ -1,0 +1,14 @@
+import { defineConfig } from 'vitest/config';
+
+export default defineConfig({
+  root: new URL('..', import.meta.url).pathname,
+  test: {
+    include: [
+      'test/{core,reference,command,hosts,engine,rules}/**/*.test.{ts,tsx}',
+      'test/desktop/**/*.test.ts',
+    ],
+    environment: 'node',
+    testTimeout: 60_000,
+    hookTimeout: 60_000,
+  },
+});
