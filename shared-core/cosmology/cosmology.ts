@@ -50,6 +50,8 @@ export interface Cosmology {
 export interface BackgroundTable {
   comovingMpc(z: number): number;
   lookbackGyr(z: number): number;
+  redshiftAtComovingMpc(comovingMpc: number): number;
+  redshiftAtLookbackGyr(lookbackGyr: number): number;
   /** Fills the outputs from the redshifts; arrays of one length; NaN where z is outside 0..1100. */
   fill(redshift: Float64Array, comovingMpc: Float64Array, lookbackGyr: Float64Array | null): void;
 }

@@ -27,7 +27,7 @@ export function photonDensity(tCmbK: number, h0KmSMpc: number): number {
 export function omegaMassiveNeutrinos(parameters: CosmologyParameters): number {
   const neutrinos = createNeutrinos(parameters);
   if (!neutrinos.hasMassive) return 0;
-  return photonDensity(parameters.tCmbK, parameters.h0KmSMpc) * neutrinos.massive(1);
+  return photonDensity(parameters.tCmbK, parameters.h0KmSMpc) * neutrinos.massive(0);
 }
 
 /**
@@ -41,17 +41,17 @@ export function createExpansion(parameters: CosmologyParameters): Expansion {
   const neutrinos = createNeutrinos(parameters);
   const radiation = omegaGamma0 * (1 + neutrinos.massless);
   const hasMassive = omegaGamma0 > 0 && neutrinos.hasMassive;
-  const omegaNu0 = omegaGamma0 * (neutrinos.massless + (hasMassive ? neutrinos.massive(1) : 0));
+  const omegaNu0 = omegaGamma0 * (neutrinos.massless + (hasMassive ? neutrinos.massive(0) : 0));
 
   const rest = omegaM0 + omegaGamma0 + omegaNu0;
   const omegaDe0 = parameters.omegaDe0 === 'flat' ? 1 - rest : parameters.omegaDe0;
-  const omegaK0 = parameters.omegaDe0 === 'flat' ? 0 : 1 - rest - omegaDe0;
+  const omegaK0 = parameters.omegaDe0 === 'flat' ? 0 : unlessRounding(1 - rest - omegaDe0);
 
   const isConstant = (w0 === -1 && wa === 0) || omegaDe0 === 0;
   const darkPower = 3 * (1 + w0 + wa);
   const eSquared = (u: number) => {
     const x = Math.exp(u);
-    const relativistic = hasMassive ? radiation + omegaGamma0 * neutrinos.massive(x) : radiation;
+    const relativistic = hasMassive ? radiation + omegaGamma0 * neutrinos.massive(u) : radiation;
     const dark = isConstant ? omegaDe0 : omegaDe0 * Math.exp(darkPower * u + 3 * wa * Math.expm1(-u));
     return x * x * (x * (omegaM0 + x * relativistic) + omegaK0) + dark;
   };
@@ -70,6 +70,11 @@ export function createExpansion(parameters: CosmologyParameters): Expansion {
       isConstant ? [0, omegaDe0] : [darkPower, omegaDe0 * Math.exp(-3 * wa)],
     ]),
   };
+}
+
+/** Densities that miss the sum of 1 by the rounding of their addition make a flat universe. */
+function unlessRounding(omegaK0: number): number {
+  return Math.abs(omegaK0) <= 4 * Number.EPSILON ? 0 : omegaK0;
 }
 
 function earlyLaw(terms: readonly (readonly [power: number, coefficient: number])[]) {
