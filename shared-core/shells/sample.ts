@@ -1,0 +1,94 @@
+import { argsort } from '../numerics/sorting.ts';
+
+/**
+ * Galaxies sorted by redshift with running sums, so that any shell's numbers cost a few binary searches.
+ * Running sums have one element more than there are galaxies; element i is the sum over the first i.
+ */
+export interface SortedSample {
+  readonly count: number;
+  /** Ascending. */
+  readonly redshift: Float64Array;
+  /** order[i]: index, in the arrays given, of the i-th galaxy by redshift. */
+  readonly order: Uint32Array;
+  readonly sumRedshift: Float64Array;
+  /** Null where every galaxy weighs 1. */
+  readonly weighted: {
+    readonly sumWeight: Float64Array;
+    readonly sumWeightSquared: Float64Array;
+    readonly sumWeightRedshift: Float64Array;
+  } | null;
+}
+
+/**
+ * Sorts and sums a sample.
+ * @param redshift of every galaxy, finite
+ * @param weight of every galaxy (same length), or null when all weigh 1
+ * @param indices which of them belong to the sample; null takes all
+ */
+export function sortSample(
+  redshift: Float64Array,
+  weight: Float64Array | null,
+  indices: Uint32Array | null = null,
+): SortedSample {
+  const chosen = indices === null ? redshift : gather(redshift, indices);
+  const order = argsort(chosen);
+  const sorted = gather(chosen, order);
+  if (indices !== null) for (let i = 0; i < order.length; i++) order[i] = indices[order[i]!]!;
+  if (weight !== null) orderTiesByWeight(sorted, order, weight);
+  const sumRedshift = runningSum(sorted.length, (i) => sorted[i]!);
+  const weighted =
+    weight === null
+      ? null
+      : {
+          sumWeight: runningSum(sorted.length, (i) => weight[order[i]!]!),
+          sumWeightSquared: runningSum(sorted.length, (i) => weight[order[i]!]! ** 2),
+          sumWeightRedshift: runningSum(sorted.length, (i) => weight[order[i]!]! * sorted[i]!),
+        };
+  return { count: sorted.length, redshift: sorted, order, sumRedshift, weighted };
+}
+
+/** How many galaxies of the sample have a redshift below z (or, with `orEqual`, not above it). */
+export function rankBelow(sample: SortedSample, z: number, orEqual = false): number {
+  const { redshift } = sample;
+  let low = 0;
+  let high = redshift.length;
+  while (low < high) {
+    const middle = (low + high) >>> 1;
+    const value = redshift[middle]!;
+    if (value < z || (orEqual && value === z)) low = middle + 1;
+    else high = middle;
+  }
+  return low;
+}
+
+function gather(values: Float64Array, indices: Uint32Array): Float64Array {
+  const out = new Float64Array(indices.length);
+  for (let i = 0; i < indices.length; i++) out[i] = values[indices[i]!]!;
+  return out;
+}
+
+// Rows of one redshift keep the order of the file after a stable sort; by weight instead, the running sums
+// (and with them the last digit of every number) do not depend on the order of the file's rows.
+function orderTiesByWeight(sorted: Float64Array, order: Uint32Array, weight: Float64Array): void {
+  for (let start = 0; start < sorted.length; ) {
+    let end = start + 1;
+    while (end < sorted.length && sorted[end] === sorted[start]) end++;
+    if (end - start > 1) order.subarray(start, end).sort((a, b) => weight[a]! - weight[b]! || a - b);
+    start = end;
+  }
+}
+
+// Neumaier's compensation: each element is the exact sum rounded once, so differences of far elements keep their digits.
+function runningSum(length: number, value: (i: number) => number): Float64Array {
+  const out = new Float64Array(length + 1);
+  let sum = 0;
+  let lost = 0;
+  for (let i = 0; i < length; i++) {
+    const term = value(i);
+    const next = sum + term;
+    lost += Math.abs(sum) >= Math.abs(term) ? sum - next + term : term - next + sum;
+    sum = next;
+    out[i + 1] = sum + lost;
+  }
+  return out;
+}
