@@ -29,7 +29,7 @@ const NODES_DEGREE_7 = nodes(COEFFICIENTS);
 const NODES_DEGREE_6 = nodes(COEFFICIENTS - 1);
 
 /** Coefficients of the polynomial through f at the nodes: Newton's divided differences, then expanded. */
-function fit(
+function interpolate(
   f: (x: number) => number,
   points: Float64Array,
   start: number,
@@ -57,7 +57,7 @@ export function fitCell(
   into: Float64Array,
   at: number,
 ): void {
-  fit(f, NODES_DEGREE_7, start, width, into, at);
+  interpolate(f, NODES_DEGREE_7, start, width, into, at);
 }
 
 /**
@@ -72,7 +72,7 @@ export function fitAntiderivativeCell(
   into: Float64Array,
   at: number,
 ): number {
-  fit(f, NODES_DEGREE_6, start, width, into, at + 1);
+  interpolate(f, NODES_DEGREE_6, start, width, into, at + 1);
   into[at] = startValue;
   let rise = 0;
   for (let k = COEFFICIENTS - 1; k >= 1; k--) {
