@@ -53,7 +53,10 @@ export interface Catalogue {
   /** Null: every galaxy weighs 1. */
   readonly weight: Float64Array | null;
   readonly magnitude: Float64Array | null;
-  /** Further numeric columns that were asked for, by name. NaN where a cell was empty or no number. */
+  /**
+   * Further numeric columns that were asked for, by name. NaN where a cell was empty or no number. A column that also
+   * plays another part (a magnitude that is cut) is the same array, not a copy.
+   */
   readonly extras: ReadonlyMap<string, Float64Array>;
   /** Line of each row in its file, the first line being 1. */
   readonly line: Float64Array;
@@ -63,7 +66,8 @@ export interface Catalogue {
 export interface SetAsideRow {
   readonly line: number;
   readonly reason: SetAsideReason;
-  /** The column at fault and the text that stood there, when one cell is to blame. */
+  /** The column at fault, when one cell is to blame. */
   readonly column: string | null;
+  /** What stood there (its first 200 characters); of a row with the wrong number of fields, what the row says. */
   readonly text: string | null;
 }

@@ -1,0 +1,62 @@
+import { Refusal } from '../base/refusal.ts';
+import type { ColumnMapping } from './catalogue.ts';
+import type { Delimiter } from './formats/delimited/delimiter.ts';
+import { isBlank, openTable } from './formats/delimited/table.ts';
+import { resolveMapping, suggestMapping } from './mapping.ts';
+import type { ColumnChoice } from './spellings.ts';
+
+/** The head of a file, for choosing its columns by eye. */
+export interface Preview {
+  readonly header: readonly string[];
+  readonly delimiter: Delimiter;
+  /** First rows as text, trimmed; a row may have more or fewer cells than the header. */
+  readonly rows: readonly (readonly string[])[];
+  /** Line of each row in the file. */
+  readonly lines: readonly number[];
+  /** What the header's spelling suggests; parts that it does not are left out. */
+  readonly suggestion: ColumnChoice;
+  /** The whole mapping, or null where right ascension, declination or redshift is not found. */
+  readonly mapping: ColumnMapping | null;
+  /** Then the sentence that says what is missing. */
+  readonly problem: string | null;
+}
+
+/**
+ * Reads no more than the head of the file and lets go of the source. `rowCount` rows at most, fewer in a shorter file.
+ * Throws Refusal as openTable does.
+ */
+export async function previewCatalogue(
+  bytes: AsyncIterable<Uint8Array>,
+  rowCount = 20,
+  options: { readonly delimiter?: Delimiter | undefined } = {},
+): Promise<Preview> {
+  const table = await openTable(bytes, options);
+  const rows: string[][] = [];
+  const lines: number[] = [];
+  try {
+    if (rowCount > 0) {
+      gather: for await (const records of table.records) {
+        for (let i = 0; i < records.rows.length; i++) {
+          const row = records.rows[i]!;
+          if (isBlank(row)) continue;
+          rows.push(row.map((cell) => cell.trim()));
+          lines.push(records.lines[i]!);
+          if (rows.length === rowCount) break gather;
+        }
+      }
+    }
+  } finally {
+    await table.close();
+  }
+  const { header, delimiter } = table;
+  return { header, delimiter, rows, lines, suggestion: suggestMapping(header), ...mappingOf(header) };
+}
+
+function mappingOf(header: readonly string[]): Pick<Preview, 'mapping' | 'problem'> {
+  try {
+    return { mapping: resolveMapping(header), problem: null };
+  } catch (fault) {
+    if (fault instanceof Refusal) return { mapping: null, problem: fault.message };
+    throw fault;
+  }
+}

@@ -1,0 +1,158 @@
+import type { ColumnMapping } from './catalogue.ts';
+
+/** The parts that a column can play. z and cz exclude each other. */
+export const ROLES = ['ra', 'dec', 'z', 'cz', 'weight', 'mag', 'id'] as const;
+export type Role = (typeof ROLES)[number];
+
+/**
+ * The usual spellings of each part, likelier ones first, as `plainName` writes them (common practice, no source).
+ */
+export const SPELLINGS: Readonly<Record<Role, readonly string[]>> = {
+  ra: [
+    'ra',
+    'radeg',
+    'raj2000',
+    'raj2000deg',
+    'radegj2000',
+    'raicrs',
+    'alpha',
+    'alphaj2000',
+    'rightascension',
+    'targetra',
+    'ramean',
+    'meanra',
+    'plugra',
+    'alphadeg',
+  ],
+  dec: [
+    'dec',
+    'decdeg',
+    'de',
+    'dedeg',
+    'dej2000',
+    'decj2000',
+    'decj2000deg',
+    'decdegj2000',
+    'deicrs',
+    'decicrs',
+    'delta',
+    'deltaj2000',
+    'declination',
+    'targetdec',
+    'decmean',
+    'meandec',
+    'plugdec',
+    'decl',
+    'deltadeg',
+  ],
+  z: [
+    'redshift',
+    'zspec',
+    'specz',
+    'spectroscopicredshift',
+    'redshiftspec',
+    'zbest',
+    'zfinal',
+    'zhelio',
+    'zhel',
+    'zcmb',
+    'zred',
+    'zobs',
+    'zgal',
+    'z',
+    'zphot',
+    'photz',
+    'photoz',
+    'zphoto',
+    'redshiftphot',
+  ],
+  cz: [
+    'cz',
+    'czhelio',
+    'czhel',
+    'czcmb',
+    'v',
+    'vel',
+    'velocity',
+    'vhelio',
+    'vhel',
+    'helvel',
+    'heliovel',
+    'heliocentricvelocity',
+    'radialvelocity',
+    'radvel',
+    'rv',
+    'vr',
+    'hrv',
+    'vcmb',
+    'vopt',
+    'recessionvelocity',
+  ],
+  weight: ['weight', 'w', 'wei', 'wt', 'weights', 'wtot', 'weighttot', 'totalweight', 'wcomp', 'weightcomp'],
+  mag: [
+    'mag',
+    'magnitude',
+    'appmag',
+    'apparentmagnitude',
+    'rmag',
+    'magr',
+    'imag',
+    'magi',
+    'gmag',
+    'magg',
+    'zmag',
+    'magz',
+    'bmag',
+    'magb',
+    'vmag',
+    'magv',
+    'jmag',
+    'magj',
+    'hmag',
+    'magh',
+    'kmag',
+    'magk',
+    'ksmag',
+    'bjmag',
+    'bj',
+  ],
+  id: [
+    'id',
+    'name',
+    'objid',
+    'objectid',
+    'object',
+    'objname',
+    'sourceid',
+    'source',
+    'targetid',
+    'specobjid',
+    'galaxyid',
+    'galid',
+    'galaxy',
+    'designation',
+    'identifier',
+    'catid',
+    'uid',
+  ],
+};
+
+/** What each part is called in a sentence. */
+export const ROLE_NAMES: Readonly<Record<Role, string>> = {
+  ra: 'right ascension',
+  dec: 'declination',
+  z: 'redshift',
+  cz: 'velocity',
+  weight: 'weight',
+  mag: 'magnitude',
+  id: 'name',
+};
+
+/** Some parts may already be known: given by hand, or saved in a study. Null: no such column, and none looked for. */
+export type ColumnChoice = Partial<ColumnMapping>;
+
+/** A column's name without case, brackets (and the unit in them), underscores, spaces and points. */
+export function plainName(name: string): string {
+  const withoutUnit = name.replace(/\([^)]*\)|\[[^\]]*\]/g, '');
+  return withoutUnit.toLowerCase().replace(/[^\p{L}\p{N}]/gu, '');
+}
