@@ -1,0 +1,12 @@
+import { errorCode } from './fileTrouble.ts';
+
+/** True when a process of this machine has this number, whoever owns it. */
+export function isProcessAlive(pid: number): boolean {
+  if (!Number.isSafeInteger(pid) || pid <= 0) return false;
+  try {
+    process.kill(pid, 0);
+    return true;
+  } catch (error) {
+    return errorCode(error) === 'EPERM';
+  }
+}
