@@ -18,6 +18,8 @@ const GAUSS_WEIGHTS = [
 ];
 
 const MAX_DEPTH = 60;
+/** However short, a part may err by this share of the tolerance: an end like that of a square root converges. */
+const LEAST_SHARE = 1 / 64;
 /** Below this share of the sum of |f| a difference of the two rules is rounding, not error. */
 const ROUNDING = 1e-15;
 
@@ -35,21 +37,37 @@ export function integrate(f: (x: number) => number, a: number, b: number, relati
   const whole = gaussKronrod(f, a, b);
   const tolerance = relativeTolerance * whole.absolute;
   if (whole.error <= Math.max(tolerance, ROUNDING * whole.absolute)) return whole.value;
-  return halves(f, a, b, tolerance, 0);
+  return halves(f, a, b, tolerance, 1, 0);
 }
 
-function halves(f: (x: number) => number, a: number, b: number, tolerance: number, depth: number): number {
+function halves(
+  f: (x: number) => number,
+  a: number,
+  b: number,
+  tolerance: number,
+  share: number,
+  depth: number,
+): number {
   if (depth >= MAX_DEPTH) {
     throw new Refusal(`An integral near ${a} does not converge; expected a function without a pole there.`);
   }
   const middle = (a + b) / 2;
-  return part(f, a, middle, tolerance / 2, depth + 1) + part(f, middle, b, tolerance / 2, depth + 1);
+  return (
+    part(f, a, middle, tolerance, share / 2, depth + 1) + part(f, middle, b, tolerance, share / 2, depth + 1)
+  );
 }
 
-function part(f: (x: number) => number, a: number, b: number, tolerance: number, depth: number): number {
+function part(
+  f: (x: number) => number,
+  a: number,
+  b: number,
+  tolerance: number,
+  share: number,
+  depth: number,
+): number {
   const rule = gaussKronrod(f, a, b);
-  if (rule.error <= Math.max(tolerance, ROUNDING * rule.absolute)) return rule.value;
-  return halves(f, a, b, tolerance, depth);
+  const allowed = Math.max(tolerance * Math.max(share, LEAST_SHARE), ROUNDING * rule.absolute);
+  return rule.error <= allowed ? rule.value : halves(f, a, b, tolerance, share, depth);
 }
 
 function gaussKronrod(f: (x: number) => number, a: number, b: number) {

@@ -102,25 +102,33 @@ function finishRuns(values: Float64Array, keys: Uint32Array, order: Uint32Array)
   const count = keys.length;
   let start = 0;
   while (start < count) {
+    const key = keys[start]!;
     let end = start + 1;
-    while (end < count && keys[end] === keys[start]) end++;
-    if (end - start > SHORT_RUN) {
-      // A clump: sort it by itself, where its own range gives finer keys
-      const run = order.slice(start, end);
-      const inner = argsort(Float64Array.from(run, (row) => values[row]!));
-      for (let i = 0; i < inner.length; i++) order[start + i] = run[inner[i]!]!;
-    } else {
-      for (let i = start + 1; i < end; i++) {
-        const row = order[i]!;
-        const value = values[row]!;
-        let j = i - 1;
-        while (j >= start && values[order[j]!]! > value) {
-          order[j + 1] = order[j]!;
-          j--;
-        }
-        order[j + 1] = row;
-      }
-    }
+    while (end < count && keys[end] === key) end++;
+    if (end - start > SHORT_RUN) sortClump(values, order, start, end);
+    else if (end - start > 1) sortByInsertion(values, order, start, end);
     start = end;
   }
+}
+
+function sortByInsertion(values: Float64Array, order: Uint32Array, start: number, end: number): void {
+  for (let i = start + 1; i < end; i++) {
+    const row = order[i]!;
+    const value = values[row]!;
+    let j = i - 1;
+    while (j >= start && values[order[j]!]! > value) {
+      order[j + 1] = order[j]!;
+      j--;
+    }
+    order[j + 1] = row;
+  }
+}
+
+/** Many rows of one key, equal more often than not; otherwise their own range gives finer keys. */
+function sortClump(values: Float64Array, order: Uint32Array, start: number, end: number): void {
+  const run = order.slice(start, end);
+  const inner = new Float64Array(run.length);
+  for (let i = 0; i < inner.length; i++) inner[i] = values[run[i]!]!;
+  const innerOrder = argsort(inner);
+  for (let i = 0; i < innerOrder.length; i++) order[start + i] = run[innerOrder[i]!]!;
 }
