@@ -1,0 +1,96 @@
+import type { FieldInput } from '../types.ts';
+import { fieldFrame, type LateralExtent, lateralExtent } from './fieldFrame.ts';
+import { ringDirections } from './rings.ts';
+import { type ShellMesh, shellMesh } from './shellMesh.ts';
+import { triangulateRings } from './triangulate.ts';
+import { direction, dot, type Frame, intoFrame, outOfFrame, type Vec3 } from './vector.ts';
+
+/** A field made ready for drawing. */
+export interface PreparedField {
+  readonly name: string;
+  readonly centre: Vec3;
+  readonly frame: Frame;
+  readonly rings: readonly Float64Array[];
+  readonly extent: LateralExtent;
+  readonly mesh: ShellMesh;
+  /** Directions in which an edge of the solid runs from the observer outward. */
+  readonly corners: readonly Vec3[];
+  /** Upper and lower edge of the cone seen side-on, in the plane of the long axis. */
+  readonly upper: Vec3;
+  readonly lower: Vec3;
+}
+
+/** Turns sharper than this are corners. */
+const CORNER_COSINE = Math.cos((20 * Math.PI) / 180);
+const MOST_CORNERS = 16;
+
+/** Frame, outline, solid and edges of a field. */
+export function prepareField(field: FieldInput): PreparedField {
+  const centre = direction(field.centreRaDeg, field.centreDecDeg);
+  const frame = fieldFrame(field.centreRaDeg, field.centreDecDeg, field.positionAngleDeg);
+  const rings = field.rings.map(ringDirections).filter((ring) => ring.length >= 9);
+  const all = rings.flatMap((ring) => Array.from(ring));
+  const extent = lateralExtent(frame, all);
+  const [low, high] = angles(frame, all);
+  const inPlane = (angle: number): Vec3 => outOfFrame(frame, [Math.cos(angle), Math.sin(angle), 0]);
+  const corners = rings.flatMap(cornersOf);
+  return {
+    name: field.name ?? '',
+    centre,
+    frame,
+    rings,
+    extent,
+    mesh: shellMesh(triangulateRings(rings), rings),
+    corners: corners.length >= 3 && corners.length <= MOST_CORNERS ? corners : extremes(frame, all),
+    upper: inPlane(high),
+    lower: inPlane(low),
+  };
+}
+
+/** Least and greatest angle from the line of sight along the long axis. */
+function angles(frame: Frame, directions: readonly number[]): [number, number] {
+  let low = 0;
+  let high = 0;
+  for (let i = 0; i + 2 < directions.length; i += 3) {
+    const [x, y] = intoFrame(frame, [directions[i]!, directions[i + 1]!, directions[i + 2]!]);
+    const angle = Math.atan2(y, x);
+    low = Math.min(low, angle);
+    high = Math.max(high, angle);
+  }
+  return [low, high];
+}
+
+function cornersOf(ring: Float64Array): Vec3[] {
+  const n = ring.length / 3;
+  const at = (i: number): Vec3 => {
+    const k = 3 * (((i % n) + n) % n);
+    return [ring[k]!, ring[k + 1]!, ring[k + 2]!];
+  };
+  const out: Vec3[] = [];
+  for (let i = 0; i < n; i++) {
+    const [a, b, c] = [at(i - 1), at(i), at(i + 1)];
+    const before: Vec3 = [b[0] - a[0], b[1] - a[1], b[2] - a[2]];
+    const after: Vec3 = [c[0] - b[0], c[1] - b[1], c[2] - b[2]];
+    const cosine = dot(before, after) / (Math.hypot(...before) * Math.hypot(...after));
+    if (cosine < CORNER_COSINE) out.push(b);
+  }
+  return out;
+}
+
+/** The outline's points farthest along the two axes across the sky, both ways. */
+function extremes(frame: Frame, directions: readonly number[]): Vec3[] {
+  if (directions.length === 0) return [];
+  const best = [0, 0, 0, 0];
+  const found: (Vec3 | null)[] = [null, null, null, null];
+  for (let i = 0; i + 2 < directions.length; i += 3) {
+    const d: Vec3 = [directions[i]!, directions[i + 1]!, directions[i + 2]!];
+    const [, along, across] = intoFrame(frame, d);
+    for (const [k, value] of [along, -along, across, -across].entries()) {
+      if (value > best[k]!) {
+        best[k] = value;
+        found[k] = d;
+      }
+    }
+  }
+  return found.filter((d) => d !== null);
+}

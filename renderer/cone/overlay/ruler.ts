@@ -1,0 +1,108 @@
+import type { Tick } from '../types.ts';
+import type { Pen, Point } from './pen.ts';
+
+/** A ruler along a line of the picture. */
+export interface Ruler {
+  readonly title: string;
+  readonly ticks: readonly Tick[];
+  /** Pixel of a comoving distance on the ruler; null when it is not in the picture. */
+  readonly at: (comovingMpc: number) => Point | null;
+  /** Ends of the ruler, comoving Mpc. */
+  readonly fromMpc: number;
+  readonly toMpc: number;
+  /** A pixel away from which the marks point. */
+  readonly awayFrom: Point;
+  /** Whether the line itself is drawn. */
+  readonly line: boolean;
+}
+
+const MARK_PX = [6, 4.5, 3] as const;
+
+/** Draws line, marks, numbers and title. Numbers give way to earlier texts, the less important first. */
+export function drawRuler(pen: Pen, ruler: Ruler): void {
+  const start = ruler.at(ruler.fromMpc);
+  const end = ruler.at(ruler.toMpc);
+  if (!start || !end) return;
+  const length = Math.hypot(end[0] - start[0], end[1] - start[1]);
+  if (length < 24) return;
+  const along: Point = [(end[0] - start[0]) / length, (end[1] - start[1]) / length];
+  const middle: Point = [(start[0] + end[0]) / 2, (start[1] + end[1]) / 2];
+  let normal: Point = [-along[1], along[0]];
+  const away = (middle[0] - ruler.awayFrom[0]) * normal[0] + (middle[1] - ruler.awayFrom[1]) * normal[1];
+  if (away < 0) normal = [-normal[0], -normal[1]];
+  if (ruler.line) pen.line([start, end], pen.theme.line, 1);
+  drawTitle(pen, ruler, start, end, along, normal, length);
+  const shown = ruler.ticks
+    .filter(
+      (tick) =>
+        tick.comovingMpc >= ruler.fromMpc * (1 - 1e-9) && tick.comovingMpc <= ruler.toMpc * (1 + 1e-9),
+    )
+    .map((tick) => ({ tick, p: ruler.at(tick.comovingMpc) }))
+    .filter((entry) => entry.p !== null);
+  const marks = new Float64Array(shown.length);
+  shown.sort((a, b) => a.tick.level - b.tick.level);
+  for (const [i, { tick, p }] of shown.entries()) {
+    const place = (p![0] - start[0]) * along[0] + (p![1] - start[1]) * along[1];
+    marks[i] = place;
+    // Marks nearer than this to a more important one would run into a grey band.
+    const crowded = marks.subarray(0, i).some((other) => Math.abs(other - place) < 4.5);
+    if (crowded) continue;
+    const long = MARK_PX[Math.min(tick.level, 2)]!;
+    pen.line([p!, [p![0] + normal[0] * long, p![1] + normal[1] * long]], pen.theme.inkMuted, 1);
+    if (tick.text === '') continue;
+    const half = (Math.abs(normal[0]) * pen.measure(tick.text)) / 2 + Math.abs(normal[1]) * 6.5;
+    const out = 9 + half;
+    pen.text(tick.text, p![0] + normal[0] * out, p![1] + normal[1] * out, pen.theme.inkMuted, { gap: 6 });
+  }
+}
+
+/** The title runs along the ruler, outside its numbers, where the ruler is on the stage. */
+function drawTitle(
+  pen: Pen,
+  ruler: Ruler,
+  start: Point,
+  end: Point,
+  along: Point,
+  normal: Point,
+  length: number,
+): void {
+  const sizePx = 11;
+  const width = pen.measure(ruler.title, sizePx);
+  if (length < width + 60) return;
+  const out = 34;
+  for (const share of [0.62, 0.5, 0.75, 0.4, 0.86, 0.3]) {
+    const x = start[0] + (end[0] - start[0]) * share + normal[0] * out;
+    const y = start[1] + (end[1] - start[1]) * share + normal[1] * out;
+    const halfX = (Math.abs(along[0]) * width) / 2 + Math.abs(along[1]) * 7;
+    const halfY = (Math.abs(along[1]) * width) / 2 + Math.abs(along[0]) * 7;
+    const boxes = slices(x, y, along, width, sizePx);
+    const inStage = x - halfX > 4 && x + halfX < pen.width - 4 && y - halfY > 4 && y + halfY < pen.height - 4;
+    if (!inStage || !boxes.every((box) => pen.labels.isFree(box, 0))) continue;
+    for (const box of boxes) pen.labels.reserve(box);
+    const { context } = pen;
+    let angle = Math.atan2(along[1], along[0]);
+    // Read from left to right, whatever the ruler's direction.
+    if (angle > Math.PI / 2) angle -= Math.PI;
+    if (angle < -Math.PI / 2) angle += Math.PI;
+    context.save();
+    context.translate(x, y);
+    context.rotate(angle);
+    pen.font(sizePx);
+    context.textAlign = 'center';
+    context.textBaseline = 'middle';
+    context.fillStyle = pen.theme.inkMuted;
+    context.fillText(ruler.title, 0, 0);
+    context.restore();
+    return;
+  }
+}
+
+/** A slanted text as a row of small boxes. */
+function slices(x: number, y: number, along: Point, width: number, sizePx: number) {
+  const count = Math.max(1, Math.ceil(width / (sizePx * 1.5)));
+  return Array.from({ length: count }, (_, i) => {
+    const at = ((i + 0.5) / count - 0.5) * width;
+    const half = sizePx * 0.75;
+    return { x: x + along[0] * at - half, y: y + along[1] * at - half, width: 2 * half, height: 2 * half };
+  });
+}

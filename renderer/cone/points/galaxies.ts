@@ -1,0 +1,175 @@
+import type { ColouringInput, GalaxyInput, ShellInput } from '../types.ts';
+import { indexer } from './colouring.ts';
+import type { PointLayout } from './pointArrays.ts';
+import { PointStore } from './pointStore.ts';
+import { fillRadius, type RadiusTable, radiusTable } from './radiusTable.ts';
+import { runSliced } from './slices.ts';
+
+export type GalaxiesChange = 'store' | 'values' | 'radii';
+
+/** Up to so many galaxies a change of radius is done at once; beyond, an even sample moves and the rest follows. */
+const AT_ONCE = 300_000;
+
+/** Where the points of the store live. */
+export interface PointMemory {
+  readonly base: number;
+  allocate(layout: PointLayout): ArrayBufferLike;
+}
+
+const OWN_MEMORY: PointMemory = { base: 0, allocate: (layout) => new ArrayBuffer(layout.end) };
+
+/** The galaxies as they are drawn: builds the store in slices, keeps colours and radii up to date. */
+export class Galaxies {
+  store: PointStore | null = null;
+  /** The part of each field's range whose radii are right. */
+  ready = 1;
+  private input: GalaxyInput | null = null;
+  private centres: Float64Array = new Float64Array(0);
+  private table: RadiusTable = radiusTable([0, 1], [0, 1]);
+  private colouring: ColouringInput = { kind: 'radius', map: 'harbour' };
+  private shells: readonly ShellInput[] = [];
+  private building: AbortController | null = null;
+  private colourJob: AbortController | null = null;
+  private radiusJob: AbortController | null = null;
+  private readonly changed: (what: GalaxiesChange) => void;
+  private readonly memory: PointMemory;
+
+  constructor(changed: (what: GalaxiesChange) => void, memory: PointMemory = OWN_MEMORY) {
+    this.changed = changed;
+    this.memory = memory;
+  }
+
+  setInput(input: GalaxyInput | null): void {
+    this.input = input;
+    this.rebuild();
+  }
+
+  setCentres(centres: Float64Array): void {
+    const same = centres.length === this.centres.length && centres.every((v, i) => v === this.centres[i]);
+    if (same) return;
+    this.centres = centres;
+    if (this.input) this.rebuild();
+  }
+
+  setColouring(colouring: ColouringInput): void {
+    this.colouring = colouring;
+    this.recolour();
+  }
+
+  setShells(shells: readonly ShellInput[]): void {
+    this.shells = shells;
+    if (this.colouring.kind === 'shell') this.recolour();
+  }
+
+  /** Moves the galaxies to the radii of a table. `moving`: more tables follow at once. */
+  setTable(table: RadiusTable, moving: boolean): void {
+    if (table === this.table && (moving || this.ready === 1)) return;
+    this.table = table;
+    const { store } = this;
+    this.radiusJob?.abort();
+    if (!store) return;
+    const share = Math.min(1, AT_ONCE / Math.max(1, store.count));
+    for (const { start, count } of store.ranges) {
+      fillRadius(table, store.arrays.comoving, store.arrays.radius, start, start + Math.ceil(count * share));
+    }
+    this.ready = share;
+    this.changed('radii');
+    if (share < 1 && !moving) this.fillAll(store, table);
+    if (this.colouring.kind === 'radius' && !moving) this.recolour();
+  }
+
+  /** Catalogue row to direction and comoving distance, and the field it belongs to. */
+  place(row: number): { x: number; y: number; z: number; comovingMpc: number; field: number } | null {
+    const { input } = this;
+    if (!input || !(row >= 0 && row < input.count)) return null;
+    const d = input.directions;
+    let [x, y, z] = [0, 0, 0];
+    if ('x' in d) [x, y, z] = [d.x[row]!, d.y[row]!, d.z[row]!];
+    else {
+      const ra = (d.raDeg[row]! * Math.PI) / 180;
+      const dec = (d.decDeg[row]! * Math.PI) / 180;
+      [x, y, z] = [Math.cos(dec) * Math.cos(ra), Math.cos(dec) * Math.sin(ra), Math.sin(dec)];
+    }
+    let field = 0;
+    let best = -2;
+    for (let f = 0; 3 * f < this.centres.length; f++) {
+      const c = x * this.centres[3 * f]! + y * this.centres[3 * f + 1]! + z * this.centres[3 * f + 2]!;
+      if (c > best) [best, field] = [c, f];
+    }
+    return { x, y, z, comovingMpc: input.comovingMpc[row]!, field };
+  }
+
+  dispose(): void {
+    this.building?.abort();
+    this.colourJob?.abort();
+    this.radiusJob?.abort();
+    this.store = null;
+    this.input = null;
+  }
+
+  private rebuild(): void {
+    this.building?.abort();
+    this.colourJob?.abort();
+    this.radiusJob?.abort();
+    const { input, table, memory } = this;
+    if (!input || input.count === 0) {
+      this.store = null;
+      this.changed('store');
+      return;
+    }
+    const job = new AbortController();
+    this.building = job;
+    const index = indexer(this.colouring, this.shells, table);
+    const steps = function* (centres: Float64Array): Generator<void, PointStore> {
+      const store = yield* PointStore.build(input, centres, table, memory.base, (layout) =>
+        memory.allocate(layout),
+      );
+      yield* store.colour(index);
+      return store;
+    };
+    void runSliced(steps(this.centres), job.signal).then((store) => {
+      if (!store) return;
+      const stale = table !== this.table;
+      this.store = store;
+      this.ready = 1;
+      this.changed('store');
+      if (stale) {
+        this.ready = 0;
+        this.setTable(this.table, false);
+      }
+      this.recolour();
+    });
+  }
+
+  private recolour(): void {
+    this.colourJob?.abort();
+    const { store } = this;
+    if (!store) return;
+    const job = new AbortController();
+    this.colourJob = job;
+    const index = indexer(this.colouring, this.shells, this.table);
+    void runSliced(store.colour(index), job.signal).then((done) => {
+      if (done !== null) this.changed('values');
+    });
+  }
+
+  private fillAll(store: PointStore, table: RadiusTable): void {
+    const job = new AbortController();
+    this.radiusJob = job;
+    const steps = function* (): Generator<void, true> {
+      const { comoving, radius } = store.arrays;
+      for (const { start, count } of store.ranges) {
+        for (let from = start; from < start + count; from += 65536) {
+          fillRadius(table, comoving, radius, from, Math.min(start + count, from + 65536));
+          yield;
+        }
+      }
+      return true;
+    };
+    void runSliced(steps(), job.signal).then((done) => {
+      if (!done) return;
+      this.ready = 1;
+      this.changed('radii');
+    });
+  }
+}

@@ -1,0 +1,93 @@
+import type { Triple } from '../../colour/oklab.ts';
+
+/** How summed light becomes brightness. */
+export type Stretch = 'linear' | 'squareRoot' | 'logarithmic' | 'asinh';
+
+export interface Tone {
+  /** sRGB bytes of the ground. */
+  readonly background: Triple;
+  /** 256 colours, sRGB bytes. */
+  readonly colours: Uint8Array;
+  readonly stretch: Stretch;
+  /** Sum of light at full strength. */
+  readonly full: number;
+  /** Sum of light of one galaxy at its middle. */
+  readonly single: number;
+  /** Dark ground: the brightest places turn toward white. On paper: toward a deeper tone of their own. */
+  readonly glow: Triple;
+}
+
+/** Steps of the colour value and of the light in the table. */
+export const VALUE_STEPS = 128;
+/** Light is indexed by the top bits of its 32-bit float: 32 steps an octave from 2^-10 to 2^22. */
+const BITS_SHIFT = 18;
+const FIRST_INDEX = (127 - 10) << 5;
+export const LIGHT_STEPS = 1024;
+
+const word = new Float32Array(1);
+const bits = new Uint32Array(word.buffer);
+
+/** Index of an amount of light given as the bits of its float. */
+export const lightIndex = (floatBits: number): number => {
+  const i = (floatBits >>> BITS_SHIFT) - FIRST_INDEX;
+  return i < 0 ? 0 : i >= LIGHT_STEPS ? LIGHT_STEPS - 1 : i;
+};
+
+/** The light in the middle of a step of the table. */
+export function lightOfIndex(index: number): number {
+  bits[0] = ((index + FIRST_INDEX) << BITS_SHIFT) | (1 << (BITS_SHIFT - 1));
+  return word[0]!;
+}
+
+/**
+ * Brightness 0..1 of a sum of light. `single` (one galaxy) and `full` fix the curve: one galaxy is seen, and the
+ * densest places are not burnt out.
+ */
+export function strength(light: number, stretch: Stretch, single: number, full: number): number {
+  if (!(light > 0)) return 0;
+  const x = light / full;
+  switch (stretch) {
+    case 'linear':
+      return Math.min(1, x);
+    case 'squareRoot':
+      return Math.min(1, Math.sqrt(x));
+    case 'logarithmic': {
+      const k = Math.min(1000, Math.max(1, (2 * full) / single));
+      return Math.min(1, Math.log1p(k * x) / Math.log1p(k));
+    }
+    case 'asinh': {
+      const k = Math.min(1000, Math.max(1, full / single));
+      return Math.min(1, Math.asinh(k * x) / Math.asinh(k));
+    }
+  }
+}
+
+/**
+ * Table of finished pixels: VALUE_STEPS rows of LIGHT_STEPS words, each red, green, blue, alpha bytes in memory order
+ * of a little-endian machine (as ImageData wants). Entry 0 of each row is the bare ground.
+ */
+export function toneTable(tone: Tone): Uint32Array<ArrayBuffer> {
+  const table = new Uint32Array(VALUE_STEPS * LIGHT_STEPS);
+  const cover = new Float64Array(LIGHT_STEPS);
+  const burn = new Float64Array(LIGHT_STEPS);
+  for (let i = 1; i < LIGHT_STEPS; i++) {
+    const light = lightOfIndex(i);
+    cover[i] = strength(light, tone.stretch, tone.single, tone.full);
+    // Above a third of full strength the colour itself begins to glow.
+    burn[i] = Math.max(0, cover[i]! - 0.62) / 0.38;
+  }
+  for (let v = 0; v < VALUE_STEPS; v++) {
+    const at = 3 * Math.round((255 * v) / (VALUE_STEPS - 1));
+    for (let i = 0; i < LIGHT_STEPS; i++) {
+      let pixel = 0xff000000;
+      for (let k = 0; k < 3; k++) {
+        const own = tone.colours[at + k]!;
+        const colour = own + 0.75 * burn[i]! * (tone.glow[k]! - own);
+        const mixed = tone.background[k]! + cover[i]! * (colour - tone.background[k]!);
+        pixel |= Math.round(mixed) << (8 * k);
+      }
+      table[v * LIGHT_STEPS + i] = pixel >>> 0;
+    }
+  }
+  return table;
+}

@@ -1,0 +1,241 @@
+import {
+  BufferAttribute,
+  BufferGeometry,
+  Camera,
+  CustomBlending,
+  DataTexture,
+  FloatType,
+  GLSL3,
+  HalfFloatType,
+  Matrix4,
+  Mesh,
+  NearestFilter,
+  NoBlending,
+  OneFactor,
+  Points,
+  RawShaderMaterial,
+  RGBAFormat,
+  RGFormat,
+  Scene,
+  UnsignedByteType,
+  Vector3,
+  type WebGLRenderer,
+  WebGLRenderTarget,
+} from 'three';
+import { clipMatrix } from '../geometry/projection.ts';
+import type { PointFrame, PointLayer, PointPart } from './pointLayer.ts';
+import type { PointStore } from './pointStore.ts';
+import { LIGHT_STEPS, type Tone, toneTable, VALUE_STEPS } from './tone.ts';
+
+const POINT_VERTEX = `
+precision highp float;
+in float px; in float py; in float pz; in float radius; in float value;
+uniform mat4 clip;
+uniform float size;
+uniform float light;
+uniform vec3 emphasis;
+out vec2 vLight;
+void main() {
+  // A slot without a galaxy has no radius: put it outside the picture.
+  if (!(radius >= 0.0)) { gl_Position = vec4(2.0, 2.0, 2.0, 1.0); gl_PointSize = 0.0; return; }
+  gl_Position = clip * vec4(vec3(px, py, pz) * radius, 1.0);
+  gl_PointSize = size;
+  float weight = light * (radius >= emphasis.x && radius < emphasis.y ? 1.0 : emphasis.z);
+  vLight = vec2(weight, weight * value);
+}`;
+
+const POINT_FRAGMENT = `
+precision highp float;
+in vec2 vLight;
+uniform float size;
+out vec4 colour;
+void main() {
+  vec2 d = (gl_PointCoord - 0.5) * 2.0;
+  float w = size <= 1.5 ? 1.0 : exp(-4.5 * dot(d, d));
+  colour = vec4(vLight * w, 0.0, 0.0);
+}`;
+
+const TONE_VERTEX = `
+precision highp float;
+in vec3 position;
+void main() { gl_Position = vec4(position.xy, 0.0, 1.0); }`;
+
+const TONE_FRAGMENT = `
+precision highp float;
+uniform highp sampler2D sums;
+uniform highp sampler2D table;
+out vec4 colour;
+void main() {
+  vec2 sum = texelFetch(sums, ivec2(gl_FragCoord.xy), 0).rg;
+  int light = clamp(int(floatBitsToUint(max(sum.x, 0.0)) >> 18u) - ${(127 - 10) << 5}, 0, ${LIGHT_STEPS - 1});
+  float mean = sum.x > 0.0 ? sum.y / sum.x : 0.0;
+  int value = int(clamp(mean, 0.0, 1.0) * ${VALUE_STEPS - 1}.0 + 0.5);
+  colour = texelFetch(table, ivec2(light, value), 0);
+}`;
+
+/** Points by WebGL: light is summed in a float target and then toned by the same table as the software layer's. */
+export class WebglPoints implements PointLayer {
+  readonly kind = 'webgl';
+  private readonly renderer: WebGLRenderer;
+  private readonly camera = new Camera();
+  private readonly pointScene = new Scene();
+  private readonly toneScene = new Scene();
+  private readonly target: WebGLRenderTarget;
+  private readonly toneMaterial: RawShaderMaterial;
+  private readonly toneTriangle: BufferGeometry;
+  private table: DataTexture | null = null;
+  private tone: Tone | null = null;
+  private clouds: Points<BufferGeometry, RawShaderMaterial>[] = [];
+  private store: PointStore | null = null;
+
+  /** @throws Error where the machine can draw into no float target */
+  constructor(renderer: WebGLRenderer) {
+    this.renderer = renderer;
+    const { extensions } = renderer;
+    const full = extensions.has('EXT_color_buffer_float') && extensions.has('EXT_float_blend');
+    if (
+      !full &&
+      !extensions.has('EXT_color_buffer_float') &&
+      !extensions.has('EXT_color_buffer_half_float')
+    ) {
+      throw new Error('no float render target');
+    }
+    this.target = new WebGLRenderTarget(1, 1, {
+      format: RGFormat,
+      type: full ? FloatType : HalfFloatType,
+      magFilter: NearestFilter,
+      minFilter: NearestFilter,
+      depthBuffer: false,
+    });
+    this.toneMaterial = new RawShaderMaterial({
+      glslVersion: GLSL3,
+      vertexShader: TONE_VERTEX,
+      fragmentShader: TONE_FRAGMENT,
+      uniforms: { sums: { value: this.target.texture }, table: { value: null } },
+      blending: NoBlending,
+      depthTest: false,
+      depthWrite: false,
+    });
+    this.toneTriangle = new BufferGeometry();
+    this.toneTriangle.setAttribute(
+      'position',
+      new BufferAttribute(new Float32Array([-1, -1, 0, 3, -1, 0, -1, 3, 0]), 3),
+    );
+    const mesh = new Mesh(this.toneTriangle, this.toneMaterial);
+    mesh.frustumCulled = false;
+    this.toneScene.add(mesh);
+  }
+
+  setStore(store: PointStore | null): void {
+    this.dropClouds();
+    this.store = store;
+    if (!store) return;
+    const { arrays, ranges } = store;
+    const attribute = (array: Float32Array | Uint8Array, normalized = false) =>
+      new BufferAttribute(array, 1, normalized);
+    const shared = {
+      px: attribute(arrays.x),
+      py: attribute(arrays.y),
+      pz: attribute(arrays.z),
+      radius: attribute(arrays.radius),
+      value: attribute(arrays.value, true),
+    };
+    for (const _ of ranges) {
+      const geometry = new BufferGeometry();
+      for (const [name, value] of Object.entries(shared)) geometry.setAttribute(name, value);
+      const material = new RawShaderMaterial({
+        glslVersion: GLSL3,
+        vertexShader: POINT_VERTEX,
+        fragmentShader: POINT_FRAGMENT,
+        uniforms: {
+          clip: { value: new Matrix4() },
+          size: { value: 1 },
+          light: { value: 1 },
+          emphasis: { value: new Vector3(0, 1e9, 1) },
+        },
+        blending: CustomBlending,
+        blendSrc: OneFactor,
+        blendDst: OneFactor,
+        transparent: true,
+        depthTest: false,
+        depthWrite: false,
+      });
+      const cloud = new Points(geometry, material);
+      cloud.frustumCulled = false;
+      this.clouds.push(cloud);
+      this.pointScene.add(cloud);
+    }
+  }
+
+  valuesChanged(): void {
+    this.touch('value');
+  }
+
+  radiiChanged(): void {
+    this.touch('radius');
+  }
+
+  /** Sums and tones the points onto the renderer's canvas, ground included. */
+  draw(frame: PointFrame): void {
+    const width = Math.max(1, Math.round(frame.viewport.widthPx * frame.pixelRatio));
+    const height = Math.max(1, Math.round(frame.viewport.heightPx * frame.pixelRatio));
+    if (this.target.width !== width || this.target.height !== height) this.target.setSize(width, height);
+    this.updateTable(frame.tone);
+    for (const cloud of this.clouds) cloud.visible = false;
+    for (const part of frame.parts) this.updateCloud(part, frame);
+    this.renderer.setRenderTarget(this.target);
+    this.renderer.setClearColor(0x000000, 0);
+    this.renderer.clear();
+    this.renderer.render(this.pointScene, this.camera);
+    this.renderer.setRenderTarget(null);
+    this.renderer.render(this.toneScene, this.camera);
+  }
+
+  dispose(): void {
+    this.dropClouds();
+    this.target.dispose();
+    this.toneMaterial.dispose();
+    this.toneTriangle.dispose();
+    this.table?.dispose();
+  }
+
+  private updateCloud(part: PointPart, frame: PointFrame): void {
+    const nth = this.store?.ranges.indexOf(part.range) ?? -1;
+    const cloud = this.clouds[nth];
+    if (!cloud) return;
+    const drawn = Math.ceil(part.range.count * frame.fraction);
+    cloud.visible = drawn > 0;
+    cloud.geometry.setDrawRange(part.range.start, drawn);
+    const { uniforms } = cloud.material;
+    (uniforms.clip!.value as Matrix4).fromArray(clipMatrix(part.matrix, frame.viewport));
+    uniforms.size!.value = Math.max(1, frame.sizePx * frame.pixelRatio);
+    uniforms.light!.value = drawn > 0 ? part.range.count / drawn : 0;
+    const e = frame.emphasis;
+    (uniforms.emphasis!.value as Vector3).set(e ? e.min : 0, e ? e.max : 1e9, e ? e.dim : 1);
+  }
+
+  private updateTable(tone: Tone): void {
+    if (tone === this.tone && this.table) return;
+    this.tone = tone;
+    this.table?.dispose();
+    const bytes = new Uint8Array(toneTable(tone).buffer);
+    this.table = new DataTexture(bytes, LIGHT_STEPS, VALUE_STEPS, RGBAFormat, UnsignedByteType);
+    this.table.needsUpdate = true;
+    this.toneMaterial.uniforms.table!.value = this.table;
+  }
+
+  private touch(name: string): void {
+    // All clouds share one attribute.
+    const attribute = this.clouds[0]?.geometry.getAttribute(name);
+    if (attribute) attribute.needsUpdate = true;
+  }
+
+  private dropClouds(): void {
+    for (const cloud of this.clouds) {
+      this.pointScene.remove(cloud);
+      cloud.geometry.dispose();
+      cloud.material.dispose();
+    }
+    this.clouds = [];
+  }
+}
