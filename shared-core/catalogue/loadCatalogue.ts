@@ -23,6 +23,18 @@ export interface LoadOptions extends ReadWatch {
   readonly cuts?: readonly Cut[] | undefined;
   /** Called for each row set aside, in file order. */
   readonly onSetAside?: ((row: SetAsideRow) => void) | undefined;
+  /** Called for each row kept, in file order: for writing them out again without holding their text. */
+  readonly onKept?: ((row: KeptRow) => void) | undefined;
+}
+
+/** A row that is used, as it was understood. */
+export interface KeptRow {
+  readonly line: number;
+  /** Text of the id column; null where none is mapped. */
+  readonly id: string | null;
+  readonly raDeg: number;
+  readonly decDeg: number;
+  readonly redshift: number;
 }
 
 export interface LoadedCatalogue {
@@ -78,7 +90,8 @@ async function readRows(
   });
   const kept = new KeptRows(header, mapping, options.extras ?? []);
   const tally = new Tally();
-  const { onSetAside } = options;
+  const { onSetAside, onKept } = options;
+  const idCell = mapping.id === null ? -1 : cellOf(mapping.id);
   const setAside = (line: number, reason: SetAsideReason, column: string | null, text: string | null) => {
     tally.setAside(reason);
     onSetAside?.({ line, reason, column, text });
@@ -100,6 +113,13 @@ async function readRows(
       if (left === STAYS) {
         tally.keep();
         kept.add(lines[i]!, cleaner, row);
+        onKept?.({
+          line: lines[i]!,
+          id: idCell === -1 ? null : row[idCell]!.trim(),
+          raDeg: cleaner.raDeg,
+          decDeg: cleaner.decDeg,
+          redshift: cleaner.redshift,
+        });
       } else if (left === OUTSIDE_REGION) {
         setAside(lines[i]!, 'outsideRegion', null, null);
       } else {

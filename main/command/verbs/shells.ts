@@ -1,0 +1,125 @@
+import type { Command } from 'commander';
+import { Refusal } from '../../../shared-core/base/refusal.ts';
+import type { LoadedCatalogue } from '../../../shared-core/catalogue/loadCatalogue.ts';
+import { describeAccount, describeFootprint, describeMethod } from '../../../shared-core/report/notes.ts';
+import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
+import { shellsJson } from '../../../shared-core/report/shellsJson.ts';
+import { edgesOf } from '../../../shared-core/shells/edges.ts';
+import { sortSample } from '../../../shared-core/shells/sample.ts';
+import type { ShellScheme } from '../../../shared-core/shells/shell.ts';
+import { DEFAULT_P0_MPC3_PER_H3, shellStatistics } from '../../../shared-core/shells/statistics.ts';
+import { estimateFootprint } from '../../../shared-core/sky/estimate.ts';
+import { addCatalogueOptions, type CatalogueOptions, readCatalogue } from '../catalogueOptions.ts';
+import { addCosmologyOptions, type CosmologyOptions, cosmologyOf } from '../cosmologyOptions.ts';
+import { numberList, oneNumber } from '../numbers.ts';
+import { addOutputOptions, type OutputOptions, render } from '../outputs.ts';
+import { addRegionOptions, type RegionOptions, regionOf } from '../region.ts';
+
+interface ShellsOptions extends CatalogueOptions, RegionOptions, CosmologyOptions, OutputOptions {
+  edges?: number[];
+  shells?: Exclude<ShellScheme, { kind: 'edges' }>;
+  zRange?: number[];
+  p0: number;
+}
+
+const DEFAULT_SHELLS = { kind: 'redshift', shells: 5, zMin: null, zMax: null } as const;
+
+/** conewright shells: a catalogue cut into redshift shells, and what each is worth. */
+export function addShells(program: Command, print: (text: string) => void): void {
+  const command = program
+    .command('shells')
+    .argument('<file>', 'catalogue: CSV or TSV, plain or gzip')
+    .description('cut a catalogue into redshift shells and say what each is worth');
+  addCatalogueOptions(command);
+  addRegionOptions(command);
+  command
+    .option('--edges <z,...>', 'redshift edges of the shells', numberList('--edges'))
+    .option(
+      '--shells <scheme:n>',
+      'n shells equal in redshift, comoving (thickness), lookback, volume or count, such as volume:4 (redshift:5 if nothing is given)',
+      parseScheme,
+    )
+    .option(
+      '--z-range <z,z>',
+      'where the scheme begins and ends (the least and greatest redshift kept if not given)',
+      numberList('--z-range'),
+    )
+    .option(
+      '--p0 <n>',
+      'power at which effective volume and redshift are taken, (Mpc/h)^3',
+      oneNumber('--p0'),
+      DEFAULT_P0_MPC3_PER_H3,
+    );
+  addOutputOptions(addCosmologyOptions(command));
+  command
+    .addHelpText(
+      'after',
+      '\nExample:\n  npm run -s conewright -- shells survey.csv --region box:130,230,-2,30 --shells volume:4 --h-units',
+    )
+    .action(async (file: string, options: ShellsOptions) => {
+      const { cosmology, name, line } = cosmologyOf(options);
+      const scheme = schemeOf(options);
+      const given = await regionOf(options);
+      const loaded = await readCatalogue(file, options, given?.footprint ?? null);
+      const { catalogue } = loaded;
+      if (catalogue.account.kept === 0) throw new Refusal(nothingLeft(loaded));
+      const footprint = given?.footprint ?? estimateFootprint(catalogue.raDeg, catalogue.decDeg);
+      const sample = sortSample(catalogue.redshift, catalogue.weight);
+      const edges = edgesOf(scheme, sample, cosmology);
+      const conditions = { cosmology, areaDeg2: footprint.areaDeg2, p0Mpc3PerH3: options.p0 };
+      const table = {
+        rows: shellStatistics(sample, edges, conditions),
+        quantities: SHELL_QUANTITIES,
+        units: { perH: options.hUnits === true, h: cosmology.h },
+        notes: [
+          describeAccount(catalogue.account),
+          describeFootprint(footprint, given?.words ?? null),
+          line,
+          describeMethod(options.p0),
+        ],
+      };
+      print(
+        render(table, options, () =>
+          shellsJson({
+            table,
+            account: catalogue.account,
+            mapping: loaded.mapping,
+            footprint,
+            conditions,
+            cosmologyName: name,
+          }),
+        ),
+      );
+    });
+}
+
+function schemeOf({ edges, shells, zRange }: ShellsOptions): ShellScheme {
+  if (edges !== undefined) {
+    if (shells !== undefined || zRange !== undefined)
+      throw new Refusal(
+        '--edges came with --shells or --z-range, which would place the edges too: give one of them.',
+        'use',
+      );
+    return { kind: 'edges', edges };
+  }
+  const [zMin, zMax, ...rest] = zRange ?? [null, null];
+  if (zMin === undefined || zMax === undefined || rest.length > 0)
+    throw new Refusal(`--z-range is "${zRange?.join(',')}", expected two redshifts such as 0.6,1.2.`, 'use');
+  return { ...(shells ?? DEFAULT_SHELLS), zMin, zMax };
+}
+
+function parseScheme(text: string): Exclude<ShellScheme, { kind: 'edges' }> {
+  const [, kind, count] = /^(redshift|comoving|lookback|volume|count):(\d{1,6})$/.exec(text) ?? [];
+  if (kind === undefined)
+    throw new Refusal(
+      `--shells is "${text}", expected redshift:N, comoving:N, lookback:N, volume:N or count:N, such as volume:4.`,
+      'use',
+    );
+  return { kind: kind as 'redshift', shells: Number(count), zMin: null, zMax: null };
+}
+
+function nothingLeft({ catalogue }: LoadedCatalogue): string {
+  const { account } = catalogue;
+  if (account.rowsRead === 0) return 'The catalogue has a header and no rows: nothing can be measured.';
+  return `No row of the catalogue can be used. ${describeAccount(account)} Check --columns, --region and --cut.`;
+}

@@ -1,0 +1,62 @@
+// Builds what is stale: a part's stamp is a hash of the names, sizes and contents of the sources it is made from.
+import { createHash } from 'node:crypto';
+import { existsSync, readdirSync, readFileSync, statSync, writeFileSync } from 'node:fs';
+import { join } from 'node:path';
+import { root } from './install.mjs';
+
+/**
+ * @typedef {object} Part
+ * @property {string} words  what is being built, for the person who waits
+ * @property {string[]} sources
+ * @property {string} config  the bundler's config file
+ */
+
+/** @type {Record<'command' | 'window' | 'desktop', Part>} */
+const parts = {
+  command: { words: 'the command', sources: ['main', 'shared-core'], config: 'main/launch/command.vite.ts' },
+  window: { words: 'the window', sources: ['renderer', 'shared-core'], config: 'renderer/vite.config.ts' },
+  desktop: {
+    words: 'the desktop host',
+    sources: ['main', 'shared-core'],
+    config: 'main/desktop/desktop.vite.ts',
+  },
+};
+
+/** @param {string[]} folders */
+function fingerprint(folders) {
+  const hash = createHash('sha256').update(readFileSync(join(root, 'package-lock.json')));
+  for (const folder of folders) {
+    const names = readdirSync(join(root, folder), { recursive: true, encoding: 'utf8' }).sort();
+    for (const name of names) {
+      const path = join(root, folder, name);
+      if (statSync(path).isFile()) hash.update(`${name}\0`).update(readFileSync(path));
+    }
+  }
+  return hash.digest('hex');
+}
+
+/**
+ * Brings the parts up to date; says in a line what it builds, and nothing when nothing is stale.
+ * @param {(keyof typeof parts)[]} wanted
+ */
+export async function build(wanted) {
+  for (const name of wanted) {
+    const part = parts[name];
+    const print = fingerprint(part.sources);
+    const stamp = join(root, 'build', `${name}.stamp`);
+    if (existsSync(stamp) && readFileSync(stamp, 'utf8') === print) continue;
+    console.error(`conewright: building ${part.words} ...`);
+    const { build: bundle } = await import('vite');
+    await bundle({
+      configFile: join(root, part.config),
+      root: join(root, folderOf(part.config)),
+      logLevel: 'warn',
+    });
+    writeFileSync(stamp, print);
+  }
+}
+
+/** @param {string} path */
+function folderOf(path) {
+  return path.slice(0, path.lastIndexOf('/'));
+}

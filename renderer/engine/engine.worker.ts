@@ -1,0 +1,59 @@
+import { EngineDesk, sentenceOf } from './desk.ts';
+import type { EngineAnswer, EngineEvent, EngineRequest } from './protocol.ts';
+
+// A worker entry is a few lines around the desk: it only carries messages.
+const scope = self as unknown as DedicatedWorkerGlobalScope;
+const post = (message: EngineEvent | EngineAnswer) => scope.postMessage(message, transferable(message));
+
+const desk = new EngineDesk({
+  emit: post,
+  openUrl: async (url) => {
+    const response = await fetch(url);
+    if (!response.ok || response.body === null) throw new Error(`the file answered ${response.status}`);
+    return response.body as unknown as AsyncIterable<Uint8Array>;
+  },
+  floats: (length) =>
+    scope.crossOriginIsolated
+      ? new Float32Array(new SharedArrayBuffer(4 * length))
+      : new Float32Array(length),
+  breathe: () => new Promise((resume) => setTimeout(resume, 0)),
+});
+
+// Page arrays are moved, not copied. The sample stays here too (rows are looked up in it), so it is copied once.
+function transferable(message: EngineEvent | EngineAnswer): Transferable[] {
+  const arrays: Float32Array[] = [];
+  if (message.kind === 'selected' && message.selected !== null) {
+    const { directions, raDeg, decDeg, magnitude } = message.selected;
+    arrays.push(directions.x, directions.y, directions.z, raDeg, decDeg);
+    if (magnitude !== null) arrays.push(magnitude);
+  }
+  if (message.kind === 'background' && message.background !== null)
+    arrays.push(message.background.comovingMpc, message.background.lookbackGyr);
+  if (message.kind === 'density' && message.density !== null) arrays.push(message.density);
+  return arrays.map((a) => a.buffer).filter((b): b is ArrayBuffer => b instanceof ArrayBuffer);
+}
+
+async function answer(id: number, work: () => unknown) {
+  try {
+    post({ kind: 'answer', id, value: (await work()) as never });
+  } catch (error) {
+    post({ kind: 'refused', id, sentence: sentenceOf(error) });
+  }
+}
+
+scope.onmessage = ({ data }: MessageEvent<EngineRequest>) => {
+  switch (data.kind) {
+    case 'want':
+      void desk.want(data.wanted);
+      break;
+    case 'row':
+      void answer(data.id, () => desk.row(data.index));
+      break;
+    case 'preview':
+      void answer(data.id, () => desk.preview(data.source));
+      break;
+    case 'setAsideList':
+      void answer(data.id, async () => new Blob(await desk.setAsideList(), { type: 'text/csv' }));
+      break;
+  }
+};

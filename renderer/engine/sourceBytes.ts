@@ -1,0 +1,25 @@
+import { sha256 } from '@noble/hashes/sha2.js';
+import { bytesToHex } from '@noble/hashes/utils.js';
+import { makeDemoSurvey } from '../../shared-core/demo/demoSurvey.ts';
+import type { EngineSource } from './protocol.ts';
+
+/** The bytes of a source, in chunks. */
+export async function sourceBytes(
+  source: EngineSource,
+  openUrl: (url: string) => Promise<AsyncIterable<Uint8Array>>,
+): Promise<AsyncIterable<Uint8Array>> {
+  if (source.kind === 'url') return openUrl(source.url);
+  const bytes = new TextEncoder().encode(makeDemoSurvey(source.seed).csv);
+  return inChunks(bytes);
+}
+
+async function* inChunks(bytes: Uint8Array): AsyncIterable<Uint8Array> {
+  const step = 1 << 18;
+  for (let from = 0; from < bytes.length; from += step) yield bytes.subarray(from, from + step);
+}
+
+/** SHA-256 of a stream of chunks: what tells a changed file from the one a study was made with. */
+export function startSha256(): { update(chunk: Uint8Array): void; digestHex(): string } {
+  const hash = sha256.create();
+  return { update: (chunk) => void hash.update(chunk), digestHex: () => bytesToHex(hash.digest()) };
+}

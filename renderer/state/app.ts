@@ -1,0 +1,63 @@
+import { createContext } from 'preact';
+import { useContext } from 'preact/hooks';
+import type { Bridge } from '../../shared-core/bridge/contract.ts';
+import { demoStudy } from './demoStudy.ts';
+import { createDerived, type Derived } from './derived.ts';
+import { createEngineState, type EngineState } from './engineState.ts';
+import { createFileState, type FileState } from './fileState.ts';
+import { createNotices, type Notices } from './notices.ts';
+import { createQuestions, type Questions } from './questions.ts';
+import { createStudyState, type StudyState } from './studyState.ts';
+import { createViewState, type ViewState } from './viewState.ts';
+
+/** All that a panel may ask: it finds this through `useApp()`. */
+export interface App {
+  readonly bridge: Bridge;
+  readonly notices: Notices;
+  readonly questions: Questions;
+  readonly studyState: StudyState;
+  readonly engine: EngineState;
+  readonly derived: Derived;
+  readonly view: ViewState;
+  readonly files: FileState;
+}
+
+export function createApp(
+  bridge: Bridge,
+  options: {
+    readonly theme: 'light' | 'dark';
+    readonly questions?: Questions;
+    readonly makeWorker?: () => Worker;
+  },
+): App {
+  const notices = createNotices();
+  const questions = options.questions ?? createQuestions();
+  const studyState = createStudyState(demoStudy(), notices);
+  const files = createFileState({
+    bridge,
+    notices,
+    studyState,
+    askLeave: (name) => questions.askLeave(name),
+    askReplace: (sentence) => questions.askReplace(sentence),
+  });
+  const engine = createEngineState(studyState, files.engineSource, options.makeWorker);
+  return {
+    bridge,
+    notices,
+    questions,
+    studyState,
+    engine,
+    derived: createDerived(studyState, engine),
+    view: createViewState(options.theme),
+    files,
+  };
+}
+
+export const AppContext = createContext<App | null>(null);
+
+/** The app that this part of the window belongs to. */
+export function useApp(): App {
+  const app = useContext(AppContext);
+  if (app === null) throw new Error('useApp outside of the window');
+  return app;
+}

@@ -1,0 +1,317 @@
+import { computed, effect, type ReadonlySignal, signal } from '@preact/signals';
+import type { Bridge } from '../../shared-core/bridge/contract.ts';
+import type {
+  FileStamp,
+  OpenedFile,
+  RecentStudy,
+  SaveTarget,
+  UnsavedWork,
+} from '../../shared-core/bridge/messages.ts';
+import { emptyStudy, readStudy, writeStudy } from '../../shared-core/study/document.ts';
+import { change } from '../../shared-core/study/edits.ts';
+import type { Study, StudySource } from '../../shared-core/study/schema.ts';
+import type { EngineSource } from '../engine/protocol.ts';
+import { demoStudy } from './demoStudy.ts';
+import type { Notices } from './notices.ts';
+import type { StudyState } from './studyState.ts';
+
+const KEEP_AFTER_MS = 1500;
+
+/** Opening, saving and keeping: everything between the study and the machine's files. */
+export interface FileState {
+  /** What the engine should read; null when the study has no source or its file is not at hand. */
+  readonly engineSource: ReadonlySignal<EngineSource | null>;
+  /** The study names a file that is not at hand: the person must point at it. */
+  readonly missingSource: ReadonlySignal<Extract<StudySource, { kind: 'file' }> | null>;
+  /** Where the study is saved; null when it never was. */
+  readonly target: ReadonlySignal<SaveTarget | null>;
+  readonly recent: ReadonlySignal<readonly RecentStudy[]>;
+  /** Work from a window that ended without saving. */
+  readonly offered: ReadonlySignal<readonly UnsavedWork[]>;
+  newStudy(): Promise<void>;
+  openDemo(): Promise<void>;
+  /** Dialog for a study or a catalogue. */
+  open(purpose: 'catalogue' | 'study'): Promise<void>;
+  /** Files dropped or named on the command line: studies open, catalogues become the source. */
+  openFiles(files: readonly OpenedFile[]): Promise<void>;
+  openRecent(id: string): Promise<void>;
+  /** Lets the person point at the file that the study names. */
+  pointAtSource(): Promise<void>;
+  save(): Promise<boolean>;
+  saveAs(): Promise<boolean>;
+  takeOffered(workId: string): Promise<void>;
+  dropOffered(workId: string): Promise<void>;
+  /** True when nothing would be lost by leaving the study, or the person agreed. */
+  mayLeave(): Promise<boolean>;
+  exportFile(name: string, mimeType: string, content: Uint8Array | AsyncIterable<Uint8Array>): Promise<void>;
+}
+
+export interface FileStateOptions {
+  readonly bridge: Bridge;
+  readonly notices: Notices;
+  readonly studyState: StudyState;
+  /** Asks "save, leave without saving, or stay". */
+  readonly askLeave: (name: string) => Promise<'save' | 'leave' | 'stay'>;
+  /** Asks whether a file changed by somebody else may be replaced. */
+  readonly askReplace: (sentence: string) => Promise<'replace' | 'saveAs' | 'stay'>;
+}
+
+export function createFileState({
+  bridge,
+  notices,
+  studyState,
+  askLeave,
+  askReplace,
+}: FileStateOptions): FileState {
+  const { study, unsaved } = studyState;
+  const atHand = signal<ReadonlyMap<string, OpenedFile>>(new Map());
+  const target = signal<SaveTarget | null>(null);
+  const stamp = signal<FileStamp | null>(null);
+  const studyFileId = signal<string | null>(null);
+  const recent = signal<readonly RecentStudy[]>([]);
+  const offered = signal<readonly UnsavedWork[]>([]);
+  const workId = newWorkId();
+
+  const source = computed(() => study.value.source);
+  const sourceFile = computed(() => {
+    const named = source.value;
+    return named?.kind === 'file' ? (atHand.value.get(sourceKey(named)) ?? null) : null;
+  });
+  const engineSource = computed<EngineSource | null>(() => {
+    const named = source.value;
+    if (named === null) return null;
+    if (named.kind === 'demo') return named;
+    const file = sourceFile.value;
+    return file === null ? null : { kind: 'url', url: file.url, name: file.name, sizeBytes: file.sizeBytes };
+  });
+  const missingSource = computed(() =>
+    source.value?.kind === 'file' && sourceFile.value === null ? source.value : null,
+  );
+
+  /** Runs what a button does; a Refusal, or anything else that went wrong, becomes a sentence. */
+  const guarded = async <T>(work: () => Promise<T>, otherwise: T): Promise<T> => {
+    try {
+      return await work();
+    } catch (error) {
+      notices.tell(error instanceof Error ? error.message : String(error));
+      return otherwise;
+    }
+  };
+  const refreshRecent = () =>
+    guarded(async () => void (recent.value = await bridge.recentStudies()), undefined);
+
+  const remember = (file: OpenedFile): Extract<StudySource, { kind: 'file' }> => {
+    const named = {
+      kind: 'file',
+      name: file.name,
+      path: file.path,
+      sizeBytes: file.sizeBytes,
+      sha256: null,
+    } as const;
+    atHand.value = new Map(atHand.value).set(sourceKey(named), file);
+    return named;
+  };
+
+  const leave = async (): Promise<boolean> => {
+    if (!unsaved.value) return true;
+    switch (await askLeave(study.value.name)) {
+      case 'save':
+        return save();
+      case 'leave':
+        return true;
+      case 'stay':
+        return false;
+    }
+  };
+
+  const show = async (
+    next: Study,
+    saved: boolean,
+    from: SaveTarget | null,
+    at: FileStamp | null,
+    id: string | null,
+  ) => {
+    studyState.replace(next, saved);
+    target.value = from;
+    stamp.value = at;
+    studyFileId.value = id;
+    await locate(next);
+  };
+
+  const locate = async (next: Study): Promise<void> => {
+    const named = next.source;
+    if (named?.kind !== 'file' || atHand.value.has(sourceKey(named))) return;
+    const { name, path, sizeBytes } = named;
+    const file = await bridge.locateSource({ name, path, sizeBytes, studyId: studyFileId.value });
+    if (file === null) return;
+    atHand.value = new Map(atHand.value).set(sourceKey(named), file);
+  };
+
+  const openStudyFile = async (file: OpenedFile): Promise<void> => {
+    const read = await bridge.readStudy(file);
+    const next = readStudy(new TextDecoder().decode(read.bytes));
+    if (!(await leave())) return;
+    await show(next, true, read.target, read.stamp, file.id);
+    await refreshRecent();
+  };
+
+  const openCatalogueFile = (file: OpenedFile): void => {
+    const named = remember(file);
+    studyState.perform(
+      change(`Open ${file.name}`, {
+        source: named,
+        mapping: null,
+        cuts: [],
+        region: null,
+        edges: [],
+        name:
+          study.value.source === null || study.value.source.kind === 'demo'
+            ? baseName(file.name)
+            : study.value.name,
+      }),
+    );
+    // A demo study is never overwritten by the person's own work.
+    if (target.value === null) stamp.value = null;
+  };
+
+  const write = async (to: SaveTarget, expected: FileStamp | null): Promise<boolean> => {
+    const written = study.value;
+    const outcome = await bridge.saveStudy(to.id, new TextEncoder().encode(writeStudy(written)), expected);
+    switch (outcome.kind) {
+      case 'saved':
+        target.value = to;
+        stamp.value = outcome.stamp;
+        studyFileId.value = to.id;
+        studyState.markSaved(written);
+        await guarded(() => bridge.dropUnsaved(workId), undefined);
+        await refreshRecent();
+        return true;
+      case 'conflict':
+        switch (await askReplace(outcome.sentence)) {
+          case 'replace':
+            return write(to, outcome.found);
+          case 'saveAs':
+            return saveAs();
+          case 'stay':
+            return false;
+        }
+        return false;
+      case 'failed':
+        notices.tell(outcome.sentence, { actions: [{ label: 'Save elsewhere', run: () => void saveAs() }] });
+        return false;
+    }
+  };
+  const save = (): Promise<boolean> =>
+    guarded(async () => (target.value === null ? saveAs() : write(target.value, stamp.value)), false);
+  const saveAs = (): Promise<boolean> =>
+    guarded(async () => {
+      const to = await bridge.chooseSaveTarget(study.value.name, stamp.value?.sha256 ?? null);
+      return to === null ? false : write(to, to.existing);
+    }, false);
+
+  // Unsaved work is kept a moment after the last change, and forgotten once it is saved or given up.
+  let timer: ReturnType<typeof setTimeout> | undefined;
+  let kept = false;
+  effect(() => {
+    const now = study.value;
+    clearTimeout(timer);
+    if (!unsaved.value) {
+      if (kept) void guarded(() => bridge.dropUnsaved(workId), undefined);
+      kept = false;
+      return;
+    }
+    timer = setTimeout(() => {
+      kept = true;
+      void guarded(
+        () => bridge.keepUnsaved(workId, now.name, new TextEncoder().encode(writeStudy(now))),
+        undefined,
+      );
+    }, KEEP_AFTER_MS);
+  });
+  effect(() => {
+    void guarded(() => bridge.setWindowState({ title: study.value.name, unsaved: unsaved.value }), undefined);
+  });
+  bridge.onCloseRequest(async () => ((await leave()) ? 'close' : 'stay'));
+  void refreshRecent();
+  void guarded(async () => void (offered.value = await bridge.listUnsaved()), undefined);
+
+  const openFiles = async (files: readonly OpenedFile[]): Promise<void> => {
+    for (const file of files)
+      await guarded(async () => {
+        if (/\.json$/i.test(file.name)) await openStudyFile(file);
+        else openCatalogueFile(file);
+      }, undefined);
+    const catalogues = files.filter((f) => !/\.json$/i.test(f.name));
+    if (catalogues.length > 1)
+      notices.tell(
+        `${catalogues.length} catalogues came, a study holds one: ${catalogues.at(-1)?.name} is open; undo brings the others back.`,
+        { tone: 'fact' },
+      );
+  };
+
+  return {
+    engineSource,
+    missingSource,
+    target,
+    recent,
+    offered,
+    newStudy: () =>
+      guarded(async () => {
+        if (await leave()) await show(emptyStudy(), true, null, null, null);
+      }, undefined),
+    openDemo: () =>
+      guarded(async () => {
+        if (await leave()) await show(demoStudy(), true, null, null, null);
+      }, undefined),
+    open: (purpose) => guarded(async () => openFiles(await bridge.chooseFiles(purpose)), undefined),
+    openFiles,
+    openRecent: (id) => guarded(async () => openStudyFile(await bridge.openRecent(id)), undefined),
+    pointAtSource: () =>
+      guarded(async () => {
+        const [file] = await bridge.chooseFiles('catalogue');
+        const named = missingSource.value ?? source.value;
+        if (file === undefined || named?.kind !== 'file') return;
+        atHand.value = new Map(atHand.value).set(sourceKey(named), file);
+      }, undefined),
+    save,
+    saveAs,
+    takeOffered: (id) =>
+      guarded(async () => {
+        const bytes = await bridge.takeUnsaved(id);
+        const next = readStudy(new TextDecoder().decode(bytes));
+        if (!(await leave())) return;
+        offered.value = offered.value.filter((w) => w.workId !== id);
+        await show(next, false, null, null, null);
+        await bridge.dropUnsaved(id);
+      }, undefined),
+    dropOffered: (id) =>
+      guarded(async () => {
+        await bridge.dropUnsaved(id);
+        offered.value = offered.value.filter((w) => w.workId !== id);
+      }, undefined),
+    mayLeave: leave,
+    exportFile: (name, mimeType, content) =>
+      guarded(async () => {
+        const done = await bridge.exportFile(name, mimeType, content);
+        if (done !== null)
+          notices.tell(`${done.name} was written to ${done.folder ?? "the browser's downloads"}.`, {
+            tone: 'fact',
+          });
+      }, undefined),
+  };
+}
+
+function sourceKey(source: Extract<StudySource, { kind: 'file' }>): string {
+  return JSON.stringify([source.name, source.path, source.sizeBytes]);
+}
+
+function baseName(fileName: string): string {
+  return fileName.replace(/(\.(csv|tsv|txt|dat))?(\.gz)?$/i, '').slice(0, 200) || 'Untitled';
+}
+
+function newWorkId(): string {
+  const bytes = crypto.getRandomValues(new Uint8Array(18));
+  return btoa(String.fromCharCode(...bytes))
+    .replaceAll('+', '-')
+    .replaceAll('/', '_');
+}

@@ -1,0 +1,52 @@
+import { type RowAccount, SET_ASIDE_REASONS, type SetAsideReason } from '../catalogue/catalogue.ts';
+import { reasonText } from '../catalogue/reasons.ts';
+import type { Cosmology } from '../cosmology/cosmology.ts';
+import type { PublishedSet } from '../cosmology/publishedSets.ts';
+import type { Footprint } from '../sky/region.ts';
+
+const trim = (value: number, digits = 6) => String(Number(value.toPrecision(digits)));
+
+/** One line that lets a reader repeat the cosmology: its name and paper, or every parameter. */
+export function describeCosmology(cosmology: Cosmology, set: PublishedSet | null): string {
+  const p = cosmology.parameters;
+  const curvature = Math.abs(cosmology.omegaK0) < 1e-12 ? 'flat' : `Omega_k ${trim(cosmology.omegaK0)}`;
+  const dark = p.w0 === -1 && p.wa === 0 ? '' : `, w0 ${trim(p.w0)}, wa ${trim(p.wa)}`;
+  const heat =
+    p.tCmbK === 0
+      ? ', no radiation'
+      : `, T_CMB ${trim(p.tCmbK)} K, N_eff ${trim(p.nEff)}, neutrinos ${p.neutrinoMassesEv.map((m) => trim(m)).join(' + ') || '0'} eV`;
+  const head = set === null ? 'own parameters' : `${set.name} (${set.source})`;
+  return (
+    `Cosmology: ${head}: ${curvature}, H0 ${trim(p.h0KmSMpc)} km/s/Mpc, Omega_m ${trim(p.omegaM0)} (baryons and cold dark matter), ` +
+    `Omega_de ${trim(cosmology.omegaDe0)}${dark}${heat}; age ${cosmology.ageGyr(0).toFixed(3)} Gyr.`
+  );
+}
+
+/** One line on the rows: read, kept, set aside by reason, repeated positions. */
+export function describeAccount(account: RowAccount): string {
+  const reasons = SET_ASIDE_REASONS.filter((r) => (account.reasons[r] ?? 0) > 0).map(
+    (r: SetAsideReason) => `${account.reasons[r]} ${reasonText(r)}`,
+  );
+  const why = reasons.length === 0 ? '' : ` (${reasons.join('; ')})`;
+  const repeats =
+    account.repeatedPositions === 0
+      ? ''
+      : ` ${account.repeatedPositions} kept rows repeat an earlier position.`;
+  return `Rows: ${account.rowsRead} read = ${account.kept} kept + ${account.setAside} set aside${why}.${repeats}`;
+}
+
+/** One line on the sky area, that never lets an estimate pass for more. */
+export function describeFootprint(footprint: Footprint, words: string | null): string {
+  const area = trim(footprint.areaDeg2, 7);
+  if (footprint.estimate === null) return `Region: ${words ?? 'as given'}; area ${area} deg^2.`;
+  const { cells, cellAreaDeg2, nside, areaErrorDeg2 } = footprint.estimate;
+  return (
+    `Region: area ${area} +- ${trim(areaErrorDeg2, 2)} deg^2 is an ESTIMATE from ${cells} occupied equal-area cells of ` +
+    `${trim(cellAreaDeg2, 4)} deg^2 (HEALPix Nside ${nside}); give --region for an exact one.`
+  );
+}
+
+/** One line on how the effective numbers were made. */
+export function describeMethod(p0Mpc3PerH3: number): string {
+  return `Effective volume and redshift at P0 = ${trim(p0Mpc3PerH3)} (Mpc/h)^3; errors of n are Poisson.`;
+}

@@ -1,0 +1,135 @@
+import { describe, expect, it } from 'vitest';
+import { EngineDesk } from '../../renderer/engine/desk.ts';
+import type { EngineEvent, Wanted } from '../../renderer/engine/protocol.ts';
+import { findPublishedSet } from '../../shared-core/cosmology/publishedSets.ts';
+import { emptyStudy } from '../../shared-core/study/document.ts';
+
+const rows = Array.from(
+  { length: 500 },
+  (_, i) =>
+    `${150 + (i % 23) / 5},${2 + (i % 17) / 5},${(0.1 + ((i * 37) % 500) / 1000).toFixed(4)},${15 + (i % 7)}`,
+);
+const FILES: Record<string, string> = {
+  'blob:a': `ra,dec,z,mag\n${rows.join('\n')}\nbad,1,0.5,15\n`,
+  'blob:broken': 'nothing here that is a table of galaxies\n1\n',
+  'blob:one': 'ra,dec,z\n10,10,0.5\n',
+  'blob:none': 'ra,dec,z\n',
+  'blob:same-z': 'ra,dec,z\n10,10,0.5\n11,10,0.5\n12,10,0.5\n',
+};
+
+function deskOf() {
+  const events: EngineEvent[] = [];
+  const desk = new EngineDesk({
+    emit: (event) => events.push(event),
+    openUrl: async (url) => bytes(FILES[url]!),
+    floats: (length) => new Float32Array(length),
+    breathe: () => new Promise((resume) => setTimeout(resume, 0)),
+  });
+  const last = <K extends EngineEvent['kind']>(kind: K) =>
+    events.filter((e): e is Extract<EngineEvent, { kind: K }> => e.kind === kind).at(-1);
+  return { desk, events, last };
+}
+
+async function* bytes(text: string): AsyncIterable<Uint8Array> {
+  const all = new TextEncoder().encode(text);
+  for (let i = 0; i < all.length; i += 1000) yield all.subarray(i, i + 1000);
+}
+
+const source = (url: string) => ({ kind: 'url', url, name: url, sizeBytes: FILES[url]!.length }) as const;
+const wanted: Wanted = {
+  source: source('blob:a'),
+  mapping: null,
+  cuts: [],
+  region: null,
+  cosmology: emptyStudy().cosmology,
+  density: false,
+};
+
+describe('the engine does what the study asks, and nothing twice', () => {
+  it('loads, selects and measures, sorted by redshift', async () => {
+    const { desk, last } = deskOf();
+    await desk.want(wanted);
+    expect(last('loaded')!.loaded).toMatchObject({
+      header: ['ra', 'dec', 'z', 'mag'],
+      sizeBytes: FILES['blob:a']!.length,
+    });
+    const { account, sample, footprint, magnitude } = last('selected')!.selected!;
+    expect(account).toMatchObject({ rowsRead: 501, kept: 500, setAside: 1, reasons: { notANumber: 1 } });
+    expect([...sample.redshift]).toEqual([...sample.redshift].sort((a, b) => a - b));
+    expect(footprint!.origin).toBe('estimated');
+    expect(magnitude).toHaveLength(500);
+    const { comovingMpc } = last('background')!.background!;
+    expect([...comovingMpc]).toEqual([...comovingMpc].sort((a, b) => a - b));
+    expect(desk.row(0)).toMatchObject({ redshift: 0.1, line: 2 });
+  });
+
+  it('a new cosmology, region or cut redoes what depends on it and nothing else', async () => {
+    const { desk } = deskOf();
+    await desk.want(wanted);
+    expect(desk.runs).toEqual({ load: 1, select: 1, background: 1, density: 1 });
+    await desk.want({ ...wanted });
+    expect(desk.runs).toEqual({ load: 1, select: 1, background: 1, density: 1 });
+    const other = { ...wanted, cosmology: { ...findPublishedSet('wmap9').parameters } };
+    await desk.want(other);
+    expect(desk.runs).toEqual({ load: 1, select: 1, background: 2, density: 2 });
+    const boxed = {
+      ...other,
+      region: { parts: [{ kind: 'cap', raDeg: 152, decDeg: 4, radiusDeg: 2 }], holes: [] },
+    } as const;
+    await desk.want(boxed);
+    expect(desk.runs).toEqual({ load: 1, select: 2, background: 3, density: 3 });
+    await desk.want({ ...boxed, density: true });
+    expect(desk.runs).toEqual({ load: 1, select: 2, background: 3, density: 4 });
+    // A cut on a column that is not in memory reads the file again; new limits of the same cut do not.
+    await desk.want({ ...boxed, cuts: [{ column: 'mag', min: null, max: 18 }] });
+    expect(desk.runs.load).toBe(2);
+    await desk.want({ ...boxed, cuts: [{ column: 'mag', min: null, max: 17 }] });
+    expect(desk.runs).toMatchObject({ load: 2, select: 4 });
+  });
+
+  it('drops work for a wish that is out of date', async () => {
+    const { desk, events, last } = deskOf();
+    const first = desk.want(wanted);
+    void desk.want({ ...wanted, source: source('blob:one') });
+    await first;
+    expect(last('selected')!.selected!.account.rowsRead).toBe(1);
+    expect(events.filter((e) => e.kind === 'selected')).toHaveLength(1);
+    expect(events.filter((e) => e.kind === 'failed')).toHaveLength(0);
+  });
+
+  it('a file that is no catalogue gives a sentence, and the next one works', async () => {
+    const { desk, last } = deskOf();
+    await desk.want({ ...wanted, source: source('blob:broken') });
+    expect(last('failed')).toMatchObject({ stage: 'load' });
+    expect(last('failed')!.sentence.length).toBeGreaterThan(20);
+    await desk.want(wanted);
+    expect(last('selected')!.selected!.account.kept).toBe(500);
+  });
+
+  it('a catalogue of one row, of none, and all at one redshift', async () => {
+    const { desk, last } = deskOf();
+    await desk.want({ ...wanted, source: source('blob:one') });
+    expect(last('selected')!.selected).toMatchObject({ account: { kept: 1 }, sample: { count: 1 } });
+    await desk.want({ ...wanted, source: source('blob:none') });
+    expect(last('selected')!.selected).toMatchObject({
+      account: { rowsRead: 0 },
+      footprint: null,
+      sample: { count: 0 },
+    });
+    await desk.want({ ...wanted, source: source('blob:same-z') });
+    expect(last('selected')!.selected!.sample.count).toBe(3);
+    await desk.want({ ...wanted, source: null });
+    expect(last('selected')!.selected).toBeNull();
+    expect(() => desk.row(0)).toThrow(/not loaded any more/);
+  });
+
+  it('lists what was set aside under region and cuts, as the command does', async () => {
+    const { desk } = deskOf();
+    await desk.want({ ...wanted, cuts: [{ column: 'mag', min: null, max: 15 }] });
+    const text = (await desk.setAsideList()).join('');
+    const lines = text.trimEnd().split('\n');
+    expect(lines[0]).toBe('line,reason,column,text');
+    expect(lines.filter((l) => l.includes('outsideCuts'))).toHaveLength(500 - Math.ceil(500 / 7));
+    expect(lines.at(-1)).toBe('502,notANumber,ra,bad');
+  });
+});
