@@ -103,7 +103,7 @@ function descend(expansion: Expansion, low: number, high: number): number {
 /** Finds the parameter to blame: the first whose neutral value cures the fault, and how far it may go. */
 function noBigBang(parameters: CosmologyParameters, turn: number): string {
   const neutral = { omegaDe0: 0, wa: 0, w0: -1 } as const;
-  const came = `H^2 falls to 0 at z = ${turn.toPrecision(4)}, so there is no big bang`;
+  const came = `H^2 falls to 0 or nearly so at z = ${Number(turn.toPrecision(4))}, so there is no big bang`;
   for (const name of ['omegaDe0', 'wa', 'w0'] as const) {
     const value = parameters[name];
     if (value === 'flat' || value === neutral[name]) continue;
@@ -111,8 +111,8 @@ function noBigBang(parameters: CosmologyParameters, turn: number): string {
       findTurn({ ...parameters, [name]: neutral[name] + share * (value - neutral[name]) }) === null;
     if (!fits(0)) continue;
     const share = findRoot((at) => (fits(at) ? 1 : -1), 0, 1, 1e-6);
-    const limit = (neutral[name] + share * (value - neutral[name])).toPrecision(5);
-    return `${name} is ${value} and ${came}; allowed with the other parameters is ${name} ${value > neutral[name] ? 'below' : 'above'} ${limit}.`;
+    const limit = (neutral[name] + share * (value - neutral[name])).toFixed(4);
+    return `${name} is ${value} and ${came}; allowed with the other parameters is ${name} ${value > neutral[name] ? 'below' : 'above'} ${Number(limit)}.`;
   }
   return `omegaM0 is ${parameters.omegaM0} with omegaDe0 ${parameters.omegaDe0}, w0 ${parameters.w0} and wa ${parameters.wa}, and ${came}; allowed are densities with H^2 above 0 at every redshift.`;
 }
