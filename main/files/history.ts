@@ -4,6 +4,7 @@ import { basename, dirname, join } from 'node:path';
 import { Refusal } from '../../shared-core/base/refusal.ts';
 import { z } from '../../shared-core/base/schema.ts';
 import { pathSchema, type RecentStudy } from '../../shared-core/bridge/messages.ts';
+import { isStudyPath } from './launchPaths.ts';
 import { OwnRecord } from './ownRecord.ts';
 
 const entrySchema = z.strictObject({
@@ -28,13 +29,14 @@ export class FileHistory {
     this.#record = new OwnRecord(path, historySchema, { version: 1, files: [] }, lockFolder, warn);
   }
 
-  async add(path: string, kind: 'study' | 'source'): Promise<void> {
+  /** Puts files that the user gave to the front. */
+  async add(paths: readonly string[]): Promise<void> {
+    if (paths.length === 0) return;
+    const usedMs = Date.now();
+    const added = [...new Set(paths)].map((path) => ({ path, kind: kindOf(path), usedMs }));
     await this.#record.change(({ files }) => ({
       version: 1,
-      files: [{ path, kind, usedMs: Date.now() }, ...files.filter((file) => file.path !== path)].slice(
-        0,
-        MOST_FILES,
-      ),
+      files: [...added, ...files.filter(({ path }) => !paths.includes(path))].slice(0, MOST_FILES),
     }));
   }
 
@@ -73,6 +75,10 @@ export class FileHistory {
       files: files.filter(({ path }) => idOf(path) !== id),
     }));
   }
+}
+
+function kindOf(path: string): 'study' | 'source' {
+  return isStudyPath(path) ? 'study' : 'source';
 }
 
 function idOf(path: string): string {

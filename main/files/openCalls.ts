@@ -31,14 +31,18 @@ type OpenCalls = Pick<
 >;
 
 export function openCalls({ host, handles, history }: Parts): OpenCalls {
-  /** Opens a file that the user gave, and remembers that they did. */
-  async function openGiven(path: string): Promise<OpenedFile> {
-    const file = await handles.open(path);
-    await history.add(path, isStudyPath(path) ? 'study' : 'source').catch((error: unknown) => {
-      // The list of recent files is a convenience: without it the file opens all the same.
+  /** Remembers files that the user gave: without that list they open all the same, so a fault in it only warns. */
+  async function remember(paths: string[]): Promise<void> {
+    await history.add(paths).catch((error: unknown) => {
       host.warn(error instanceof Error ? error.message : String(error));
     });
-    return file;
+  }
+
+  async function openGiven(paths: string[]): Promise<OpenedFile[]> {
+    const files: OpenedFile[] = [];
+    for (const path of paths) files.push(await handles.open(path));
+    await remember(paths);
+    return files;
   }
 
   return {
@@ -47,21 +51,22 @@ export function openCalls({ host, handles, history }: Parts): OpenCalls {
       const troubles: string[] = [];
       for (const path of host.launchPaths(windowId)) {
         try {
-          files.push(await openGiven(path));
+          files.push(await handles.open(path));
         } catch (error) {
           troubles.push(fileRefusal(error, path, 'be opened').message);
         }
       }
+      await remember(files.flatMap(({ path }) => path ?? []));
       return { hostKind: host.hostKind, saveFolder: host.saveFolder, files, troubles };
     },
 
     async openByDialog({ purpose }, { windowId }) {
       if (host.dialogs === null)
         throw new Refusal('This host has no dialogs: pick the file in the page.', 'use');
-      return await openAll(await host.dialogs.openFiles(windowId, purpose), openGiven);
+      return await openGiven(await host.dialogs.openFiles(windowId, purpose));
     },
 
-    openDropped: ({ paths }) => openAll(paths, openGiven),
+    openDropped: ({ paths }) => openGiven(paths),
 
     async locateSource(source) {
       const studyPath = source.studyId === null ? null : (handles.find(source.studyId) ?? null);
@@ -92,23 +97,14 @@ export function openCalls({ host, handles, history }: Parts): OpenCalls {
       const path = join(host.saveFolder, name);
       const existing = await stampOrNull(path).catch(() => null);
       if (existing === null || existing.sha256 !== sha256) return null;
-      await history.add(path, 'study');
+      await remember([path]);
       return { id: handles.grant(path, true), name, folder: host.saveFolder, existing };
     },
 
     async openRecent({ id }) {
-      return await openGiven(await history.pathOf(id));
+      return (await openGiven([await history.pathOf(id)]))[0]!;
     },
   };
-}
-
-async function openAll(
-  paths: string[],
-  openOne: (path: string) => Promise<OpenedFile>,
-): Promise<OpenedFile[]> {
-  const files: OpenedFile[] = [];
-  for (const path of paths) files.push(await openOne(path));
-  return files;
 }
 
 async function readWhole(path: string): Promise<{ bytes: Uint8Array; modifiedMs: number }> {

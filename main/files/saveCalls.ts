@@ -54,7 +54,7 @@ export function saveCalls({ host, handles, history, exports, lockFolder }: Parts
       const path = handles.writablePathOf(targetId);
       const outcome = await saveAtomically(path, bytes, { lockFolder, expected });
       if (outcome.kind === 'saved')
-        await history.add(path, 'study').catch((error: unknown) => host.warn(String(error)));
+        await history.add([path]).catch((error: unknown) => host.warn(String(error)));
       return outcome;
     },
 
