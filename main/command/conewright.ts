@@ -26,9 +26,8 @@ export async function run(argv: readonly string[], { print, say }: Streams = HOS
     .description('Redshift shells of a galaxy survey, and what each is worth.')
     .usage('VERB [options]    (npm run -s conewright -- VERB [options])')
     .helpCommand(false)
-    .showHelpAfterError('Ask with --help.')
     .exitOverride()
-    .configureOutput({ writeOut: print, writeErr: (text) => say(oneLine(text)) });
+    .configureOutput({ writeOut: print, writeErr: (text) => say(`${oneLine(text)}; ask with --help.`) });
   addDistances(program, print);
   addShells(program, print);
   addCoordinates(program, say);

@@ -40,6 +40,7 @@ export async function writeOutput(
           );
       }
     } catch (error) {
+      await part.file.close().catch(() => undefined);
       await systemCalls.unlink(part.path).catch(() => undefined);
       throw error;
     }

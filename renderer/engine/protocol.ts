@@ -90,3 +90,5 @@ export type EngineRequest =
 export type EngineAnswer =
   | { readonly kind: 'answer'; readonly id: number; readonly value: GalaxyRow | Preview | Blob }
   | { readonly kind: 'refused'; readonly id: number; readonly sentence: string };
+
+export type { Preview };

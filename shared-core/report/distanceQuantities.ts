@@ -110,6 +110,7 @@ export const DISTANCE_QUANTITIES: readonly Quantity<DistanceRow>[] = [
     title: 'lookback',
     latexTitle: '$t_{\\rm L}$',
     unit: 'Gyr',
+    startsBlock: true,
     value: (d) => d.lookbackGyr,
     show: { decimals: 4 },
     meaning: 'Lookback time.',

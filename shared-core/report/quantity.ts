@@ -78,6 +78,8 @@ export interface Quantity<Row> {
   readonly title: string;
   readonly latexTitle: string;
   readonly unit: Unit;
+  /** Begins a new block where a text table is too wide for one. */
+  readonly startsBlock?: true;
   readonly value: (row: Row) => number | null;
   /** How a person is shown it: decimals, or significant digits. */
   readonly show: { readonly decimals: number } | { readonly significant: number };

@@ -23,14 +23,20 @@ export function asText<Row>(table: Table<Row>, width = 100): string {
   const columns = table.quantities.map((q) => {
     const cells = table.rows.map((row) => shownText(q, row, table.units));
     const head = [q.title, shownUnit(q, table.units)];
-    return { head, cells, wide: Math.max(...head.map((t) => t.length), ...cells.map((t) => t.length)) };
+    return {
+      starts: q.startsBlock === true,
+      head,
+      cells,
+      wide: Math.max(...head.map((t) => t.length), ...cells.map((t) => t.length)),
+    };
   });
   const numberWide = Math.max(1, String(table.rows.length).length);
+  const whole = columns.reduce((sum, c) => sum + c.wide + 2, numberWide);
   const blocks: (typeof columns)[] = [];
   let room = 0;
   for (const column of columns) {
     const needed = column.wide + 2;
-    if (blocks.length === 0 || room < needed) {
+    if (blocks.length === 0 || room < needed || (column.starts && whole > width)) {
       blocks.push([]);
       room = width - numberWide;
     }
@@ -42,10 +48,8 @@ export function asText<Row>(table: Table<Row>, width = 100): string {
     if (lines.length > 0) lines.push('');
     const line = (label: string, cell: (c: (typeof block)[number]) => string) =>
       label.padStart(numberWide) + block.map((c) => `  ${cell(c).padStart(c.wide)}`).join('');
-    lines.push(
-      line('#', (c) => c.head[0]!),
-      line('', (c) => c.head[1]!).trimEnd(),
-    );
+    lines.push(line('#', (c) => c.head[0]!));
+    if (block.some((c) => c.head[1] !== '')) lines.push(line('', (c) => c.head[1]!).trimEnd());
     for (let i = 0; i < table.rows.length; i++) lines.push(line(String(i + 1), (c) => c.cells[i]!));
   }
   if (table.notes.length > 0) lines.push('', ...table.notes);

@@ -1,0 +1,107 @@
+import { type ReadonlySignal, useComputed, useSignal, useSignalEffect } from '@preact/signals';
+import { DISTANCE_QUANTITIES, distanceRows } from '../../shared-core/report/distanceQuantities.ts';
+import { formatNumber, shownText, shownUnit } from '../../shared-core/report/quantity.ts';
+import type { GalaxyRow } from '../engine/protocol.ts';
+import { useApp } from '../state/app.ts';
+import { IconButton } from '../ui/IconButton.tsx';
+import { unitText } from '../ui/unitText.ts';
+import { pickedSeparation } from './separationText.ts';
+
+const SHOWN = ['comovingMpc', 'luminosityMpc', 'angularDiameterMpc', 'lookbackGyr', 'ageGyr'];
+
+/** What is known of the galaxy under the pointer, or of the ones picked. */
+export function GalaxyCard({
+  hovered,
+}: {
+  readonly hovered: ReadonlySignal<{ readonly index: number } | null>;
+}) {
+  const app = useApp();
+  const { engine, derived, view } = app;
+  const index = useComputed(() => hovered.value?.index ?? view.pickedGalaxies.value.at(-1) ?? null);
+  const row = useSignal<GalaxyRow | null>(null);
+  useSignalEffect(() => {
+    const asked = index.value;
+    if (asked === null || engine.selected.value === null) {
+      row.value = null;
+      return;
+    }
+    engine.client.row(asked).then(
+      (found) => {
+        if (index.peek() === asked) row.value = found;
+      },
+      () => (row.value = null),
+    );
+  });
+  const galaxy = row.value;
+  if (galaxy === null) return null;
+  const units = derived.units.value;
+  const [distances] = distanceRows(derived.cosmology.value, [galaxy.redshift]);
+  const apart = hovered.value === null ? pickedSeparation(app) : null;
+  const picked = view.pickedGalaxies.value.length;
+  const length = (mpc: number) =>
+    `${formatNumber(mpc * (units.perH ? units.h : 1), { significant: 5 })} ${units.perH ? 'Mpc/h' : 'Mpc'}`;
+  return (
+    <section class="galaxy-card" aria-label="Galaxy pointed at" aria-live="polite">
+      <header>
+        <strong>Row at line {galaxy.line}</strong>
+        {picked > 0 ? (
+          <IconButton
+            icon="close"
+            label="Let the galaxy go"
+            onClick={() => (view.pickedGalaxies.value = [])}
+          />
+        ) : null}
+      </header>
+      <dl>
+        <dt>RA, Dec</dt>
+        <dd>
+          {galaxy.raDeg.toFixed(5)}°, {galaxy.decDeg.toFixed(5)}°
+        </dd>
+        <dt>z</dt>
+        <dd>{String(Number(galaxy.redshift.toPrecision(8)))}</dd>
+        {DISTANCE_QUANTITIES.filter((q) => SHOWN.includes(q.key)).map((q) => (
+          <>
+            <dt>{q.title}</dt>
+            <dd>
+              {shownText(q, distances!, units)} {unitText(shownUnit(q, units))}
+            </dd>
+          </>
+        ))}
+        {galaxy.magnitude === null ? null : (
+          <>
+            <dt>magnitude</dt>
+            <dd>{Number.isFinite(galaxy.magnitude) ? String(galaxy.magnitude) : 'not given'}</dd>
+          </>
+        )}
+        {galaxy.weight === null ? null : (
+          <>
+            <dt>weight</dt>
+            <dd>{String(galaxy.weight)}</dd>
+          </>
+        )}
+        {galaxy.extras.map(([name, value]) => (
+          <>
+            <dt>{name}</dt>
+            <dd>{Number.isFinite(value) ? String(value) : 'not given'}</dd>
+          </>
+        ))}
+      </dl>
+      {apart === null ? (
+        picked === 1 && hovered.value === null ? (
+          <p>Shift-click another galaxy to measure to it.</p>
+        ) : null
+      ) : (
+        <dl class="galaxy-apart">
+          <dt>apart</dt>
+          <dd>{length(apart.totalMpc)}</dd>
+          <dt>along the line of sight</dt>
+          <dd>{length(apart.alongMpc)}</dd>
+          <dt>across it</dt>
+          <dd>{length(apart.acrossMpc)}</dd>
+          <dt>on the sky</dt>
+          <dd>{formatNumber(apart.angleDeg, { significant: 4 })}°</dd>
+        </dl>
+      )}
+    </section>
+  );
+}

@@ -1,0 +1,146 @@
+import './stage.css';
+import { useComputed, useSignal, useSignalEffect } from '@preact/signals';
+import { useEffect, useRef } from 'preact/hooks';
+import { ConeView } from '../cone/coneView.ts';
+import type { ViewState as ConeState, DrawingState } from '../cone/types.ts';
+import { useApp } from '../state/app.ts';
+import { radialPixel, STRIP_LEFT_PX, STRIP_RIGHT_PX, shownWindow } from '../strip/layout.ts';
+import { readingsOf } from '../strip/readings.ts';
+import { colouring, coneFootprint, coneShells, radialScale, VIEW_NAMES } from './coneInputs.ts';
+import { GalaxyCard } from './GalaxyCard.tsx';
+import { readTheme } from './readTheme.ts';
+import { StageBar } from './StageBar.tsx';
+import { StageLegend } from './StageLegend.tsx';
+import { separationText } from './separationText.ts';
+
+/** Mounts the cone and keeps it in step with the study, the strip and the ledger. */
+export function Stage() {
+  const app = useApp();
+  const { studyState, derived, engine, view } = app;
+  const place = useRef<HTMLDivElement>(null);
+  const cone = useSignal<ConeView | null>(null);
+  const coneState = useSignal<ConeState | null>(null);
+  const drawing = useSignal<DrawingState | null>(null);
+  const widthPx = useSignal(640);
+  const hovered = useSignal<{ readonly index: number; readonly xPx: number; readonly yPx: number } | null>(
+    null,
+  );
+
+  useEffect(() => {
+    const made = new ConeView(place.current!, {
+      onHover: (hit) => (hovered.value = hit),
+      onPick: (hit, extend) => {
+        const [first] = view.pickedGalaxies.value;
+        if (hit === null) view.pickedGalaxies.value = [];
+        else
+          view.pickedGalaxies.value =
+            extend && first !== undefined && first !== hit.index ? [first, hit.index] : [hit.index];
+      },
+      onHoverShell: (index) => (view.hoveredShell.value = index),
+      onPickShell: (index) => (view.selectedShell.value = index),
+      onAxisWindow: ({ min, max }) => {
+        const axis = derived.axis.value;
+        view.redshiftWindow.value = [axis.redshiftAt(Math.max(0, min)), axis.redshiftAt(max)];
+      },
+      onViewChanged: (state) => (coneState.value = state),
+      onDrawingState: (state) => (drawing.value = state),
+    });
+    cone.value = made;
+    const watch = new ResizeObserver(([entry]) => {
+      if (entry !== undefined) widthPx.value = entry.contentRect.width;
+    });
+    watch.observe(place.current!);
+    return () => {
+      watch.disconnect();
+      made.dispose();
+    };
+  }, []);
+
+  const window = useComputed(() =>
+    shownWindow(view.redshiftWindow.value, derived.axis.value, derived.deepestRedshift.value),
+  );
+  const pixel = useComputed(() => radialPixel(derived.axis.value, window.value, widthPx.value));
+  const readings = useComputed(() => readingsOf(derived.cosmology.value, derived.units.value));
+  const shells = useComputed(() => coneShells(derived.shells.value));
+  const colours = useComputed(() => {
+    const selected = engine.selected.value;
+    const choice = studyState.study.value.look.colourBy;
+    if (selected === null) return null;
+    return colouring(choice, selected, engine.background.value?.lookbackGyr ?? null, engine.density.value);
+  });
+  const radial = useComputed(() => studyState.study.value.look.radial);
+  const sideways = useComputed(() => studyState.study.value.look.sideways);
+
+  useSignalEffect(() => {
+    const { selected, background } = engine;
+    if (cone.value === null) return;
+    const [galaxies, distances] = [selected.value, background.value];
+    cone.value.setGalaxies(
+      galaxies === null || distances === null
+        ? null
+        : {
+            count: galaxies.sample.count,
+            directions: galaxies.directions,
+            comovingMpc: distances.comovingMpc,
+          },
+    );
+  });
+  useSignalEffect(() => {
+    const footprint = engine.selected.value?.footprint;
+    if (cone.value !== null && footprint != null) cone.value.setFootprint(coneFootprint(footprint));
+  });
+  useSignalEffect(() => {
+    const input = colours.value?.input;
+    if (cone.value !== null && input !== undefined) cone.value.setColouring(input);
+  });
+  useSignalEffect(() => {
+    cone.value?.setShells({
+      shells: shells.value,
+      selected: view.selectedShell.value,
+      hovered: view.hoveredShell.value,
+    });
+  });
+  useSignalEffect(() => {
+    const scale = pixel.value;
+    if (cone.value === null) return;
+    const deepest = Math.max(derived.deepestRedshift.value, window.value[1]);
+    const shown = { min: scale.low, max: scale.high };
+    cone.value.setAxisWindow(shown, { leftPx: STRIP_LEFT_PX, rightPx: STRIP_RIGHT_PX });
+    cone.value.setRadialScale(
+      radialScale(radial.value, readings.value, derived.cosmology.value, derived.units.value, scale, deepest),
+      shown,
+    );
+  });
+  useSignalEffect(() => {
+    // Read again when the theme changes: the colours themselves stand in theme.css.
+    const mode = view.theme.value;
+    document.documentElement.dataset.theme = mode;
+    cone.value?.setTheme(readTheme(mode));
+  });
+  useSignalEffect(() => {
+    void view.cameraAsked.value;
+    cone.value?.setView(VIEW_NAMES[view.cameraView.value]);
+  });
+  useSignalEffect(() => cone.value?.setField(view.field.value));
+  useSignalEffect(() => cone.value?.setSidewaysFactor(sideways.value));
+  useSignalEffect(() => {
+    cone.value?.setMarks(view.pickedGalaxies.value, separationText(app));
+  });
+
+  return (
+    <div class="stage-frame">
+      <div class="stage-cone" ref={place} />
+      <StageBar coneState={coneState} />
+      <StageLegend colours={colours} />
+      <GalaxyCard hovered={hovered} />
+      {drawing.value !== null && drawing.value.webgl !== 'ready' ? (
+        <p class="stage-notice" role="status">
+          Shells cannot be drawn in 3D now ({drawing.value.reason}); everything else goes on working.
+        </p>
+      ) : null}
+      {engine.selected.value === null && engine.progress.value === null ? (
+        <p class="stage-empty">Open a catalogue, or drop a file here, and its cone is drawn.</p>
+      ) : null}
+    </div>
+  );
+}

@@ -1,0 +1,190 @@
+import type { Cosmology } from '../../shared-core/cosmology/cosmology.ts';
+import { formatNumber, type ShownUnits } from '../../shared-core/report/quantity.ts';
+import type { ShellStatistics } from '../../shared-core/shells/shell.ts';
+import type { ColourChoice, RadialReading } from '../../shared-core/study/schema.ts';
+import type {
+  ColouringInput,
+  FootprintInput,
+  RadialScaleInput,
+  ShellInput,
+  Tick,
+  ViewName,
+} from '../cone/types.ts';
+import type { FootprintPicture, Selected } from '../engine/protocol.ts';
+import type { CameraView } from '../state/viewState.ts';
+import { markText } from '../strip/axisMarks.ts';
+import type { RadialPixel } from '../strip/layout.ts';
+import type { Reading, Readings } from '../strip/readings.ts';
+import { drawnAxis } from '../strip/readings.ts';
+import { roundValues } from '../strip/roundValues.ts';
+
+export const VIEW_NAMES: Readonly<Record<CameraView, ViewName>> = {
+  'side-on': 'sideOn',
+  'down-the-cone': 'downTheCone',
+  'from-behind': 'fromBehind',
+  whole: 'whole',
+  around: 'aroundTheObserver',
+  parallel: 'parallel',
+};
+
+const TABLE_STEPS = 1024;
+const WIDE_GAP_PX = 130;
+const NARROW_GAP_PX = 52;
+
+/** How comoving distance becomes radius, and the three rulers with the strip's own round values. */
+export function radialScale(
+  reading: RadialReading,
+  readings: Readings,
+  cosmology: Cosmology,
+  units: ShownUnits,
+  scale: RadialPixel,
+  deepestRedshift: number,
+): RadialScaleInput {
+  const own = drawnAxis(reading, cosmology);
+  const distance = drawnAxis('comoving', cosmology);
+  const comovingMpc = new Float64Array(TABLE_STEPS + 1);
+  const radius = new Float64Array(TABLE_STEPS + 1);
+  const deepest = Math.min(1100, deepestRedshift * 1.1 + 0.001);
+  for (let i = 1; i <= TABLE_STEPS; i++) {
+    // Even in distance near the observer would waste the table far out; even in redshift is fine for every reading.
+    const z = (deepest * i) / TABLE_STEPS;
+    comovingMpc[i] = distance.at(z);
+    radius[i] = own.at(z);
+  }
+  const title = (r: Reading) => `${r.words}${r.unit === 'z' ? '' : `, ${r.unit}`}`;
+  const ticks = (r: Reading) => rulerTicks(r, scale, deepest, distance.at);
+  const mpcText = (mpc: number) => {
+    const shown = units.perH ? mpc * units.h : mpc;
+    return `${markText(Number(shown.toPrecision(3)))} ${readings.comoving.unit}`;
+  };
+  return {
+    reading,
+    table: { comovingMpc, radius },
+    rulers: {
+      redshift: ticks(readings.redshift),
+      lookback: ticks(readings.lookback),
+      comoving: ticks(readings.comoving),
+    },
+    titles: {
+      redshift: title(readings.redshift),
+      lookback: title(readings.lookback),
+      comoving: title(readings.comoving),
+    },
+    formatLength: mpcText,
+    lengthUnitMpc: units.perH ? 1 / units.h : 1,
+  };
+}
+
+function rulerTicks(
+  reading: Reading,
+  scale: RadialPixel,
+  deepest: number,
+  distanceAt: (z: number) => number,
+): Tick[] {
+  const pxOf = (value: number) => scale.at(reading.redshiftAt(value));
+  const high = reading.shownAt(deepest);
+  const coarse = new Set(roundValues(0, high, pxOf, () => WIDE_GAP_PX));
+  return roundValues(0, high, pxOf, () => NARROW_GAP_PX).map((value) => ({
+    comovingMpc: distanceAt(reading.redshiftAt(value)),
+    text: markText(value),
+    level: coarse.has(value) ? 0 : 1,
+  }));
+}
+
+/** Shells as the cone takes them. */
+export function coneShells(shells: readonly ShellStatistics[]): ShellInput[] {
+  const text = (z: number) => String(Number(z.toFixed(4)));
+  return shells.map((s) => ({
+    comovingMinMpc: s.comovingMinMpc,
+    comovingMaxMpc: s.comovingMaxMpc,
+    label: `${text(s.zMin)} – ${text(s.zMax)}`,
+    longLabel: `${text(s.zMin)} < z < ${text(s.zMax)}`,
+  }));
+}
+
+/** The footprint as the cone takes it. */
+export function coneFootprint(footprint: FootprintPicture): FootprintInput {
+  const { fields, origin } = footprint;
+  const wide = fields.length === 0 || fields.some((f) => f.wide);
+  return { fields: fields.filter((f) => f.rings.length > 0), wide, estimated: origin === 'estimated' };
+}
+
+export interface ColourLegend {
+  readonly title: string;
+  readonly map: string;
+  readonly low: string;
+  readonly high: string;
+}
+
+/** How galaxies are coloured, and what the legend says; null while the values are still being made. */
+export function colouring(
+  choice: ColourChoice,
+  selected: Selected,
+  lookbackGyr: Float32Array | null,
+  density: Float32Array | null,
+): { input: ColouringInput; legend: ColourLegend | null } | null {
+  const { redshift } = selected.sample;
+  switch (choice) {
+    case 'shell':
+      return { input: { kind: 'shell' }, legend: null };
+    case 'redshift':
+      return valued(redshift, 'redshift', 'harbour', ends(redshift), (v) => formatNumber(v, { decimals: 2 }));
+    case 'lookback':
+      if (lookbackGyr === null) return null;
+      return valued(lookbackGyr, 'lookback time, Gyr', 'harbour', ends(lookbackGyr), (v) =>
+        formatNumber(v, { decimals: 1 }),
+      );
+    case 'magnitude':
+      if (selected.magnitude === null) return null;
+      return valued(
+        selected.magnitude,
+        'magnitude',
+        'harbour',
+        middlePart(selected.magnitude),
+        (v) => formatNumber(v, { decimals: 1 }),
+        true,
+      );
+    case 'density':
+      if (density === null) return null;
+      return valued(
+        density,
+        'local density, relative to its depth',
+        'harbour',
+        middlePart(density),
+        (v) => `× ${Number((10 ** v).toPrecision(2))}`,
+      );
+  }
+}
+
+function valued(
+  values: Float64Array | Float32Array,
+  title: string,
+  map: string,
+  [from, to]: readonly [number, number],
+  words: (value: number) => string,
+  reversed = false,
+) {
+  return {
+    input: { kind: 'values', values, from, to, map, reversed } as const,
+    legend: { title, map, low: words(reversed ? to : from), high: words(reversed ? from : to) },
+  };
+}
+
+function ends(sorted: Float64Array | Float32Array): [number, number] {
+  return apart(sorted[0] ?? 0, sorted.at(-1) ?? 1);
+}
+
+const SAMPLE = 20_000;
+
+/** From the 2nd to the 98th percentile, so that a few odd values do not take all the colour; NaN is left out. */
+function middlePart(values: Float32Array): [number, number] {
+  const step = Math.max(1, Math.floor(values.length / SAMPLE));
+  const some: number[] = [];
+  for (let i = 0; i < values.length; i += step) if (Number.isFinite(values[i])) some.push(values[i]!);
+  some.sort((a, b) => a - b);
+  return apart(some[Math.floor(0.02 * some.length)] ?? 0, some[Math.ceil(0.98 * some.length) - 1] ?? 1);
+}
+
+function apart(from: number, to: number): [number, number] {
+  return to > from ? [from, to] : [from - 0.5, from + 0.5];
+}
