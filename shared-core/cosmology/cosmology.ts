@@ -9,7 +9,10 @@ import type { CosmologyParameters } from './parameters.ts';
 import { logOnePlus } from './redshiftRange.ts';
 import { validateCosmology } from './validation.ts';
 
-/** Distances, times and volumes of one universe. Redshifts are plain numbers; every unit ends its name. */
+/**
+ * Distances, times and volumes of one universe. Redshifts are plain numbers, 0 <= z <= 1e9; every unit ends its name.
+ * Equations are those of Hogg 1999 (astro-ph/9905116).
+ */
 export interface Cosmology {
   readonly parameters: CosmologyParameters;
   /** H0 / (100 km/s/Mpc). */
@@ -19,25 +22,33 @@ export interface Cosmology {
   /** Photons, and neutrinos (massless and massive, as they weigh today). */
   readonly omegaGamma0: number;
   readonly omegaNu0: number;
+  /** H(z) = H0 E(z), eq. 14. */
   hubbleKmSMpc(z: number): number;
+  /** Along the line of sight, eq. 15. */
   comovingMpc(z: number): number;
+  /** Comoving size over angle, eq. 16. @throws Refusal beyond the antipode of a closed universe, as the next two */
   transverseComovingMpc(z: number): number;
+  /** Eq. 18. */
   angularDiameterMpc(z: number): number;
+  /** Eq. 21. */
   luminosityMpc(z: number): number;
+  /** Magnitudes, eq. 25; -Infinity at z = 0. */
   distanceModulus(z: number): number;
-  /** Volume-averaged distance D_V = [z D_M^2 c/H]^(1/3). */
+  /** Volume-averaged distance D_V = [z D_M^2 c/H]^(1/3), Eisenstein et al. 2005 (astro-ph/0501171), eq. 2. */
   volumeAveragedMpc(z: number): number;
+  /** Eq. 30. */
   lookbackGyr(z: number): number;
-  /** Infinity in a universe without a beginning (de Sitter). */
+  /** From the beginning to z; Infinity in a universe without a beginning (de Sitter). */
   ageGyr(z: number): number;
   /** Comoving distance light has travelled since the beginning; Infinity where that diverges. */
   particleHorizonMpc(): number;
-  /** All-sky comoving volume within z. */
+  /** Of the whole sky within z, eq. 29. */
   comovingVolumeMpc3(z: number): number;
-  /** All-sky comoving volume between two redshifts, with full digits for shells of any thinness. */
+  /** Of the whole sky between two redshifts, with full digits for shells of any thinness. */
   shellVolumeAllSkyMpc3(zMin: number, zMax: number): number;
-  /** dV/dz/dOmega. */
+  /** dV/dz/dOmega, eq. 28. */
   differentialVolumeMpc3PerSr(z: number): number;
+  /** Inverse of comovingMpc, as the others of theirs: to rounding. @throws Refusal for what no redshift has */
   redshiftAtComovingMpc(comovingMpc: number): number;
   redshiftAtLookbackGyr(lookbackGyr: number): number;
   redshiftAtAgeGyr(ageGyr: number): number;
@@ -46,7 +57,10 @@ export interface Cosmology {
   table(): BackgroundTable;
 }
 
-/** Fast interpolation, held to 1e-9 of direct quadrature for 1e-6 < z < 20 and 1e-7 up to z 1100. */
+/**
+ * Fast interpolation, held to 1e-9 of direct quadrature for 1e-6 < z < 20 and 1e-7 up to z 1100.
+ * Single values outside 0..1100 are refused.
+ */
 export interface BackgroundTable {
   comovingMpc(z: number): number;
   lookbackGyr(z: number): number;
@@ -57,10 +71,7 @@ export interface BackgroundTable {
 }
 
 /**
- * Distances, times and volumes of a homogeneous universe by adaptive quadrature, relative error below 1e-12:
- * Hogg 1999 (astro-ph/9905116), eq. 14 to 30. All methods take 0 <= z <= 1e9.
- *
- * At z = 0 the distance modulus is -Infinity. Where the past has no end (de Sitter) the age is Infinity.
+ * The homogeneous universe of these parameters, by adaptive quadrature: relative error below 1e-12.
  *
  * @throws Refusal from here for parameters that make no universe (see validateCosmology); from the methods for a
  * redshift out of range, from the transverse, angular-diameter and luminosity distances beyond the antipode of a

@@ -32,6 +32,13 @@ const LEAST_E_SQUARED = 1e-6;
  * back to z = 1e9 (no big bang)
  */
 export function validateCosmology(parameters: CosmologyParameters): void {
+  validateValues(parameters);
+  const turn = findTurn(parameters);
+  if (turn !== null) refuse(noBigBang(parameters, turn));
+}
+
+/** The part of validateCosmology that looks at each value alone. @throws Refusal likewise */
+export function validateValues(parameters: CosmologyParameters): void {
   for (const name of Object.keys(ALLOWED) as NumberName[]) {
     const value = parameters[name];
     if (name === 'omegaDe0' && value === 'flat') continue;
@@ -41,8 +48,6 @@ export function validateCosmology(parameters: CosmologyParameters): void {
     }
   }
   validateMasses(parameters);
-  const turn = findTurn(parameters);
-  if (turn !== null) refuse(noBigBang(parameters, turn));
 }
 
 function refuse(sentence: string): never {

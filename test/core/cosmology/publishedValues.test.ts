@@ -94,6 +94,17 @@ describe('neutrinos inside the matter density', () => {
       expect(parametersWithNeutrinosInside(parameters)).toEqual(parameters);
   });
 
+  it('are refused when they outweigh the matter, or when a value is out of bounds', () => {
+    expect(() =>
+      parametersWithNeutrinosInside(model({ ...radiation, omegaM0: 0.01, neutrinoMassesEv: [1] })),
+    ).toThrow(
+      /^omegaM0 is 0\.01 and cannot contain neutrinos of 0\.02\d+; give more matter or lighter neutrinos\.$/,
+    );
+    expect(() =>
+      parametersWithNeutrinosInside(model({ tCmbK: 2.7, nEff: 0.5, neutrinoMassesEv: [1] })),
+    ).toThrow(/^neutrinoMassesEv lists 1 masses/);
+  });
+
   it('missing masses are massless species', () => {
     const at = (neutrinoMassesEv: number[]) =>
       createCosmology(model({ ...radiation, neutrinoMassesEv })).comovingMpc(2);
