@@ -1,4 +1,8 @@
-import { type Signal, signal } from '@preact/signals';
+import { batch, type Signal, signal } from '@preact/signals';
+
+/** From where the cone is to be seen. */
+export const CAMERA_VIEWS = ['side-on', 'down-the-cone', 'from-behind', 'whole', 'around', 'parallel'] as const;
+export type CameraView = (typeof CAMERA_VIEWS)[number];
 
 /** What the person looks at: not part of the study, not undone, not saved. */
 export interface ViewState {
@@ -11,11 +15,19 @@ export interface ViewState {
   readonly theme: Signal<'light' | 'dark'>;
   /** Which of several fields on the sky is looked at side-on. */
   readonly field: Signal<number>;
+  /** The view asked for last, by key or button. */
+  readonly cameraView: Signal<CameraView>;
+  /** How often a view was asked for: asking again for the same one brings the camera back after orbiting. */
+  readonly cameraAsked: Signal<number>;
+  /** Asks for a view. */
+  lookFrom(view: CameraView): void;
   /** The quantity, by key, whose explanation is open. */
   readonly explained: Signal<string | null>;
 }
 
 export function createViewState(theme: 'light' | 'dark'): ViewState {
+  const cameraView = signal<CameraView>('side-on');
+  const cameraAsked = signal(0);
   return {
     selectedShell: signal(null),
     hoveredShell: signal(null),
@@ -23,6 +35,14 @@ export function createViewState(theme: 'light' | 'dark'): ViewState {
     redshiftWindow: signal(null),
     theme: signal(theme),
     field: signal(0),
+    cameraView,
+    cameraAsked,
+    lookFrom(view) {
+      batch(() => {
+        cameraView.value = view;
+        cameraAsked.value++;
+      });
+    },
     explained: signal(null),
   };
 }
