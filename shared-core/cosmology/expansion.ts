@@ -16,7 +16,7 @@ export interface Expansion {
 }
 
 /** Photons today, in units of the critical density: (4 sigma T^4 / c^3) / (3 H0^2 / 8 pi G). */
-export function photonDensity(tCmbK: number, h0KmSMpc: number): number {
+function photonDensity(tCmbK: number, h0KmSMpc: number): number {
   const c = SPEED_OF_LIGHT_KM_S * 1000;
   const hubblePerS = h0KmSMpc / KM_PER_MPC;
   const critical = (3 * hubblePerS ** 2) / (8 * Math.PI * GRAVITATION_SI);
