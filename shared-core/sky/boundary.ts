@@ -3,10 +3,8 @@ import { findCuts } from './crossings.ts';
 import { NearPool } from './nearPool.ts';
 import { joinRings } from './rings.ts';
 import type { CompiledShape } from './shape.ts';
+import type { ShapeIndex } from './shapeIndex.ts';
 import { unitToRaDec, type Vec3 } from './vectors.ts';
-
-/** Which shapes may hold a point; the rest certainly do not. */
-export type Candidates = (raDeg: number, decDeg: number) => Iterable<number>;
 
 interface NumberedCircles {
   /** Circles that are the same set of points share a number. */
@@ -57,7 +55,7 @@ function covers(arc: Arc, point: Vec3): boolean {
 export function regionBoundary(
   shapes: readonly CompiledShape[],
   partCount: number,
-  candidates: Candidates,
+  index: ShapeIndex,
   tolerance: number,
 ): Arc[][] | null {
   const arcs: Arc[] = [];
@@ -92,7 +90,8 @@ export function regionBoundary(
         (sense[j] === sense[i] ? leftIn : rightIn).add(shapeOf[j]!);
       }
       const { raDeg, decDeg } = unitToRaDec(middle);
-      for (const s of candidates(raDeg, decDeg)) {
+      const cell = index.cellOf(raDeg, decDeg);
+      for (const s of index.shapes.subarray(index.first[cell]!, index.first[cell + 1]!)) {
         if (decided.has(s) || shapes[s]!.side(raDeg, decDeg) < 0) continue;
         leftIn.add(s);
         rightIn.add(s);

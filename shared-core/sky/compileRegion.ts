@@ -1,13 +1,13 @@
 import { Refusal } from '../base/refusal.ts';
 import type { Arc } from './arc.ts';
 import { ringArea, wrapArea } from './area.ts';
-import { type Candidates, regionBoundary } from './boundary.ts';
+import { regionBoundary } from './boundary.ts';
 import { compileShape } from './compileShape.ts';
 import { outlineRings } from './outline.ts';
 import type { Footprint, OutlineRing, Region } from './region.ts';
 import { compileRegionSide, isInRegion } from './regionSide.ts';
 import { type CompiledShape, SMALLEST_AREA_SR } from './shape.ts';
-import { compileShapeIndex } from './shapeIndex.ts';
+import { compileShapeIndex, type ShapeIndex } from './shapeIndex.ts';
 import { DEG2_PER_SR, normaliseRaDeg, SPREAD_DIRECTIONS, unitToRaDec } from './vectors.ts';
 
 /**
@@ -21,11 +21,11 @@ interface Boundary {
   readonly areaSr: number;
 }
 
-function combine(shapes: readonly CompiledShape[], partCount: number, candidates: Candidates): Boundary {
+function combine(shapes: readonly CompiledShape[], partCount: number, index: ShapeIndex): Boundary {
   for (const tolerance of TOLERANCES_RAD) {
-    const rings = regionBoundary(shapes, partCount, candidates, tolerance);
+    const rings = regionBoundary(shapes, partCount, index, tolerance);
     if (rings === null) continue;
-    if (rings.length === 0) return { rings, areaSr: allOrNothing(shapes, partCount, candidates) };
+    if (rings.length === 0) return { rings, areaSr: allOrNothing(shapes, partCount, index) };
     let sum = 0;
     for (const ring of rings) sum += ringArea(ring);
     return { rings, areaSr: Math.abs(sum) < SMALLEST_AREA_SR ? 0 : wrapArea(sum) };
@@ -37,11 +37,11 @@ function combine(shapes: readonly CompiledShape[], partCount: number, candidates
 }
 
 /** Area of a region without boundary: one point that lies on no shape's edge speaks for all. */
-function allOrNothing(shapes: readonly CompiledShape[], partCount: number, candidates: Candidates): number {
+function allOrNothing(shapes: readonly CompiledShape[], partCount: number, index: ShapeIndex): number {
   for (const direction of SPREAD_DIRECTIONS) {
     const { raDeg, decDeg } = unitToRaDec(direction);
     if (shapes.some((shape) => shape.side(raDeg, decDeg) === 0)) continue;
-    return isInRegion(shapes, partCount, candidates, raDeg, decDeg) ? 4 * Math.PI : 0;
+    return isInRegion(shapes, partCount, index, raDeg, decDeg) ? 4 * Math.PI : 0;
   }
   return 0;
 }
@@ -62,18 +62,18 @@ export function compileRegion(region: Region): Footprint {
   }
   const shapes = [...region.parts, ...region.holes].map(compileShape);
   const partCount = region.parts.length;
-  const candidates = compileShapeIndex(shapes);
+  const index = compileShapeIndex(shapes);
   const only = shapes.length === 1 ? shapes[0]! : null;
   const boundary = only
     ? { rings: ringsOfShape(only), areaSr: only.areaSr }
-    : combine(shapes, partCount, candidates);
+    : combine(shapes, partCount, index);
   if (boundary.areaSr < SMALLEST_AREA_SR) {
     throw new Refusal(
       "The region's holes cover all of its parts and leave nothing: remove a hole or make it smaller.",
       'use',
     );
   }
-  const inRegion = compileRegionSide(shapes, partCount, candidates);
+  const inRegion = compileRegionSide(shapes, partCount, index);
   let outline: readonly OutlineRing[] | null = null;
   return {
     origin: 'given',

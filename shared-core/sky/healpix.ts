@@ -12,8 +12,8 @@ export const MAX_NSIDE = 8192;
 
 const HALF_PI = Math.PI / 2;
 /** Ring of each face's north corner in units of nside, and longitude of its middle in units of 45 degrees. */
-const FACE_RING = [2, 2, 2, 2, 3, 3, 3, 3, 4, 4, 4, 4] as const;
-const FACE_LON = [1, 3, 5, 7, 0, 2, 4, 6, 1, 3, 5, 7] as const;
+export const FACE_RING = [2, 2, 2, 2, 3, 3, 3, 3, 4, 4, 4, 4] as const;
+export const FACE_LON = [1, 3, 5, 7, 0, 2, 4, 6, 1, 3, 5, 7] as const;
 
 export function isNside(nside: number): boolean {
   return Number.isInteger(nside) && nside >= 1 && nside <= MAX_NSIDE && (nside & (nside - 1)) === 0;
@@ -26,7 +26,7 @@ function checkNside(nside: number): void {
   }
 }
 
-function checkPixel(nside: number, pixel: number): void {
+export function checkPixel(nside: number, pixel: number): void {
   checkNside(nside);
   if (!(Number.isInteger(pixel) && pixel >= 0 && pixel < 12 * nside * nside)) {
     throw new RangeError(
@@ -43,6 +43,11 @@ export function pixelCount(nside: number): number {
 /** Area of a pixel in square degrees, the same for all. */
 export function pixelAreaDeg2(nside: number): number {
   return (4 * Math.PI) / pixelCount(nside) / (RAD_PER_DEG * RAD_PER_DEG);
+}
+
+/** Square root of a pixel's area in degrees. */
+export function pixelSizeDeg(nside: number): number {
+  return Math.sqrt(pixelAreaDeg2(nside));
 }
 
 /** The 13 low bits of x on the even places: x = abc gives 0a0b0c. */
@@ -66,29 +71,6 @@ export function compressBits(v: number): number {
 /** NESTED number of pixel (x, y) of a face. */
 export function faceToNest(nside: number, face: number, x: number, y: number): number {
   return face * nside * nside + (spread(x) | (spread(y) << 1));
-}
-
-/** RING number of pixel (x, y) of a face. */
-function faceToRing(nside: number, face: number, x: number, y: number): number {
-  const ring = FACE_RING[face]! * nside - x - y - 1;
-  let length = nside;
-  let shift = 0;
-  let before: number;
-  if (ring < nside) {
-    length = ring;
-    before = 2 * length * (length - 1);
-  } else if (ring > 3 * nside) {
-    length = 4 * nside - ring;
-    before = 12 * nside * nside - 2 * (length + 1) * length;
-  } else {
-    before = 2 * nside * (nside - 1) + (ring - nside) * 4 * nside;
-    shift = (ring - nside) & 1;
-  }
-  // Pixels of the ring are counted from RA 0; (1 + shift) is that of the first pixel's centre, in half steps.
-  let place = (FACE_LON[face]! * length + x - y + 1 + shift) >> 1;
-  if (place > 4 * length) place -= 4 * length;
-  else if (place < 1) place += 4 * length;
-  return before + place - 1;
 }
 
 /** What locate() found: read at once, before the next call. One object, so that no call allocates. */
@@ -133,76 +115,11 @@ function locate(nside: number, raDeg: number, decDeg: number): void {
   }
 }
 
-/** NESTED pixel that holds a sky position; any finite RA, Dec in [-90, 90]. */
+/** NESTED pixel (what this program uses throughout) that holds a sky position; any finite RA, Dec in [-90, 90]. */
 export function raDecToNest(nside: number, raDeg: number, decDeg: number): number {
   checkNside(nside);
   locate(nside, raDeg, decDeg);
   return faceToNest(nside, found.face, found.x, found.y);
-}
-
-/** RING pixel that holds a sky position; any finite RA, Dec in [-90, 90]. */
-export function raDecToRing(nside: number, raDeg: number, decDeg: number): number {
-  checkNside(nside);
-  locate(nside, raDeg, decDeg);
-  return faceToRing(nside, found.face, found.x, found.y);
-}
-
-export function nestToRing(nside: number, pixel: number): number {
-  checkPixel(nside, pixel);
-  const area = nside * nside;
-  const face = Math.floor(pixel / area);
-  const inFace = pixel - face * area;
-  return faceToRing(nside, face, compressBits(inFace), compressBits(inFace >>> 1));
-}
-
-/** Whole part of the square root of a number below 2^52. */
-function isqrt(v: number): number {
-  let root = Math.floor(Math.sqrt(v));
-  if (root * root > v) root--;
-  else if ((root + 1) * (root + 1) <= v) root++;
-  return root;
-}
-
-export function ringToNest(nside: number, pixel: number): number {
-  checkPixel(nside, pixel);
-  const total = 12 * nside * nside;
-  const cap = 2 * nside * (nside - 1);
-  let ring: number;
-  let place: number;
-  let length: number;
-  let shift = 0;
-  let face: number;
-  if (pixel < cap) {
-    ring = (1 + isqrt(1 + 2 * pixel)) >> 1;
-    place = pixel + 1 - 2 * ring * (ring - 1);
-    length = ring;
-    face = Math.floor((place - 1) / length);
-  } else if (pixel < total - cap) {
-    const inBelt = pixel - cap;
-    const row = Math.floor(inBelt / (4 * nside));
-    ring = row + nside;
-    place = inBelt - row * 4 * nside + 1;
-    shift = row & 1;
-    length = nside;
-    // How far the place lies along the falling and the rising diagonals, in faces.
-    const rise = ring - nside + 1;
-    const fall = 2 * nside + 2 - rise;
-    const falling = Math.floor((place - (rise >> 1) + nside - 1) / nside);
-    const rising = Math.floor((place - (fall >> 1) + nside - 1) / nside);
-    if (rising === falling) face = (rising & 3) + 4;
-    else face = rising < falling ? rising & 3 : (falling & 3) + 8;
-  } else {
-    const fromEnd = total - pixel;
-    length = (1 + isqrt(2 * fromEnd - 1)) >> 1;
-    ring = 4 * nside - length;
-    place = 4 * length + 1 - (fromEnd - 2 * length * (length - 1));
-    face = 8 + Math.floor((place - 1) / length);
-  }
-  // The face's own rows (x + y) and columns (x - y).
-  const row = ring - FACE_RING[face]! * nside + 1;
-  let column = 2 * place - FACE_LON[face]! * length - shift - 1;
-  if (column >= 2 * nside) column -= 8 * nside;
-  return faceToNest(nside, face, (column - row) >> 1, (-column - row) >> 1);
 }
 
 /** Where pointOnFace() arrived: read at once, before the next call. */
@@ -235,9 +152,4 @@ export function nestToRaDec(nside: number, pixel: number): { raDeg: number; decD
   const inFace = pixel - face * area;
   pointOnFace(nside, face, compressBits(inFace) + 0.5, compressBits(inFace >>> 1) + 0.5);
   return { raDeg: facePoint.raDeg, decDeg: facePoint.decDeg };
-}
-
-/** Centre of a RING pixel in degrees. */
-export function ringToRaDec(nside: number, pixel: number): { raDeg: number; decDeg: number } {
-  return nestToRaDec(nside, ringToNest(nside, pixel));
 }

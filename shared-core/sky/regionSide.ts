@@ -1,5 +1,5 @@
-import type { Candidates } from './boundary.ts';
 import type { CompiledShape } from './shape.ts';
+import type { ShapeIndex } from './shapeIndex.ts';
 import { combine, cross, perpendicular, raDecToUnit, unit, unitToRaDec } from './vectors.ts';
 
 /** Points tried around a point that lies on several edges, at 2e-4 arcseconds from it. */
@@ -10,12 +10,15 @@ const PROBE_RAD = 1e-9;
 export function isInRegion(
   shapes: readonly CompiledShape[],
   partCount: number,
-  candidates: Candidates,
+  index: ShapeIndex,
   raDeg: number,
   decDeg: number,
 ): boolean {
   let inPart = false;
-  for (const s of candidates(raDeg, decDeg)) {
+  const cell = index.cellOf(raDeg, decDeg);
+  const last = index.first[cell + 1]!;
+  for (let k = index.first[cell]!; k < last; k++) {
+    const s = index.shapes[k]!;
     const side = shapes[s]!.side(raDeg, decDeg);
     if (s < partCount) inPart ||= side >= 0;
     else if (side > 0) return false;
@@ -31,7 +34,7 @@ export function isInRegion(
 export function compileRegionSide(
   shapes: readonly CompiledShape[],
   partCount: number,
-  candidates: Candidates,
+  index: ShapeIndex,
 ): (raDeg: number, decDeg: number) => boolean {
   if (shapes.length === 1) {
     const shape = shapes[0]!;
@@ -41,7 +44,10 @@ export function compileRegionSide(
     let inPart = false;
     let edges = 0;
     let onHole = false;
-    for (const s of candidates(raDeg, decDeg)) {
+    const cell = index.cellOf(raDeg, decDeg);
+    const last = index.first[cell + 1]!;
+    for (let k = index.first[cell]!; k < last; k++) {
+      const s = index.shapes[k]!;
       const side = shapes[s]!.side(raDeg, decDeg);
       if (side === 0) edges++;
       if (s < partCount) {
@@ -53,14 +59,14 @@ export function compileRegionSide(
       }
     }
     if (!inPart || !onHole || edges < 2) return inPart;
-    return someSkyAround(shapes, partCount, candidates, raDeg, decDeg);
+    return someSkyAround(shapes, partCount, index, raDeg, decDeg);
   };
 }
 
 function someSkyAround(
   shapes: readonly CompiledShape[],
   partCount: number,
-  candidates: Candidates,
+  index: ShapeIndex,
   raDeg: number,
   decDeg: number,
 ): boolean {
@@ -71,7 +77,7 @@ function someSkyAround(
     const turn = (2 * Math.PI * (k + 0.137)) / PROBES;
     const offset = combine(PROBE_RAD * Math.cos(turn), u, PROBE_RAD * Math.sin(turn), v);
     const probe = unitToRaDec(unit(combine(1, centre, 1, offset)));
-    if (isInRegion(shapes, partCount, candidates, probe.raDeg, probe.decDeg)) return true;
+    if (isInRegion(shapes, partCount, index, probe.raDeg, probe.decDeg)) return true;
   }
   return false;
 }

@@ -2,6 +2,9 @@ import { type Arc, arcEnd, arcStart, tangent } from './arc.ts';
 import { NearPool } from './nearPool.ts';
 import { cross, dot, type Vec3 } from './vectors.ts';
 
+/** Circles that touch can seem to cross twice at one point: a ring of no size (0.02 arcseconds round). */
+const SHORTEST_RING_RAD = 1e-7;
+
 /** How far to turn clockwise about `up` from direction `from` to direction `to`, in (0, 2 pi]. */
 function clockwise(up: Vec3, from: Vec3, to: Vec3): number {
   const turn = Math.atan2(-dot(up, cross(from, to)), dot(from, to));
@@ -53,7 +56,8 @@ export function joinRings(arcs: readonly Arc[], tolerance: number): Arc[][] | nu
       used[j] = 1;
       ring.push(arcs[j]!);
     }
-    rings.push(ring);
+    const length = ring.reduce((sum, { circle, sweepRad }) => sum + sweepRad * circle.r, 0);
+    if (length > SHORTEST_RING_RAD) rings.push(ring);
   }
   return rings;
 }
