@@ -41,7 +41,7 @@ export function addCosmologyOptions(command: Command): Command {
     .option('--neff <n>', 'effective number of neutrino species', oneNumber('--neff'))
     .option('--mnu <eV,...>', 'neutrino masses, such as 0,0,0.06', numberList('--mnu'))
     .option('--flat', 'dark energy closes the sum to 1 (so it is unless --omega-de is given)')
-    .option('--neutrinos-inside', "the matter density given (or the set's) contains the massive neutrinos");
+    .option('--neutrinos-inside', 'the density of --omega-m contains the massive neutrinos');
 }
 
 /** The cosmology asked for, and a line that says which it is. */
@@ -53,6 +53,11 @@ export function cosmologyOf(options: CosmologyOptions): {
   const set = findPublishedSet(options.cosmology ?? 'planck2018');
   if (options.flat && options.omegaDe !== undefined)
     throw new Refusal('--flat and --omega-de contradict each other: give one of them.', 'use');
+  if (options.neutrinosInside && options.omegaM === undefined)
+    throw new Refusal(
+      '--neutrinos-inside came without --omega-m: give the matter density that contains them.',
+      'use',
+    );
   const base = set.parameters;
   let parameters: CosmologyParameters = {
     h0KmSMpc: options.h0 ?? base.h0KmSMpc,

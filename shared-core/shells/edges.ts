@@ -72,7 +72,10 @@ export function edgesOf(scheme: ShellScheme, sample: SortedSample, cosmology: Co
   return checkEdges(edges);
 }
 
-function coordinate(kind: RadialAxis['kind'] | 'volume', cosmology: Cosmology): Pick<RadialAxis, 'at' | 'redshiftAt'> {
+function coordinate(
+  kind: RadialAxis['kind'] | 'volume',
+  cosmology: Cosmology,
+): Pick<RadialAxis, 'at' | 'redshiftAt'> {
   if (kind !== 'volume') return radialAxis(kind, cosmology);
   return {
     at: (z) => cosmology.comovingVolumeMpc3(z),

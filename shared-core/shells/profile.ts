@@ -29,16 +29,13 @@ export function densityProfile(
   const count = new Float64Array(bins);
   const volumeMpc3 = new Float64Array(bins);
   let rank = rankBelow(sample, zEdges[0]!);
-  let innerMpc3 = cosmology.comovingVolumeMpc3(zEdges[0]!);
   for (let i = 0; i < bins; i++) {
     const next = rankBelow(sample, zEdges[i + 1]!, i === bins - 1);
-    const outerMpc3 = cosmology.comovingVolumeMpc3(zEdges[i + 1]!);
     const sums = sample.weighted?.sumWeight;
     count[i] = next - rank;
     weight[i] = sums === undefined ? next - rank : sums[next]! - sums[rank]!;
-    volumeMpc3[i] = sky * (outerMpc3 - innerMpc3);
+    volumeMpc3[i] = sky * cosmology.shellVolumeAllSkyMpc3(zEdges[i]!, zEdges[i + 1]!);
     rank = next;
-    innerMpc3 = outerMpc3;
   }
   const p0Mpc3 = p0Mpc3PerH3 / cosmology.h ** 3;
   const smoothPerMpc3 = smooth(weight, volumeMpc3, smoothingBins);

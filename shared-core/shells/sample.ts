@@ -1,4 +1,5 @@
 import { argsort } from '../numerics/sorting.ts';
+import { runningSums } from '../numerics/sums.ts';
 
 /**
  * Galaxies sorted by redshift with running sums, so that any shell's numbers cost a few binary searches.
@@ -35,15 +36,8 @@ export function sortSample(
   const sorted = gather(chosen, order);
   if (indices !== null) for (let i = 0; i < order.length; i++) order[i] = indices[order[i]!]!;
   if (weight !== null) orderTiesByWeight(sorted, order, weight);
-  const sumRedshift = runningSum(sorted.length, (i) => sorted[i]!);
-  const weighted =
-    weight === null
-      ? null
-      : {
-          sumWeight: runningSum(sorted.length, (i) => weight[order[i]!]!),
-          sumWeightSquared: runningSum(sorted.length, (i) => weight[order[i]!]! ** 2),
-          sumWeightRedshift: runningSum(sorted.length, (i) => weight[order[i]!]! * sorted[i]!),
-        };
+  const sumRedshift = runningSums(sorted);
+  const weighted = weight === null ? null : weightSums(gather(weight, order), sorted);
   return { count: sorted.length, redshift: sorted, order, sumRedshift, weighted };
 }
 
@@ -61,6 +55,14 @@ export function rankBelow(sample: SortedSample, z: number, orEqual = false): num
   return low;
 }
 
+function weightSums(weight: Float64Array, redshift: Float64Array): SortedSample['weighted'] {
+  return {
+    sumWeight: runningSums(weight),
+    sumWeightSquared: runningSums(weight.map((w) => w * w)),
+    sumWeightRedshift: runningSums(weight.map((w, i) => w * redshift[i]!)),
+  };
+}
+
 function gather(values: Float64Array, indices: Uint32Array): Float64Array {
   const out = new Float64Array(indices.length);
   for (let i = 0; i < indices.length; i++) out[i] = values[indices[i]!]!;
@@ -76,19 +78,4 @@ function orderTiesByWeight(sorted: Float64Array, order: Uint32Array, weight: Flo
     if (end - start > 1) order.subarray(start, end).sort((a, b) => weight[a]! - weight[b]! || a - b);
     start = end;
   }
-}
-
-// Neumaier's compensation: each element is the exact sum rounded once, so differences of far elements keep their digits.
-function runningSum(length: number, value: (i: number) => number): Float64Array {
-  const out = new Float64Array(length + 1);
-  let sum = 0;
-  let lost = 0;
-  for (let i = 0; i < length; i++) {
-    const term = value(i);
-    const next = sum + term;
-    lost += Math.abs(sum) >= Math.abs(term) ? sum - next + term : term - next + sum;
-    sum = next;
-    out[i + 1] = sum + lost;
-  }
-  return out;
 }

@@ -64,8 +64,7 @@ function oneShell(
   const to = rankBelow(sample, zMax, last);
   const count = to - from;
   const weightedCount = sumOfWeights(sample, from, to);
-  const innerMpc3 = cosmology.comovingVolumeMpc3(zMin);
-  const volumeMpc3 = sky * (cosmology.comovingVolumeMpc3(zMax) - innerMpc3);
+  const volumeMpc3 = sky * cosmology.shellVolumeAllSkyMpc3(zMin, zMax);
   const densityPerMpc3 = weightedCount / volumeMpc3;
 
   let effectiveVolumeMpc3 = 0;
@@ -73,19 +72,18 @@ function oneShell(
   let sumWz = 0;
   const slices = Math.min(MOST_SLICES, Math.max(1, Math.floor(count / FEWEST_IN_SLICE)));
   let start = from;
-  let startMpc3 = innerMpc3;
+  let startZ = zMin;
   for (let s = 1; s <= slices; s++) {
     const z = s === slices ? zMax : zMin + ((zMax - zMin) * s) / slices;
     const end = s === slices ? to : rankBelow(sample, z);
-    const endMpc3 = cosmology.comovingVolumeMpc3(z);
-    const sliceMpc3 = sky * (endMpc3 - startMpc3);
+    const sliceMpc3 = slices === 1 ? volumeMpc3 : sky * cosmology.shellVolumeAllSkyMpc3(startZ, z);
     const weight = sumOfWeights(sample, start, end);
     const power = (weight / sliceMpc3) * p0Mpc3;
     effectiveVolumeMpc3 += sliceMpc3 * (power / (1 + power)) ** 2;
     sumW += weight / (1 + power);
     sumWz += sumOfWeightedRedshifts(sample, start, end) / (1 + power);
     start = end;
-    startMpc3 = endMpc3;
+    startZ = z;
   }
   const meanPower = densityPerMpc3 * p0Mpc3;
   return {
