@@ -204,12 +204,12 @@ describe('loadCatalogue', () => {
       const { catalogue, setAside } = await load(bytes, { extras: ['name'] }, [40_000, 1, 77_777]);
       expect(setAside).toEqual([]);
       expect(catalogue.account.kept).toBe(30_000);
-      expect([...catalogue.raDeg]).toEqual(expected.map((row) => Number(row[1])));
-      expect([...catalogue.magnitude!]).toEqual(expected.map((row) => Number(row[4])));
+      expect(catalogue.raDeg.findIndex((value, i) => value !== Number(expected[i]![1]))).toBe(-1);
+      expect(catalogue.magnitude!.findIndex((value, i) => value !== Number(expected[i]![4]))).toBe(-1);
       const breaks = (row: string[]) => row[0]!.split('\n').length - 1;
       const lines = expected.map((_, i) => i + 2);
       for (let i = 1, extra = 0; i < lines.length; i++) lines[i]! += extra += breaks(expected[i - 1]!);
-      expect([...catalogue.line]).toEqual(lines);
+      expect(catalogue.line.findIndex((line, i) => line !== lines[i])).toBe(-1);
       expect(catalogue.extras.get('name')!.every(Number.isNaN)).toBe(true);
     }
   });
