@@ -81,7 +81,7 @@ async function answerCall(calls: Calls, warn: (sentence: string) => void, asked:
     const { call, windowId, from } = asked;
     if (!isCallName(call) || CALLS[call].from !== from)
       throw new Refusal(
-        `The window asked for something that no host does (${String(call).slice(0, 40)}).`,
+        `The window asked for something that no host does (${String(call).slice(0, 40)}): start the program again.`,
         'use',
       );
     const bytes = asked.bytes ?? new Uint8Array(0);
