@@ -1,0 +1,19 @@
+import { ColumnsSection } from './columns/ColumnsSection.tsx';
+import { CosmologySection } from './cosmology/CosmologySection.tsx';
+import { CutsSection } from './cuts/CutsSection.tsx';
+import { RegionSection } from './region/RegionSection.tsx';
+import { SourceSection } from './source/SourceSection.tsx';
+import './panels.css';
+
+/** What everything stands on: the catalogue, its columns and cuts, the region of sky, the cosmology. */
+export function DeskPanel() {
+  return (
+    <div class="desk-panel">
+      <SourceSection />
+      <ColumnsSection />
+      <CutsSection />
+      <RegionSection />
+      <CosmologySection />
+    </div>
+  );
+}

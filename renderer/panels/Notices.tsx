@@ -1,0 +1,78 @@
+import { useEffect } from 'preact/hooks';
+import { useApp } from '../state/app.ts';
+import type { Notice } from '../state/notices.ts';
+import { IconButton } from '../ui/IconButton.tsx';
+import './panels.css';
+
+/** Facts go by themselves after this long, unless somebody is at them; problems stay until they are read. */
+const FACT_STAYS_MS = 12_000;
+
+/** Sentences for the person, at the foot of the window; and unsaved work from before, offered back. */
+export function Notices() {
+  const { notices, files } = useApp();
+  return (
+    <section class="notices" aria-label="Notices">
+      {files.offered.value.map(({ workId, title, keptMs }) => (
+        <div key={workId} class="notice notice-offer" role="group" aria-label="Unsaved work">
+          <p>
+            Work on “{title}” from {when(keptMs)} was not saved.
+          </p>
+          <div class="notice-actions">
+            <button type="button" class="button accent-button" onClick={() => void files.takeOffered(workId)}>
+              Take it up
+            </button>
+            <button type="button" class="button" onClick={() => void files.dropOffered(workId)}>
+              Forget it
+            </button>
+          </div>
+        </div>
+      ))}
+      <div class="notice-live" role="log" aria-live="polite" aria-label="Messages">
+        {notices.list.value.map((notice) => (
+          <OneNotice key={notice.id} notice={notice} />
+        ))}
+      </div>
+    </section>
+  );
+}
+
+function OneNotice({ notice }: { readonly notice: Notice }) {
+  const { notices } = useApp();
+  const { id, tone, sentence, actions } = notice;
+  useEffect(() => {
+    if (tone !== 'fact' || actions.length > 0) return;
+    let timer = setTimeout(go, FACT_STAYS_MS);
+    function go(): void {
+      const here = document.getElementById(`notice-${id}`);
+      if (here?.matches(':hover, :focus-within')) timer = setTimeout(go, FACT_STAYS_MS);
+      else notices.dismiss(id);
+    }
+    return () => clearTimeout(timer);
+  }, [id]);
+  return (
+    <div id={`notice-${id}`} class={`notice notice-${tone}`}>
+      <p>{sentence}</p>
+      <div class="notice-actions">
+        {actions.map(({ label, run }) => (
+          <button
+            key={label}
+            type="button"
+            class="button"
+            onClick={() => {
+              notices.dismiss(id);
+              run();
+            }}
+          >
+            {label}
+          </button>
+        ))}
+        <IconButton icon="close" label="Dismiss" onClick={() => notices.dismiss(id)} />
+      </div>
+    </div>
+  );
+}
+
+/** Date and time as the person's own system writes them. */
+function when(ms: number): string {
+  return new Date(ms).toLocaleString(undefined, { dateStyle: 'medium', timeStyle: 'short' });
+}

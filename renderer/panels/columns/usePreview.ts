@@ -1,0 +1,37 @@
+import { useEffect, useState } from 'preact/hooks';
+import type { Preview } from '../../engine/protocol.ts';
+import { useApp } from '../../state/app.ts';
+
+export type PreviewState =
+  | { readonly kind: 'none' }
+  | { readonly kind: 'reading' }
+  | { readonly kind: 'read'; readonly preview: Preview }
+  | { readonly kind: 'refused'; readonly sentence: string };
+
+/** The head of the source's file, read when `wanted` and again when the source changes. */
+export function usePreview(wanted: boolean): PreviewState {
+  const { engine, files } = useApp();
+  const source = files.engineSource.value;
+  const [state, setState] = useState<PreviewState>({ kind: 'none' });
+  useEffect(() => {
+    if (!wanted || source === null) {
+      setState({ kind: 'none' });
+      return;
+    }
+    let stale = false;
+    setState({ kind: 'reading' });
+    engine.client.preview(source).then(
+      (preview) => {
+        if (!stale) setState({ kind: 'read', preview });
+      },
+      (error: unknown) => {
+        if (!stale)
+          setState({ kind: 'refused', sentence: error instanceof Error ? error.message : String(error) });
+      },
+    );
+    return () => {
+      stale = true;
+    };
+  }, [wanted, source]);
+  return state;
+}

@@ -1,0 +1,42 @@
+import type { Stage } from '../../engine/protocol.ts';
+import { useApp } from '../../state/app.ts';
+import { countText } from '../../ui/numberText.ts';
+
+const STAGE_TEXTS: Readonly<Record<Stage, string>> = {
+  load: 'Reading the catalogue',
+  select: 'Selecting galaxies',
+  background: 'Computing distances',
+  density: 'Measuring local density',
+};
+
+/** What the engine is at; at rest, the rows that it kept and set aside. */
+export function EngineLine() {
+  const { engine } = useApp();
+  const progress = engine.progress.value;
+  const account = engine.selected.value?.account ?? engine.loaded.value?.account ?? null;
+  if (progress !== null) {
+    const { stage, fraction } = progress;
+    const percent = fraction === null ? null : Math.floor(100 * fraction);
+    return (
+      <span class="engine-line">
+        {STAGE_TEXTS[stage]}
+        {percent === null ? '…' : ` ${percent} %`}
+        <progress
+          class="engine-bar"
+          aria-label={STAGE_TEXTS[stage]}
+          max={1}
+          {...(fraction === null ? {} : { value: fraction })}
+        />
+      </span>
+    );
+  }
+  return (
+    <span class="engine-line">
+      {account === null
+        ? engine.failure.value === null
+          ? 'no catalogue'
+          : 'catalogue not read'
+        : `${countText(account.kept)} kept · ${countText(account.setAside)} set aside`}
+    </span>
+  );
+}

@@ -1,0 +1,52 @@
+import { signal } from '@preact/signals';
+
+/** Whether the list of keys is open. */
+export const keysShown = signal(false);
+
+const onMac = /Mac|iPhone|iPad/.test(globalThis.navigator?.userAgent ?? '');
+
+/** How a shortcut with the command key is written here. */
+export function shortcut(key: string, shift = false): string {
+  return onMac ? `${shift ? '⇧' : ''}⌘${key}` : `Ctrl+${shift ? 'Shift+' : ''}${key}`;
+}
+
+export interface KeyHelp {
+  readonly keys: readonly string[];
+  readonly does: string;
+}
+
+/** Every key of the window, for the person who asks. */
+export const KEY_HELP: readonly { readonly title: string; readonly rows: readonly KeyHelp[] }[] = [
+  {
+    title: 'Study',
+    rows: [
+      { keys: [shortcut('Z')], does: 'undo' },
+      { keys: [shortcut('Z', true), shortcut('Y')], does: 'redo' },
+      { keys: [shortcut('S')], does: 'save' },
+      { keys: [shortcut('S', true)], does: 'save under another name' },
+      { keys: [shortcut('O')], does: 'open a study' },
+      { keys: [shortcut('N')], does: 'new study' },
+    ],
+  },
+  {
+    title: 'Shells',
+    rows: [
+      { keys: ['['], does: 'choose the shell before' },
+      { keys: [']'], does: 'choose the shell after' },
+      { keys: ['Esc'], does: 'choose none' },
+    ],
+  },
+  {
+    title: 'View',
+    rows: [
+      { keys: ['1'], does: 'side-on' },
+      { keys: ['2'], does: 'down the cone' },
+      { keys: ['3'], does: 'from behind' },
+      { keys: ['4'], does: 'the whole survey' },
+      { keys: ['F'], does: 'next field' },
+      { keys: ['R'], does: 'radius as distance, redshift, lookback time' },
+      { keys: ['H'], does: 'Mpc or Mpc/h' },
+      { keys: ['?'], does: 'these keys' },
+    ],
+  },
+];

@@ -1,0 +1,61 @@
+import { useComputed } from '@preact/signals';
+import { shownText } from '../../../shared-core/report/quantity.ts';
+import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
+import { useApp } from '../../state/app.ts';
+import { ShellMark } from '../ShellMark.tsx';
+import type { LedgerColumn } from './ledgerColumns.ts';
+
+/** One shell's numbers, or (index null) those of one shell from the first edge to the last. */
+export function LedgerRow(props: {
+  readonly index: number | null;
+  readonly shell: ShellStatistics;
+  readonly columns: readonly LedgerColumn[];
+  readonly reachable: boolean;
+}) {
+  const { index, shell, columns, reachable } = props;
+  const { derived, view } = useApp();
+  const units = derived.units.value;
+  const selected = useComputed(() => view.selectedShell.value === index).value;
+  const hovered = useComputed(() => index !== null && view.hoveredShell.value === index).value;
+
+  const onClick = (event: MouseEvent): void => {
+    const number = (event.target as HTMLElement).closest<HTMLElement>('[data-quantity]');
+    if (selected && number !== null) view.explained.value = number.dataset.quantity ?? null;
+    view.selectedShell.value = index;
+  };
+  return (
+    <tr
+      class={hovered ? 'ledger-row hovered' : 'ledger-row'}
+      data-shell={index ?? 'all'}
+      aria-selected={selected}
+      tabIndex={reachable ? 0 : -1}
+      onClick={onClick}
+      onFocus={() => void (view.hoveredShell.value = index)}
+      onBlur={() => void (view.hoveredShell.value = null)}
+      onPointerEnter={() => void (view.hoveredShell.value = index)}
+      onPointerLeave={() => void (view.hoveredShell.value = null)}
+    >
+      <th scope="row" class="ledger-number">
+        {index === null ? (
+          <span title="One shell from the first edge to the last: not the sum of the rows.">all</span>
+        ) : (
+          <ShellMark index={index} />
+        )}
+      </th>
+      {columns.map((column) => (
+        <td key={column.quantities[0]!.key}>
+          {column.quantities.map((q) => (
+            <span
+              key={q.key}
+              class="ledger-value"
+              data-quantity={q.key}
+              {...(selected ? { title: `${q.meaning} Press for the explanation.` } : {})}
+            >
+              {shownText(q, shell, units)}
+            </span>
+          ))}
+        </td>
+      ))}
+    </tr>
+  );
+}

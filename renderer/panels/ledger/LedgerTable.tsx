@@ -1,0 +1,113 @@
+import type { ReadonlySignal, Signal } from '@preact/signals';
+import { shownUnit } from '../../../shared-core/report/quantity.ts';
+import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
+import { useApp } from '../../state/app.ts';
+import { Icon } from '../../ui/Icon.tsx';
+import { unitText } from '../../ui/unitText.ts';
+import { LedgerRow } from './LedgerRow.tsx';
+import type { LedgerColumn } from './ledgerColumns.ts';
+import { type LedgerOrder, nextOrder, sortShells } from './sortShells.ts';
+
+/** The shells as rows. Arrow keys walk and choose; a heading sorts; a number of the chosen row opens its explanation. */
+export function LedgerTable(props: {
+  readonly columns: readonly LedgerColumn[];
+  readonly order: Signal<LedgerOrder | null>;
+  readonly onEnter: () => void;
+}) {
+  const { columns, order, onEnter } = props;
+  const { derived, view } = useApp();
+  const shells = derived.shells.value;
+  const total = derived.total.value;
+  const rows = sortShells(shells, order.value, SHELL_QUANTITIES);
+  // One row can be reached by Tab: the chosen one, or the first.
+  const chosen = view.selectedShell.value;
+  const reachable = chosen === null || chosen >= shells.length ? (rows[0] ?? null) : chosen;
+
+  const onKeyDown = (event: KeyboardEvent): void => {
+    const row = (event.target as HTMLElement).closest<HTMLElement>('tr[data-shell]');
+    if (row === null || event.ctrlKey || event.metaKey || event.altKey) return;
+    if (event.key === 'Enter' || event.key === ' ') {
+      event.preventDefault();
+      onEnter();
+      return;
+    }
+    const all = [...(row.closest('table')?.querySelectorAll<HTMLElement>('tr[data-shell]') ?? [])];
+    const at = all.indexOf(row);
+    const next = { ArrowDown: at + 1, ArrowUp: at - 1, Home: 0, End: all.length - 1 }[event.key];
+    const to = next === undefined ? undefined : all[next];
+    if (to === undefined) return;
+    event.preventDefault();
+    to.focus();
+    to.scrollIntoView({ block: 'nearest' });
+    view.selectedShell.value = shellOfRow(to);
+  };
+  return (
+    // biome-ignore lint/a11y/noNoninteractiveElementToInteractiveRole: rows are chosen with the arrow keys, which is a grid
+    <table class="ledger" role="grid" aria-label="Shell ledger" aria-readonly="true" onKeyDown={onKeyDown}>
+      <colgroup>
+        <col class="ledger-col-number" />
+        {columns.map((column) => (
+          <col key={column.quantities[0]!.key} style={{ width: `${column.characters}ch` }} />
+        ))}
+      </colgroup>
+      <thead>
+        <tr>
+          <th scope="col" class="ledger-corner">
+            <span class="unseen">Shell</span>
+          </th>
+          {columns.map((column) => (
+            <Heading key={column.quantities[0]!.key} column={column} order={order} />
+          ))}
+        </tr>
+      </thead>
+      <tbody>
+        {rows.map((i) => (
+          <LedgerRow key={i} index={i} shell={shells[i]!} columns={columns} reachable={i === reachable} />
+        ))}
+      </tbody>
+      {total === null ? null : (
+        <tfoot>
+          <LedgerRow index={null} shell={total} columns={columns} reachable={false} />
+        </tfoot>
+      )}
+    </table>
+  );
+}
+
+/** The shell of a row of the ledger; null for the row of all. */
+export function shellOfRow(row: HTMLElement): number | null {
+  const index = Number(row.dataset.shell);
+  return Number.isInteger(index) ? index : null;
+}
+
+function Heading({
+  column,
+  order,
+}: {
+  readonly column: LedgerColumn;
+  readonly order: ReadonlySignal<LedgerOrder | null> & Signal<LedgerOrder | null>;
+}) {
+  const units = useApp().derived.units.value;
+  const sorted = order.value;
+  const direction = column.quantities.some((q) => q.key === sorted?.key) ? sorted!.direction : 'none';
+  return (
+    <th scope="col" aria-sort={direction}>
+      {column.quantities.map((q) => {
+        const unit = unitText(shownUnit(q, units));
+        return (
+          <button
+            key={q.key}
+            type="button"
+            class="ledger-sort"
+            title={`${q.meaning} Press to sort.`}
+            onClick={() => void (order.value = nextOrder(sorted, q.key))}
+          >
+            <span>{q.title}</span>
+            {sorted?.key === q.key ? <Icon name={sorted.direction === 'ascending' ? 'up' : 'sink'} /> : null}
+            {unit === '' ? null : <span class="ledger-unit">{unit}</span>}
+          </button>
+        );
+      })}
+    </th>
+  );
+}

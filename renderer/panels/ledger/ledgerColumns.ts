@@ -1,0 +1,39 @@
+import type { Quantity } from '../../../shared-core/report/quantity.ts';
+import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
+import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
+
+/** A column of the ledger: one number a row, or two that are read together, one above the other. */
+export interface LedgerColumn {
+  readonly quantities: readonly Quantity<ShellStatistics>[];
+  /** Room in characters, for the widest number that is usual: columns keep their width while numbers change. */
+  readonly characters: number;
+}
+
+const byKey = new Map(SHELL_QUANTITIES.map((q) => [q.key, q]));
+
+function column(characters: number, ...keys: readonly string[]): LedgerColumn {
+  return { quantities: keys.map((key) => byKey.get(key)!), characters };
+}
+
+/** The columns beside the cone. */
+export const NARROW_LEDGER: readonly LedgerColumn[] = [
+  column(7, 'zMin', 'zMax'),
+  column(8, 'count', 'zEffective'),
+  column(9, 'densityPerMpc3', 'densityErrorPerMpc3'),
+  column(9.5, 'volumeMpc3', 'effectiveVolumeMpc3'),
+  column(7, 'lookbackMinGyr', 'lookbackMaxGyr'),
+];
+
+/** Every number of the core. */
+export const WHOLE_LEDGER: readonly LedgerColumn[] = [
+  column(7, 'zMin', 'zMax'),
+  column(9, 'count', 'weightedCount'),
+  column(8, 'zMean', 'zMedian'),
+  column(8, 'zEffective'),
+  column(8, 'comovingMinMpc', 'comovingMaxMpc'),
+  column(8, 'lookbackMinGyr', 'lookbackMaxGyr'),
+  column(8, 'ageMinGyr', 'ageMaxGyr'),
+  column(10, 'volumeMpc3', 'effectiveVolumeMpc3'),
+  column(9, 'densityPerMpc3', 'densityErrorPerMpc3'),
+  column(10, 'effectiveVolumeUniformMpc3', 'fundamentalWavenumberPerMpc'),
+];

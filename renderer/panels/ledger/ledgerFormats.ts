@@ -1,0 +1,80 @@
+import { shellsJson } from '../../../shared-core/report/shellsJson.ts';
+import { asCsv, asEcsv, asLatex, asObjects, asText, type Table } from '../../../shared-core/report/table.ts';
+import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
+import type { App } from '../../state/app.ts';
+import { copyText } from '../../ui/clipboard.ts';
+import { currentLedgerTable } from './currentLedger.ts';
+import { asTsv } from './ledgerTable.ts';
+
+/** The forms in which the ledger leaves the program. */
+export const LEDGER_FORMATS = [
+  { key: 'csv', label: 'CSV', hint: 'every digit', suffix: '.csv', mimeType: 'text/csv' },
+  { key: 'ecsv', label: 'ECSV', hint: 'with units and notes', suffix: '.ecsv', mimeType: 'text/plain' },
+  { key: 'latex', label: 'LaTeX', hint: 'tabular, rounded', suffix: '.tex', mimeType: 'text/x-tex' },
+  { key: 'json', label: 'JSON', hint: 'every digit', suffix: '.json', mimeType: 'application/json' },
+  { key: 'text', label: 'Text', hint: 'aligned, rounded', suffix: '.txt', mimeType: 'text/plain' },
+] as const;
+export type LedgerFormat = (typeof LEDGER_FORMATS)[number];
+
+/** Writes the ledger to a file that the person names. */
+export async function exportLedger(app: App, format: LedgerFormat): Promise<void> {
+  const text = ledgerText(app, format.key);
+  const name = `${app.studyState.study.value.name} shells${format.suffix}`;
+  await app.files.exportFile(name, format.mimeType, new TextEncoder().encode(text));
+}
+
+/** Puts the ledger on the clipboard: tabs and every digit for a spreadsheet, or aligned and rounded for reading. */
+export async function copyLedger(app: App, as: 'tabs' | 'aligned' | 'latex'): Promise<void> {
+  const table = currentLedgerTable(app);
+  const text = as === 'tabs' ? asTsv(table) : as === 'aligned' ? asText(table) : asLatex(table);
+  const done = await copyText(text);
+  app.notices.tell(
+    done
+      ? `The ledger of ${table.rows.length} ${table.rows.length === 1 ? 'shell' : 'shells'} is on the clipboard.`
+      : 'The browser did not let the ledger onto the clipboard: export it to a file instead.',
+    { tone: done ? 'fact' : 'problem' },
+  );
+}
+
+function ledgerText(app: App, key: LedgerFormat['key']): string {
+  const table = currentLedgerTable(app);
+  switch (key) {
+    case 'csv':
+      return asCsv(table);
+    case 'ecsv':
+      return asEcsv(table);
+    case 'latex':
+      return asLatex(table);
+    case 'text':
+      return asText(table);
+    case 'json':
+      return `${JSON.stringify(asJson(app, table), null, 2)}\n`;
+  }
+}
+
+/** As the command's --json; a plan without a catalogue has no rows to account for. */
+function asJson({ engine, derived, studyState }: App, table: Table<ShellStatistics>): unknown {
+  const [selected, loaded, conditions] = [
+    engine.selected.value,
+    engine.loaded.value,
+    derived.conditions.value,
+  ];
+  const { region, cosmologySet } = studyState.study.value;
+  if (selected === null || loaded === null || selected.footprint === null || conditions === null) {
+    return {
+      catalogue: null,
+      cosmology: { name: cosmologySet, ...derived.cosmology.value.parameters },
+      region,
+      lengthUnit: table.units.perH ? 'Mpc/h' : 'Mpc',
+      shells: asObjects(table),
+    };
+  }
+  return shellsJson({
+    table,
+    account: selected.account,
+    mapping: loaded.mapping,
+    footprint: selected.footprint,
+    conditions,
+    cosmologyName: cosmologySet,
+  });
+}

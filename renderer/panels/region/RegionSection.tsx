@@ -1,0 +1,170 @@
+import { useState } from 'preact/hooks';
+import { Refusal } from '../../../shared-core/base/refusal.ts';
+import { compileRegion } from '../../../shared-core/sky/compileRegion.ts';
+import type { Region, SkyShape } from '../../../shared-core/sky/region.ts';
+import { describeRegion } from '../../../shared-core/sky/regionText.ts';
+import { change } from '../../../shared-core/study/edits.ts';
+import type { Study } from '../../../shared-core/study/schema.ts';
+import { SkyMap } from '../../skymap/SkyMap.tsx';
+import { useApp } from '../../state/app.ts';
+import { IconButton } from '../../ui/IconButton.tsx';
+import { Menu } from '../../ui/Menu.tsx';
+import { Section } from '../../ui/Section.tsx';
+import { AreaLine, areaGist } from './AreaLine.tsx';
+import { type ShapePlace, withoutShape, withShapes } from './regionParts.ts';
+import { ShapeEditor } from './ShapeEditor.tsx';
+import { draftOfShape, newDraft, type ShapeDraft, type ShapeKind } from './shapeDraft.ts';
+
+interface Editing {
+  readonly draft: ShapeDraft;
+  readonly list: 'parts' | 'holes';
+  readonly inPlaceOf: ShapePlace | null;
+  /** The region that the place is in: an undo in between makes the place stale. */
+  readonly of: Region | null;
+}
+
+/** The observed sky: its map, its area, and its shapes by numbers or text. */
+export function RegionSection() {
+  const app = useApp();
+  const { studyState } = app;
+  const { region } = studyState.study.value;
+  const [kept, setEditing] = useState<Editing | null>(null);
+  const editing = kept !== null && (kept.inPlaceOf === null || kept.of === region) ? kept : null;
+
+  const put = (next: Region | null, label: string): string | null => {
+    try {
+      if (next !== null) compileRegion(next);
+    } catch (error) {
+      if (error instanceof Refusal) return error.message;
+      throw error;
+    }
+    studyState.perform(change(label, { region: next as Study['region'] }));
+    return null;
+  };
+  const start = (kind: ShapeKind): void => {
+    if (kind === 'wholeSky' && region === null)
+      put({ parts: [{ kind }], holes: [] }, 'Observe the whole sky');
+    else setEditing({ draft: newDraft(kind), list: 'parts', inPlaceOf: null, of: region });
+  };
+  const apply = (shapes: readonly SkyShape[]): string | null => {
+    if (editing === null) return null;
+    const { list, inPlaceOf } = editing;
+    const what = list === 'parts' ? 'observed shape' : 'hole';
+    const why = put(
+      withShapes(region, list, shapes, inPlaceOf),
+      inPlaceOf === null
+        ? `Add an ${what}`.replace('an hole', 'a hole')
+        : `Change an ${what}`.replace('an hole', 'a hole'),
+    );
+    if (why === null) setEditing(null);
+    return why;
+  };
+  const partsLeft = (region?.parts.length ?? 0) - (editing?.inPlaceOf?.list === 'parts' ? 1 : 0);
+  return (
+    <Section id="region" title="Region" gist={areaGist(app)} openAtFirst>
+      <SkyMap />
+      <AreaLine />
+      {region === null ? null : (
+        <>
+          <ShapeList
+            region={region}
+            list="parts"
+            put={put}
+            onEdit={(place, shape) =>
+              setEditing({ draft: draftOfShape(shape), list: 'parts', inPlaceOf: place, of: region })
+            }
+          />
+          <ShapeList
+            region={region}
+            list="holes"
+            put={put}
+            onEdit={(place, shape) =>
+              setEditing({ draft: draftOfShape(shape), list: 'holes', inPlaceOf: place, of: region })
+            }
+          />
+        </>
+      )}
+      {editing === null ? (
+        <div class="actions">
+          <Menu
+            label="Add a shape"
+            entries={[
+              { kind: 'item', label: 'Box…', hint: 'RA and Dec from, to', run: () => start('box') },
+              { kind: 'item', label: 'Cap…', hint: 'centre and radius', run: () => start('cap') },
+              {
+                kind: 'item',
+                label: 'Polygon…',
+                hint: 'vertices, pasted or from a file',
+                run: () => start('polygon'),
+              },
+              { kind: 'item', label: 'Whole sky', run: () => start('wholeSky') },
+            ]}
+          />
+          {region === null ? null : (
+            <button
+              type="button"
+              class="button"
+              title="Give the region up: the area is estimated from the catalogue"
+              onClick={() => put(null, 'Give the region up')}
+            >
+              None
+            </button>
+          )}
+        </div>
+      ) : (
+        <ShapeEditor
+          draft={editing.draft}
+          list={editing.list}
+          holePossible={partsLeft > 0}
+          isNew={editing.inPlaceOf === null}
+          onChange={(draft, list) => setEditing({ ...editing, draft, list })}
+          onApply={apply}
+          onCancel={() => setEditing(null)}
+        />
+      )}
+    </Section>
+  );
+}
+
+function ShapeList(props: {
+  readonly region: Region;
+  readonly list: 'parts' | 'holes';
+  readonly put: (next: Region | null, label: string) => string | null;
+  readonly onEdit: (place: ShapePlace, shape: SkyShape) => void;
+}) {
+  const { region, list, put, onEdit } = props;
+  const { notices } = useApp();
+  const shapes = region[list];
+  if (shapes.length === 0) return null;
+  const remove = (place: ShapePlace): void => {
+    const next = withoutShape(region, place);
+    const why = put(
+      next,
+      next === null ? 'Give the region up' : list === 'parts' ? 'Remove an observed shape' : 'Remove a hole',
+    );
+    if (why !== null) notices.tell(why);
+  };
+  return (
+    <ul class="shapes" aria-label={list === 'parts' ? 'Observed shapes' : 'Holes'}>
+      {shapes.map((shape, index) => {
+        const words = describeRegion({ parts: [shape], holes: [] });
+        return (
+          <li key={index}>
+            <span class="shape-words">
+              {list === 'holes' ? <span class="hole-mark">less </span> : null}
+              {words}
+            </span>
+            {shape.kind === 'wholeSky' ? null : (
+              <IconButton
+                icon="edit"
+                label={`Change: ${words}`}
+                onClick={() => onEdit({ list, index }, shape)}
+              />
+            )}
+            <IconButton icon="close" label={`Remove: ${words}`} onClick={() => remove({ list, index })} />
+          </li>
+        );
+      })}
+    </ul>
+  );
+}

@@ -1,0 +1,172 @@
+import { useId, useLayoutEffect, useRef, useState } from 'preact/hooks';
+import type { SkyShape } from '../../../shared-core/sky/region.ts';
+import { useApp } from '../../state/app.ts';
+import { DraftField } from '../../ui/DraftField.tsx';
+import { Segments } from '../../ui/Segments.tsx';
+import { DRAFT_FIELDS, type DraftTrouble, finishShape, type ShapeDraft } from './shapeDraft.ts';
+
+const LONGEST_FILE_BYTES = 20_000_000;
+const TITLES = { wholeSky: 'Whole sky', box: 'Box', cap: 'Cap', polygon: 'Polygon' } as const;
+
+/** A form for one shape of the region, by numbers or by text. */
+export function ShapeEditor(props: {
+  readonly draft: ShapeDraft;
+  readonly list: 'parts' | 'holes';
+  /** Whether a hole would have anything to be a hole of. */
+  readonly holePossible: boolean;
+  readonly isNew: boolean;
+  readonly onChange: (draft: ShapeDraft, list: 'parts' | 'holes') => void;
+  /** @returns why the region cannot take the shapes, or null when it did */
+  readonly onApply: (shapes: readonly SkyShape[]) => string | null;
+  readonly onCancel: () => void;
+}) {
+  const { draft, list, holePossible, isNew, onChange, onApply, onCancel } = props;
+  const [trouble, setTrouble] = useState<DraftTrouble | null>(null);
+  const form = useRef<HTMLFormElement>(null);
+  useLayoutEffect(
+    () => form.current?.querySelector<HTMLElement>('input:not([type=radio]), textarea, button')?.focus(),
+    [],
+  );
+  const put = (next: ShapeDraft): void => {
+    setTrouble(null);
+    onChange(next, list);
+  };
+  const apply = (): void => {
+    const done = finishShape(draft);
+    if ('sentence' in done) {
+      setTrouble(done);
+      return;
+    }
+    const why = onApply(done.shapes);
+    if (why !== null) setTrouble({ sentence: why, field: null });
+  };
+  return (
+    <form
+      ref={form}
+      class="shape-editor"
+      aria-label={`${TITLES[draft.kind]} of the region`}
+      onSubmit={(e) => {
+        e.preventDefault();
+        apply();
+      }}
+      onKeyDown={(e) => {
+        if (e.key !== 'Escape') return;
+        e.stopPropagation();
+        e.preventDefault();
+        onCancel();
+      }}
+    >
+      <div class="shape-head">
+        <h3>{TITLES[draft.kind]}</h3>
+        <Segments
+          label="What the shape is"
+          value={list}
+          disabled={!holePossible}
+          choices={[
+            { value: 'parts', label: 'observed' },
+            { value: 'holes', label: 'hole', title: 'Sky that is left out of the observed part' },
+          ]}
+          onChoose={(to) => onChange(draft, to)}
+        />
+      </div>
+      <div class="shape-fields">
+        {DRAFT_FIELDS[draft.kind].map(({ name, label }) => (
+          <DraftField
+            key={name}
+            label={label}
+            unit="deg"
+            value={draft.fields[name]}
+            trouble={trouble?.field === name ? trouble.sentence : null}
+            onInput={(text) => put({ ...draft, fields: { ...draft.fields, [name]: text } })}
+          />
+        ))}
+      </div>
+      {draft.kind === 'polygon' ? (
+        <PolygonFields
+          draft={draft}
+          trouble={trouble?.field === 'vertices' ? trouble.sentence : null}
+          onChange={put}
+        />
+      ) : null}
+      {trouble !== null && trouble.field === null ? (
+        <p class="field-trouble" role="alert">
+          {trouble.sentence}
+        </p>
+      ) : null}
+      <div class="actions">
+        <button type="submit" class="button accent-button">
+          {isNew ? 'Add' : 'Change'}
+        </button>
+        <button type="button" class="button" onClick={onCancel}>
+          Cancel
+        </button>
+      </div>
+    </form>
+  );
+}
+
+function PolygonFields(props: {
+  readonly draft: ShapeDraft;
+  readonly trouble: string | null;
+  readonly onChange: (draft: ShapeDraft) => void;
+}) {
+  const { draft, trouble, onChange } = props;
+  const { bridge, notices } = useApp();
+  const id = useId();
+  const fromFile = async (): Promise<void> => {
+    try {
+      const [file] = await bridge.chooseFiles('region');
+      if (file === undefined) return;
+      if (file.sizeBytes > LONGEST_FILE_BYTES) {
+        notices.tell(
+          `"${file.name}" has ${file.sizeBytes} bytes, a polygon file of at most ${LONGEST_FILE_BYTES} was expected: choose a text file with RA and Dec of the vertices.`,
+        );
+        return;
+      }
+      const vertices = await (await fetch(file.url)).text();
+      bridge.releaseFile(file);
+      onChange({ ...draft, vertices });
+    } catch (error) {
+      notices.tell(error instanceof Error ? error.message : String(error));
+    }
+  };
+  return (
+    <>
+      <div class="field polygon-text">
+        <label for={id}>vertices: RA and Dec in deg, one a line</label>
+        <textarea
+          id={id}
+          rows={6}
+          spellcheck={false}
+          value={draft.vertices}
+          aria-invalid={trouble !== null}
+          aria-describedby={`${id}-note`}
+          onInput={(e) => onChange({ ...draft, vertices: e.currentTarget.value })}
+        />
+        {trouble === null ? (
+          <p class="field-hint" id={`${id}-note`}>
+            Edges are great circles. A blank line begins another polygon.
+          </p>
+        ) : (
+          <p class="field-trouble" id={`${id}-note`} role="alert">
+            {trouble}
+          </p>
+        )}
+      </div>
+      <div class="shape-head">
+        <button type="button" class="button" onClick={() => void fromFile()}>
+          From a file…
+        </button>
+        <Segments
+          label="Which side of the polygon"
+          value={draft.side}
+          choices={[
+            { value: 'smaller', label: 'smaller side' },
+            { value: 'larger', label: 'larger' },
+          ]}
+          onChoose={(side) => onChange({ ...draft, side })}
+        />
+      </div>
+    </>
+  );
+}

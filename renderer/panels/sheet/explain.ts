@@ -1,0 +1,138 @@
+import {
+  formatNumber,
+  type Quantity,
+  type ShownUnits,
+  shownText,
+  shownUnit,
+} from '../../../shared-core/report/quantity.ts';
+import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
+import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
+import type { ShellConditions } from '../../../shared-core/shells/statistics.ts';
+import type { FootprintPicture } from '../../engine/protocol.ts';
+
+/** One thing that went into a number, as it was for this shell. */
+export interface ExplainedInput {
+  readonly name: string;
+  readonly text: string;
+  readonly unit: string;
+}
+
+/** What stands under a number when it is opened, beside the quantity's own words. */
+export interface Explanation {
+  readonly inputs: readonly ExplainedInput[];
+  readonly uncertainty: string;
+}
+
+/** What the explanation of a shell's number needs to know. */
+export interface ExplainedShell {
+  readonly shell: ShellStatistics;
+  readonly conditions: ShellConditions;
+  readonly estimate: FootprintPicture['estimate'];
+  readonly units: ShownUnits;
+  readonly cosmologyName: string;
+}
+
+export const shellQuantity = (key: string): Quantity<ShellStatistics> | undefined =>
+  SHELL_QUANTITIES.find((q) => q.key === key);
+
+/** The quantities of the shell that each quantity is made of; further inputs are named by a word. */
+const INPUTS: Readonly<Record<string, readonly string[]>> = {
+  zMin: [],
+  zMax: [],
+  count: ['zMin', 'zMax'],
+  weightedCount: ['zMin', 'zMax', 'count'],
+  zMean: ['count'],
+  zMedian: ['count'],
+  zEffective: ['weightedCount', 'densityPerMpc3', 'p0'],
+  comovingMinMpc: ['zMin', 'cosmology'],
+  comovingMaxMpc: ['zMax', 'cosmology'],
+  lookbackMinGyr: ['zMin', 'cosmology'],
+  lookbackMaxGyr: ['zMax', 'cosmology'],
+  ageMinGyr: ['zMin', 'cosmology'],
+  ageMaxGyr: ['zMax', 'cosmology'],
+  volumeMpc3: ['zMin', 'zMax', 'area', 'cosmology'],
+  densityPerMpc3: ['weightedCount', 'volumeMpc3'],
+  densityErrorPerMpc3: ['count', 'weightedCount', 'volumeMpc3'],
+  effectiveVolumeMpc3: ['densityPerMpc3', 'volumeMpc3', 'p0'],
+  effectiveVolumeUniformMpc3: ['densityPerMpc3', 'volumeMpc3', 'p0'],
+  fundamentalWavenumberPerMpc: ['volumeMpc3'],
+};
+
+const BY_QUADRATURE =
+  'Computed to a relative error below 1e-12; what is uncertain is the cosmology, whose errors are not carried through.';
+const CHOSEN = 'None: it is chosen.';
+const COUNTED =
+  'None as a count of rows. As a sample of the universe it scatters: by Poisson alone, by the square root of N, and by clustering on top.';
+
+/** What went into a number of a shell, and how sure it is. */
+export function explain(key: string, of: ExplainedShell): Explanation {
+  return {
+    inputs: (INPUTS[key] ?? []).map((name) => input(name, of)),
+    uncertainty: uncertainty(key, of),
+  };
+}
+
+function input(
+  name: string,
+  { shell, conditions, estimate, units, cosmologyName }: ExplainedShell,
+): ExplainedInput {
+  switch (name) {
+    case 'cosmology':
+      return { name: 'cosmology', text: cosmologyName, unit: '' };
+    case 'p0':
+      return { name: 'P0', text: String(conditions.p0Mpc3PerH3), unit: '(Mpc/h)^3' };
+    case 'area': {
+      const area = formatNumber(conditions.areaDeg2, { significant: 7 });
+      const error = estimate === null ? '' : ` ± ${formatNumber(estimate.areaErrorDeg2, { significant: 2 })}`;
+      return {
+        name: estimate === null ? 'area, exact' : 'area, an estimate',
+        text: area + error,
+        unit: 'deg^2',
+      };
+    }
+    default: {
+      const quantity = shellQuantity(name)!;
+      return {
+        name: quantity.title,
+        text: shownText(quantity, shell, units),
+        unit: shownUnit(quantity, units),
+      };
+    }
+  }
+}
+
+function uncertainty(key: string, { shell, conditions, estimate, units }: ExplainedShell): string {
+  const share = estimate === null ? null : estimate.areaErrorDeg2 / conditions.areaDeg2;
+  const percent = (value: number) => `${formatNumber(100 * value, { significant: 2 })} %`;
+  const area = share === null ? 'The area is exact.' : `The estimated area adds ${percent(share)}.`;
+  switch (key) {
+    case 'zMin':
+    case 'zMax':
+      return CHOSEN;
+    case 'count':
+    case 'weightedCount':
+      return COUNTED;
+    case 'zMean':
+    case 'zMedian':
+      return 'No error is given: the redshift errors of the catalogue are not read.';
+    case 'zEffective':
+      return 'No error is given. It depends on P0, and a little on how n(z) is cut into slices.';
+    case 'volumeMpc3':
+      return share === null ? `${BY_QUADRATURE} ${area}` : `${area} ${BY_QUADRATURE}`;
+    case 'densityPerMpc3': {
+      if (shell.count === 0) return 'No galaxy, no error: the density is 0 for want of data.';
+      const error = shellQuantity('densityErrorPerMpc3')!;
+      const poisson = `Poisson ± ${shownText(error, shell, units)} ${shownUnit(error, units)} (${percent(shell.densityErrorPerMpc3 / shell.densityPerMpc3)}), without clustering.`;
+      return `${poisson} ${area}`;
+    }
+    case 'densityErrorPerMpc3':
+      return 'It is itself an error: counting noise alone.';
+    case 'effectiveVolumeMpc3':
+    case 'effectiveVolumeUniformMpc3':
+      return `No error is given: it follows n and V. ${area}`;
+    case 'fundamentalWavenumberPerMpc':
+      return share === null ? area : `A third of the area's error: ${percent(share / 3)}.`;
+    default:
+      return BY_QUADRATURE;
+  }
+}

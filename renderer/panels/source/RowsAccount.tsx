@@ -1,0 +1,65 @@
+import { useState } from 'preact/hooks';
+import { useApp } from '../../state/app.ts';
+import { countText } from '../../ui/numberText.ts';
+import { setAsideLines } from './sourceFacts.ts';
+
+/** What became of the rows: read = kept + set aside, with the reasons, and the list of those set aside. */
+export function RowsAccount() {
+  const { engine, files, notices, studyState } = useApp();
+  const [busy, setBusy] = useState(false);
+  const account = engine.selected.value?.account ?? engine.loaded.value?.account ?? null;
+  if (account === null) return null;
+  const download = async (): Promise<void> => {
+    setBusy(true);
+    try {
+      const list = await engine.client.setAsideList();
+      await files.exportFile(`${studyState.study.value.name} set aside.csv`, 'text/csv', pieces(list));
+    } catch (error) {
+      notices.tell(error instanceof Error ? error.message : String(error));
+    } finally {
+      setBusy(false);
+    }
+  };
+  return (
+    <div class="account">
+      <dl>
+        <div>
+          <dt>rows read</dt>
+          <dd>{countText(account.rowsRead)}</dd>
+        </div>
+        <div>
+          <dt>kept</dt>
+          <dd>{countText(account.kept)}</dd>
+        </div>
+        <div>
+          <dt>set aside</dt>
+          <dd>{countText(account.setAside)}</dd>
+        </div>
+        {setAsideLines(account).map(({ count, text }) => (
+          <div key={text} class="account-reason">
+            <dt>{text}</dt>
+            <dd>{countText(count)}</dd>
+          </div>
+        ))}
+      </dl>
+      {account.repeatedPositions === 0 ? null : (
+        <p class="quiet">
+          {countText(account.repeatedPositions)} kept{' '}
+          {account.repeatedPositions === 1 ? 'row repeats' : 'rows repeat'} an earlier position.
+        </p>
+      )}
+      {account.setAside === 0 ? null : (
+        <button type="button" class="link-button" disabled={busy} onClick={() => void download()}>
+          {busy ? 'Reading the file again…' : 'Save the list of rows set aside…'}
+        </button>
+      )}
+    </div>
+  );
+}
+
+/** The blob in pieces, so that a long list is never whole in memory twice. */
+async function* pieces(blob: Blob): AsyncIterable<Uint8Array> {
+  const step = 1 << 20;
+  for (let from = 0; from < blob.size; from += step)
+    yield new Uint8Array(await blob.slice(from, from + step).arrayBuffer());
+}

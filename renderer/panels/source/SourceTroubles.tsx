@@ -1,0 +1,69 @@
+import { change } from '../../../shared-core/study/edits.ts';
+import type { StudySource } from '../../../shared-core/study/schema.ts';
+import { useApp } from '../../state/app.ts';
+import { sizeText } from '../../ui/numberText.ts';
+
+/** The study names a file that is not at hand. */
+export function SourceMissing({ source }: { readonly source: Extract<StudySource, { kind: 'file' }> }) {
+  const { files } = useApp();
+  return (
+    <div class="trouble" role="status">
+      <p>
+        The catalogue “{source.name}” ({sizeText(source.sizeBytes)}) that this study was made with is not at
+        hand
+        {source.path === null ? '' : ` at ${source.path}`}. Everything else in the study is as it was.
+      </p>
+      <button type="button" class="button" onClick={() => void files.pointAtSource()}>
+        Point at it…
+      </button>
+    </div>
+  );
+}
+
+/** The file is there, but its contents are others. */
+export function SourceChanged() {
+  const { studyState, engine, files } = useApp();
+  const { source } = studyState.study.value;
+  const loaded = engine.loaded.value;
+  if (source?.kind !== 'file' || loaded === null) return null;
+  return (
+    <div class="trouble" role="status">
+      <p>
+        “{source.name}” is not as it was when the study was made: {sizeText(source.sizeBytes)} then,{' '}
+        {sizeText(loaded.sizeBytes)} now, other contents. The numbers shown are those of the file as it is
+        now.
+      </p>
+      <div class="actions">
+        <button
+          type="button"
+          class="button"
+          onClick={() =>
+            studyState.perform(
+              change('Accept the changed catalogue', { source: { ...source, sha256: loaded.sha256 } }),
+            )
+          }
+        >
+          Go on with it
+        </button>
+        <button type="button" class="button" onClick={() => void files.pointAtSource()}>
+          Choose another…
+        </button>
+      </div>
+    </div>
+  );
+}
+
+/** What the engine could not do, in its own sentence. */
+export function ReadFailure() {
+  const { engine, files } = useApp();
+  const failure = engine.failure.value;
+  if (failure === null || files.missingSource.value !== null) return null;
+  return (
+    <div class="trouble" role="alert">
+      <p>{failure.sentence}</p>
+      <button type="button" class="button" onClick={() => engine.readAgain()}>
+        Read again
+      </button>
+    </div>
+  );
+}
