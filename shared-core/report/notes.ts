@@ -36,7 +36,10 @@ export function describeAccount(account: RowAccount): string {
 }
 
 /** One line on the sky area, that never lets an estimate pass for more. */
-export function describeFootprint(footprint: Footprint, words: string | null): string {
+export function describeFootprint(
+  footprint: Pick<Footprint, 'areaDeg2' | 'estimate'>,
+  words: string | null,
+): string {
   const area = trim(footprint.areaDeg2, 7);
   if (footprint.estimate === null) return `Region: ${words ?? 'as given'}; area ${area} deg^2.`;
   const { cells, cellAreaDeg2, nside, areaErrorDeg2 } = footprint.estimate;

@@ -8,7 +8,7 @@ export interface ShellsResult {
   readonly table: Table<ShellStatistics>;
   readonly account: RowAccount;
   readonly mapping: ColumnMapping;
-  readonly footprint: Footprint;
+  readonly footprint: Pick<Footprint, 'origin' | 'areaDeg2' | 'estimate'>;
   readonly conditions: ShellConditions;
   /** Key of the published set, or null for own parameters. */
   readonly cosmologyName: string | null;
