@@ -69,7 +69,7 @@ check('dead code', () => node('node_modules/knip/bin/knip.js', ['--config', 'tes
 
 console.log('\n== build');
 try {
-  await build(['command', 'window', 'desktop']);
+  await build(['command', 'window', 'local', 'desktop']);
   passed++;
 } catch (error) {
   failed++;

@@ -11,10 +11,11 @@ import { root } from './install.mjs';
  * @property {string} config  the bundler's config file
  */
 
-/** @type {Record<'command' | 'window' | 'desktop', Part>} */
+/** @type {Record<'command' | 'window' | 'local' | 'desktop', Part>} */
 const parts = {
   command: { words: 'the command', sources: ['main', 'shared-core'], config: 'main/launch/command.vite.ts' },
   window: { words: 'the window', sources: ['renderer', 'shared-core'], config: 'renderer/vite.config.ts' },
+  local: { words: 'the local host', sources: ['main', 'shared-core'], config: 'main/local/local.vite.ts' },
   desktop: {
     words: 'the desktop host',
     sources: ['main', 'shared-core'],
