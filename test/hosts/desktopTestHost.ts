@@ -19,6 +19,8 @@ export interface DesktopTestHost extends TestHost {
   /** Sends a message as any frame could. */
   invoke(channel: string, event: CallEvent, message: unknown): Promise<unknown>;
   contentsIdOf(bridge: Bridge): number;
+  /** Sends an event to a window, as the main process does. */
+  send(bridge: Bridge, event: unknown): void;
   readonly destroyed: number[];
 }
 
@@ -62,6 +64,7 @@ export async function openDesktopHost(options: TestHostOptions): Promise<Desktop
   const invoke = async (channel: string, event: CallEvent, message: unknown) =>
     structuredClone(await channels.get(channel)!(event, structuredClone(message)));
   const contents = new Map<Bridge, number>();
+  const listening = new Map<Bridge, ((event: unknown) => void)[]>();
   const destroyed: number[] = [];
   const files = windowFiles(windowFolder);
   let nextContents = 1;
@@ -75,6 +78,9 @@ export async function openDesktopHost(options: TestHostOptions): Promise<Desktop
     invoke,
     destroyed,
     contentsIdOf: (bridge) => contents.get(bridge)!,
+    send: (bridge, event) => {
+      for (const listener of listening.get(bridge) ?? []) listener(structuredClone(event));
+    },
     async openWindow() {
       const id = nextContents++;
       const listeners: ((event: unknown) => void)[] = [];
@@ -105,6 +111,7 @@ export async function openDesktopHost(options: TestHostOptions): Promise<Desktop
         showState: () => undefined,
       });
       contents.set(bridge, id);
+      listening.set(bridge, listeners);
       return bridge;
     },
     closeWindow: (bridge) => windows.remove(contents.get(bridge)!),
