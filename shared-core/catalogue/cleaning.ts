@@ -5,8 +5,75 @@ import { isMissing, parseNumber } from './numbers.ts';
 /** Largest redshift taken: tables of distance end here, at about the time the universe became transparent. */
 export const LARGEST_REDSHIFT = 1100;
 
+/** Places of a row's values: the required ones first, in this order; the weight only where there is one. */
+export const RA = 0;
+export const DEC = 1;
+export const RADIAL = 2;
+export const WEIGHT = 3;
+
+/** The redshift that a radial value stands for: itself, or cz/c for a velocity in km/s (the optical convention). */
+export function redshiftOf(radial: number, kind: RadialKind): number {
+  return kind === 'czKmS' ? radial / SPEED_OF_LIGHT_KM_S : radial;
+}
+
+/** Why a row is not usable, and the place of the value to blame for it (-1: none in particular). */
+export interface Fault {
+  readonly reason: SetAsideReason;
+  readonly place: number;
+}
+
+const WRONG_FIELD_COUNT: Fault = { reason: 'wrongFieldCount', place: -1 };
+const RA_OUT_OF_RANGE: Fault = { reason: 'raOutOfRange', place: RA };
+const DEC_OUT_OF_RANGE: Fault = { reason: 'decOutOfRange', place: DEC };
+const REDSHIFT_NOT_ABOVE_ZERO: Fault = { reason: 'redshiftNotAboveZero', place: RADIAL };
+const REDSHIFT_TOO_LARGE: Fault = { reason: 'redshiftTooLarge', place: RADIAL };
+const WEIGHT_NEGATIVE: Fault = { reason: 'weightNegative', place: WEIGHT };
+
+/**
+ * Judges the numbers of a row by the ranges: RA in [0, 360] and Dec in [-90, 90] degrees, redshift in (0, 1100],
+ * weight not below 0. The first `required` values are numbers. Null: nothing is wrong. Region and cuts come after
+ * this (selection.ts).
+ */
+export function judgeNumbers(values: ArrayLike<number>, required: number, kind: RadialKind): Fault | null {
+  const ra = values[RA]!;
+  const dec = values[DEC]!;
+  if (!(ra >= 0 && ra <= 360)) return RA_OUT_OF_RANGE;
+  if (!(dec >= -90 && dec <= 90)) return DEC_OUT_OF_RANGE;
+  const redshift = redshiftOf(values[RADIAL]!, kind);
+  if (!(redshift > 0)) return REDSHIFT_NOT_ABOVE_ZERO;
+  if (redshift > LARGEST_REDSHIFT) return REDSHIFT_TOO_LARGE;
+  if (required > WEIGHT && values[WEIGHT]! < 0) return WEIGHT_NEGATIVE;
+  return null;
+}
+
+/**
+ * Reads the wanted cells of a row of text into `values` (NaN where a cell holds no number) and judges what text can
+ * be at fault for: the number of fields, and required values that are missing (looked for first, in all of them) or
+ * no numbers. Null: the required values are numbers.
+ */
+export function readText(
+  row: readonly string[],
+  width: number,
+  wanted: readonly number[],
+  required: number,
+  values: Float64Array,
+): Fault | null {
+  if (row.length !== width) return WRONG_FIELD_COUNT;
+  let unread = -1;
+  for (let place = wanted.length - 1; place >= 0; place--) {
+    values[place] = parseNumber(row[wanted[place]!]!);
+    if (place < required && Number.isNaN(values[place])) unread = place;
+  }
+  if (unread === -1) return null;
+  for (let place = unread; place < required; place++) {
+    if (isMissing(row[wanted[place]!]!)) return { reason: 'missingValue', place };
+  }
+  return { reason: 'notANumber', place: unread };
+}
+
 /** Where the parts of a row stand among its cells. */
 export interface RowLayout {
+  /** Columns of the header. */
   readonly cells: number;
   readonly ra: number;
   readonly dec: number;
@@ -16,61 +83,28 @@ export interface RowLayout {
   readonly weight: number;
 }
 
-/**
- * Judges rows of text one after the other, in the order of SET_ASIDE_REASONS up to weightNegative; region and cuts
- * come after it (selection.ts). Units: degrees as read; redshift from z, or cz/c for a velocity in km/s.
- *
- * One object for all rows: after `judge` its fields are those of the last row, so that no row costs an allocation.
- */
+/** Judges single rows of text, for showing: all that loading does but region and cuts. */
 export class RowCleaner {
-  raDeg = Number.NaN;
-  decDeg = Number.NaN;
-  redshift = Number.NaN;
-  weight = 1;
-  /** The cell to blame for the reason given last, or -1. */
+  /** The cell to blame for the last reason, or -1. */
   blamedCell = -1;
   readonly #layout: RowLayout;
-  readonly #required: readonly number[];
+  readonly #wanted: readonly number[];
+  readonly #values: Float64Array;
 
   constructor(layout: RowLayout) {
-    this.#layout = layout;
     const { ra, dec, radial, weight } = layout;
-    this.#required = weight === -1 ? [ra, dec, radial] : [ra, dec, radial, weight];
+    this.#layout = layout;
+    this.#wanted = weight === -1 ? [ra, dec, radial] : [ra, dec, radial, weight];
+    this.#values = new Float64Array(this.#wanted.length);
   }
 
   /** Why the row cannot be used, or null for a usable one. */
   judge(row: readonly string[]): SetAsideReason | null {
-    const layout = this.#layout;
-    this.blamedCell = -1;
-    if (row.length !== layout.cells) return 'wrongFieldCount';
-    const ra = parseNumber(row[layout.ra]!);
-    const dec = parseNumber(row[layout.dec]!);
-    const radial = parseNumber(row[layout.radial]!);
-    const weight = layout.weight === -1 ? 1 : parseNumber(row[layout.weight]!);
-    // The sum of finite numbers is never NaN, so one test tells that all four are there.
-    if (Number.isNaN(ra + dec + radial + weight)) return this.#unreadable(row);
-    const redshift = layout.radialKind === 'czKmS' ? radial / SPEED_OF_LIGHT_KM_S : radial;
-    if (!(ra >= 0 && ra <= 360)) return this.#blame(layout.ra, 'raOutOfRange');
-    if (!(dec >= -90 && dec <= 90)) return this.#blame(layout.dec, 'decOutOfRange');
-    if (!(redshift > 0)) return this.#blame(layout.radial, 'redshiftNotAboveZero');
-    if (redshift > LARGEST_REDSHIFT) return this.#blame(layout.radial, 'redshiftTooLarge');
-    if (weight < 0) return this.#blame(layout.weight, 'weightNegative');
-    this.raDeg = ra;
-    this.decDeg = dec;
-    this.redshift = redshift;
-    this.weight = weight;
-    return null;
-  }
-
-  #unreadable(row: readonly string[]): SetAsideReason {
-    const missing = this.#required.find((cell) => isMissing(row[cell]!));
-    if (missing !== undefined) return this.#blame(missing, 'missingValue');
-    const unread = this.#required.find((cell) => Number.isNaN(parseNumber(row[cell]!)));
-    return this.#blame(unread ?? -1, 'notANumber');
-  }
-
-  #blame(cell: number, reason: SetAsideReason): SetAsideReason {
-    this.blamedCell = cell;
-    return reason;
+    const required = this.#wanted.length;
+    const fault =
+      readText(row, this.#layout.cells, this.#wanted, required, this.#values) ??
+      judgeNumbers(this.#values, required, this.#layout.radialKind);
+    this.blamedCell = fault === null ? -1 : (this.#wanted[fault.place] ?? -1);
+    return fault === null ? null : fault.reason;
   }
 }

@@ -1,45 +1,44 @@
 import type { Catalogue, ColumnMapping } from './catalogue.ts';
-import type { RowCleaner } from './cleaning.ts';
-import { columnNamed } from './mapping.ts';
+import { DEC, RA, WEIGHT } from './cleaning.ts';
 import { NumberColumn } from './numberColumn.ts';
-import { parseNumber } from './numbers.ts';
 import { findRepeats } from './positions.ts';
 import type { Tally } from './tally.ts';
 
 /** The rows kept so far, column by column. A file's column that plays two parts is held once. */
 export class KeptRows {
+  readonly #mapping: ColumnMapping;
+  readonly #extras: readonly string[];
   readonly #line = new NumberColumn();
   readonly #ra = new NumberColumn();
   readonly #dec = new NumberColumn();
   readonly #redshift = new NumberColumn();
   readonly #weight: NumberColumn | null;
-  /** Columns beyond the required ones: magnitude and extras, by name. */
-  readonly #further: { readonly name: string; readonly cell: number; readonly values: NumberColumn }[] = [];
-  readonly #mapping: ColumnMapping;
-  readonly #extras: readonly string[];
+  /** Magnitude and extras, as far as they are none of the columns above. */
+  readonly #further: { readonly name: string; readonly place: number; readonly values: NumberColumn }[] = [];
 
-  constructor(header: readonly string[], mapping: ColumnMapping, extras: readonly string[]) {
+  /** `placeOf` tells where among a row's values the column of this name stands. */
+  constructor(mapping: ColumnMapping, extras: readonly string[], placeOf: (name: string) => number) {
     this.#mapping = mapping;
-    this.#extras = extras.map((name) => columnNamed(header, name));
+    this.#extras = extras;
     this.#weight = mapping.weight === null ? null : new NumberColumn();
     const held = new Set([mapping.ra, mapping.dec, mapping.weight]);
     if (mapping.radial.kind === 'redshift') held.add(mapping.radial.column);
-    for (const name of [mapping.magnitude, ...this.#extras]) {
+    for (const name of [mapping.magnitude, ...extras]) {
       if (name === null || held.has(name)) continue;
       held.add(name);
-      this.#further.push({ name, cell: header.indexOf(name), values: new NumberColumn() });
+      this.#further.push({ name, place: placeOf(name), values: new NumberColumn() });
     }
   }
 
-  add(line: number, cleaned: RowCleaner, row: readonly string[]): void {
+  add(line: number, redshift: number, values: Float64Array): void {
     this.#line.push(line);
-    this.#ra.push(cleaned.raDeg);
-    this.#dec.push(cleaned.decDeg);
-    this.#redshift.push(cleaned.redshift);
-    this.#weight?.push(cleaned.weight);
+    this.#ra.push(values[RA]!);
+    this.#dec.push(values[DEC]!);
+    this.#redshift.push(redshift);
+    this.#weight?.push(values[WEIGHT]!);
     for (let k = 0; k < this.#further.length; k++) {
       const column = this.#further[k]!;
-      column.values.push(parseNumber(row[column.cell]!));
+      column.values.push(values[column.place]!);
     }
   }
 

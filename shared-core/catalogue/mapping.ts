@@ -47,7 +47,7 @@ export function suggestMapping(header: readonly string[]): ColumnChoice {
  * in the header.
  *
  * Throws Refusal ('use') for a chosen column that the file does not have and for one column in two of the parts RA,
- * Dec and redshift, and Refusal ('input') where RA, Dec or redshift was neither chosen nor found.
+ * Dec, redshift and weight, and Refusal ('input') where RA, Dec or redshift was neither chosen nor found.
  */
 export function resolveMapping(header: readonly string[], chosen: ColumnChoice = {}): ColumnMapping {
   const named: ColumnChoice = {
@@ -102,11 +102,12 @@ function noSuchColumn(header: readonly string[], absent: readonly string[]): Ref
 }
 
 function refuseDoubleUse(mapping: ColumnMapping): void {
-  const { ra, dec, radial } = mapping;
-  const twice = ra === dec || ra === radial.column ? ra : dec === radial.column ? dec : null;
-  if (twice !== null) {
+  const { ra, dec, radial, weight } = mapping;
+  const names = [ra, dec, radial.column, ...(weight === null ? [] : [weight])];
+  const twice = names.find((name, i) => names.indexOf(name) !== i);
+  if (twice !== undefined) {
     throw new Refusal(
-      `The column "${twice}" is named for two of right ascension, declination and redshift: name three different columns.`,
+      `The column "${twice}" is named for two of right ascension, declination, redshift and weight: name a column of its own for each.`,
       'use',
     );
   }

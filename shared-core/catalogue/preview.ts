@@ -1,7 +1,8 @@
 import { Refusal } from '../base/refusal.ts';
 import type { ColumnMapping } from './catalogue.ts';
 import type { Delimiter } from './formats/delimited/delimiter.ts';
-import { isBlank, openTable } from './formats/delimited/table.ts';
+import { openTable } from './formats/delimited/openTable.ts';
+import { isBlank } from './formats/delimited/table.ts';
 import { resolveMapping, suggestMapping } from './mapping.ts';
 import type { ColumnChoice } from './spellings.ts';
 
@@ -35,7 +36,7 @@ export async function previewCatalogue(
   const lines: number[] = [];
   try {
     if (rowCount > 0) {
-      gather: for await (const records of table.records) {
+      gather: for await (const records of table.rows()) {
         for (let i = 0; i < records.rows.length; i++) {
           const row = records.rows[i]!;
           if (isBlank(row)) continue;

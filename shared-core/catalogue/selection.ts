@@ -4,6 +4,12 @@ import type { Cut } from './catalogue.ts';
 /** Is this position in the region? Null where there is no region: every position is. */
 export type Contains = ((raDeg: number, decDeg: number) => boolean) | null;
 
+/** Which of the usable rows are wanted. */
+export interface Choice {
+  readonly contains: Contains;
+  readonly cuts: readonly Cut[];
+}
+
 /** What `whyLeftOut` answers for a row that stays and for one outside the region; else it is the cut that failed. */
 export const STAYS = -1;
 export const OUTSIDE_REGION = -2;

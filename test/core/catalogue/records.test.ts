@@ -1,18 +1,18 @@
 import fc from 'fast-check';
 import Papa from 'papaparse';
 import { describe, expect, it } from 'vitest';
-import {
-  LONGEST_RECORD,
-  RecordCutter,
-  type Records,
-} from '../../../shared-core/catalogue/formats/delimited/records.ts';
+import { RecordCutter, type Records } from '../../../shared-core/catalogue/formats/delimited/records.ts';
+import { CR, LF, LONGEST_ROW } from '../../../shared-core/catalogue/formats/delimited/wholeLines.ts';
 import { refusalOf } from './support.ts';
 
-function cut(text: string, pieceLength = text.length || 1, firstLine = 1) {
-  const cutter = new RecordCutter(',', '\n', firstLine);
+/** Cuts text given in pieces of so many lines; a last line break is added where there is none. */
+function cut(text: string, linesAtOnce = 1000) {
+  const cutter = new RecordCutter(',', LF, 1);
   const all: Records[] = [];
-  for (let at = 0; at < text.length; at += pieceLength)
-    all.push(...cutter.push(text.slice(at, at + pieceLength)));
+  const lines = text.replace(/\n$/, '').split('\n');
+  for (let at = 0; at < lines.length; at += linesAtOnce) {
+    all.push(...cutter.push(`${lines.slice(at, at + linesAtOnce).join('\n')}\n`));
+  }
   all.push(...cutter.finish());
   return { rows: all.flatMap((part) => part.rows), lines: all.flatMap((part) => [...part.lines]) };
 }
@@ -35,8 +35,8 @@ describe('RecordCutter', () => {
   });
 
   it('reads files whose lines end in CR alone', () => {
-    const cutter = new RecordCutter(';', '\r', 1);
-    const parts = [...cutter.push('a;b\r1;"2'), ...cutter.push('\r3"\r4;5'), ...cutter.finish()];
+    const cutter = new RecordCutter(';', CR, 1);
+    const parts = [...cutter.push('a;b\r1;"2\r'), ...cutter.push('3"\r4;5\r'), ...cutter.finish()];
     expect(parts.flatMap((part) => part.rows)).toEqual([
       ['a', 'b'],
       ['1', '2\r3'],
@@ -54,7 +54,7 @@ describe('RecordCutter', () => {
     );
     const table = fc.array(fc.array(cell, { minLength: 1, maxLength: 4 }), { maxLength: 12 });
     fc.assert(
-      fc.property(table, fc.integer({ min: 1, max: 30 }), fc.boolean(), (cells, pieceLength, endsInBreak) => {
+      fc.property(table, fc.integer({ min: 1, max: 5 }), fc.boolean(), (cells, pieceLength, endsInBreak) => {
         const text = cells.map((row) => row.join(',')).join('\n') + (endsInBreak ? '\n' : '');
         const { rows, lines } = cut(text, pieceLength);
         // Without a last line break PapaParse and the cutter agree on everything; with one, the empty row after it
@@ -71,7 +71,7 @@ describe('RecordCutter', () => {
 
   it('reads a line literally whose quoted cell goes on after the quote, so that it swallows no row', () => {
     const text = 'name,z\n"M 31" group,0.1\nplain,0.2\n"Sombrero",0.3\nlast,0.4\n';
-    for (const pieceLength of [1, 3, 7, 200]) {
+    for (const pieceLength of [1, 2, 3, 200]) {
       const { rows, lines } = cut(text, pieceLength);
       expect(rows.slice(0, 5)).toEqual([
         ['name', 'z'],
@@ -96,7 +96,7 @@ describe('RecordCutter', () => {
 
   it('refuses a file in which such lines are the rule', async () => {
     const text = `a,b\n${'"x"y,1\n'.repeat(1500)}`;
-    const refusal = await refusalOf(() => cut(text, 3000));
+    const refusal = await refusalOf(() => cut(text, 300));
     expect(refusal.message).toMatch(
       /^The row on line 1002 is one of more than 1000 with text after a closing quote.*double the quotes/,
     );
@@ -110,7 +110,7 @@ describe('RecordCutter', () => {
   });
 
   it('refuses a quote left open in a long file before memory grows', async () => {
-    const cutter = new RecordCutter(',', '\n', 1);
+    const cutter = new RecordCutter(',', LF, 1);
     let fed = 0;
     const refusal = await refusalOf(() => {
       cutter.push('a,b\n1,2\n3,"4\n');
@@ -120,20 +120,17 @@ describe('RecordCutter', () => {
       }
     });
     expect(refusal.message).toMatch(/row that starts on line 3 is still open 1048576 characters later/);
-    expect(fed).toBeLessThan(LONGEST_RECORD + 100_000);
+    expect(fed).toBeLessThan(LONGEST_ROW + 100_000);
   });
 
-  it('refuses a line without end before memory grows', async () => {
-    const cutter = new RecordCutter(',', '\n', 1);
-    let fed = 0;
-    const refusal = await refusalOf(() => {
-      cutter.push('a,b\n1,2\n');
-      for (;;) {
-        cutter.push('0.5,'.repeat(10_000));
-        fed += 40_000;
-      }
-    });
-    expect(refusal.message).toMatch(/^Line 3 is longer than 1048576 characters.*one galaxy a line/);
-    expect(fed).toBeLessThan(LONGEST_RECORD + 100_000);
+  it('tells the line that comes next, and whether a quoted cell is open', () => {
+    const cutter = new RecordCutter(',', LF, 7);
+    cutter.push('a,b\n');
+    expect([cutter.nextLine, cutter.isBetweenRows]).toEqual([8, true]);
+    cutter.push('1,"two\nlines\n');
+    expect([cutter.nextLine, cutter.isBetweenRows]).toEqual([10, false]);
+    expect(cutter.push('end"\n')[0]!.rows).toEqual([['1', 'two\nlines\nend']]);
+    cutter.passLines(5);
+    expect([cutter.nextLine, cutter.isBetweenRows]).toEqual([16, true]);
   });
 });

@@ -1,14 +1,14 @@
 import { gzipSync } from 'node:zlib';
 import { describe, expect, it } from 'vitest';
 import type { Delimiter } from '../../../shared-core/catalogue/formats/delimited/delimiter.ts';
-import { openTable } from '../../../shared-core/catalogue/formats/delimited/table.ts';
+import { openTable } from '../../../shared-core/catalogue/formats/delimited/openTable.ts';
 import { bytesOf, inPieces, refusalOf, utf8 } from './support.ts';
 
 async function read(text: string, delimiter?: Delimiter) {
   const table = await openTable(bytesOf(text), { delimiter });
   const rows: string[][] = [];
   const lines: number[] = [];
-  for await (const records of table.records) {
+  for await (const records of table.rows()) {
     rows.push(...records.rows.map((row) => row.map((cell) => cell.trim())));
     lines.push(...records.lines);
   }
@@ -116,8 +116,8 @@ describe('openTable', () => {
       '1.5,2.5,0.1\n2,3,0.2\n',
       /only numbers \(1.5, 2.5, 0.1\).*put a line such as ra,dec,z above/,
     ],
-    ['a comment line without end', `# ${'x'.repeat(3_000_000)}`, /Line 1 is longer than 1048576 characters/],
-    ['a million columns', `${'c,'.repeat(1_000_000)}c\n`, /^Line 1 is longer than 1048576 characters/],
+    ['a comment line without end', `# ${'x'.repeat(3_000_000)}`, /^Line 1 is longer than 1048576 bytes/],
+    ['a million columns', `${'c,'.repeat(1_000_000)}c\n`, /^Line 1 is longer than 1048576 bytes/],
     [
       'a hundred thousand columns',
       `${'c,'.repeat(99_999)}c\n1,2\n`,

@@ -1,6 +1,6 @@
 /// <reference path="./papaparse.d.ts" />
 import Papa from 'papaparse/papaparse.js';
-import type { LineBreak } from './records.ts';
+import { LF, type LineBreak } from './wholeLines.ts';
 
 /** What may stand between columns. */
 export const DELIMITERS = [',', '\t', ';', '|'] as const;
@@ -21,14 +21,14 @@ export function delimiterName(delimiter: Delimiter): string {
 }
 
 /**
- * The delimiter under which the head of a table (its header first) is most of a table: many columns in the header,
- * and rows that agree with it. A comma where none cuts the header in two.
+ * The delimiter under which the head of a table (whole lines, the header first) is most of a table: many columns in
+ * the header, and rows that agree with it. A comma where none cuts the header in two.
  */
-export function detectDelimiter(head: string, newline: LineBreak, isWhole: boolean): Delimiter {
+export function detectDelimiter(head: string, lineBreak: LineBreak): Delimiter {
   let best: Delimiter = ',';
   let bestScore = 0;
   for (const delimiter of DELIMITERS) {
-    const score = tableScore(head, delimiter, newline, isWhole);
+    const score = tableScore(head, delimiter, lineBreak);
     if (score > bestScore) {
       best = delimiter;
       bestScore = score;
@@ -38,9 +38,9 @@ export function detectDelimiter(head: string, newline: LineBreak, isWhole: boole
 }
 
 /** Columns of the header times the share of rows with as many. */
-function tableScore(head: string, delimiter: Delimiter, newline: LineBreak, isWhole: boolean): number {
-  const rows = new Papa.Parser({ delimiter, newline })
-    .parse(head, 0, !isWhole)
+function tableScore(head: string, delimiter: Delimiter, lineBreak: LineBreak): number {
+  const rows = new Papa.Parser({ delimiter, newline: lineBreak === LF ? '\n' : '\r' })
+    .parse(head, 0, true)
     .data.filter((row) => row.length > 1 || row[0]!.trim() !== '')
     .slice(0, ROWS_LOOKED_AT + 1);
   const header = rows[0];

@@ -20,7 +20,11 @@ export async function* unpacked(
   }
 }
 
-async function* resumed(first: Uint8Array, rest: AsyncIterable<Uint8Array>): AsyncGenerator<Uint8Array> {
-  yield first;
+/** What was taken off a stream to look at it, and the rest of the stream. */
+export async function* resumed(
+  first: Uint8Array,
+  rest: AsyncIterable<Uint8Array>,
+): AsyncGenerator<Uint8Array> {
+  if (first.length > 0) yield first;
   yield* rest;
 }

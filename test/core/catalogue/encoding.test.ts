@@ -1,16 +1,16 @@
 import { describe, expect, it } from 'vitest';
-import { decodeText } from '../../../shared-core/catalogue/formats/delimited/text.ts';
+import { asUtf8 } from '../../../shared-core/catalogue/formats/delimited/encoding.ts';
 import { inPieces, refusalOf, utf8, utf16 } from './support.ts';
 
 async function decode(bytes: Uint8Array, sizes?: readonly number[]): Promise<string> {
-  let text = '';
-  for await (const piece of decodeText(inPieces(bytes, sizes))) text += piece;
-  return text;
+  const pieces: Uint8Array[] = [];
+  for await (const piece of asUtf8(inPieces(bytes, sizes))) pieces.push(piece.slice());
+  return Buffer.concat(pieces).toString('utf8');
 }
 
 const table = 'name,ra,dec,z\n"Fornax α, größte ★ 🌌",54.6,-35.5,0.0046\n';
 
-describe('decodeText', () => {
+describe('asUtf8', () => {
   it('reads UTF-8 with and without a byte-order mark, and UTF-16 by its mark', async () => {
     expect(await decode(utf8(table))).toBe(table);
     expect(await decode(utf8(`\ufeff${table}`))).toBe(table);

@@ -1,0 +1,141 @@
+import type { Catalogue, ColumnMapping, SetAsideReason, SetAsideRow } from './catalogue.ts';
+import { DEC, type Fault, judgeNumbers, RA, RADIAL, readText, redshiftOf } from './cleaning.ts';
+import type { RowSink } from './formats/delimited/lineScanner.ts';
+import { isBlank } from './formats/delimited/table.ts';
+import { KeptRows } from './keptRows.ts';
+import { keptText } from './keptText.ts';
+import { columnNamed } from './mapping.ts';
+import { type Choice, cutText, OUTSIDE_REGION, STAYS, whyLeftOut } from './selection.ts';
+import { Tally } from './tally.ts';
+
+/** A row that is kept, as it is told while the file is read. */
+export interface KeptRow {
+  readonly line: number;
+  /** The name in the mapping's id column, white space at its ends taken off; null without such a column. */
+  readonly id: string | null;
+  readonly raDeg: number;
+  readonly decDeg: number;
+  readonly redshift: number;
+}
+
+/** What is wanted of the rows beyond the mapping. */
+export interface IntakeWishes {
+  readonly choice: Choice;
+  readonly extras: readonly string[];
+  readonly onSetAside: ((row: SetAsideRow) => void) | undefined;
+  readonly onKept: ((row: KeptRow) => void) | undefined;
+}
+
+/**
+ * Takes in the rows of a table one by one: each is kept, or set aside with its reason. Rows of numbers and rows of
+ * text are judged by the same functions.
+ */
+export class RowIntake implements RowSink {
+  /** Cells wanted as numbers, by place in the header: RA, Dec, radial, weight if there is one, then the others. */
+  readonly wanted: readonly number[];
+  /** So many of them, the first, must hold a number. */
+  readonly required: number;
+  readonly #header: readonly string[];
+  readonly #delimiter: string;
+  readonly #mapping: ColumnMapping;
+  readonly #choice: Choice;
+  readonly #onSetAside: ((row: SetAsideRow) => void) | undefined;
+  readonly #onKept: ((row: KeptRow) => void) | undefined;
+  /** -1: nobody asks for names. */
+  readonly #idCell: number;
+  readonly #values: Float64Array;
+  readonly #cutPlaces: readonly number[];
+  readonly #cutValues: Float64Array;
+  readonly #tally = new Tally();
+  readonly #kept: KeptRows;
+
+  constructor(
+    { header, delimiter }: { readonly header: readonly string[]; readonly delimiter: string },
+    mapping: ColumnMapping,
+    wishes: IntakeWishes,
+  ) {
+    const { choice, extras, onSetAside, onKept } = wishes;
+    const { ra, dec, radial, weight, magnitude } = mapping;
+    const places: string[] = [ra, dec, radial.column];
+    if (weight !== null) places.push(weight);
+    this.required = places.length;
+    const placeOf = (name: string) => {
+      const known = places.indexOf(name);
+      return known === -1 ? places.push(name) - 1 : known;
+    };
+    const extraNames = extras.map((name) => columnNamed(header, name));
+    if (magnitude !== null) placeOf(magnitude);
+    extraNames.forEach(placeOf);
+    this.#cutPlaces = choice.cuts.map((cut) => placeOf(columnNamed(header, cut.column)));
+    this.#kept = new KeptRows(mapping, extraNames, placeOf);
+    this.wanted = places.map((name) => header.indexOf(name));
+    this.#header = header;
+    this.#delimiter = delimiter;
+    this.#mapping = mapping;
+    this.#choice = choice;
+    this.#onSetAside = onSetAside;
+    this.#onKept = onKept;
+    this.#idCell = onKept === undefined || mapping.id === null ? -1 : header.indexOf(mapping.id);
+    this.#values = new Float64Array(places.length);
+    this.#cutValues = new Float64Array(choice.cuts.length);
+  }
+
+  /** False for a row that is wanted as text: to tell what stood in the cell at fault, or the row's name. */
+  numbers(line: number, values: Float64Array): boolean {
+    if (this.#idCell !== -1) return false;
+    const fault = judgeNumbers(values, this.required, this.#mapping.radial.kind);
+    if (fault === null) this.#choose(line, values, null);
+    else if (this.#onSetAside !== undefined) return false;
+    else this.#tally.setAside(fault.reason);
+    return true;
+  }
+
+  text(line: number, row: string[]): void {
+    const values = this.#values;
+    const fault =
+      readText(row, this.#header.length, this.wanted, this.required, values) ??
+      judgeNumbers(values, this.required, this.#mapping.radial.kind);
+    if (fault === null) this.#choose(line, values, row[this.#idCell]?.trim() ?? null);
+    else if (!isBlank(row)) this.#blame(line, fault, row);
+  }
+
+  /** All rows kept, as a catalogue. Nothing may be taken in afterwards. */
+  catalogue(): Catalogue {
+    return this.#kept.catalogue(this.#tally);
+  }
+
+  /** A usable row: kept, unless the region or a cut leaves it out. */
+  #choose(line: number, values: Float64Array, id: string | null): void {
+    const cutValues = this.#cutValues;
+    for (let k = 0; k < cutValues.length; k++) cutValues[k] = values[this.#cutPlaces[k]!]!;
+    const { contains, cuts } = this.#choice;
+    const left = whyLeftOut(values[RA]!, values[DEC]!, contains, cuts, cutValues);
+    if (left === STAYS) {
+      this.#tally.keep();
+      const redshift = redshiftOf(values[RADIAL]!, this.#mapping.radial.kind);
+      this.#kept.add(line, redshift, values);
+      this.#onKept?.({ line, id, raDeg: values[RA]!, decDeg: values[DEC]!, redshift });
+    } else if (left === OUTSIDE_REGION) {
+      this.#setAside(line, 'outsideRegion', null, null);
+    } else {
+      this.#setAside(line, 'outsideCuts', cuts[left]!.column, cutText(cutValues[left]!));
+    }
+  }
+
+  #blame(line: number, { reason, place }: Fault, row: readonly string[]): void {
+    // The text is prepared only for somebody who asked for it.
+    if (this.#onSetAside === undefined) {
+      this.#tally.setAside(reason);
+    } else if (place === -1) {
+      this.#setAside(line, reason, null, keptText(row.join(this.#delimiter)));
+    } else {
+      const cell = this.wanted[place]!;
+      this.#setAside(line, reason, this.#header[cell]!, keptText(row[cell]!));
+    }
+  }
+
+  #setAside(line: number, reason: SetAsideReason, column: string | null, text: string | null): void {
+    this.#tally.setAside(reason);
+    this.#onSetAside?.({ line, reason, column, text });
+  }
+}
