@@ -2,7 +2,17 @@ import { EigenvalueDecomposition, Matrix } from 'ml-matrix';
 import { smallestCap } from './enclosingCap.ts';
 import { type Piece, pieceHolds, pieceOf, piecesNear } from './pieces.ts';
 import type { Footprint, OutlineRing } from './region.ts';
-import { angleRad, combine, DEG_PER_RAD, dot, RAD_PER_DEG, unit, unitToRaDec, type Vec3 } from './vectors.ts';
+import {
+  angleRad,
+  combine,
+  DEG_PER_RAD,
+  dot,
+  RAD_PER_DEG,
+  unit,
+  unitToRaDec,
+  type Vec3,
+  WHOLE_SKY_DEG2,
+} from './vectors.ts';
 
 /** One field of a footprint: pieces of sky that are looked at together. */
 export interface SkyField {
@@ -31,12 +41,12 @@ const ROUND = 1.02;
 
 /**
  * The fields of a footprint, largest first: its connected pieces, those that lie close together as one (the gap at
- * most half the larger one's radius, and at most 5 degrees). One field flagged wide when it, or any field, would need
- * a cap of over 70 degrees, or when the footprint surrounds the observer.
+ * most half the larger one's radius, and at most 5 degrees). One field flagged wide when any field would need a cap of
+ * over 70 degrees, when the footprint covers more than half of the sky, or when it surrounds the observer.
  */
-export function footprintFields(footprint: Pick<Footprint, 'outline'>): readonly SkyField[] {
+export function footprintFields(footprint: Pick<Footprint, 'outline' | 'areaDeg2'>): readonly SkyField[] {
   const rings = footprint.outline();
-  if (rings.length === 0) return [wideField(rings)];
+  if (rings.length === 0 || footprint.areaDeg2 > WHOLE_SKY_DEG2 / 2) return [wideField(rings)];
   const pieces: Piece[] = [];
   for (const ring of rings) {
     const piece = pieceOf(ring);
