@@ -1,0 +1,160 @@
+import { line } from 'd3-shape';
+import { useId } from 'preact/hooks';
+import { markText } from './axisMarks.ts';
+import { commonPower, densityMarks } from './densityScale.ts';
+import type { StripRows } from './rows.ts';
+import type { ShownProfile, StripModel } from './stripModel.ts';
+import { powerOfTen } from './words.ts';
+
+const MARK_EVERY_PX = 30;
+
+/** The histogram, the smooth curve through it, and the two scales: n at the left, n P0 at the right. */
+export function DensityPlot({ model, rows }: { readonly model: StripModel; readonly rows: StripRows }) {
+  const id = useId();
+  const scale = model.scale.value;
+  const density = model.density.value;
+  const profile = model.profile.value;
+  const perDensity = model.powerPerDensity.value;
+  if (scale === null) return null;
+  const { leftPx, rightPx } = scale;
+  const { plotTop, plotBottom } = rows;
+  const height = plotBottom - plotTop;
+  const yAt = (value: number): number | null => {
+    const share = density.share(value);
+    return share === null ? null : plotBottom - share * height;
+  };
+  const noiseY = perDensity === null ? null : yAt(1 / perDensity);
+  const noiseInView = profile !== null && noiseY !== null && noiseY >= plotTop && noiseY <= plotBottom;
+  const paths =
+    profile === null ? null : profilePaths(profile, scale.atReading, model.primary.value.factor, yAt, rows);
+  const most = Math.max(2, Math.floor(height / MARK_EVERY_PX));
+  const left = profile === null ? [] : densityMarks(density, 1, most);
+  const right = profile === null || perDensity === null ? [] : densityMarks(density, perDensity, most);
+  const power = density.upward === 'log' ? 0 : commonPower(density.high);
+  return (
+    <g class="strip-density">
+      <clipPath id={`${id}-plot`}>
+        <rect x={leftPx} y={plotTop} width={rightPx - leftPx} height={height} />
+      </clipPath>
+      <clipPath id={`${id}-above`}>
+        <rect
+          x={leftPx}
+          y={plotTop}
+          width={rightPx - leftPx}
+          height={noiseY === null ? 0 : Math.max(0, Math.min(height, noiseY - plotTop))}
+        />
+      </clipPath>
+      {left.map((value) => (
+        <ScaleMark
+          key={value}
+          y={yAt(value)}
+          x={leftPx}
+          side="left"
+          text={leftText(value, density.upward, power)}
+          rows={rows}
+        />
+      ))}
+      {right
+        .filter((value) => value !== 1)
+        .map((value) => (
+          <ScaleMark
+            key={value}
+            y={yAt(perDensity === null ? 0 : value / perDensity)}
+            x={rightPx}
+            side="right"
+            text={leftText(value, density.upward, 0)}
+            rows={rows}
+            keepFrom={noiseInView ? noiseY : null}
+          />
+        ))}
+      {paths === null ? null : (
+        <g clip-path={`url(#${id}-plot)`}>
+          <path class="strip-bars" d={paths.bars} />
+          <path class="strip-overflow" d={paths.overflow} />
+          {profile?.hasCurve ? (
+            <>
+              <path class="strip-smooth" d={paths.smooth} />
+              <path
+                class="strip-smooth strip-smooth-above"
+                d={paths.smooth}
+                clip-path={`url(#${id}-above)`}
+              />
+            </>
+          ) : null}
+        </g>
+      )}
+      {noiseInView && noiseY !== null ? (
+        <g class="strip-noise">
+          <line class="strip-noise-line" x1={leftPx} x2={rightPx} y1={noiseY} y2={noiseY} />
+          <line class="strip-noise-end" x1={rightPx} x2={rightPx + 5} y1={noiseY} y2={noiseY} />
+          <text x={rightPx + 8} y={noiseY} dy="0.35em">
+            1
+          </text>
+        </g>
+      ) : null}
+    </g>
+  );
+}
+
+function ScaleMark(props: {
+  readonly y: number | null;
+  readonly x: number;
+  readonly side: 'left' | 'right';
+  readonly text: string;
+  readonly rows: StripRows;
+  /** Height of another mark, which this one must not crowd. */
+  readonly keepFrom?: number | null;
+}) {
+  const { y, x, side, text, rows, keepFrom = null } = props;
+  if (y === null || y < rows.plotTop - 0.5 || y > rows.plotBottom + 0.5) return null;
+  const out = side === 'left' ? -1 : 1;
+  const crowded = keepFrom !== null && Math.abs(keepFrom - y) < 14;
+  return (
+    <g class={`strip-mark strip-mark-${side}`}>
+      <line x1={x} x2={x + 4 * out} y1={y} y2={y} />
+      {crowded ? null : (
+        <text x={x + 8 * out} y={y} dy="0.35em">
+          {text}
+        </text>
+      )}
+    </g>
+  );
+}
+
+function leftText(value: number, upward: 'linear' | 'log', power: number): string {
+  if (upward === 'linear') return markText(Number((value / 10 ** power).toPrecision(8)));
+  const exponent = Math.round(Math.log10(value));
+  return exponent >= -1 && exponent <= 3 ? markText(value) : powerOfTen(exponent);
+}
+
+// All bars are one path, so that two hundred of them cost one element.
+function profilePaths(
+  { bins, density, smooth }: ShownProfile,
+  atReading: (reading: number) => number,
+  factor: number,
+  yAt: (value: number) => number | null,
+  { plotTop, plotBottom }: StripRows,
+) {
+  let bars = '';
+  let overflow = '';
+  const points: [x: number, y: number | null][] = [];
+  for (let i = 0; i < density.length; i++) {
+    const x0 = atReading(bins.shownEdges[i]! / factor);
+    const x1 = atReading(bins.shownEdges[i + 1]! / factor);
+    points.push([(x0 + x1) / 2, yAt(smooth[i]!)]);
+    if (i < bins.first || i >= bins.end || !(density[i]! > 0)) continue;
+    const y = yAt(density[i]!);
+    if (y === null || y >= plotBottom) continue;
+    const gap = Math.min(0.5, (x1 - x0) / 8);
+    bars += `M${(x0 + gap).toFixed(2)} ${plotBottom}V${Math.max(plotTop, y).toFixed(2)}H${(x1 - gap).toFixed(2)}V${plotBottom}Z`;
+    if (y < plotTop - 0.5) {
+      const x = (x0 + x1) / 2;
+      overflow += `M${(x - 4).toFixed(2)} ${plotTop + 6}L${x.toFixed(2)} ${plotTop + 1}L${(x + 4).toFixed(2)} ${plotTop + 6}Z`;
+    }
+  }
+  const curve = line<[number, number | null]>()
+    .defined(([, y]) => y !== null && Number.isFinite(y))
+    .x(([x]) => x)
+    .y(([, y]) => Math.max(plotTop - 1000, Math.min(plotBottom + 1000, y!)));
+  return { bars, overflow, smooth: curve(points) ?? '' };
+}
