@@ -1,43 +1,44 @@
-import { build, defineConfig, type InlineConfig } from 'vite';
+import { build, defineConfig, type Plugin } from 'vite';
 
-const outDir = '../../build/desktop';
+const external = ['electron'];
 
 // A sandboxed preload script must be one CommonJS file; the main process is a module. One bundle cannot be both.
-const preload: InlineConfig = {
-  configFile: false,
-  root: import.meta.dirname,
-  logLevel: 'warn',
-  build: {
-    ssr: 'preload.ts',
-    outDir,
-    emptyOutDir: false,
-    target: 'node22',
-    minify: false,
-    rolldownOptions: {
-      external: ['electron'],
-      output: { format: 'cjs', entryFileNames: 'preload.cjs' },
+function preloadBeside(): Plugin {
+  let outDir = '';
+  return {
+    name: 'preload script beside the main process',
+    configResolved(config) {
+      outDir = config.build.outDir;
     },
-  },
-  ssr: { noExternal: true },
-};
+    async closeBundle() {
+      await build({
+        configFile: false,
+        root: import.meta.dirname,
+        logLevel: 'warn',
+        build: {
+          ssr: 'preload.ts',
+          outDir,
+          emptyOutDir: false,
+          target: 'node22',
+          minify: false,
+          rolldownOptions: { external, output: { format: 'cjs', entryFileNames: 'preload.cjs' } },
+        },
+        ssr: { noExternal: true },
+      });
+    },
+  };
+}
 
 export default defineConfig({
   root: import.meta.dirname,
-  plugins: [
-    {
-      name: 'preload beside the main process',
-      async closeBundle() {
-        await build(preload);
-      },
-    },
-  ],
+  plugins: [preloadBeside()],
   build: {
     ssr: 'main.ts',
-    outDir,
+    outDir: '../../build/desktop',
     emptyOutDir: true,
     target: 'node22',
     minify: false,
-    rolldownOptions: { external: ['electron'], output: { format: 'es', entryFileNames: 'main.js' } },
+    rolldownOptions: { external, output: { format: 'es', entryFileNames: 'main.js' } },
   },
-  ssr: { noExternal: true, external: ['electron'] },
+  ssr: { noExternal: true, external },
 });
