@@ -1,3 +1,4 @@
+import { effect } from '@preact/signals';
 import { createContext } from 'preact';
 import { useContext } from 'preact/hooks';
 import type { Bridge } from '../../shared-core/bridge/contract.ts';
@@ -41,6 +42,14 @@ export function createApp(
     askReplace: (sentence) => questions.askReplace(sentence),
   });
   const engine = createEngineState(studyState, files.engineSource, options.makeWorker);
+  // The fingerprint of a file is known once it has been read whole; from then on a change of the file is told.
+  effect(() => {
+    const loaded = engine.loaded.value;
+    const { source } = studyState.study.peek();
+    if (loaded === null || source?.kind !== 'file' || source.sha256 !== null) return;
+    if (loaded.sizeBytes !== source.sizeBytes) return;
+    studyState.amend((study) => ({ ...study, source: { ...source, sha256: loaded.sha256 } }));
+  });
   return {
     bridge,
     notices,

@@ -1,7 +1,14 @@
 import { batch, type Signal, signal } from '@preact/signals';
 
 /** From where the cone is to be seen. */
-export const CAMERA_VIEWS = ['side-on', 'down-the-cone', 'from-behind', 'whole', 'around', 'parallel'] as const;
+export const CAMERA_VIEWS = [
+  'side-on',
+  'down-the-cone',
+  'from-behind',
+  'whole',
+  'around',
+  'parallel',
+] as const;
 export type CameraView = (typeof CAMERA_VIEWS)[number];
 
 /** What the person looks at: not part of the study, not undone, not saved. */

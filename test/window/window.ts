@@ -1,0 +1,137 @@
+import { type ChildProcess, spawn } from 'node:child_process';
+import { mkdtempSync, rmSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { fileURLToPath } from 'node:url';
+import { AxeBuilder } from '@axe-core/playwright';
+import { type Browser, test as base, chromium, expect, type Page } from '@playwright/test';
+import { findBrowser } from '../../main/launch/findBrowser.ts';
+
+const root = fileURLToPath(new URL('../..', import.meta.url));
+const browser = findBrowser({
+  platform: process.platform,
+  env: process.env,
+  homeFolder: process.env.HOME ?? '',
+});
+
+/** Software WebGL, and no calls to the outside. */
+const FLAGS = [
+  '--no-sandbox',
+  '--use-angle=swiftshader',
+  '--enable-unsafe-swiftshader',
+  '--ignore-gpu-blocklist',
+  '--disable-background-networking',
+  '--disable-component-update',
+  '--disable-sync',
+  '--no-first-run',
+];
+
+export interface WindowOptions {
+  readonly files?: readonly string[];
+  readonly theme?: 'light' | 'dark';
+  readonly size?: { readonly width: number; readonly height: number };
+  /** The folder that studies are saved in; a fresh one if not given. */
+  readonly folder?: string;
+}
+
+export interface Desk {
+  /** A folder of this test's own. */
+  readonly folder: string;
+  /** Starts the program as a person does (npm start -- --no-open) and opens its address. */
+  open(options?: WindowOptions): Promise<Page>;
+}
+
+export const test = base.extend<{ desk: Desk }, { chrome: Browser }>({
+  chrome: [
+    // biome-ignore lint/correctness/noEmptyPattern: Playwright reads which fixtures are wanted from the pattern
+    async ({}, use) => {
+      if (browser === null) throw new Error('no Chromium');
+      const running = await chromium.launch({ executablePath: browser.path, args: FLAGS });
+      await use(running);
+      await running.close();
+    },
+    { scope: 'worker' },
+  ],
+  desk: async ({ chrome }, use, info) => {
+    const folder = mkdtempSync(join(tmpdir(), 'conewright-window-'));
+    const started: ChildProcess[] = [];
+    const complaints: string[] = [];
+    await use({
+      folder,
+      async open({
+        files = [],
+        theme = 'dark',
+        size = { width: 1280, height: 800 },
+        folder: base = folder,
+      } = {}) {
+        const child = spawn(process.execPath, [join(root, 'main/launch/start.mjs'), '--no-open', ...files], {
+          cwd: base,
+          env: { ...process.env, INIT_CWD: base, XDG_CONFIG_HOME: join(folder, 'config') },
+          stdio: ['ignore', 'pipe', 'pipe'],
+        });
+        started.push(child);
+        const address = await addressOf(child);
+        const context = await chrome.newContext({
+          viewport: size,
+          colorScheme: theme,
+          acceptDownloads: true,
+        });
+        const page = await context.newPage();
+        page.on('pageerror', (error) => complaints.push(String(error)));
+        page.on('console', (message) => {
+          if (message.type() === 'error') complaints.push(message.text());
+        });
+        await page.goto(address);
+        return page;
+      },
+    });
+    for (const child of started) child.kill();
+    for (const context of chrome.contexts()) await context.close();
+    rmSync(folder, { recursive: true, force: true });
+    // Whatever a test looks at, the page itself must be quiet: no exception, no violation of the content policy.
+    if (info.status === info.expectedStatus) expect(complaints).toEqual([]);
+  },
+});
+test.skip(
+  browser === null && !process.env.CI,
+  'not run: no Chromium, Chrome or Edge is installed (CHROME_PATH names one)',
+);
+
+async function addressOf(child: ChildProcess): Promise<string> {
+  let said = '';
+  return new Promise((resolve, reject) => {
+    const listen = (data: Buffer) => {
+      said += data.toString();
+      const found = /Open (http:\/\/127\.0\.0\.1\S+)/.exec(said);
+      if (found !== null) resolve(found[1]!);
+    };
+    child.stdout!.on('data', listen);
+    child.stderr!.on('data', listen);
+    child.once('exit', (code) => reject(new Error(`start ended with ${code}: ${said}`)));
+  });
+}
+
+/** Waits until the catalogue is in and nothing is being worked on. */
+export async function ready(page: Page): Promise<void> {
+  await expect(page.locator('.engine-line')).toHaveText(/kept · .* set aside/, { timeout: 90_000 });
+}
+
+/** No violation of WCAG that axe can find. */
+export async function accessible(page: Page): Promise<void> {
+  const { violations } = await new AxeBuilder({ page }).analyze();
+  expect(violations.map((v) => `${v.id}: ${v.nodes.map((n) => n.target.join(' ')).join(', ')}`)).toEqual([]);
+}
+
+/** What a download holds, as text. */
+export async function downloaded(
+  page: Page,
+  act: () => Promise<void>,
+): Promise<{ name: string; text: string }> {
+  const [download] = await Promise.all([page.waitForEvent('download'), act()]);
+  const stream = await download.createReadStream();
+  const parts: Buffer[] = [];
+  for await (const part of stream) parts.push(part as Buffer);
+  return { name: download.suggestedFilename(), text: Buffer.concat(parts).toString('utf8') };
+}
+
+export { expect };
