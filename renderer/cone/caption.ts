@@ -33,7 +33,7 @@ export function captionLines(facts: CaptionFacts): string[] {
   if (facts.reading === 'redshift') lines.push('radius is redshift: lengths and shapes are not to scale');
   if (facts.reading === 'lookback')
     lines.push('radius is lookback time: lengths and shapes are not to scale');
-  if (facts.perspective) lines.push('in perspective: no scale bar');
+  if (facts.perspective) lines.push('in perspective');
   if (facts.estimated) lines.push('outline estimated from the catalogue');
   return lines;
 }

@@ -36,8 +36,10 @@ import type {
 } from './types.ts';
 
 /** Room for rulers above and below a cone seen side-on. */
-const SIDE_ROOM = { top: 52, bottom: 84 };
-const AROUND_ROOM: Margins = { left: 48, right: 48, top: 46, bottom: 46 };
+const SIDE_ROOM = { top: 46, bottom: 74 };
+const FREE_ROOM: Margins = { left: 60, right: 60, top: 44, bottom: 76 };
+const RING_ROOM: Margins = { left: 30, right: 30, top: 26, bottom: 26 };
+const SEAT_ROOM: Margins = { left: 60, right: 60, top: 30, bottom: 30 };
 /** Scale limits: no nearer than this part of the far radius a pixel, no farther than that. */
 const NEAREST_SCALE = 1e-8;
 const FARTHEST_SCALE = 0.05;
@@ -256,7 +258,9 @@ export class ConeModel {
     const natural = this.natural();
     const rooms =
       this.view === 'parallel' ? this.heights().map((h) => h * 0.86) : natural.map(() => this.room());
-    return natural.map((px, i) => this.chosenFactors.get(i) ?? proposeSidewaysFactor(px, rooms[i]!));
+    // A lane of several is opened as soon as it can be; a cone alone keeps its true shape where that fills the stage.
+    const slack = this.view === 'parallel' ? 1.2 : 2.5;
+    return natural.map((px, i) => this.chosenFactors.get(i) ?? proposeSidewaysFactor(px, rooms[i]!, slack));
   }
 
   /** Display height at the middle of the stage for a cone at rest in its room between the rulers. */
@@ -271,7 +275,7 @@ export class ConeModel {
 
   private upright(): Vec3 {
     const sky = this.view === 'whole' || this.view === 'aroundTheObserver';
-    return sky && commonFrame(this.fields, this.wide) === SKY_FRAME ? [0, 0, 1] : [0, 1, 0];
+    return sky && commonFrame(this.fields) === SKY_FRAME ? [0, 0, 1] : [0, 1, 0];
   }
 
   private takePose(): void {
@@ -283,12 +287,15 @@ export class ConeModel {
       this.pose = { ...pose, target: [pose.target[0], height, 0] };
       return;
     }
-    const skyFrame = commonFrame(this.fields, this.wide) === SKY_FRAME;
+    const skyFrame = commonFrame(this.fields) === SKY_FRAME;
     let start = viewPose(this.view, skyFrame ? [0, 0, 0] : [0.5, 0, 0]);
     if (this.view === 'whole' && skyFrame) {
       start = { ...start, axes: lookingFrom([0.35, -0.75, 0.55], [0, 0, 1]) };
     }
-    this.pose = fitPose(start, this.corners(), this.viewport, AROUND_ROOM);
+    if (this.view === 'downTheCone') start = { ...start, axes: skyAxes(this.fields[this.current]) };
+    const rings = this.fields.every((field) => field.rings.length === 0);
+    const room = this.view === 'downTheCone' ? SEAT_ROOM : rings ? RING_ROOM : FREE_ROOM;
+    this.pose = fitPose(start, this.corners(), this.viewport, room);
   }
 
   /** Points that a view must hold: observer and outlines at the far end, in display space. */
@@ -305,9 +312,14 @@ export class ConeModel {
         for (let i = 0; i < ring.length; i += step) put(lane.model, ring[i]!, ring[i + 1]!, ring[i + 2]!);
       }
     }
-    if (out.length === 3 || this.view === 'aroundTheObserver') {
+    if (out.length === 3) {
       for (let i = 0; i < 36; i++) out.push(Math.cos((i * Math.PI) / 18), Math.sin((i * Math.PI) / 18), 0);
     }
     return Float64Array.from(out);
   }
+}
+
+/** From the observer's seat with north up, so that east is to the left. */
+function skyAxes(field: PreparedField | undefined): Pose['axes'] {
+  return lookingFrom([-1, 0, 0], field?.north ?? [0, 1, 0]);
 }

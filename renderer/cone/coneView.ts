@@ -1,22 +1,18 @@
+import { Color } from 'three';
 import type { Triple } from '../colour/oklab.ts';
 import { shellColours } from '../colour/shellColours.ts';
 import { ConeModel, type Shown } from './coneModel.ts';
-import { parseCssColour } from './cssColour.ts';
 import type { Lane } from './geometry/arrangement.ts';
-import { type PointHit, pickPoint } from './geometry/pickPoint.ts';
 import { pickShell, type ShellHit } from './geometry/pickShell.ts';
 import { compose, type PixelMatrix, pixelMatrix, project } from './geometry/projection.ts';
 import { GlStage } from './glStage.ts';
 import { listen } from './navigation.ts';
 import { paintOverlay } from './overlay/paintOverlay.ts';
 import { Pen, type Point } from './overlay/pen.ts';
-import { palette } from './points/colouring.ts';
-import { crowding, discLight, pointSizePx } from './points/exposure.ts';
-import { Galaxies, type GalaxiesChange } from './points/galaxies.ts';
 import type { Emphasis, PointFrame, PointPart } from './points/pointLayer.ts';
+import { type LayerChoice, PointPainter } from './points/pointPainter.ts';
 import { radiusAt } from './points/radiusTable.ts';
-import type { Stretch, Tone } from './points/tone.ts';
-import { WebglPoints } from './points/webglPoints.ts';
+import type { Stretch } from './points/tone.ts';
 import { ShellSolids, type SolidLook, type SolidPlace } from './solids/shellSolids.ts';
 import { Stage } from './stage.ts';
 import type {
@@ -37,8 +33,10 @@ import type {
 
 const HOVER_REACH_PX = 9;
 const TRANSITION_MS = 520;
+/** So long after the last touch the picture counts as at rest. */
+const REST_MS = 140;
 /** Galaxies outside the chosen shell keep this part of their light. */
-const DIMMED = 0.22;
+const DIMMED = 0.3;
 
 const DARK: ConeTheme = {
   mode: 'dark',
@@ -66,9 +64,8 @@ export class ConeView {
   private readonly stage: Stage;
   private readonly gl: GlStage;
   private readonly model = new ConeModel();
-  private readonly galaxies: Galaxies;
+  private readonly painter: PointPainter;
   private readonly solids = new ShellSolids();
-  private webglPoints: WebglPoints | null = null;
   private readonly events: ConeEvents;
   private readonly stopListening: () => void;
   private theme: ConeTheme = DARK;
@@ -78,12 +75,17 @@ export class ConeView {
   private colours: readonly Triple[] = [];
   private colouring: ColouringInput = { kind: 'radius', map: 'harbour' };
   private stretch: Stretch = 'asinh';
-  private tone: { key: string; tone: Tone } | null = null;
   private picked: readonly number[] = [];
   private pairText = '';
   private hovered: number | null = null;
   private pointer: readonly [number, number] | null = null;
   private frameRequest = 0;
+  private restTimer = 0;
+  private drawing = false;
+  private again = false;
+  private drawnKey = '';
+  private lookVersion = 0;
+  private touchedAt = Number.NEGATIVE_INFINITY;
   private requestedAt = 0;
   private lastState = '';
   private disposed = false;
@@ -93,13 +95,13 @@ export class ConeView {
     this.events = events;
     this.stage = new Stage(container, () => this.resized());
     this.gl = new GlStage(this.stage.solids, (state) => this.drawingStateChanged(state));
-    this.galaxies = new Galaxies((what) => this.galaxiesChanged(what));
+    this.painter = new PointPainter(this.stage.points, this.gl, () => this.invalidate());
     this.stopListening = listen(this.stage.overlay, {
       orbit: (dx, dy) => this.orbitBy(dx, dy),
       pan: (dx, dy) => this.panBy(dx, dy),
       zoom: (factor, x, y) => this.zoomBy(factor, x, y),
       hover: (at) => this.hover(at),
-      click: (x, y, extend) => this.click(x, y, extend),
+      click: (x, y, extend) => void this.click(x, y, extend),
       settle: () => this.invalidate(),
     });
     this.resized();
@@ -109,32 +111,37 @@ export class ConeView {
   /** The galaxies; null for none. Large sets are taken in slices, and the old picture stays until they are ready. */
   setGalaxies(galaxies: GalaxyInput | null): void {
     this.hovered = null;
-    this.galaxies.setInput(galaxies);
+    this.painter.galaxies.setInput(galaxies);
     this.invalidate();
   }
 
   setColouring(colouring: ColouringInput): void {
     this.colouring = colouring;
-    this.galaxies.setColouring(colouring);
+    this.lookVersion++;
+    this.painter.galaxies.setColouring(colouring);
     this.invalidate();
   }
 
   setStretch(stretch: Stretch): void {
     this.stretch = stretch;
+    this.lookVersion++;
     this.invalidate();
   }
 
   /** The observed region; takes the view that fits it. */
   setFootprint(footprint: FootprintInput): void {
     this.change(0, () => this.model.setFootprint(footprint));
-    this.galaxies.setCentres(Float64Array.from(this.model.fields.flatMap((field) => [...field.centre])));
+    this.painter.galaxies.setCentres(
+      Float64Array.from(this.model.fields.flatMap((field) => [...field.centre])),
+    );
     if (this.gl.usable) this.solids.setMeshes(this.model.fields.map((field) => field.mesh));
   }
 
   setShells(shells: ShellsInput): void {
     if (shells.shells !== this.shells.shells) {
       this.colours = shellColours(shells.shells.length, this.theme.mode);
-      this.galaxies.setShells(shells.shells);
+      if (this.colouring.kind === 'shell') this.lookVersion++;
+      this.painter.galaxies.setShells(shells.shells);
     }
     this.shells = shells;
     this.invalidate();
@@ -150,13 +157,21 @@ export class ConeView {
   /** The part of the axis on screen and the strip's insets: side-on, the two axes agree to the pixel. */
   setAxisWindow(window: AxisWindow, insets: AxisInsets = this.insets): void {
     this.insets = insets;
+    this.touch();
     this.change(0, () => this.model.setAxis(window, insets));
   }
 
   setTheme(theme: ConeTheme): void {
     this.theme = theme;
+    this.lookVersion++;
     this.colours = shellColours(this.shells.shells.length, theme.mode);
     this.invalidate();
+  }
+
+  /** Software or WebGL for the points; 'auto' takes WebGL where a GPU stands behind it. */
+  setPointLayer(choice: LayerChoice): void {
+    this.drawnKey = '';
+    this.painter.choose(choice);
   }
 
   setView(view: ViewName): void {
@@ -185,16 +200,19 @@ export class ConeView {
   }
 
   orbitBy(dxPx: number, dyPx: number): void {
+    this.touch();
     this.model.orbit(dxPx, dyPx);
     this.invalidate();
   }
 
   panBy(dxPx: number, dyPx: number): void {
+    this.touch();
     this.tellWindow(this.model.pan(dxPx, dyPx));
   }
 
   /** Above 1 is nearer; the pixel stays where it is (the middle of the stage when none is given). */
   zoomBy(factor: number, xPx = this.stage.widthPx / 2, yPx = this.stage.heightPx / 2): void {
+    this.touch();
     this.tellWindow(this.model.zoom(factor, xPx, yPx));
   }
 
@@ -209,12 +227,16 @@ export class ConeView {
   dispose(): void {
     this.disposed = true;
     cancelAnimationFrame(this.frameRequest);
+    clearTimeout(this.restTimer);
     this.stopListening();
-    this.galaxies.dispose();
+    this.painter.dispose();
     this.solids.dispose();
-    this.webglPoints?.dispose();
     this.gl.dispose();
     this.stage.dispose();
+  }
+
+  private touch(): void {
+    this.touchedAt = performance.now();
   }
 
   private change(milliseconds: number, change: () => void): void {
@@ -234,28 +256,15 @@ export class ConeView {
   }
 
   private drawingStateChanged(state: DrawingState): void {
-    if (state.webgl === 'ready' && this.gl.renderer && !this.webglPoints) {
-      try {
-        this.webglPoints = new WebglPoints(this.gl.renderer);
-        this.webglPoints.setStore(this.galaxies.store);
-      } catch {
-        this.webglPoints = null;
-      }
-    }
+    if (state.webgl === 'ready') this.solids.setMeshes(this.model.fields.map((field) => field.mesh));
+    this.painter.takeGl();
     this.events.onDrawingState?.(state);
     this.invalidate();
   }
 
-  private galaxiesChanged(what: GalaxiesChange): void {
-    if (this.disposed) return;
-    if (what === 'store') this.webglPoints?.setStore(this.galaxies.store);
-    if (what === 'values') this.webglPoints?.valuesChanged();
-    if (what === 'radii') this.webglPoints?.radiiChanged();
-    this.invalidate();
-  }
-
   private invalidate(): void {
-    if (this.frameRequest !== 0 || this.disposed) return;
+    if (this.drawing) this.again = true;
+    if (this.frameRequest !== 0 || this.drawing || this.disposed) return;
     this.requestedAt = performance.now();
     this.frameRequest = requestAnimationFrame(() => {
       this.frameRequest = 0;
@@ -271,27 +280,84 @@ export class ConeView {
   }
 
   private draw(): void {
+    // One picture at a time: what is asked meanwhile comes right after it.
+    if (this.drawing) {
+      this.again = true;
+      return;
+    }
     const now = performance.now();
     const frame = this.frame(now);
-    const moving = this.model.moving(now);
-    this.galaxies.setTable(frame.shown.table, moving);
-    this.drawPoints(frame);
+    const animated = this.model.moving(now);
+    this.painter.galaxies.setTable(frame.shown.table, animated);
+    const moving = animated || now - this.touchedAt < REST_MS;
+    const points = this.pointFrame(frame, moving);
+    const key = this.pointKey(points);
+    const software = this.painter.layer === 'software';
+    if (software && key === this.drawnKey) {
+      this.finish(frame, points, animated);
+      return;
+    }
+    this.again = false;
+    this.drawing = true;
+    if (!software) this.prepareGl(points);
+    this.painter
+      .draw(points, () => this.again)
+      .then(
+        (shown) => {
+          this.drawing = false;
+          if (this.disposed) return;
+          if (shown) {
+            this.drawnKey = key;
+            this.finish(frame, points, animated);
+          }
+          if (this.again) this.invalidate();
+        },
+        () => {
+          // Workers that ended are replaced by the painter, which asks for a new picture.
+          this.drawing = false;
+          this.drawnKey = '';
+        },
+      );
+  }
+
+  /** Solids, lines and labels over the points just shown, for the same moment. */
+  private finish(frame: Frame, points: PointFrame, animated: boolean): void {
     this.drawSolids(frame);
     this.drawOverlay(frame);
     this.tellState();
-    const total = this.galaxies.store?.count ?? 0;
+    const total = this.painter.galaxies.store?.count ?? 0;
+    const whole = points.fraction === 1 && points.pixelRatio === this.stage.pixelRatio;
     this.events.onFrame?.({
-      drawn: total,
+      drawn: Math.round(points.parts.reduce((sum, part) => sum + part.range.count, 0) * points.fraction),
       total,
       milliseconds: performance.now() - this.requestedAt,
-      layer: this.webglPoints && this.gl.usable ? 'webgl' : 'none',
-      atRest: !moving,
+      layer: this.painter.layer,
+      atRest: !animated && whole,
     });
-    if (moving) this.invalidate();
+    clearTimeout(this.restTimer);
+    if (animated) this.invalidate();
+    else if (!whole) this.restTimer = window.setTimeout(() => this.invalidate(), REST_MS);
+  }
+
+  /** Pictures of the points with the same key are the same. */
+  private pointKey(points: PointFrame): string {
+    const { viewport, pixelRatio, fraction, sizePx, emphasis, tone, parts } = points;
+    const size = [viewport.widthPx, viewport.heightPx, pixelRatio, fraction, sizePx, tone.full];
+    const look = [this.painter.version, this.lookVersion, emphasis?.min, emphasis?.max];
+    return [...size, ...look, ...parts.flatMap((part) => [part.range.start, ...part.matrix])].join(' ');
+  }
+
+  private prepareGl(points: PointFrame): void {
+    const { renderer } = this.gl;
+    if (!renderer || !this.gl.usable) return;
+    this.sizeRenderer();
+    const [r, g, b] = points.tone.background;
+    renderer.setClearColor(new Color(r / 255, g / 255, b / 255), 1);
+    renderer.clear();
   }
 
   private parts(frame: Frame): PointPart[] {
-    const { store } = this.galaxies;
+    const { store } = this.painter.galaxies;
     if (!store) return [];
     if (this.model.fields.length === 0 && store.ranges[0]) {
       return [{ matrix: frame.pixels, range: store.ranges[0] }];
@@ -302,11 +368,11 @@ export class ConeView {
     });
   }
 
-  private emphasis(): Emphasis | null {
+  private emphasis(frame: Frame): Emphasis | null {
     const { shells, selected } = this.shells;
     const shell = selected === null ? undefined : shells[selected];
     if (!shell) return null;
-    const { table } = this.model.shown(performance.now());
+    const { table } = frame.shown;
     return {
       min: radiusAt(table, shell.comovingMinMpc),
       max: radiusAt(table, shell.comovingMaxMpc),
@@ -314,55 +380,16 @@ export class ConeView {
     };
   }
 
-  private drawPoints(frame: Frame): void {
-    const { renderer } = this.gl;
-    if (!renderer || !this.gl.usable) return;
-    this.sizeRenderer();
-    if (!this.webglPoints) {
-      renderer.clear();
-      return;
-    }
-    this.webglPoints.draw(this.pointFrame(frame));
-  }
-
-  private pointFrame(frame: Frame): PointFrame {
-    const parts = this.parts(frame);
-    const { store, ready } = this.galaxies;
-    const crowd = store ? crowding(store.arrays, parts, this.stage) : { onStage: 0, densestPerPixel: 0 };
-    const sizePx = pointSizePx(crowd.onStage, this.stage);
-    const ratio = this.stage.pixelRatio;
-    const sum = (crowd.densestPerPixel / ratio ** 2) * discLight(sizePx * ratio);
-    return {
-      viewport: this.stage,
-      pixelRatio: ratio,
-      parts,
-      fraction: ready,
-      emphasis: this.emphasis(),
-      sizePx,
-      tone: this.toneFor(Math.max(1.6, sum)),
+  private pointFrame(frame: Frame, moving: boolean): PointFrame {
+    const look = {
+      theme: this.theme,
+      colouring: this.colouring,
+      shellCount: this.shells.shells.length,
+      stretch: this.stretch,
     };
-  }
-
-  /** A tone is kept while nothing of it changes, so that its table need not be made anew. */
-  private toneFor(full: number): Tone {
-    // Sixths of an octave: too small a step to be seen.
-    const rounded = 2 ** (Math.round(6 * Math.log2(full)) / 6);
-    const { theme, colouring, stretch } = this;
-    const shellCount = this.shells.shells.length;
-    const map =
-      colouring.kind === 'shell' ? `shells ${shellCount}` : `${colouring.map} ${colouring.reversed}`;
-    const key = [theme.mode, theme.background, map, stretch, rounded].join(' ');
-    if (this.tone?.key === key) return this.tone.tone;
-    const tone: Tone = {
-      background: parseCssColour(theme.background),
-      colours: palette(colouring, shellCount, theme.mode),
-      stretch,
-      full: rounded,
-      single: 1,
-      glow: theme.mode === 'dark' ? [255, 250, 240] : [12, 16, 40],
-    };
-    this.tone = { key, tone };
-    return tone;
+    const { widthPx, heightPx, pixelRatio } = this.stage;
+    const viewport = { widthPx, heightPx };
+    return this.painter.frame(this.parts(frame), viewport, pixelRatio, look, this.emphasis(frame), moving);
   }
 
   private sizeRenderer(): void {
@@ -379,6 +406,11 @@ export class ConeView {
   private drawSolids(frame: Frame): void {
     const { renderer } = this.gl;
     if (!renderer || !this.gl.usable) return;
+    if (this.painter.layer !== 'webgl') {
+      this.sizeRenderer();
+      renderer.setClearColor(0x000000, 0);
+      renderer.clear();
+    }
     const places: SolidPlace[] = frame.lanes.map((lane, i) => ({
       field: lane.field,
       pixels: frame.laneMatrices[i]!,
@@ -390,13 +422,15 @@ export class ConeView {
   private solidLooks(shown: Shown): SolidLook[] {
     const { shells, selected, hovered } = this.shells;
     const dark = this.theme.mode === 'dark';
+    // Spheres in spheres: every line of sight crosses all of them.
+    const wholeSky = this.model.fields.every((field) => field.rings.length === 0);
     return shells.map((shell, i) => {
       const strength = i === selected ? 2.2 : i === hovered ? 1.7 : selected === null ? 1 : 0.7;
       return {
         inner: radiusAt(shown.table, shell.comovingMinMpc),
         outer: radiusAt(shown.table, shell.comovingMaxMpc),
         colour: this.colours[i]!,
-        alpha: (dark ? 0.045 : 0.06) * strength,
+        alpha: (dark ? 0.045 : 0.06) * strength * (wholeSky ? 0.3 : 1),
       };
     });
   }
@@ -410,15 +444,19 @@ export class ConeView {
     context.clearRect(0, 0, widthPx, heightPx);
     if (!this.scale) return;
     const pen = new Pen(context, this.theme, widthPx, heightPx);
+    const { fields } = this.model;
     paintOverlay(pen, {
       view: this.model.view,
       reading: this.model.reading,
+      aligned: this.model.aligned,
       pixels: frame.pixels,
       unitsPerPixel: frame.shown.pose.unitsPerPixel,
       perspective: frame.shown.pose.perspective > 0,
-      lanes: frame.lanes,
-      fields: this.model.fields,
-      wide: this.model.wide,
+      lanes: frame.lanes.map((lane, i) => ({
+        ...lane,
+        matrix: frame.laneMatrices[i]!,
+        shape: fields[lane.field]!,
+      })),
       scale: this.scale,
       radius: (mpc) => radiusAt(frame.shown.table, mpc),
       farMpc: this.model.farMpc,
@@ -434,7 +472,7 @@ export class ConeView {
   }
 
   private pixelOf(row: number, frame: Frame): Point | null {
-    const place = this.galaxies.place(row);
+    const place = this.painter.galaxies.place(row);
     if (!place) return null;
     const nth = frame.lanes.findIndex((lane) => lane.field === place.field);
     const matrix = frame.laneMatrices[nth] ?? (this.model.fields.length === 0 ? frame.pixels : undefined);
@@ -458,16 +496,21 @@ export class ConeView {
       this.events.onHoverShell?.(null);
       return;
     }
-    // One search a frame, at the latest place.
+    // One search at a time, at the latest place.
     if (waiting) return;
-    requestAnimationFrame(() => {
-      const place = this.pointer;
-      this.pointer = null;
-      if (!place || this.disposed) return;
-      const hit = this.galaxyAt(place[0], place[1]);
-      this.tellHover(hit);
-      this.events.onHoverShell?.(hit ? null : this.shellAt(place[0], place[1]));
-    });
+    requestAnimationFrame(() => void this.searchHover());
+  }
+
+  private async searchHover(): Promise<void> {
+    const place = this.pointer;
+    if (!place || this.disposed) return;
+    const hit = await this.galaxyAt(place[0], place[1]);
+    const latest = this.pointer;
+    this.pointer = null;
+    if (!latest || this.disposed) return;
+    this.tellHover(hit);
+    this.events.onHoverShell?.(hit ? null : this.shellAt(place[0], place[1]));
+    if (latest !== place) this.hover(latest);
   }
 
   private tellHover(hit: GalaxyHit | null): void {
@@ -478,8 +521,9 @@ export class ConeView {
     this.invalidate();
   }
 
-  private click(xPx: number, yPx: number, extend: boolean): void {
-    const hit = this.galaxyAt(xPx, yPx);
+  private async click(xPx: number, yPx: number, extend: boolean): Promise<void> {
+    const hit = await this.galaxyAt(xPx, yPx);
+    if (this.disposed) return;
     if (hit) {
       this.events.onPick?.(hit, extend);
       return;
@@ -489,15 +533,13 @@ export class ConeView {
     if (shell === null) this.events.onPick?.(null, extend);
   }
 
-  private galaxyAt(xPx: number, yPx: number): GalaxyHit | null {
-    const { store } = this.galaxies;
-    if (!store) return null;
-    let best: PointHit | null = null;
-    for (const { matrix, range } of this.parts(this.frame(performance.now()))) {
-      const end = range.start + range.count;
-      best = pickPoint(store.arrays, matrix, range.start, end, xPx, yPx, HOVER_REACH_PX, best);
-    }
-    return best ? { index: store.rows[best.slot]!, xPx: best.xPx, yPx: best.yPx } : null;
+  /** The galaxy drawn nearest to a pixel of the stage, within reach of a pointer. */
+  async galaxyAt(xPx: number, yPx: number): Promise<GalaxyHit | null> {
+    const { store } = this.painter.galaxies;
+    const parts = this.parts(this.frame(performance.now()));
+    const best = await this.painter.pick(parts, xPx, yPx, HOVER_REACH_PX).catch(() => null);
+    if (!best || !store || store !== this.painter.galaxies.store) return null;
+    return { index: store.rows[best.slot]!, xPx: best.xPx, yPx: best.yPx };
   }
 
   private shellAt(xPx: number, yPx: number): number | null {

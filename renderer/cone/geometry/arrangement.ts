@@ -32,12 +32,12 @@ export function niceFactor(x: number): number {
 
 /**
  * The sideways factor to offer for a cone that would be `naturalPx` high at true scale where there is room for
- * `availablePx`: 1 where it fills between two fifths and all of the room, else the easily said factor that fills it.
+ * `availablePx`: 1 where that fits and filling the room would take no more than `slack`, else the easily said factor that fills it.
  */
-export function proposeSidewaysFactor(naturalPx: number, availablePx: number): number {
+export function proposeSidewaysFactor(naturalPx: number, availablePx: number, slack = 2.5): number {
   if (!(naturalPx > 0) || !(availablePx > 0)) return 1;
   const fit = availablePx / naturalPx;
-  if (fit >= 1 && fit <= 2.5) return 1;
+  if (fit >= 1 && fit <= slack) return 1;
   return niceFactor(Math.min(fit, 1000));
 }
 
@@ -52,10 +52,10 @@ export function fittingView(fieldCount: number, wide: boolean): ViewName {
 
 /**
  * Heights of parallel lanes in pixels: each field gets what it needs at true scale when there is room; narrow ones
- * get at least an equal share of a third of the room so that they can be opened, wide ones share the rest by need.
+ * get at least an equal share of half the room so that they can be opened, wide ones share the rest by need.
  */
 export function laneHeights(naturalPx: readonly number[], availablePx: number): number[] {
-  const least = Math.min(availablePx / naturalPx.length, Math.max(56, availablePx / (3 * naturalPx.length)));
+  const least = Math.min(availablePx / naturalPx.length, Math.max(60, availablePx / (2 * naturalPx.length)));
   const wanted = naturalPx.map((h) => Math.max(h, least));
   const total = wanted.reduce((sum, h) => sum + h, 0);
   if (total <= availablePx) {
@@ -68,9 +68,10 @@ export function laneHeights(naturalPx: readonly number[], availablePx: number): 
   return above.map((h) => least + (aboveTotal > 0 ? (h * room) / aboveTotal : 0));
 }
 
-/** The frame in which all fields are shown in their true directions. */
-export function commonFrame(fields: readonly ArrangedField[], wide: boolean): Frame {
-  return !wide && fields.length === 1 ? fields[0]!.frame : SKY_FRAME;
+/** The frame in which all fields are shown in their true directions: a single field's own, else that of the sky. */
+export function commonFrame(fields: readonly ArrangedField[]): Frame {
+  const only = fields.length === 1 ? fields[0]! : undefined;
+  return only && only.extent.alongMax > only.extent.alongMin ? only.frame : SKY_FRAME;
 }
 
 /** How high above and below its axis a cone of far radius `far` reaches in display space. */
@@ -118,8 +119,8 @@ export function lanes(
     });
   }
   if (view === 'whole' || view === 'aroundTheObserver') {
-    const frame = commonFrame(fields, wide);
-    const factor = frame === SKY_FRAME ? 1 : factors[0]!;
+    const frame = commonFrame(fields);
+    const factor = frame === SKY_FRAME || wide ? 1 : factors[0]!;
     return fields.map((_, i) => lane(i, frame, factor, 0));
   }
   const field = fields[current];

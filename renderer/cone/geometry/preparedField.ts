@@ -18,6 +18,8 @@ export interface PreparedField {
   /** Upper and lower edge of the cone seen side-on, in the plane of the long axis. */
   readonly upper: Vec3;
   readonly lower: Vec3;
+  /** North on the sky, in the display space of the field's frame. */
+  readonly north: Vec3;
 }
 
 /** Turns sharper than this are corners. */
@@ -44,7 +46,14 @@ export function prepareField(field: FieldInput): PreparedField {
     corners: corners.length >= 3 && corners.length <= MOST_CORNERS ? corners : extremes(frame, all),
     upper: inPlane(high),
     lower: inPlane(low),
+    north: northIn(field.positionAngleDeg),
   };
+}
+
+/** The long axis stands at the position angle from north, so north stands at minus that angle from it. */
+function northIn(positionAngleDeg: number): Vec3 {
+  const angle = (positionAngleDeg * Math.PI) / 180;
+  return [0, Math.cos(angle), Math.sin(angle)];
 }
 
 /** Least and greatest angle from the line of sight along the long axis. */

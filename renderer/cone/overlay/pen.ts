@@ -66,6 +66,30 @@ export class Pen {
     const box = { x: x - width / 2, y: y - size * 0.62, width, height: size * 1.24 };
     if (options.must) this.labels.reserve(box);
     else if (!this.labels.place(box, options.gap)) return false;
+    this.write(text, x, y, colour);
+    return true;
+  }
+
+  ring(p: Point, radiusPx: number, colour: string, widthPx: number): void {
+    const { context } = this;
+    context.beginPath();
+    context.arc(p[0], p[1], radiusPx, 0, 2 * Math.PI);
+    context.strokeStyle = colour;
+    context.lineWidth = widthPx;
+    context.stroke();
+  }
+
+  disc(p: Point, radiusPx: number, colour: string): void {
+    const { context } = this;
+    context.beginPath();
+    context.arc(p[0], p[1], radiusPx, 0, 2 * Math.PI);
+    context.fillStyle = colour;
+    context.fill();
+  }
+
+  /** Writes at the point with the halo, in the font that is set. */
+  write(text: string, x: number, y: number, colour: string): void {
+    const { context } = this;
     context.textAlign = 'center';
     context.textBaseline = 'middle';
     context.strokeStyle = this.theme.background;
@@ -76,7 +100,6 @@ export class Pen {
     context.globalAlpha = 1;
     context.fillStyle = colour;
     context.fillText(text, x, y);
-    return true;
   }
 
   /** Width of a text in the size of labels. */

@@ -52,7 +52,7 @@ export function drawRuler(pen: Pen, ruler: Ruler): void {
     if (tick.text === '') continue;
     const half = (Math.abs(normal[0]) * pen.measure(tick.text)) / 2 + Math.abs(normal[1]) * 6.5;
     const out = 9 + half;
-    pen.text(tick.text, p![0] + normal[0] * out, p![1] + normal[1] * out, pen.theme.inkMuted, { gap: 6 });
+    pen.text(tick.text, p![0] + normal[0] * out, p![1] + normal[1] * out, pen.theme.inkMuted, { gap: 4 });
   }
 }
 
@@ -66,10 +66,11 @@ function drawTitle(
   normal: Point,
   length: number,
 ): void {
+  if (ruler.title === '') return;
   const sizePx = 11;
   const width = pen.measure(ruler.title, sizePx);
   if (length < width + 60) return;
-  const out = 34;
+  const out = 38;
   for (const share of [0.62, 0.5, 0.75, 0.4, 0.86, 0.3]) {
     const x = start[0] + (end[0] - start[0]) * share + normal[0] * out;
     const y = start[1] + (end[1] - start[1]) * share + normal[1] * out;
@@ -88,10 +89,7 @@ function drawTitle(
     context.translate(x, y);
     context.rotate(angle);
     pen.font(sizePx);
-    context.textAlign = 'center';
-    context.textBaseline = 'middle';
-    context.fillStyle = pen.theme.inkMuted;
-    context.fillText(ruler.title, 0, 0);
+    pen.write(ruler.title, 0, 0, pen.theme.inkMuted);
     context.restore();
     return;
   }

@@ -14,9 +14,10 @@ export function roundLengthMpc(mpcPerPixel: number, unitMpc: number): number {
   return nice * power * unitMpc;
 }
 
-/** The bar at the lower left, with its length above it. */
+/** The bar at the left at a height of the stage, with its length above it. */
 export function drawScaleBar(
   pen: Pen,
+  yPx: number,
   mpcPerPixel: number,
   unitMpc: number,
   format: (mpc: number) => string,
@@ -25,7 +26,7 @@ export function drawScaleBar(
   const widthPx = mpc / mpcPerPixel;
   if (!(widthPx > 20) || widthPx > pen.width / 2) return;
   const x = 20.5;
-  const y = Math.round(pen.height - 20) + 0.5;
+  const y = Math.round(yPx) + 0.5;
   const text = format(mpc);
   const textWidth = pen.measure(text);
   const box = { x: x - 4, y: y - 22, width: Math.max(widthPx, textWidth) + 8, height: 30 };

@@ -99,6 +99,11 @@ export class Galaxies {
     return { x, y, z, comovingMpc: input.comovingMpc[row]!, field };
   }
 
+  /** Lays the points out anew in fresh memory. */
+  relay(): void {
+    if (this.input) this.rebuild();
+  }
+
   dispose(): void {
     this.building?.abort();
     this.colourJob?.abort();

@@ -2,7 +2,7 @@
 const BUDGET_MS = 6;
 
 /** A new task of the page, so that input and drawing come in between. */
-const nextTask = (): Promise<void> =>
+export const nextTask = (): Promise<void> =>
   new Promise((resolve) => {
     const { port1, port2 } = new MessageChannel();
     port1.onmessage = () => {

@@ -68,25 +68,25 @@ export function strength(light: number, stretch: Stretch, single: number, full: 
  */
 export function toneTable(tone: Tone): Uint32Array<ArrayBuffer> {
   const table = new Uint32Array(VALUE_STEPS * LIGHT_STEPS);
-  const cover = new Float64Array(LIGHT_STEPS);
-  const burn = new Float64Array(LIGHT_STEPS);
-  for (let i = 1; i < LIGHT_STEPS; i++) {
-    const light = lightOfIndex(i);
-    cover[i] = strength(light, tone.stretch, tone.single, tone.full);
-    // Above a third of full strength the colour itself begins to glow.
-    burn[i] = Math.max(0, cover[i]! - 0.62) / 0.38;
+  // A pixel is fixed + own * share: what does not depend on the colour is worked out once for each step of light.
+  const share = new Float64Array(LIGHT_STEPS);
+  const fixed = [0, 1, 2].map(() => new Float64Array(LIGHT_STEPS));
+  for (let i = 0; i < LIGHT_STEPS; i++) {
+    const cover = i === 0 ? 0 : strength(lightOfIndex(i), tone.stretch, tone.single, tone.full);
+    // Toward full strength the colour itself begins to glow.
+    const burn = (0.75 * Math.max(0, cover - 0.62)) / 0.38;
+    share[i] = cover * (1 - burn);
+    for (let k = 0; k < 3; k++) {
+      fixed[k]![i] = tone.background[k]! * (1 - cover) + cover * burn * tone.glow[k]! + 0.5;
+    }
   }
-  for (let v = 0; v < VALUE_STEPS; v++) {
-    const at = 3 * Math.round((255 * v) / (VALUE_STEPS - 1));
-    for (let i = 0; i < LIGHT_STEPS; i++) {
-      let pixel = 0xff000000;
-      for (let k = 0; k < 3; k++) {
-        const own = tone.colours[at + k]!;
-        const colour = own + 0.75 * burn[i]! * (tone.glow[k]! - own);
-        const mixed = tone.background[k]! + cover[i]! * (colour - tone.background[k]!);
-        pixel |= Math.round(mixed) << (8 * k);
-      }
-      table[v * LIGHT_STEPS + i] = pixel >>> 0;
+  const [reds, greens, blues] = fixed as [Float64Array, Float64Array, Float64Array];
+  for (let v = 0, at = 0; v < VALUE_STEPS; v++) {
+    const colour = 3 * Math.round((255 * v) / (VALUE_STEPS - 1));
+    const [r, g, b] = [tone.colours[colour]!, tone.colours[colour + 1]!, tone.colours[colour + 2]!];
+    for (let i = 0; i < LIGHT_STEPS; i++, at++) {
+      const s = share[i]!;
+      table[at] = 0xff000000 | ((blues[i]! + s * b) << 16) | ((greens[i]! + s * g) << 8) | (reds[i]! + s * r);
     }
   }
   return table;

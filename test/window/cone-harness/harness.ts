@@ -135,6 +135,7 @@ const cone = new ConeView(stage, {
   onHover: (hit) => console.log(JSON.stringify({ hover: hit })),
   onPickShell: (index) => cone.setShells({ ...shells, selected: index }),
 });
+if (query.has('layer')) cone.setPointLayer(text('layer', 'auto') as 'auto');
 cone.setTheme(THEMES[text('theme', 'dark')]!);
 cone.setAxisWindow({ min: 0, max: 1 }, { leftPx: 56, rightPx: 28 });
 const scale = makeScale(reading);

@@ -1,0 +1,195 @@
+import { type PointHit, pickPoint } from '../geometry/pickPoint.ts';
+import type { Viewport } from '../geometry/projection.ts';
+import type { GlStage } from '../glStage.ts';
+import type { ColouringInput, ConeTheme } from '../types.ts';
+import { crowding, discLight, pointSizePx } from './exposure.ts';
+import { Galaxies, type GalaxiesChange } from './galaxies.ts';
+import type { Emphasis, PointFrame, PointPart } from './pointLayer.ts';
+import { RESERVED_BYTES } from './software/messages.ts';
+import { SoftwarePoints } from './software/softwarePoints.ts';
+import { SplatPool } from './software/splatPool.ts';
+import type { Stretch } from './tone.ts';
+import { ToneSource } from './toneSource.ts';
+import { WebglPoints } from './webglPoints.ts';
+
+/** How points are drawn: as the machine suggests, or as one says. */
+export type LayerChoice = 'auto' | 'software' | 'webgl';
+
+/** Up to so many galaxies a search on the page is quicker than asking the workers. */
+const PICK_ON_PAGE = 200_000;
+/** Time for the points of one picture while it moves. */
+const MOVING_BUDGET_MS = 13;
+/** Workers that end are started again so often. */
+const MOST_RESTARTS = 2;
+
+/** Look of the points that does not depend on the view. */
+export interface PointLook {
+  readonly theme: ConeTheme;
+  readonly colouring: ColouringInput;
+  readonly shellCount: number;
+  readonly stretch: Stretch;
+}
+
+/** The galaxies and the layer that draws them. */
+export class PointPainter {
+  readonly galaxies: Galaxies;
+  /** Rises whenever the points change, so that an unchanged picture need not be drawn again. */
+  version = 0;
+  private readonly canvas: HTMLCanvasElement;
+  private readonly gl: GlStage;
+  private readonly changed: () => void;
+  private readonly tones = new ToneSource();
+  private choice: LayerChoice = 'auto';
+  private pool: SplatPool | null = null;
+  private software: SoftwarePoints | null = null;
+  private webgl: WebglPoints | null = null;
+  private restarts = 0;
+
+  constructor(canvas: HTMLCanvasElement, gl: GlStage, changed: () => void) {
+    this.canvas = canvas;
+    this.gl = gl;
+    this.changed = changed;
+    this.startPool();
+    this.galaxies = new Galaxies((what) => this.galaxiesChanged(what), {
+      base: RESERVED_BYTES,
+      allocate: (layout) => this.pool?.allocate(layout) ?? new ArrayBuffer(layout.end),
+    });
+    this.takeGl();
+  }
+
+  get layer(): 'software' | 'webgl' | 'none' {
+    const state = this.gl.state;
+    const hardware = state.webgl === 'ready' && !state.software;
+    const wanted = this.choice === 'auto' ? (hardware ? 'webgl' : 'software') : this.choice;
+    if (wanted === 'webgl' && this.gl.usable && this.webgl) return 'webgl';
+    if (this.software) return 'software';
+    return this.gl.usable && this.webgl ? 'webgl' : 'none';
+  }
+
+  choose(choice: LayerChoice): void {
+    this.choice = choice;
+    this.version++;
+    this.changed();
+  }
+
+  /** WebGL came, went or came back. */
+  takeGl(): void {
+    if (this.gl.usable && this.gl.renderer && !this.webgl) {
+      try {
+        this.webgl = new WebglPoints(this.gl.renderer);
+        this.webgl.setStore(this.galaxies.store);
+      } catch {
+        // No float target to sum light in: the software layer draws the points.
+        this.webgl = null;
+      }
+    }
+    this.version++;
+  }
+
+  /** The picture to draw: as many points as there is time for, all of them at rest. */
+  frame(
+    parts: readonly PointPart[],
+    viewport: Viewport,
+    ratio: number,
+    look: PointLook,
+    emphasis: Emphasis | null,
+    moving: boolean,
+  ): PointFrame {
+    const { store, ready } = this.galaxies;
+    const crowd = store ? crowding(store.arrays, parts, viewport) : { onStage: 0, densestPerPixel: 0 };
+    const sizePx = pointSizePx(crowd.onStage, viewport);
+    // Large sets move at one pixel a CSS pixel: sharper is for rest.
+    const many = crowd.onStage > 400_000;
+    const pixelRatio = moving && many && this.layer === 'software' ? Math.min(1, ratio) : ratio;
+    const light = (crowd.densestPerPixel / pixelRatio ** 2) * discLight(sizePx * pixelRatio);
+    const tone = this.tones.tone(
+      look.theme,
+      look.colouring,
+      look.shellCount,
+      look.stretch,
+      Math.max(1.6, light),
+    );
+    const frame: PointFrame = { viewport, pixelRatio, parts, fraction: ready, emphasis, sizePx, tone };
+    if (!moving || this.layer !== 'software' || !this.software) return frame;
+    const total = parts.reduce((sum, part) => sum + part.range.count, 0);
+    const affordable = this.software.affordable(MOVING_BUDGET_MS, frame);
+    // A little over is better than a second picture at rest.
+    return total <= 1.4 * affordable ? frame : { ...frame, fraction: Math.min(ready, affordable / total) };
+  }
+
+  /** Draws by the layer in use; false when it was stopped and the old picture stands. */
+  async draw(frame: PointFrame, stop: () => boolean): Promise<boolean> {
+    if (this.layer === 'webgl') {
+      this.webgl!.draw(frame);
+      return true;
+    }
+    return this.software ? this.software.draw(frame, stop) : true;
+  }
+
+  async pick(
+    parts: readonly PointPart[],
+    xPx: number,
+    yPx: number,
+    reachPx: number,
+  ): Promise<PointHit | null> {
+    const { store } = this.galaxies;
+    if (!store) return null;
+    const total = parts.reduce((sum, part) => sum + part.range.count, 0);
+    if (total > PICK_ON_PAGE && this.pool && this.software) {
+      const runs = parts.map(({ matrix, range }) => ({
+        from: range.start,
+        to: range.start + range.count,
+        matrix: Float32Array.from(matrix),
+        light: 1,
+      }));
+      return this.pool.pick(runs, xPx, yPx, reachPx);
+    }
+    let best: PointHit | null = null;
+    for (const { matrix, range } of parts) {
+      const end = range.start + range.count;
+      best = pickPoint(store.arrays, matrix, range.start, end, xPx, yPx, reachPx, best);
+    }
+    return best;
+  }
+
+  dispose(): void {
+    this.galaxies.dispose();
+    this.software?.dispose();
+    this.webgl?.dispose();
+    this.pool?.dispose();
+  }
+
+  private startPool(): void {
+    try {
+      this.pool = new SplatPool(() => this.poolFailed());
+      this.software = new SoftwarePoints(this.canvas, this.pool);
+    } catch {
+      // A host without module workers: WebGL draws the points.
+      this.pool = null;
+      this.software = null;
+    }
+  }
+
+  private poolFailed(): void {
+    this.software?.dispose();
+    this.pool?.dispose();
+    this.pool = null;
+    this.software = null;
+    if (this.restarts++ < MOST_RESTARTS) this.startPool();
+    // The new workers do not know the memory: the points are laid out again.
+    this.galaxies.relay();
+    this.version++;
+    this.changed();
+  }
+
+  private galaxiesChanged(what: GalaxiesChange): void {
+    this.version++;
+    const { store } = this.galaxies;
+    for (const layer of [this.software, this.webgl]) {
+      if (what === 'store') layer?.setStore(store);
+      else if (what === 'values') layer?.valuesChanged();
+      else layer?.radiiChanged();
+    }
+    this.changed();
+  }
+}

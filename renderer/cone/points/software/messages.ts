@@ -1,0 +1,80 @@
+import type { PointLayout } from '../pointArrays.ts';
+
+/** Bytes at the start of the points' memory that belong to the kernels: scratch for each worker. */
+export const RESERVED_BYTES = 262144;
+
+/** A run of slots to be splatted with one matrix; start is a multiple of four. */
+export interface Run {
+  readonly from: number;
+  readonly to: number;
+  readonly matrix: Float32Array;
+  readonly light: number;
+}
+
+/** What the page says to a splat worker. Every message with an id is answered by one with the same id. */
+export type ToWorker =
+  /** Shared memory with the points in it; the worker's scratch begins at scratchAt. */
+  | {
+      readonly kind: 'shared';
+      readonly id: number;
+      readonly memory: WebAssembly.Memory;
+      readonly layout: PointLayout;
+      readonly scratchAt: number;
+      readonly wide: boolean;
+    }
+  /** No shared memory: the worker makes its own for so many slots. */
+  | { readonly kind: 'own'; readonly id: number; readonly slots: number; readonly wide: boolean }
+  /** Points for the worker's own memory, slots from `at`; an array that is absent stays as it is. */
+  | {
+      readonly kind: 'fill';
+      readonly id: number;
+      readonly at: number;
+      readonly x?: Float32Array;
+      readonly y?: Float32Array;
+      readonly z?: Float32Array;
+      readonly radius?: Float32Array;
+      readonly value?: Uint8Array;
+    }
+  | {
+      readonly kind: 'splat';
+      readonly id: number;
+      readonly runs: readonly Run[];
+      readonly width: number;
+      readonly height: number;
+      readonly diameter: number;
+      readonly emphasis: readonly [min: number, max: number, dim: number];
+      /** Byte offset of this worker's sums; the worker's own choice when it has its own memory. */
+      readonly sumsAt: number;
+      /** Begin anew rather than add to what is there. */
+      readonly clear: boolean;
+    }
+  | {
+      readonly kind: 'tone';
+      readonly id: number;
+      readonly width: number;
+      readonly rows: readonly [from: number, to: number];
+      readonly height: number;
+      readonly sumsAt: readonly number[];
+      readonly imageAt: number;
+      /** Only when it changed. */
+      readonly table: Uint32Array | null;
+    }
+  | {
+      readonly kind: 'pick';
+      readonly id: number;
+      readonly runs: readonly Run[];
+      readonly xPx: number;
+      readonly yPx: number;
+      readonly reachPx: number;
+    };
+
+export type FromWorker =
+  | { readonly kind: 'done'; readonly id: number; readonly wide?: boolean }
+  /** The finished picture, from a worker with its own memory. */
+  | { readonly kind: 'image'; readonly id: number; readonly image: Uint32Array<ArrayBuffer> }
+  | {
+      readonly kind: 'hit';
+      readonly id: number;
+      readonly hit: { slot: number; distance2: number; xPx: number; yPx: number } | null;
+    }
+  | { readonly kind: 'failed'; readonly id: number; readonly reason: string };

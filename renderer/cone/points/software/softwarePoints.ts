@@ -1,0 +1,143 @@
+import type { PointFrame, PointLayer } from '../pointLayer.ts';
+import type { PointStore } from '../pointStore.ts';
+import { type Tone, toneTable } from '../tone.ts';
+import type { Run } from './messages.ts';
+import type { SplatPicture, SplatPool } from './splatPool.ts';
+
+/** A step of a large picture takes about so long, so that input is answered in between. */
+const STEP_MS = 22;
+/** First guesses of the cost of a million points, in milliseconds; measured from the first picture on. */
+const FIRST_COST = { pixel: 12, disc: 60 };
+
+/**
+ * Points without a GPU: workers sum light into buffers, a table turns it into colours, and the picture is put into a 2D
+ * canvas under everything else. The old picture stays until the new one is whole.
+ */
+export class SoftwarePoints implements PointLayer {
+  readonly kind = 'software';
+  private readonly canvas: HTMLCanvasElement;
+  private readonly context: CanvasRenderingContext2D;
+  private readonly pool: SplatPool;
+  private store: PointStore | null = null;
+  private ready: Promise<void> = Promise.resolve();
+  private table: { tone: Tone; words: Uint32Array } | null = null;
+  private readonly cost = { ...FIRST_COST };
+
+  constructor(canvas: HTMLCanvasElement, pool: SplatPool) {
+    const context = canvas.getContext('2d', { alpha: false, willReadFrequently: true });
+    if (!context) throw new Error('no 2D canvas');
+    this.canvas = canvas;
+    this.context = context;
+    this.pool = pool;
+  }
+
+  setStore(store: PointStore | null): void {
+    this.store = store;
+    if (store) this.wait(this.pool.setStore(store, true));
+  }
+
+  valuesChanged(): void {
+    this.resend('value');
+  }
+
+  radiiChanged(): void {
+    this.resend('radius');
+  }
+
+  /** Points that can be drawn in so many milliseconds. */
+  affordable(milliseconds: number, frame: PointFrame): number {
+    return (1e6 * milliseconds) / this.cost[this.costOf(frame)];
+  }
+
+  /**
+   * Draws and shows the picture.
+   *
+   * @param stop asked between the steps of a large picture: true gives it up and leaves the old one standing
+   * @returns whether the picture is on the canvas
+   */
+  async draw(frame: PointFrame, stop: () => boolean): Promise<boolean> {
+    const width = Math.max(1, Math.round(frame.viewport.widthPx * frame.pixelRatio));
+    const height = Math.max(1, Math.round(frame.viewport.heightPx * frame.pixelRatio));
+    const points = frame.parts.reduce((sum, part) => sum + part.range.count, 0) * frame.fraction;
+    if (!this.store || points === 0) {
+      this.blank(width, height, frame);
+      return true;
+    }
+    await this.ready;
+    const picture: SplatPicture = {
+      width,
+      height,
+      diameter: frame.sizePx * frame.pixelRatio,
+      emphasis: frame.emphasis
+        ? [frame.emphasis.min, frame.emphasis.max, frame.emphasis.dim]
+        : [0, Number.MAX_VALUE, 1],
+    };
+    const steps = Math.max(1, Math.ceil(points / this.affordable(STEP_MS, frame)));
+    const start = performance.now();
+    for (let step = 0; step < steps; step++) {
+      await this.pool.splat(runsOf(frame, step / steps, (step + 1) / steps), picture, step === 0);
+      if (step < steps - 1 && stop()) return false;
+    }
+    this.learn(frame, points, performance.now() - start);
+    const bytes = await this.pool.tone(picture, this.tableOf(frame.tone));
+    if (this.canvas.width !== width || this.canvas.height !== height) {
+      this.canvas.width = width;
+      this.canvas.height = height;
+    }
+    this.context.putImageData(new ImageData(bytes, width, height), 0, 0);
+    return true;
+  }
+
+  dispose(): void {
+    this.store = null;
+    this.table = null;
+  }
+
+  private blank(width: number, height: number, { tone }: PointFrame): void {
+    this.canvas.width = width;
+    this.canvas.height = height;
+    const [r, g, b] = tone.background;
+    this.context.fillStyle = `rgb(${r} ${g} ${b})`;
+    this.context.fillRect(0, 0, width, height);
+  }
+
+  private resend(name: 'value' | 'radius'): void {
+    const { store } = this;
+    if (!store || this.pool.shared) return;
+    this.wait(this.ready.then(() => this.pool.send(store, [name])));
+  }
+
+  /** A failure is met by the next picture, which waits for it. */
+  private wait(work: Promise<void>): void {
+    this.ready = work;
+    work.catch(() => undefined);
+  }
+
+  private tableOf(tone: Tone): Uint32Array {
+    if (this.table?.tone !== tone) this.table = { tone, words: toneTable(tone) };
+    return this.table.words;
+  }
+
+  private costOf(frame: PointFrame): keyof typeof FIRST_COST {
+    return frame.sizePx * frame.pixelRatio <= 1.5 ? 'pixel' : 'disc';
+  }
+
+  private learn(frame: PointFrame, points: number, milliseconds: number): void {
+    // Small pictures say little about the cost of a point.
+    if (points < 20_000) return;
+    const which = this.costOf(frame);
+    const measured = (1e6 * milliseconds) / points;
+    this.cost[which] += 0.3 * (Math.min(measured, 4 * this.cost[which]) - this.cost[which]);
+  }
+}
+
+/** The part of every range between two shares of what is drawn, in device pixels. */
+function runsOf(frame: PointFrame, from: number, to: number): Run[] {
+  const ratio = frame.pixelRatio;
+  return frame.parts.map(({ matrix, range }) => {
+    const drawn = Math.ceil(range.count * frame.fraction);
+    const cut = (share: number): number => range.start + 4 * Math.round(Math.ceil(drawn / 4) * share);
+    const device = Float32Array.from(matrix, (v, i) => (i < 8 ? v * ratio : v));
+    return { from: cut(from), to: cut(to), matrix: device, light: drawn > 0 ? range.count / drawn : 0 };
+  });
+}

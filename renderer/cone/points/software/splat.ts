@@ -1,0 +1,121 @@
+import type { PointArrays } from '../pointArrays.ts';
+
+/** Free pixels around the sums on every side, so that a disc at the border needs no clipping. */
+export const PAD = 16;
+
+/** One run of the splat: where points go and how much light they bring. Everything in device pixels. */
+export interface Splat {
+  /** Sky direction times radius to pixels, three rows of four, in 32-bit floats. */
+  readonly matrix: Float32Array;
+  readonly width: number;
+  readonly height: number;
+  readonly light: number;
+  /** Radii from min (included) to max (excluded) have full light, all others `dim` of it. */
+  readonly emphasisMin: number;
+  readonly emphasisMax: number;
+  readonly dim: number;
+  /** Side of the disc's square in pixels, even; 0 puts all light into one pixel. */
+  readonly side: number;
+  /** 16 discs (4 places between pixels down, 4 across) of side x side weights; empty when side is 0. */
+  readonly discs: Float32Array;
+}
+
+/** Pixels in one row of the sums. */
+export const strideOf = (width: number): number => width + 2 * PAD;
+
+/** Numbers in the sums of a picture: light and light times value for every pixel, the free border included. */
+export const sumsLength = (width: number, height: number): number => 2 * strideOf(width) * (height + 2 * PAD);
+
+const f = Math.fround;
+
+/**
+ * Adds points to the sums: the reference for the WASM kernel, which does the same 32-bit operations in the same order,
+ * so that both give the same sums to the last bit.
+ *
+ * @param from,to slots, end excluded
+ * @param sums pairs (light, light times value), rows of strideOf(width) pixels, the first PAD rows and columns free
+ */
+export function splat(points: PointArrays, from: number, to: number, how: Splat, sums: Float32Array): void {
+  const { x, y, z, radius, value } = points;
+  const m = how.matrix;
+  const [a0, a1, a2, a3] = [m[0]!, m[1]!, m[2]!, m[3]!];
+  const [b0, b1, b2, b3] = [m[4]!, m[5]!, m[6]!, m[7]!];
+  const [c0, c1, c2, c3] = [m[8]!, m[9]!, m[10]!, m[11]!];
+  const nearest = f(0.02);
+  const byte = f(1 / 255);
+  const stride = strideOf(how.width);
+  const half = how.side / 2;
+  const [right, bottom] = [how.width + half, how.height + half];
+  const full = f(how.light);
+  const dimmed = f(f(how.light) * f(how.dim));
+  const [eMin, eMax] = [f(how.emphasisMin), f(how.emphasisMax)];
+  for (let s = from; s < to; s++) {
+    const r = radius[s]!;
+    const dx = f(x[s]! * r);
+    const dy = f(y[s]! * r);
+    const dz = f(z[s]! * r);
+    const w = f(f(f(f(c0 * dx) + f(c1 * dy)) + f(c2 * dz)) + c3);
+    if (!(w > nearest)) continue;
+    const px = f(f(f(f(f(a0 * dx) + f(a1 * dy)) + f(a2 * dz)) + a3) / w);
+    const py = f(f(f(f(f(b0 * dx) + f(b1 * dy)) + f(b2 * dz)) + b3) / w);
+    if (!(px >= -half && px < right && py >= -half && py < bottom)) continue;
+    const light = r >= eMin && r < eMax ? full : dimmed;
+    const tinted = f(light * f(value[s]! * byte));
+    if (how.side === 0) {
+      const i = 2 * (((py | 0) + PAD) * stride + (px | 0) + PAD);
+      sums[i]! += light;
+      sums[i + 1]! += tinted;
+    } else disc(how, sums, stride, px, py, light, tinted);
+  }
+}
+
+function disc(
+  how: Splat,
+  sums: Float32Array,
+  stride: number,
+  px: number,
+  py: number,
+  light: number,
+  tinted: number,
+): void {
+  const { side, discs } = how;
+  // Left and top pixel of the square whose middle is nearest, and the place between pixels in quarters.
+  const shift = f(0.5 - side / 2);
+  const left = Math.floor(f(px + shift));
+  const top = Math.floor(f(py + shift));
+  const quarterX = f(f(f(px + shift) - left) * 4) | 0;
+  const quarterY = f(f(f(py + shift) - top) * 4) | 0;
+  let d = (quarterY * 4 + quarterX) * side * side;
+  for (let row = 0; row < side; row++) {
+    let i = 2 * ((top + row + PAD) * stride + left + PAD);
+    for (let column = 0; column < side; column++, i += 2, d++) {
+      sums[i]! += f(discs[d]! * light);
+      sums[i + 1]! += f(discs[d]! * tinted);
+    }
+  }
+}
+
+/**
+ * Soft discs of a diameter in pixels, 1 in the middle: exp(-4.5 (2r/diameter)^2), for 4 x 4 places of the middle
+ * between pixels. Diameters up to 1.5 are drawn as one pixel: side 0.
+ */
+export function softDiscs(diameter: number): { side: number; discs: Float32Array } {
+  if (diameter <= 1.5) return { side: 0, discs: new Float32Array(0) };
+  const side = Math.min(PAD, 2 * Math.ceil((diameter + 0.5) / 2));
+  const discs = new Float32Array(16 * side * side);
+  let d = 0;
+  for (let qy = 0; qy < 4; qy++) {
+    for (let qx = 0; qx < 4; qx++) {
+      // The middle of the light, from the left and top of the square.
+      const cx = (side - 1) / 2 + (qx + 0.5) / 4;
+      const cy = (side - 1) / 2 + (qy + 0.5) / 4;
+      for (let row = 0; row < side; row++) {
+        for (let column = 0; column < side; column++) {
+          const r2 = (column + 0.5 - cx) ** 2 + (row + 0.5 - cy) ** 2;
+          discs[d++] = Math.exp((-4.5 * 4 * r2) / diameter ** 2);
+        }
+      }
+    }
+  }
+  return { side, discs };
+}

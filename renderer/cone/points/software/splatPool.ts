@@ -1,0 +1,209 @@
+import type { PointLayout } from '../pointArrays.ts';
+import type { PointStore } from '../pointStore.ts';
+import { nextTask } from '../slices.ts';
+import { type FromWorker, RESERVED_BYTES, type Run, type ToWorker } from './messages.ts';
+import { sumsLength } from './splat.ts';
+import { SCRATCH_BYTES } from './wideSplat.ts';
+
+const PAGE = 65536;
+/** Addresses are 32 bits wide. */
+const MOST_PAGES = 65536;
+const MOST_WORKERS = 4;
+/** Slots sent at once to a worker with its own memory. */
+const SENT_AT_ONCE = 262144;
+
+type Unsent<M = ToWorker> = M extends { id: number } ? Omit<M, 'id'> : never;
+
+export interface SplatPicture {
+  readonly width: number;
+  readonly height: number;
+  readonly diameter: number;
+  readonly emphasis: readonly [min: number, max: number, dim: number];
+}
+
+/** Workers that splat, tone and pick. One picture at a time; picks may come in between. */
+export class SplatPool {
+  /** Whether page and workers share memory. */
+  readonly shared: boolean;
+  private readonly workers: Worker[] = [];
+  private readonly waiting = new Map<
+    number,
+    { resolve: (m: FromWorker) => void; reject: (e: Error) => void }
+  >();
+  private readonly memories = new WeakMap<ArrayBufferLike, WebAssembly.Memory>();
+  private memory: WebAssembly.Memory | null = null;
+  private layout: PointLayout | null = null;
+  private nextId = 1;
+  private table: Uint32Array | null = null;
+  private readonly failed: (reason: string) => void;
+  /** Kernel in use, known once the points are there. */
+  wide = false;
+
+  constructor(failed: (reason: string) => void) {
+    this.failed = failed;
+    this.shared = globalThis.crossOriginIsolated === true;
+    const cores = navigator.hardwareConcurrency || 2;
+    const count = this.shared ? Math.max(1, Math.min(MOST_WORKERS, cores)) : 1;
+    for (let i = 0; i < count; i++) {
+      const worker = new Worker(new URL('./splatWorker.ts', import.meta.url), { type: 'module' });
+      worker.onmessage = (event: MessageEvent<FromWorker>) => this.receive(event.data);
+      worker.onerror = (event) => this.fail(event.message || 'a drawing worker ended');
+      this.workers.push(worker);
+    }
+  }
+
+  /** Memory for a store: shared with the workers where that is allowed. */
+  allocate(layout: PointLayout): ArrayBufferLike {
+    if (!this.shared) return new ArrayBuffer(layout.end);
+    const initial = Math.ceil(layout.end / PAGE);
+    const memory = sharedMemory(initial);
+    this.memories.set(memory.buffer, memory);
+    return memory.buffer;
+  }
+
+  /** Tells the workers of a store whose memory came from `allocate`. */
+  async setStore(store: PointStore, wide: boolean): Promise<void> {
+    this.layout = store.layout;
+    this.table = null;
+    const memory = this.memories.get(store.arrays.x.buffer);
+    this.memory = memory ?? null;
+    if (memory) {
+      const answers = await Promise.all(
+        this.workers.map((_, i) =>
+          this.ask(i, {
+            kind: 'shared',
+            memory,
+            layout: store.layout,
+            scratchAt: 64 + i * Math.ceil(SCRATCH_BYTES / 64) * 64,
+            wide,
+          }),
+        ),
+      );
+      this.wide = answers.every((m) => m.kind === 'done' && m.wide === true);
+      return;
+    }
+    const answer = await this.ask(0, { kind: 'own', slots: store.layout.slots, wide });
+    this.wide = answer.kind === 'done' && answer.wide === true;
+    await this.send(store, ['x', 'y', 'z', 'radius', 'value']);
+  }
+
+  /** Changed arrays of the store; with shared memory the workers see them anyway. */
+  async send(store: PointStore, names: readonly ('x' | 'y' | 'z' | 'radius' | 'value')[]): Promise<void> {
+    if (this.memory) return;
+    for (let at = 0; at < store.layout.slots; at += SENT_AT_ONCE) {
+      const part = Object.fromEntries(
+        names.map((name) => [name, store.arrays[name].slice(at, at + SENT_AT_ONCE)]),
+      );
+      const transfer = Object.values(part).map((array) => array.buffer as ArrayBuffer);
+      await this.ask(0, { kind: 'fill', at, ...part }, transfer);
+      await nextTask();
+    }
+  }
+
+  /** Adds runs to the sums; every worker takes its share of each run. */
+  async splat(runs: readonly Run[], picture: SplatPicture, clear: boolean): Promise<void> {
+    const sumsAt = this.room(picture).sumsAt;
+    await Promise.all(
+      this.workers.map((_, i) =>
+        this.ask(i, { kind: 'splat', ...picture, runs: this.share(runs, i), clear, sumsAt: sumsAt[i]! }),
+      ),
+    );
+  }
+
+  /** The finished picture out of the sums, as bytes for ImageData. */
+  async tone(picture: SplatPicture, table: Uint32Array): Promise<Uint8ClampedArray<ArrayBuffer>> {
+    const { width, height } = picture;
+    const { sumsAt, imageAt } = this.room(picture);
+    const news = table === this.table ? null : table;
+    this.table = table;
+    const count = this.workers.length;
+    const answers = await Promise.all(
+      this.workers.map((_, i) => {
+        const rows = [Math.floor((height * i) / count), Math.floor((height * (i + 1)) / count)] as const;
+        return this.ask(i, { kind: 'tone', width, height, rows, sumsAt, imageAt, table: news });
+      }),
+    );
+    const first = answers[0]!;
+    if (first.kind === 'image') return new Uint8ClampedArray(first.image.buffer);
+    // ImageData takes no shared memory.
+    const copy = new Uint8ClampedArray(4 * width * height);
+    copy.set(new Uint8Array(this.memory!.buffer, imageAt, copy.length));
+    return copy;
+  }
+
+  /** The slot drawn nearest to a pixel, searched by all workers. */
+  async pick(runs: readonly Run[], xPx: number, yPx: number, reachPx: number) {
+    const answers = await Promise.all(
+      this.workers.map((_, i) => this.ask(i, { kind: 'pick', runs: this.share(runs, i), xPx, yPx, reachPx })),
+    );
+    const hits = answers.flatMap((m) => (m.kind === 'hit' && m.hit ? [m.hit] : []));
+    hits.sort((a, b) => a.distance2 - b.distance2);
+    return hits[0] ?? null;
+  }
+
+  dispose(): void {
+    for (const worker of this.workers) worker.terminate();
+    this.waiting.clear();
+  }
+
+  /** Part i of each run, cut at groups of four. */
+  private share(runs: readonly Run[], i: number): Run[] {
+    const n = this.workers.length;
+    return runs.map((run) => {
+      const groups = Math.ceil((run.to - run.from) / 4);
+      return {
+        ...run,
+        from: run.from + 4 * Math.floor((groups * i) / n),
+        to: run.from + 4 * Math.floor((groups * (i + 1)) / n),
+      };
+    });
+  }
+
+  /** Where sums and picture stand behind the points; the memory grows when they need more. */
+  private room({ width, height }: SplatPicture): { sumsAt: number[]; imageAt: number } {
+    if (!this.memory || !this.layout) return { sumsAt: [0], imageAt: 0 };
+    const bytes = Math.ceil((4 * sumsLength(width, height)) / 64) * 64;
+    const sumsAt = this.workers.map((_, i) => this.layout!.end + i * bytes);
+    const imageAt = this.layout.end + this.workers.length * bytes;
+    const missing = imageAt + 4 * width * height - this.memory.buffer.byteLength;
+    if (missing > 0) this.memory.grow(Math.ceil(missing / PAGE));
+    return { sumsAt, imageAt };
+  }
+
+  private ask(worker: number, message: Unsent, transfer: Transferable[] = []): Promise<FromWorker> {
+    const id = this.nextId++;
+    return new Promise((resolve, reject) => {
+      this.waiting.set(id, { resolve, reject });
+      this.workers[worker]!.postMessage({ ...message, id }, transfer);
+    });
+  }
+
+  private receive(message: FromWorker): void {
+    const asked = this.waiting.get(message.id);
+    this.waiting.delete(message.id);
+    if (!asked) return;
+    if (message.kind === 'failed') asked.reject(new Error(message.reason));
+    else asked.resolve(message);
+  }
+
+  private fail(reason: string): void {
+    for (const { reject } of this.waiting.values()) reject(new Error(reason));
+    this.waiting.clear();
+    this.failed(reason);
+  }
+}
+
+/** Shared memory that can grow; a smaller promise where the machine does not give the whole address space. */
+function sharedMemory(initial: number): WebAssembly.Memory {
+  for (const maximum of [MOST_PAGES, MOST_PAGES / 2, MOST_PAGES / 4, initial + 8192]) {
+    if (maximum < initial) continue;
+    try {
+      return new WebAssembly.Memory({ initial, maximum, shared: true });
+    } catch (error) {
+      if (!(error instanceof RangeError)) throw error;
+    }
+  }
+  throw new RangeError('no memory for the points');
+}
+
+export { RESERVED_BYTES };

@@ -1,0 +1,134 @@
+import { pickPoint } from '../../geometry/pickPoint.ts';
+import { type PointArrays, type PointLayout, pointLayout, pointViews } from '../pointArrays.ts';
+import { type FromWorker, RESERVED_BYTES, type ToWorker } from './messages.ts';
+import { softDiscs, splat, sumsLength } from './splat.ts';
+import { toneRows } from './toneRows.ts';
+import { type WideSplat, wideSplat } from './wideSplat.ts';
+
+const PAGE = 65536;
+
+let memory: WebAssembly.Memory | null = null;
+let isShared = false;
+let layout: PointLayout | null = null;
+let points: PointArrays | null = null;
+let kernel: WideSplat | null = null;
+let table: Uint32Array | null = null;
+let discs = { diameter: -1, ...softDiscs(1) };
+
+const answer = (message: FromWorker, transfer: Transferable[] = []): void =>
+  postMessage(message, { transfer });
+
+async function take(
+  next: WebAssembly.Memory,
+  shared: boolean,
+  at: PointLayout,
+  scratchAt: number,
+  wide: boolean,
+) {
+  memory = next;
+  isShared = shared;
+  layout = at;
+  points = pointViews(next.buffer, at);
+  kernel = wide ? await wideSplat(next, shared, at, scratchAt) : null;
+}
+
+/** Room behind the points in the worker's own memory: the sums, then the picture. */
+function ownRoom(width: number, height: number): { sumsAt: number; imageAt: number } {
+  const sumsAt = Math.ceil(layout!.end / PAGE) * PAGE;
+  const imageAt = sumsAt + Math.ceil((4 * sumsLength(width, height)) / 64) * 64;
+  const missing = imageAt + 4 * width * height - memory!.buffer.byteLength;
+  if (missing > 0) {
+    memory!.grow(Math.ceil(missing / PAGE));
+    // Growing an unshared memory takes its old buffer away.
+    points = pointViews(memory!.buffer, layout!);
+  }
+  return { sumsAt, imageAt };
+}
+
+function splatRuns(message: Extract<ToWorker, { kind: 'splat' }>): void {
+  const { width, height, diameter, emphasis } = message;
+  const sumsAt = isShared ? message.sumsAt : ownRoom(width, height).sumsAt;
+  const sums = new Float32Array(memory!.buffer, sumsAt, sumsLength(width, height));
+  if (message.clear) sums.fill(0);
+  if (discs.diameter !== diameter) discs = { diameter, ...softDiscs(diameter) };
+  const [emphasisMin, emphasisMax, dim] = emphasis;
+  for (const { from, to, matrix, light } of message.runs) {
+    const how = {
+      matrix,
+      width,
+      height,
+      light,
+      emphasisMin,
+      emphasisMax,
+      dim,
+      side: discs.side,
+      discs: discs.discs,
+    };
+    if (kernel) kernel.run(from, to, how, sumsAt);
+    else splat(points!, from, to, how, sums);
+  }
+}
+
+function tone(message: Extract<ToWorker, { kind: 'tone' }>): void {
+  const { id, width, height, rows } = message;
+  if (message.table) table = message.table;
+  const buffer = memory!.buffer;
+  const sums = (at: number): Float32Array => new Float32Array(buffer, at, sumsLength(width, height));
+  if (isShared) {
+    const image = new Uint32Array(buffer, message.imageAt, width * height);
+    toneRows(message.sumsAt.map(sums), table!, image, width, rows[0], rows[1]);
+    answer({ kind: 'done', id });
+    return;
+  }
+  const image = new Uint32Array(width * height);
+  toneRows([sums(ownRoom(width, height).sumsAt)], table!, image, width, rows[0], rows[1]);
+  answer({ kind: 'image', id, image }, [image.buffer]);
+}
+
+function fill(message: Extract<ToWorker, { kind: 'fill' }>): void {
+  for (const name of ['x', 'y', 'z', 'radius', 'value'] as const) {
+    const part = message[name];
+    if (part) points![name].set(part, message.at);
+  }
+}
+
+async function handle(message: ToWorker): Promise<void> {
+  const { id } = message;
+  switch (message.kind) {
+    case 'shared':
+      await take(message.memory, true, message.layout, message.scratchAt, message.wide);
+      return answer({ kind: 'done', id, wide: kernel !== null });
+    case 'own': {
+      const at = pointLayout(message.slots, RESERVED_BYTES);
+      const own = new WebAssembly.Memory({ initial: Math.ceil(at.end / PAGE) });
+      await take(own, false, at, 64, message.wide);
+      points!.radius.fill(Number.NaN);
+      return answer({ kind: 'done', id, wide: kernel !== null });
+    }
+    case 'fill':
+      fill(message);
+      return answer({ kind: 'done', id });
+    case 'splat':
+      splatRuns(message);
+      return answer({ kind: 'done', id });
+    case 'tone':
+      return tone(message);
+    case 'pick': {
+      let hit = null;
+      for (const { from, to, matrix } of message.runs) {
+        hit = pickPoint(points!, matrix, from, to, message.xPx, message.yPx, message.reachPx, hit);
+      }
+      return answer({ kind: 'hit', id, hit });
+    }
+  }
+}
+
+addEventListener('message', (event: MessageEvent<ToWorker>) => {
+  handle(event.data).catch((error: unknown) => {
+    answer({
+      kind: 'failed',
+      id: event.data.id,
+      reason: error instanceof Error ? error.message : String(error),
+    });
+  });
+});

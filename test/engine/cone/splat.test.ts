@@ -1,0 +1,139 @@
+import { describe, expect, it } from 'vitest';
+import { pointLayout, pointViews } from '../../../renderer/cone/points/pointArrays.ts';
+import {
+  PAD,
+  type Splat,
+  softDiscs,
+  splat,
+  strideOf,
+  sumsLength,
+} from '../../../renderer/cone/points/software/splat.ts';
+import { SCRATCH_BYTES, wideSplat } from '../../../renderer/cone/points/software/wideSplat.ts';
+
+const WIDTH = 160;
+const HEIGHT = 90;
+const SLOTS = 6000;
+
+/** Seeded numbers 0..1. */
+function seeded(seed: number): () => number {
+  let a = seed >>> 0;
+  return () => {
+    a = (a * 1664525 + 1013904223) >>> 0;
+    return a / 4294967296;
+  };
+}
+
+/** A memory with points in all directions, some beyond the picture, some empty slots, and room for the sums. */
+function scene(shared: boolean) {
+  const layout = pointLayout(SLOTS, 65536);
+  const sumsAt = Math.ceil(layout.end / 16) * 16;
+  const bytes = sumsAt + 4 * sumsLength(WIDTH, HEIGHT);
+  const pages = Math.ceil(bytes / 65536);
+  const memory = shared
+    ? new WebAssembly.Memory({ initial: pages, maximum: pages, shared: true })
+    : new WebAssembly.Memory({ initial: pages });
+  const points = pointViews(memory.buffer, layout);
+  const random = seeded(20);
+  for (let s = 0; s < SLOTS; s++) {
+    const z = 2 * random() - 1;
+    const angle = 2 * Math.PI * random();
+    points.x[s] = Math.sqrt(1 - z * z) * Math.cos(angle);
+    points.y[s] = Math.sqrt(1 - z * z) * Math.sin(angle);
+    points.z[s] = z;
+    points.radius[s] = s % 97 === 0 ? Number.NaN : random();
+    points.value[s] = Math.floor(256 * random());
+  }
+  const sums = new Float32Array(memory.buffer, sumsAt, sumsLength(WIDTH, HEIGHT));
+  return { memory, layout, points, sums, sumsAt };
+}
+
+function how(diameter: number, perspective: number): Splat {
+  const s = 70;
+  const w = [0, 0.3 * perspective, perspective, 1];
+  return {
+    matrix: Float32Array.from([
+      ...[s, 3, 0, 0].map((v, i) => v + (WIDTH / 2) * w[i]!),
+      ...[1, -s, 5, 0].map((v, i) => v + (HEIGHT / 2) * w[i]!),
+      ...w,
+    ]),
+    width: WIDTH,
+    height: HEIGHT,
+    light: 1.7,
+    emphasisMin: 0.4,
+    emphasisMax: 0.7,
+    dim: 0.3,
+    ...softDiscs(diameter),
+  };
+}
+
+describe('the splat', () => {
+  it('puts one galaxy into the pixel that holds it', () => {
+    const layout = pointLayout(4, 0);
+    const points = pointViews(new ArrayBuffer(layout.end), layout);
+    points.radius.fill(Number.NaN);
+    points.x[0] = 1;
+    points.radius[0] = 1;
+    points.value[0] = 51;
+    const sums = new Float32Array(sumsLength(WIDTH, HEIGHT));
+    const matrix = Float32Array.from([37.4, 0, 0, 0, 20.9, 0, 0, 0, 0, 0, 0, 1]);
+    const plain = { ...how(1, 0), matrix, light: 2, emphasisMin: 0, emphasisMax: 9 };
+    splat(points, 0, 4, plain, sums);
+    const i = 2 * ((20 + PAD) * strideOf(WIDTH) + 37 + PAD);
+    expect(sums[i]).toBe(2);
+    expect(sums[i + 1]).toBeCloseTo((2 * 51) / 255, 6);
+    expect(sums.reduce((a, b) => a + b, 0)).toBeCloseTo(2 + (2 * 51) / 255, 5);
+  });
+
+  it('spreads a disc about the galaxy, its light centred there', () => {
+    const layout = pointLayout(4, 0);
+    const points = pointViews(new ArrayBuffer(layout.end), layout);
+    points.radius.fill(Number.NaN);
+    points.x[0] = 1;
+    points.radius[0] = 1;
+    for (const [x, y] of [
+      [40.13, 30.62],
+      [80.5, 45.5],
+      [12.99, 9.01],
+    ] as const) {
+      const sums = new Float32Array(sumsLength(WIDTH, HEIGHT));
+      const matrix = Float32Array.from([x, 0, 0, 0, y, 0, 0, 0, 0, 0, 0, 1]);
+      splat(points, 0, 4, { ...how(6, 0), matrix, emphasisMin: 0, emphasisMax: 9 }, sums);
+      let [total, sx, sy] = [0, 0, 0];
+      for (let p = 0; p < sums.length / 2; p++) {
+        total += sums[2 * p]!;
+        sx += sums[2 * p]! * ((p % strideOf(WIDTH)) - PAD + 0.5);
+        sy += sums[2 * p]! * (Math.floor(p / strideOf(WIDTH)) - PAD + 0.5);
+      }
+      // Quarters of a pixel: the centre is right to an eighth, and the soft rim is cut at the square.
+      expect(Math.abs(sx / total - x)).toBeLessThan(0.14);
+      expect(Math.abs(sy / total - y)).toBeLessThan(0.14);
+    }
+  });
+
+  for (const shared of [false, true]) {
+    for (const [name, diameter, perspective] of [
+      ['single pixels', 1, 0],
+      ['discs', 3.2, 0],
+      ['large discs', 12, 0],
+      ['single pixels in perspective', 1, 0.7],
+      ['discs in perspective', 5, 0.7],
+    ] as const) {
+      it(`sums alike in WebAssembly and JavaScript, ${shared ? 'shared' : 'own'} memory: ${name}`, async () => {
+        const { memory, layout, points, sums, sumsAt } = scene(shared);
+        const wide = await wideSplat(memory, shared, layout, 1024);
+        expect(wide).not.toBeNull();
+        const settings = how(diameter, perspective);
+        wide!.run(0, SLOTS, settings, sumsAt);
+        const reference = new Float32Array(sumsLength(WIDTH, HEIGHT));
+        splat(points, 0, SLOTS, settings, reference);
+        expect(reference.some((v) => v > 0)).toBe(true);
+        // The same 32-bit operations in the same order: equal to the last bit.
+        expect(sums.every((v, i) => v === reference[i])).toBe(true);
+      });
+    }
+  }
+
+  it('has scratch for the largest disc below the points', () => {
+    expect(1024 + SCRATCH_BYTES).toBeLessThan(65536);
+  });
+});
