@@ -8,7 +8,7 @@ const ROWS = 1_000_000;
 const CHUNK_BYTES = 65_536;
 
 /**
- * A million rows of six columns read into columns of numbers, beside PapaParse in its own streaming mode with
+ * A million rows of six columns read into columns of numbers, beside PapaParse in chunks of its best size with
  * Number() on the same four columns and nothing else: no tests of the rows, no line numbers, no account.
  */
 export async function bench(): Promise<{
@@ -20,11 +20,11 @@ export async function bench(): Promise<{
   const packed = new Uint8Array(gzipSync(plain, { level: 6 }));
 
   await load(plain.subarray(0, 5_000_000));
-  byPapaParse(new TextDecoder().decode(plain.subarray(0, 5_000_000)));
+  byPapaParse(plain.subarray(0, plain.lastIndexOf(10, 5_000_000) + 1));
 
-  const reference = await seconds(() => byPapaParse(new TextDecoder().decode(plain)));
+  const reference = await seconds(() => byPapaParse(plain));
   const row = (what: string, time: number) => ({ what, seconds: time, ratio: reference / time });
-  const rows = [row('PapaParse and Number() alone, whole text in memory', reference)];
+  const rows = [row('PapaParse and Number() alone, in chunks', reference)];
   rows.push(row('loadCatalogue', await seconds(() => load(plain))));
   rows.push(row('loadCatalogue, names quoted', await seconds(() => load(quoted))));
   rows.push(row('loadCatalogue, gzip', await seconds(() => load(packed))));
@@ -53,20 +53,19 @@ async function* inChunks(bytes: Uint8Array): AsyncGenerator<Uint8Array> {
   for (let at = 0; at < bytes.length; at += CHUNK_BYTES) yield bytes.subarray(at, at + CHUNK_BYTES);
 }
 
-function byPapaParse(text: string): number {
+function byPapaParse(bytes: Uint8Array): number {
   const columns = [1, 2, 3, 4].map(() => new Float64Array(ROWS + 1));
+  const decoder = new TextDecoder();
   let next = 0;
-  Papa.parse<string[]>(text, {
-    chunkSize: CHUNK_BYTES,
-    delimiter: ',',
-    newline: '\n',
-    chunk: ({ data }) => {
-      for (const cells of data) {
-        for (let k = 0; k < 4; k++) columns[k]![next] = Number(cells[k + 1]);
-        next++;
-      }
-    },
-  });
+  for (let at = 0; at < bytes.length; ) {
+    const end = bytes.lastIndexOf(10, at + CHUNK_BYTES) + 1;
+    const text = decoder.decode(bytes.subarray(at, end - 1));
+    at = end;
+    for (const cells of Papa.parse<string[]>(text, { delimiter: ',', newline: '\n' }).data) {
+      for (let k = 0; k < 4; k++) columns[k]![next] = Number(cells[k + 1]);
+      next++;
+    }
+  }
   return next;
 }
 
