@@ -30,7 +30,7 @@ export interface Brightness {
 
 /**
  * Tabulates the luminosity function above a limit. The count is E1(x) of the least luminosity x (Abramowitz & Stegun
- * 5.1.1), within 1e-4 of it for x from 0.01 to 5.
+ * 5.1.1), within 2e-4 of it for x from 0.01 to 5.
  *
  * @param characteristic apparent magnitudes of an L* galaxy, one for each distance
  */

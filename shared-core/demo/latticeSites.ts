@@ -5,7 +5,7 @@ import { keptShare, type Sites, type SitesPlan } from './sites.ts';
 
 const SPACING_MPC = 20;
 /** Few, so that a batch of galaxies takes a sweep or more; not so few that memory is read at random. */
-const DRAWS_A_CELL = 0.25;
+const DRAWS_A_CELL = 0.1;
 /** Numbers kept at a corner: where its matter settles, and what else a site has. */
 const CHANNELS = SITE.size;
 

@@ -32,7 +32,7 @@ export interface Universe {
 }
 
 /** Coherent motions as a share of the flow: small, because the flow is stronger than nature's. */
-const COHERENT_SHARE = 0.2;
+const COHERENT_SHARE = 0.32;
 /** Positions are kept as the file writes them, so that the region holds for the rows. */
 const POSITION_STEPS = 1e6;
 

@@ -1,0 +1,80 @@
+import { describe, expect, it } from 'vitest';
+import { DEFAULT_SEED, makeDemoSurvey } from '../../../shared-core/demo/demoSurvey.ts';
+import { makeLargeSurvey } from '../../../shared-core/demo/largeSurvey.ts';
+import { asciiText } from '../../../shared-core/demo/rowWriter.ts';
+import { DEMO_COLUMNS, FIELDS } from '../../../shared-core/demo/scenario.ts';
+import { countsInCells, fieldOf, placesIn, readDemo } from './readDemo.ts';
+
+const COUNT = 120_000;
+const MIDDLE = { raDeg: 212, decDeg: 12 };
+
+/** Correlation of counts in 40 Mpc cells of the wide field between z 0.6 and 1. */
+async function correlation(one: Iterable<string | Uint8Array>, other: Iterable<string | Uint8Array>) {
+  const counts = async (chunks: Iterable<string | Uint8Array>) =>
+    countsInCells(
+      placesIn((await readDemo(chunks)).catalogue, 0, MIDDLE),
+      [2300, -300, -120],
+      [25, 15, 6],
+      40,
+    );
+  const [a, b] = [await counts(one), await counts(other)];
+  const mean = (values: Float64Array) => values.reduce((sum, v) => sum + v, 0) / values.length;
+  const [ma, mb] = [mean(a), mean(b)];
+  let [ab, aa, bb] = [0, 0, 0];
+  for (let i = 0; i < a.length; i++) {
+    ab += (a[i]! - ma) * (b[i]! - mb);
+    aa += (a[i]! - ma) ** 2;
+    bb += (b[i]! - mb) ** 2;
+  }
+  return ab / Math.sqrt(aa * bb);
+}
+
+describe('makeLargeSurvey', () => {
+  it('makes as many good rows as asked for, in chunks of whole lines, the same every time', async () => {
+    const chunks = [...makeLargeSurvey(COUNT)];
+    expect(chunks.length).toBe(3);
+    for (const chunk of chunks) expect(chunk.at(-1)).toBe(10);
+    expect(asciiText(chunks[0]!.subarray(0, 60)).split('\n')[0]).toBe(DEMO_COLUMNS.join(','));
+    const { catalogue } = await readDemo(chunks);
+    expect(catalogue.account).toMatchObject({ rowsRead: COUNT, kept: COUNT, setAside: 0 });
+    let at = 0;
+    for (const chunk of makeLargeSurvey(COUNT)) {
+      expect(Buffer.compare(chunk, chunks[at++]!)).toBe(0);
+    }
+  });
+
+  it('is the universe of the demo survey with more galaxies, not another one', async () => {
+    const large = [...makeLargeSurvey(COUNT)];
+    const demo = makeDemoSurvey().csv;
+    // Chance in counts of a few a cell keeps the correlation well below 1; unlike universes have none.
+    expect(await correlation([demo], large)).toBeGreaterThan(0.6);
+    expect(Math.abs(await correlation([makeDemoSurvey(DEFAULT_SEED + 1).csv], large))).toBeLessThan(0.15);
+  });
+
+  it('shows every field and all depths from the first chunk on', async () => {
+    const [first] = makeLargeSurvey(5_000_000);
+    const { catalogue } = await readDemo([first!]);
+    expect(catalogue.account.kept).toBe(50_000);
+    const counts = FIELDS.map(() => [0, 0]);
+    for (let i = 0; i < catalogue.raDeg.length; i++) {
+      const pair = counts[fieldOf(catalogue.raDeg[i]!, catalogue.decDeg[i]!)]!;
+      const far = catalogue.redshift[i]! > 1.1 ? 1 : 0;
+      pair[far] = pair[far]! + 1;
+    }
+    for (const [near, far] of counts) {
+      expect(near).toBeGreaterThan(500);
+      expect(far).toBeGreaterThan(500);
+    }
+  });
+
+  it('makes a survey of one galaxy', async () => {
+    const { catalogue } = await readDemo(makeLargeSurvey(1));
+    expect(catalogue.account.kept).toBe(1);
+  });
+
+  it.each([0, -3, 1.5, 1e9, Number.NaN])('refuses %s galaxies with a sentence', (count) => {
+    expect(() => makeLargeSurvey(count)).toThrow(
+      /galaxies was asked for; give a whole number from 1 to 99999999/,
+    );
+  });
+});
