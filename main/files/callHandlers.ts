@@ -1,7 +1,7 @@
 import type { Answer, Argument, CallName } from '../../shared-core/bridge/calls.ts';
 
 /** Who asked, and the bytes that came along (empty when none). */
-export interface Caller {
+interface Caller {
   windowId: string;
   bytes: Uint8Array;
 }

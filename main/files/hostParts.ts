@@ -10,7 +10,7 @@ export interface Dialogs {
 }
 
 /** What a host does with its windows when they ask. */
-export interface Windows {
+interface Windows {
   setState(windowId: string, state: WindowState): void;
   answerClose(windowId: string, close: boolean): void;
 }

@@ -8,7 +8,7 @@ export interface BrowserDisk {
   realPath(path: string): string;
 }
 
-export const systemDisk: BrowserDisk = {
+const systemDisk: BrowserDisk = {
   isExecutable(path) {
     try {
       accessSync(path, process.platform === 'win32' ? constants.F_OK : constants.X_OK);

@@ -37,6 +37,7 @@ describe('the bundle of the desktop host', () => {
 
 describe.skipIf(binary === null)("Electron's real program", () => {
   const root = temporaryFolder();
+  if (binary === null) root.remove();
   const folder = join(root.folder, 'studies');
   let app: ElectronApplication;
   let page: Page;

@@ -25,6 +25,7 @@ const flags = [
 
 describe.skipIf(found === null)('the local host in a real browser', () => {
   const root = temporaryFolder();
+  if (found === null) root.remove();
   const folder = join(root.folder, 'studies');
   const windowFolder = join(root.folder, 'window');
   let browser: Browser;
