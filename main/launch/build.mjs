@@ -14,7 +14,7 @@ import { root } from './install.mjs';
 /** @type {Record<'command' | 'window' | 'local' | 'desktop', Part>} */
 const parts = {
   command: { words: 'the command', sources: ['main', 'shared-core'], config: 'main/launch/command.vite.ts' },
-  window: { words: 'the window', sources: ['renderer', 'shared-core'], config: 'renderer/vite.config.ts' },
+  window: { words: 'the window', sources: ['renderer', 'shared-core'], config: 'renderer/window.vite.ts' },
   local: { words: 'the local host', sources: ['main', 'shared-core'], config: 'main/local/local.vite.ts' },
   desktop: {
     words: 'the desktop host',
