@@ -24,8 +24,9 @@ export function zoomAround(
   const whole = axis.at(wholeWindow(axis, deepestRedshift)[1]);
   const limit = Math.min(axis.at(DEEPEST_REDSHIFT), whole * FARTHEST);
   const span = Math.min(limit, Math.max(whole * CLOSEST, (high - low) * factor));
-  const share = (px - scale.leftPx) / (scale.rightPx - scale.leftPx);
-  const held = scale.readingAt(px);
+  const around = Math.max(scale.leftPx, Math.min(scale.rightPx, px));
+  const share = (around - scale.leftPx) / (scale.rightPx - scale.leftPx);
+  const held = scale.readingAt(around);
   return windowFrom(scale, held - share * span, span, limit, whole);
 }
 
