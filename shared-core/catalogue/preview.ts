@@ -3,6 +3,7 @@ import type { ColumnMapping } from './catalogue.ts';
 import type { Delimiter } from './formats/delimited/delimiter.ts';
 import { openTable } from './formats/delimited/openTable.ts';
 import { isBlank } from './formats/delimited/table.ts';
+import { keptText } from './keptText.ts';
 import { resolveMapping, suggestMapping } from './mapping.ts';
 import type { ColumnChoice } from './spellings.ts';
 
@@ -10,7 +11,7 @@ import type { ColumnChoice } from './spellings.ts';
 export interface Preview {
   readonly header: readonly string[];
   readonly delimiter: Delimiter;
-  /** First rows as text, trimmed; a row may have more or fewer cells than the header. */
+  /** First rows as text, cells trimmed and no longer than 200 characters; a row may have more or fewer cells than the header. */
   readonly rows: readonly (readonly string[])[];
   /** Line of each row in the file. */
   readonly lines: readonly number[];
@@ -40,7 +41,7 @@ export async function previewCatalogue(
         for (let i = 0; i < records.rows.length; i++) {
           const row = records.rows[i]!;
           if (isBlank(row)) continue;
-          rows.push(row.map((cell) => cell.trim()));
+          rows.push(row.map(keptText));
           lines.push(records.lines[i]!);
           if (rows.length === rowCount) break gather;
         }

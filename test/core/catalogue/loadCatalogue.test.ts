@@ -189,8 +189,8 @@ describe('loadCatalogue', () => {
 
   it('gives what PapaParse and Number give for a file of many blocks, some of it quoted', async () => {
     const random = createRandom(3);
-    const rows = Array.from({ length: 30_000 }, (_, i) => {
-      const isQuoted = i % 5000 < 1700;
+    const rows = Array.from({ length: 12_000 }, (_, i) => {
+      const isQuoted = i % 3000 < 1000;
       const name = isQuoted ? `"galaxy ""${i}"",\n${'é'.repeat(i % 7)}"` : `galaxy ${i}`;
       return `${name},${360 * random.uniform()},${180 * random.uniform() - 90},${3 * random.uniform()},${random.uniform().toExponential()}`;
     });
@@ -203,7 +203,7 @@ describe('loadCatalogue', () => {
     for (const bytes of [utf8(text), utf16(text, 'be'), new Uint8Array(gzipSync(text))]) {
       const { catalogue, setAside } = await load(bytes, { extras: ['name'] }, [40_000, 1, 77_777]);
       expect(setAside).toEqual([]);
-      expect(catalogue.account.kept).toBe(30_000);
+      expect(catalogue.account.kept).toBe(12_000);
       expect(catalogue.raDeg.findIndex((value, i) => value !== Number(expected[i]![1]))).toBe(-1);
       expect(catalogue.magnitude!.findIndex((value, i) => value !== Number(expected[i]![4]))).toBe(-1);
       const breaks = (row: string[]) => row[0]!.split('\n').length - 1;

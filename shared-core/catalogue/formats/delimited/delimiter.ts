@@ -3,22 +3,10 @@ import Papa from 'papaparse/papaparse.js';
 import { LF, type LineBreak } from './wholeLines.ts';
 
 /** What may stand between columns. */
-export const DELIMITERS = [',', '\t', ';', '|'] as const;
+const DELIMITERS = [',', '\t', ';', '|'] as const;
 export type Delimiter = (typeof DELIMITERS)[number];
 
 const ROWS_LOOKED_AT = 50;
-
-const NAMES: Readonly<Record<Delimiter, string>> = {
-  ',': 'comma',
-  '\t': 'tab',
-  ';': 'semicolon',
-  '|': 'bar',
-};
-
-/** The delimiter's name in a sentence. */
-export function delimiterName(delimiter: Delimiter): string {
-  return NAMES[delimiter];
-}
 
 /**
  * The delimiter under which the head of a table (whole lines, the header first) is most of a table: many columns in
