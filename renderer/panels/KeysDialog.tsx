@@ -4,7 +4,7 @@ import { KEY_HELP } from './keyTable.ts';
 /** Which key does what. */
 export function KeysDialog({ onClose }: { readonly onClose: () => void }) {
   return (
-    <Dialog title="Keys" onClose={onClose}>
+    <Dialog title="Keys" kind="middle" onClose={onClose}>
       <div class="keys">
         {KEY_HELP.map(({ title, rows }) => (
           <section key={title} aria-label={title}>

@@ -13,7 +13,7 @@ export function Notices() {
   return (
     <section class="notices" aria-label="Notices">
       {files.offered.value.map(({ workId, title, keptMs }) => (
-        <div key={workId} class="notice notice-offer" role="group" aria-label="Unsaved work">
+        <div key={workId} class="notice notice-offer">
           <p>
             Work on “{title}” from {when(keptMs)} was not saved.
           </p>

@@ -60,7 +60,7 @@ export function WorthPanel() {
           <NoShells />
         ) : (
           <div class="ledger-scroll">
-            <LedgerTable columns={NARROW_LEDGER} order={order} onEnter={toSheet} />
+            <LedgerTable label="Shell ledger" columns={NARROW_LEDGER} order={order} onEnter={toSheet} />
           </div>
         )}
       </section>

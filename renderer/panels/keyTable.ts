@@ -37,6 +37,16 @@ export const KEY_HELP: readonly { readonly title: string; readonly rows: readonl
     ],
   },
   {
+    title: 'Depth strip',
+    rows: [
+      { keys: ['←', '→'], does: 'move the edge, or the cursor' },
+      { keys: ['Enter'], does: 'type the edge; choose the shell' },
+      { keys: ['Delete'], does: 'remove the edge' },
+      { keys: ['A'], does: 'add an edge at the cursor' },
+      { keys: ['+', '-', '0'], does: 'closer, farther, all' },
+    ],
+  },
+  {
     title: 'View',
     rows: [
       { keys: ['1'], does: 'side-on' },

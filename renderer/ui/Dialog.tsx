@@ -6,7 +6,7 @@ import './ui.css';
 /** A window over the window. The rest waits; Escape closes it, and focus goes back to where it came from. */
 export function Dialog(props: {
   readonly title: string;
-  readonly kind?: 'small' | 'wide';
+  readonly kind?: 'small' | 'middle' | 'wide';
   readonly onClose: () => void;
   /** Absent: a cross at the top closes. */
   readonly closeButton?: boolean;
@@ -37,10 +37,10 @@ export function Dialog(props: {
       }}
     >
       <div class="dialog-body">
-        <header class="dialog-head">
+        <div class="dialog-head">
           <h2 id={id}>{title}</h2>
           {closeButton ? <IconButton icon="close" label="Close" onClick={onClose} /> : null}
-        </header>
+        </div>
         {children}
       </div>
     </dialog>

@@ -27,7 +27,7 @@ export function Section(props: {
           aria-controls={`fold-${id}`}
           onClick={() => setSectionOpen(id, !open)}
         >
-          <Icon name="wedge" />
+          <Icon name="after" />
           <span class="fold-name">{title}</span>
           <span class={alert ? 'fold-gist fold-alert' : 'fold-gist'}>{gist}</span>
         </button>

@@ -16,10 +16,9 @@ export function fieldText(value: number | null): string {
   return value === null ? '' : String(Number(value.toPrecision(10)));
 }
 
-/** A count for reading: digits in threes, parted by narrow spaces, from five digits on. */
+/** A count for reading: digits in threes, parted by narrow spaces. */
 export function countText(count: number): string {
-  const digits = String(count);
-  return digits.length < 5 ? digits : digits.replace(/\B(?=(\d{3})+$)/g, '\u202f');
+  return String(count).replace(/\B(?=(\d{3})+$)/g, '\u202f');
 }
 
 /** A file's size for reading, in powers of 1000. */

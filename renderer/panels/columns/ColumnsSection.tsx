@@ -1,10 +1,11 @@
-import { useState } from 'preact/hooks';
+import { useEffect, useState } from 'preact/hooks';
 import type { ColumnMapping } from '../../../shared-core/catalogue/catalogue.ts';
 import { change } from '../../../shared-core/study/edits.ts';
 import { useApp } from '../../state/app.ts';
+import { setSectionOpen } from '../../ui/openSections.ts';
 import { Section } from '../../ui/Section.tsx';
 import { MappingForm } from './MappingForm.tsx';
-import { draftOf, finishDraft, fittingDraft, type MappingDraft } from './mappingDraft.ts';
+import { draftOf, finishDraft, fittingDraft, isGuessable, type MappingDraft } from './mappingDraft.ts';
 import { PreviewDialog } from './PreviewDialog.tsx';
 import { usePreview } from './usePreview.ts';
 
@@ -40,6 +41,11 @@ export function ColumnsSection() {
       setDraft({ draft: next, of: mapping, header: headerKey });
     else setDraft(null);
   };
+  // A file that waits for its columns must not wait behind a folded heading.
+  const waiting = unread && header !== null && sentence !== null;
+  useEffect(() => {
+    if (waiting) setSectionOpen('columns', true);
+  }, [waiting]);
   const gist =
     source === null || header === null
       ? ''
@@ -68,7 +74,7 @@ export function ColumnsSection() {
             >
               Look at 20 rows…
             </button>
-            {chosen === null || source?.kind === 'demo' ? null : (
+            {chosen === null || source?.kind === 'demo' || !isGuessable(header) ? null : (
               <button
                 type="button"
                 class="button"

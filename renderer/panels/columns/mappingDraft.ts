@@ -75,3 +75,14 @@ export function roleOf(column: string, draft: MappingDraft): string | null {
   if (column === draft.magnitude) return 'magnitude';
   return column === draft.id ? 'name' : null;
 }
+
+/** Whether the names in a header are enough to know the columns that are needed. */
+export function isGuessable(header: readonly string[]): boolean {
+  try {
+    resolveMapping(header);
+    return true;
+  } catch (error) {
+    if (error instanceof Refusal) return false;
+    throw error;
+  }
+}

@@ -45,7 +45,6 @@ export function OwnParameters(props: {
         label={label}
         unit={unit}
         value={parameters[name]}
-        {...(name === 'omegaM0' ? { hint: 'Baryons and cold dark matter; neutrinos are added.' } : {})}
         onCommit={(value) => put(name, { ...parameters, [name]: value! }, `${label} ${value}`)}
       />
       {also(name)}
@@ -56,6 +55,7 @@ export function OwnParameters(props: {
     <div class="parameters">
       {numberField(h0!)}
       {numberField(matter!)}
+      <p class="field-hint parameters-whole">Matter is baryons and cold dark matter; neutrinos are added.</p>
       <div>
         <Switch
           label="flat: dark energy closes the sum"

@@ -1,8 +1,9 @@
-import type { ReadonlySignal, Signal } from '@preact/signals';
+import type { Signal } from '@preact/signals';
 import { shownUnit } from '../../../shared-core/report/quantity.ts';
 import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
 import { useApp } from '../../state/app.ts';
 import { Icon } from '../../ui/Icon.tsx';
+import { Subscripted } from '../../ui/Subscripted.tsx';
 import { unitText } from '../../ui/unitText.ts';
 import { LedgerRow } from './LedgerRow.tsx';
 import type { LedgerColumn } from './ledgerColumns.ts';
@@ -10,11 +11,12 @@ import { type LedgerOrder, nextOrder, sortShells } from './sortShells.ts';
 
 /** The shells as rows. Arrow keys walk and choose; a heading sorts; a number of the chosen row opens its explanation. */
 export function LedgerTable(props: {
+  readonly label: string;
   readonly columns: readonly LedgerColumn[];
   readonly order: Signal<LedgerOrder | null>;
   readonly onEnter: () => void;
 }) {
-  const { columns, order, onEnter } = props;
+  const { label, columns, order, onEnter } = props;
   const { derived, view } = useApp();
   const shells = derived.shells.value;
   const total = derived.total.value;
@@ -43,7 +45,7 @@ export function LedgerTable(props: {
   };
   return (
     // biome-ignore lint/a11y/noNoninteractiveElementToInteractiveRole: rows are chosen with the arrow keys, which is a grid
-    <table class="ledger" role="grid" aria-label="Shell ledger" aria-readonly="true" onKeyDown={onKeyDown}>
+    <table class="ledger" role="grid" aria-label={label} aria-readonly="true" onKeyDown={onKeyDown}>
       <colgroup>
         <col class="ledger-col-number" />
         {columns.map((column) => (
@@ -85,29 +87,28 @@ function Heading({
   order,
 }: {
   readonly column: LedgerColumn;
-  readonly order: ReadonlySignal<LedgerOrder | null> & Signal<LedgerOrder | null>;
+  readonly order: Signal<LedgerOrder | null>;
 }) {
   const units = useApp().derived.units.value;
   const sorted = order.value;
   const direction = column.quantities.some((q) => q.key === sorted?.key) ? sorted!.direction : 'none';
+  // Numbers that are read together have the same unit, which then stands once.
+  const shared = [...new Set(column.quantities.map((q) => unitText(shownUnit(q, units))))];
   return (
     <th scope="col" aria-sort={direction}>
-      {column.quantities.map((q) => {
-        const unit = unitText(shownUnit(q, units));
-        return (
-          <button
-            key={q.key}
-            type="button"
-            class="ledger-sort"
-            title={`${q.meaning} Press to sort.`}
-            onClick={() => void (order.value = nextOrder(sorted, q.key))}
-          >
-            <span>{q.title}</span>
-            {sorted?.key === q.key ? <Icon name={sorted.direction === 'ascending' ? 'up' : 'sink'} /> : null}
-            {unit === '' ? null : <span class="ledger-unit">{unit}</span>}
-          </button>
-        );
-      })}
+      {column.quantities.map((q, i) => (
+        <button
+          key={q.key}
+          type="button"
+          class="ledger-sort"
+          title={`${q.meaning} Press to sort.`}
+          onClick={() => void (order.value = nextOrder(sorted, q.key))}
+        >
+          {sorted?.key === q.key ? <Icon name={sorted.direction === 'ascending' ? 'up' : 'sink'} /> : null}
+          <Subscripted text={column.headings?.[i] ?? q.title} />
+        </button>
+      ))}
+      <span class="ledger-unit">{shared.join(', ')}</span>
     </th>
   );
 }

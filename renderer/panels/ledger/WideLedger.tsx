@@ -74,7 +74,7 @@ export function WideLedger(props: {
       </header>
       {/* biome-ignore lint/a11y/noNoninteractiveTabindex: a part that scrolls must be reachable by keyboard */}
       <section class="ledger-scroll" tabIndex={0} aria-label="Numbers of every shell">
-        <LedgerTable columns={WHOLE_LEDGER} order={order} onEnter={onEnter} />
+        <LedgerTable label="Whole ledger" columns={WHOLE_LEDGER} order={order} onEnter={onEnter} />
         <ul class="ledger-notes" aria-label="Notes">
           {currentLedgerTable(app).notes.map((note) => (
             <li key={note}>{note}</li>

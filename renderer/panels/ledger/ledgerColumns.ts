@@ -5,15 +5,13 @@ import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
 /** A column of the ledger: one number a row, or two that are read together, one above the other. */
 export interface LedgerColumn {
   readonly quantities: readonly Quantity<ShellStatistics>[];
+  /** Shorter headings than the quantities' own titles, where room is short. */
+  readonly headings?: readonly string[];
   /** Room in characters, for the widest number that is usual: columns keep their width while numbers change. */
   readonly characters: number;
 }
 
 const byKey = new Map(SHELL_QUANTITIES.map((q) => [q.key, q]));
-
-function column(characters: number, ...keys: readonly string[]): LedgerColumn {
-  return { quantities: keys.map((key) => byKey.get(key)!), characters };
-}
 
 /** The columns beside the cone. */
 export const NARROW_LEDGER: readonly LedgerColumn[] = [
@@ -21,19 +19,26 @@ export const NARROW_LEDGER: readonly LedgerColumn[] = [
   column(8, 'count', 'zEffective'),
   column(9, 'densityPerMpc3', 'densityErrorPerMpc3'),
   column(9.5, 'volumeMpc3', 'effectiveVolumeMpc3'),
-  column(7, 'lookbackMinGyr', 'lookbackMaxGyr'),
+  { ...column(7, 'lookbackMinGyr', 'lookbackMaxGyr'), headings: ['t_L min', 't_L max'] },
 ];
 
 /** Every number of the core. */
 export const WHOLE_LEDGER: readonly LedgerColumn[] = [
-  column(7, 'zMin', 'zMax'),
+  column(7.5, 'zMin', 'zMax'),
   column(9, 'count', 'weightedCount'),
-  column(8, 'zMean', 'zMedian'),
-  column(8, 'zEffective'),
+  column(8.5, 'zMean', 'zMedian'),
+  column(7.5, 'zEffective'),
   column(8, 'comovingMinMpc', 'comovingMaxMpc'),
-  column(8, 'lookbackMinGyr', 'lookbackMaxGyr'),
-  column(8, 'ageMinGyr', 'ageMaxGyr'),
+  { ...column(8, 'lookbackMinGyr', 'lookbackMaxGyr'), headings: ['t_L min', 't_L max'] },
+  { ...column(8, 'ageMinGyr', 'ageMaxGyr'), headings: ['age min', 'age max'] },
+  column(9.5, 'densityPerMpc3', 'densityErrorPerMpc3'),
   column(10, 'volumeMpc3', 'effectiveVolumeMpc3'),
-  column(9, 'densityPerMpc3', 'densityErrorPerMpc3'),
-  column(10, 'effectiveVolumeUniformMpc3', 'fundamentalWavenumberPerMpc'),
+  {
+    ...column(10, 'fundamentalWavenumberPerMpc', 'effectiveVolumeUniformMpc3'),
+    headings: ['k fund', 'V_eff even'],
+  },
 ];
+
+function column(characters: number, ...keys: readonly string[]): LedgerColumn {
+  return { quantities: keys.map((key) => byKey.get(key)!), characters };
+}

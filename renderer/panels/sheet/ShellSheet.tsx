@@ -84,7 +84,7 @@ export function ShellSheet() {
       <ShellDrawing
         shell={shell}
         units={units}
-        halfAngleRad={((field?.radiusDeg ?? 180) * Math.PI) / 180}
+        halfAngleRad={((field === undefined || field.wide ? 180 : field.halfLengthDeg) * Math.PI) / 180}
         curved={Math.abs(conditions.cosmology.omegaK0) > 1e-9}
       />
       {warnings.length === 0 ? null : (

@@ -2,6 +2,7 @@ import { change } from '../../../shared-core/study/edits.ts';
 import type { StudySource } from '../../../shared-core/study/schema.ts';
 import { useApp } from '../../state/app.ts';
 import { sizeText } from '../../ui/numberText.ts';
+import { revealSection } from '../../ui/openSections.ts';
 
 /** The study names a file that is not at hand. */
 export function SourceMissing({ source }: { readonly source: Extract<StudySource, { kind: 'file' }> }) {
@@ -29,7 +30,7 @@ export function SourceChanged() {
   return (
     <div class="trouble" role="status">
       <p>
-        “{source.name}” is not as it was when the study was made: {sizeText(source.sizeBytes)} then,{' '}
+        “{source.name}” has changed since the study was made: {sizeText(source.sizeBytes)} then,{' '}
         {sizeText(loaded.sizeBytes)} now, other contents. The numbers shown are those of the file as it is
         now.
       </p>
@@ -61,9 +62,16 @@ export function ReadFailure() {
   return (
     <div class="trouble" role="alert">
       <p>{failure.sentence}</p>
-      <button type="button" class="button" onClick={() => engine.readAgain()}>
-        Read again
-      </button>
+      <div class="actions">
+        <button type="button" class="button" onClick={() => engine.readAgain()}>
+          Read again
+        </button>
+        {failure.stage === 'load' ? (
+          <button type="button" class="button" onClick={() => revealSection('columns')}>
+            Columns
+          </button>
+        ) : null}
+      </div>
     </div>
   );
 }
