@@ -1,13 +1,17 @@
 import { Refusal } from '../base/refusal.ts';
+import { createRandom } from '../numerics/random.ts';
 import { DEFAULT_SEED } from './demoSurvey.ts';
 import { createGalaxyColumns } from './galaxyColumns.ts';
 import { latticeSites } from './latticeSites.ts';
 import { RowWriter } from './rowWriter.ts';
 import { FIELDS } from './scenario.ts';
+import { followedSites } from './sites.ts';
 import { openSurvey, shuffleRows } from './survey.ts';
 
 const MOST_GALAXIES = 99_999_999;
 const BATCH = 50_000;
+/** From here on working out a lattice costs less than following each galaxy's own matter. */
+const LATTICE_FROM = 200_000;
 /** The number of galaxies at which clusters have the members of the demo survey. */
 const DEMO_GALAXIES = 60_000;
 
@@ -15,7 +19,7 @@ const DEMO_GALAXIES = 60_000;
  * The demo survey with as many galaxies as wanted, for the same fields of the same universe: chunks of one CSV file
  * with the demo's columns, the header in the first, each chunk ending with a line. No row is spoiled.
  *
- * Every chunk is a fair sample of the whole. Memory stays near 80 MB however many galaxies are made.
+ * Every chunk holds galaxies of all fields and depths. Memory does not grow with the count: some 100 MB.
  *
  * @param count galaxies, a whole number from 1 to 99 999 999
  * @param seed whole number from 0 to 2^32 - 1
@@ -31,12 +35,15 @@ export function makeLargeSurvey(
       'use',
     );
   }
+  // Refuses a bad seed at once, not at the first chunk.
+  createRandom(seed);
   return chunks(count, seed);
 }
 
 function* chunks(count: number, seed: number): Generator<Uint8Array<ArrayBuffer>, void, void> {
   // More galaxies are both more clusters and more members of each.
-  const survey = openSurvey(seed, Math.sqrt(Math.max(1, count / DEMO_GALAXIES)), latticeSites);
+  const richness = Math.sqrt(Math.max(1, count / DEMO_GALAXIES));
+  const survey = openSurvey(seed, richness, count < LATTICE_FROM ? followedSites : latticeSites);
   const galaxies = createGalaxyColumns(Math.min(BATCH, count));
   const fieldOf = new Float64Array(galaxies.raDeg.length);
   const columns = { ...galaxies, fieldOf };

@@ -1,11 +1,12 @@
-import { describe, expect, it } from 'vitest';
+import { beforeAll, describe, expect, it } from 'vitest';
 import { DEFAULT_SEED, makeDemoSurvey } from '../../../shared-core/demo/demoSurvey.ts';
 import { makeLargeSurvey } from '../../../shared-core/demo/largeSurvey.ts';
 import { asciiText } from '../../../shared-core/demo/rowWriter.ts';
 import { DEMO_COLUMNS, FIELDS } from '../../../shared-core/demo/scenario.ts';
 import { countsInCells, fieldOf, placesIn, readDemo } from './readDemo.ts';
 
-const COUNT = 120_000;
+/** Enough for the lattice to be used. */
+const COUNT = 210_000;
 const MIDDLE = { raDeg: 212, decDeg: 12 };
 
 /** Correlation of counts in 40 Mpc cells of the wide field between z 0.6 and 1. */
@@ -30,30 +31,33 @@ async function correlation(one: Iterable<string | Uint8Array>, other: Iterable<s
 }
 
 describe('makeLargeSurvey', () => {
-  it('makes as many good rows as asked for, in chunks of whole lines, the same every time', async () => {
-    const chunks = [...makeLargeSurvey(COUNT)];
-    expect(chunks.length).toBe(3);
+  let chunks: Uint8Array[];
+  beforeAll(() => {
+    chunks = [...makeLargeSurvey(COUNT)];
+  });
+
+  it('makes as many good rows as asked for, in chunks of whole lines', async () => {
+    expect(chunks.length).toBe(5);
     for (const chunk of chunks) expect(chunk.at(-1)).toBe(10);
     expect(asciiText(chunks[0]!.subarray(0, 60)).split('\n')[0]).toBe(DEMO_COLUMNS.join(','));
     const { catalogue } = await readDemo(chunks);
     expect(catalogue.account).toMatchObject({ rowsRead: COUNT, kept: COUNT, setAside: 0 });
-    let at = 0;
-    for (const chunk of makeLargeSurvey(COUNT)) {
-      expect(Buffer.compare(chunk, chunks[at++]!)).toBe(0);
-    }
   });
 
   it('is the universe of the demo survey with more galaxies, not another one', async () => {
-    const large = [...makeLargeSurvey(COUNT)];
-    const demo = makeDemoSurvey().csv;
-    // Chance in counts of a few a cell keeps the correlation well below 1; unlike universes have none.
-    expect(await correlation([demo], large)).toBeGreaterThan(0.6);
-    expect(Math.abs(await correlation([makeDemoSurvey(DEFAULT_SEED + 1).csv], large))).toBeLessThan(0.15);
+    // Chance in counts of a few a cell keeps the correlation below 1; unlike universes have none.
+    expect(await correlation([makeDemoSurvey().csv], chunks)).toBeGreaterThan(0.6);
+    const other = makeLargeSurvey(30_000, DEFAULT_SEED + 1);
+    expect(Math.abs(await correlation(other, chunks))).toBeLessThan(0.15);
+  });
+
+  it('makes the same bytes from the same seed', () => {
+    const [again] = makeLargeSurvey(COUNT);
+    expect(Buffer.compare(again!, chunks[0]!)).toBe(0);
   });
 
   it('shows every field and all depths from the first chunk on', async () => {
-    const [first] = makeLargeSurvey(5_000_000);
-    const { catalogue } = await readDemo([first!]);
+    const { catalogue } = await readDemo([chunks[0]!]);
     expect(catalogue.account.kept).toBe(50_000);
     const counts = FIELDS.map(() => [0, 0]);
     for (let i = 0; i < catalogue.raDeg.length; i++) {
@@ -76,5 +80,9 @@ describe('makeLargeSurvey', () => {
     expect(() => makeLargeSurvey(count)).toThrow(
       /galaxies was asked for; give a whole number from 1 to 99999999/,
     );
+  });
+
+  it('refuses a seed that is none with a sentence, before anything is made', () => {
+    expect(() => makeLargeSurvey(10, 0.5)).toThrow(/The seed is 0.5.* give a whole number/);
   });
 });
