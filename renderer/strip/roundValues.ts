@@ -1,5 +1,7 @@
 /** Round numbers are 1, 2 or 5 times a power of ten. */
 const LEADING = [1, 2, 5] as const;
+/** Distances that differ by less are equal: else an even axis would be marked unevenly. */
+const ROUNDING_PX = 1e-6;
 
 /** The smallest round number that is not below `least` (above 0). */
 export function roundStepAbove(least: number): number {
@@ -75,7 +77,7 @@ function fits(from: number, to: number, step: number, gap: number, pxOf: (value:
   const last = Math.floor(to / step + 1e-9);
   for (let i = Math.ceil(from / step - 1e-9); i <= last; i++) {
     const px = pxOf(i * step);
-    if (Math.abs(px - before) < gap) return false;
+    if (Math.abs(px - before) < gap - ROUNDING_PX) return false;
     before = px;
   }
   return true;
