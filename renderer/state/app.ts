@@ -42,10 +42,6 @@ export function createApp(
     askReplace: (sentence) => questions.askReplace(sentence),
   });
   const engine = createEngineState(studyState, files.engineSource, options.makeWorker);
-  bridge.onFiles((opened, troubles) => {
-    for (const trouble of troubles) notices.tell(trouble);
-    void files.openFiles(opened);
-  });
   bridge.onHostLost(() =>
     notices.tell(
       'The program behind this window has ended, so nothing can be saved from here: start it again, and unsaved work is offered back.',
