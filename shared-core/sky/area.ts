@@ -90,9 +90,11 @@ export function ringArea(arcs: readonly Arc[]): number {
   return area;
 }
 
-/** The area in (0, 4 pi] that all rings of one region bound together, from the sum of their ringArea. */
-export function wrapArea(sum: number): number {
+/** Areas in [0, 4 pi] on the left and on the right of rings whose ringArea add up to `sum`; the smaller keeps its digits. */
+export function bothSides(sum: number): { leftSr: number; rightSr: number } {
   const whole = 4 * Math.PI;
-  const wrapped = sum - whole * Math.floor(sum / whole);
-  return wrapped;
+  const signed = sum % whole;
+  return signed >= 0
+    ? { leftSr: signed, rightSr: whole - signed }
+    : { leftSr: whole + signed, rightSr: -signed };
 }

@@ -1,31 +1,12 @@
-import { type Arc, advance, arcPoint, parameterOf, reverseArc, reverseCircle } from './arc.ts';
+import { type Arc, arcPoint, reverseArc } from './arc.ts';
 import { findCuts } from './crossings.ts';
-import { NearPool } from './nearPool.ts';
 import { joinRings } from './rings.ts';
 import type { CompiledShape } from './shape.ts';
 import type { ShapeIndex } from './shapeIndex.ts';
-import { unitToRaDec, type Vec3 } from './vectors.ts';
+import { combine, dot, unit, unitToRaDec, type Vec3 } from './vectors.ts';
 
-interface NumberedCircles {
-  /** Circles that are the same set of points share a number. */
-  readonly circleOf: readonly number[];
-  /** 1 or -1: the direction in which the arc runs along it. */
-  readonly sense: readonly (1 | -1)[];
-}
-
-function numberCircles(arcs: readonly Arc[], tolerance: number): NumberedCircles {
-  const pool = new NearPool(tolerance);
-  const circleOf: number[] = [];
-  const sense: (1 | -1)[] = [];
-  for (const { circle } of arcs) {
-    const key = [...circle.n, circle.d, circle.r];
-    const against = reverseCircle(circle);
-    const backward = pool.find([...against.n, against.d, against.r]);
-    circleOf.push(backward >= 0 ? backward : pool.findOrAdd(key));
-    sense.push(backward >= 0 ? -1 : 1);
-  }
-  return { circleOf, sense };
-}
+/** Up to a fifth of an arcsecond, which is bridged with an error of the tolerance times this length. */
+const BRIDGES_RAD = [1e-9, 1e-8, 1e-7, 1e-6];
 
 function piecesOf(arc: Arc, cuts: readonly number[], tolerance: number): Arc[] {
   const slack = tolerance / arc.circle.r;
@@ -41,15 +22,32 @@ function piecesOf(arc: Arc, cuts: readonly number[], tolerance: number): Arc[] {
   }));
 }
 
-function covers(arc: Arc, point: Vec3): boolean {
-  return advance(arc, parameterOf(arc.circle, point)) <= arc.sweepRad;
+/** Shapes that hold the point. */
+function shapesAt(shapes: readonly CompiledShape[], index: ShapeIndex, point: Vec3): Set<number> {
+  const { raDeg, decDeg } = unitToRaDec(point);
+  const cell = index.cellOf(raDeg, decDeg);
+  const found = new Set<number>();
+  for (const s of index.shapes.subarray(index.first[cell]!, index.first[cell + 1]!)) {
+    if (shapes[s]!.side(raDeg, decDeg) >= 0) found.add(s);
+  }
+  return found;
+}
+
+function inRegion(holders: ReadonlySet<number>, partCount: number): boolean {
+  let inPart = false;
+  for (const s of holders) {
+    if (s >= partCount) return false;
+    inPart = true;
+  }
+  return inPart;
 }
 
 /**
  * Boundary of (union of the first `partCount` shapes) minus (union of the rest) as closed rings of arcs, interior on
  * the left. Every shape's boundary is cut where it meets the others; a piece belongs to the boundary when just one of
- * its two sides is in the region. Empty for the whole sky and for nothing.
- * @param tolerance radians within which points, and circles, are the same
+ * its two sides is in the region. Both sides are asked right beside the piece's middle, so that edges which two shapes
+ * share, in the same or in opposite directions, need no care. Empty for the whole sky and for nothing.
+ * @param tolerance radians within which an edge lies on another one
  * @returns null when the pieces do not close, which edges that nearly but not quite coincide can cause
  */
 export function regionBoundary(
@@ -58,56 +56,31 @@ export function regionBoundary(
   index: ShapeIndex,
   tolerance: number,
 ): Arc[][] | null {
-  const arcs: Arc[] = [];
-  const shapeOf: number[] = [];
-  shapes.forEach((shape, s) => {
-    for (const arc of shape.arcs) {
-      arcs.push(arc);
-      shapeOf.push(s);
-    }
-  });
-  const { circleOf, sense } = numberCircles(arcs, tolerance / 10);
-  const cuts = findCuts(arcs, shapeOf, circleOf, tolerance);
-  const onCircle = new Map<number, number[]>();
-  circleOf.forEach((circle, i) => {
-    const list = onCircle.get(circle);
-    if (list) list.push(i);
-    else onCircle.set(circle, [i]);
-  });
+  const arcs = shapes.flatMap((shape) => shape.arcs);
+  const shapeOf = shapes.flatMap((shape, s) => shape.arcs.map(() => s));
+  const cuts = findCuts(arcs, shapeOf, tolerance);
+  const aside = tolerance / 10;
 
   const kept: Arc[] = [];
-  for (let i = 0; i < arcs.length; i++) {
-    for (const piece of piecesOf(arcs[i]!, cuts[i]!, tolerance)) {
+  arcs.forEach((arc, i) => {
+    const own = shapeOf[i]!;
+    for (const piece of piecesOf(arc, cuts[i]!, tolerance)) {
       const middle = arcPoint(piece, 0.5);
-      // Overlapping arcs are one boundary: the first of them stands for all.
-      const overlapping = onCircle.get(circleOf[i]!)!.filter((j) => j === i || covers(arcs[j]!, middle));
-      if (overlapping[0] !== i) continue;
-      const leftIn = new Set<number>();
-      const rightIn = new Set<number>();
-      const decided = new Set<number>();
-      for (const j of overlapping) {
-        decided.add(shapeOf[j]!);
-        (sense[j] === sense[i] ? leftIn : rightIn).add(shapeOf[j]!);
-      }
-      const { raDeg, decDeg } = unitToRaDec(middle);
-      const cell = index.cellOf(raDeg, decDeg);
-      for (const s of index.shapes.subarray(index.first[cell]!, index.first[cell + 1]!)) {
-        if (decided.has(s) || shapes[s]!.side(raDeg, decDeg) < 0) continue;
-        leftIn.add(s);
-        rightIn.add(s);
-      }
-      const left = inRegion(leftIn, partCount);
-      if (left !== inRegion(rightIn, partCount)) kept.push(left ? piece : reverseArc(piece));
+      const { n } = arc.circle;
+      const toLeft = unit(combine(1, n, -dot(n, middle), middle));
+      const left = shapesAt(shapes, index, combine(1, middle, aside, toLeft));
+      const right = shapesAt(shapes, index, combine(1, middle, -aside, toLeft));
+      // Where an earlier shape has the same edge, its arc stands for both.
+      if ([...left, ...right].some((s) => s < own && left.has(s) !== right.has(s))) continue;
+      const inside = inRegion(left, partCount);
+      if (inside !== inRegion(right, partCount)) kept.push(inside ? piece : reverseArc(piece));
     }
+  });
+  // Where circles touch or cross at a shallow angle, the last bit of a piece before the crossing is nearer to the other
+  // edge than the tolerance and may be missing: then a longer gap must be bridged.
+  for (const gap of [4 * tolerance, ...BRIDGES_RAD]) {
+    const rings = joinRings(kept, gap);
+    if (rings !== null) return rings;
   }
-  return joinRings(kept, 4 * tolerance);
-}
-
-function inRegion(shapesIn: ReadonlySet<number>, partCount: number): boolean {
-  let inPart = false;
-  for (const s of shapesIn) {
-    if (s >= partCount) return false;
-    inPart = true;
-  }
-  return inPart;
+  return null;
 }

@@ -1,6 +1,6 @@
 import { Refusal } from '../base/refusal.ts';
 import type { Arc } from './arc.ts';
-import { ringArea, wrapArea } from './area.ts';
+import { bothSides, ringArea } from './area.ts';
 import { regionBoundary } from './boundary.ts';
 import { compileShape } from './compileShape.ts';
 import { outlineRings } from './outline.ts';
@@ -8,13 +8,14 @@ import type { Footprint, OutlineRing, Region } from './region.ts';
 import { compileRegionSide, isInRegion } from './regionSide.ts';
 import { type CompiledShape, SMALLEST_AREA_SR } from './shape.ts';
 import { compileShapeIndex, type ShapeIndex } from './shapeIndex.ts';
-import { DEG2_PER_SR, normaliseRaDeg, SPREAD_DIRECTIONS, unitToRaDec } from './vectors.ts';
+import { DEG2_PER_SR, isPosition, normaliseRaDeg, SPREAD_DIRECTIONS, unitToRaDec } from './vectors.ts';
 
 /**
- * Points, and circles, nearer than this are taken for the same when shapes are cut by each other (radians; the first
- * is 2e-5 arcseconds). The greater ones are tried only where edges nearly coincide and the first leaves a gap.
+ * Points nearer than this are taken for the same when shapes are cut by each other (radians; the first is 2e-6
+ * arcseconds). The greater ones are tried only where edges nearly coincide and the first leaves a gap. Areas err by
+ * less than the tolerance times the length of such edges.
  */
-const TOLERANCES_RAD = [1e-10, 1e-9, 1e-8];
+const TOLERANCES_RAD = [1e-11, 1e-10, 1e-9, 1e-8];
 
 interface Boundary {
   readonly rings: readonly (readonly Arc[])[];
@@ -28,7 +29,7 @@ function combine(shapes: readonly CompiledShape[], partCount: number, index: Sha
     if (rings.length === 0) return { rings, areaSr: allOrNothing(shapes, partCount, index) };
     let sum = 0;
     for (const ring of rings) sum += ringArea(ring);
-    return { rings, areaSr: Math.abs(sum) < SMALLEST_AREA_SR ? 0 : wrapArea(sum) };
+    return { rings, areaSr: Math.abs(sum) < SMALLEST_AREA_SR ? 0 : bothSides(sum).leftSr };
   }
   throw new Refusal(
     'Two shapes of the region have edges that lie within a thousandth of an arcsecond of each other without being the same, so their outline cannot be joined: give both the same edge, or move one.',
@@ -79,7 +80,7 @@ export function compileRegion(region: Region): Footprint {
     origin: 'given',
     areaDeg2: boundary.areaSr * DEG2_PER_SR,
     estimate: null,
-    contains: (raDeg, decDeg) => inRegion(normaliseRaDeg(raDeg), decDeg),
+    contains: (raDeg, decDeg) => isPosition(raDeg, decDeg) && inRegion(normaliseRaDeg(raDeg), decDeg),
     outline() {
       outline ??= outlineRings(boundary.rings);
       return outline;

@@ -1,35 +1,40 @@
 import { type Arc, advance, arcEnd, arcExtent, arcStart, type Circle, parameterOf, TWO_PI } from './arc.ts';
-import { cross, dot, norm, subtract, type Vec3 } from './vectors.ts';
+import { cross, dot, norm, subtract, unit, type Vec3 } from './vectors.ts';
 
 /**
- * The points where two circles that are not the same cross: none or two.
+ * The points where two circles cross: two, one where they touch (within `tolerance`), or none; none also for circles
+ * that are the same.
  * With e1 = n1, e2 at right angles to it towards n2 and e3 = e1 x e2, a crossing is d1 e1 + y e2 +- z e3 with
  * y = (d2 - d1 cos a)/sin a, z^2 = r1^2 - y^2, a the angle between n1 and n2. All differences are taken of
- * 1 - cos, so that small circles keep their digits.
+ * 1 - cos, and the smaller circle is taken first, so that small circles keep their digits.
  */
-export function circleCrossings(first: Circle, second: Circle, tolerance: number): Vec3[] {
+export function circleCrossings(one: Circle, other: Circle, tolerance: number): Vec3[] {
+  const [first, second] = one.r <= other.r ? [one, other] : [other, one];
   // A circle is the same set seen from either pole; the nearer pole is the one with small 1 - d.
   const [n1, d1] = nearerPole(first);
   const [n2, d2] = nearerPole(second);
   const step = subtract(n2, n1);
   const w = cross(n1, step);
   const sine = norm(w);
-  if (sine < tolerance) return [];
+  if (sine < 1e-14) return [];
   const versine1 = (first.r * first.r) / (1 + d1);
   const versine2 = (second.r * second.r) / (1 + d2);
   const versineAngle = dot(step, step) / 2;
   const y = (versine1 - versine2 + versineAngle - versineAngle * versine1) / sine;
-  const z2 = (first.r - y) * (first.r + y);
-  if (!(z2 >= 0)) return [];
-  const z = Math.sqrt(z2);
   const e3: Vec3 = [w[0] / sine, w[1] / sine, w[2] / sine];
   const e2 = cross(e3, n1);
-  const at = (s: number): Vec3 => [
-    d1 * n1[0] + y * e2[0] + s * z * e3[0],
-    d1 * n1[1] + y * e2[1] + s * z * e3[1],
-    d1 * n1[2] + y * e2[2] + s * z * e3[2],
+  const at = (z: number): Vec3 => [
+    d1 * n1[0] + y * e2[0] + z * e3[0],
+    d1 * n1[1] + y * e2[1] + z * e3[1],
+    d1 * n1[2] + y * e2[2] + z * e3[2],
   ];
-  return [at(1), at(-1)];
+  // How far the smaller circle reaches beyond the other one: where it is next to nothing the crossings, if there are
+  // any, are made of rounding errors, and the point between them stands for both.
+  const reach = first.r - Math.abs(y);
+  if (Math.abs(reach) <= tolerance / 10) return [unit(at(0))];
+  if (reach < 0) return [];
+  const z = Math.sqrt(reach * (first.r + Math.abs(y)));
+  return [at(z), at(-z)];
 }
 
 function nearerPole({ n, d }: Circle): [Vec3, number] {
@@ -48,21 +53,18 @@ export function placeOnArc(arc: Arc, point: Vec3, tolerance: number): number | n
   return along >= TWO_PI - slack ? 0 : null;
 }
 
+/** By chords from the nearer pole, which keep their digits for small circles. */
 function liesOnCircle(circle: Circle, point: Vec3, tolerance: number): boolean {
-  return Math.abs(dot(circle.n, point) - circle.d) <= tolerance * circle.r;
+  const [n, d] = nearerPole(circle);
+  const versine = (circle.r * circle.r) / (1 + d);
+  return Math.abs(norm(subtract(point, n)) - Math.sqrt(2 * versine)) <= tolerance;
 }
 
 /**
  * For each arc the places (as in placeOnArc) where it must be cut so that no piece crosses another arc of a
  * different shape, runs past its end, or overlaps it in part.
- * @param circleOf number of each arc's circle, equal numbers being equal circles
  */
-export function findCuts(
-  arcs: readonly Arc[],
-  shapeOf: readonly number[],
-  circleOf: readonly number[],
-  tolerance: number,
-): number[][] {
+export function findCuts(arcs: readonly Arc[], shapeOf: readonly number[], tolerance: number): number[][] {
   const cuts: number[][] = arcs.map(() => []);
   const cut = (i: number, point: Vec3): void => {
     const place = placeOnArc(arcs[i]!, point, tolerance);
@@ -89,7 +91,6 @@ export function findCuts(
       if (shapeOf[i] === shapeOf[j] || apart(xs, i, j) || apart(ys, i, j)) continue;
       cutAtEnds(i, j);
       cutAtEnds(j, i);
-      if (circleOf[i] === circleOf[j]) continue;
       for (const point of circleCrossings(arcs[i]!.circle, arcs[j]!.circle, tolerance)) {
         if (
           placeOnArc(arcs[i]!, point, tolerance) === null ||

@@ -4,7 +4,7 @@ import { CellSet } from './cellSet.ts';
 import { pixelAreaDeg2, raDecToNest } from './healpix.ts';
 import { BORDER, classifyCells, coarsen, countFinest, type OccupiedCells, RIM } from './occupiedCells.ts';
 import type { Footprint, OutlineRing } from './region.ts';
-import { normaliseRaDeg } from './vectors.ts';
+import { isPosition } from './vectors.ts';
 
 /** Greatest share of empty cells well inside the field, where clustering empties more of them than chance would. */
 const MAX_EMPTY_SHARE = 0.01;
@@ -84,10 +84,11 @@ function measure({ counts }: OccupiedCells, kinds: Uint8Array): { cells: number;
  * The footprint of a catalogue whose region nobody stated, from the HEALPix cells (nside 1 to 8192) that hold galaxies.
  * An estimate in every part: `areaDeg2` counts cells inside the field whole and those on its border by the share that
  * their galaxies fill, with the standard error in `estimate.areaErrorDeg2`; contains() says whether a position's
- * cell is occupied; outline() is the boundary of the occupied cells. Gaps as large as a cell stay gaps.
+ * cell is occupied; outline() is the boundary of the occupied cells. Gaps as large as a cell stay gaps. The galaxies
+ * say where galaxies are, not where one looked: a sample of nothing but a few clumps is taken for as many fields.
  * @param raDeg any finite degrees
  * @param decDeg in [-90, 90]; same length
- * @throws Refusal (kind 'input') for a catalogue without rows
+ * @throws Refusal (kind 'input') for a catalogue without rows; Error for a position that is none
  */
 export function estimateFootprint(raDeg: ArrayLike<number>, decDeg: ArrayLike<number>): Footprint {
   if (raDeg.length === 0) {
@@ -110,7 +111,7 @@ export function estimateFootprint(raDeg: ArrayLike<number>, decDeg: ArrayLike<nu
       cells: cells.length,
       areaErrorDeg2: area.error * cellAreaDeg2,
     },
-    contains: (ra, dec) => occupied.has(raDecToNest(nside, normaliseRaDeg(ra), dec)),
+    contains: (ra, dec) => isPosition(ra, dec) && occupied.has(raDecToNest(nside, ra, dec)),
     outline() {
       outline ??= cellOutline(nside, cells, occupied);
       return outline;

@@ -36,8 +36,8 @@ export const WIDE_RADIUS_DEG = 70;
 /** Pieces are one field when the gap between them is at most half the radius of the larger, and at most this. */
 const CLOSE_SHARE = 0.5;
 const CLOSE_DEG = 5;
-/** Variances along and across that differ by less than this make no direction the widest. */
-const ROUND = 1.02;
+/** Variances along and across within this ratio make no direction the widest: 7% in length, below what cells resolve. */
+const ROUND = 1.15;
 
 /**
  * The fields of a footprint, largest first: its connected pieces, those that lie close together as one (the gap at

@@ -19,19 +19,17 @@ export function isNside(nside: number): boolean {
   return Number.isInteger(nside) && nside >= 1 && nside <= MAX_NSIDE && (nside & (nside - 1)) === 0;
 }
 
-/** @throws RangeError: a fault of the caller, not of a user */
+/** @throws Error: a fault of the caller, not of a user */
 function checkNside(nside: number): void {
   if (!isNside(nside)) {
-    throw new RangeError(`nside is ${nside} but must be a power of two from 1 to ${MAX_NSIDE}`);
+    throw new Error(`nside is ${nside} but must be a power of two from 1 to ${MAX_NSIDE}`);
   }
 }
 
 export function checkPixel(nside: number, pixel: number): void {
   checkNside(nside);
   if (!(Number.isInteger(pixel) && pixel >= 0 && pixel < 12 * nside * nside)) {
-    throw new RangeError(
-      `pixel is ${pixel} but must be from 0 to ${12 * nside * nside - 1} for nside ${nside}`,
-    );
+    throw new Error(`pixel is ${pixel} but must be from 0 to ${12 * nside * nside - 1} for nside ${nside}`);
   }
 }
 

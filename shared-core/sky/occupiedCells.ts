@@ -1,6 +1,6 @@
 import { MAX_NSIDE, raDecToNest } from './healpix.ts';
 import { CORNER_X, CORNER_Y, cellPlace, cellsAtCorner, cornerKey } from './healpixCells.ts';
-import { normaliseRaDeg } from './vectors.ts';
+import { isPosition } from './vectors.ts';
 
 /** Cells that hold at least one galaxy. */
 export interface OccupiedCells {
@@ -15,7 +15,9 @@ export interface OccupiedCells {
 export function countFinest(raDeg: ArrayLike<number>, decDeg: ArrayLike<number>): OccupiedCells {
   const all = new Uint32Array(raDeg.length);
   for (let i = 0; i < all.length; i++) {
-    all[i] = raDecToNest(MAX_NSIDE, normaliseRaDeg(raDeg[i]!), decDeg[i]!);
+    const [ra, dec] = [raDeg[i]!, decDeg[i]!];
+    if (!isPosition(ra, dec)) throw new Error(`row ${i} is at RA ${ra}, Dec ${dec}, which is no position`);
+    all[i] = raDecToNest(MAX_NSIDE, ra, dec);
   }
   all.sort();
   return gather(MAX_NSIDE, all, null, 0);

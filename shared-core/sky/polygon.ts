@@ -1,6 +1,6 @@
 import { Refusal } from '../base/refusal.ts';
 import { reverseArc } from './arc.ts';
-import { ringArea, wrapArea } from './area.ts';
+import { bothSides, ringArea } from './area.ts';
 import { checkedEdges } from './polygonChecks.ts';
 import { compilePolygonSide } from './polygonSide.ts';
 import type { SkyShape } from './region.ts';
@@ -21,16 +21,14 @@ function middleOf(points: readonly Vec3[]): Vec3 {
  */
 export function compilePolygon(polygon: Extract<SkyShape, { kind: 'polygon' }>): CompiledShape {
   const { vertices, edges } = checkedEdges(polygon.verticesDeg);
-  const left = ringArea(edges);
-  const leftSr = wrapArea(left);
-  const whole = 4 * Math.PI;
-  if (Math.min(Math.abs(left), leftSr, whole - leftSr) < SMALLEST_AREA_SR) {
+  const { leftSr, rightSr } = bothSides(ringArea(edges));
+  if (Math.min(leftSr, rightSr) < SMALLEST_AREA_SR) {
     throw new Refusal(
       `The polygon of ${vertices.length} vertices encloses no area: give vertices that do not lie on one great circle.`,
       'use',
     );
   }
-  const keepLeft = leftSr <= whole / 2 === (polygon.side === 'smaller');
+  const keepLeft = leftSr <= rightSr === (polygon.side === 'smaller');
   const arcs = keepLeft ? edges : edges.map(reverseArc).reverse();
   const ras = polygon.verticesDeg.map((vertex) => normaliseRaDeg(vertex[0]));
   // Reversed, the edges start at vertices 0, n - 1, ..., 1: the last edge ended at vertex 0.
@@ -41,7 +39,7 @@ export function compilePolygon(polygon: Extract<SkyShape, { kind: 'polygon' }>):
   const antipode = unitToRaDec([-centre[0], -centre[1], -centre[2]]);
   return {
     arcs,
-    areaSr: keepLeft ? leftSr : whole - leftSr,
+    areaSr: keepLeft ? leftSr : rightSr,
     centre,
     radiusRad: boundingRadius(centre, arcs, side(antipode.raDeg, antipode.decDeg) >= 0),
     side,

@@ -1,12 +1,11 @@
 import { Refusal } from '../base/refusal.ts';
 import { type Arc, arcExtent, greatCircleArc } from './arc.ts';
-import { EDGE_TOLERANCE_RAD } from './shape.ts';
 import { checkDec, checkRa } from './shapeChecks.ts';
 import { cross, dot, normaliseRaDeg, raDecToUnit, subtract, type Vec3 } from './vectors.ts';
 
 type Vertices = readonly (readonly [raDeg: number, decDeg: number])[];
 
-/** Vertices nearer than this are one and the same: 2e-5 arcseconds. */
+/** Vertices nearer than this are one and the same, and edges nearer than this touch: 2e-5 arcseconds. */
 const SAME_VERTEX_RAD = 1e-10;
 
 export interface PolygonEdges {
@@ -27,7 +26,7 @@ function turn(a: Vec3, b: Vec3, c: Vec3): number {
 
 function onEdge(edge: Arc, a: Vec3, b: Vec3, p: Vec3): boolean {
   const n = edge.circle.n;
-  if (Math.abs(dot(n, p)) > EDGE_TOLERANCE_RAD) return false;
+  if (Math.abs(dot(n, p)) > SAME_VERTEX_RAD) return false;
   return dot(cross(n, a), p) >= 0 && dot(cross(b, n), p) >= 0;
 }
 

@@ -1,9 +1,12 @@
-import { type Arc, arcEnd, arcStart, tangent } from './arc.ts';
+import { type Arc, arcEnd, arcStart, greatCircleArc, tangent } from './arc.ts';
 import { NearPool } from './nearPool.ts';
-import { cross, dot, type Vec3 } from './vectors.ts';
+import { cross, dot, norm, subtract, type Vec3 } from './vectors.ts';
 
 /** Circles that touch can seem to cross twice at one point: a ring of no size (0.02 arcseconds round). */
 const SHORTEST_RING_RAD = 1e-7;
+
+/** Gaps wider than this (far above rounding) get a great-circle arc of their own, so that rings truly close. */
+const GAP_RAD = 1e-14;
 
 /** How far to turn clockwise about `up` from direction `from` to direction `to`, in (0, 2 pi]. */
 function clockwise(up: Vec3, from: Vec3, to: Vec3): number {
@@ -19,8 +22,8 @@ function clockwise(up: Vec3, from: Vec3, to: Vec3): number {
  */
 export function joinRings(arcs: readonly Arc[], tolerance: number): Arc[][] | null {
   const pool = new NearPool(tolerance);
-  const startNode = arcs.map((arc) => pool.findOrAdd(arcStart(arc)));
-  const endNode = arcs.map((arc) => pool.findOrAdd(arcEnd(arc)));
+  const startNode = arcs.map((arc) => pool.numberOf(arcStart(arc)));
+  const endNode = arcs.map((arc) => pool.numberOf(arcEnd(arc)));
   const leaving = new Map<number, number[]>();
   startNode.forEach((node, i) => {
     const list = leaving.get(node);
@@ -55,6 +58,8 @@ export function joinRings(arcs: readonly Arc[], tolerance: number): Arc[][] | nu
     for (let j = i; !used[j]; j = next[j]!) {
       used[j] = 1;
       ring.push(arcs[j]!);
+      const [from, to] = [arcEnd(arcs[j]!), arcStart(arcs[next[j]!]!)];
+      if (norm(subtract(to, from)) > GAP_RAD) ring.push(greatCircleArc(from, to));
     }
     const length = ring.reduce((sum, { circle, sweepRad }) => sum + sweepRad * circle.r, 0);
     if (length > SHORTEST_RING_RAD) rings.push(ring);

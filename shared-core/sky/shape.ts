@@ -1,8 +1,8 @@
 import { type Arc, arcExtent } from './arc.ts';
 import type { Vec3 } from './vectors.ts';
 
-/** Nearer than this to a cap's or polygon's edge counts as on it: 2e-7 arcseconds, far above rounding. */
-export const EDGE_TOLERANCE_RAD = 1e-12;
+/** Nearer than this to a cap's or polygon's edge counts as on it: 2e-8 arcseconds, a hundred times the rounding. */
+export const EDGE_TOLERANCE_RAD = 1e-13;
 
 /** Regions below 1e-9 square degrees (a tenth of an arcsecond across) are taken for an error: no area. */
 export const SMALLEST_AREA_SR = 3e-13;

@@ -15,6 +15,11 @@ export function normaliseRaDeg(raDeg: number): number {
   return turned >= 360 ? 0 : turned;
 }
 
+/** Whether RA is finite and Dec lies in [-90, 90] degrees. */
+export function isPosition(raDeg: number, decDeg: number): boolean {
+  return Number.isFinite(raDeg) && decDeg >= -90 && decDeg <= 90;
+}
+
 /** Unit vector of a sky position in degrees; any finite RA, Dec in [-90, 90]. */
 export function raDecToUnit(raDeg: number, decDeg: number): Vec3 {
   const ra = raDeg * RAD_PER_DEG;

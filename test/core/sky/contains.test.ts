@@ -2,6 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { compileRegion } from '../../../shared-core/sky/compileRegion.ts';
 import { compileShape } from '../../../shared-core/sky/compileShape.ts';
+import { estimateFootprint } from '../../../shared-core/sky/estimate.ts';
 import type { SkyShape } from '../../../shared-core/sky/region.ts';
 import { cross, dot, raDecToUnit, type Vec3 } from '../../../shared-core/sky/vectors.ts';
 import { evenPositions, randomShape, region, seeded, starVertices, turned } from './sample.ts';
@@ -23,7 +24,7 @@ describe('the boundary belongs to the region', () => {
   it('rim of a cap', () => {
     const cap = compile(['cap:30,0,10']);
     expect([cap.contains(40, 0), cap.contains(20, 0), cap.contains(30, 10)]).toEqual([true, true, true]);
-    // 1e-9 deg is a thousand times the edge's tolerance.
+    // 1e-9 deg is a hundred times the edge's tolerance.
     expect([cap.contains(40 + 1e-9, 0), cap.contains(30, 10 + 1e-9)]).toEqual([false, false]);
   });
 
@@ -70,6 +71,31 @@ describe('the boundary belongs to the region', () => {
       expect(compile(['polygon:0,80,90,80,180,80']).contains(ra, 90)).toBe(true);
       expect(compile(['polygon:0,60,120,60,240,60']).contains(ra, -90)).toBe(false);
     }
+  });
+});
+
+describe('what is no position', () => {
+  it('is nowhere', () => {
+    const estimate = estimateFootprint([10, 11, 12], [0, 0, 0]);
+    const footprints = [
+      'sky',
+      'box:0,360,-90,90',
+      'box:350,10,-5,5',
+      'cap:0,0,170',
+      'polygon:0,0,50,0,0,50',
+    ].map((word) => compile([word]));
+    for (const footprint of [...footprints, estimate]) {
+      for (const [ra, dec] of [
+        [Number.NaN, 0],
+        [0, Number.NaN],
+        [Number.POSITIVE_INFINITY, 0],
+        [0, 90.0001],
+        [0, -91],
+      ] as const) {
+        expect(footprint.contains(ra, dec)).toBe(false);
+      }
+    }
+    expect(() => estimateFootprint([1, Number.NaN], [1, 1])).toThrow(/row 1 is at RA NaN/);
   });
 });
 
