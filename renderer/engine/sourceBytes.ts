@@ -8,9 +8,15 @@ export async function sourceBytes(
   source: EngineSource,
   openUrl: (url: string) => Promise<AsyncIterable<Uint8Array>>,
 ): Promise<AsyncIterable<Uint8Array>> {
-  if (source.kind === 'url') return openUrl(source.url);
-  const bytes = new TextEncoder().encode(makeDemoSurvey(source.seed).csv);
-  return inChunks(bytes);
+  return source.kind === 'url' ? openUrl(source.url) : inChunks(demoBytes(source.seed));
+}
+
+let made: { readonly seed: number; readonly bytes: Uint8Array } | null = null;
+
+// Making the survey takes seconds, and its preview, its rows and its set-aside list all ask for it.
+function demoBytes(seed: number): Uint8Array {
+  made = made?.seed === seed ? made : { seed, bytes: new TextEncoder().encode(makeDemoSurvey(seed).csv) };
+  return made.bytes;
 }
 
 async function* inChunks(bytes: Uint8Array): AsyncIterable<Uint8Array> {
