@@ -10,7 +10,6 @@ import { colouring, coneFootprint, coneShells, radialScale, VIEW_NAMES } from '.
 import { GalaxyCard } from './GalaxyCard.tsx';
 import { readTheme } from './readTheme.ts';
 import { StageBar } from './StageBar.tsx';
-import { StageLegend } from './StageLegend.tsx';
 import { separationText } from './separationText.ts';
 
 /** Mounts the cone and keeps it in step with the study, the strip and the ledger. */
@@ -129,9 +128,8 @@ export function Stage() {
 
   return (
     <div class="stage-frame">
+      <StageBar coneState={coneState} colours={colours} />
       <div class="stage-cone" ref={place} />
-      <StageBar coneState={coneState} />
-      <StageLegend colours={colours} />
       <GalaxyCard hovered={hovered} />
       {drawing.value !== null && drawing.value.webgl !== 'ready' ? (
         <p class="stage-notice" role="status">

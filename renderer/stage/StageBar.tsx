@@ -1,12 +1,14 @@
 import type { ReadonlySignal } from '@preact/signals';
 import { changeLook } from '../../shared-core/study/edits.ts';
-import { COLOUR_CHOICES, type ColourChoice, type RadialReading } from '../../shared-core/study/schema.ts';
+import { COLOUR_CHOICES, type ColourChoice } from '../../shared-core/study/schema.ts';
 import type { ViewState as ConeState } from '../cone/types.ts';
 import { useApp } from '../state/app.ts';
 import type { CameraView } from '../state/viewState.ts';
 import { IconButton } from '../ui/IconButton.tsx';
 import { Segments } from '../ui/Segments.tsx';
+import { type Colours, VIEW_NAMES } from './coneInputs.ts';
 import { SidewaysField } from './SidewaysField.tsx';
+import { StageLegend } from './StageLegend.tsx';
 
 const VIEWS: readonly { value: CameraView; label: string; title: string; needs?: 'fields' }[] = [
   { value: 'side-on', label: 'Side-on', title: 'Radius to the right, aligned with the strip (1)' },
@@ -21,11 +23,6 @@ const VIEWS: readonly { value: CameraView; label: string; title: string; needs?:
     needs: 'fields',
   },
 ];
-const READINGS: readonly { value: RadialReading; label: string; title: string }[] = [
-  { value: 'comoving', label: 'Mpc', title: 'Radius is comoving distance (R steps on)' },
-  { value: 'redshift', label: 'z', title: 'Radius is redshift (R steps on)' },
-  { value: 'lookback', label: 'Gyr', title: 'Radius is lookback time (R steps on)' },
-];
 const COLOUR_WORDS: Readonly<Record<ColourChoice, string>> = {
   redshift: 'redshift',
   lookback: 'lookback time',
@@ -34,26 +31,38 @@ const COLOUR_WORDS: Readonly<Record<ColourChoice, string>> = {
   density: 'local density',
 };
 
-/** The controls of the cone: view, radius, colour, field and widening. */
-export function StageBar({ coneState }: { readonly coneState: ReadonlySignal<ConeState | null> }) {
+/** The view that the cone is in; '' once it was orbited away from all of them. */
+function shownView(state: ConeState | null): CameraView | '' {
+  if (state === null) return 'side-on';
+  if (!state.exact) return '';
+  return VIEWS.find((v) => VIEW_NAMES[v.value] === state.view)?.value ?? '';
+}
+
+/** The controls of the cone: view, colour with its legend, field and widening. */
+export function StageBar({
+  coneState,
+  colours,
+}: {
+  readonly coneState: ReadonlySignal<ConeState | null>;
+  readonly colours: ReadonlySignal<Colours | null>;
+}) {
   const { studyState, view, engine } = useApp();
   const { look } = studyState.study.value;
   const fields = coneState.value?.fieldCount ?? 1;
+  const stepField = (step: number): void => {
+    // Side by side all fields are in view: stepping means looking at one.
+    if (coneState.value?.view === 'parallel') view.lookFrom('side-on');
+    view.field.value = (view.field.value + step) % fields;
+  };
   const hasMagnitude = engine.selected.value?.magnitude != null;
   return (
     <fieldset class="stage-bar">
       <legend class="unseen">How the cone is shown</legend>
       <Segments
         label="View"
-        value={view.cameraView.value}
+        value={shownView(coneState.value) as CameraView}
         choices={VIEWS.filter((v) => v.needs === undefined || fields > 1)}
         onChoose={(value) => view.lookFrom(value)}
-      />
-      <Segments
-        label="Radius"
-        value={look.radial}
-        choices={READINGS}
-        onChoose={(radial) => studyState.perform(changeLook('Read the radius otherwise', { radial }))}
       />
       <label class="stage-colour">
         <span>colour</span>
@@ -72,22 +81,14 @@ export function StageBar({ coneState }: { readonly coneState: ReadonlySignal<Con
           ))}
         </select>
       </label>
+      <StageLegend colours={colours} />
       {fields > 1 ? (
         <span class="stage-fields">
-          <IconButton
-            icon="before"
-            label="Previous field"
-            onClick={() => (view.field.value = (view.field.value + fields - 1) % fields)}
-          />
+          <IconButton icon="before" label="Previous field" onClick={() => stepField(fields - 1)} />
           <span>
             field {(coneState.value?.field ?? 0) + 1} of {fields}
           </span>
-          <IconButton
-            icon="after"
-            label="Next field"
-            detail="F"
-            onClick={() => (view.field.value = (view.field.value + 1) % fields)}
-          />
+          <IconButton icon="after" label="Next field" detail="F" onClick={() => stepField(1)} />
         </span>
       ) : null}
       <SidewaysField coneState={coneState} />

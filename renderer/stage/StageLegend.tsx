@@ -1,26 +1,18 @@
 import type { ReadonlySignal } from '@preact/signals';
 import { legend } from '../colour/legend.ts';
 import { useApp } from '../state/app.ts';
-import type { ColourLegend } from './coneInputs.ts';
+import type { Colours } from './coneInputs.ts';
 
 /** What the colours of the galaxies mean. */
-export function StageLegend({
-  colours,
-}: {
-  readonly colours: ReadonlySignal<{ legend: ColourLegend | null } | null>;
-}) {
+export function StageLegend({ colours }: { readonly colours: ReadonlySignal<Colours | null> }) {
   const { view } = useApp();
   const shown = colours.value?.legend;
   if (shown == null) return null;
-  const reversed = (colours.value as { input?: { reversed?: boolean } }).input?.reversed === true;
   return (
-    <div class="stage-legend">
-      <span>{shown.title}</span>
-      <span class="stage-legend-bar">
-        <span>{shown.low}</span>
-        <i style={{ background: legend(shown.map, view.theme.value, reversed).cssGradient }} />
-        <span>{shown.high}</span>
-      </span>
-    </div>
+    <span class="stage-legend" title={shown.title}>
+      <span>{shown.low}</span>
+      <i style={{ background: legend(shown.map, view.theme.value, shown.reversed).cssGradient }} />
+      <span>{shown.high}</span>
+    </span>
   );
 }

@@ -114,6 +114,13 @@ export interface ColourLegend {
   readonly map: string;
   readonly low: string;
   readonly high: string;
+  readonly reversed: boolean;
+}
+
+/** A way to colour, and what its legend says (none where the shells' own marks say it). */
+export interface Colours {
+  readonly input: ColouringInput;
+  readonly legend: ColourLegend | null;
 }
 
 /** How galaxies are coloured, and what the legend says; null while the values are still being made. */
@@ -122,7 +129,7 @@ export function colouring(
   selected: Selected,
   lookbackGyr: Float32Array | null,
   density: Float32Array | null,
-): { input: ColouringInput; legend: ColourLegend | null } | null {
+): Colours | null {
   const { redshift } = selected.sample;
   switch (choice) {
     case 'shell':
@@ -166,7 +173,7 @@ function valued(
 ) {
   return {
     input: { kind: 'values', values, from, to, map, reversed } as const,
-    legend: { title, map, low: words(reversed ? to : from), high: words(reversed ? from : to) },
+    legend: { title, map, low: words(from), high: words(to), reversed },
   };
 }
 
