@@ -42,8 +42,7 @@ export function drawCosmicWeb(random: Random): Web {
   return webOf([drawWaveTile(long, random), drawWaveTile(short, random)]);
 }
 
-/** The web of tiles already drawn. */
-export function webOf(tiles: readonly WaveTile[]): Web {
+function webOf(tiles: readonly WaveTile[]): Web {
   const flow = new Float64Array(4);
   const step = 1 / STEPS;
   return {

@@ -54,12 +54,13 @@ export function createObserver(field: SurveyField, universe: Universe, random: R
   const nearestMpc = axis.fromMpc;
   const farthestMpc = axis.fromMpc + (knots - 1) * axis.stepMpc;
   const site = new Float64Array(SITE.size);
-  /** Velocities of their own and errors of measurement together, in units of 1 + z. */
-  let spread = 0;
   const cluster: Cluster = { members: 0, radiusMpc: 0, dispersionKmS: 0 };
 
-  /** Measures a galaxy near the site; false when it lies outside the field or was not measured. */
-  function measure(columns: GalaxyColumns, row: number): boolean {
+  /**
+   * Measures a galaxy near the site; false when it lies outside the field or was not measured.
+   * @param spread of its redshift, in units of 1 + z
+   */
+  function measure(columns: GalaxyColumns, row: number, spread: number): boolean {
     let x = site[SITE.x]!;
     let y = site[SITE.y]!;
     let z = site[SITE.z]!;
@@ -118,9 +119,10 @@ export function createObserver(field: SurveyField, universe: Universe, random: R
         if (!(r > nearestMpc && r < farthestMpc)) continue;
         drawCluster(site[SITE.logDensity]!, onAxis(axis, memberScale, r), random, cluster);
         const velocity = cluster.dispersionKmS / SPEED_OF_LIGHT_KM_S;
-        spread = Math.sqrt(velocity * velocity + REDSHIFT_ERROR * REDSHIFT_ERROR);
+        // Velocities of their own and errors of measurement together, in units of 1 + z
+        const spread = Math.sqrt(velocity * velocity + REDSHIFT_ERROR * REDSHIFT_ERROR);
         for (let i = 0; i < cluster.members && row < to; i++) {
-          if (measure(columns, row)) row++;
+          if (measure(columns, row, spread)) row++;
         }
       }
     },
