@@ -1,5 +1,3 @@
-import { NumberColumn } from './numberColumn.ts';
-
 /** Rows at a position where an earlier row stands already: `row[k]` repeats `first[k]`. Ascending in row. */
 export interface Repeats {
   readonly row: Uint32Array;
@@ -10,7 +8,7 @@ const known = new WeakMap<Float64Array, Repeats>();
 
 /**
  * Rows that repeat the RA and Dec of an earlier row exactly (equal as numbers, no tolerance). Arrays of one length,
- * no NaN. About six bytes a row while it works; the answer is kept for as long as the RA array lives.
+ * no NaN. About eight bytes a row while it works; the answer is kept for as long as the RA array lives.
  */
 export function findRepeats(raDeg: Float64Array, decDeg: Float64Array): Repeats {
   let repeats = known.get(raDeg);
@@ -38,35 +36,71 @@ export function countKeptRepeats(repeats: Repeats, keep: Uint8Array): number {
   return repeated;
 }
 
-/** A hash table with linear probing that holds, for each position met, its first row plus one. */
+/** Parts of so many rows on average: their tables stay in the processor's cache. */
+const ROWS_A_PART = 8192;
+
+/**
+ * Rows are laid into parts by the upper bits of their hash, in file order; within a part a small table with linear
+ * probing finds equal hashes, and only those are compared. One table for all rows would miss the cache at every step.
+ */
 function searchRepeats(raDeg: Float64Array, decDeg: Float64Array): Repeats {
   const rows = raDeg.length;
-  const slots = Math.ceil(rows * 1.5) + 1;
-  const table = new Uint32Array(slots);
-  const raBits = new Uint32Array(raDeg.buffer, raDeg.byteOffset, 2 * rows);
-  const decBits = new Uint32Array(decDeg.buffer, decDeg.byteOffset, 2 * rows);
-  const repeated = new NumberColumn();
-  const firsts = new NumberColumn();
-  for (let i = 0; i < rows; i++) {
-    let hash = mix(mix(0, raBits, i), decBits, i);
-    hash = Math.imul(hash ^ (hash >>> 16), 0x85ebca6b);
-    hash = (hash ^ (hash >>> 13)) >>> 0;
-    let slot = Math.floor((hash / 4_294_967_296) * slots);
-    for (;;) {
-      const entry = table[slot]!;
-      if (entry === 0) {
-        table[slot] = i + 1;
-        break;
+  const bits = Math.min(16, Math.max(0, Math.ceil(Math.log2(rows / ROWS_A_PART + 1e-9))));
+  const hashes = new Uint32Array(rows);
+  hashPositions(raDeg, decDeg, hashes);
+  const { order, starts } = partsOf(hashes, bits);
+  let largest = 0;
+  for (let p = 0; p + 1 < starts.length; p++) largest = Math.max(largest, starts[p + 1]! - starts[p]!);
+  const table = new Uint32Array(2 ** Math.ceil(Math.log2(2 * largest + 2)));
+  const mask = table.length - 1;
+  const found: [row: number, first: number][] = [];
+  for (let p = 0; p + 1 < starts.length; p++) {
+    table.fill(0);
+    for (let k = starts[p]!; k < starts[p + 1]!; k++) {
+      const row = order[k]!;
+      const hash = hashes[row]!;
+      for (let slot = hash & mask; ; slot = (slot + 1) & mask) {
+        const entry = table[slot]!;
+        if (entry === 0) {
+          table[slot] = row + 1;
+          break;
+        }
+        const other = entry - 1;
+        if (hashes[other] === hash && raDeg[other] === raDeg[row] && decDeg[other] === decDeg[row]) {
+          found.push([row, other]);
+          break;
+        }
       }
-      if (raDeg[entry - 1] === raDeg[i] && decDeg[entry - 1] === decDeg[i]) {
-        repeated.push(i);
-        firsts.push(entry - 1);
-        break;
-      }
-      slot = slot + 1 === slots ? 0 : slot + 1;
     }
   }
-  return { row: Uint32Array.from(repeated.join()), first: Uint32Array.from(firsts.join()) };
+  found.sort(([a], [b]) => a - b);
+  return {
+    row: Uint32Array.from(found, ([row]) => row),
+    first: Uint32Array.from(found, ([, first]) => first),
+  };
+}
+
+function hashPositions(raDeg: Float64Array, decDeg: Float64Array, hashes: Uint32Array): void {
+  const raBits = new Uint32Array(raDeg.buffer, raDeg.byteOffset, 2 * raDeg.length);
+  const decBits = new Uint32Array(decDeg.buffer, decDeg.byteOffset, 2 * decDeg.length);
+  for (let i = 0; i < hashes.length; i++) {
+    let hash = mix(mix(0, raBits, i), decBits, i);
+    hash = Math.imul(hash ^ (hash >>> 16), 0x85ebca6b);
+    hashes[i] = hash ^ (hash >>> 13);
+  }
+}
+
+/** Row numbers by the upper `bits` of their hash, in order within each part; part p is starts[p] to starts[p + 1]. */
+function partsOf(hashes: Uint32Array, bits: number): { order: Uint32Array; starts: Uint32Array } {
+  const shift = 32 - bits;
+  const starts = new Uint32Array(2 ** bits + 1);
+  const partOf = (hash: number) => (bits === 0 ? 0 : hash >>> shift);
+  for (let i = 0; i < hashes.length; i++) starts[partOf(hashes[i]!) + 1]!++;
+  for (let p = 1; p < starts.length; p++) starts[p]! += starts[p - 1]!;
+  const next = starts.slice();
+  const order = new Uint32Array(hashes.length);
+  for (let i = 0; i < hashes.length; i++) order[next[partOf(hashes[i]!)]!++] = i;
+  return { order, starts };
 }
 
 /** Stirs the 64 bits of a double into a hash (multipliers of MurmurHash3, public domain). -0 counts as 0. */

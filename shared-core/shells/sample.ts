@@ -31,6 +31,8 @@ export function sortSample(
   weight: Float64Array | null,
   indices: Uint32Array | null = null,
 ): SortedSample {
+  // Weights that are all 1 change nothing, and leaving them out saves half the memory.
+  if (weight?.every((w) => w === 1)) return sortSample(redshift, null, indices);
   const chosen = indices === null ? redshift : gather(redshift, indices);
   const order = argsort(chosen);
   const sorted = gather(chosen, order);
@@ -69,13 +71,19 @@ function gather(values: Float64Array, indices: Uint32Array): Float64Array {
   return out;
 }
 
+function allAlike(weight: Float64Array, order: Uint32Array, start: number, end: number): boolean {
+  for (let i = start + 1; i < end; i++) if (weight[order[i]!] !== weight[order[start]!]) return false;
+  return true;
+}
+
 // Rows of one redshift keep the order of the file after a stable sort; by weight instead, the running sums
 // (and with them the last digit of every number) do not depend on the order of the file's rows.
 function orderTiesByWeight(sorted: Float64Array, order: Uint32Array, weight: Float64Array): void {
   for (let start = 0; start < sorted.length; ) {
     let end = start + 1;
     while (end < sorted.length && sorted[end] === sorted[start]) end++;
-    if (end - start > 1) order.subarray(start, end).sort((a, b) => weight[a]! - weight[b]! || a - b);
+    if (end - start > 1 && !allAlike(weight, order, start, end))
+      order.subarray(start, end).sort((a, b) => weight[a]! - weight[b]! || a - b);
     start = end;
   }
 }
