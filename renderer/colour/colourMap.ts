@@ -23,25 +23,25 @@ const RECIPES = {
     title: 'Harbour: blue, sea green, sand',
     hueDeg: [268, 190, 96],
     chroma: 0.15,
-    lightness: { dark: [0.5, 0.94], light: [0.3, 0.8] },
+    lightness: { dark: [0.5, 0.94], light: [0.28, 0.72] },
   },
   lantern: {
     title: 'Lantern: violet, rose, amber',
     hueDeg: [292, 368, 450],
     chroma: 0.17,
-    lightness: { dark: [0.48, 0.93], light: [0.3, 0.8] },
+    lightness: { dark: [0.48, 0.93], light: [0.28, 0.72] },
   },
   heath: {
     title: 'Heath: indigo, mauve, cream',
     hueDeg: [275, 325, 430],
     chroma: 0.11,
-    lightness: { dark: [0.48, 0.94], light: [0.3, 0.8] },
+    lightness: { dark: [0.48, 0.94], light: [0.28, 0.72] },
   },
   slate: {
     title: 'Slate: greys',
     hueDeg: [255, 255, 255],
     chroma: 0.02,
-    lightness: { dark: [0.45, 0.96], light: [0.2, 0.78] },
+    lightness: { dark: [0.45, 0.96], light: [0.2, 0.7] },
   },
 } as const satisfies Record<string, Recipe>;
 

@@ -19,7 +19,7 @@ export interface Lane {
 }
 
 /** Sideways factors that are easy to say. */
-const NICE = [1, 1.2, 1.5, 2, 2.5, 3, 4, 5, 6, 8, 10];
+const NICE = [1, 1.2, 1.5, 2, 2.5, 3, 4, 5, 6, 7, 8, 9, 10];
 
 /** The greatest easily said factor that is not above x. */
 export function niceFactor(x: number): number {

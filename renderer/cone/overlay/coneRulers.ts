@@ -43,7 +43,6 @@ function paintEdge(
     fromMpc: 0,
     toMpc: scene.farMpc,
     awayFrom,
-    line: true,
   });
 }
 
@@ -59,11 +58,11 @@ function paintStraightRuler(pen: Pen, scene: OverlayScene, lane: PaintedLane): v
   drawRuler(pen, {
     title: scene.scale.titles.comoving,
     ticks: scene.scale.rulers.comoving,
+    inline: true,
     at: (mpc) => project(scene.pixels, scene.radius(mpc), drop, 0),
     fromMpc: 0,
     toMpc: scene.farMpc,
     awayFrom: axisMiddle(pen, scene, lane),
-    line: true,
   });
 }
 
@@ -107,11 +106,11 @@ function paintFreeRulers(pen: Pen, scene: OverlayScene, lane: PaintedLane): void
   drawRuler(pen, {
     title: scene.scale.titles.comoving,
     ticks: scene.scale.rulers.comoving,
+    inline: true,
     at: beside,
     fromMpc: 0,
     toMpc: scene.farMpc,
     awayFrom: axis,
-    line: true,
   });
 }
 

@@ -42,7 +42,7 @@ export function paintRings(pen: Pen, scene: OverlayScene): void {
       (start[1] + end[1]) / 2 - 1000 * Math.abs(c),
     ];
     const ticks = rulers[which].filter((tick) => tick.comovingMpc > 0);
-    drawRuler(pen, { title: '', ticks, at, fromMpc: 0, toMpc: scene.farMpc, awayFrom, line: true });
+    drawRuler(pen, { title: '', ticks, at, fromMpc: 0, toMpc: scene.farMpc, awayFrom });
     const half = pen.measure(titles[which], 11) / 2;
     const away = half * Math.abs(c) + 14;
     pen.text(

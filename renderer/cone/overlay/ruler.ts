@@ -12,10 +12,14 @@ export interface Ruler {
   readonly toMpc: number;
   /** A pixel away from which the marks point. */
   readonly awayFrom: Point;
-  /** Whether the line itself is drawn. */
-  readonly line: boolean;
+  /** The title stands between the numbers, in their row, rather than outside them. */
+  readonly inline?: boolean;
 }
 
+const NUMBER_OUT_PX = 15.5;
+const TITLE_OUT_PX = 40;
+/** Places for a title along its ruler, the best first. */
+const TITLE_SHARES = [0.62, 0.5, 0.75, 0.4, 0.86, 0.3, 0.66, 0.54, 0.46, 0.58, 0.7, 0.34, 0.8, 0.26, 0.2];
 const MARK_PX = [6, 4.5, 3] as const;
 
 /** Draws line, marks, numbers and title. Numbers give way to earlier texts, the less important first. */
@@ -30,8 +34,8 @@ export function drawRuler(pen: Pen, ruler: Ruler): void {
   let normal: Point = [-along[1], along[0]];
   const away = (middle[0] - ruler.awayFrom[0]) * normal[0] + (middle[1] - ruler.awayFrom[1]) * normal[1];
   if (away < 0) normal = [-normal[0], -normal[1]];
-  if (ruler.line) pen.line([start, end], pen.theme.line, 1);
-  drawTitle(pen, ruler, start, end, along, normal, length);
+  pen.line([start, end], pen.theme.line, 1);
+  if (!ruler.inline) drawTitle(pen, ruler, start, end, along, normal, length, TITLE_OUT_PX);
   const shown = ruler.ticks
     .filter(
       (tick) =>
@@ -54,6 +58,7 @@ export function drawRuler(pen: Pen, ruler: Ruler): void {
     const out = 9 + half;
     pen.text(tick.text, p![0] + normal[0] * out, p![1] + normal[1] * out, pen.theme.inkMuted, { gap: 4 });
   }
+  if (ruler.inline) drawTitle(pen, ruler, start, end, along, normal, length, NUMBER_OUT_PX);
 }
 
 /** The title runs along the ruler, outside its numbers, where the ruler is on the stage. */
@@ -65,20 +70,20 @@ function drawTitle(
   along: Point,
   normal: Point,
   length: number,
+  out: number,
 ): void {
   if (ruler.title === '') return;
   const sizePx = 11;
   const width = pen.measure(ruler.title, sizePx);
   if (length < width + 60) return;
-  const out = 38;
-  for (const share of [0.62, 0.5, 0.75, 0.4, 0.86, 0.3]) {
+  for (const share of TITLE_SHARES) {
     const x = start[0] + (end[0] - start[0]) * share + normal[0] * out;
     const y = start[1] + (end[1] - start[1]) * share + normal[1] * out;
     const halfX = (Math.abs(along[0]) * width) / 2 + Math.abs(along[1]) * 7;
     const halfY = (Math.abs(along[1]) * width) / 2 + Math.abs(along[0]) * 7;
     const boxes = slices(x, y, along, width, sizePx);
     const inStage = x - halfX > 4 && x + halfX < pen.width - 4 && y - halfY > 4 && y + halfY < pen.height - 4;
-    if (!inStage || !boxes.every((box) => pen.labels.isFree(box, 0))) continue;
+    if (!inStage || !boxes.every((box) => pen.labels.isFree(box, ruler.inline ? 6 : -2))) continue;
     for (const box of boxes) pen.labels.reserve(box);
     const { context } = pen;
     let angle = Math.atan2(along[1], along[0]);

@@ -6,12 +6,15 @@ import type { PointPart } from './pointLayer.ts';
 export interface Crowding {
   /** Galaxies on the stage, estimated. */
   readonly onStage: number;
-  /** Galaxies a CSS pixel where the densest hundredth of them stands. */
+  /** Galaxies a CSS pixel where the densest hundredth of them stands, and where the thinnest tenth does. */
   readonly densestPerPixel: number;
+  readonly thinnestPerPixel: number;
 }
 
+export const NOTHING: Crowding = { onStage: 0, densestPerPixel: 0, thinnestPerPixel: 0 };
+
 const CELL_PX = 6;
-const SAMPLE = 20000;
+const SAMPLE = 16384;
 const BINS = 256;
 
 /**
@@ -21,15 +24,15 @@ const BINS = 256;
 export function crowding(arrays: PointArrays, parts: readonly PointPart[], viewport: Viewport): Crowding {
   const columns = Math.ceil(viewport.widthPx / CELL_PX);
   const rowCount = Math.ceil(viewport.heightPx / CELL_PX);
-  const cells = new Float32Array(columns * rowCount);
   const total = parts.reduce((sum, part) => sum + part.range.count, 0);
-  if (total === 0 || cells.length === 0) return { onStage: 0, densestPerPixel: 0 };
-  const share = Math.min(1, SAMPLE / total);
-  const visited: number[] = [];
-  const weights: number[] = [];
+  if (total === 0) return NOTHING;
+  if (cells.length < columns * rowCount) cells = new Float32Array(columns * rowCount);
+  cells.fill(0, 0, columns * rowCount);
+  let visited = 0;
   let onStage = 0;
   for (const { matrix: m, range } of parts) {
-    const sample = Math.min(range.count, Math.max(64, Math.ceil(range.count * share)));
+    const share = Math.min(1, SAMPLE / total);
+    const sample = Math.min(range.count, Math.ceil(range.count * share));
     const weight = range.count / Math.max(1, sample);
     for (let s = range.start; s < range.start + sample; s++) {
       const r = arrays.radius[s]!;
@@ -41,32 +44,42 @@ export function crowding(arrays: PointArrays, parts: readonly PointPart[], viewp
       const px = (m[0]! * x + m[1]! * y + m[2]! * z + m[3]!) / w;
       const py = (m[4]! * x + m[5]! * y + m[6]! * z + m[7]!) / w;
       if (!(px >= 0 && px < viewport.widthPx && py >= 0 && py < viewport.heightPx)) continue;
-      const cell = Math.floor(py / CELL_PX) * columns + Math.floor(px / CELL_PX);
+      const cell = ((py / CELL_PX) | 0) * columns + ((px / CELL_PX) | 0);
       cells[cell]! += weight;
-      visited.push(cell);
-      weights.push(weight);
+      cellOf[visited] = cell;
+      weightOf[visited++] = weight;
       onStage += weight;
     }
   }
-  return { onStage, densestPerPixel: percentile(cells, visited, weights, onStage) / CELL_PX ** 2 };
+  const bins = histogram(visited);
+  return {
+    onStage,
+    densestPerPixel: percentile(bins, 0.99 * onStage) / CELL_PX ** 2,
+    thinnestPerPixel: percentile(bins, 0.1 * onStage) / CELL_PX ** 2,
+  };
 }
 
-/** The count of the cell below which 99 of 100 galaxies stand, by a histogram of logarithms. */
-function percentile(
-  cells: Float32Array,
-  visited: readonly number[],
-  weights: readonly number[],
-  total: number,
-): number {
+/** Scratch of the last call: the counts, and cell and weight of each galaxy of the sample. */
+let cells = new Float32Array(0);
+const cellOf = new Uint32Array(SAMPLE + 1024);
+const weightOf = new Float32Array(SAMPLE + 1024);
+
+/** Galaxies by the count of the cell that they stand in, in eighths of an octave. */
+function histogram(visited: number): Float64Array {
   const bins = new Float64Array(BINS);
-  for (const [i, cell] of visited.entries()) {
-    const bin = Math.min(BINS - 1, Math.floor(8 * Math.log2(1 + cells[cell]!)));
-    bins[bin]! += weights[i]!;
+  for (let i = 0; i < visited; i++) {
+    const bin = Math.min(BINS - 1, Math.floor(8 * Math.log2(1 + cells[cellOf[i]!]!)));
+    bins[bin]! += weightOf[i]!;
   }
+  return bins;
+}
+
+/** The count of the cell below which so many galaxies stand. */
+function percentile(bins: Float64Array, galaxies: number): number {
   let sum = 0;
   for (let bin = 0; bin < BINS; bin++) {
     sum += bins[bin]!;
-    if (sum >= 0.99 * total) return 2 ** ((bin + 1) / 8) - 1;
+    if (sum >= galaxies) return 2 ** ((bin + 1) / 8) - 1;
   }
   return 0;
 }
@@ -77,10 +90,27 @@ function percentile(
  */
 export function pointSizePx(onStage: number, viewport: Viewport): number {
   const room = Math.sqrt((viewport.widthPx * viewport.heightPx) / Math.max(1, onStage));
-  const most = 4 + 3 * Math.exp(-onStage / 100);
+  const most = 4 + 6 * Math.exp(-onStage / 150);
   return Math.min(most, Math.max(1, 1.05 * room ** 0.75));
 }
 
 /** Light of one galaxy summed over its disc, in units of its middle, for a diameter in device pixels. */
 export const discLight = (diameter: number): number =>
   diameter <= 1.5 ? 1 : ((Math.PI * diameter * diameter) / 4 / 4.5) * (1 - Math.exp(-4.5));
+
+/**
+ * Sums of light that fix the curve of brightness. `full`: that of the densest places, but no less than a galaxy or a
+ * few, so that a small set is bright. `single`: one galaxy, or half of the thinnest places where all is crowded, so
+ * that a large set keeps its contrast.
+ */
+export function exposure(
+  crowd: Crowding,
+  pixelRatio: number,
+  diameter: number,
+): { full: number; single: number } {
+  const light = discLight(diameter) / pixelRatio ** 2;
+  return {
+    full: Math.max(1 + 0.6 * Math.min(1, crowd.onStage / 3000), crowd.densestPerPixel * light),
+    single: Math.max(1, (crowd.thinnestPerPixel * light) / 2),
+  };
+}

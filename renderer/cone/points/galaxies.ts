@@ -63,10 +63,12 @@ export class Galaxies {
 
   /** Moves the galaxies to the radii of a table. `moving`: more tables follow at once. */
   setTable(table: RadiusTable, moving: boolean): void {
-    if (table === this.table && (moving || this.ready === 1)) return;
+    const filling = this.radiusJob !== null;
+    if (table === this.table && (moving || filling || this.ready === 1)) return;
     this.table = table;
     const { store } = this;
     this.radiusJob?.abort();
+    this.radiusJob = null;
     if (!store) return;
     const share = Math.min(1, AT_ONCE / Math.max(1, store.count));
     for (const { start, count } of store.ranges) {
@@ -116,6 +118,7 @@ export class Galaxies {
     this.building?.abort();
     this.colourJob?.abort();
     this.radiusJob?.abort();
+    this.radiusJob = null;
     const { input, table, memory } = this;
     if (!input || input.count === 0) {
       this.store = null;
@@ -173,6 +176,7 @@ export class Galaxies {
     };
     void runSliced(steps(), job.signal).then((done) => {
       if (!done) return;
+      this.radiusJob = null;
       this.ready = 1;
       this.changed('radii');
     });

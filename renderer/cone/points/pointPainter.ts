@@ -2,7 +2,7 @@ import { type PointHit, pickPoint } from '../geometry/pickPoint.ts';
 import type { Viewport } from '../geometry/projection.ts';
 import type { GlStage } from '../glStage.ts';
 import type { ColouringInput, ConeTheme } from '../types.ts';
-import { crowding, discLight, pointSizePx } from './exposure.ts';
+import { crowding, exposure, NOTHING, pointSizePx } from './exposure.ts';
 import { Galaxies, type GalaxiesChange } from './galaxies.ts';
 import type { Emphasis, PointFrame, PointPart } from './pointLayer.ts';
 import { RESERVED_BYTES } from './software/messages.ts';
@@ -19,6 +19,8 @@ export type LayerChoice = 'auto' | 'software' | 'webgl';
 const PICK_ON_PAGE = 200_000;
 /** Time for the points of one picture while it moves. */
 const MOVING_BUDGET_MS = 13;
+/** So many points are drawn whatever it takes. */
+const ALWAYS_DRAWN = 120_000;
 /** Workers that end are started again so often. */
 const MOST_RESTARTS = 2;
 
@@ -96,25 +98,20 @@ export class PointPainter {
     moving: boolean,
   ): PointFrame {
     const { store, ready } = this.galaxies;
-    const crowd = store ? crowding(store.arrays, parts, viewport) : { onStage: 0, densestPerPixel: 0 };
+    const crowd = store ? crowding(store.arrays, parts, viewport) : NOTHING;
     const sizePx = pointSizePx(crowd.onStage, viewport);
     // Large sets move at one pixel a CSS pixel: sharper is for rest.
     const many = crowd.onStage > 400_000;
     const pixelRatio = moving && many && this.layer === 'software' ? Math.min(1, ratio) : ratio;
-    const light = (crowd.densestPerPixel / pixelRatio ** 2) * discLight(sizePx * pixelRatio);
-    const tone = this.tones.tone(
-      look.theme,
-      look.colouring,
-      look.shellCount,
-      look.stretch,
-      Math.max(1.6, light),
-    );
+    const light = exposure(crowd, pixelRatio, sizePx * pixelRatio);
+    const tone = this.tones.tone(look.theme, look.colouring, look.shellCount, look.stretch, light);
     const frame: PointFrame = { viewport, pixelRatio, parts, fraction: ready, emphasis, sizePx, tone };
     if (!moving || this.layer !== 'software' || !this.software) return frame;
     const total = parts.reduce((sum, part) => sum + part.range.count, 0);
     const affordable = this.software.affordable(MOVING_BUDGET_MS, frame);
-    // A little over is better than a second picture at rest.
-    return total <= 1.4 * affordable ? frame : { ...frame, fraction: Math.min(ready, affordable / total) };
+    // A little over is better than a second picture at rest, and a thin sample would flicker.
+    if (total <= Math.max(1.4 * affordable, ALWAYS_DRAWN)) return frame;
+    return { ...frame, fraction: Math.min(ready, Math.max(affordable, ALWAYS_DRAWN) / total) };
   }
 
   /** Draws by the layer in use; false when it was stopped and the old picture stands. */

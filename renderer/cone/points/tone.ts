@@ -11,7 +11,7 @@ export interface Tone {
   readonly stretch: Stretch;
   /** Sum of light at full strength. */
   readonly full: number;
-  /** Sum of light of one galaxy at its middle. */
+  /** Sum of light from which on brightness grows by ratios rather than by sums: about one galaxy. */
   readonly single: number;
   /** Dark ground: the brightest places turn toward white. On paper: toward a deeper tone of their own. */
   readonly glow: Triple;
@@ -65,9 +65,10 @@ export function strength(light: number, stretch: Stretch, single: number, full: 
 /**
  * Table of finished pixels: VALUE_STEPS rows of LIGHT_STEPS words, each red, green, blue, alpha bytes in memory order
  * of a little-endian machine (as ImageData wants). Entry 0 of each row is the bare ground.
+ *
+ * @param table is filled and handed back; VALUE_STEPS x LIGHT_STEPS words
  */
-export function toneTable(tone: Tone): Uint32Array<ArrayBuffer> {
-  const table = new Uint32Array(VALUE_STEPS * LIGHT_STEPS);
+export function toneTable<T extends Uint32Array>(tone: Tone, table: T): T {
   // A pixel is fixed + own * share: what does not depend on the colour is worked out once for each step of light.
   const share = new Float64Array(LIGHT_STEPS);
   const fixed = [0, 1, 2].map(() => new Float64Array(LIGHT_STEPS));

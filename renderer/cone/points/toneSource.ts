@@ -7,28 +7,31 @@ import type { Stretch, Tone } from './tone.ts';
 export class ToneSource {
   private last: { key: string; tone: Tone } | null = null;
 
-  /** @param full the sum of light at full strength; taken in sixths of an octave, too small a step to be seen */
+  /** @param light sums that fix the curve; taken in sixths of an octave, too small a step to be seen */
   tone(
     theme: ConeTheme,
     colouring: ColouringInput,
     shellCount: number,
     stretch: Stretch,
-    full: number,
+    light: { readonly full: number; readonly single: number },
   ): Tone {
-    const rounded = 2 ** (Math.round(6 * Math.log2(full)) / 6);
+    const full = rounded(light.full);
+    const single = rounded(light.single);
     const map =
       colouring.kind === 'shell' ? `shells ${shellCount}` : `${colouring.map} ${colouring.reversed}`;
-    const key = [theme.mode, theme.background, map, stretch, rounded].join(' ');
+    const key = [theme.mode, theme.background, map, stretch, full, single].join(' ');
     if (this.last?.key === key) return this.last.tone;
     const tone: Tone = {
       background: parseCssColour(theme.background),
       colours: palette(colouring, shellCount, theme.mode),
       stretch,
-      full: rounded,
-      single: 1,
+      full,
+      single,
       glow: theme.mode === 'dark' ? [255, 250, 240] : [12, 16, 40],
     };
     this.last = { key, tone };
     return tone;
   }
 }
+
+const rounded = (light: number): number => 2 ** (Math.round(6 * Math.log2(light)) / 6);

@@ -85,6 +85,7 @@ export class WebglPoints implements PointLayer {
   private readonly toneTriangle: BufferGeometry;
   private table: DataTexture | null = null;
   private tone: Tone | null = null;
+  private readonly words = new Uint32Array(VALUE_STEPS * LIGHT_STEPS);
   private clouds: Points<BufferGeometry, RawShaderMaterial>[] = [];
   private store: PointStore | null = null;
 
@@ -217,9 +218,14 @@ export class WebglPoints implements PointLayer {
   private updateTable(tone: Tone): void {
     if (tone === this.tone && this.table) return;
     this.tone = tone;
-    this.table?.dispose();
-    const bytes = new Uint8Array(toneTable(tone).buffer);
-    this.table = new DataTexture(bytes, LIGHT_STEPS, VALUE_STEPS, RGBAFormat, UnsignedByteType);
+    toneTable(tone, this.words);
+    this.table ??= new DataTexture(
+      new Uint8Array(this.words.buffer),
+      LIGHT_STEPS,
+      VALUE_STEPS,
+      RGBAFormat,
+      UnsignedByteType,
+    );
     this.table.needsUpdate = true;
     this.toneMaterial.uniforms.table!.value = this.table;
   }

@@ -53,6 +53,34 @@ export interface Patch {
 
 /** Clustered galaxies in a patch of sky: knots, the bridges between neighbouring knots, and a thin field. */
 export function clustered(patches: readonly Patch[], seed = 7): GalaxyInput {
+  const total = patches.reduce((sum, patch) => sum + patch.count, 0);
+  return total > 1e6 ? crowded(patches, total, seed) : fewer(patches, seed);
+}
+
+/** A large set: a million galaxies, each with companions scattered about it. */
+function crowded(patches: readonly Patch[], total: number, seed: number): GalaxyInput {
+  const times = Math.ceil(total / 5e5);
+  const core = fewer(
+    patches.map((patch) => ({ ...patch, count: Math.ceil(patch.count / times) })),
+    seed,
+  );
+  const { raDeg, decDeg } = core.directions as { raDeg: Float64Array; decDeg: Float64Array };
+  const random = seeded(seed + 1);
+  const ra = new Float64Array(total);
+  const dec = new Float64Array(total);
+  const mpc = new Float64Array(total);
+  for (let i = 0; i < total; i++) {
+    const k = i % core.count;
+    const r = core.comovingMpc[k]!;
+    const spread = (12 * 57.3) / r;
+    ra[i] = raDeg[k]! + (random() + random() - 1) * spread;
+    dec[i] = decDeg[k]! + (random() + random() - 1) * spread;
+    mpc[i] = r + (random() + random() - 1) * 18;
+  }
+  return { count: total, directions: { raDeg: ra, decDeg: dec }, comovingMpc: mpc };
+}
+
+function fewer(patches: readonly Patch[], seed: number): GalaxyInput {
   const count = patches.reduce((sum, patch) => sum + patch.count, 0);
   const raDeg = new Float64Array(count);
   const decDeg = new Float64Array(count);

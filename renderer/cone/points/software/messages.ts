@@ -1,7 +1,9 @@
 import type { PointLayout } from '../pointArrays.ts';
 
-/** Bytes at the start of the points' memory that belong to the kernels: scratch for each worker. */
-export const RESERVED_BYTES = 262144;
+/** Bytes at the start of the points' memory that are not points: the table of tones, then scratch for each worker. */
+export const RESERVED_BYTES = 1048576;
+export const TABLE_AT = 64;
+export const SCRATCH_AT = 655360;
 
 /** A run of slots to be splatted with one matrix; start is a multiple of four. */
 export interface Run {
@@ -56,7 +58,7 @@ export type ToWorker =
       readonly height: number;
       readonly sumsAt: readonly number[];
       readonly imageAt: number;
-      /** Only when it changed. */
+      /** For a worker with its own memory, when it changed. */
       readonly table: Uint32Array | null;
     }
   | {
@@ -69,7 +71,7 @@ export type ToWorker =
     };
 
 export type FromWorker =
-  | { readonly kind: 'done'; readonly id: number; readonly wide?: boolean }
+  | { readonly kind: 'done'; readonly id: number; readonly wide?: boolean; readonly milliseconds?: number }
   /** The finished picture, from a worker with its own memory. */
   | { readonly kind: 'image'; readonly id: number; readonly image: Uint32Array<ArrayBuffer> }
   | {

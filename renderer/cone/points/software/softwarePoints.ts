@@ -1,6 +1,5 @@
 import type { PointFrame, PointLayer } from '../pointLayer.ts';
 import type { PointStore } from '../pointStore.ts';
-import { type Tone, toneTable } from '../tone.ts';
 import type { Run } from './messages.ts';
 import type { SplatPicture, SplatPool } from './splatPool.ts';
 
@@ -20,11 +19,11 @@ export class SoftwarePoints implements PointLayer {
   private readonly pool: SplatPool;
   private store: PointStore | null = null;
   private ready: Promise<void> = Promise.resolve();
-  private table: { tone: Tone; words: Uint32Array } | null = null;
+  private image: ImageData | null = null;
   private readonly cost = { ...FIRST_COST };
 
   constructor(canvas: HTMLCanvasElement, pool: SplatPool) {
-    const context = canvas.getContext('2d', { alpha: false, willReadFrequently: true });
+    const context = canvas.getContext('2d', { alpha: false });
     if (!context) throw new Error('no 2D canvas');
     this.canvas = canvas;
     this.context = context;
@@ -73,24 +72,26 @@ export class SoftwarePoints implements PointLayer {
         : [0, Number.MAX_VALUE, 1],
     };
     const steps = Math.max(1, Math.ceil(points / this.affordable(STEP_MS, frame)));
-    const start = performance.now();
+    let spent = 0;
     for (let step = 0; step < steps; step++) {
-      await this.pool.splat(runsOf(frame, step / steps, (step + 1) / steps), picture, step === 0);
+      spent += await this.pool.splat(runsOf(frame, step / steps, (step + 1) / steps), picture, step === 0);
       if (step < steps - 1 && stop()) return false;
     }
-    this.learn(frame, points, performance.now() - start);
-    const bytes = await this.pool.tone(picture, this.tableOf(frame.tone));
+    this.learn(frame, points, spent);
+    if (this.image?.width !== width || this.image.height !== height)
+      this.image = new ImageData(width, height);
+    await this.pool.develop(picture, frame.tone, this.image);
     if (this.canvas.width !== width || this.canvas.height !== height) {
       this.canvas.width = width;
       this.canvas.height = height;
     }
-    this.context.putImageData(new ImageData(bytes, width, height), 0, 0);
+    this.context.putImageData(this.image, 0, 0);
     return true;
   }
 
   dispose(): void {
     this.store = null;
-    this.table = null;
+    this.image = null;
   }
 
   private blank(width: number, height: number, { tone }: PointFrame): void {
@@ -111,11 +112,6 @@ export class SoftwarePoints implements PointLayer {
   private wait(work: Promise<void>): void {
     this.ready = work;
     work.catch(() => undefined);
-  }
-
-  private tableOf(tone: Tone): Uint32Array {
-    if (this.table?.tone !== tone) this.table = { tone, words: toneTable(tone) };
-    return this.table.words;
   }
 
   private costOf(frame: PointFrame): keyof typeof FIRST_COST {

@@ -1,7 +1,8 @@
 import type { PointLayout } from '../pointArrays.ts';
 import type { PointStore } from '../pointStore.ts';
 import { nextTask } from '../slices.ts';
-import { type FromWorker, RESERVED_BYTES, type Run, type ToWorker } from './messages.ts';
+import { LIGHT_STEPS, type Tone, toneTable, VALUE_STEPS } from '../tone.ts';
+import { type FromWorker, type Run, SCRATCH_AT, TABLE_AT, type ToWorker } from './messages.ts';
 import { sumsLength } from './splat.ts';
 import { SCRATCH_BYTES } from './wideSplat.ts';
 
@@ -34,7 +35,7 @@ export class SplatPool {
   private memory: WebAssembly.Memory | null = null;
   private layout: PointLayout | null = null;
   private nextId = 1;
-  private table: Uint32Array | null = null;
+  private tone: Tone | null = null;
   private readonly failed: (reason: string) => void;
   /** Kernel in use, known once the points are there. */
   wide = false;
@@ -64,7 +65,7 @@ export class SplatPool {
   /** Tells the workers of a store whose memory came from `allocate`. */
   async setStore(store: PointStore, wide: boolean): Promise<void> {
     this.layout = store.layout;
-    this.table = null;
+    this.tone = null;
     const memory = this.memories.get(store.arrays.x.buffer);
     this.memory = memory ?? null;
     if (memory) {
@@ -74,7 +75,7 @@ export class SplatPool {
             kind: 'shared',
             memory,
             layout: store.layout,
-            scratchAt: 64 + i * Math.ceil(SCRATCH_BYTES / 64) * 64,
+            scratchAt: SCRATCH_AT + i * Math.ceil(SCRATCH_BYTES / 64) * 64,
             wide,
           }),
         ),
@@ -100,35 +101,33 @@ export class SplatPool {
     }
   }
 
-  /** Adds runs to the sums; every worker takes its share of each run. */
-  async splat(runs: readonly Run[], picture: SplatPicture, clear: boolean): Promise<void> {
+  /** Adds runs to the sums; every worker takes its share of each run. Answers the longest share's milliseconds. */
+  async splat(runs: readonly Run[], picture: SplatPicture, clear: boolean): Promise<number> {
     const sumsAt = this.room(picture).sumsAt;
-    await Promise.all(
+    const answers = await Promise.all(
       this.workers.map((_, i) =>
         this.ask(i, { kind: 'splat', ...picture, runs: this.share(runs, i), clear, sumsAt: sumsAt[i]! }),
       ),
     );
+    return Math.max(...answers.map((m) => (m.kind === 'done' ? (m.milliseconds ?? 0) : 0)));
   }
 
-  /** The finished picture out of the sums, as bytes for ImageData. */
-  async tone(picture: SplatPicture, table: Uint32Array): Promise<Uint8ClampedArray<ArrayBuffer>> {
+  /** Tones the sums into an image of the picture's size. */
+  async develop(picture: SplatPicture, tone: Tone, image: ImageData): Promise<void> {
     const { width, height } = picture;
     const { sumsAt, imageAt } = this.room(picture);
-    const news = table === this.table ? null : table;
-    this.table = table;
+    const table = this.tableFor(tone);
     const count = this.workers.length;
     const answers = await Promise.all(
       this.workers.map((_, i) => {
         const rows = [Math.floor((height * i) / count), Math.floor((height * (i + 1)) / count)] as const;
-        return this.ask(i, { kind: 'tone', width, height, rows, sumsAt, imageAt, table: news });
+        return this.ask(i, { kind: 'tone', width, height, rows, sumsAt, imageAt, table });
       }),
     );
     const first = answers[0]!;
-    if (first.kind === 'image') return new Uint8ClampedArray(first.image.buffer);
-    // ImageData takes no shared memory.
-    const copy = new Uint8ClampedArray(4 * width * height);
-    copy.set(new Uint8Array(this.memory!.buffer, imageAt, copy.length));
-    return copy;
+    // ImageData takes no shared memory: one copy is needed.
+    if (first.kind === 'image') image.data.set(new Uint8Array(first.image.buffer));
+    else if (this.memory) image.data.set(new Uint8Array(this.memory.buffer, imageAt, 4 * width * height));
   }
 
   /** The slot drawn nearest to a pixel, searched by all workers. */
@@ -170,6 +169,16 @@ export class SplatPool {
     return { sumsAt, imageAt };
   }
 
+  /** Writes the table where the workers find it; one to send when they share no memory and it changed. */
+  private tableFor(tone: Tone): Uint32Array | null {
+    if (tone === this.tone) return null;
+    this.tone = tone;
+    const length = VALUE_STEPS * LIGHT_STEPS;
+    if (!this.memory) return toneTable(tone, new Uint32Array(length));
+    toneTable(tone, new Uint32Array(this.memory.buffer, TABLE_AT, length));
+    return null;
+  }
+
   private ask(worker: number, message: Unsent, transfer: Transferable[] = []): Promise<FromWorker> {
     const id = this.nextId++;
     return new Promise((resolve, reject) => {
@@ -205,5 +214,3 @@ function sharedMemory(initial: number): WebAssembly.Memory {
   }
   throw new RangeError('no memory for the points');
 }
-
-export { RESERVED_BYTES };

@@ -1,6 +1,7 @@
 import { pickPoint } from '../../geometry/pickPoint.ts';
 import { type PointArrays, type PointLayout, pointLayout, pointViews } from '../pointArrays.ts';
-import { type FromWorker, RESERVED_BYTES, type ToWorker } from './messages.ts';
+import { LIGHT_STEPS, VALUE_STEPS } from '../tone.ts';
+import { type FromWorker, RESERVED_BYTES, SCRATCH_AT, TABLE_AT, type ToWorker } from './messages.ts';
 import { softDiscs, splat, sumsLength } from './splat.ts';
 import { toneRows } from './toneRows.ts';
 import { type WideSplat, wideSplat } from './wideSplat.ts';
@@ -12,7 +13,7 @@ let isShared = false;
 let layout: PointLayout | null = null;
 let points: PointArrays | null = null;
 let kernel: WideSplat | null = null;
-let table: Uint32Array | null = null;
+let ownTable: Uint32Array | null = null;
 let discs = { diameter: -1, ...softDiscs(1) };
 
 const answer = (message: FromWorker, transfer: Transferable[] = []): void =>
@@ -71,17 +72,19 @@ function splatRuns(message: Extract<ToWorker, { kind: 'splat' }>): void {
 
 function tone(message: Extract<ToWorker, { kind: 'tone' }>): void {
   const { id, width, height, rows } = message;
-  if (message.table) table = message.table;
   const buffer = memory!.buffer;
   const sums = (at: number): Float32Array => new Float32Array(buffer, at, sumsLength(width, height));
   if (isShared) {
     const image = new Uint32Array(buffer, message.imageAt, width * height);
-    toneRows(message.sumsAt.map(sums), table!, image, width, rows[0], rows[1]);
+    const table = new Uint32Array(buffer, TABLE_AT, VALUE_STEPS * LIGHT_STEPS);
+    toneRows(message.sumsAt.map(sums), table, image, width, rows[0], rows[1]);
     answer({ kind: 'done', id });
     return;
   }
+  if (message.table) ownTable = message.table;
+  if (!ownTable) return;
   const image = new Uint32Array(width * height);
-  toneRows([sums(ownRoom(width, height).sumsAt)], table!, image, width, rows[0], rows[1]);
+  toneRows([sums(ownRoom(width, height).sumsAt)], ownTable, image, width, rows[0], rows[1]);
   answer({ kind: 'image', id, image }, [image.buffer]);
 }
 
@@ -101,16 +104,18 @@ async function handle(message: ToWorker): Promise<void> {
     case 'own': {
       const at = pointLayout(message.slots, RESERVED_BYTES);
       const own = new WebAssembly.Memory({ initial: Math.ceil(at.end / PAGE) });
-      await take(own, false, at, 64, message.wide);
+      await take(own, false, at, SCRATCH_AT, message.wide);
       points!.radius.fill(Number.NaN);
       return answer({ kind: 'done', id, wide: kernel !== null });
     }
     case 'fill':
       fill(message);
       return answer({ kind: 'done', id });
-    case 'splat':
+    case 'splat': {
+      const start = performance.now();
       splatRuns(message);
-      return answer({ kind: 'done', id });
+      return answer({ kind: 'done', id, milliseconds: performance.now() - start });
+    }
     case 'tone':
       return tone(message);
     case 'pick': {
