@@ -4,6 +4,8 @@ import { CutsSection } from './cuts/CutsSection.tsx';
 import { RegionSection } from './region/RegionSection.tsx';
 import { SourceSection } from './source/SourceSection.tsx';
 import './panels.css';
+import './desk.css';
+import './columns/preview.css';
 
 /** What everything stands on: the catalogue, its columns and cuts, the region of sky, the cosmology. */
 export function DeskPanel() {

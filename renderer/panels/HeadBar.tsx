@@ -10,12 +10,15 @@ import { StudyMenu } from './head/StudyMenu.tsx';
 import { StudyName } from './head/StudyName.tsx';
 import { KeysDialog } from './KeysDialog.tsx';
 import { keysShown, shortcut } from './keyTable.ts';
+import { useStudyPart } from './useStudyPart.ts';
 import './panels.css';
+import './head/head.css';
 
 /** The top of the window: the study, what it stands on, and what can be done with the whole of it. */
 export function HeadBar() {
   const { studyState, view, files } = useApp();
-  const { look, cosmologySet } = studyState.study.value;
+  const look = useStudyPart('look');
+  const cosmologySet = useStudyPart('cosmologySet');
   const set = PUBLISHED_SETS.find((one) => one.key === cosmologySet);
   const { undoLabel, redoLabel } = studyState;
   const dark = view.theme.value === 'dark';

@@ -3,6 +3,7 @@ import { useApp } from '../state/app.ts';
 import type { Notice } from '../state/notices.ts';
 import { IconButton } from '../ui/IconButton.tsx';
 import './panels.css';
+import './notices.css';
 
 /** Facts go by themselves after this long, unless somebody is at them; problems stay until they are read. */
 const FACT_STAYS_MS = 12_000;

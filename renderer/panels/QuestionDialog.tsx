@@ -3,6 +3,7 @@ import { useApp } from '../state/app.ts';
 import type { Question } from '../state/questions.ts';
 import { Dialog } from '../ui/Dialog.tsx';
 import './panels.css';
+import './notices.css';
 
 /** The question that everything waits for, if there is one. */
 export function QuestionDialog() {

@@ -1,4 +1,4 @@
-import { useSignal } from '@preact/signals';
+import { useComputed, useSignal } from '@preact/signals';
 import { useState } from 'preact/hooks';
 import { Refusal } from '../../shared-core/base/refusal.ts';
 import { edgesOf } from '../../shared-core/shells/edges.ts';
@@ -13,13 +13,15 @@ import type { LedgerOrder } from './ledger/sortShells.ts';
 import { WideLedger } from './ledger/WideLedger.tsx';
 import { ShellSheet } from './sheet/ShellSheet.tsx';
 import './panels.css';
+import './ledger/ledger.css';
+import './sheet/sheet.css';
 
 /** What the shells are worth: the ledger, and the sheet of the chosen shell. */
 export function WorthPanel() {
   const app = useApp();
   const [wide, setWide] = useState(false);
   const order = useSignal<LedgerOrder | null>(null);
-  const shells = app.derived.shells.value;
+  const count = useComputed(() => app.derived.shells.value.length).value;
   const toSheet = (): void => document.getElementById('sheet-title')?.focus();
   return (
     <div class="worth-panel">
@@ -29,7 +31,7 @@ export function WorthPanel() {
           <Menu
             label="Copy the ledger"
             title="Copy the ledger"
-            disabled={shells.length === 0}
+            disabled={count === 0}
             entries={[
               {
                 kind: 'item',
@@ -52,11 +54,11 @@ export function WorthPanel() {
             icon="widen"
             label="Whole ledger"
             pressed={wide}
-            disabled={shells.length === 0}
+            disabled={count === 0}
             onClick={() => setWide(!wide)}
           />
         </header>
-        {shells.length === 0 ? (
+        {count === 0 ? (
           <NoShells />
         ) : (
           <div class="ledger-scroll">
@@ -65,7 +67,7 @@ export function WorthPanel() {
         )}
       </section>
       <ShellSheet />
-      {wide && shells.length > 0 ? (
+      {wide && count > 0 ? (
         <WideLedger order={order} onEnter={toSheet} onClose={() => setWide(false)} />
       ) : null}
     </div>

@@ -4,6 +4,7 @@ import { change } from '../../../shared-core/study/edits.ts';
 import { useApp } from '../../state/app.ts';
 import { setSectionOpen } from '../../ui/openSections.ts';
 import { Section } from '../../ui/Section.tsx';
+import { useStudyPart } from '../useStudyPart.ts';
 import { MappingForm } from './MappingForm.tsx';
 import { draftOf, finishDraft, fittingDraft, isGuessable, type MappingDraft } from './mappingDraft.ts';
 import { PreviewDialog } from './PreviewDialog.tsx';
@@ -12,7 +13,8 @@ import { usePreview } from './usePreview.ts';
 /** Which column of the catalogue is what. */
 export function ColumnsSection() {
   const { studyState, engine, files } = useApp();
-  const { mapping: chosen, source } = studyState.study.value;
+  const chosen = useStudyPart('mapping');
+  const source = useStudyPart('source');
   const loaded = engine.loaded.value;
   const [looking, setLooking] = useState(false);
   // A file whose columns could not be guessed is not loaded: its header comes from the preview then.

@@ -5,6 +5,7 @@ import { useApp } from '../../state/app.ts';
 import { ChoiceField } from '../../ui/ChoiceField.tsx';
 import { NumberField } from '../../ui/NumberField.tsx';
 import { Section } from '../../ui/Section.tsx';
+import { useStudyPart } from '../useStudyPart.ts';
 import { DerivedNumbers } from './DerivedNumbers.tsx';
 import { OwnParameters } from './OwnParameters.tsx';
 import { setOf } from './parameterFields.ts';
@@ -14,7 +15,9 @@ const OWN = 'own';
 /** The universe that every distance, time and volume is computed in, and the P0 of effective volumes. */
 export function CosmologySection() {
   const { studyState } = useApp();
-  const { cosmology, cosmologySet, p0Mpc3PerH3 } = studyState.study.value;
+  const cosmology = useStudyPart('cosmology');
+  const cosmologySet = useStudyPart('cosmologySet');
+  const p0Mpc3PerH3 = useStudyPart('p0Mpc3PerH3');
   const set = PUBLISHED_SETS.find((one) => one.key === cosmologySet);
   const put = (parameters: CosmologyParameters, key: string | null, label: string): void => {
     studyState.perform(

@@ -8,13 +8,14 @@ import { IconButton } from '../../ui/IconButton.tsx';
 import { NumberField } from '../../ui/NumberField.tsx';
 import { countText } from '../../ui/numberText.ts';
 import { Section } from '../../ui/Section.tsx';
+import { useStudyPart } from '../useStudyPart.ts';
 
 const MOST_CUTS = 200;
 
 /** Rows kept only where a column lies between two bounds. */
 export function CutsSection() {
   const { studyState, engine } = useApp();
-  const { cuts } = studyState.study.value;
+  const cuts = useStudyPart('cuts');
   const loaded = engine.loaded.value;
   const header = (loaded?.header ?? []).filter((name) => name !== '');
   const outside = engine.selected.value?.account.reasons.outsideCuts ?? 0;

@@ -1,3 +1,4 @@
+import { useComputed } from '@preact/signals';
 import { useApp } from '../../state/app.ts';
 import { Menu, type MenuEntry } from '../../ui/Menu.tsx';
 import { copyLedger, exportLedger, LEDGER_FORMATS } from '../ledger/ledgerFormats.ts';
@@ -5,7 +6,7 @@ import { copyLedger, exportLedger, LEDGER_FORMATS } from '../ledger/ledgerFormat
 /** The ledger to a file or to the clipboard. */
 export function ExportMenu() {
   const app = useApp();
-  const empty = app.derived.shells.value.length === 0;
+  const empty = useComputed(() => app.derived.shells.value.length === 0).value;
   const copy = (label: string, hint: string, as: Parameters<typeof copyLedger>[1]) =>
     ({ kind: 'item', label, hint, run: () => void copyLedger(app, as) }) satisfies MenuEntry;
   return (

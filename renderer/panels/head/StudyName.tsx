@@ -1,12 +1,13 @@
 import { useRef } from 'preact/hooks';
 import { change } from '../../../shared-core/study/edits.ts';
 import { useApp } from '../../state/app.ts';
+import { useStudyPart } from '../useStudyPart.ts';
 
 /** The study's name, changed where it stands, and the mark of unsaved work. */
 export function StudyName() {
   const { studyState, notices } = useApp();
   const input = useRef<HTMLInputElement>(null);
-  const { name } = studyState.study.value;
+  const name = useStudyPart('name');
   const commit = (): void => {
     const field = input.current;
     if (field === null) return;

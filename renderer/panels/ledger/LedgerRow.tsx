@@ -1,4 +1,5 @@
 import { useComputed } from '@preact/signals';
+import { useEffect, useRef } from 'preact/hooks';
 import { shownText } from '../../../shared-core/report/quantity.ts';
 import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
 import { useApp } from '../../state/app.ts';
@@ -18,6 +19,12 @@ export function LedgerRow(props: {
   const selected = useComputed(() => view.selectedShell.value === index).value;
   const hovered = useComputed(() => index !== null && view.hoveredShell.value === index).value;
 
+  const row = useRef<HTMLTableRowElement>(null);
+  // Chosen in the cone or the strip, the row may lie out of sight.
+  useEffect(() => {
+    if (selected && index !== null) row.current?.scrollIntoView({ block: 'nearest' });
+  }, [selected]);
+
   const onClick = (event: MouseEvent): void => {
     const number = (event.target as HTMLElement).closest<HTMLElement>('[data-quantity]');
     if (selected && number !== null) view.explained.value = number.dataset.quantity ?? null;
@@ -25,6 +32,7 @@ export function LedgerRow(props: {
   };
   return (
     <tr
+      ref={row}
       class={hovered ? 'ledger-row hovered' : 'ledger-row'}
       data-shell={index ?? 'all'}
       aria-selected={selected}

@@ -1,7 +1,7 @@
 import type { Table } from '../../../shared-core/report/table.ts';
 import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
-import { compileRegion } from '../../../shared-core/sky/compileRegion.ts';
 import type { App } from '../../state/app.ts';
+import { regionFootprint } from '../regionReady.ts';
 import { ledgerTable } from './ledgerTable.ts';
 
 /** The ledger of the app as it stands now. */
@@ -14,6 +14,6 @@ export function currentLedgerTable({ studyState, engine, derived }: App): Table<
     units: derived.units.value,
     cosmology: derived.cosmology.value,
     account: selected?.account ?? null,
-    footprint: selected?.footprint ?? (study.region === null ? null : compileRegion(study.region)),
+    footprint: selected?.footprint ?? (study.region === null ? null : regionFootprint(study.region)),
   });
 }

@@ -34,7 +34,7 @@ export const WHOLE_LEDGER: readonly LedgerColumn[] = [
   column(9.5, 'densityPerMpc3', 'densityErrorPerMpc3'),
   column(10, 'volumeMpc3', 'effectiveVolumeMpc3'),
   {
-    ...column(10, 'fundamentalWavenumberPerMpc', 'effectiveVolumeUniformMpc3'),
+    ...column(13, 'fundamentalWavenumberPerMpc', 'effectiveVolumeUniformMpc3'),
     headings: ['k fund', 'V_eff even'],
   },
 ];

@@ -1,29 +1,30 @@
 import { formatNumber } from '../../../shared-core/report/quantity.ts';
-import { compileRegion } from '../../../shared-core/sky/compileRegion.ts';
 import type { FootprintPicture } from '../../engine/protocol.ts';
-import { type App, useApp } from '../../state/app.ts';
+import { useApp } from '../../state/app.ts';
+import { regionFootprint } from '../regionReady.ts';
+import { useStudyPart } from '../useStudyPart.ts';
 
 type Area = Pick<FootprintPicture, 'areaDeg2' | 'estimate'>;
 
 /** The area that the numbers stand on; null while there is neither a region nor a catalogue. */
-function areaOf({ engine, studyState }: App): Area | null {
-  const { region } = studyState.study.value;
-  return engine.selected.value?.footprint ?? (region === null ? null : compileRegion(region));
+function useArea(): Area | null {
+  const region = useStudyPart('region');
+  return useApp().engine.selected.value?.footprint ?? (region === null ? null : regionFootprint(region));
 }
 
 const exact = (deg2: number) => formatNumber(deg2, { significant: 7 });
 const rough = (value: number, significant: number) => formatNumber(value, { significant });
 
 /** The area in a few words. */
-export function areaGist(app: App): string {
-  const area = areaOf(app);
+export function useAreaGist(): string {
+  const area = useArea();
   if (area === null) return 'none';
   return area.estimate === null ? `${exact(area.areaDeg2)} deg²` : `≈ ${rough(area.areaDeg2, 4)} deg²`;
 }
 
 /** The area with all that a reader must know of it: exact, or an estimate with its cells and error. */
 export function AreaLine() {
-  const area = areaOf(useApp());
+  const area = useArea();
   if (area === null)
     return (
       <p class="quiet">

@@ -10,7 +10,8 @@ import { useApp } from '../../state/app.ts';
 import { IconButton } from '../../ui/IconButton.tsx';
 import { Menu } from '../../ui/Menu.tsx';
 import { Section } from '../../ui/Section.tsx';
-import { AreaLine, areaGist } from './AreaLine.tsx';
+import { useStudyPart } from '../useStudyPart.ts';
+import { AreaLine, useAreaGist } from './AreaLine.tsx';
 import { type ShapePlace, withoutShape, withShapes } from './regionParts.ts';
 import { ShapeEditor } from './ShapeEditor.tsx';
 import { draftOfShape, newDraft, type ShapeDraft, type ShapeKind } from './shapeDraft.ts';
@@ -25,9 +26,8 @@ interface Editing {
 
 /** The observed sky: its map, its area, and its shapes by numbers or text. */
 export function RegionSection() {
-  const app = useApp();
-  const { studyState } = app;
-  const { region } = studyState.study.value;
+  const { studyState } = useApp();
+  const region = useStudyPart('region');
   const [kept, setEditing] = useState<Editing | null>(null);
   const editing = kept !== null && (kept.inPlaceOf === null || kept.of === region) ? kept : null;
 
@@ -61,7 +61,7 @@ export function RegionSection() {
   };
   const partsLeft = (region?.parts.length ?? 0) - (editing?.inPlaceOf?.list === 'parts' ? 1 : 0);
   return (
-    <Section id="region" title="Region" gist={areaGist(app)} openAtFirst>
+    <Section id="region" title="Region" gist={useAreaGist()} openAtFirst>
       <SkyMap />
       <AreaLine />
       {region === null ? null : (

@@ -51,7 +51,7 @@ export function ShellSheet() {
   const unit = (key: string) => <span class="unit">{unitText(shownUnit(shellQuantity(key)!, units))}</span>;
 
   return (
-    <section class="sheet" aria-labelledby="sheet-title">
+    <section class={allDigits ? 'sheet sheet-digits' : 'sheet'} aria-labelledby="sheet-title">
       <header class="sheet-head">
         <h2 id="sheet-title" tabIndex={-1}>
           {index === null ? (

@@ -1,14 +1,15 @@
 import { useApp } from '../../state/app.ts';
 import { sizeText } from '../../ui/numberText.ts';
 import { Section } from '../../ui/Section.tsx';
+import { useStudyPart } from '../useStudyPart.ts';
 import { RowsAccount } from './RowsAccount.tsx';
 import { ReadFailure, SourceChanged, SourceMissing } from './SourceTroubles.tsx';
 import { sourceChanged } from './sourceFacts.ts';
 
 /** The catalogue: which file, what became of its rows, and what is wrong with it. */
 export function SourceSection() {
-  const { studyState, engine, files } = useApp();
-  const { source } = studyState.study.value;
+  const { engine, files } = useApp();
+  const source = useStudyPart('source');
   const loaded = engine.loaded.value;
   const missing = files.missingSource.value;
   const changed = sourceChanged(source, loaded);

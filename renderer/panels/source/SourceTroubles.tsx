@@ -3,6 +3,7 @@ import type { StudySource } from '../../../shared-core/study/schema.ts';
 import { useApp } from '../../state/app.ts';
 import { sizeText } from '../../ui/numberText.ts';
 import { revealSection } from '../../ui/openSections.ts';
+import { useStudyPart } from '../useStudyPart.ts';
 
 /** The study names a file that is not at hand. */
 export function SourceMissing({ source }: { readonly source: Extract<StudySource, { kind: 'file' }> }) {
@@ -24,7 +25,7 @@ export function SourceMissing({ source }: { readonly source: Extract<StudySource
 /** The file is there, but its contents are others. */
 export function SourceChanged() {
   const { studyState, engine, files } = useApp();
-  const { source } = studyState.study.value;
+  const source = useStudyPart('source');
   const loaded = engine.loaded.value;
   if (source?.kind !== 'file' || loaded === null) return null;
   return (
