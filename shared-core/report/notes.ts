@@ -45,7 +45,7 @@ export function describeFootprint(
   const { cells, cellAreaDeg2, nside, areaErrorDeg2 } = footprint.estimate;
   return (
     `Region: area ${area} +- ${trim(areaErrorDeg2, 2)} deg^2 is an ESTIMATE from ${cells} occupied equal-area cells of ` +
-    `${trim(cellAreaDeg2, 4)} deg^2 (HEALPix Nside ${nside}); give --region for an exact one.`
+    `${trim(cellAreaDeg2, 4)} deg^2 (HEALPix Nside ${nside}); give the region for an exact one.`
   );
 }
 
