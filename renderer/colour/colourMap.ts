@@ -21,9 +21,9 @@ interface Recipe {
 const RECIPES = {
   harbour: {
     title: 'Harbour: blue, sea green, sand',
-    hueDeg: [268, 190, 96],
-    chroma: 0.15,
-    lightness: { dark: [0.5, 0.94], light: [0.28, 0.72] },
+    hueDeg: [258, 200, 106],
+    chroma: 0.115,
+    lightness: { dark: [0.49, 0.93], light: [0.28, 0.72] },
   },
   lantern: {
     title: 'Lantern: violet, rose, amber',

@@ -40,11 +40,11 @@ export const oklch = (lightness: number, chroma: number, hueDeg: number): Triple
 /** Whether a linear colour can be shown; the slack is far below half a step of 8 bits. */
 export const inGamut = (linear: Triple): boolean => linear.every((v) => v >= -1e-4 && v <= 1 + 1e-4);
 
-/** The greatest chroma that sRGB can show at this lightness and hue (bisection, to 1e-4). */
+/** The greatest chroma that sRGB can show at this lightness and hue (bisection, to the last digits: a noisy limit would make uneven steps). */
 export function greatestChroma(lightness: number, hueDeg: number): number {
   let low = 0;
   let high = 0.4;
-  for (let i = 0; i < 14; i++) {
+  for (let i = 0; i < 30; i++) {
     const middle = (low + high) / 2;
     if (inGamut(oklabToLinear(oklch(lightness, middle, hueDeg)))) low = middle;
     else high = middle;
