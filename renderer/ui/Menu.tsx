@@ -77,7 +77,7 @@ export function Menu(props: {
         entry.run();
       }}
     >
-      <span>{entry.label}</span>
+      <span class="menu-text">{entry.label}</span>
       {entry.hint === undefined ? null : <span class="menu-hint">{entry.hint}</span>}
     </button>
   );
