@@ -150,7 +150,7 @@ export class EngineDesk {
     }
     emit({ kind: 'progress', stage: 'select', fraction: null });
     const given = wish.region === null ? null : compileRegion(wish.region);
-    const { indices, account } = select(
+    const { indices, account, cutCounts } = select(
       catalogue,
       given === null ? null : (ra, dec) => given.contains(ra, dec),
       wish.cuts,
@@ -182,6 +182,7 @@ export class EngineDesk {
       kind: 'selected',
       selected: {
         account,
+        cutCounts,
         footprint: footprint === null ? null : picture(footprint),
         sample,
         directions,

@@ -43,6 +43,8 @@ export interface FootprintPicture {
 /** The galaxies that are in, sorted by redshift; arrays of one length. */
 export interface Selected {
   readonly account: RowAccount;
+  /** Rows set aside by each cut of the wish: by the first that they fail. */
+  readonly cutCounts: readonly number[];
   readonly footprint: FootprintPicture | null;
   readonly sample: SortedSample;
   readonly directions: { readonly x: Float32Array; readonly y: Float32Array; readonly z: Float32Array };

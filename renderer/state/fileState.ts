@@ -302,7 +302,7 @@ export function createFileState({
 }
 
 function sourceKey(source: Extract<StudySource, { kind: 'file' }>): string {
-  return JSON.stringify([source.name, source.path, source.sizeBytes]);
+  return JSON.stringify([source.name, source.path]);
 }
 
 function baseName(fileName: string): string {

@@ -10,6 +10,8 @@ export interface Selection {
   /** Indices into the catalogue's arrays, ascending. */
   readonly indices: Uint32Array;
   readonly account: RowAccount;
+  /** Rows set aside by each cut: by the first that they fail. */
+  readonly cutCounts: readonly number[];
 }
 
 /**
@@ -29,6 +31,7 @@ export function select(
   const columns = cuts.map((cut) => extraNamed(catalogue, cut.column));
   const values = new Float64Array(cuts.length);
   const keep = new Uint8Array(raDeg.length);
+  const cutCounts = cuts.map(() => 0);
   const tally = new Tally(catalogue.account);
   let kept = 0;
   for (let i = 0; i < raDeg.length; i++) {
@@ -42,6 +45,7 @@ export function select(
       tally.setAside('outsideRegion');
       onSetAside?.({ line: line[i]!, reason: 'outsideRegion', column: null, text: null });
     } else {
+      cutCounts[left]!++;
       tally.setAside('outsideCuts');
       onSetAside?.({
         line: line[i]!,
@@ -53,7 +57,7 @@ export function select(
   }
   const indices = new Uint32Array(kept);
   for (let i = 0, next = 0; i < keep.length; i++) if (keep[i] === 1) indices[next++] = i;
-  return { indices, account: tally.account(countKeptRepeats(findRepeats(raDeg, decDeg), keep)) };
+  return { indices, account: tally.account(countKeptRepeats(findRepeats(raDeg, decDeg), keep)), cutCounts };
 }
 
 /** The selected rows as a catalogue of their own, with the selection's account. Arrays are copies. */

@@ -18,6 +18,7 @@ export function CutsSection() {
   const cuts = useStudyPart('cuts');
   const loaded = engine.loaded.value;
   const header = (loaded?.header ?? []).filter((name) => name !== '');
+  const cutCounts = engine.selected.value?.cutCounts ?? [];
   const outside = engine.selected.value?.account.reasons.outsideCuts ?? 0;
 
   const put = (next: readonly Cut[], label: string): string | null => {
@@ -64,6 +65,7 @@ export function CutsSection() {
               label={`Remove the cut on ${cut.column}`}
               onClick={() => put(cuts.toSpliced(i, 1), `Remove the cut on ${cut.column}`)}
             />
+            {cuts.length > 1 ? <p class="quiet cut-count">{countText(cutCounts[i] ?? 0)} set aside</p> : null}
           </li>
         ))}
       </ul>

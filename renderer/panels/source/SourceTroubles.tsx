@@ -41,7 +41,9 @@ export function SourceChanged() {
           class="button"
           onClick={() =>
             studyState.perform(
-              change('Accept the changed catalogue', { source: { ...source, sha256: loaded.sha256 } }),
+              change('Accept the changed catalogue', {
+                source: { ...source, sizeBytes: loaded.sizeBytes, sha256: loaded.sha256 },
+              }),
             )
           }
         >
