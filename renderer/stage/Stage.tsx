@@ -3,6 +3,7 @@ import { useComputed, useSignal, useSignalEffect } from '@preact/signals';
 import { useEffect, useRef } from 'preact/hooks';
 import { ConeView } from '../cone/coneView.ts';
 import type { ViewState as ConeState, DrawingState } from '../cone/types.ts';
+import { regionFields, regionFootprint } from '../panels/regionReady.ts';
 import { useApp } from '../state/app.ts';
 import { radialPixel, STRIP_LEFT_PX, STRIP_RIGHT_PX, shownWindow } from '../strip/layout.ts';
 import { readingsOf } from '../strip/readings.ts';
@@ -84,9 +85,15 @@ export function Stage() {
           },
     );
   });
+  // Before the catalogue is in, and in a plan without one, the region alone says what the cone looks like.
+  const region = useComputed(() => studyState.study.value.region);
+  const footprint = useComputed(() => {
+    if (region.value === null) return engine.selected.value?.footprint ?? null;
+    return { ...regionFootprint(region.value), fields: regionFields(region.value) };
+  });
   useSignalEffect(() => {
-    const footprint = engine.selected.value?.footprint;
-    if (cone.value !== null && footprint != null) cone.value.setFootprint(coneFootprint(footprint));
+    if (cone.value !== null && footprint.value !== null)
+      cone.value.setFootprint(coneFootprint(footprint.value));
   });
   useSignalEffect(() => {
     const input = colours.value?.input;

@@ -103,7 +103,7 @@ export function coneShells(shells: readonly ShellStatistics[]): ShellInput[] {
 }
 
 /** The footprint as the cone takes it. */
-export function coneFootprint(footprint: FootprintPicture): FootprintInput {
+export function coneFootprint(footprint: Pick<FootprintPicture, 'fields' | 'origin'>): FootprintInput {
   const { fields, origin } = footprint;
   const wide = fields.length === 0 || fields.some((f) => f.wide);
   return { fields: fields.filter((f) => f.rings.length > 0), wide, estimated: origin === 'estimated' };

@@ -17,7 +17,9 @@ export function LedgerTable(props: {
   readonly onEnter: () => void;
 }) {
   const { label, columns, order, onEnter } = props;
-  const { derived, view } = useApp();
+  const { derived, view, engine } = useApp();
+  // Until the galaxies are in, the numbers are those of an empty survey: shown faint.
+  const reading = engine.selected.value === null && engine.progress.value !== null;
   const shells = derived.shells.value;
   const total = derived.total.value;
   const rows = sortShells(shells, order.value, SHELL_QUANTITIES);
@@ -44,8 +46,15 @@ export function LedgerTable(props: {
     view.selectedShell.value = shellOfRow(to);
   };
   return (
-    // biome-ignore lint/a11y/noNoninteractiveElementToInteractiveRole: rows are chosen with the arrow keys, which is a grid
-    <table class="ledger" role="grid" aria-label={label} aria-readonly="true" onKeyDown={onKeyDown}>
+    <table
+      class="ledger"
+      // biome-ignore lint/a11y/noNoninteractiveElementToInteractiveRole: rows are chosen with the arrow keys, which is a grid
+      role="grid"
+      aria-label={label}
+      aria-readonly="true"
+      aria-busy={reading}
+      onKeyDown={onKeyDown}
+    >
       <colgroup>
         <col class="ledger-col-number" />
         {columns.map((column) => (
