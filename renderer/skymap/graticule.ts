@@ -1,10 +1,10 @@
-import type { MultiLineString, Position } from 'geojson';
 import { roundStepAbove } from '../strip/roundValues.ts';
+import type { Place, SkyLines } from './outlines.ts';
 import type { MapBox } from './skyFrames.ts';
 import { outlineProjection, type SkyFrame, skyAt } from './skyProjection.ts';
 
 /** A label of the graticule. */
-export interface SkyLabel {
+interface SkyLabel {
   readonly text: string;
   readonly x: number;
   readonly y: number;
@@ -12,7 +12,7 @@ export interface SkyLabel {
 }
 
 export interface Graticule {
-  readonly lines: MultiLineString;
+  readonly lines: SkyLines;
   readonly labels: readonly SkyLabel[];
 }
 
@@ -39,7 +39,7 @@ export function graticule(
 
 function wholeSky(frame: SkyFrame, fontPx: number, avoid: readonly (readonly [number, number])[]): Graticule {
   const project = outlineProjection(frame);
-  const coordinates: Position[][] = [];
+  const coordinates: Place[][] = [];
   const labels: SkyLabel[] = [];
   const meridians: number[] = [];
   for (let ra = 0; ra < 360; ra += 60) {
@@ -73,14 +73,14 @@ function closeLook(frame: SkyFrame, box: MapBox, fontPx: number): Graticule {
   const decStep = stepFor(decMax - decMin);
   const raStep = raMax - raMin >= 360 ? 30 : stepFor(raMax - raMin);
   const project = outlineProjection(frame);
-  const coordinates: Position[][] = [];
+  const coordinates: Place[][] = [];
   const labels: SkyLabel[] = [];
   for (let i = Math.ceil(decMin / decStep); i * decStep <= decMax; i++) {
     const dec = clean(i * decStep);
     if (Math.abs(dec) === 90) continue;
     const line = parallel(dec, raMin, raMax);
     coordinates.push(line);
-    const points = line.map((p) => project(p as [number, number]));
+    const points = line.map((p) => project(p));
     const y = crossing(points, box.left, 0);
     if (y === null) {
       // A circle that does not reach the left side is named inside, over the middle.
@@ -98,7 +98,7 @@ function closeLook(frame: SkyFrame, box: MapBox, fontPx: number): Graticule {
     const line = meridian(ra, decMin, decMax);
     coordinates.push(line);
     const x = crossing(
-      line.map((p) => project(p as [number, number])),
+      line.map((p) => project(p)),
       box.bottom,
       1,
     );
@@ -175,14 +175,14 @@ function withoutCrowding(labels: readonly SkyLabel[], fontPx: number): SkyLabel[
   return kept;
 }
 
-function meridian(ra: number, decMin: number, decMax: number): Position[] {
+function meridian(ra: number, decMin: number, decMax: number): Place[] {
   return Array.from({ length: POINTS_PER_LINE + 1 }, (_, i) => [
     ra,
     decMin + ((decMax - decMin) * i) / POINTS_PER_LINE,
   ]);
 }
 
-function parallel(dec: number, raMin: number, raMax: number): Position[] {
+function parallel(dec: number, raMin: number, raMax: number): Place[] {
   return Array.from({ length: POINTS_PER_LINE + 1 }, (_, i) => [
     raMin + ((raMax - raMin) * i) / POINTS_PER_LINE,
     dec,

@@ -23,7 +23,7 @@ export interface SkyFrame {
  * The Hammer projection: Lambert's azimuthal equal-area map of the sphere with halved longitudes, twice as wide.
  * Source: Snyder & Voxland 1989, An Album of Map Projections, USGS Professional Paper 1453, p. 232 (value from memory).
  */
-export const hammerRaw: GeoRawProjection = Object.assign(
+const hammerRaw: GeoRawProjection = Object.assign(
   (lambda: number, phi: number): [number, number] => {
     const [x, y] = geoAzimuthalEqualAreaRaw(lambda / 2, phi);
     return [2 * x, y];

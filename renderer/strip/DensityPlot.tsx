@@ -24,7 +24,7 @@ export function DensityPlot({ model, rows }: { readonly model: StripModel; reado
     return share === null ? null : plotBottom - share * height;
   };
   const noiseY = perDensity === null ? null : yAt(1 / perDensity);
-  const noiseInView = profile !== null && noiseY !== null && noiseY >= plotTop && noiseY <= plotBottom;
+  const noise = profile === null || noiseY === null ? null : noiseMark(noiseY, rows);
   const paths =
     profile === null ? null : profilePaths(profile, scale.atReading, model.primary.value.factor, yAt, rows);
   const most = Math.max(2, Math.floor(height / MARK_EVERY_PX));
@@ -64,12 +64,13 @@ export function DensityPlot({ model, rows }: { readonly model: StripModel; reado
             side="right"
             text={leftText(value, density.upward, 0)}
             rows={rows}
-            keepFrom={noiseInView ? noiseY : null}
+            keepFrom={noise?.labelY ?? null}
           />
         ))}
       {paths === null ? null : (
         <g clip-path={`url(#${id}-plot)`}>
           <path class="strip-bars" d={paths.bars} />
+          <path class="strip-steps" d={paths.steps} />
           <path class="strip-overflow" d={paths.overflow} />
           {profile?.hasCurve ? (
             <>
@@ -83,17 +84,34 @@ export function DensityPlot({ model, rows }: { readonly model: StripModel; reado
           ) : null}
         </g>
       )}
-      {noiseInView && noiseY !== null ? (
+      {noise === null ? null : (
         <g class="strip-noise">
-          <line class="strip-noise-line" x1={leftPx} x2={rightPx} y1={noiseY} y2={noiseY} />
-          <line class="strip-noise-end" x1={rightPx} x2={rightPx + 5} y1={noiseY} y2={noiseY} />
-          <text x={rightPx + 8} y={noiseY} dy="0.35em">
-            1
+          {noise.inView ? (
+            <>
+              <line class="strip-noise-line" x1={leftPx} x2={rightPx} y1={noise.labelY} y2={noise.labelY} />
+              <line
+                class="strip-noise-end"
+                x1={rightPx}
+                x2={rightPx + 5}
+                y1={noise.labelY}
+                y2={noise.labelY}
+              />
+            </>
+          ) : null}
+          <text x={rightPx + 8} y={noise.labelY} dy="0.35em">
+            {noise.text}
           </text>
         </g>
-      ) : null}
+      )}
     </g>
   );
+}
+
+// Where n P0 = 1 stands, or in which direction it lies out of the scale.
+function noiseMark(y: number, { plotTop, plotBottom }: StripRows) {
+  if (y < plotTop) return { inView: false, labelY: plotTop + 4, text: '1 ↑' };
+  if (y > plotBottom) return { inView: false, labelY: plotBottom - 4, text: '1 ↓' };
+  return { inView: true, labelY: y, text: '1' };
 }
 
 function ScaleMark(props: {
@@ -124,10 +142,10 @@ function ScaleMark(props: {
 function leftText(value: number, upward: 'linear' | 'log', power: number): string {
   if (upward === 'linear') return markText(Number((value / 10 ** power).toPrecision(8)));
   const exponent = Math.round(Math.log10(value));
-  return exponent >= -1 && exponent <= 3 ? markText(value) : powerOfTen(exponent);
+  return exponent >= -2 && exponent <= 3 ? markText(value) : powerOfTen(exponent);
 }
 
-// All bars are one path, so that two hundred of them cost one element.
+// All bars are one path, and their tops another, so that two hundred of them cost two elements.
 function profilePaths(
   { bins, density, smooth }: ShownProfile,
   atReading: (reading: number) => number,
@@ -136,25 +154,32 @@ function profilePaths(
   { plotTop, plotBottom }: StripRows,
 ) {
   let bars = '';
+  let steps = '';
   let overflow = '';
+  let before = plotBottom;
   const points: [x: number, y: number | null][] = [];
   for (let i = 0; i < density.length; i++) {
     const x0 = atReading(bins.shownEdges[i]! / factor);
     const x1 = atReading(bins.shownEdges[i + 1]! / factor);
     points.push([(x0 + x1) / 2, yAt(smooth[i]!)]);
-    if (i < bins.first || i >= bins.end || !(density[i]! > 0)) continue;
-    const y = yAt(density[i]!);
-    if (y === null || y >= plotBottom) continue;
-    const gap = Math.min(0.5, (x1 - x0) / 8);
-    bars += `M${(x0 + gap).toFixed(2)} ${plotBottom}V${Math.max(plotTop, y).toFixed(2)}H${(x1 - gap).toFixed(2)}V${plotBottom}Z`;
+    if (i < bins.first || i >= bins.end) continue;
+    const y = density[i]! > 0 ? yAt(density[i]!) : null;
+    const top = y === null ? plotBottom : Math.max(plotTop, Math.min(plotBottom, y));
+    // Empty bins break the line of the tops: a line along the floor would read as galaxies.
+    if (top < plotBottom || before < plotBottom)
+      steps += `${before < plotBottom || i === bins.first ? '' : `M${x0.toFixed(2)} ${plotBottom}`}${i === bins.first ? 'M' : 'L'}${x0.toFixed(2)} ${top.toFixed(2)}${top < plotBottom ? `H${x1.toFixed(2)}` : ''}`;
+    before = top;
+    if (y === null || top >= plotBottom) continue;
+    bars += `M${x0.toFixed(2)} ${plotBottom}V${top.toFixed(2)}H${x1.toFixed(2)}V${plotBottom}Z`;
     if (y < plotTop - 0.5) {
       const x = (x0 + x1) / 2;
       overflow += `M${(x - 4).toFixed(2)} ${plotTop + 6}L${x.toFixed(2)} ${plotTop + 1}L${(x + 4).toFixed(2)} ${plotTop + 6}Z`;
     }
   }
+  if (before < plotBottom) steps += `V${plotBottom}`;
   const curve = line<[number, number | null]>()
     .defined(([, y]) => y !== null && Number.isFinite(y))
     .x(([x]) => x)
     .y(([, y]) => Math.max(plotTop - 1000, Math.min(plotBottom + 1000, y!)));
-  return { bars, overflow, smooth: curve(points) ?? '' };
+  return { bars, steps, overflow, smooth: curve(points) ?? '' };
 }

@@ -41,7 +41,7 @@ export function DepthAxes({ model, rows }: { readonly model: StripModel; readonl
             />
             {own.map((m) =>
               m.text === null ? null : (
-                <text key={m.value} x={m.px} y={rows.axisHeight - 4}>
+                <text key={m.value} x={m.px} y={(model.size.value?.fontPx ?? 12) + 5}>
                   {m.text}
                 </text>
               ),

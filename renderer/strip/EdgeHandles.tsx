@@ -12,6 +12,8 @@ const REACH_PX = 12;
 const LEAST_REACH_PX = 3;
 /** Key presses nearer to each other than this are one step of undo. */
 const ONE_RUN_MS = 1200;
+/** Edges are crowded where they have less room than this on average. */
+const CROWDED_PX = 6;
 
 /** A handle for every edge in view: dragged, moved by keys, typed over, removed. */
 export function EdgeHandles({ model, rows }: { readonly model: StripModel; readonly rows: StripRows }) {
@@ -88,8 +90,15 @@ export function EdgeHandles({ model, rows }: { readonly model: StripModel; reado
     }
   };
   const spoken = model.spokenEdge.value;
+  const seen = xs.filter((x) => x >= scale.leftPx && x <= scale.rightPx).length;
+  const dense =
+    seen > 2 && (Math.min(scale.rightPx, xs.at(-1)!) - Math.max(scale.leftPx, xs[0]!)) / seen < CROWDED_PX;
   return (
-    <g class="strip-edges" ref={group} onKeyDownCapture={onDragKey}>
+    <g
+      class={dense ? 'strip-edges strip-edges-dense' : 'strip-edges'}
+      ref={group}
+      onKeyDownCapture={onDragKey}
+    >
       {edges.map((z, index) => {
         const x = xs[index]!;
         if (x < scale.leftPx - 0.5 || x > scale.rightPx + 0.5) return null;

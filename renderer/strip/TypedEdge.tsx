@@ -1,9 +1,11 @@
 import { useId, useLayoutEffect, useRef, useState } from 'preact/hooks';
 import { Refusal } from '../../shared-core/base/refusal.ts';
+import { DEEPEST_REDSHIFT } from '../../shared-core/shells/edges.ts';
 import { addEdge, type Edit, moveEdge } from '../../shared-core/study/edits.ts';
 import { RADIAL_READINGS, type RadialReading } from '../../shared-core/study/schema.ts';
 import { useApp } from '../state/app.ts';
 import { fieldText, readNumber } from '../ui/numberText.ts';
+import { markText } from './axisMarks.ts';
 import type { Readings } from './readings.ts';
 import type { StripModel, Typing } from './stripModel.ts';
 
@@ -124,13 +126,13 @@ export function typedRedshift(
   const reading = readings[kind];
   const read = readNumber(text, kind === 'redshift' ? 'The redshift' : `The ${reading.words}`);
   if ('sentence' in read) return read;
-  if (read.value < 0) return { sentence: `The ${reading.words} is ${read.value}: give 0 or more.` };
-  try {
-    return { z: reading.exactRedshiftAt(read.value) };
-  } catch (error) {
-    if (error instanceof Refusal) return { sentence: error.message };
-    throw error;
-  }
+  const deepest = reading.shownAt(DEEPEST_REDSHIFT);
+  const unit = kind === 'redshift' ? '' : ` ${reading.unit}`;
+  if (read.value < 0 || read.value > deepest)
+    return {
+      sentence: `The ${reading.words} is ${read.value}${unit}: give 0 to ${markText(Math.floor(deepest))}${unit}.`,
+    };
+  return { z: reading.exactRedshiftAt(read.value) };
 }
 
 // A refusal belongs beside the field that caused it, not among the notices.

@@ -2,7 +2,7 @@ import type { RadialPixel } from './layout.ts';
 import type { Reading } from './readings.ts';
 import { roundValues } from './roundValues.ts';
 
-export interface AxisMark {
+interface AxisMark {
   readonly value: number;
   readonly px: number;
   /** Null on a mark between two labelled ones. */

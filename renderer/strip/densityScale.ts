@@ -14,6 +14,9 @@ export interface DensityScale {
 
 /** Most powers of ten that are shown: what lies deeper than this below the peak tells nothing. */
 const MOST_DECADES = 4;
+/** How far a scale of powers of ten goes for the line of n P0 = 1, above and below the peak. */
+const DECADES_UP = 2;
+const DECADES_DOWN = 6;
 /** A bin speaks for the scale when it has this many galaxies; one galaxy in a sliver of volume must not set it. */
 const FEWEST_GALAXIES = 3;
 const SHARE_OF_FULLEST = 0.02;
@@ -66,9 +69,11 @@ export function densityScale(bins: BinsSeen, upward: Upward, noiseDensity: numbe
   let least = peak;
   for (let i = bins.first; i < bins.end; i++)
     if (bins.count[i]! > 0) least = Math.min(least, bins.density[i]!);
-  const reach = noiseDensity !== null && Math.abs(Math.log10(noiseDensity / peak)) < 2 ? noiseDensity : peak;
-  const high = Math.max(peak, reach) * 1.25;
-  const low = Math.max(high / 10 ** MOST_DECADES, Math.min(least, reach) / 2);
+  const isNear = noiseDensity !== null && noiseDensity < peak * 10 ** DECADES_UP;
+  const high = Math.max(peak, isNear ? noiseDensity : 0) * 1.25;
+  const data = Math.max(high / 10 ** MOST_DECADES, least / 2);
+  const isInReach = isNear && noiseDensity > high / 10 ** DECADES_DOWN;
+  const low = isInReach ? Math.min(data, noiseDensity / 2) : data;
   const decades = Math.log10(high / low);
   return { upward, low, high, share: (v) => (v > 0 ? Math.log10(v / low) / decades : null) };
 }

@@ -11,11 +11,16 @@ export interface StripRows {
 }
 
 const LEAST_PLOT_PX = 20;
+/** From this height on the axes are given room; WCAG 2.2 (2.5.8) asks for targets of 24 px. */
+const ROOMY_PX = 190;
+const TARGET_PX = 24;
 /** The rail under the plot, on which the handles of the edges run. */
 const RAIL_PX = 14;
 
 export function stripRows({ heightPx, fontPx }: StripSize): StripRows {
-  const axisHeight = Math.round(fontPx * 1.5) + 1;
+  // Each axis has its name as a button before it: as tall as a target should be, where there is room.
+  const tight = Math.round(fontPx * 1.5) + 1;
+  const axisHeight = heightPx >= ROOMY_PX ? Math.max(TARGET_PX, tight) : tight;
   const plotTop = Math.round(fontPx * 1.45);
   const plotBottom = Math.max(plotTop + LEAST_PLOT_PX, Math.floor(heightPx - 3 * axisHeight - RAIL_PX - 2));
   const railBottom = plotBottom + RAIL_PX;

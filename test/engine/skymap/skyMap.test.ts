@@ -93,11 +93,11 @@ describe('frames', () => {
     return cross / ((step * Math.PI) / 180) ** 2 / frame.scalePx ** 2;
   };
   it('keep areas, with right ascension to the left', () => {
+    // Finite differences over 3.6 arcseconds.
     for (const frame of [
       wholeSkyFrame(BOX, 100),
       closeFrame(BOX, { centreRaDeg: 20, centreDecDeg: -40, radiusDeg: 5, rings: [] }),
     ])
-      // Finite differences over 3.6 arcseconds.
       for (const [ra, dec] of [
         [100, 10],
         [20, -40],

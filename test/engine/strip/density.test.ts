@@ -85,6 +85,10 @@ describe('the scale of density', () => {
     const log = densityScale(bins([50, 50], [6, 2]), 'log', 60);
     expect(log.share(60)).toBeLessThanOrEqual(1);
     expect(log.share(2)).toBeGreaterThan(0);
+    // Four powers of ten below the peak, as in a dense nearby sample.
+    expect(densityScale(bins([50, 50], [0.35, 1e-4]), 'log', 3.1e-5).share(3.1e-5)).toBeGreaterThan(0);
+    // Seven powers of ten away the line would cost the whole scale.
+    expect(densityScale(bins([50, 50], [0.35, 1e-2]), 'log', 3e-8).share(3e-8)).toBeLessThan(0);
   });
   it('reads evenly, or by powers of ten', () => {
     const even = densityScale(bins([50], [10]), 'linear', null);
