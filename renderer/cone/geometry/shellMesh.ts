@@ -48,7 +48,7 @@ export function shellMesh(cap: SphereMesh, rings: readonly ArrayLike<number>[]):
       const a = first + 2 * i;
       const b = first + 2 * ((i + 1) % n);
       // Interior to the left of a-b: outward is to the right, seen from outside the sphere.
-      triangles.set([a, b + 1, b, a, a + 1, b + 1], index);
+      triangles.set([a, b, b + 1, a, b + 1, a + 1], index);
       index += 6;
     }
   }

@@ -36,6 +36,16 @@ const toSphere = (frame: Frame, x: number, y: number): Vec3 => {
   ];
 };
 
+/** A point of the outline in the plane, which knows its place on the sphere to the last digit. */
+class OutlinePoint extends Vector2 {
+  readonly place: Vec3;
+
+  constructor(frame: Frame, place: Vec3) {
+    super(...toPlane(frame, place));
+    this.place = place;
+  }
+}
+
 const signedArea = (ring: readonly Vector2[]): number => ShapeUtils.area(ring as Vector2[]);
 
 function containsPoint(ring: readonly Vector2[], p: Vector2): boolean {
@@ -49,10 +59,10 @@ function containsPoint(ring: readonly Vector2[], p: Vector2): boolean {
 }
 
 /** Outer rings, each with the holes inside it. */
-function nest(rings: readonly Vector2[][]): { outer: Vector2[]; holes: Vector2[][] }[] {
+function nest(rings: readonly OutlinePoint[][]): { outer: OutlinePoint[]; holes: OutlinePoint[][] }[] {
   const groups = rings
     .filter((ring) => signedArea(ring) > 0)
-    .map((outer) => ({ outer, area: signedArea(outer), holes: [] as Vector2[][] }));
+    .map((outer) => ({ outer, area: signedArea(outer), holes: [] as OutlinePoint[][] }));
   for (const hole of rings.filter((ring) => signedArea(ring) < 0)) {
     const owners = groups.filter((group) => containsPoint(group.outer, hole[0]!));
     owners.sort((a, b) => a.area - b.area);
@@ -73,23 +83,28 @@ export function triangulateRings(rings: readonly ArrayLike<number>[], maxEdgeDeg
   if (usable.length === 0) return wholeSphere(maxEdgeDeg);
   const frame = frameAbout(scale(pointOutside(usable), -1));
   const plane = usable.map((ring) => {
-    const out: Vector2[] = [];
+    const out: OutlinePoint[] = [];
     for (let i = 0; i < ring.length; i += 3) {
-      out.push(new Vector2(...toPlane(frame, [ring[i]!, ring[i + 1]!, ring[i + 2]!])));
+      out.push(new OutlinePoint(frame, [ring[i]!, ring[i + 1]!, ring[i + 2]!]));
     }
     return out;
   });
   const points: [number, number][] = [];
+  const outline: Vec3[] = [];
   const triangles: number[] = [];
   for (const { outer, holes } of nest(plane)) {
     const base = points.length;
-    for (const p of [outer, ...holes].flat()) points.push([p.x, p.y]);
+    for (const p of [outer, ...holes].flat()) {
+      points.push([p.x, p.y]);
+      outline.push(p.place);
+    }
     for (const face of ShapeUtils.triangulateShape(outer, holes)) {
       triangles.push(base + face[0]!, base + face[1]!, base + face[2]!);
     }
   }
   return refine(
     points,
+    outline,
     triangles,
     ([x, y]) => toSphere(frame, x, y),
     (a, b): [number, number] => [(a[0] + b[0]) / 2, (a[1] + b[1]) / 2],
@@ -120,6 +135,7 @@ function wholeSphere(maxEdgeDeg: number): SphereMesh {
   }
   return refine(
     corners,
+    corners,
     triangles,
     (p) => p,
     (a, b) => unit([a[0] + b[0], a[1] + b[1], a[2] + b[2]]),
@@ -130,13 +146,14 @@ function wholeSphere(maxEdgeDeg: number): SphereMesh {
 /** Split every edge longer than the limit in its middle, until there is none. Neighbours split alike: no gaps. */
 function refine<P>(
   points: readonly P[],
+  places: readonly Vec3[],
   triangles: readonly number[],
   place: (p: P) => Vec3,
   middle: (a: P, b: P) => P,
   maxEdgeDeg: number,
 ): SphereMesh {
   const list = [...points];
-  const sphere = list.map(place);
+  const sphere = [...places];
   const limit = Math.cos(maxEdgeDeg / RADIAN);
   let faces = triangles;
   for (let round = 0; round < 24; round++) {

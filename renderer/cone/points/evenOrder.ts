@@ -1,5 +1,5 @@
 /** Rows that stand together in memory after reordering. */
-const CHUNK = 32768;
+const CHUNK = 2048;
 
 /** A step coprime to n, near n over the golden ratio: multiples of it modulo n spread evenly over 0..n-1. */
 export function evenStep(n: number): number {

@@ -1,8 +1,8 @@
 import { chromium } from '@playwright/test';
 
 // Pictures of the harness: node shoot.mjs OUT.png QUERY [WIDTHxHEIGHT] [SCRIPT]
-const [out, query, size = '1280x500', script] = process.argv.slice(2);
-const [width, height] = size.split('x').map(Number);
+const [out = 'cone.png', query = '', size = '1280x500', script] = process.argv.slice(2);
+const [width = 1280, height = 800] = size.split('x').map(Number);
 const browser = await chromium.launch({
   executablePath: process.env.CHROME_PATH ?? '/usr/bin/chromium',
   args: [
@@ -23,7 +23,7 @@ const page = await browser.newPage({
 page.on('console', (message) => console.log(message.text()));
 page.on('pageerror', (error) => console.log('PAGE ERROR', error.stack));
 await page.goto(`http://localhost:${process.env.PORT ?? 5199}/?${query}`);
-await page.waitForFunction(() => window.cone && window.log.some((f) => f.total > 0 && f.atRest), null, {
+await page.waitForFunction(() => document.documentElement.dataset.rest === 'yes', null, {
   timeout: 120000,
 });
 await page.waitForTimeout(900);
