@@ -38,6 +38,8 @@ const PLAIN: Readonly<Record<string, KeyCommand>> = {
   '2': { view: 'down-the-cone' },
   '3': { view: 'from-behind' },
   '4': { view: 'whole' },
+  '5': { view: 'around' },
+  '6': { view: 'parallel' },
 };
 const WITH_COMMAND: Readonly<Record<string, KeyCommand>> = {
   z: 'undo',

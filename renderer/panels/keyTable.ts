@@ -53,10 +53,23 @@ export const KEY_HELP: readonly { readonly title: string; readonly rows: readonl
       { keys: ['2'], does: 'down the cone' },
       { keys: ['3'], does: 'from behind' },
       { keys: ['4'], does: 'the whole survey' },
+      { keys: ['5'], does: 'around the observer' },
+      { keys: ['6'], does: 'all fields in parallel' },
       { keys: ['F'], does: 'next field' },
       { keys: ['R'], does: 'radius as distance, redshift, lookback time' },
       { keys: ['H'], does: 'Mpc or Mpc/h' },
       { keys: ['?'], does: 'these keys' },
+    ],
+  },
+  {
+    title: 'In the strip',
+    rows: [
+      { keys: ['← →'], does: 'move the edge or the cursor; with Shift in larger steps' },
+      { keys: ['Home', 'End'], does: 'to the neighbouring edge' },
+      { keys: ['Enter'], does: 'type an edge; at the cursor, choose the shell' },
+      { keys: ['Delete'], does: 'remove the edge' },
+      { keys: ['A'], does: 'add an edge at the cursor' },
+      { keys: ['+', '−', '0'], does: 'nearer, farther, all' },
     ],
   },
 ];

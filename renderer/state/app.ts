@@ -1,4 +1,4 @@
-import { effect } from '@preact/signals';
+import { computed, effect } from '@preact/signals';
 import { createContext } from 'preact';
 import { useContext } from 'preact/hooks';
 import type { Bridge } from '../../shared-core/bridge/contract.ts';
@@ -55,6 +55,19 @@ export function createApp(
     if (loaded.sizeBytes !== source.sizeBytes) return;
     studyState.amend((study) => ({ ...study, source: { ...source, sha256: loaded.sha256 } }));
   });
+  const view = createViewState(options.theme);
+  // What was pointed at belongs to the catalogue that was open then.
+  const source = computed(() => JSON.stringify(files.engineSource.value));
+  effect(() => {
+    void source.value;
+    view.selectedShell.value = null;
+    view.redshiftWindow.value = null;
+    view.field.value = 0;
+  });
+  effect(() => {
+    void engine.selected.value;
+    view.pickedGalaxies.value = [];
+  });
   return {
     bridge,
     notices,
@@ -62,7 +75,7 @@ export function createApp(
     studyState,
     engine,
     derived: createDerived(studyState, engine),
-    view: createViewState(options.theme),
+    view,
     files,
   };
 }
