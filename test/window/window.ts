@@ -85,8 +85,8 @@ export const test = base.extend<{ desk: Desk }, { chrome: Browser }>({
         return page;
       },
     });
-    for (const child of started) child.kill();
     for (const context of chrome.contexts()) await context.close();
+    for (const child of started) child.kill();
     rmSync(folder, { recursive: true, force: true });
     // Whatever a test looks at, the page itself must be quiet: no exception, no violation of the content policy.
     if (info.status === info.expectedStatus) expect(complaints).toEqual([]);
