@@ -437,10 +437,7 @@ export class ConeView {
 
   private drawOverlay(frame: Frame): void {
     const { overlay, pixelRatio, widthPx, heightPx } = this.stage;
-    // Without a GPU a canvas that is drawn by the CPU is far quicker.
-    const { state } = this.gl;
-    const software = state.webgl !== 'ready' || state.software;
-    const context = overlay.getContext('2d', { willReadFrequently: software });
+    const context = overlay.getContext('2d');
     if (!context) return;
     this.stage.fit(overlay);
     context.setTransform(pixelRatio, 0, 0, pixelRatio, 0, 0);

@@ -1,18 +1,41 @@
 import { cssColour } from '../../colour/shellColours.ts';
-import { project } from '../geometry/projection.ts';
+import { NEAREST_W, project } from '../geometry/projection.ts';
 import type { Pen, Point } from './pen.ts';
 import type { OverlayScene, PaintedLane } from './scene.ts';
 
-/** The outline of a field at one displayed radius. */
-function outlineAt({ shape, matrix }: PaintedLane, radius: number): (Point | null)[][] {
-  return shape.rings.map((ring) => {
-    const out: (Point | null)[] = [];
-    for (let i = 0; i < ring.length; i += 3) {
-      out.push(project(matrix, ring[i]!, ring[i + 1]!, ring[i + 2]!, radius));
+/** Strokes the outline of a field at one displayed radius. Written out without intermediate points: there are many. */
+function strokeOutline(
+  pen: Pen,
+  { shape, matrix: m }: PaintedLane,
+  radius: number,
+  colour: string,
+  widthPx: number,
+): void {
+  const { context } = pen;
+  context.beginPath();
+  for (const ring of shape.rings) {
+    let down = false;
+    const n = ring.length;
+    for (let i = 0; i <= n; i += 3) {
+      // The last step closes the ring.
+      const k = i === n ? 0 : i;
+      const x = radius * ring[k]!;
+      const y = radius * ring[k + 1]!;
+      const z = radius * ring[k + 2]!;
+      const w = m[8]! * x + m[9]! * y + m[10]! * z + m[11]!;
+      if (w > NEAREST_W) {
+        const px = (m[0]! * x + m[1]! * y + m[2]! * z + m[3]!) / w;
+        const py = (m[4]! * x + m[5]! * y + m[6]! * z + m[7]!) / w;
+        if (down) context.lineTo(px, py);
+        else context.moveTo(px, py);
+        down = true;
+      } else down = false;
     }
-    if (out.length > 0) out.push(out[0]!);
-    return out;
-  });
+  }
+  context.strokeStyle = colour;
+  context.lineWidth = widthPx;
+  context.lineJoin = 'round';
+  context.stroke();
 }
 
 /** Outline of a whole sphere about the observer: the great circle that faces the viewer. */
@@ -56,8 +79,8 @@ export function paintShells(pen: Pen, scene: OverlayScene): void {
       const outer = scene.radius(shell.comovingMaxMpc);
       const shared = !strong(i) && shells[i - 1]?.comovingMaxMpc === shell.comovingMinMpc;
       for (const radius of shared ? [outer] : [inner, outer]) {
-        const lines = lane.shape.rings.length > 0 ? outlineAt(lane, radius) : [silhouetteAt(scene, radius)];
-        for (const line of lines) pen.line(line, colour, widthPx);
+        if (lane.shape.rings.length > 0) strokeOutline(pen, lane, radius, colour, widthPx);
+        else pen.line(silhouetteAt(scene, radius), colour, widthPx);
       }
       paintCorners(pen, lane, inner, outer, colour, widthPx);
     }

@@ -8,7 +8,9 @@ import {
   strideOf,
   sumsLength,
 } from '../../../renderer/cone/points/software/splat.ts';
-import { SCRATCH_BYTES, wideSplat } from '../../../renderer/cone/points/software/wideSplat.ts';
+import { toneRows } from '../../../renderer/cone/points/software/toneRows.ts';
+import { SCRATCH_BYTES, wideKernel } from '../../../renderer/cone/points/software/wideKernel.ts';
+import { LIGHT_STEPS, toneTable, VALUE_STEPS } from '../../../renderer/cone/points/tone.ts';
 
 const WIDTH = 160;
 const HEIGHT = 90;
@@ -120,10 +122,10 @@ describe('the splat', () => {
     ] as const) {
       it(`sums alike in WebAssembly and JavaScript, ${shared ? 'shared' : 'own'} memory: ${name}`, async () => {
         const { memory, layout, points, sums, sumsAt } = scene(shared);
-        const wide = await wideSplat(memory, shared, layout, 1024);
+        const wide = await wideKernel(memory, shared, layout, 1024);
         expect(wide).not.toBeNull();
         const settings = how(diameter, perspective);
-        wide!.run(0, SLOTS, settings, sumsAt);
+        wide!.splat(0, SLOTS, settings, sumsAt);
         const reference = new Float32Array(sumsLength(WIDTH, HEIGHT));
         splat(points, 0, SLOTS, settings, reference);
         expect(reference.some((v) => v > 0)).toBe(true);
@@ -132,6 +134,60 @@ describe('the splat', () => {
       });
     }
   }
+
+  it.each([false, true])('tones alike in WebAssembly and JavaScript (shared memory: %s)', async (shared) => {
+    const [width, height] = [77, 31];
+    const tableAt = 65536;
+    const length = sumsLength(width, height);
+    const sumsAt = [0, 1, 2].map(
+      (i) => tableAt + 4 * VALUE_STEPS * LIGHT_STEPS + 64 * Math.ceil((4 * length * i) / 64),
+    );
+    const imageAt = sumsAt[2]! + 64 * Math.ceil((4 * length) / 64);
+    const pages = Math.ceil((imageAt + 4 * width * height) / 65536);
+    const memory = shared
+      ? new WebAssembly.Memory({ initial: pages, maximum: pages, shared: true })
+      : new WebAssembly.Memory({ initial: pages });
+    const wide = await wideKernel(memory, shared, pointLayout(4, 0), 1024);
+    const table = new Uint32Array(memory.buffer, tableAt, VALUE_STEPS * LIGHT_STEPS);
+    toneTable(
+      {
+        background: [9, 8, 7],
+        colours: Uint8Array.from({ length: 768 }, (_, i) => (i * 13) % 256),
+        stretch: 'logarithmic',
+        full: 40,
+        single: 1,
+        glow: [255, 255, 255],
+      },
+      table,
+    );
+    const random = seeded(5);
+    const sums = sumsAt.map((at) => new Float32Array(memory.buffer, at, length));
+    for (const part of sums) {
+      for (let i = 0; i < length; i += 2) {
+        // Bare pixels, tiny and huge sums, and all between.
+        const light = random() < 0.4 ? 0 : 10 ** (8 * random() - 4);
+        part[i] = light;
+        part[i + 1] = light * random();
+      }
+    }
+    const copies = sums.map((part) => Float32Array.from(part));
+    const reference = new Uint32Array(width * height);
+    toneRows(copies, Uint32Array.from(table), reference, width, 0, height);
+    wide!.toneRows(sumsAt, tableAt, imageAt, width, 0, 13);
+    wide!.toneRows(sumsAt, tableAt, imageAt, width, 13, height);
+    const image = new Uint32Array(memory.buffer, imageAt, width * height);
+    expect(image.every((pixel, i) => pixel === reference[i])).toBe(true);
+    expect(new Set(image).size).toBeGreaterThan(100);
+    // The picture's part of the sums is left at zero by both.
+    for (const set of [sums, copies]) {
+      for (const part of set) {
+        for (let row = 0; row < height; row++) {
+          const start = 2 * ((row + PAD) * strideOf(width) + PAD);
+          expect(part.subarray(start, start + 2 * width).every((v) => v === 0)).toBe(true);
+        }
+      }
+    }
+  });
 
   it('has scratch for the largest disc below the points', () => {
     expect(1024 + SCRATCH_BYTES).toBeLessThan(65536);

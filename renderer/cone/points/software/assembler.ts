@@ -42,13 +42,30 @@ export const op = {
   set: (local: number) => [0x21, ...u32(local)],
   tee: (local: number) => [0x22, ...u32(local)],
   i32: (value: number) => [0x41, ...s32(value)],
+  f32: (value: number) => [0x43, ...new Uint8Array(Float32Array.of(value).buffer)],
+  i64Zero: [0x42, 0],
   i32Add: [0x6a],
+  i32Sub: [0x6b],
   i32Mul: [0x6c],
   i32And: [0x71],
   i32Shl: [0x74],
   i32LtU: [0x49],
+  i32LtS: [0x48],
+  i32GtS: [0x4a],
   i32Eqz: [0x45],
-  i32Load: (offset: number) => [0x28, 0, ...u32(offset)],
+  i32ShrU: [0x76],
+  i32Load: (offset = 0) => [0x28, 0, ...u32(offset)],
+  i64Load: (offset = 0) => [0x29, 0, ...u32(offset)],
+  f32Load: (offset = 0) => [0x2a, 0, ...u32(offset)],
+  i32Store: (offset = 0) => [0x36, 0, ...u32(offset)],
+  i64Store: (offset = 0) => [0x37, 0, ...u32(offset)],
+  i64Eqz: [0x50],
+  f32Add: [0x92],
+  f32Mul: [0x94],
+  f32Div: [0x95],
+  i32TruncF32: [0xfc, 0x00],
+  select: [0x1b],
+  else: [0x05],
   block: [0x02, 0x40],
   loop: [0x03, 0x40],
   if: [0x04, 0x40],
@@ -91,21 +108,32 @@ export const wide = {
   f32FromI32: simd(250),
 } as const;
 
-/** A module with one function of i32 parameters, exported as `run`, over the imported memory `env.memory`. */
-export function module(
-  parameters: number,
-  locals: readonly (readonly [count: number, type: number])[],
-  body: readonly number[],
-  shared: boolean,
-): Uint8Array<ArrayBuffer> {
+/** A function of i32 parameters that answers nothing. */
+export interface Code {
+  readonly name: string;
+  readonly parameters: number;
+  readonly locals: readonly (readonly [count: number, type: number])[];
+  readonly body: readonly number[];
+}
+
+/** A module of functions, exported by their names, over the imported memory `env.memory`. */
+export function module(functions: readonly Code[], shared: boolean): Uint8Array<ArrayBuffer> {
   const limits = shared ? [0x03, ...u32(1), ...u32(65536)] : [0x00, ...u32(1)];
-  const code = [...vector(locals.map(([count, type]) => [...u32(count), type])), ...body, ...op.end];
+  const type = ({ parameters }: Code) => [
+    0x60,
+    ...vector(Array.from({ length: parameters }, () => [I32])),
+    0,
+  ];
+  const code = ({ locals, body }: Code): number[] => {
+    const bytes = [...vector(locals.map(([count, t]) => [...u32(count), t])), ...body, ...op.end];
+    return [...u32(bytes.length), ...bytes];
+  };
   return Uint8Array.from([
     ...[0x00, 0x61, 0x73, 0x6d, 0x01, 0x00, 0x00, 0x00],
-    ...section(1, vector([[0x60, ...vector(Array.from({ length: parameters }, () => [I32])), 0]])),
+    ...section(1, vector(functions.map(type))),
     ...section(2, vector([[...text('env'), ...text('memory'), 0x02, ...limits]])),
-    ...section(3, vector([[0]])),
-    ...section(7, vector([[...text('run'), 0x00, 0]])),
-    ...section(10, vector([[...u32(code.length), ...code]])),
+    ...section(3, vector(functions.map((_, i) => u32(i)))),
+    ...section(7, vector(functions.map(({ name }, i) => [...text(name), 0x00, ...u32(i)]))),
+    ...section(10, vector(functions.map(code))),
   ]);
 }

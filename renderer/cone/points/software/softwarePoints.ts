@@ -5,8 +5,8 @@ import type { SplatPicture, SplatPool } from './splatPool.ts';
 
 /** A step of a large picture takes about so long, so that input is answered in between. */
 const STEP_MS = 22;
-/** First guesses of the cost of a million points, in milliseconds; measured from the first picture on. */
-const FIRST_COST = { pixel: 12, disc: 60 };
+/** First guesses of one worker's milliseconds for a million points; measured from the first picture on. */
+const FIRST_COST = { pixel: 14, disc: 60 };
 
 /**
  * Points without a GPU: workers sum light into buffers, a table turns it into colours, and the picture is put into a 2D
@@ -45,7 +45,7 @@ export class SoftwarePoints implements PointLayer {
 
   /** Points that can be drawn in so many milliseconds. */
   affordable(milliseconds: number, frame: PointFrame): number {
-    return (1e6 * milliseconds) / this.cost[this.costOf(frame)];
+    return (1e6 * milliseconds * this.pool.size) / this.cost[this.costOf(frame)];
   }
 
   /**

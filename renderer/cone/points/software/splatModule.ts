@@ -1,4 +1,4 @@
-import { I32, module, op, V128, wide } from './assembler.ts';
+import { type Code, I32, op, V128, wide } from './assembler.ts';
 
 /**
  * Byte offsets in the block of parameters that `run` reads. Floats unless marked; the discs' weights stand twice each,
@@ -319,7 +319,7 @@ const body: number[] = [
   ...op.i32Eqz,
   ...op.if,
   ...pixels,
-  ...[0x05],
+  ...op.else,
   ...discs,
   ...op.end,
   ...op.end,
@@ -333,16 +333,15 @@ const body: number[] = [
 ];
 
 /**
- * The splat of splat.ts, four points at a time: run(from, to, parameters), slots in groups of four, the parameters laid
+ * The splat of splat.ts, four points at a time: splat(from, to, parameters), slots in groups of four, the parameters laid
  * out as in PARAMETER.
  */
-export const splatModule = (shared: boolean): Uint8Array<ArrayBuffer> =>
-  module(
-    3,
-    [
-      [7, I32],
-      [26, V128],
-    ],
-    body,
-    shared,
-  );
+export const SPLAT: Code = {
+  name: 'splat',
+  parameters: 3,
+  locals: [
+    [7, I32],
+    [26, V128],
+  ],
+  body,
+};

@@ -4,12 +4,14 @@ import { nextTask } from '../slices.ts';
 import { LIGHT_STEPS, type Tone, toneTable, VALUE_STEPS } from '../tone.ts';
 import { type FromWorker, type Run, SCRATCH_AT, TABLE_AT, type ToWorker } from './messages.ts';
 import { sumsLength } from './splat.ts';
-import { SCRATCH_BYTES } from './wideSplat.ts';
+import { SCRATCH_BYTES } from './wideKernel.ts';
 
 const PAGE = 65536;
 /** Addresses are 32 bits wide. */
 const MOST_PAGES = 65536;
 const MOST_WORKERS = 4;
+/** So many single points are one worker's work: more hands would only bring more sums to add. */
+const WORK_OF_ONE = 300_000;
 /** Slots sent at once to a worker with its own memory. */
 const SENT_AT_ONCE = 262144;
 
@@ -36,6 +38,11 @@ export class SplatPool {
   private layout: PointLayout | null = null;
   private nextId = 1;
   private tone: Tone | null = null;
+  /** Workers whose sums hold the picture. */
+  private used = 1;
+  /** Whether all sums are zero, and for which size. */
+  private clean = false;
+  private cleanSize = '';
   private readonly failed: (reason: string) => void;
   /** Kernel in use, known once the points are there. */
   wide = false;
@@ -53,6 +60,11 @@ export class SplatPool {
     }
   }
 
+  /** Hands for a large picture. */
+  get size(): number {
+    return this.workers.length;
+  }
+
   /** Memory for a store: shared with the workers where that is allowed. */
   allocate(layout: PointLayout): ArrayBufferLike {
     if (!this.shared) return new ArrayBuffer(layout.end);
@@ -65,6 +77,7 @@ export class SplatPool {
   /** Tells the workers of a store whose memory came from `allocate`. */
   async setStore(store: PointStore, wide: boolean): Promise<void> {
     this.layout = store.layout;
+    this.clean = false;
     this.tone = null;
     const memory = this.memories.get(store.arrays.x.buffer);
     this.memory = memory ?? null;
@@ -101,29 +114,45 @@ export class SplatPool {
     }
   }
 
-  /** Adds runs to the sums; every worker takes its share of each run. Answers the longest share's milliseconds. */
-  async splat(runs: readonly Run[], picture: SplatPicture, clear: boolean): Promise<number> {
+  /**
+   * Adds runs to the sums; every worker takes its share of each run, but a small picture is the work of one.
+   * Answers the milliseconds spent by all of them together.
+   *
+   * @param fresh begins a new picture
+   */
+  async splat(runs: readonly Run[], picture: SplatPicture, fresh: boolean): Promise<number> {
     const sumsAt = this.room(picture).sumsAt;
+    if (fresh) {
+      const points = runs.reduce((sum, run) => sum + run.to - run.from, 0);
+      this.used = points * (picture.diameter > 1.5 ? 4 : 1) < WORK_OF_ONE ? 1 : this.workers.length;
+    }
+    // Toning leaves the sums at zero; they are cleared only where a picture was given up or has another size.
+    const clear = fresh && !this.clean;
+    this.clean = false;
     const answers = await Promise.all(
-      this.workers.map((_, i) =>
-        this.ask(i, { kind: 'splat', ...picture, runs: this.share(runs, i), clear, sumsAt: sumsAt[i]! }),
-      ),
+      Array.from({ length: clear ? this.workers.length : this.used }, (_, i) => {
+        const share = i < this.used ? this.share(runs, i, this.used) : [];
+        return this.ask(i, { kind: 'splat', ...picture, runs: share, clear, sumsAt: sumsAt[i]! });
+      }),
     );
-    return Math.max(...answers.map((m) => (m.kind === 'done' ? (m.milliseconds ?? 0) : 0)));
+    return answers.reduce((sum, m) => sum + (m.kind === 'done' ? (m.milliseconds ?? 0) : 0), 0);
   }
 
   /** Tones the sums into an image of the picture's size. */
   async develop(picture: SplatPicture, tone: Tone, image: ImageData): Promise<void> {
     const { width, height } = picture;
     const { sumsAt, imageAt } = this.room(picture);
+    const used = sumsAt.slice(0, this.used);
     const table = this.tableFor(tone);
     const count = this.workers.length;
     const answers = await Promise.all(
       this.workers.map((_, i) => {
         const rows = [Math.floor((height * i) / count), Math.floor((height * (i + 1)) / count)] as const;
-        return this.ask(i, { kind: 'tone', width, height, rows, sumsAt, imageAt, table });
+        return this.ask(i, { kind: 'tone', width, height, rows, sumsAt: used, imageAt, table });
       }),
     );
+    this.clean = true;
+    this.cleanSize = `${width} ${height}`;
     const first = answers[0]!;
     // ImageData takes no shared memory: one copy is needed.
     if (first.kind === 'image') image.data.set(new Uint8Array(first.image.buffer));
@@ -133,7 +162,9 @@ export class SplatPool {
   /** The slot drawn nearest to a pixel, searched by all workers. */
   async pick(runs: readonly Run[], xPx: number, yPx: number, reachPx: number) {
     const answers = await Promise.all(
-      this.workers.map((_, i) => this.ask(i, { kind: 'pick', runs: this.share(runs, i), xPx, yPx, reachPx })),
+      this.workers.map((_, i) =>
+        this.ask(i, { kind: 'pick', runs: this.share(runs, i, this.workers.length), xPx, yPx, reachPx }),
+      ),
     );
     const hits = answers.flatMap((m) => (m.kind === 'hit' && m.hit ? [m.hit] : []));
     hits.sort((a, b) => a.distance2 - b.distance2);
@@ -145,9 +176,8 @@ export class SplatPool {
     this.waiting.clear();
   }
 
-  /** Part i of each run, cut at groups of four. */
-  private share(runs: readonly Run[], i: number): Run[] {
-    const n = this.workers.length;
+  /** Part i of n of each run, cut at groups of four. */
+  private share(runs: readonly Run[], i: number, n: number): Run[] {
     return runs.map((run) => {
       const groups = Math.ceil((run.to - run.from) / 4);
       return {
@@ -160,8 +190,9 @@ export class SplatPool {
 
   /** Where sums and picture stand behind the points; the memory grows when they need more. */
   private room({ width, height }: SplatPicture): { sumsAt: number[]; imageAt: number } {
-    if (!this.memory || !this.layout) return { sumsAt: [0], imageAt: 0 };
+    if (this.cleanSize !== `${width} ${height}`) this.clean = false;
     const bytes = Math.ceil((4 * sumsLength(width, height)) / 64) * 64;
+    if (!this.memory || !this.layout) return { sumsAt: [0], imageAt: 0 };
     const sumsAt = this.workers.map((_, i) => this.layout!.end + i * bytes);
     const imageAt = this.layout.end + this.workers.length * bytes;
     const missing = imageAt + 4 * width * height - this.memory.buffer.byteLength;

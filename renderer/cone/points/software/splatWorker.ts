@@ -4,7 +4,7 @@ import { LIGHT_STEPS, VALUE_STEPS } from '../tone.ts';
 import { type FromWorker, RESERVED_BYTES, SCRATCH_AT, TABLE_AT, type ToWorker } from './messages.ts';
 import { softDiscs, splat, sumsLength } from './splat.ts';
 import { toneRows } from './toneRows.ts';
-import { type WideSplat, wideSplat } from './wideSplat.ts';
+import { type WideKernel, wideKernel } from './wideKernel.ts';
 
 const PAGE = 65536;
 
@@ -12,8 +12,7 @@ let memory: WebAssembly.Memory | null = null;
 let isShared = false;
 let layout: PointLayout | null = null;
 let points: PointArrays | null = null;
-let kernel: WideSplat | null = null;
-let ownTable: Uint32Array | null = null;
+let kernel: WideKernel | null = null;
 let discs = { diameter: -1, ...softDiscs(1) };
 
 const answer = (message: FromWorker, transfer: Transferable[] = []): void =>
@@ -30,7 +29,7 @@ async function take(
   isShared = shared;
   layout = at;
   points = pointViews(next.buffer, at);
-  kernel = wide ? await wideSplat(next, shared, at, scratchAt) : null;
+  kernel = wide ? await wideKernel(next, shared, at, scratchAt) : null;
 }
 
 /** Room behind the points in the worker's own memory: the sums, then the picture. */
@@ -65,27 +64,31 @@ function splatRuns(message: Extract<ToWorker, { kind: 'splat' }>): void {
       side: discs.side,
       discs: discs.discs,
     };
-    if (kernel) kernel.run(from, to, how, sumsAt);
+    if (kernel) kernel.splat(from, to, how, sumsAt);
     else splat(points!, from, to, how, sums);
   }
 }
 
 function tone(message: Extract<ToWorker, { kind: 'tone' }>): void {
-  const { id, width, height, rows } = message;
+  const { id, width, height } = message;
+  const room = isShared ? message : ownRoom(width, height);
+  const sumsAt = isShared ? message.sumsAt : [ownRoom(width, height).sumsAt];
   const buffer = memory!.buffer;
-  const sums = (at: number): Float32Array => new Float32Array(buffer, at, sumsLength(width, height));
+  const table = new Uint32Array(buffer, TABLE_AT, VALUE_STEPS * LIGHT_STEPS);
+  if (message.table) table.set(message.table);
+  const image = new Uint32Array(buffer, room.imageAt, width * height);
+  const [from, to] = message.rows;
+  if (kernel) kernel.toneRows(sumsAt, TABLE_AT, room.imageAt, width, from, to);
+  else {
+    const sums = sumsAt.map((at) => new Float32Array(buffer, at, sumsLength(width, height)));
+    toneRows(sums, table, image, width, from, to);
+  }
   if (isShared) {
-    const image = new Uint32Array(buffer, message.imageAt, width * height);
-    const table = new Uint32Array(buffer, TABLE_AT, VALUE_STEPS * LIGHT_STEPS);
-    toneRows(message.sumsAt.map(sums), table, image, width, rows[0], rows[1]);
     answer({ kind: 'done', id });
     return;
   }
-  if (message.table) ownTable = message.table;
-  if (!ownTable) return;
-  const image = new Uint32Array(width * height);
-  toneRows([sums(ownRoom(width, height).sumsAt)], ownTable, image, width, rows[0], rows[1]);
-  answer({ kind: 'image', id, image }, [image.buffer]);
+  const copy = new Uint32Array(image);
+  answer({ kind: 'image', id, image: copy }, [copy.buffer]);
 }
 
 function fill(message: Extract<ToWorker, { kind: 'fill' }>): void {
@@ -100,30 +103,36 @@ async function handle(message: ToWorker): Promise<void> {
   switch (message.kind) {
     case 'shared':
       await take(message.memory, true, message.layout, message.scratchAt, message.wide);
-      return answer({ kind: 'done', id, wide: kernel !== null });
+      answer({ kind: 'done', id, wide: kernel !== null });
+      return;
     case 'own': {
       const at = pointLayout(message.slots, RESERVED_BYTES);
       const own = new WebAssembly.Memory({ initial: Math.ceil(at.end / PAGE) });
       await take(own, false, at, SCRATCH_AT, message.wide);
       points!.radius.fill(Number.NaN);
-      return answer({ kind: 'done', id, wide: kernel !== null });
+      answer({ kind: 'done', id, wide: kernel !== null });
+      return;
     }
     case 'fill':
       fill(message);
-      return answer({ kind: 'done', id });
+      answer({ kind: 'done', id });
+      return;
     case 'splat': {
       const start = performance.now();
       splatRuns(message);
-      return answer({ kind: 'done', id, milliseconds: performance.now() - start });
+      answer({ kind: 'done', id, milliseconds: performance.now() - start });
+      return;
     }
     case 'tone':
-      return tone(message);
+      tone(message);
+      return;
     case 'pick': {
       let hit = null;
       for (const { from, to, matrix } of message.runs) {
         hit = pickPoint(points!, matrix, from, to, message.xPx, message.yPx, message.reachPx, hit);
       }
-      return answer({ kind: 'hit', id, hit });
+      answer({ kind: 'hit', id, hit });
+      return;
     }
   }
 }

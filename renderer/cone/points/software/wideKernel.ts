@@ -1,11 +1,28 @@
 import type { PointLayout } from '../pointArrays.ts';
+import { module } from './assembler.ts';
 import { PAD, type Splat, strideOf } from './splat.ts';
-import { PARAMETER as P, splatModule } from './splatModule.ts';
+import { PARAMETER as P, SPLAT } from './splatModule.ts';
+import { MERGE, TONE } from './toneModule.ts';
 
 /** The WASM kernel over one memory. */
-export interface WideSplat {
-  /** Slots from..to, both multiples of four; sums at a byte offset of the memory. */
-  run(from: number, to: number, how: Splat, sumsAt: number): void;
+export interface WideKernel {
+  /** splat of splat.ts: slots from..to, both multiples of four; sums at a byte offset of the memory. */
+  splat(from: number, to: number, how: Splat, sumsAt: number): void;
+  /** toneRows of toneRows.ts: everything at byte offsets of the memory. */
+  toneRows(
+    sumsAt: readonly number[],
+    tableAt: number,
+    imageAt: number,
+    width: number,
+    from: number,
+    to: number,
+  ): void;
+}
+
+interface Exports {
+  splat(from: number, to: number, parameters: number): void;
+  merge(into: number, from: number, end: number): void;
+  tone(at: number, end: number, image: number, table: number): void;
 }
 
 /** Bytes of scratch that a kernel needs: parameters and the largest discs with doubled weights. */
@@ -16,22 +33,24 @@ export const SCRATCH_BYTES = P.size + 16 * PAD * PAD * 8 + 16;
  *
  * @param scratchAt byte offset of SCRATCH_BYTES that only this kernel writes to; a multiple of 16
  */
-export async function wideSplat(
+export async function wideKernel(
   memory: WebAssembly.Memory,
   shared: boolean,
   layout: PointLayout,
   scratchAt: number,
-): Promise<WideSplat | null> {
-  let run: (from: number, to: number, parameters: number) => void;
+): Promise<WideKernel | null> {
+  let code: Exports;
   try {
-    const { instance } = await WebAssembly.instantiate(splatModule(shared), { env: { memory } });
-    run = instance.exports.run as typeof run;
+    const { instance } = await WebAssembly.instantiate(module([SPLAT, MERGE, TONE], shared), {
+      env: { memory },
+    });
+    code = instance.exports as unknown as Exports;
   } catch {
     return null;
   }
   const discsAt = scratchAt + P.size;
   return {
-    run(from, to, how, sumsAt) {
+    splat(from, to, how, sumsAt) {
       // The views are made anew: the memory may have grown.
       const floats = new Float32Array(memory.buffer, scratchAt, P.size / 4);
       const words = new Uint32Array(memory.buffer, scratchAt, P.size / 4);
@@ -65,7 +84,18 @@ export async function wideSplat(
         const doubled = new Float32Array(memory.buffer, discsAt, 2 * how.discs.length);
         for (let i = 0; i < how.discs.length; i++) doubled[2 * i] = doubled[2 * i + 1] = how.discs[i]!;
       }
-      run(from, to, scratchAt);
+      code.splat(from, to, scratchAt);
+    },
+    toneRows(sumsAt, tableAt, imageAt, width, from, to) {
+      const stride = strideOf(width);
+      const first = sumsAt[0]!;
+      for (let row = from; row < to; row++) {
+        const start = 8 * ((row + PAD) * stride + PAD);
+        // Two pixels a step: an odd row takes one of the free border along, which nobody looks at.
+        const end = start + 16 * Math.ceil(width / 2);
+        for (const more of sumsAt.slice(1)) code.merge(first + start, more + start, more + end);
+        code.tone(first + start, first + start + 8 * width, imageAt + 4 * row * width, tableAt);
+      }
     },
   };
 }

@@ -1,0 +1,122 @@
+import { LIGHT_STEPS, VALUE_STEPS } from '../tone.ts';
+import { type Code, I32, op, V128, wide } from './assembler.ts';
+import { FIRST_INDEX } from './toneRows.ts';
+
+/** merge(into, from, end): adds the floats from..end to those at `into` and leaves zeros behind; 16 bytes a step. */
+export const MERGE: Code = (() => {
+  const [INTO, FROM, END] = [0, 1, 2];
+  const next = (local: number): number[] => [...op.get(local), ...op.i32(16), ...op.i32Add, ...op.set(local)];
+  return {
+    name: 'merge',
+    parameters: 3,
+    locals: [[1, V128]],
+    body: [
+      ...op.block,
+      ...op.loop,
+      ...op.get(FROM),
+      ...op.get(END),
+      ...op.i32LtU,
+      ...op.i32Eqz,
+      ...op.brIf(1),
+      ...op.get(INTO),
+      ...op.get(INTO),
+      ...wide.load(),
+      ...op.get(FROM),
+      ...wide.load(),
+      ...wide.f32Add,
+      ...wide.store(),
+      ...op.get(FROM),
+      // A local that was never set is zero.
+      ...op.get(3),
+      ...wide.store(),
+      ...next(INTO),
+      ...next(FROM),
+      ...op.br(0),
+      ...op.end,
+      ...op.end,
+    ],
+  };
+})();
+
+/** tone(at, end, image, table): finished pixels of the pairs at..end, which are zero afterwards; see toneRows.ts. */
+export const TONE: Code = (() => {
+  const [AT, END, IMAGE, TABLE, GROUND, STEP] = [0, 1, 2, 3, 4, 5];
+  const last = LIGHT_STEPS - 1;
+  return {
+    name: 'tone',
+    parameters: 4,
+    locals: [[2, I32]],
+    body: [
+      ...op.get(TABLE),
+      ...op.i32Load(),
+      ...op.set(GROUND),
+      ...op.block,
+      ...op.loop,
+      ...op.get(AT),
+      ...op.get(END),
+      ...op.i32LtU,
+      ...op.i32Eqz,
+      ...op.brIf(1),
+      ...op.get(IMAGE),
+      ...op.get(AT),
+      ...op.i64Load(),
+      ...op.i64Eqz,
+      // Both arms leave the pixel's word for the store after them.
+      ...[0x04, I32],
+      ...op.get(GROUND),
+      ...op.else,
+      ...op.get(AT),
+      ...op.i32Load(),
+      ...op.i32(18),
+      ...op.i32ShrU,
+      ...op.i32(FIRST_INDEX),
+      ...op.i32Sub,
+      ...op.tee(STEP),
+      ...op.i32(0),
+      ...op.get(STEP),
+      ...op.i32(0),
+      ...op.i32GtS,
+      ...op.select,
+      ...op.tee(STEP),
+      ...op.i32(last),
+      ...op.get(STEP),
+      ...op.i32(last),
+      ...op.i32LtS,
+      ...op.select,
+      ...op.get(AT),
+      ...op.f32Load(4),
+      ...op.get(AT),
+      ...op.f32Load(),
+      ...op.f32Div,
+      ...op.f32(VALUE_STEPS - 1),
+      ...op.f32Mul,
+      ...op.f32(0.5),
+      ...op.f32Add,
+      ...op.i32TruncF32,
+      ...op.i32(LIGHT_STEPS),
+      ...op.i32Mul,
+      ...op.i32Add,
+      ...op.i32(2),
+      ...op.i32Shl,
+      ...op.get(TABLE),
+      ...op.i32Add,
+      ...op.i32Load(),
+      ...op.get(AT),
+      ...op.i64Zero,
+      ...op.i64Store(),
+      ...op.end,
+      ...op.i32Store(),
+      ...op.get(IMAGE),
+      ...op.i32(4),
+      ...op.i32Add,
+      ...op.set(IMAGE),
+      ...op.get(AT),
+      ...op.i32(8),
+      ...op.i32Add,
+      ...op.set(AT),
+      ...op.br(0),
+      ...op.end,
+      ...op.end,
+    ],
+  };
+})();
