@@ -57,5 +57,7 @@ export function redo(history: History): History {
 
 // Parts that an edit did not touch are the same objects, so only what it touched is compared by content.
 function same(a: Study, b: Study): boolean {
-  return (Object.keys(a) as (keyof Study)[]).every((k) => a[k] === b[k] || JSON.stringify(a[k]) === JSON.stringify(b[k]));
+  return (Object.keys(a) as (keyof Study)[]).every(
+    (k) => a[k] === b[k] || JSON.stringify(a[k]) === JSON.stringify(b[k]),
+  );
 }

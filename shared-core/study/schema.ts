@@ -3,8 +3,6 @@ import { z } from '../base/schema.ts';
 /** Version written by this program; older ones are migrated, newer ones refused. */
 export const STUDY_VERSION = 1;
 export const STUDY_FORMAT = 'conewright-study';
-/** Ending of a study's file name. */
-export const STUDY_SUFFIX = '.study.json';
 
 const finite = z.number().finite();
 const columnName = z.string().min(1).max(1000);
@@ -109,5 +107,7 @@ export const studySchema = z.strictObject({
 });
 
 /** The saved document. Results are derived from it and never saved as truth. */
-export type Study = Readonly<z.infer<typeof studySchema>>;
+export type Study = DeepReadonly<z.infer<typeof studySchema>>;
+
+type DeepReadonly<T> = T extends object ? { readonly [K in keyof T]: DeepReadonly<T[K]> } : T;
 export type StudySource = NonNullable<Study['source']>;

@@ -3,7 +3,7 @@ import { readdirSync, readFileSync } from 'node:fs';
 import { builtinModules } from 'node:module';
 import { dirname, join, relative, sep } from 'node:path';
 import { fileURLToPath } from 'node:url';
-import { parseAst } from 'rolldown/parseAst';
+import { parseAst } from 'vite';
 
 const root = fileURLToPath(new URL('../..', import.meta.url));
 const rule = JSON.parse(readFileSync(new URL('./layers.json', import.meta.url), 'utf8'));
