@@ -32,6 +32,8 @@ export interface WindowOptions {
   readonly size?: { readonly width: number; readonly height: number };
   /** The folder that studies are saved in; a fresh one if not given. */
   readonly folder?: string;
+  /** Runs in the page before anything of it. */
+  readonly init?: () => void;
 }
 
 export interface Desk {
@@ -39,6 +41,8 @@ export interface Desk {
   readonly folder: string;
   /** Starts the program as a person does (npm start -- --no-open) and opens its address. */
   open(options?: WindowOptions): Promise<Page>;
+  /** Ends a window and its program at once, as a crash does. */
+  kill(page: Page): Promise<void>;
 }
 
 export const test = base.extend<{ desk: Desk }, { chrome: Browser }>({
@@ -56,6 +60,7 @@ export const test = base.extend<{ desk: Desk }, { chrome: Browser }>({
     const folder = mkdtempSync(join(tmpdir(), 'conewright-window-'));
     const started: ChildProcess[] = [];
     const complaints: string[] = [];
+    const programs = new Map<Page, ChildProcess>();
     await use({
       folder,
       async open({
@@ -63,6 +68,7 @@ export const test = base.extend<{ desk: Desk }, { chrome: Browser }>({
         theme = 'dark',
         size = { width: 1280, height: 800 },
         folder: base = folder,
+        init,
       } = {}) {
         const child = spawn(process.execPath, [join(root, 'main/launch/start.mjs'), '--no-open', ...files], {
           cwd: base,
@@ -81,8 +87,14 @@ export const test = base.extend<{ desk: Desk }, { chrome: Browser }>({
         page.on('console', (message) => {
           if (message.type() === 'error') complaints.push(message.text());
         });
+        if (init !== undefined) await page.addInitScript(init);
         await page.goto(address);
+        programs.set(page, child);
         return page;
+      },
+      async kill(page) {
+        programs.get(page)?.kill('SIGKILL');
+        await page.context().close();
       },
     });
     for (const context of chrome.contexts()) await context.close();

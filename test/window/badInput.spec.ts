@@ -1,0 +1,155 @@
+import { existsSync, readFileSync, writeFileSync } from 'node:fs';
+import { join } from 'node:path';
+import { fileURLToPath } from 'node:url';
+import type { Page } from '@playwright/test';
+import { expect, ready, test } from './window.ts';
+
+const SHAPLEY = fileURLToPath(new URL('../data/shapley.csv', import.meta.url));
+const ledger = (page: Page) => page.getByRole('grid', { name: 'Shell ledger' });
+
+/** Opens a file through the dialog of the Study menu. */
+async function openStudy(page: Page, path: string): Promise<void> {
+  await page.getByRole('button', { name: 'Study' }).click();
+  const [chooser] = await Promise.all([
+    page.waitForEvent('filechooser'),
+    page.getByRole('menuitem', { name: /^Open a study/ }).click(),
+  ]);
+  await chooser.setFiles(path);
+}
+
+test('studies that cannot be used: a sentence each, and what was open stays', async ({ desk }) => {
+  const page = await desk.open();
+  await ready(page);
+  await page.keyboard.press('Control+s');
+  await page.getByRole('textbox', { name: 'Name', exact: true }).fill('good');
+  await page.getByRole('dialog').getByRole('button', { name: 'Save' }).click();
+  const good = join(desk.folder, 'good.study.json');
+  await expect.poll(() => existsSync(good)).toBe(true);
+  const text = readFileSync(good, 'utf8');
+  const cases: [string, string, RegExp][] = [
+    ['not-json.study.json', 'this is no JSON', /not JSON/],
+    ['other.study.json', '{"format":"something else"}', /not a study/],
+    [
+      'newer.study.json',
+      text.replace('"version": 1', '"version": 9'),
+      /version 9, this program reads up to version 1/,
+    ],
+    ['edges.study.json', text.replace('0.7,', '0.95,'), /must increase: 0.95 is followed by 0.9/],
+    ['broken.study.json', text.slice(0, text.length / 2), /not JSON/],
+  ];
+  for (const [name, content, sentence] of cases) {
+    const path = join(desk.folder, name);
+    writeFileSync(path, content);
+    await openStudy(page, path);
+    await expect(page.getByText(sentence)).toBeVisible();
+    await expect(ledger(page).locator('tbody tr')).toHaveCount(5);
+  }
+});
+
+test('a study whose catalogue is not there asks for it and keeps everything', async ({ desk }) => {
+  const page = await desk.open({ files: [SHAPLEY] });
+  await expect(page.locator('.engine-line')).toHaveText(/4.212 kept/);
+  await page.getByRole('button', { name: /^z: shells of equal/ }).click();
+  await page.keyboard.press('Control+s');
+  await page.getByRole('dialog').getByRole('button', { name: 'Save' }).click();
+  const path = join(desk.folder, 'shapley.study.json');
+  await expect.poll(() => existsSync(path)).toBe(true);
+  const study = JSON.parse(readFileSync(path, 'utf8'));
+  const moved = join(desk.folder, 'moved.study.json');
+  writeFileSync(
+    moved,
+    JSON.stringify({ ...study, source: { ...study.source, name: 'gone.csv', path: '/nowhere/gone.csv' } }),
+  );
+  const again = await desk.open({ files: [moved] });
+  await expect(again.getByText(/gone\.csv/).first()).toBeVisible();
+  await expect(again.getByRole('button', { name: /point/i })).toBeVisible();
+  // The shells are the study's own; only the galaxies are missing.
+  await expect(ledger(again).locator('tbody tr')).toHaveCount(0);
+  await expect(again.getByRole('slider', { name: /^Edge 1 of/ })).toBeVisible();
+});
+
+test('a file that is no catalogue says so, and the one before comes back with undo', async ({ desk }) => {
+  const page = await desk.open({ files: [SHAPLEY] });
+  await expect(page.locator('.engine-line')).toHaveText(/4.212 kept/);
+  const data = await page.evaluateHandle(() => {
+    const transfer = new DataTransfer();
+    transfer.items.add(new File(['nothing of a table\njust words\n'], 'letter.txt', { type: 'text/plain' }));
+    return transfer;
+  });
+  for (const kind of ['dragenter', 'dragover', 'drop'])
+    await page.dispatchEvent('.frame', kind, { dataTransfer: data });
+  await expect(page.getByText(/No column was recognised/).first()).toBeVisible();
+  await page.keyboard.press('Control+z');
+  await expect(page.locator('.engine-line')).toHaveText(/4.212 kept/);
+});
+
+test('two windows on one study: the second to save is told, and nothing is lost', async ({ desk }) => {
+  const page = await desk.open();
+  await ready(page);
+  await page.keyboard.press('Control+s');
+  await page.getByRole('textbox', { name: 'Name', exact: true }).fill('shared');
+  await page.getByRole('dialog').getByRole('button', { name: 'Save' }).click();
+  const path = join(desk.folder, 'shared.study.json');
+  await expect.poll(() => existsSync(path)).toBe(true);
+  const other = await desk.open({ files: [path] });
+  await ready(other);
+
+  const rename = async (window: Page, name: string) => {
+    await window.getByLabel('Name of the study').fill(name);
+    await window.keyboard.press('Enter');
+    await window.keyboard.press('Control+s');
+  };
+  await rename(other, 'from the second');
+  await expect.poll(() => JSON.parse(readFileSync(path, 'utf8')).name).toBe('from the second');
+  await rename(page, 'from the first');
+  await expect(page.getByRole('dialog')).toContainText(/changed by somebody else/);
+  expect(JSON.parse(readFileSync(path, 'utf8')).name).toBe('from the second');
+  await page.getByRole('button', { name: 'Save under another name' }).click();
+  await page.getByRole('textbox', { name: 'Name', exact: true }).fill('mine');
+  await page.getByRole('dialog').getByRole('button', { name: 'Save' }).click();
+  await expect.poll(() => existsSync(join(desk.folder, 'mine.study.json'))).toBe(true);
+  expect(JSON.parse(readFileSync(join(desk.folder, 'mine.study.json'), 'utf8')).name).toBe('from the first');
+});
+
+test('the worker dying in the middle is told, and reading again brings everything back', async ({ desk }) => {
+  const page = await desk.open({ init: killableWorkers });
+  await ready(page);
+  await page.evaluate(() => (globalThis as unknown as { failWorkers: () => void }).failWorkers());
+  await expect(page.getByText(/stopped/).first()).toBeVisible();
+  await expect(ledger(page).locator('tbody tr')).toHaveCount(5);
+  await page.getByRole('button', { name: 'Read again' }).click();
+  await ready(page);
+  await expect(page.locator('tr[data-shell="0"] [data-quantity=count]')).not.toHaveText('0');
+});
+
+test('unsaved work is offered back after the window died', async ({ desk }) => {
+  const page = await desk.open();
+  await ready(page);
+  await page.getByLabel('Name of the study').fill('almost lost');
+  await page.keyboard.press('Enter');
+  // Kept a moment after the last change; then the window goes without a word.
+  await page.waitForTimeout(3000);
+  await desk.kill(page);
+  const again = await desk.open();
+  await expect(again.getByText(/almost lost/)).toBeVisible();
+  await again.getByRole('button', { name: /Take it up/ }).click();
+  await expect(again.getByLabel('Name of the study')).toHaveValue('almost lost');
+  await expect(again.getByText('not saved').first()).toBeVisible();
+});
+
+/** Lets the test raise the error that a worker raises when it runs out of memory. */
+function killableWorkers(): void {
+  const made: Worker[] = [];
+  const Original = Worker;
+  globalThis.Worker = class extends Original {
+    constructor(...args: ConstructorParameters<typeof Worker>) {
+      super(...args);
+      if (String(args[0]).includes('engine')) made.push(this);
+    }
+  };
+  Object.assign(globalThis, {
+    failWorkers: () => {
+      for (const worker of made) worker.dispatchEvent(new ErrorEvent('error', { message: 'out of memory' }));
+    },
+  });
+}
