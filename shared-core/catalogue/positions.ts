@@ -1,3 +1,4 @@
+import { powerOfTwoFrom } from '../numerics/tableSize.ts';
 /** Rows at a position where an earlier row stands already: `row[k]` repeats `first[k]`. Ascending in row. */
 export interface Repeats {
   readonly row: Uint32Array;
@@ -45,11 +46,11 @@ const ROWS_A_PART = 8192;
  */
 function searchRepeats(raDeg: Float64Array, decDeg: Float64Array): Repeats {
   const rows = raDeg.length;
-  const bits = Math.min(16, Math.max(0, Math.ceil(Math.log2(rows / ROWS_A_PART + 1e-9))));
-  const { order, hashes, starts } = partsOf(hashPositions(raDeg, decDeg), bits);
+  const parts = Math.min(65536, powerOfTwoFrom(rows / ROWS_A_PART));
+  const { order, hashes, starts } = partsOf(hashPositions(raDeg, decDeg), parts);
   let largest = 0;
   for (let p = 0; p + 1 < starts.length; p++) largest = Math.max(largest, starts[p + 1]! - starts[p]!);
-  const table = new Uint32Array(2 ** Math.ceil(Math.log2(2 * largest + 2)));
+  const table = new Uint32Array(powerOfTwoFrom(2 * largest + 2));
   const mask = table.length - 1;
   const found: [row: number, first: number][] = [];
   for (let p = 0; p + 1 < starts.length; p++) {
@@ -98,11 +99,11 @@ interface Parts {
   readonly starts: Uint32Array;
 }
 
-function partsOf(hashOfRow: Uint32Array, bits: number): Parts {
+function partsOf(hashOfRow: Uint32Array, parts: number): Parts {
   const rows = hashOfRow.length;
-  const starts = new Uint32Array(2 ** bits + 1);
-  const shift = 32 - bits;
-  const partOf = (hash: number) => (bits === 0 ? 0 : hash >>> shift);
+  const starts = new Uint32Array(parts + 1);
+  const shift = 1 + Math.clz32(parts);
+  const partOf = (hash: number) => (parts === 1 ? 0 : hash >>> shift);
   for (let i = 0; i < rows; i++) starts[partOf(hashOfRow[i]!) + 1]!++;
   for (let p = 1; p < starts.length; p++) starts[p]! += starts[p - 1]!;
   const next = starts.slice();

@@ -1,4 +1,5 @@
 import { Refusal } from '../base/refusal.ts';
+import { log1p, square } from '../numerics/elementary/elementary.ts';
 import {
   COEFFICIENTS,
   evaluateCell,
@@ -18,7 +19,7 @@ const toVariable = (z: number) => {
   const root = Math.sqrt(1 + z);
   return z / (root * (root + 1));
 };
-const toRedshift = (s: number) => (s * (2 - s)) / (1 - s) ** 2;
+const toRedshift = (s: number) => (s * (2 - s)) / square(1 - s);
 
 /** A little beyond the last redshift, so that it falls inside a cell. */
 const END = toVariable(TABLE_MAX_REDSHIFT + 1);
@@ -44,8 +45,8 @@ export function createBackgroundTable(
 ): BackgroundTable {
   // dz = 2 (1+z)^(3/2) ds, so du = 2 (1+z)^(1/2) ds = 2/(1-s) ds
   const comovingSlope = (s: number) =>
-    (hubbleMpc * integrals.comovingIntegrand(-2 * Math.log1p(-s)) * 2) / (1 - s);
-  const timeSlope = (s: number) => (hubbleGyr * integrals.timeIntegrand(-2 * Math.log1p(-s)) * 2) / (1 - s);
+    (hubbleMpc * integrals.comovingIntegrand(-2 * log1p(-s)) * 2) / (1 - s);
+  const timeSlope = (s: number) => (hubbleGyr * integrals.timeIntegrand(-2 * log1p(-s)) * 2) / (1 - s);
 
   let cells = FIRST_CELLS;
   let coefficients = fitCells(comovingSlope, timeSlope, cells);

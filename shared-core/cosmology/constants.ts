@@ -1,3 +1,5 @@
+import { cube, powerOf, square } from '../numerics/elementary/elementary.ts';
+
 /** Exact by definition (SI). */
 export const SPEED_OF_LIGHT_KM_S = 299792.458;
 
@@ -11,4 +13,4 @@ export const SECONDS_PER_GYR = 365.25 * 86400 * 1e9;
 export const GRAVITATION_SI = 6.6743e-11;
 export const BOLTZMANN_EV_K = 1.380649e-23 / 1.602176634e-19;
 export const STEFAN_BOLTZMANN_SI =
-  (2 * Math.PI ** 5 * 1.380649e-23 ** 4) / (15 * 6.62607015e-34 ** 3 * 299792458 ** 2);
+  (2 * powerOf(Math.PI, 5) * powerOf(1.380649e-23, 4)) / (15 * cube(6.62607015e-34) * square(299792458));

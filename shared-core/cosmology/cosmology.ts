@@ -1,4 +1,5 @@
 import { Refusal } from '../base/refusal.ts';
+import { cbrt, log1p, log10, square } from '../numerics/elementary/elementary.ts';
 import { createBackgroundTable } from './backgroundTable.ts';
 import { KM_PER_MPC, SECONDS_PER_GYR, SPEED_OF_LIGHT_KM_S } from './constants.ts';
 import { createExpansion } from './expansion.ts';
@@ -110,7 +111,7 @@ export function createCosmology(parameters: CosmologyParameters): Cosmology {
       );
     }
     const nearMpc = hubbleMpc * integrals.comoving(0, near);
-    const thickness = hubbleMpc * integrals.comoving(near, Math.log1p((zMax - zMin) / (1 + zMin)));
+    const thickness = hubbleMpc * integrals.comoving(near, log1p((zMax - zMin) / (1 + zMin)));
     return geometry.shellVolume(nearMpc, nearMpc + thickness, thickness);
   };
 
@@ -126,8 +127,8 @@ export function createCosmology(parameters: CosmologyParameters): Cosmology {
     transverseComovingMpc,
     angularDiameterMpc: (z) => transverseComovingMpc(z) / (1 + z),
     luminosityMpc,
-    distanceModulus: (z) => 5 * Math.log10(luminosityMpc(z)) + 25,
-    volumeAveragedMpc: (z) => Math.cbrt((z * transverseComovingMpc(z) ** 2 * hubbleMpc) / eOf(z)),
+    distanceModulus: (z) => 5 * log10(luminosityMpc(z)) + 25,
+    volumeAveragedMpc: (z) => cbrt((z * square(transverseComovingMpc(z)) * hubbleMpc) / eOf(z)),
     lookbackGyr: (z) => hubbleGyr * integrals.time(0, logOnePlus(z)),
     ageGyr: (z) => hubbleGyr * integrals.timeToBeginning(logOnePlus(z)),
     particleHorizonMpc: () => hubbleMpc * integrals.comovingToBeginning(0),
@@ -136,7 +137,7 @@ export function createCosmology(parameters: CosmologyParameters): Cosmology {
       return geometry.shellVolume(0, comoving, comoving);
     },
     shellVolumeAllSkyMpc3,
-    differentialVolumeMpc3PerSr: (z) => (hubbleMpc * transverseComovingMpc(z) ** 2) / eOf(z),
+    differentialVolumeMpc3PerSr: (z) => (hubbleMpc * square(transverseComovingMpc(z))) / eOf(z),
     ...createInverses(integrals, geometry, hubbleMpc, hubbleGyr),
     table: () => (table ??= createBackgroundTable(integrals, hubbleMpc, hubbleGyr)),
   };

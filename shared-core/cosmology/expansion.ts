@@ -1,3 +1,4 @@
+import { cube, exp, expm1, powerOf, square } from '../numerics/elementary/elementary.ts';
 import { GRAVITATION_SI, KM_PER_MPC, SPEED_OF_LIGHT_KM_S, STEFAN_BOLTZMANN_SI } from './constants.ts';
 import { createNeutrinos, NEUTRINO_TO_PHOTON } from './neutrinos.ts';
 import type { CosmologyParameters } from './parameters.ts';
@@ -19,8 +20,8 @@ export interface Expansion {
 function photonDensity(tCmbK: number, h0KmSMpc: number): number {
   const c = SPEED_OF_LIGHT_KM_S * 1000;
   const hubblePerS = h0KmSMpc / KM_PER_MPC;
-  const critical = (3 * hubblePerS ** 2) / (8 * Math.PI * GRAVITATION_SI);
-  return (4 * STEFAN_BOLTZMANN_SI * tCmbK ** 4) / c ** 3 / critical;
+  const critical = (3 * square(hubblePerS)) / (8 * Math.PI * GRAVITATION_SI);
+  return (4 * STEFAN_BOLTZMANN_SI * powerOf(tCmbK, 4)) / cube(c) / critical;
 }
 
 /** What the massive neutrinos weigh today, in units of the critical density. */
@@ -50,9 +51,9 @@ export function createExpansion(parameters: CosmologyParameters): Expansion {
   const isConstant = (w0 === -1 && wa === 0) || omegaDe0 === 0;
   const darkPower = 3 * (1 + w0 + wa);
   const eSquared = (u: number) => {
-    const x = Math.exp(u);
+    const x = exp(u);
     const relativistic = hasMassive ? radiation + omegaGamma0 * neutrinos.massive(u) : radiation;
-    const dark = isConstant ? omegaDe0 : omegaDe0 * Math.exp(darkPower * u + 3 * wa * Math.expm1(-u));
+    const dark = isConstant ? omegaDe0 : omegaDe0 * exp(darkPower * u + 3 * wa * expm1(-u));
     return x * x * (x * (omegaM0 + x * relativistic) + omegaK0) + dark;
   };
 
@@ -67,7 +68,7 @@ export function createExpansion(parameters: CosmologyParameters): Expansion {
       [4, omegaGamma0 * (1 + NEUTRINO_TO_PHOTON * nEff)],
       [3, omegaM0],
       [2, omegaK0],
-      isConstant ? [0, omegaDe0] : [darkPower, omegaDe0 * Math.exp(-3 * wa)],
+      isConstant ? [0, omegaDe0] : [darkPower, omegaDe0 * exp(-3 * wa)],
     ]),
   };
 }

@@ -1,3 +1,5 @@
+import { cos, cosh, cube, sin, sinh, square } from '../numerics/elementary/elementary.ts';
+
 /**
  * Curved space of radius R = D_H / sqrt|Omega_k| as in Hogg 1999 (astro-ph/9905116), eq. 16 and 29, in forms that
  * lose no digits for small distances, small curvature or thin shells.
@@ -21,26 +23,26 @@ export function createGeometry(hubbleDistance: number, omegaK0: number): Geometr
     };
   }
   const radius = hubbleDistance / Math.sqrt(Math.abs(omegaK0));
-  const volumeUnit = 2 * Math.PI * radius ** 3;
+  const volumeUnit = 2 * Math.PI * cube(radius);
   if (omegaK0 > 0) {
     return {
-      transverse: (comoving) => radius * Math.sinh(comoving / radius),
+      transverse: (comoving) => radius * sinh(comoving / radius),
       // integral of 2 sinh^2 = sinh(d) cosh(s) - d with d = far - near, s = far + near in units of R
       shellVolume: (near, far, thickness) => {
         const d = thickness / radius;
         const s = (near + far) / radius;
-        return volumeUnit * (sinhMinusArgument(d) * Math.cosh(s) + 2 * d * Math.sinh(s / 2) ** 2);
+        return volumeUnit * (sinhMinusArgument(d) * cosh(s) + 2 * d * square(sinh(s / 2)));
       },
       antipode: Number.POSITIVE_INFINITY,
     };
   }
   return {
-    transverse: (comoving) => radius * Math.sin(comoving / radius),
+    transverse: (comoving) => radius * sin(comoving / radius),
     // integral of 2 sin^2 = d - sin(d) cos(s)
     shellVolume: (near, far, thickness) => {
       const d = thickness / radius;
       const s = (near + far) / radius;
-      return volumeUnit * (argumentMinusSine(d) * Math.cos(s) + 2 * d * Math.sin(s / 2) ** 2);
+      return volumeUnit * (argumentMinusSine(d) * cos(s) + 2 * d * square(sin(s / 2)));
     },
     antipode: Math.PI * radius,
   };
@@ -48,12 +50,12 @@ export function createGeometry(hubbleDistance: number, omegaK0: number): Geometr
 
 /** sinh t - t, from its series where the difference would lose digits. */
 function sinhMinusArgument(t: number): number {
-  return Math.abs(t) > 1 ? Math.sinh(t) - t : cubicSeries(t, t * t);
+  return Math.abs(t) > 1 ? sinh(t) - t : cubicSeries(t, t * t);
 }
 
 /** t - sin t, likewise. */
 function argumentMinusSine(t: number): number {
-  return Math.abs(t) > 1 ? t - Math.sin(t) : cubicSeries(t, -t * t);
+  return Math.abs(t) > 1 ? t - sin(t) : cubicSeries(t, -t * t);
 }
 
 /** t^3/3! (1 + q/(4 5) (1 + q/(6 7) (...))): nine terms reach 1e-17 for |q| <= 1. */

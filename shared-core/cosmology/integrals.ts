@@ -1,3 +1,4 @@
+import { exp, log } from '../numerics/elementary/elementary.ts';
 import { integrate } from '../numerics/quadrature.ts';
 import type { Expansion } from './expansion.ts';
 
@@ -21,7 +22,7 @@ const TAIL_ERROR = 1e-16;
 export function createIntegrals(expansion: Expansion): ExpansionIntegrals {
   const { eSquared, early } = expansion;
   const timeIntegrand = (u: number) => 1 / Math.sqrt(eSquared(u));
-  const comovingIntegrand = (u: number) => Math.exp(u) / Math.sqrt(eSquared(u));
+  const comovingIntegrand = (u: number) => exp(u) / Math.sqrt(eSquared(u));
 
   /*
    * The integrand tends to exp(-decay u). The rest beyond u is f(u)/decay (1 + small), where small is how far the
@@ -33,7 +34,7 @@ export function createIntegrals(expansion: Expansion): ExpansionIntegrals {
     let u = from;
     for (;;) {
       const tail = f(u) / decay;
-      const departure = Math.abs(Math.log(eSquared(u) / early.coefficient) - early.power * u);
+      const departure = Math.abs(log(eSquared(u) / early.coefficient) - early.power * u);
       if (tail * Math.min(1, departure) <= TAIL_ERROR * (sum + tail) || tail === 0) return sum + tail;
       sum += integrate(f, u, u + PANEL);
       u += PANEL;

@@ -1,4 +1,5 @@
 import { Refusal } from '../base/refusal.ts';
+import { cbrt, expm1, log, log1p, square } from '../numerics/elementary/elementary.ts';
 import { findRisingRoot } from '../numerics/roots.ts';
 import type { Cosmology } from './cosmology.ts';
 import type { Geometry } from './geometry.ts';
@@ -10,7 +11,7 @@ type Inverses = Pick<
   'redshiftAtComovingMpc' | 'redshiftAtLookbackGyr' | 'redshiftAtAgeGyr' | 'redshiftAtVolumeMpc3'
 >;
 
-const MAX_LOG = Math.log1p(MAX_REDSHIFT);
+const MAX_LOG = log1p(MAX_REDSHIFT);
 
 /** Redshift of a distance, time or volume: Newton on the quadrature in u = ln(1+z), to rounding. */
 export function createInverses(
@@ -38,7 +39,7 @@ export function createInverses(
       'Mpc',
       farthest,
     );
-    return Math.expm1(logAtComoving(comovingMpc / hubbleMpc));
+    return expm1(logAtComoving(comovingMpc / hubbleMpc));
   };
 
   return {
@@ -54,7 +55,7 @@ export function createInverses(
         MAX_LOG,
         target,
       );
-      return Math.expm1(u);
+      return expm1(u);
     },
 
     // ln(age) is nearly a straight line in u
@@ -77,13 +78,13 @@ export function createInverses(
       const u = findRisingRoot(
         (at) => {
           const age = integrals.timeToBeginning(at);
-          return { value: -Math.log(age / target), slope: timeIntegrand(at) / age };
+          return { value: -log(age / target), slope: timeIntegrand(at) / age };
         },
         0,
         MAX_LOG,
-        -Math.log(ageGyr / today),
+        -log(ageGyr / today),
       );
-      return Math.expm1(u);
+      return expm1(u);
     },
 
     // the cube root of the volume is nearly a straight line in the comoving distance
@@ -91,18 +92,18 @@ export function createInverses(
       const farthest = hubbleMpc * integrals.comoving(0, MAX_LOG);
       const largest = geometry.shellVolume(0, farthest, farthest);
       refuseUnless(volumeMpc3 >= 0 && volumeMpc3 <= largest, 'All-sky volume', volumeMpc3, 'Mpc^3', largest);
-      const target = Math.cbrt(volumeMpc3);
+      const target = cbrt(volumeMpc3);
       const comoving = findRisingRoot(
         (at) => {
-          const side = Math.cbrt(geometry.shellVolume(0, at, at));
+          const side = cbrt(geometry.shellVolume(0, at, at));
           return {
             value: side - target,
-            slope: (4 * Math.PI * geometry.transverse(at) ** 2) / (3 * side * side),
+            slope: (4 * Math.PI * square(geometry.transverse(at))) / (3 * side * side),
           };
         },
         0,
         farthest,
-        target / Math.cbrt((4 * Math.PI) / 3),
+        target / cbrt((4 * Math.PI) / 3),
       );
       return redshiftAtComovingMpc(comoving);
     },

@@ -1,14 +1,15 @@
+import { cbrt, exp, log, pow, powerOf, square } from '../numerics/elementary/elementary.ts';
 import { COEFFICIENTS, evaluateCell, fitCell } from '../numerics/piecewisePolynomial.ts';
 import { integrate } from '../numerics/quadrature.ts';
 import { BOLTZMANN_EV_K } from './constants.ts';
 import type { CosmologyParameters } from './parameters.ts';
 
 /** Energy density of one massless species in units of that of the photons: 7/8 (4/11)^(4/3). */
-export const NEUTRINO_TO_PHOTON = (7 / 8) * (4 / 11) ** (4 / 3);
+export const NEUTRINO_TO_PHOTON = (7 / 8) * pow(4 / 11, 4 / 3);
 
 /** Temperature of the neutrino background today, (4/11)^(1/3) T_CMB, times Boltzmann's constant: eV. */
 function neutrinoTemperatureEv(tCmbK: number): number {
-  return (4 / 11) ** (1 / 3) * tCmbK * BOLTZMANN_EV_K;
+  return cbrt(4 / 11) * tCmbK * BOLTZMANN_EV_K;
 }
 
 /**
@@ -17,10 +18,10 @@ function neutrinoTemperatureEv(tCmbK: number): number {
  * (Komatsu et al. 2011, ApJS 192, 18, eq. 24 to 26, the integral itself and not their fit). f(0) = 1; f tends to 0.3173 y.
  */
 export function massiveNeutrinoRatioExact(y: number): number {
-  const integrand = (x: number) => (x * x * Math.sqrt(x * x + y * y)) / (Math.exp(x) + 1);
+  const integrand = (x: number) => (x * x * Math.sqrt(x * x + y * y)) / (exp(x) + 1);
   // Split where the integrand bends for small y; beyond x = 60 it is under 1e-22 of the whole.
   const bend = Math.min(Math.max(y, 1e-3), 20);
-  return (120 / (7 * Math.PI ** 4)) * (integrate(integrand, 0, bend) + integrate(integrand, bend, 60));
+  return (120 / (7 * powerOf(Math.PI, 4))) * (integrate(integrand, 0, bend) + integrate(integrand, bend, 60));
 }
 
 /*
@@ -28,12 +29,12 @@ export function massiveNeutrinoRatioExact(y: number): number {
  * f = 1 + 5 y^2/(7 pi^2) + O(y^4 ln y), above it the expansion of the square root for x << y, whose terms are
  * integrals of x^(2k)/(e^x + 1) = (2k)! (1 - 2^-2k) zeta(2k+1).
  */
-const LOW = Math.log(1e-3);
-const HIGH = Math.log(300);
+const LOW = log(1e-3);
+const HIGH = log(300);
 const CELLS = 128;
 const WIDTH = (HIGH - LOW) / CELLS;
 const LARGE_Y = [1.803085354739391, 23.33087449072582, 714.667550344438, 40243.162076878].map(
-  (integral, k) => (120 / (7 * Math.PI ** 4)) * integral * [1, 1 / 2, -1 / 8, 1 / 16][k]!,
+  (integral, k) => (120 / (7 * powerOf(Math.PI, 4))) * integral * [1, 1 / 2, -1 / 8, 1 / 16][k]!,
 );
 let table: Float64Array | null = null;
 
@@ -41,7 +42,7 @@ function buildTable(): Float64Array {
   const coefficients = new Float64Array(CELLS * COEFFICIENTS);
   for (let i = 0; i < CELLS; i++) {
     fitCell(
-      (lnY) => massiveNeutrinoRatioExact(Math.exp(lnY)),
+      (lnY) => massiveNeutrinoRatioExact(exp(lnY)),
       LOW + i * WIDTH,
       WIDTH,
       coefficients,
@@ -53,9 +54,9 @@ function buildTable(): Float64Array {
 
 /** massiveNeutrinoRatioExact from a table, at ln y. */
 export function massiveNeutrinoRatio(lnY: number): number {
-  if (lnY < LOW) return 1 + (5 / (7 * Math.PI ** 2)) * Math.exp(2 * lnY);
+  if (lnY < LOW) return 1 + (5 / (7 * square(Math.PI))) * exp(2 * lnY);
   if (lnY >= HIGH) {
-    const y = Math.exp(lnY);
+    const y = exp(lnY);
     const q = 1 / (y * y);
     return y * (LARGE_Y[0]! + q * (LARGE_Y[1]! + q * (LARGE_Y[2]! + q * LARGE_Y[3]!)));
   }
@@ -87,7 +88,7 @@ export function createNeutrinos(parameters: CosmologyParameters): Neutrinos {
   }
   const species = Math.floor(nEff);
   const perSpecies = (NEUTRINO_TO_PHOTON * nEff) / species;
-  const lnYToday = masses.map((mass) => Math.log(mass / neutrinoTemperatureEv(tCmbK)));
+  const lnYToday = masses.map((mass) => log(mass / neutrinoTemperatureEv(tCmbK)));
   return {
     hasMassive: true,
     massless: perSpecies * (species - masses.length),

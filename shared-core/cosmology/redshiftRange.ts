@@ -1,4 +1,5 @@
 import { Refusal } from '../base/refusal.ts';
+import { log1p } from '../numerics/elementary/elementary.ts';
 
 /** The table ends here: a little before the cosmic background was released. */
 export const TABLE_MAX_REDSHIFT = 1100;
@@ -14,5 +15,5 @@ export function logOnePlus(z: number): number {
       'use',
     );
   }
-  return Math.log1p(z);
+  return log1p(z);
 }

@@ -1,4 +1,5 @@
 import { Refusal } from '../base/refusal.ts';
+import { expm1, log1p } from '../numerics/elementary/elementary.ts';
 import { findRoot } from '../numerics/roots.ts';
 import { createExpansion, type Expansion } from './expansion.ts';
 import type { CosmologyParameters } from './parameters.ts';
@@ -72,7 +73,7 @@ function validateMasses({ neutrinoMassesEv, nEff, tCmbK }: CosmologyParameters):
 /** The redshift at which H^2 falls too low, or null. */
 function findTurn(parameters: CosmologyParameters): number | null {
   const expansion = createExpansion(parameters);
-  const end = Math.log1p(MAX_REDSHIFT);
+  const end = log1p(MAX_REDSHIFT);
   const steps = 2000;
   const step = end / steps;
   let before = Number.POSITIVE_INFINITY;
@@ -80,10 +81,10 @@ function findTurn(parameters: CosmologyParameters): number | null {
   for (let i = 0; i <= steps; i++) {
     const u = i * step;
     const after = i < steps ? expansion.eSquared(u + step) : Number.POSITIVE_INFINITY;
-    if (!(here > LEAST_E_SQUARED)) return Math.expm1(u);
+    if (!(here > LEAST_E_SQUARED)) return expm1(u);
     if (here < before && here <= after) {
       const lowest = descend(expansion, Math.max(0, u - step), Math.min(end, u + step));
-      if (!(expansion.eSquared(lowest) > LEAST_E_SQUARED)) return Math.expm1(lowest);
+      if (!(expansion.eSquared(lowest) > LEAST_E_SQUARED)) return expm1(lowest);
     }
     before = here;
     here = after;

@@ -1,3 +1,4 @@
+import { cbrt, pow } from '../numerics/elementary/elementary.ts';
 import type { Random } from '../numerics/random.ts';
 
 /** Galaxies that share a knot of the web. A lone galaxy is a cluster of one. */
@@ -36,9 +37,9 @@ export function drawCluster(logDensity: number, memberScale: number, random: Ran
     cluster.dispersionKmS = CALM_KM_S + STIRRED_KM_S * Math.min(6, Math.max(0, logDensity - 1));
     return;
   }
-  const rich = Math.min(MOST_MEMBERS, LEAST_MEMBERS * (1 - random.uniform()) ** (-1 / RICHNESS_SLOPE));
+  const rich = Math.min(MOST_MEMBERS, LEAST_MEMBERS * pow(1 - random.uniform(), -1 / RICHNESS_SLOPE));
   const times = rich / LEAST_MEMBERS;
   cluster.members = Math.max(1, Math.round(rich * memberScale));
-  cluster.radiusMpc = 1.1 * Math.cbrt(times);
-  cluster.dispersionKmS = 220 * times ** 0.4;
+  cluster.radiusMpc = 1.1 * cbrt(times);
+  cluster.dispersionKmS = 220 * pow(times, 0.4);
 }

@@ -1,3 +1,4 @@
+import { square } from '../numerics/elementary/elementary.ts';
 import type { Random } from '../numerics/random.ts';
 import { smoothedVariance } from './matterSpectrum.ts';
 import { drawWaveTile, type WaveTile } from './waveTile.ts';
@@ -35,7 +36,7 @@ export interface Web {
 
 /** Draws the waves of one invented universe. The same numbers give the same universe. */
 export function drawCosmicWeb(random: Random): Web {
-  const powerFactor = CONTRAST ** 2 / smoothedVariance(SMOOTHING_MPC);
+  const powerFactor = square(CONTRAST) / smoothedVariance(SMOOTHING_MPC);
   const common = { cells: CELLS, smoothingMpc: SMOOTHING_MPC, powerFactor };
   const long = { ...common, boxMpc: LONG_BOX_MPC, kMinPerMpc: 0, kMaxPerMpc: SPLIT_PER_MPC };
   const short = { ...common, boxMpc: SHORT_BOX_MPC, kMinPerMpc: SPLIT_PER_MPC, kMaxPerMpc: Infinity };

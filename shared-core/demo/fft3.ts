@@ -1,3 +1,5 @@
+import { cos, sin } from '../numerics/elementary/elementary.ts';
+
 /**
  * Discrete Fourier transform of a complex cube in place, n x n x n in C order, n a power of two.
  *
@@ -8,12 +10,12 @@
  * @param im imaginary parts, n^3 of them
  */
 export function fourierCube(re: Float64Array, im: Float64Array, n: number, way: 'forward' | 'inverse'): void {
-  const cos = new Float64Array(n / 2);
-  const sin = new Float64Array(n / 2);
+  const cosines = new Float64Array(n / 2);
+  const sines = new Float64Array(n / 2);
   const sign = way === 'forward' ? -1 : 1;
   for (let i = 0; i < n / 2; i++) {
-    cos[i] = Math.cos((2 * Math.PI * i) / n);
-    sin[i] = sign * Math.sin((2 * Math.PI * i) / n);
+    cosines[i] = cos((2 * Math.PI * i) / n);
+    sines[i] = sign * sin((2 * Math.PI * i) / n);
   }
   const lineRe = new Float64Array(n);
   const lineIm = new Float64Array(n);
@@ -25,7 +27,7 @@ export function fourierCube(re: Float64Array, im: Float64Array, n: number, way: 
         lineRe[i] = re[at]!;
         lineIm[i] = im[at]!;
       }
-      transformLine(lineRe, lineIm, n, cos, sin);
+      transformLine(lineRe, lineIm, n, cosines, sines);
       for (let i = 0, at = start; i < n; i++, at += stride) {
         re[at] = lineRe[i]!;
         im[at] = lineIm[i]!;
@@ -34,7 +36,13 @@ export function fourierCube(re: Float64Array, im: Float64Array, n: number, way: 
   }
 }
 
-function transformLine(re: Float64Array, im: Float64Array, n: number, cos: Float64Array, sin: Float64Array) {
+function transformLine(
+  re: Float64Array,
+  im: Float64Array,
+  n: number,
+  cosines: Float64Array,
+  sines: Float64Array,
+) {
   for (let i = 1, j = 0; i < n; i++) {
     let bit = n >> 1;
     for (; j & bit; bit >>= 1) j ^= bit;
@@ -53,8 +61,8 @@ function transformLine(re: Float64Array, im: Float64Array, n: number, cos: Float
     const step = n / length;
     for (let first = 0; first < n; first += length) {
       for (let k = 0; k < half; k++) {
-        const c = cos[k * step]!;
-        const s = sin[k * step]!;
+        const c = cosines[k * step]!;
+        const s = sines[k * step]!;
         const a = first + k;
         const b = a + half;
         const r = re[b]! * c - im[b]! * s;

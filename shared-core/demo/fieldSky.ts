@@ -1,3 +1,4 @@
+import { asin, cos, sin } from '../numerics/elementary/elementary.ts';
 import { compileBox } from '../sky/box.ts';
 import { compileCap } from '../sky/cap.ts';
 import { DEG_PER_RAD, RAD_PER_DEG } from '../sky/vectors.ts';
@@ -35,12 +36,12 @@ export function createFieldSky({ shape }: SurveyField): FieldSky {
     };
   }
   // A cap reaches farthest in RA where sin(dRA) = sin(radius) / cos(Dec).
-  const sinHalfRa = Math.sin(shape.radiusDeg * RAD_PER_DEG) / Math.cos(shape.decDeg * RAD_PER_DEG);
+  const sinHalfRa = sin(shape.radiusDeg * RAD_PER_DEG) / cos(shape.decDeg * RAD_PER_DEG);
   return {
     round: true,
     middleRaDeg: shape.raDeg,
     middleDecDeg: shape.decDeg,
-    halfRaDeg: Math.asin(sinHalfRa) * DEG_PER_RAD,
+    halfRaDeg: asin(sinHalfRa) * DEG_PER_RAD,
     halfDecDeg: shape.radiusDeg,
     areaSr: compiled.areaSr,
     contains,
@@ -49,12 +50,12 @@ export function createFieldSky({ shape }: SurveyField): FieldSky {
 
 /** Half-widths of the box with a margin on the sky on every side, degrees. */
 export function widenedHalfRaDeg(sky: FieldSky, marginDeg: number): number {
-  return sky.halfRaDeg + marginDeg / Math.cos(sky.middleDecDeg * RAD_PER_DEG);
+  return sky.halfRaDeg + marginDeg / cos(sky.middleDecDeg * RAD_PER_DEG);
 }
 
 /** Solid angle of that widened box, steradians. */
 export function widenedSr(sky: FieldSky, marginDeg: number): number {
   const ra = 2 * widenedHalfRaDeg(sky, marginDeg) * RAD_PER_DEG;
   const dec = (sky.halfDecDeg + marginDeg) * RAD_PER_DEG;
-  return ra * 2 * Math.cos(sky.middleDecDeg * RAD_PER_DEG) * Math.sin(dec);
+  return ra * 2 * cos(sky.middleDecDeg * RAD_PER_DEG) * sin(dec);
 }

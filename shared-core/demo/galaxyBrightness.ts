@@ -1,4 +1,5 @@
 import type { Cosmology } from '../cosmology/cosmology.ts';
+import { exp, log } from '../numerics/elementary/elementary.ts';
 
 /*
  * Luminosities follow Schechter 1976, ApJ 203, 297, with faint-end slope -1: dN = exp(-x) dx / x, x = L / L*.
@@ -13,7 +14,7 @@ const BRIGHTENING_MAG = 0.6;
 const QUANTILES = 256;
 const STEPS = 512;
 /** Beyond this luminosity, in units of L*, there is nothing left: exp(-30). */
-const LN_MOST = Math.log(30);
+const LN_MOST = log(30);
 
 /** Apparent magnitude of an L* galaxy at this redshift, the k-correction being part of the brightening. */
 export function characteristicMag(cosmology: Cosmology, z: number): number {
@@ -44,9 +45,9 @@ export function brightnessAbove(limitMag: number, characteristic: Float64Array):
     const lnLeast = (Math.LN10 / 2.5) * (characteristic[i]! - limitMag);
     const step = Math.max(0, LN_MOST - lnLeast) / STEPS;
     // From the brightest to the limit: dN = exp(-e^s) ds with s = ln x.
-    let before = Math.exp(-Math.exp(LN_MOST));
+    let before = exp(-exp(LN_MOST));
     for (let k = 1; k <= STEPS; k++) {
-      const now = Math.exp(-Math.exp(LN_MOST - k * step));
+      const now = exp(-exp(LN_MOST - k * step));
       cumulative[k] = cumulative[k - 1]! + ((before + now) / 2) * step;
       before = now;
     }

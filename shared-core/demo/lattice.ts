@@ -1,3 +1,4 @@
+import { cos, sin } from '../numerics/elementary/elementary.ts';
 import { cross, dot, RAD_PER_DEG, raDecToUnit, type Vec3 } from '../sky/vectors.ts';
 import { type DepthAxis, reachDeg } from './depthAxis.ts';
 import { type FieldSky, widenedHalfRaDeg } from './fieldSky.ts';
@@ -17,7 +18,7 @@ export interface Lattice {
 export function latticeAround(sky: FieldSky, axis: DepthAxis, spacingMpc: number): Lattice {
   const ra = sky.middleRaDeg * RAD_PER_DEG;
   const along = raDecToUnit(sky.middleRaDeg, sky.middleDecDeg);
-  const east: Vec3 = [-Math.sin(ra), Math.cos(ra), 0];
+  const east: Vec3 = [-sin(ra), cos(ra), 0];
   const axes = [along, east, cross(along, east)] as const;
   const low: [number, number, number] = [Infinity, Infinity, Infinity];
   const high: [number, number, number] = [-Infinity, -Infinity, -Infinity];

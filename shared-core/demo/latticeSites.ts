@@ -1,3 +1,4 @@
+import { log } from '../numerics/elementary/elementary.ts';
 import { SITE } from './cosmicWeb.ts';
 import { onAxis, REACH_MPC } from './depthAxis.ts';
 import { halfSlopes, type Lattice, latticeAround } from './lattice.ts';
@@ -38,7 +39,7 @@ export function latticeSites(plan: SitesPlan): Sites {
       let cell = state[0]! | 0;
       let ahead = state[1]!;
       for (;;) {
-        let step = -meanStep * Math.log(1 - random.uniform());
+        let step = -meanStep * log(1 - random.uniform());
         while (step > ahead) {
           step -= ahead;
           cell = cell + 1 < cells.length ? cell + 1 : 0;

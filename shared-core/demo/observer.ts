@@ -1,4 +1,5 @@
 import { SPEED_OF_LIGHT_KM_S } from '../cosmology/constants.ts';
+import { asin, atan2, cos, sin, square } from '../numerics/elementary/elementary.ts';
 import type { Random } from '../numerics/random.ts';
 import { DEG_PER_RAD } from '../sky/vectors.ts';
 import { type Cluster, drawCluster } from './clusters.ts';
@@ -66,18 +67,18 @@ export function createObserver(field: SurveyField, universe: Universe, random: R
     let z = site[SITE.z]!;
     if (cluster.radiusMpc > 0) {
       const u = cluster.radiusMpc * random.uniform();
-      const cos = 2 * random.uniform() - 1;
-      const sin = Math.sqrt(1 - cos * cos);
+      const polar = 2 * random.uniform() - 1;
+      const across = Math.sqrt(1 - polar * polar);
       const turn = 2 * Math.PI * random.uniform();
-      x += u * sin * Math.cos(turn);
-      y += u * sin * Math.sin(turn);
-      z += u * cos;
+      x += u * across * cos(turn);
+      y += u * across * sin(turn);
+      z += u * polar;
     }
     const r = Math.sqrt(x * x + y * y + z * z);
     if (!(r > nearestMpc && r < farthestMpc)) return false;
-    const ra = Math.atan2(y, x) * DEG_PER_RAD;
+    const ra = atan2(y, x) * DEG_PER_RAD;
     const raDeg = Math.round((ra < 0 ? ra + 360 : ra) * POSITION_STEPS) / POSITION_STEPS;
-    const decDeg = Math.round(Math.asin(z / r) * DEG_PER_RAD * POSITION_STEPS) / POSITION_STEPS;
+    const decDeg = Math.round(asin(z / r) * DEG_PER_RAD * POSITION_STEPS) / POSITION_STEPS;
     if (!sky.contains(raDeg, decDeg)) return false;
 
     const at = (r - axis.fromMpc) / axis.stepMpc;
@@ -115,7 +116,7 @@ export function createObserver(field: SurveyField, universe: Universe, random: R
       let row = from;
       while (row < to) {
         sites.draw(site);
-        const r = Math.sqrt(site[SITE.x]! ** 2 + site[SITE.y]! ** 2 + site[SITE.z]! ** 2);
+        const r = Math.sqrt(square(site[SITE.x]!) + square(site[SITE.y]!) + square(site[SITE.z]!));
         if (!(r > nearestMpc && r < farthestMpc)) continue;
         drawCluster(site[SITE.logDensity]!, onAxis(axis, memberScale, r), random, cluster);
         const velocity = cluster.dispersionKmS / SPEED_OF_LIGHT_KM_S;

@@ -1,3 +1,4 @@
+import { cos, exp, sin } from '../numerics/elementary/elementary.ts';
 import type { Random } from '../numerics/random.ts';
 import { RAD_PER_DEG } from '../sky/vectors.ts';
 import { SITE, type Web } from './cosmicWeb.ts';
@@ -26,7 +27,7 @@ const BIAS_POWER = 0.8;
 
 /** Galaxies shun thin places: kept with probability (density / full density)^power, at most 1. */
 export function keptShare(logDensity: number): number {
-  return logDensity >= FULL_LOG_DENSITY ? 1 : Math.exp(BIAS_POWER * (logDensity - FULL_LOG_DENSITY));
+  return logDensity >= FULL_LOG_DENSITY ? 1 : exp(BIAS_POWER * (logDensity - FULL_LOG_DENSITY));
 }
 
 /** Starts matter evenly in and around the field and follows each piece: right for up to some 100 000 galaxies. */
@@ -50,13 +51,13 @@ export function followedSites(plan: SitesPlan): Sites {
         if (sky.round && up * up + aside * aside > 1) continue;
         const margin = onAxis(axis, marginDeg, r);
         const dec = sky.middleDecDeg + up * (sky.halfDecDeg + margin);
-        const cosDec = Math.cos(dec * RAD_PER_DEG);
+        const cosDec = cos(dec * RAD_PER_DEG);
         // Even in sin(Dec) by rejection: a uniform Dec is thinned by its cosine.
         if (random.uniform() > cosDec) continue;
         const ra = sky.middleRaDeg + aside * widenedHalfRaDeg(sky, margin);
-        const x = r * cosDec * Math.cos(ra * RAD_PER_DEG);
-        const y = r * cosDec * Math.sin(ra * RAD_PER_DEG);
-        web.settle(x, y, r * Math.sin(dec * RAD_PER_DEG), site);
+        const x = r * cosDec * cos(ra * RAD_PER_DEG);
+        const y = r * cosDec * sin(ra * RAD_PER_DEG);
+        web.settle(x, y, r * sin(dec * RAD_PER_DEG), site);
         if (random.uniform() < keptShare(site[SITE.logDensity]!)) return;
       }
     },

@@ -1,3 +1,4 @@
+import { cube, exp, square } from '../numerics/elementary/elementary.ts';
 import type { Random } from '../numerics/random.ts';
 import { fourierCube } from './fft3.ts';
 import { matterPowerShape } from './matterSpectrum.ts';
@@ -31,7 +32,7 @@ export interface WaveBand {
  */
 export function drawWaveTile(band: WaveBand, random: Random): WaveTile {
   const n = band.cells;
-  const count = n ** 3;
+  const count = cube(n);
   const noiseRe = new Float64Array(count);
   const noiseIm = new Float64Array(count);
   for (let i = 0; i < count; i++) noiseRe[i] = random.normal();
@@ -43,7 +44,7 @@ export function drawWaveTile(band: WaveBand, random: Random): WaveTile {
   const alongRe = new Float64Array(count);
   const alongIm = new Float64Array(count);
   const unit = (2 * Math.PI) / band.boxMpc;
-  const cellVolume = (band.boxMpc / n) ** 3;
+  const cellVolume = cube(band.boxMpc / n);
   const half = n / 2;
   const whole = (i: number) => (i < half ? i : i - n);
   // The amplitude depends on a^2 + b^2 + c^2 alone, a whole number: worked out once for each.
@@ -51,7 +52,7 @@ export function drawWaveTile(band: WaveBand, random: Random): WaveTile {
   for (let m = 1; m < amplitude.length; m++) {
     const k = unit * Math.sqrt(m);
     if (k <= band.kMinPerMpc || k > band.kMaxPerMpc) continue;
-    const power = band.powerFactor * matterPowerShape(k) * Math.exp(-((k * band.smoothingMpc) ** 2));
+    const power = band.powerFactor * matterPowerShape(k) * exp(-square(k * band.smoothingMpc));
     amplitude[m] = Math.sqrt(power / cellVolume) / count;
   }
   for (let a = 0, at = 0; a < n; a++) {

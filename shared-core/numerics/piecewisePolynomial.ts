@@ -1,3 +1,5 @@
+import { cos } from './elementary/elementary.ts';
+
 /**
  * Polynomials cell by cell, for tables that are read millions of times: eight coefficients a cell, lowest first,
  * in t = 0 to 1 across the cell. Cells are of equal width.
@@ -6,7 +8,7 @@ export const COEFFICIENTS = 8;
 
 /** Chebyshev-Lobatto points of [0, 1] in an order that keeps divided differences stable (ends first, then inward). */
 function nodes(count: number): Float64Array {
-  const sorted = Array.from({ length: count }, (_, j) => (1 - Math.cos((Math.PI * j) / (count - 1))) / 2);
+  const sorted = Array.from({ length: count }, (_, j) => (1 - cos((Math.PI * j) / (count - 1))) / 2);
   const order = new Float64Array(count);
   // Leja order: each next point maximises the product of its distances to those taken
   for (let k = 0; k < count; k++) {

@@ -100,7 +100,8 @@ function gaussKronrod(f: (x: number) => number, a: number, b: number) {
   const size = Math.abs(half);
   let error = Math.abs(kronrod - gauss) * size;
   if (spread > 0 && error > 0) {
-    error = spread * size * Math.min(1, ((200 * error) / (spread * size)) ** 1.5);
+    const ratio = (200 * error) / (spread * size);
+    error = spread * size * Math.min(1, ratio * Math.sqrt(ratio));
   }
   return { value: kronrod * half, absolute: absolute * size, error };
 }

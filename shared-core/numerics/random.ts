@@ -1,4 +1,5 @@
 import { Refusal } from '../base/refusal.ts';
+import { exp, log } from './elementary/elementary.ts';
 import { lnGamma } from './gamma.ts';
 import { createTwister } from './twister.ts';
 
@@ -46,7 +47,7 @@ export function createRandom(seed: number | readonly number[]): Random {
       const y = 2 * uniform() - 1;
       const r2 = x * x + y * y;
       if (r2 >= 1 || r2 === 0) continue;
-      const factor = Math.sqrt((-2 * Math.log(r2)) / r2);
+      const factor = Math.sqrt((-2 * log(r2)) / r2);
       spare = factor * x;
       return factor * y;
     }
@@ -80,7 +81,7 @@ export function createRandom(seed: number | readonly number[]): Random {
 
 /** Knuth 1969: multiply uniforms until they fall below e^-mean. */
 function poissonByProducts(uniform: () => number, mean: number): number {
-  const floor = Math.exp(-mean);
+  const floor = exp(-mean);
   let product = uniform();
   let count = 0;
   while (product > floor) {
@@ -92,7 +93,7 @@ function poissonByProducts(uniform: () => number, mean: number): number {
 
 /** Hormann 1993, Insurance: Mathematics and Economics 12, 39: transformed rejection (PTRS). */
 function poissonByRejection(uniform: () => number, mean: number): number {
-  const lnMean = Math.log(mean);
+  const lnMean = log(mean);
   const b = 0.931 + 2.53 * Math.sqrt(mean);
   const a = -0.059 + 0.02483 * b;
   const invAlpha = 1.1239 + 1.1328 / (b - 3.4);
@@ -104,10 +105,7 @@ function poissonByRejection(uniform: () => number, mean: number): number {
     const k = Math.floor(((2 * a) / us + b) * u + mean + 0.43);
     if (us >= 0.07 && v <= vr) return k;
     if (k < 0 || (us < 0.013 && v > us)) continue;
-    if (
-      Math.log(v) + Math.log(invAlpha) - Math.log(a / (us * us) + b) <=
-      -mean + k * lnMean - lnGamma(k + 1)
-    ) {
+    if (log(v) + log(invAlpha) - log(a / (us * us) + b) <= -mean + k * lnMean - lnGamma(k + 1)) {
       return k;
     }
   }

@@ -1,6 +1,7 @@
 import { csvCell } from '../base/cell.ts';
 import type { KeptRow } from '../catalogue/loadCatalogue.ts';
 import type { BackgroundTable, Cosmology } from '../cosmology/cosmology.ts';
+import { cos, sin } from '../numerics/elementary/elementary.ts';
 
 const DEG = Math.PI / 180;
 
@@ -39,10 +40,10 @@ export class CoordinateWriter {
   line({ line, id, raDeg, decDeg, redshift }: KeptRow): string {
     const d = this.#table.comovingMpc(redshift) * this.#factor;
     const lookbackGyr = this.#table.lookbackGyr(redshift);
-    const across = d * Math.cos(decDeg * DEG);
-    const x = across * Math.cos(raDeg * DEG);
-    const y = across * Math.sin(raDeg * DEG);
-    const z = d * Math.sin(decDeg * DEG);
+    const across = d * cos(decDeg * DEG);
+    const x = across * cos(raDeg * DEG);
+    const y = across * sin(raDeg * DEG);
+    const z = d * sin(decDeg * DEG);
     const name = id === null ? '' : `${csvCell(id)},`;
     return `${line},${name}${raDeg},${decDeg},${redshift},${d},${x},${y},${z},${lookbackGyr},${this.#ageTodayGyr - lookbackGyr}\n`;
   }

@@ -1,3 +1,5 @@
+import { powerOf } from '../numerics/elementary/elementary.ts';
+
 /** The unit family of a number; the power of length in it decides how it changes between Mpc and Mpc/h. */
 export type Unit =
   | 'none'
@@ -101,7 +103,7 @@ export function shownValue<Row>(quantity: Quantity<Row>, row: Row, units: ShownU
   const value = quantity.value(row);
   const { lengthPower } = UNITS[quantity.unit];
   if (value === null || !units.perH || lengthPower === 0) return value;
-  return value * units.h ** lengthPower;
+  return value * powerOf(units.h, lengthPower);
 }
 
 /** The key under which the number stands in JSON, CSV and ECSV in the chosen units. */

@@ -1,3 +1,6 @@
+import { cos, log10, sin } from '../numerics/elementary/elementary.ts';
+import { powerOfTwoFrom } from '../numerics/tableSize.ts';
+
 /** Side of the counting cells; galaxy structure of tens of Mpc shows at this scale. */
 const CELL_MPC = 24;
 
@@ -24,9 +27,9 @@ export function localDensity(
     const ra = (raDeg[order[i]!]! * Math.PI) / 180;
     const dec = (decDeg[order[i]!]! * Math.PI) / 180;
     const d = comovingMpc[i]! / CELL_MPC;
-    cells[3 * i] = Math.floor(d * Math.cos(dec) * Math.cos(ra));
-    cells[3 * i + 1] = Math.floor(d * Math.cos(dec) * Math.sin(ra));
-    cells[3 * i + 2] = Math.floor(d * Math.sin(dec));
+    cells[3 * i] = Math.floor(d * cos(dec) * cos(ra));
+    cells[3 * i + 1] = Math.floor(d * cos(dec) * sin(ra));
+    cells[3 * i + 2] = Math.floor(d * sin(dec));
     counts.add(cells[3 * i]!, cells[3 * i + 1]!, cells[3 * i + 2]!);
   }
   const around = new Float32Array(n);
@@ -36,7 +39,7 @@ export function localDensity(
       for (let dy = -1; dy <= 1; dy++)
         for (let dz = -1; dz <= 1; dz++)
           sum += counts.at(cells[3 * i]! + dx, cells[3 * i + 1]! + dy, cells[3 * i + 2]! + dz);
-    around[i] = Math.log10(sum);
+    around[i] = log10(sum);
   }
   return relativeToNeighboursInDepth(around);
 }
@@ -48,7 +51,7 @@ class CellCounts {
   readonly #counts: Uint32Array;
 
   constructor(most: number) {
-    const size = 2 ** Math.ceil(Math.log2(Math.max(16, 2 * most)));
+    const size = powerOfTwoFrom(Math.max(16, 2 * most));
     this.#mask = size - 1;
     this.#keys = new Int32Array(3 * size);
     this.#counts = new Uint32Array(size);

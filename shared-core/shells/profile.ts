@@ -1,3 +1,4 @@
+import { cube, exp, square } from '../numerics/elementary/elementary.ts';
 import { rankBelow, type SortedSample } from './sample.ts';
 import { type ShellConditions, WHOLE_SKY_DEG2 } from './statistics.ts';
 
@@ -37,7 +38,7 @@ export function densityProfile(
     volumeMpc3[i] = sky * cosmology.shellVolumeAllSkyMpc3(zEdges[i]!, zEdges[i + 1]!);
     rank = next;
   }
-  const p0Mpc3 = p0Mpc3PerH3 / cosmology.h ** 3;
+  const p0Mpc3 = p0Mpc3PerH3 / cube(cosmology.h);
   const smoothPerMpc3 = smooth(weight, volumeMpc3, smoothingBins);
   return {
     zEdges,
@@ -53,7 +54,7 @@ function smooth(weight: Float64Array, volume: Float64Array, sigma: number): Floa
   return weight.map((_, i) => {
     let [w, v] = [0, 0];
     for (let j = Math.max(0, i - reach); j <= Math.min(weight.length - 1, i + reach); j++) {
-      const kernel = sigma > 0 ? Math.exp(-0.5 * ((i - j) / sigma) ** 2) : 1;
+      const kernel = sigma > 0 ? exp(-0.5 * square((i - j) / sigma)) : 1;
       w += kernel * weight[j]!;
       v += kernel * volume[j]!;
     }

@@ -1,11 +1,12 @@
 import { Refusal } from '../base/refusal.ts';
 import type { Cosmology } from '../cosmology/cosmology.ts';
+import { cbrt, cube, square } from '../numerics/elementary/elementary.ts';
 import { checkEdges } from './edges.ts';
 import { rankBelow, type SortedSample } from './sample.ts';
 import type { ShellStatistics } from './shell.ts';
 
 /** Whole sphere, square degrees: 4 pi (180/pi)^2. */
-export const WHOLE_SKY_DEG2 = 4 * Math.PI * (180 / Math.PI) ** 2;
+export const WHOLE_SKY_DEG2 = 4 * Math.PI * square(180 / Math.PI);
 /** Default P0 of the FKP weight, (Mpc/h)^3: common practice for galaxies near k = 0.1 h/Mpc, no source. */
 export const DEFAULT_P0_MPC3_PER_H3 = 10_000;
 
@@ -59,7 +60,7 @@ function oneShell(
   { cosmology, areaDeg2, p0Mpc3PerH3 }: ShellConditions,
 ): ShellStatistics {
   const sky = areaDeg2 / WHOLE_SKY_DEG2;
-  const p0Mpc3 = p0Mpc3PerH3 / cosmology.h ** 3;
+  const p0Mpc3 = p0Mpc3PerH3 / cube(cosmology.h);
   const from = rankBelow(sample, zMin);
   const to = rankBelow(sample, zMax, last);
   const count = to - from;
@@ -79,7 +80,7 @@ function oneShell(
     const sliceMpc3 = slices === 1 ? volumeMpc3 : sky * cosmology.shellVolumeAllSkyMpc3(startZ, z);
     const weight = sumOfWeights(sample, start, end);
     const power = (weight / sliceMpc3) * p0Mpc3;
-    effectiveVolumeMpc3 += sliceMpc3 * (power / (1 + power)) ** 2;
+    effectiveVolumeMpc3 += sliceMpc3 * square(power / (1 + power));
     sumW += weight / (1 + power);
     sumWz += sumOfWeightedRedshifts(sample, start, end) / (1 + power);
     start = end;
@@ -104,8 +105,8 @@ function oneShell(
     densityPerMpc3,
     densityErrorPerMpc3: Math.sqrt(sumOfSquaredWeights(sample, from, to)) / volumeMpc3,
     effectiveVolumeMpc3,
-    effectiveVolumeUniformMpc3: volumeMpc3 * (meanPower / (1 + meanPower)) ** 2,
-    fundamentalWavenumberPerMpc: (2 * Math.PI) / Math.cbrt(volumeMpc3),
+    effectiveVolumeUniformMpc3: volumeMpc3 * square(meanPower / (1 + meanPower)),
+    fundamentalWavenumberPerMpc: (2 * Math.PI) / cbrt(volumeMpc3),
   };
 }
 

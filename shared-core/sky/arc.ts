@@ -1,3 +1,4 @@
+import { atan2, cos, hypot, sin } from '../numerics/elementary/elementary.ts';
 import { combine, cross, dot, perpendicular, RAD_PER_DEG, unit, type Vec3 } from './vectors.ts';
 
 /**
@@ -26,8 +27,8 @@ export const TWO_PI = 2 * Math.PI;
 /** The circle at `radiusDeg` (0 to 180, ends not taken) around `n`; u may be given, at right angles to n. */
 export function circleAround(n: Vec3, radiusDeg: number, u: Vec3 = perpendicular(n)): Circle {
   const radius = radiusDeg * RAD_PER_DEG;
-  const d = radiusDeg === 90 ? 0 : Math.cos(radius);
-  return { n, d, r: Math.sin(radius), u, v: cross(n, u) };
+  const d = radiusDeg === 90 ? 0 : cos(radius);
+  return { n, d, r: sin(radius), u, v: cross(n, u) };
 }
 
 /** The same circle run the other way; the point at parameter t is then at -t. */
@@ -58,13 +59,13 @@ export function greatCircleArc(a: Vec3, b: Vec3): Arc {
   return {
     circle: { n, d: 0, r: 1, u: a, v },
     startRad: 0,
-    sweepRad: Math.atan2(dot(v, b), dot(a, b)),
+    sweepRad: atan2(dot(v, b), dot(a, b)),
   };
 }
 
 export function pointOnCircle(circle: Circle, t: number): Vec3 {
-  const c = circle.r * Math.cos(t);
-  const s = circle.r * Math.sin(t);
+  const c = circle.r * cos(t);
+  const s = circle.r * sin(t);
   const { n, d, u, v } = circle;
   return [d * n[0] + c * u[0] + s * v[0], d * n[1] + c * u[1] + s * v[1], d * n[2] + c * u[2] + s * v[2]];
 }
@@ -83,12 +84,12 @@ export function arcPoint(arc: Arc, fraction: number): Vec3 {
 
 /** Unit tangent in the direction of travel. */
 export function tangent(circle: Circle, t: number): Vec3 {
-  return combine(-Math.sin(t), circle.u, Math.cos(t), circle.v);
+  return combine(-sin(t), circle.u, cos(t), circle.v);
 }
 
 /** Parameter in (-pi, pi] of a point on (or near) the circle. */
 export function parameterOf(circle: Circle, point: Vec3): number {
-  return Math.atan2(dot(circle.v, point), dot(circle.u, point));
+  return atan2(dot(circle.v, point), dot(circle.u, point));
 }
 
 /** How far beyond the arc's start parameter t lies, in [0, 2 pi). */
@@ -103,8 +104,8 @@ export function arcExtent(arc: Arc, axis: Vec3): { min: number; max: number } {
   const first = dot(axis, arcStart(arc));
   const last = dot(axis, arcEnd(arc));
   const middle = circle.d * dot(axis, circle.n);
-  const swing = circle.r * Math.hypot(dot(axis, circle.u), dot(axis, circle.v));
-  const top = Math.atan2(dot(axis, circle.v), dot(axis, circle.u));
+  const swing = circle.r * hypot(dot(axis, circle.u), dot(axis, circle.v));
+  const top = atan2(dot(axis, circle.v), dot(axis, circle.u));
   return {
     max: advance(arc, top) <= arc.sweepRad ? middle + swing : Math.max(first, last),
     min: advance(arc, top + Math.PI) <= arc.sweepRad ? middle - swing : Math.min(first, last),

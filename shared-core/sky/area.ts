@@ -1,3 +1,4 @@
+import { atan2, cos, sin } from '../numerics/elementary/elementary.ts';
 import { type Arc, arcEnd, arcExtent, arcPoint, arcStart, pointOnCircle } from './arc.ts';
 import { cross, dot, norm, SPREAD_DIRECTIONS, subtract, unit, type Vec3 } from './vectors.ts';
 
@@ -11,7 +12,7 @@ const MAX_PIECE_RAD = Math.PI / 6;
  */
 export function triangleArea(a: Vec3, b: Vec3, c: Vec3): number {
   const triple = dot(a, cross(subtract(b, a), subtract(c, a)));
-  return 2 * Math.atan2(triple, 1 + dot(a, b) + dot(b, c) + dot(c, a));
+  return 2 * atan2(triple, 1 + dot(a, b) + dot(b, c) + dot(c, a));
 }
 
 /**
@@ -24,7 +25,7 @@ function segmentArea(d: number, r: number, sweep: number): number {
   // 1 - |d| without cancellation for small circles.
   const versine = (r * r) / (1 + Math.abs(d));
   const q = versine / (1 + Math.abs(d));
-  const triangle = 2 * Math.atan2(q * Math.sin(sweep), 1 + q * Math.cos(sweep));
+  const triangle = 2 * atan2(q * sin(sweep), 1 + q * cos(sweep));
   // About the far pole the arc runs clockwise, and bulges to its left.
   return Math.sign(d) * (sweep * versine - triangle);
 }

@@ -1,4 +1,5 @@
 import { Refusal } from '../base/refusal.ts';
+import { cos, sin } from '../numerics/elementary/elementary.ts';
 import { type Arc, circleAround } from './arc.ts';
 import type { SkyShape } from './region.ts';
 import { boundingRadius, type CompiledShape } from './shape.ts';
@@ -118,7 +119,7 @@ export function compileBox(box: Box): CompiledShape {
   const antipodeDec = full ? (middle < 0 ? 90 : -90) : -middle / RAD_PER_DEG;
   return {
     arcs,
-    areaSr: widthDeg * RAD_PER_DEG * 2 * Math.cos(middle) * Math.sin(halfHeight),
+    areaSr: widthDeg * RAD_PER_DEG * 2 * cos(middle) * sin(halfHeight),
     centre,
     radiusRad: boundingRadius(centre, arcs, side(antipodeRa, antipodeDec) >= 0),
     side,

@@ -1,4 +1,5 @@
 import { Refusal } from '../base/refusal.ts';
+import { cos, sin, square } from '../numerics/elementary/elementary.ts';
 import { circleAround } from './arc.ts';
 import type { SkyShape } from './region.ts';
 import { type CompiledShape, EDGE_TOLERANCE_RAD } from './shape.ts';
@@ -20,7 +21,7 @@ export function compileCap(cap: Extract<SkyShape, { kind: 'cap' }>): CompiledSha
     );
   }
   const centre = raDecToUnit(normaliseRaDeg(raDeg), decDeg);
-  const half = Math.sin((radiusDeg * RAD_PER_DEG) / 2);
+  const half = sin((radiusDeg * RAD_PER_DEG) / 2);
   const areaSr = 4 * Math.PI * half * half;
   if (radiusDeg === 180) return { arcs: [], areaSr, centre, radiusRad: Math.PI, side: () => 1 };
 
@@ -29,7 +30,7 @@ export function compileCap(cap: Extract<SkyShape, { kind: 'cap' }>): CompiledSha
   const sign = large ? -1 : 1;
   const [cx, cy, cz] = [sign * centre[0], sign * centre[1], sign * centre[2]];
   const nearRad = (large ? 180 - radiusDeg : radiusDeg) * RAD_PER_DEG;
-  const chord2 = (angle: number): number => 4 * Math.sin(angle / 2) ** 2;
+  const chord2 = (angle: number): number => 4 * square(sin(angle / 2));
   const inner2 = chord2(Math.max(0, nearRad - EDGE_TOLERANCE_RAD));
   const outer2 = chord2(nearRad + EDGE_TOLERANCE_RAD);
   const nearDecDeg = sign * decDeg;
@@ -44,10 +45,10 @@ export function compileCap(cap: Extract<SkyShape, { kind: 'cap' }>): CompiledSha
       if (Math.abs(dec - nearDecDeg) > decReachDeg) return large ? 1 : -1;
       const a = ra * RAD_PER_DEG;
       const b = dec * RAD_PER_DEG;
-      const c = Math.cos(b);
-      const dx = c * Math.cos(a) - cx;
-      const dy = c * Math.sin(a) - cy;
-      const dz = Math.sin(b) - cz;
+      const c = cos(b);
+      const dx = c * cos(a) - cx;
+      const dy = c * sin(a) - cy;
+      const dz = sin(b) - cz;
       const s = dx * dx + dy * dy + dz * dz;
       if (s > outer2) return large ? 1 : -1;
       if (s < inner2) return large ? -1 : 1;

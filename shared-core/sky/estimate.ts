@@ -1,4 +1,5 @@
 import { Refusal } from '../base/refusal.ts';
+import { exp } from '../numerics/elementary/elementary.ts';
 import { cellOutline } from './cellOutline.ts';
 import { CellSet } from './cellSet.ts';
 import { pixelAreaDeg2, raDecToNest } from './healpix.ts';
@@ -23,7 +24,7 @@ function chooseCells(finest: OccupiedCells, galaxies: number): OccupiedCells {
     if (level.nside === 1) return level;
     const parents = coarsen(level);
     const full = occupied === 1 || galaxies >= 2 * occupied;
-    const filled = full && occupied * Math.exp(-galaxies / occupied) < 1;
+    const filled = full && occupied * exp(-galaxies / occupied) < 1;
     if (filled && emptyShare(level, parents) <= MAX_EMPTY_SHARE) return level;
     level = parents;
   }

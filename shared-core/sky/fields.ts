@@ -1,4 +1,5 @@
 import { EigenvalueDecomposition, Matrix } from 'ml-matrix';
+import { atan2, cos, hypot, sin } from '../numerics/elementary/elementary.ts';
 import { smallestCap } from './enclosingCap.ts';
 import { type Piece, pieceHolds, pieceOf, piecesNear } from './pieces.ts';
 import type { Footprint, OutlineRing } from './region.ts';
@@ -125,8 +126,8 @@ function fieldOf(pieces: readonly Piece[]): SkyField {
   let halfWidth = 0;
   for (const p of points) {
     const [north, east] = tangentPlace(centre, p);
-    halfLength = Math.max(halfLength, Math.abs(north * Math.cos(angle) + east * Math.sin(angle)));
-    halfWidth = Math.max(halfWidth, Math.abs(east * Math.cos(angle) - north * Math.sin(angle)));
+    halfLength = Math.max(halfLength, Math.abs(north * cos(angle) + east * sin(angle)));
+    halfWidth = Math.max(halfWidth, Math.abs(east * cos(angle) - north * sin(angle)));
   }
   return {
     rings,
@@ -144,10 +145,10 @@ function fieldOf(pieces: readonly Piece[]): SkyField {
 function tangentPlace(centre: Vec3, p: Vec3): [north: number, east: number] {
   const { raDeg, decDeg } = unitToRaDec(centre);
   const [ra, dec] = [raDeg * RAD_PER_DEG, decDeg * RAD_PER_DEG];
-  const east: Vec3 = [-Math.sin(ra), Math.cos(ra), 0];
-  const north: Vec3 = [-Math.sin(dec) * Math.cos(ra), -Math.sin(dec) * Math.sin(ra), Math.cos(dec)];
+  const east: Vec3 = [-sin(ra), cos(ra), 0];
+  const north: Vec3 = [-sin(dec) * cos(ra), -sin(dec) * sin(ra), cos(dec)];
   const [x, y] = [dot(north, p), dot(east, p)];
-  const sine = Math.hypot(x, y);
+  const sine = hypot(x, y);
   const scale = sine > 0 ? angleRad(centre, p) / sine : 1;
   return [x * scale, y * scale];
 }
@@ -190,7 +191,7 @@ function widestDirection(pieces: readonly Piece[], centre: Vec3): number {
   const [first, second] = realEigenvalues as [number, number];
   if (Math.max(first, second) < ROUND * Math.min(first, second)) return 90;
   const along = first > second ? 0 : 1;
-  const angle = Math.atan2(eigenvectorMatrix.get(1, along), eigenvectorMatrix.get(0, along)) * DEG_PER_RAD;
+  const angle = atan2(eigenvectorMatrix.get(1, along), eigenvectorMatrix.get(0, along)) * DEG_PER_RAD;
   const positive = angle < 0 ? angle + 180 : angle;
   return positive >= 180 ? positive - 180 : positive;
 }

@@ -1,3 +1,4 @@
+import { asin, cos, sin } from '../numerics/elementary/elementary.ts';
 import { RAD_PER_DEG } from './vectors.ts';
 
 /**
@@ -76,7 +77,7 @@ const found = { face: 0, x: 0, y: 0 };
 
 function locate(nside: number, raDeg: number, decDeg: number): void {
   const dec = decDeg * RAD_PER_DEG;
-  const z = Math.sin(dec);
+  const z = sin(dec);
   const height = Math.abs(z);
   let quarter = raDeg / 90;
   quarter -= 4 * Math.floor(quarter / 4);
@@ -99,7 +100,7 @@ function locate(nside: number, raDeg: number, decDeg: number): void {
   const sector = Math.floor(quarter);
   const part = quarter - sector;
   // nside sqrt(3 (1 - |z|)), with 1 - |z| = cos^2/(1 + |z|) that keeps its digits at the pole.
-  const fromPole = nside * Math.cos(dec) * Math.sqrt(3 / (1 + height));
+  const fromPole = nside * cos(dec) * Math.sqrt(3 / (1 + height));
   const east = Math.min(nside - 1, Math.floor(part * fromPole));
   const west = Math.min(nside - 1, Math.floor((1 - part) * fromPole));
   if (z >= 0) {
@@ -133,10 +134,10 @@ export function pointOnFace(nside: number, face: number, x: number, y: number): 
   if (ring < nside || ring > 3 * nside) {
     length = ring < nside ? ring : 4 * nside - ring;
     // 1 - |z| = length^2 / (3 nside^2) = 2 sin^2(half the distance from the pole).
-    const fromPole = 2 * Math.asin(length / (nside * Math.sqrt(6)));
+    const fromPole = 2 * asin(length / (nside * Math.sqrt(6)));
     facePoint.decDeg = ((ring < nside ? HALF_PI - fromPole : fromPole - HALF_PI) * 180) / Math.PI;
   } else {
-    facePoint.decDeg = (Math.asin(((2 * nside - ring) * 2) / (3 * nside)) * 180) / Math.PI;
+    facePoint.decDeg = (asin(((2 * nside - ring) * 2) / (3 * nside)) * 180) / Math.PI;
   }
   const turn = length > 0 ? FACE_LON[face]! + (x - y) / length : 0;
   facePoint.raDeg = 45 * (turn < 0 ? turn + 8 : turn >= 8 ? turn - 8 : turn);

@@ -1,3 +1,4 @@
+import { cos, sin, square } from '../numerics/elementary/elementary.ts';
 import { triangleArea } from './area.ts';
 import { smallestCap } from './enclosingCap.ts';
 import type { OutlineRing } from './region.ts';
@@ -14,7 +15,7 @@ export interface Piece {
 }
 
 /** cos 85 deg: rings that reach farther than this from their middle are not held by any useful cap. */
-const FARTHEST_COS = Math.cos((85 * Math.PI) / 180);
+const FARTHEST_COS = cos((85 * Math.PI) / 180);
 
 /** The ring made ready; null when it reaches around the sky, more than 85 degrees from its middle. */
 export function pieceOf(ring: OutlineRing): Piece | null {
@@ -35,10 +36,10 @@ export function pieceOf(ring: OutlineRing): Piece | null {
 /** Whether some point of one lies within `limitRad` of some point of the other. */
 export function piecesNear(a: Piece, b: Piece, limitRad: number): boolean {
   // Chords are shorter than arcs, so these reject safely without any trigonometry.
-  if (chord2(a.centre, b.centre) > (a.radiusRad + b.radiusRad + limitRad) ** 2) return false;
-  const limit2 = (2 * Math.sin(limitRad / 2)) ** 2;
+  if (chord2(a.centre, b.centre) > square(a.radiusRad + b.radiusRad + limitRad)) return false;
+  const limit2 = square(2 * sin(limitRad / 2));
   for (const p of a.points) {
-    if (chord2(p, b.centre) > (b.radiusRad + limitRad) ** 2) continue;
+    if (chord2(p, b.centre) > square(b.radiusRad + limitRad)) continue;
     for (const q of b.points) if (chord2(p, q) <= limit2) return true;
   }
   return false;
@@ -46,7 +47,7 @@ export function piecesNear(a: Piece, b: Piece, limitRad: number): boolean {
 
 /** Whether the cap that holds `outer` holds all of `inner` too. */
 export function pieceHolds(outer: Piece, inner: Piece): boolean {
-  const least = Math.cos(Math.min(Math.PI, outer.radiusRad + 1e-9));
+  const least = cos(Math.min(Math.PI, outer.radiusRad + 1e-9));
   return inner.points.every((p) => dot(outer.centre, p) >= least - 1e-12);
 }
 

@@ -1,3 +1,4 @@
+import { asin } from '../numerics/elementary/elementary.ts';
 import { type Arc, arcEnd, arcExtent, arcPoint, arcStart } from './arc.ts';
 import { binEdges, type EdgeSpans, spansMeridian } from './polygonBins.ts';
 import { EDGE_TOLERANCE_RAD, type Side } from './shape.ts';
@@ -93,8 +94,8 @@ function layOut(arcs: readonly Arc[], frame: Frame, longitudes: readonly number[
     const [a, b] = [arcStart(arc), arcEnd(arc)];
     edges.ends.set(east ? [...a, ...b] : [...b, ...a], 6 * i);
     const extent = arcExtent(arc, frame.z);
-    edges.latMinDeg[i] = Math.asin(Math.max(-1, extent.min)) * DEG_PER_RAD - LAT_PADDING_DEG;
-    edges.latMaxDeg[i] = Math.asin(Math.min(1, extent.max)) * DEG_PER_RAD + LAT_PADDING_DEG;
+    edges.latMinDeg[i] = asin(Math.max(-1, extent.min)) * DEG_PER_RAD - LAT_PADDING_DEG;
+    edges.latMaxDeg[i] = asin(Math.min(1, extent.max)) * DEG_PER_RAD + LAT_PADDING_DEG;
   }
   return edges;
 }

@@ -1,3 +1,4 @@
+import { cos, sin } from '../numerics/elementary/elementary.ts';
 import type { CompiledShape } from './shape.ts';
 import type { ShapeIndex } from './shapeIndex.ts';
 import { combine, cross, perpendicular, raDecToUnit, unit, unitToRaDec } from './vectors.ts';
@@ -75,7 +76,7 @@ function someSkyAround(
   const v = cross(centre, u);
   for (let k = 0; k < PROBES; k++) {
     const turn = (2 * Math.PI * (k + 0.137)) / PROBES;
-    const offset = combine(PROBE_RAD * Math.cos(turn), u, PROBE_RAD * Math.sin(turn), v);
+    const offset = combine(PROBE_RAD * cos(turn), u, PROBE_RAD * sin(turn), v);
     const probe = unitToRaDec(unit(combine(1, centre, 1, offset)));
     if (isInRegion(shapes, partCount, index, probe.raDeg, probe.decDeg)) return true;
   }

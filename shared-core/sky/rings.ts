@@ -1,3 +1,4 @@
+import { atan2 } from '../numerics/elementary/elementary.ts';
 import { type Arc, arcEnd, arcStart, greatCircleArc, tangent } from './arc.ts';
 import { NearPool } from './nearPool.ts';
 import { cross, dot, norm, subtract, type Vec3 } from './vectors.ts';
@@ -10,7 +11,7 @@ const GAP_RAD = 1e-14;
 
 /** How far to turn clockwise about `up` from direction `from` to direction `to`, in (0, 2 pi]. */
 function clockwise(up: Vec3, from: Vec3, to: Vec3): number {
-  const turn = Math.atan2(-dot(up, cross(from, to)), dot(from, to));
+  const turn = atan2(-dot(up, cross(from, to)), dot(from, to));
   return turn > 0 ? turn : turn + 2 * Math.PI;
 }
 

@@ -1,3 +1,4 @@
+import { acos } from '../numerics/elementary/elementary.ts';
 import { type Arc, arcExtent } from './arc.ts';
 import type { Vec3 } from './vectors.ts';
 
@@ -30,5 +31,5 @@ export function boundingRadius(centre: Vec3, arcs: readonly Arc[], holdsAntipode
   if (holdsAntipode || arcs.length === 0) return Math.PI;
   let least = 1;
   for (const arc of arcs) least = Math.min(least, arcExtent(arc, centre).min);
-  return Math.min(Math.PI, Math.acos(Math.max(-1, least)) + BOUND_PADDING_RAD);
+  return Math.min(Math.PI, acos(Math.max(-1, least)) + BOUND_PADDING_RAD);
 }

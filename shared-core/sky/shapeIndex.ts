@@ -1,3 +1,4 @@
+import { asin, cos, sin } from '../numerics/elementary/elementary.ts';
 import type { CompiledShape } from './shape.ts';
 import { DEG_PER_RAD, RAD_PER_DEG, unitToRaDec } from './vectors.ts';
 
@@ -29,7 +30,7 @@ function makeGrid(bands: number): Grid {
   const bandStart = new Int32Array(bands + 1);
   for (let b = 0; b < bands; b++) {
     const middle = ((b + 0.5) / bands) * Math.PI - Math.PI / 2;
-    bandStart[b + 1] = bandStart[b]! + Math.max(1, Math.round(2 * bands * Math.cos(middle)));
+    bandStart[b + 1] = bandStart[b]! + Math.max(1, Math.round(2 * bands * cos(middle)));
   }
   return { bands, bandStart };
 }
@@ -42,8 +43,8 @@ function forEachCell(grid: Grid, shape: CompiledShape, visit: (cell: number) => 
   const high = Math.min(bands - 1, Math.floor(((decDeg + radiusDeg + 90) / 180) * bands));
   // A cap that does not hold a pole reaches asin(sin r / cos Dec) in RA, and in no band farther.
   const holdsPole = Math.abs(decDeg) + radiusDeg >= 90;
-  const sine = Math.sin(radiusDeg * RAD_PER_DEG) / Math.cos(decDeg * RAD_PER_DEG);
-  const reachDeg = holdsPole || sine >= 1 ? 180 : Math.asin(sine) * DEG_PER_RAD + PADDING_DEG;
+  const sine = sin(radiusDeg * RAD_PER_DEG) / cos(decDeg * RAD_PER_DEG);
+  const reachDeg = holdsPole || sine >= 1 ? 180 : asin(sine) * DEG_PER_RAD + PADDING_DEG;
   for (let b = low; b <= high; b++) {
     const start = bandStart[b]!;
     const count = bandStart[b + 1]! - start;

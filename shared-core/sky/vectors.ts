@@ -1,3 +1,5 @@
+import { atan2, cos, hypot, sin } from '../numerics/elementary/elementary.ts';
+
 /** A direction as a unit vector: x to RA 0, y to RA 90, z to the north celestial pole. */
 export type Vec3 = readonly [x: number, y: number, z: number];
 
@@ -25,15 +27,15 @@ export function raDecToUnit(raDeg: number, decDeg: number): Vec3 {
   const ra = raDeg * RAD_PER_DEG;
   const dec = decDeg * RAD_PER_DEG;
   // cos(90 deg) is 6e-17 in floating point; a pole is a pole, whatever its RA.
-  const cosDec = Math.abs(decDeg) === 90 ? 0 : Math.cos(dec);
-  return [cosDec * Math.cos(ra), cosDec * Math.sin(ra), Math.sin(dec)];
+  const cosDec = Math.abs(decDeg) === 90 ? 0 : cos(dec);
+  return [cosDec * cos(ra), cosDec * sin(ra), sin(dec)];
 }
 
 /** RA in [0, 360) and Dec in [-90, 90] degrees of a vector of any length above 0. */
 export function unitToRaDec(v: Vec3): { raDeg: number; decDeg: number } {
   return {
-    raDeg: normaliseRaDeg(Math.atan2(v[1], v[0]) * DEG_PER_RAD),
-    decDeg: Math.atan2(v[2], Math.hypot(v[0], v[1])) * DEG_PER_RAD,
+    raDeg: normaliseRaDeg(atan2(v[1], v[0]) * DEG_PER_RAD),
+    decDeg: atan2(v[2], hypot(v[0], v[1])) * DEG_PER_RAD,
   };
 }
 
@@ -55,7 +57,7 @@ export function combine(s: number, a: Vec3, t: number, b: Vec3): Vec3 {
 }
 
 export function norm(a: Vec3): number {
-  return Math.hypot(a[0], a[1], a[2]);
+  return hypot(a[0], a[1], a[2]);
 }
 
 /** The vector scaled to length 1; its length must be above 0. */
@@ -74,7 +76,7 @@ export function perpendicular(a: Vec3): Vec3 {
 
 /** Angle between two unit vectors in radians: atan2(|a x b|, a.b), exact for small and for large angles. */
 export function angleRad(a: Vec3, b: Vec3): number {
-  return Math.atan2(norm(cross(a, b)), dot(a, b));
+  return atan2(norm(cross(a, b)), dot(a, b));
 }
 
 /** Angle on the sky between two positions, all in degrees. */
@@ -87,5 +89,5 @@ export const SPREAD_DIRECTIONS: readonly Vec3[] = Array.from({ length: 60 }, (_,
   const z = 1 - (2 * i + 1) / 60;
   const turn = i * Math.PI * (3 - Math.sqrt(5)) + 0.4321;
   const r = Math.sqrt(1 - z * z);
-  return [r * Math.cos(turn), r * Math.sin(turn), z];
+  return [r * cos(turn), r * sin(turn), z];
 });
