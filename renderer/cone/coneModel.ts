@@ -24,10 +24,11 @@ import {
 import { type PreparedField, prepareField } from './geometry/preparedField.ts';
 import type { Pose, Viewport } from './geometry/projection.ts';
 import type { Vec3 } from './geometry/vector.ts';
-import { mixTables, type RadiusTable, radiusTable } from './points/radiusTable.ts';
+import { mixTables, type RadiusTable, radiusTable, sameTable } from './points/radiusTable.ts';
 import type {
   AxisInsets,
   AxisWindow,
+  FieldInput,
   FootprintInput,
   RadialReading,
   RadialScaleInput,
@@ -44,6 +45,15 @@ const SEAT_ROOM: Margins = { left: 60, right: 60, top: 30, bottom: 30 };
 const NEAREST_SCALE = 1e-8;
 const FARTHEST_SCALE = 0.05;
 const ORBIT_RADIANS_PER_PIXEL = 0.0075;
+
+/** No outline: the field is everything. */
+const WHOLE_SKY: FieldInput = {
+  centreRaDeg: 0,
+  centreDecDeg: 0,
+  radiusDeg: 180,
+  positionAngleDeg: 90,
+  rings: [],
+};
 
 /** What is on screen at one moment of a transition. */
 export interface Shown {
@@ -110,7 +120,7 @@ export class ConeModel {
   }
 
   setFootprint(input: FootprintInput): void {
-    this.fields = input.fields.map(prepareField);
+    this.fields = (input.fields.length > 0 ? input.fields : [WHOLE_SKY]).map(prepareField);
     this.wide = input.wide;
     this.estimated = input.estimated ?? false;
     this.chosenFactors.clear();
@@ -121,17 +131,28 @@ export class ConeModel {
     this.takePose();
   }
 
-  setScale(input: RadialScaleInput, window: AxisWindow): void {
+  setScale(input: RadialScaleInput, window: AxisWindow, insets: AxisInsets = this.insets): void {
     const { comovingMpc, radius } = input.table;
     this.reading = input.reading;
-    this.table = radiusTable(comovingMpc, radius);
+    const table = radiusTable(comovingMpc, radius);
+    // The same table again, as when only ticks or window change, moves no galaxy.
+    if (!sameTable(table, this.table)) this.table = table;
     this.farMpc = comovingMpc[comovingMpc.length - 1]!;
     this.farRadius = radius[radius.length - 1]!;
     this.window = window;
+    this.insets = insets;
     if (this.exact) this.takePose();
   }
 
-  setAxis(window: AxisWindow, insets: AxisInsets): void {
+  setAxis(window: AxisWindow, insets: AxisInsets = this.insets): void {
+    const same =
+      window.min === this.window.min &&
+      window.max === this.window.max &&
+      insets.leftPx === this.insets.leftPx &&
+      insets.rightPx === this.insets.rightPx;
+    if (same) return;
+    // A hand on the axis ends a transition.
+    this.from = null;
     this.window = window;
     this.insets = insets;
     if (this.exact) this.takePose();

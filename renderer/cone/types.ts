@@ -19,7 +19,7 @@ export interface GalaxyInput {
   readonly comovingMpc: Float64Array | Float32Array;
 }
 
-/** Colours of the galaxies: a number a galaxy, read between `from` and `to` of the map. */
+/** Colours of the galaxies: a number a galaxy, read between `from` and `to` of the map; NaN (not known) is grey. */
 export type ColouringInput =
   | {
       readonly kind: 'values';
@@ -46,6 +46,7 @@ export interface FieldInput {
   readonly name?: string;
 }
 
+/** No fields at all means the whole sky. */
 export interface FootprintInput {
   readonly fields: readonly FieldInput[];
   /** True for a region over about 70 degrees across, and for the whole sky (which has no rings). */

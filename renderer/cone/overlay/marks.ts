@@ -20,10 +20,19 @@ export function paintMarks(pen: Pen, { hovered, picked, pairText }: Marks): void
   }
 }
 
-/** Beside the middle of the line, on the stage whatever the line does. */
+/** Above a flat line, beside a steep one; on the stage whatever the line does. */
 function paintPairText(pen: Pen, a: Point, b: Point, text: string): void {
   const half = pen.measure(text, 12, 600) / 2 + 8;
-  const x = Math.min(pen.width - half, Math.max(half, (a[0] + b[0]) / 2));
-  const y = Math.min(pen.height - 14, Math.max(14, (a[1] + b[1]) / 2 - 16));
-  pen.text(text, x, y, pen.theme.ink, { sizePx: 12, weight: 600, must: true });
+  const flat = Math.abs(b[0] - a[0]) > Math.abs(b[1] - a[1]);
+  const middleX = (a[0] + b[0]) / 2;
+  const middleY = (a[1] + b[1]) / 2;
+  const x = flat ? middleX : middleX + half + 10;
+  const y = flat ? Math.min(a[1], b[1]) - 20 : middleY;
+  pen.text(
+    text,
+    Math.min(pen.width - half, Math.max(half, x)),
+    Math.min(pen.height - 14, Math.max(14, y)),
+    pen.theme.ink,
+    { sizePx: 12, weight: 600, must: true },
+  );
 }

@@ -1,4 +1,4 @@
-import { compassOf, paintCone } from './coneRulers.ts';
+import { compassOf, PINNED_TOP_PX, paintCone, upperIsPinned } from './coneRulers.ts';
 import { paintMarks } from './marks.ts';
 import type { Pen } from './pen.ts';
 import { paintRings } from './ringRulers.ts';
@@ -9,9 +9,10 @@ import { paintShellLabels, paintShells } from './shellPaint.ts';
 /** Paints lines, rulers, labels and marks over points and solids. */
 export function paintOverlay(pen: Pen, scene: OverlayScene): void {
   paintShells(pen, scene);
+  const top = 20 + (upperIsPinned(pen, scene) ? PINNED_TOP_PX + 4 : 0);
   for (const [i, line] of scene.caption.entries()) {
     const x = 18 + pen.measure(line) / 2;
-    pen.text(line, x, 20 + 17 * i, pen.theme.inkMuted, { gap: 0 });
+    pen.text(line, x, top + 17 * i, pen.theme.inkMuted, { gap: 0 });
   }
   const rings = scene.lanes.length > 0 && scene.lanes.every((lane) => lane.shape.rings.length === 0);
   // Told before the rulers so that no number can take its place.

@@ -70,6 +70,15 @@ export class Pen {
     return true;
   }
 
+  /** A band of the ground over the picture, from one height to another, so that rulers on it read well. */
+  veil(fromY: number, toY: number): void {
+    const { context } = this;
+    context.globalAlpha = 0.72;
+    context.fillStyle = this.theme.background;
+    context.fillRect(0, fromY, this.width, toY - fromY);
+    context.globalAlpha = 1;
+  }
+
   ring(p: Point, radiusPx: number, colour: string, widthPx: number): void {
     const { context } = this;
     context.beginPath();

@@ -76,7 +76,9 @@ function drawTitle(
   const sizePx = 11;
   const width = pen.measure(ruler.title, sizePx);
   if (length < width + 60) return;
-  for (const share of TITLE_SHARES) {
+  const [from, to] = shareOnStage(pen, start, end);
+  for (const place of TITLE_SHARES) {
+    const share = from + place * (to - from);
     const x = start[0] + (end[0] - start[0]) * share + normal[0] * out;
     const y = start[1] + (end[1] - start[1]) * share + normal[1] * out;
     const halfX = (Math.abs(along[0]) * width) / 2 + Math.abs(along[1]) * 7;
@@ -98,6 +100,22 @@ function drawTitle(
     context.restore();
     return;
   }
+}
+
+/** The part of a line that lies on the stage, as shares of its length (Liang and Barsky's clipping). */
+function shareOnStage(pen: Pen, start: Point, end: Point): [from: number, to: number] {
+  let [from, to] = [0, 1];
+  for (const [axis, size] of [
+    [0, pen.width],
+    [1, pen.height],
+  ] as const) {
+    const step = end[axis] - start[axis];
+    if (step === 0) continue;
+    const [a, b] = [(0 - start[axis]) / step, (size - start[axis]) / step];
+    from = Math.max(from, Math.min(a, b));
+    to = Math.min(to, Math.max(a, b));
+  }
+  return from < to ? [from, to] : [0, 1];
 }
 
 /** A slanted text as a row of small boxes. */

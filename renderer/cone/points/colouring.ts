@@ -3,10 +3,16 @@ import { shellColours } from '../../colour/shellColours.ts';
 import type { ColouringInput, ShellInput } from '../types.ts';
 import { type RadiusTable, radiusAt } from './radiusTable.ts';
 
-/** Colour index (0..255) of a value read between two ends; values beyond an end have the end's colour, NaN the low one. */
+/** Index of a galaxy whose value is not known: grey. */
+export const UNKNOWN = 0;
+/** The lowest value's index: clear of the unknown by more than a step of the tone table. */
+const LOWEST = 2;
+
+/** Colour index (2..255) of a value read between two ends; values beyond an end have its colour, NaN is UNKNOWN. */
 export function colourIndex(value: number, from: number, to: number): number {
   const t = (value - from) / (to - from);
-  return t > 0 ? (t < 1 ? Math.round(255 * t) : 255) : 0;
+  if (Number.isNaN(t)) return UNKNOWN;
+  return t > 0 ? (t < 1 ? LOWEST + Math.round((255 - LOWEST) * t) : 255) : LOWEST;
 }
 
 /** The index for galaxies nearer than all shells is 0, beyond them 255; shells stand evenly between. */
@@ -56,15 +62,22 @@ export function indexer(
 export function palette(colouring: ColouringInput, shells: number, ground: Ground): Uint8Array {
   if (colouring.kind === 'shell') return shellPalette(shells, ground);
   const { bytes } = colourMap(colouring.map, ground);
-  if (!colouring.reversed) return bytes;
-  const out = new Uint8Array(bytes.length);
-  for (let i = 0; i < 256; i++) out.set(bytes.subarray(3 * (255 - i), 3 * (255 - i) + 3), 3 * i);
+  const out = bytes.slice();
+  if (colouring.reversed) {
+    for (let i = 0; i < 256; i++) out.set(bytes.subarray(3 * (255 - i), 3 * (255 - i) + 3), 3 * i);
+  }
+  out.set(GREY[ground], 3 * UNKNOWN);
   return out;
 }
 
+const GREY: Readonly<Record<Ground, readonly [number, number, number]>> = {
+  dark: [120, 124, 132],
+  light: [150, 154, 160],
+};
+
 /** Colours of the shells at their indices, grey at both ends, and even mixtures between. */
 function shellPalette(shells: number, ground: Ground): Uint8Array {
-  const grey = ground === 'dark' ? [120, 124, 132] : [150, 154, 160];
+  const grey = GREY[ground];
   const stops = [grey, ...shellColours(shells, ground), grey];
   const places = stops.map((_, i) =>
     i === stops.length - 1 ? 255 : i === 0 ? 0 : shellIndex(i - 1, shells),

@@ -65,3 +65,8 @@ export function mixTables(a: RadiusTable, b: RadiusTable, t: number): RadiusTabl
   }
   return { values, stepsPerMpc };
 }
+
+/** Whether two tables say the same. */
+export function sameTable(a: RadiusTable, b: RadiusTable): boolean {
+  return a.stepsPerMpc === b.stepsPerMpc && a.values.every((v, i) => v === b.values[i]);
+}

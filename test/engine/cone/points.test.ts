@@ -1,6 +1,12 @@
 import { describe, expect, it } from 'vitest';
 import { shellColours } from '../../../renderer/colour/shellColours.ts';
-import { colourIndex, palette, shellIndex, shellIndexer } from '../../../renderer/cone/points/colouring.ts';
+import {
+  colourIndex,
+  palette,
+  shellIndex,
+  shellIndexer,
+  UNKNOWN,
+} from '../../../renderer/cone/points/colouring.ts';
 import { EvenOrder, evenStep } from '../../../renderer/cone/points/evenOrder.ts';
 import { crowding, discLight, exposure, pointSizePx } from '../../../renderer/cone/points/exposure.ts';
 import { PointStore } from '../../../renderer/cone/points/pointStore.ts';
@@ -239,11 +245,23 @@ describe('light and tone', () => {
 
 describe('colour indices', () => {
   it('read values between two ends', () => {
-    expect(colourIndex(0.5, 0, 1)).toBe(128);
-    expect(colourIndex(-3, 0, 1)).toBe(0);
+    expect(colourIndex(0.5, 0, 1)).toBe(2 + Math.round(253 / 2));
+    expect(colourIndex(-3, 0, 1)).toBe(2);
     expect(colourIndex(7, 0, 1)).toBe(255);
-    expect(colourIndex(Number.NaN, 0, 1)).toBe(0);
-    expect(colourIndex(18, 20, 10)).toBe(51);
+    expect(colourIndex(18, 20, 10)).toBe(2 + Math.round(253 / 5));
+  });
+
+  it('keep what is not known apart, grey', () => {
+    expect(colourIndex(Number.NaN, 0, 1)).toBe(UNKNOWN);
+    const bytes = palette(
+      { kind: 'values', values: Float32Array.of(), from: 0, to: 1, map: 'harbour' },
+      0,
+      'dark',
+    );
+    const [r, g, b] = bytes.subarray(3 * UNKNOWN, 3 * UNKNOWN + 3);
+    expect(Math.max(r!, g!, b!) - Math.min(r!, g!, b!)).toBeLessThan(16);
+    // The lowest value's step of the tone table is not the unknown's.
+    expect(Math.round((colourIndex(0, 0, 1) / 255) * (VALUE_STEPS - 1))).toBeGreaterThan(0);
   });
 
   it('find the shell of a distance, its far edge outside but for the last', () => {
@@ -275,6 +293,7 @@ describe('colour indices', () => {
   it('turn round when the map is reversed', () => {
     const plain = palette({ kind: 'radius', map: 'heath' }, 0, 'dark');
     const back = palette({ kind: 'radius', map: 'heath', reversed: true }, 0, 'dark');
-    expect([...back.subarray(0, 3)]).toEqual([...plain.subarray(765)]);
+    expect([...back.subarray(3 * 55, 3 * 56)]).toEqual([...plain.subarray(3 * 200, 3 * 201)]);
+    expect([...back.subarray(765)]).not.toEqual([...plain.subarray(765)]);
   });
 });

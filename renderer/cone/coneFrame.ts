@@ -1,0 +1,44 @@
+import type { ConeModel, Shown } from './coneModel.ts';
+import type { Lane } from './geometry/arrangement.ts';
+import { compose, type PixelMatrix, pixelMatrix, project, type Viewport } from './geometry/projection.ts';
+import type { Point } from './overlay/pen.ts';
+import type { Galaxies } from './points/galaxies.ts';
+import type { PointPart } from './points/pointLayer.ts';
+import { radiusAt } from './points/radiusTable.ts';
+
+/** Matrices of one moment: every layer of a picture is drawn with the same. */
+export interface ConeFrame {
+  readonly shown: Shown;
+  readonly lanes: readonly Lane[];
+  /** Display space to CSS pixels. */
+  readonly pixels: PixelMatrix;
+  /** Sky direction times radius to CSS pixels, for each lane. */
+  readonly laneMatrices: readonly Float64Array[];
+}
+
+export function coneFrame(model: ConeModel, viewport: Viewport, now: number): ConeFrame {
+  const shown = model.shown(now);
+  const lanes = model.lanes(shown.factors);
+  const pixels = pixelMatrix(shown.pose, viewport);
+  return { shown, lanes, pixels, laneMatrices: lanes.map((lane) => compose(pixels, lane.model)) };
+}
+
+/** The galaxies of the lanes; before there is a region, all of them as they stand on the sky. */
+export function partsOf(frame: ConeFrame, galaxies: Galaxies): PointPart[] {
+  const ranges = galaxies.store?.ranges ?? [];
+  if (frame.lanes.length === 0 && ranges[0]) return [{ matrix: frame.pixels, range: ranges[0] }];
+  return frame.lanes.flatMap((lane, i) => {
+    const range = ranges[lane.field];
+    return range ? [{ matrix: frame.laneMatrices[i]!, range }] : [];
+  });
+}
+
+/** Where a row of the catalogue is drawn; null when it is not. */
+export function pixelOf(row: number, frame: ConeFrame, galaxies: Galaxies): Point | null {
+  const place = galaxies.place(row);
+  if (!place) return null;
+  const nth = frame.lanes.findIndex((lane) => lane.field === place.field);
+  const matrix = frame.laneMatrices[nth] ?? (frame.lanes.length === 0 ? frame.pixels : undefined);
+  if (!matrix) return null;
+  return project(matrix, place.x, place.y, place.z, radiusAt(frame.shown.table, place.comovingMpc));
+}
