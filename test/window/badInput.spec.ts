@@ -78,7 +78,7 @@ test('a file that is no catalogue says so, and the one before comes back with un
   });
   for (const kind of ['dragenter', 'dragover', 'drop'])
     await page.dispatchEvent('.frame', kind, { dataTransfer: data });
-  await expect(page.getByText(/No column was recognised/).first()).toBeVisible();
+  await expect(page.getByText(/is a single column/).first()).toBeVisible();
   await page.keyboard.press('Control+z');
   await expect(page.locator('.engine-line')).toHaveText(/4.212 kept/);
 });
