@@ -10,6 +10,7 @@ export default defineConfig({
     assetsInlineLimit: 0,
     sourcemap: false,
     modulePreload: { polyfill: false },
+    rolldownOptions: { input: ['index.html', 'picture.html'] },
   },
   worker: { format: 'es' },
 });

@@ -3,6 +3,7 @@ import { Refusal } from '../../shared-core/base/refusal.ts';
 import { addCoordinates } from './verbs/coordinates.ts';
 import { addDemo } from './verbs/demo.ts';
 import { addDistances } from './verbs/distances.ts';
+import { addPicture } from './verbs/picture.ts';
 import { addShells } from './verbs/shells.ts';
 
 export interface Streams {
@@ -19,9 +20,14 @@ const HOST_STREAMS: Streams = {
 
 /**
  * Runs one command line.
+ * @param windowFolder the built window, which draws pictures; null where it is not built
  * @returns the exit code: 0; 2 for wrong use; 1 for input that cannot be used
  */
-export async function run(argv: readonly string[], { print, say }: Streams = HOST_STREAMS): Promise<number> {
+export async function run(
+  argv: readonly string[],
+  { print, say }: Streams = HOST_STREAMS,
+  windowFolder: string | null = null,
+): Promise<number> {
   const program = new Command('conewright')
     .description('Redshift shells of a galaxy survey, and what each is worth.')
     .usage('VERB [options]    (npm run -s conewright -- VERB [options])')
@@ -32,9 +38,10 @@ export async function run(argv: readonly string[], { print, say }: Streams = HOS
   addShells(program, print);
   addCoordinates(program, say);
   addDemo(program, print, say);
+  addPicture(program, say, windowFolder);
   for (const command of program.commands) command.copyInheritedSettings(program);
   if (argv.length === 0) {
-    say('No verb came: use distances, shells, coordinates or demo, each with --help.');
+    say('No verb came: use distances, shells, coordinates, demo or picture, each with --help.');
     return 2;
   }
   try {

@@ -12,13 +12,13 @@ export interface WriteOptions {
 }
 
 /**
- * Writes a file so that its name never stands for half of it: pieces go to a file beside it, which takes the name
+ * Writes a file so that its name never stands for half of it: pieces (text as UTF-8, or bytes) go to a file beside it, which takes the name
  * when it is whole.
  * @throws Refusal when something else stands there and `overwrite` is off, or the disk says no
  */
 export async function writeOutput(
   path: string,
-  pieces: Iterable<string> | AsyncIterable<string>,
+  pieces: Iterable<string | Uint8Array> | AsyncIterable<string | Uint8Array>,
   { overwrite }: WriteOptions,
 ): Promise<void> {
   try {

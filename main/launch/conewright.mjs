@@ -5,6 +5,8 @@ import { build } from './build.mjs';
 import { install, root } from './install.mjs';
 
 install();
-await build(['command']);
+const words = process.argv.slice(2);
+// Pictures are drawn by the window's own code in a browser without a window.
+await build(words[0] === 'picture' ? ['command', 'window'] : ['command']);
 const { run } = await import(pathToFileURL(join(root, 'build/command/conewright.js')).href);
-process.exitCode = await run(process.argv.slice(2));
+process.exitCode = await run(words, undefined, join(root, 'build/window'));

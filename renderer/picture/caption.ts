@@ -1,0 +1,61 @@
+import { findPublishedSet } from '../../shared-core/cosmology/publishedSets.ts';
+import type { PictureNumbers } from './numbers.ts';
+
+/** A count with its thousands parted by narrow spaces. */
+export const thousands = (count: number): string => String(count).replace(/\B(?=(\d{3})+$)/g, '\u202f');
+
+/** How many galaxies are drawn, in words. */
+export function galaxiesText(numbers: PictureNumbers): string {
+  const count = numbers.facts.selected?.sample.count ?? 0;
+  if (count === 0) return 'No galaxies, shells only';
+  return `${thousands(count)} ${count === 1 ? 'galaxy' : 'galaxies'}`;
+}
+
+/**
+ * What a reader must know to use the picture: how many galaxies, what is not to scale, the region and whether it is an
+ * estimate, the selection, the cosmology.
+ *
+ * @param notes of the view
+ */
+export function offeredCaption(numbers: PictureNumbers, notes: readonly string[]): string {
+  const { study, facts } = numbers;
+  const account = facts.selected?.account;
+  const of = account ? ` of ${thousands(account.rowsRead)} rows read` : '';
+  const parts = [`${galaxiesText(numbers)}${of}.`, ...notes.map(sentence)];
+  const cuts = study.cuts.map(
+    ({ column, min, max }) => `${min === null ? '' : `${min} ≤ `}${column}${max === null ? '' : ` ≤ ${max}`}`,
+  );
+  if (cuts.length > 0) parts.push(`Selected: ${cuts.join(', ')}.`);
+  parts.push(...regionText(numbers), cosmologyText(numbers));
+  if (study.source?.kind === 'demo') parts.push('The survey is invented.');
+  return parts.join(' ');
+}
+
+const sentence = (note: string): string => `${note.charAt(0).toUpperCase()}${note.slice(1)}.`;
+
+const digits = (value: number, count: number): string => String(Number(value.toPrecision(count)));
+
+function regionText({ footprint }: PictureNumbers): string[] {
+  if (footprint === null) return [];
+  const fields = footprint.fields.length > 1 ? ` in ${footprint.fields.length} fields` : '';
+  const area = digits(footprint.areaDeg2, 4);
+  if (footprint.estimate === null) return [`Area ${area} deg²${fields}.`];
+  const error = digits(footprint.estimate.areaErrorDeg2, 2);
+  return [`Area ${area} ± ${error} deg²${fields}, estimated from the galaxies' positions.`];
+}
+
+/** Enough to repeat every distance: name and parameters. */
+function cosmologyText({ study, cosmology }: PictureNumbers): string {
+  const set = study.cosmologySet === null ? null : findPublishedSet(study.cosmologySet);
+  const p = cosmology.parameters;
+  const parts = [
+    Math.abs(cosmology.omegaK0) < 1e-12 ? 'flat' : `Ωk ${digits(cosmology.omegaK0, 4)}`,
+    `H0 ${digits(p.h0KmSMpc, 6)} km/s/Mpc`,
+    `Ωm ${digits(p.omegaM0, 6)} (without neutrinos)`,
+    `ΩΛ ${digits(cosmology.omegaDe0, 5)}`,
+  ];
+  if (p.w0 !== -1 || p.wa !== 0) parts.push(`w0 ${digits(p.w0, 5)}, wa ${digits(p.wa, 5)}`);
+  const masses = p.neutrinoMassesEv.reduce((sum, mass) => sum + mass, 0);
+  parts.push(p.tCmbK === 0 ? 'no radiation' : `neutrino masses ${digits(masses, 3)} eV`);
+  return `Cosmology: ${set === null ? '' : `${set.name}, `}${parts.join(', ')}.`;
+}

@@ -1,0 +1,53 @@
+import type { PictureOptions } from '../../../shared-core/picture/options.ts';
+import { indexer, palette } from '../../cone/points/colouring.ts';
+import { pointSizePx } from '../../cone/points/exposure.ts';
+import { radiusTable } from '../../cone/points/radiusTable.ts';
+import type { PictureNumbers } from '../numbers.ts';
+import type { ScenePoints } from '../scene.ts';
+import type { PictureTheme } from '../themes.ts';
+import type { ViewBox, ViewDrawing } from '../views/view.ts';
+import { crowdingOf } from './crowding.ts';
+
+/** Room for points, over the squares that hold any. */
+const ROOM_SHARE = 2.5;
+/** Print shows finer points than a screen. */
+const FINER = 0.8;
+
+/** The galaxies of a view with their colours, and the light that suits them. */
+export function placePoints(
+  drawing: ViewDrawing,
+  box: ViewBox,
+  options: PictureOptions,
+  numbers: PictureNumbers,
+  theme: PictureTheme,
+): ScenePoints {
+  const { background, selected } = numbers.facts;
+  const count = selected && background ? selected.sample.count : 0;
+  const x = new Float32Array(count);
+  const y = new Float32Array(count);
+  const value = new Uint8Array(count);
+  if (background && count > 0) {
+    drawing.placeAll(x, y);
+    const { input } = numbers.colours;
+    const far = background.comovingMpc[count - 1]!;
+    const index = indexer(input, numbers.shellInputs, radiusTable([0, far > 0 ? far : 1], [0, 1]));
+    for (let i = 0; i < count; i++) value[i] = index(i, background.comovingMpc[i]!);
+  }
+  const crowd = crowdingOf(x, y);
+  // Points are made for the room that they have, which in a picture is often a part of the box.
+  const side = Math.sqrt(Math.min(box.width * box.height, ROOM_SHARE * crowd.area));
+  const diameter = FINER * pointSizePx(crowd.onStage, { widthPx: side, heightPx: side });
+  return {
+    count,
+    x,
+    y,
+    value,
+    colours: palette(numbers.colours.input, numbers.shells.length, theme.mode),
+    stretch: options.stretch,
+    exposureStops: options.exposureStops + theme.exposureStops,
+    glow: theme.glow,
+    diameter,
+    densest: crowd.densest,
+    thinnest: crowd.thinnest,
+  };
+}

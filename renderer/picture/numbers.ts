@@ -1,0 +1,119 @@
+import { Refusal } from '../../shared-core/base/refusal.ts';
+import { type Cosmology, createCosmology } from '../../shared-core/cosmology/cosmology.ts';
+import type { PictureOptions } from '../../shared-core/picture/options.ts';
+import type { ShownUnits } from '../../shared-core/report/quantity.ts';
+import { radialAxis } from '../../shared-core/shells/radial.ts';
+import { sortSample } from '../../shared-core/shells/sample.ts';
+import type { ShellStatistics } from '../../shared-core/shells/shell.ts';
+import { shellStatistics } from '../../shared-core/shells/statistics.ts';
+import { compileRegion } from '../../shared-core/sky/compileRegion.ts';
+import { footprintFields } from '../../shared-core/sky/fields.ts';
+import type { ColourChoice, Study } from '../../shared-core/study/schema.ts';
+import type { ShellInput } from '../cone/types.ts';
+import type { Background, FootprintPicture, Selected } from '../engine/protocol.ts';
+import { type Colours, colouring, coneShells, radialScale } from '../stage/coneInputs.ts';
+import { radialPixel, wholeWindow } from '../strip/layout.ts';
+import { type Readings, readingsOf } from '../strip/readings.ts';
+
+/** What a picture is made from: the study, and the arrays that the engine made of it (null while there are none). */
+export interface PictureFacts {
+  readonly study: Study;
+  /** SHA-256 of the study's text, lower-case hexadecimal. */
+  readonly fingerprint: string;
+  readonly selected: Selected | null;
+  readonly background: Background | null;
+  /** Only needed where galaxies are coloured by it. */
+  readonly density: Float32Array | null;
+}
+
+/** Everything that the views draw, by the functions that the window uses. */
+export interface PictureNumbers {
+  readonly study: Study;
+  readonly facts: PictureFacts;
+  readonly cosmology: Cosmology;
+  readonly units: ShownUnits;
+  readonly readings: Readings;
+  readonly deepestRedshift: number;
+  readonly footprint: FootprintPicture | null;
+  readonly shells: readonly ShellStatistics[];
+  readonly shellInputs: readonly ShellInput[];
+  readonly colours: Colours;
+  readonly colourBy: ColourChoice;
+}
+
+/**
+ * The numbers of a picture.
+ * @throws Refusal where there is neither a galaxy nor a region nor a shell to show, and for colours that the catalogue has no
+ * values for
+ */
+export function pictureNumbers(options: PictureOptions, facts: PictureFacts): PictureNumbers {
+  const { study, selected } = facts;
+  const cosmology = createCosmology(study.cosmology);
+  const footprint = selected?.footprint ?? givenFootprint(study);
+  const { edges } = study;
+  if ((selected?.sample.count ?? 0) === 0 && (footprint === null || edges.length < 2))
+    throw new Refusal(
+      'The study has no galaxies, and no region with shells either, so there is nothing to draw: open a catalogue, or give a region and shell edges.',
+    );
+  const sample = selected?.sample ?? sortSample(new Float64Array(0), null);
+  const shells =
+    footprint === null || edges.length < 2
+      ? []
+      : shellStatistics(sample, edges, {
+          cosmology,
+          areaDeg2: footprint.areaDeg2,
+          p0Mpc3PerH3: study.p0Mpc3PerH3,
+        });
+  const units = { perH: study.look.perH, h: cosmology.h };
+  const deepest = Math.max(sample.count === 0 ? 0 : sample.redshift[sample.count - 1]!, edges.at(-1) ?? 0);
+  const { colours, colourBy } = coloursOf(options, facts);
+  return {
+    study,
+    facts,
+    cosmology,
+    units,
+    readings: readingsOf(cosmology, units),
+    deepestRedshift: deepest > 0 ? deepest : 1,
+    footprint,
+    shells,
+    shellInputs: coneShells(shells),
+    colours,
+    colourBy,
+  };
+}
+
+/** The radial scale of a picture whose radius takes `lengthUnits`, in the study's reading. */
+export function pictureScale(numbers: PictureNumbers, lengthUnits: number) {
+  const { cosmology, study, readings, units, deepestRedshift } = numbers;
+  const axis = radialAxis(study.look.radial, cosmology);
+  const window = wholeWindow(axis, deepestRedshift);
+  // The strip's pixel scale says how dense the marks may stand; its insets are added to what the radius takes.
+  const pixel = radialPixel(axis, window, lengthUnits + 128);
+  const scale = radialScale(study.look.radial, readings, cosmology, units, pixel, window[1] / 1.1);
+  return { axis, window, scale };
+}
+
+function givenFootprint(study: Study): FootprintPicture | null {
+  if (study.region === null) return null;
+  const made = compileRegion(study.region);
+  const { origin, areaDeg2, estimate } = made;
+  return { origin, areaDeg2, estimate, rings: made.outline(), fields: footprintFields(made) };
+}
+
+function coloursOf(
+  options: PictureOptions,
+  facts: PictureFacts,
+): Pick<PictureNumbers, 'colours' | 'colourBy'> {
+  const { selected, background, density, study } = facts;
+  const byShell: Colours = { input: { kind: 'shell' }, legend: null };
+  if (selected === null || background === null) return { colours: byShell, colourBy: 'shell' };
+  const wanted = options.colourBy ?? study.look.colourBy;
+  const found = colouring(wanted, selected, background.lookbackGyr, density);
+  if (found !== null) return { colours: found, colourBy: wanted };
+  if (options.colourBy !== null)
+    throw new Refusal(
+      `Galaxies were to be coloured by ${wanted}, which this catalogue has no values for: choose redshift, lookback or shell.`,
+      'use',
+    );
+  return { colours: colouring('redshift', selected, null, null) ?? byShell, colourBy: 'redshift' };
+}

@@ -1,0 +1,46 @@
+import { describe, expect, it } from 'vitest';
+import { checkMemory } from '../../main/command/verbs/picture.ts';
+import { emptyStudy, writeStudy } from '../../shared-core/study/document.ts';
+import { conewright, testFolder } from './capture.ts';
+
+const folder = testFolder();
+const out = folder.path('cone.png');
+
+describe('picture refuses before it starts', () => {
+  it.each([
+    [['-o', folder.path('cone.gif')], /ending \.png, \.svg or \.pdf/],
+    [['-o', out, '--size', '0x0'], /sides of 64 to 16384 pixels/],
+    [['-o', out, '--size', '1000000x1000000'], /sides of 64 to 16384 pixels/],
+    [['-o', out, '--size', 'huge'], /expected WIDTHxHEIGHT/],
+    [['-o', out, '--dpi', '0'], /--dpi is 0/],
+    [['-o', out, '--view', 'globe'], /at view/],
+    [['-o', out, '--style', 'pink'], /at style/],
+    [['-o', out, '--dec', '1,2'], /--view wedge/],
+    [['-o', out, '--view', 'wedge', '--dec', '1'], /two declinations/],
+    [['-o', out, '--view', 'wedge', '--great-circle', '1,2'], /pole and a thickness/],
+    [['-o', out, '--view', 'wedge', '--dec', '1,2', '--great-circle', '1,2,3'], /give one of them/],
+    [['-o', out, '--label', 'here'], /RA,DEC,Z,TEXT/],
+  ])('%j', async (words, sentence) => {
+    const { code, err } = await conewright('picture', 'demo', ...words);
+    expect(code).toBe(2);
+    expect(err).toMatch(sentence);
+    expect(err.trim().split('\n')).toHaveLength(1);
+  });
+
+  it('a study that is none, or whose catalogue is gone', async () => {
+    const none = folder.write('none.study.json', '{"format":"other"}');
+    const refused = await conewright('picture', none, '-o', out);
+    expect(refused.code).toBe(1);
+    expect(refused.err).toMatch(/is not a study/);
+    const source = { kind: 'file', name: 'gone.csv', path: null, sizeBytes: 5, sha256: null } as const;
+    const gone = folder.write('gone.study.json', writeStudy({ ...emptyStudy('Gone'), source }));
+    const { code, err } = await conewright('picture', gone, '-o', out);
+    expect(code).toBe(1);
+    expect(err).toMatch(/gone\.csv is not beside the study.*--catalogue/);
+  });
+
+  it('memory that will not be enough', () => {
+    expect(() => checkMemory(10e9, 4e9)).toThrow(/needs about 40\.5 GB of memory and 4\.0 GB are free/);
+    expect(() => checkMemory(1e6, 4e9)).not.toThrow();
+  });
+});
