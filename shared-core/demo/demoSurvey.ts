@@ -32,8 +32,7 @@ export interface DemoSurvey {
 /**
  * Makes the demo survey: 60 000 galaxies between z 0.5 and 2.1 in three fields, and rows to be set aside.
  *
- * The same seed gives the same bytes on every machine: numbers are written with far fewer digits than the
- * differences between engines' elementary functions could reach.
+ * The same seed gives the same bytes on every machine: random numbers and elementary functions are the core's own.
  *
  * @param seed whole number from 0 to 2^32 - 1
  * @throws Refusal for another seed

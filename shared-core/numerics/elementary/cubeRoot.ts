@@ -12,6 +12,9 @@ export function cbrt(x: number): number {
   if (size < 2.2250738585072014e-308) {
     size *= TWO_54;
     scale = 1 / 262144;
+  } else if (size > 1e300) {
+    size /= TWO_54;
+    scale = 262144;
   }
   // A third of the exponent, mantissa included: within 6 per cent. Halley's steps triple the digits: 2e-4, 1e-11.
   let root = withHighWord(0, Math.floor(highWord(size) / 3) + THIRD_OF_BIAS);
