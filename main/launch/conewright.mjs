@@ -4,6 +4,12 @@ import { pathToFileURL } from 'node:url';
 import { build } from './build.mjs';
 import { install, root } from './install.mjs';
 
+// A reader that has seen enough (head, less) closes the pipe: no error.
+process.stdout.on('error', (error) => {
+  if (/** @type {NodeJS.ErrnoException} */ (error).code === 'EPIPE') process.exit(0);
+  throw error;
+});
+
 install();
 const words = process.argv.slice(2);
 // Pictures are drawn by the window's own code in a browser without a window.
