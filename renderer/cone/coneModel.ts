@@ -314,7 +314,7 @@ export class ConeModel {
       start = { ...start, axes: lookingFrom([0.35, -0.75, 0.55], [0, 0, 1]) };
     }
     if (this.view === 'downTheCone') start = { ...start, axes: skyAxes(this.fields[this.current]) };
-    const rings = this.fields.every((field) => field.rings.length === 0);
+    const rings = this.fields.every((field) => field.surrounds);
     const room = this.view === 'downTheCone' ? SEAT_ROOM : rings ? RING_ROOM : FREE_ROOM;
     this.pose = fitPose(start, this.corners(), this.viewport, room);
   }

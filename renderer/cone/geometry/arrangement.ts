@@ -5,6 +5,7 @@ import type { Frame } from './vector.ts';
 
 /** What the arrangement needs to know of a field. */
 export interface ArrangedField {
+  readonly surrounds?: boolean;
   readonly frame: Frame;
   readonly extent: LateralExtent;
 }
@@ -71,7 +72,7 @@ export function laneHeights(naturalPx: readonly number[], availablePx: number): 
 /** The frame in which all fields are shown in their true directions: a single field's own, else that of the sky. */
 export function commonFrame(fields: readonly ArrangedField[]): Frame {
   const only = fields.length === 1 ? fields[0]! : undefined;
-  return only && only.extent.alongMax > only.extent.alongMin ? only.frame : SKY_FRAME;
+  return only && !only.surrounds ? only.frame : SKY_FRAME;
 }
 
 /** How high above and below its axis a cone of far radius `far` reaches in display space. */

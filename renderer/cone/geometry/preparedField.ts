@@ -1,9 +1,9 @@
 import type { FieldInput } from '../types.ts';
 import { fieldFrame, type LateralExtent, lateralExtent } from './fieldFrame.ts';
-import { ringDirections } from './rings.ts';
+import { ringDirections, simplerRing } from './rings.ts';
 import { type ShellMesh, shellMesh } from './shellMesh.ts';
 import { triangulateRings } from './triangulate.ts';
-import { direction, dot, type Frame, intoFrame, outOfFrame, type Vec3 } from './vector.ts';
+import { dot, type Frame, intoFrame, outOfFrame, type Vec3 } from './vector.ts';
 
 /** A field made ready for drawing. */
 export interface PreparedField {
@@ -20,34 +20,75 @@ export interface PreparedField {
   readonly lower: Vec3;
   /** North on the sky, in the display space of the field's frame. */
   readonly north: Vec3;
+  /** True when the field lies on all sides of the observer, so that rulers are rings. */
+  readonly surrounds: boolean;
 }
 
 /** Turns sharper than this are corners. */
 const CORNER_COSINE = Math.cos((20 * Math.PI) / 180);
 const MOST_CORNERS = 16;
 
+/** Outlines are drawn with so few points that nobody sees one missing: tolerance and longest step in degrees. */
+const TOLERANCE_DEG = 0.03;
+const LONGEST_DEG = 2.5;
+/** Longest edges of the solids' caps, degrees: finer where a field fills the stage. */
+const FINE_DEG = 3;
+const COARSE_DEG = 6;
+
 /** Frame, outline, solid and edges of a field. */
 export function prepareField(field: FieldInput): PreparedField {
-  const centre = direction(field.centreRaDeg, field.centreDecDeg);
-  const frame = fieldFrame(field.centreRaDeg, field.centreDecDeg, field.positionAngleDeg);
-  const rings = field.rings.map(ringDirections).filter((ring) => ring.length >= 9);
+  const rings = field.rings
+    .map(ringDirections)
+    .filter((ring) => ring.length >= 9)
+    .map((ring) => simplerRing(ring, TOLERANCE_DEG, LONGEST_DEG));
   const all = rings.flatMap((ring) => Array.from(ring));
-  const extent = lateralExtent(frame, all);
+  const look = lookAt(field, all);
+  const frame = fieldFrame(look.raDeg, look.decDeg, look.positionAngleDeg);
   const [low, high] = angles(frame, all);
   const inPlane = (angle: number): Vec3 => outOfFrame(frame, [Math.cos(angle), Math.sin(angle), 0]);
   const corners = rings.flatMap(cornersOf);
+  const cap = triangulateRings(rings, field.radiusDeg < 40 ? FINE_DEG : COARSE_DEG);
   return {
     name: field.name ?? '',
-    centre,
+    centre: frame[0],
     frame,
     rings,
-    extent,
-    mesh: shellMesh(triangulateRings(rings), rings),
+    extent: lateralExtent(frame, all),
+    mesh: shellMesh(cap, rings),
     corners: corners.length >= 3 && corners.length <= MOST_CORNERS ? corners : extremes(frame, all),
     upper: inPlane(high),
     lower: inPlane(low),
-    north: northIn(field.positionAngleDeg),
+    north: northIn(look.positionAngleDeg),
+    surrounds:
+      rings.length === 0 || all.some((_, i) => i % 3 === 0 && facing(frame, all, i) < SIDEWAYS_COSINE),
   };
+}
+
+/** Directions farther from the line of sight than this have no place beside the edges of a cone. */
+const SIDEWAYS_COSINE = Math.cos((82 * Math.PI) / 180);
+
+const facing = (frame: Frame, all: readonly number[], i: number): number =>
+  frame[0][0] * all[i]! + frame[0][1] * all[i + 1]! + frame[0][2] * all[i + 2]!;
+
+/** Where to look: at the field's centre; for one that has none of its own, at the middle of its outline if it has one. */
+function lookAt(field: FieldInput, all: readonly number[]) {
+  const given = {
+    raDeg: field.centreRaDeg,
+    decDeg: field.centreDecDeg,
+    positionAngleDeg: field.positionAngleDeg,
+  };
+  if (field.radiusDeg < 90 || all.length === 0) return given;
+  let [x, y, z] = [0, 0, 0];
+  for (let i = 0; i < all.length; i += 3) {
+    x += all[i]!;
+    y += all[i + 1]!;
+    z += all[i + 2]!;
+  }
+  const length = Math.hypot(x, y, z);
+  // An outline on all sides has no middle.
+  if (length < 0.25 * (all.length / 3)) return given;
+  const raDeg = (Math.atan2(y, x) * 180) / Math.PI;
+  return { raDeg, decDeg: (Math.asin(z / length) * 180) / Math.PI, positionAngleDeg: 90 };
 }
 
 /** The long axis stands at the position angle from north, so north stands at minus that angle from it. */

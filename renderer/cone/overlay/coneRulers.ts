@@ -54,7 +54,7 @@ const axisMiddle = (pen: Pen, scene: OverlayScene, lane: PaintedLane): Point => 
 export const PINNED_TOP_PX = 30;
 const PINNED_REDSHIFT_PX = 62;
 const PINNED_COMOVING_PX = 30;
-/** Room under the straight ruler for its numbers. */
+/** Room beside a ruler for its numbers. */
 const NUMBERS_PX = 24;
 
 /**
@@ -62,20 +62,27 @@ const NUMBERS_PX = 24;
  * to the axis. What has left the stage is drawn straight along its border instead: distances are read on the axis.
  */
 function paintAlignedRulers(pen: Pen, scene: OverlayScene, first: PaintedLane, last: PaintedLane): void {
-  const low = last.lift + last.shape.extent.alongMin * last.sidewaysFactor;
-  const natural = project(scene.pixels, 0, low - COMOVING_DROP_PX * scene.unitsPerPixel, 0)?.[1] ?? 0;
   const upper = !upperIsPinned(pen, scene);
   const lower = shareOnStage(pen, scene, last, last.shape.lower) > 0.4;
-  const below = lower && natural <= pen.height - NUMBERS_PX;
-  const comovingAt = below ? natural : pen.height - PINNED_COMOVING_PX;
+  const comovingAt = comovingRulerY(pen, scene);
+  const below = comovingAt < pen.height - PINNED_COMOVING_PX;
   if (!upper) pen.veil(0, PINNED_TOP_PX + 6);
-  if (!lower || !below)
-    pen.veil(pen.height - (lower ? PINNED_COMOVING_PX : PINNED_REDSHIFT_PX) - 6, pen.height);
+  if (!below) pen.veil(pen.height - (lower ? PINNED_COMOVING_PX : PINNED_REDSHIFT_PX) - 6, pen.height);
   straight(pen, scene, last, 'comoving', comovingAt, pen.height / 2);
   if (upper) paintEdge(pen, scene, first, first.shape.upper, 'lookback');
   else straight(pen, scene, first, 'lookback', PINNED_TOP_PX, pen.height / 2);
   if (lower) paintEdge(pen, scene, last, last.shape.lower, 'redshift');
   else straight(pen, scene, last, 'redshift', pen.height - PINNED_REDSHIFT_PX, pen.height / 2);
+}
+
+/** Height of the straight comoving ruler, side-on: below the cone, or along the border when the cone has left the stage. */
+export function comovingRulerY(pen: Pen, scene: OverlayScene): number {
+  const pinned = pen.height - PINNED_COMOVING_PX;
+  const last = scene.lanes.at(-1);
+  if (!last || shareOnStage(pen, scene, last, last.shape.lower) <= 0.4) return pinned;
+  const low = last.lift + last.shape.extent.alongMin * last.sidewaysFactor;
+  const y = project(scene.pixels, 0, low, 0)?.[1] ?? pen.height;
+  return Math.min(pinned, y + COMOVING_DROP_PX);
 }
 
 /** Whether the upper edge has left the stage, so that its ruler runs along the border. */
@@ -232,8 +239,8 @@ export function paintObserver(
   if (!named) return;
   const half = pen.measure('observer') / 2;
   const places = [
-    [half + 10, -16],
-    [half + 10, 16],
+    [half + 8, -24],
+    [half + 8, 24],
     [-half - 12, 0],
     [0, 18],
     [0, -18],

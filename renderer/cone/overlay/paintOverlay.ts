@@ -1,4 +1,4 @@
-import { compassOf, PINNED_TOP_PX, paintCone, upperIsPinned } from './coneRulers.ts';
+import { comovingRulerY, compassOf, PINNED_TOP_PX, paintCone, upperIsPinned } from './coneRulers.ts';
 import { paintMarks } from './marks.ts';
 import type { Pen } from './pen.ts';
 import { paintRings } from './ringRulers.ts';
@@ -14,7 +14,7 @@ export function paintOverlay(pen: Pen, scene: OverlayScene): void {
     const x = 18 + pen.measure(line) / 2;
     pen.text(line, x, top + 17 * i, pen.theme.inkMuted, { gap: 0 });
   }
-  const rings = scene.lanes.length > 0 && scene.lanes.every((lane) => lane.shape.rings.length === 0);
+  const rings = scene.lanes.length > 0 && scene.lanes.every((lane) => lane.shape.surrounds);
   // Told before the rulers so that no number can take its place.
   paintScaleBar(pen, scene);
   if (rings || scene.lanes.length === 0) paintRings(pen, scene);
@@ -27,7 +27,11 @@ export function paintOverlay(pen: Pen, scene: OverlayScene): void {
 function paintScaleBar(pen: Pen, scene: OverlayScene): void {
   if (scene.reading !== 'comoving' || scene.perspective) return;
   const mpcPerPixel = scene.unitsPerPixel * scene.farMpc;
-  // Side-on, the comoving ruler runs along the bottom: the bar stands above it.
-  const y = pen.height - (scene.aligned ? 74 : 20);
+  let y = pen.height - 20;
+  if (scene.aligned) {
+    // Clear of the comoving ruler: at the bottom where there is room below it, else above it.
+    const ruler = comovingRulerY(pen, scene);
+    if (pen.height - ruler < 66) y = ruler - (ruler > pen.height - 40 ? 44 : 34);
+  }
   drawScaleBar(pen, y, mpcPerPixel, scene.scale.lengthUnitMpc, (mpc) => scene.scale.formatLength(mpc));
 }

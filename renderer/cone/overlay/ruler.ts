@@ -58,10 +58,13 @@ export function drawRuler(pen: Pen, ruler: Ruler): void {
     const out = 9 + half;
     pen.text(tick.text, p![0] + normal[0] * out, p![1] + normal[1] * out, pen.theme.inkMuted, { gap: 4 });
   }
-  if (ruler.inline) drawTitle(pen, ruler, start, end, along, normal, length, NUMBER_OUT_PX);
+  // Where no gap between numbers is wide enough the title goes outside after all.
+  if (ruler.inline && !drawTitle(pen, ruler, start, end, along, normal, length, NUMBER_OUT_PX)) {
+    drawTitle(pen, ruler, start, end, along, normal, length, TITLE_OUT_PX);
+  }
 }
 
-/** The title runs along the ruler, outside its numbers, where the ruler is on the stage. */
+/** The title runs along the ruler where the ruler is on the stage; says whether there was room. */
 function drawTitle(
   pen: Pen,
   ruler: Ruler,
@@ -71,11 +74,11 @@ function drawTitle(
   normal: Point,
   length: number,
   out: number,
-): void {
-  if (ruler.title === '') return;
+): boolean {
+  if (ruler.title === '') return true;
   const sizePx = 11;
   const width = pen.measure(ruler.title, sizePx);
-  if (length < width + 60) return;
+  if (length < width + 60) return false;
   const [from, to] = shareOnStage(pen, start, end);
   for (const place of TITLE_SHARES) {
     const share = from + place * (to - from);
@@ -98,8 +101,9 @@ function drawTitle(
     pen.font(sizePx);
     pen.write(ruler.title, 0, 0, pen.theme.inkMuted);
     context.restore();
-    return;
+    return true;
   }
+  return false;
 }
 
 /** The part of a line that lies on the stage, as shares of its length (Liang and Barsky's clipping). */

@@ -6,7 +6,7 @@ import type { PointPart } from './pointLayer.ts';
 export interface Crowding {
   /** Galaxies on the stage, estimated. */
   readonly onStage: number;
-  /** Galaxies a CSS pixel where the densest hundredth of them stands, and where the thinnest tenth does. */
+  /** Galaxies a CSS pixel where the densest three in a thousand of them stand, and where the thinnest tenth does. */
   readonly densestPerPixel: number;
   readonly thinnestPerPixel: number;
 }
@@ -54,7 +54,7 @@ export function crowding(arrays: PointArrays, parts: readonly PointPart[], viewp
   const bins = histogram(visited);
   return {
     onStage,
-    densestPerPixel: percentile(bins, 0.99 * onStage) / CELL_PX ** 2,
+    densestPerPixel: percentile(bins, 0.997 * onStage) / CELL_PX ** 2,
     thinnestPerPixel: percentile(bins, 0.1 * onStage) / CELL_PX ** 2,
   };
 }

@@ -75,7 +75,7 @@ export function toneTable<T extends Uint32Array>(tone: Tone, table: T): T {
   for (let i = 0; i < LIGHT_STEPS; i++) {
     const cover = i === 0 ? 0 : strength(lightOfIndex(i), tone.stretch, tone.single, tone.full);
     // Toward full strength the colour itself begins to glow.
-    const burn = (0.75 * Math.max(0, cover - 0.62)) / 0.38;
+    const burn = (0.65 * Math.max(0, cover - 0.7)) / 0.3;
     share[i] = cover * (1 - burn);
     for (let k = 0; k < 3; k++) {
       fixed[k]![i] = tone.background[k]! * (1 - cover) + cover * burn * tone.glow[k]! + 0.5;

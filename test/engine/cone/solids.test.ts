@@ -1,5 +1,10 @@
 import { describe, expect, it } from 'vitest';
-import { depthInside, ringDirections } from '../../../renderer/cone/geometry/rings.ts';
+import {
+  depthInside,
+  pointOutside,
+  ringDirections,
+  simplerRing,
+} from '../../../renderer/cone/geometry/rings.ts';
 import { shellMesh } from '../../../renderer/cone/geometry/shellMesh.ts';
 import { type SphereMesh, triangulateRings } from '../../../renderer/cone/geometry/triangulate.ts';
 import { direction } from '../../../renderer/cone/geometry/vector.ts';
@@ -133,5 +138,55 @@ describe('the inside of rings', () => {
     expect(depthInside(box, direction(149.9, -0.1))).toBeLessThan(0);
     expect(depthInside(box, direction(160.1, 10.1))).toBeLessThan(0);
     expect(depthInside(box, direction(159.9, 9.9))).toBeGreaterThan(0);
+  });
+});
+
+describe('a simpler ring', () => {
+  it.each([
+    ['a box', boxRing(150, 170, 40, 50)],
+    ['a box on the equator', boxRing(150, 170, -1, 9)],
+    ['a cap', capRing(20, 30, 12)],
+    ['a wide cap', capRing(20, 30, 70)],
+  ])('of %s has fewer points and the same outline', (_, ring) => {
+    const full = ringDirections(ring);
+    const simple = simplerRing(full, 0.03, 2.5);
+    expect(simple.length).toBeLessThan(0.6 * full.length);
+    // Every point that was left out lies within the tolerance of the new outline (chords of radians).
+    for (let i = 0; i < full.length; i += 3) {
+      const depth = depthInside([simple], [full[i]!, full[i + 1]!, full[i + 2]!]);
+      expect(Math.abs(depth)).toBeLessThan((0.0301 * Math.PI) / 180);
+    }
+    const limit = Math.cos((2.51 * Math.PI) / 180);
+    for (let i = 0; i < simple.length; i += 3) {
+      const j = (i + 3) % simple.length;
+      const cosine =
+        simple[i]! * simple[j]! + simple[i + 1]! * simple[j + 1]! + simple[i + 2]! * simple[j + 2]!;
+      expect(cosine).toBeGreaterThan(limit);
+    }
+  });
+
+  it('keeps corners', () => {
+    const box = boxRing(0, 10, 0, 10);
+    const simple = simplerRing(ringDirections(box), 0.03, 2.5);
+    for (const [ra, dec] of [
+      [0, 0],
+      [10, 0],
+      [10, 10],
+      [0, 10],
+    ] as const) {
+      const [x, y, z] = direction(ra, dec);
+      let nearest = 9;
+      for (let i = 0; i < simple.length; i += 3) {
+        nearest = Math.min(nearest, Math.hypot(simple[i]! - x, simple[i + 1]! - y, simple[i + 2]! - z));
+      }
+      expect(nearest).toBeLessThan(1e-12);
+    }
+  });
+});
+
+describe('a point outside', () => {
+  it.each(SKIES.filter((sky) => sky.rings.length > 0))('of $name is outside', ({ rings }) => {
+    const directions = rings.map(ringDirections);
+    expect(depthInside(directions, pointOutside(directions))).toBeLessThan(0);
   });
 });

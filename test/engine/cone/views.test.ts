@@ -18,6 +18,7 @@ import {
   turned,
   zoomed,
 } from '../../../renderer/cone/geometry/poses.ts';
+import { prepareField } from '../../../renderer/cone/geometry/preparedField.ts';
 import {
   clipMatrix,
   compose,
@@ -27,6 +28,7 @@ import {
   project,
 } from '../../../renderer/cone/geometry/projection.ts';
 import { cross, direction, dot, type Frame, norm, subtract } from '../../../renderer/cone/geometry/vector.ts';
+import { boxRing, capRing } from './skies.ts';
 
 const VIEWPORT = { widthPx: 1280, heightPx: 500 };
 const INSETS = { leftPx: 56, rightPx: 28 };
@@ -280,5 +282,49 @@ describe('the view that fits', () => {
     );
     // RA 90 is up, seen from the north.
     expect(p![1]).toBeLessThan(200);
+  });
+});
+
+describe('a prepared field', () => {
+  const field = (rings: ReturnType<typeof boxRing>[], radiusDeg: number, ra = 0, dec = 0) =>
+    prepareField({ centreRaDeg: ra, centreDecDeg: dec, radiusDeg, positionAngleDeg: 90, rings });
+
+  it('has the edges of its cone where the outline ends', () => {
+    const box = field([boxRing(150, 170, -1, 9)], 11.2, 160, 4);
+    expect(dot(box.upper, box.frame[0])).toBeCloseTo(Math.cos((10 * Math.PI) / 180), 3);
+    expect(dot(box.upper, box.frame[1])).toBeGreaterThan(0.17);
+    expect(dot(box.lower, box.frame[1])).toBeLessThan(-0.17);
+    expect(box.corners).toHaveLength(4);
+    expect(box.surrounds).toBe(false);
+  });
+
+  it('finds no corners in a round outline, but its extremes', () => {
+    expect(field([capRing(20, 30, 5)], 5, 20, 30).corners).toHaveLength(4);
+  });
+
+  it('looks at the middle of a wide outline, and around where it lies on all sides', () => {
+    const wide = field([boxRing(120, 240, -10, 40)], 180);
+    expect(dot(wide.centre, direction(180, 20))).toBeGreaterThan(0.9);
+    expect(wide.surrounds).toBe(false);
+    const belt = field([capRing(0, 90, 70, true), capRing(0, -90, 70, true)], 180);
+    expect(belt.surrounds).toBe(true);
+    expect(field([], 180).surrounds).toBe(true);
+  });
+
+  it('keeps north where it is on the sky', () => {
+    for (const angle of [0, 30, 90, 137]) {
+      const prepared = prepareField({
+        centreRaDeg: 80,
+        centreDecDeg: 20,
+        radiusDeg: 2,
+        positionAngleDeg: angle,
+        rings: [capRing(80, 20, 2)],
+      });
+      const step = subtract(direction(80, 20.01), direction(80, 20));
+      const along = dot(step, prepared.frame[1]) / norm(step);
+      const across = dot(step, prepared.frame[2]) / norm(step);
+      expect(prepared.north[1]).toBeCloseTo(along, 3);
+      expect(prepared.north[2]).toBeCloseTo(across, 3);
+    }
   });
 });

@@ -64,7 +64,7 @@ const scene = text('scene', 'demo');
 const count = number('n', 60000);
 const far = 5200;
 const base = { raDeg: 160, decDeg: 4, widthDeg: 20, heightDeg: 10, nearMpc: 1900, farMpc: far };
-const SCENES: Record<string, { patches: Patch[]; wide?: boolean; fields?: boolean }> = {
+const SCENES: Record<string, { patches: Patch[]; wide?: boolean; fields?: boolean; belt?: boolean }> = {
   demo: { patches: [{ ...base, count }] },
   needle: { patches: [{ ...base, widthDeg: 2, heightDeg: 1.4, count }] },
   several: {
@@ -82,6 +82,11 @@ const SCENES: Record<string, { patches: Patch[]; wide?: boolean; fields?: boolea
   wide: {
     patches: [{ ...base, raDeg: 180, decDeg: 30, widthDeg: 130, heightDeg: 55, nearMpc: 60, count }],
     wide: true,
+  },
+  belt: {
+    patches: [{ ...base, raDeg: 180, decDeg: 0, widthDeg: 360, heightDeg: 180, nearMpc: 20, count }],
+    wide: true,
+    belt: true,
   },
   sixty: { patches: [{ ...base, raDeg: 180, decDeg: 30, widthDeg: 60, heightDeg: 40, nearMpc: 60, count }] },
 };
@@ -143,10 +148,19 @@ cone.setTheme(THEMES[text('theme', 'dark')]!);
 cone.setAxisWindow({ min: 0, max: 1 }, { leftPx: 56, rightPx: 28 });
 const scale = makeScale(reading);
 cone.setRadialScale(scale, { min: 0, max: scale.table.radius.at(-1)! });
+
+/** A parallel of declination, interior to its north or south. */
+function parallel(decDeg: number, northward: boolean) {
+  const raDeg = Float64Array.from({ length: 720 }, (_, i) => (northward ? i / 2 : 360 - i / 2));
+  return { raDeg, decDeg: raDeg.map(() => decDeg) };
+}
+
+const wholeSky = { centreRaDeg: 0, centreDecDeg: 0, radiusDeg: 180, positionAngleDeg: 90 };
 cone.setFootprint({
-  fields:
-    chosen.fields === false
-      ? [{ centreRaDeg: 0, centreDecDeg: 0, radiusDeg: 180, positionAngleDeg: 90, rings: [] }]
+  fields: chosen.belt
+    ? [{ ...wholeSky, rings: [parallel(-20, true), parallel(20, false)] }]
+    : chosen.fields === false
+      ? []
       : chosen.patches.map((patch, i) =>
           boxField(patch, chosen.patches.length > 1 ? ['Wide', 'Deep A', 'Deep B'][i]! : ''),
         ),
