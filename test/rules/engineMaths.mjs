@@ -2,7 +2,7 @@
 import { readdirSync, readFileSync } from 'node:fs';
 import { join, sep } from 'node:path';
 import { fileURLToPath } from 'node:url';
-import { parseAst } from 'rolldown/parseAst';
+import { parseAst } from 'vite';
 
 const root = fileURLToPath(new URL('../..', import.meta.url));
 const HOME = 'shared-core/numerics/elementary';
