@@ -21,7 +21,9 @@ export function offeredCaption(numbers: PictureNumbers, notes: readonly string[]
   const { study, facts } = numbers;
   const account = facts.selected?.account;
   const of = account ? ` of ${thousands(account.rowsRead)} rows read` : '';
-  const parts = [`${galaxiesText(numbers)}${of}.`, ...notes.map(sentence)];
+  const beyond = (facts.selected?.sample.count ?? 0) - numbers.galaxiesWithin;
+  const hidden = beyond > 0 ? `; ${thousands(beyond)} lie beyond the depth shown` : '';
+  const parts = [`${galaxiesText(numbers)}${of}${hidden}.`, ...notes.map(sentence)];
   const cuts = study.cuts.map(
     ({ column, min, max }) => `${min === null ? '' : `${min} ≤ `}${column}${max === null ? '' : ` ≤ ${max}`}`,
   );
@@ -57,5 +59,8 @@ function cosmologyText({ study, cosmology }: PictureNumbers): string {
   if (p.w0 !== -1 || p.wa !== 0) parts.push(`w0 ${digits(p.w0, 5)}, wa ${digits(p.wa, 5)}`);
   const masses = p.neutrinoMassesEv.reduce((sum, mass) => sum + mass, 0);
   parts.push(p.tCmbK === 0 ? 'no radiation' : `neutrino masses ${digits(masses, 3)} eV`);
-  return `Cosmology: ${set === null ? '' : `${set.name}, `}${parts.join(', ')}.`;
+  return `Cosmology: ${set === null ? '' : `${set.name}, `}${parts.map(unbroken).join(', ')}.`;
 }
+
+/** A name and its number stay on one line. */
+const unbroken = (text: string): string => text.replace(' ', '\u00a0');

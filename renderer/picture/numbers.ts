@@ -3,7 +3,7 @@ import { type Cosmology, createCosmology } from '../../shared-core/cosmology/cos
 import type { PictureOptions } from '../../shared-core/picture/options.ts';
 import type { ShownUnits } from '../../shared-core/report/quantity.ts';
 import { radialAxis } from '../../shared-core/shells/radial.ts';
-import { sortSample } from '../../shared-core/shells/sample.ts';
+import { rankBelow, type SortedSample, sortSample } from '../../shared-core/shells/sample.ts';
 import type { ShellStatistics } from '../../shared-core/shells/shell.ts';
 import { shellStatistics } from '../../shared-core/shells/statistics.ts';
 import { compileRegion } from '../../shared-core/sky/compileRegion.ts';
@@ -34,6 +34,8 @@ export interface PictureNumbers {
   readonly units: ShownUnits;
   readonly readings: Readings;
   readonly deepestRedshift: number;
+  /** How many galaxies, sorted by redshift, lie within it. */
+  readonly galaxiesWithin: number;
   readonly footprint: FootprintPicture | null;
   readonly shells: readonly ShellStatistics[];
   readonly shellInputs: readonly ShellInput[];
@@ -65,15 +67,17 @@ export function pictureNumbers(options: PictureOptions, facts: PictureFacts): Pi
           p0Mpc3PerH3: study.p0Mpc3PerH3,
         });
   const units = { perH: study.look.perH, h: cosmology.h };
-  const deepest = Math.max(sample.count === 0 ? 0 : sample.redshift[sample.count - 1]!, edges.at(-1) ?? 0);
-  const { colours, colourBy } = coloursOf(options, facts);
+  const deepest = depthOf(options, sample, edges);
+  const galaxiesWithin = rankBelow(sample, deepest, true);
+  const { colours, colourBy } = coloursOf(options, facts, galaxiesWithin);
   return {
     study,
     facts,
     cosmology,
     units,
     readings: readingsOf(cosmology, units),
-    deepestRedshift: deepest > 0 ? deepest : 1,
+    deepestRedshift: deepest,
+    galaxiesWithin,
     footprint,
     shells,
     shellInputs: coneShells(shells),
@@ -93,6 +97,22 @@ export function pictureScale(numbers: PictureNumbers, lengthUnits: number) {
   return { axis, window, scale };
 }
 
+/** Where the picture ends. @throws Refusal ('use') for a depth that would cut a shell */
+function depthOf(options: PictureOptions, sample: SortedSample, edges: readonly number[]): number {
+  const last = options.shells ? (edges.at(-1) ?? 0) : 0;
+  const wanted = options.depthRedshift;
+  if (wanted !== null) {
+    if (wanted < last)
+      throw new Refusal(
+        `The picture was to end at redshift ${wanted}, within the shells, which reach to ${last}: give a greater depth, or leave the shells out.`,
+        'use',
+      );
+    return wanted;
+  }
+  const deepest = Math.max(sample.count === 0 ? 0 : sample.redshift[sample.count - 1]!, edges.at(-1) ?? 0);
+  return deepest > 0 ? deepest : 1;
+}
+
 function givenFootprint(study: Study): FootprintPicture | null {
   if (study.region === null) return null;
   const made = compileRegion(study.region);
@@ -103,17 +123,21 @@ function givenFootprint(study: Study): FootprintPicture | null {
 function coloursOf(
   options: PictureOptions,
   facts: PictureFacts,
+  within: number,
 ): Pick<PictureNumbers, 'colours' | 'colourBy'> {
   const { selected, background, density, study } = facts;
   const byShell: Colours = { input: { kind: 'shell' }, legend: null };
   if (selected === null || background === null) return { colours: byShell, colourBy: 'shell' };
   const wanted = options.colourBy ?? study.look.colourBy;
-  const found = colouring(wanted, selected, background.lookbackGyr, density);
+  // The colours span what is shown.
+  const { sample } = selected;
+  const shown = { ...selected, sample: { ...sample, redshift: sample.redshift.subarray(0, within) } };
+  const found = colouring(wanted, shown, background.lookbackGyr.subarray(0, within), density);
   if (found !== null) return { colours: found, colourBy: wanted };
   if (options.colourBy !== null)
     throw new Refusal(
       `Galaxies were to be coloured by ${wanted}, which this catalogue has no values for: choose redshift, lookback or shell.`,
       'use',
     );
-  return { colours: colouring('redshift', selected, null, null) ?? byShell, colourBy: 'redshift' };
+  return { colours: colouring('redshift', shown, null, null) ?? byShell, colourBy: 'redshift' };
 }

@@ -22,7 +22,7 @@ const DARK: PictureTheme = {
   fontFamily: FONT_FAMILY,
   glow: [255, 250, 240],
   shellAlpha: 0.075,
-  exposureStops: 0.2,
+  exposureStops: 0.6,
 };
 
 const PAPER: PictureTheme = {

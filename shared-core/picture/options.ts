@@ -57,6 +57,8 @@ export const pictureOptionsSchema = z.strictObject({
   /** Null takes the study's choice. */
   colourBy: z.enum(COLOUR_CHOICES).nullable().default(null),
   slab: slab.nullable().default(null),
+  /** Redshift at which the picture ends; null shows everything. */
+  depthRedshift: z.number().positive().max(1100).nullable().default(null),
   transparent: z.boolean().default(false),
 });
 

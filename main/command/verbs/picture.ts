@@ -38,6 +38,7 @@ interface PictureVerbOptions {
   colour?: string;
   dec?: number[];
   greatCircle?: number[];
+  depth?: number;
   transparent?: true;
   catalogue?: string;
   overwrite?: true;
@@ -84,6 +85,11 @@ export function addPicture(program: Command, say: (text: string) => void, window
       '--great-circle <ra,dec,thickness>',
       'slab of the wedge along the great circle with this pole, degrees',
       numberList('--great-circle'),
+    )
+    .option(
+      '--depth <z>',
+      'redshift at which the picture ends; the deepest galaxy or shell if not given',
+      oneNumber('--depth'),
     )
     .option('--transparent', 'leave the ground clear')
     .option('--catalogue <file>', "the study's catalogue, where it was moved")
@@ -144,6 +150,7 @@ function optionsOf(options: PictureVerbOptions): PictureOptions {
     exposureStops: options.exposure,
     colourBy: options.colour ?? null,
     slab: slabOf(options),
+    depthRedshift: options.depth ?? null,
     transparent: options.transparent === true,
   });
 }

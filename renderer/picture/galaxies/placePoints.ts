@@ -12,6 +12,9 @@ import { crowdingOf } from './crowding.ts';
 const ROOM_SHARE = 2.5;
 /** Print shows finer points than a screen. */
 const FINER = 0.8;
+/** Small sets have larger points: each galaxy counts. */
+const LARGER = 0.5;
+const SMALL_SET = 15_000;
 
 /** The galaxies of a view with their colours, and the light that suits them. */
 export function placePoints(
@@ -28,6 +31,9 @@ export function placePoints(
   const value = new Uint8Array(count);
   if (background && count > 0) {
     drawing.placeAll(x, y);
+    // Sorted by redshift: what lies beyond the picture's depth is the end of the list.
+    x.fill(Number.NaN, numbers.galaxiesWithin);
+    y.fill(Number.NaN, numbers.galaxiesWithin);
     const { input } = numbers.colours;
     const far = background.comovingMpc[count - 1]!;
     const index = indexer(input, numbers.shellInputs, radiusTable([0, far > 0 ? far : 1], [0, 1]));
@@ -36,7 +42,8 @@ export function placePoints(
   const crowd = crowdingOf(x, y);
   // Points are made for the room that they have, which in a picture is often a part of the box.
   const side = Math.sqrt(Math.min(box.width * box.height, ROOM_SHARE * crowd.area));
-  const diameter = FINER * pointSizePx(crowd.onStage, { widthPx: side, heightPx: side });
+  const size = FINER + LARGER * Math.exp(-crowd.onStage / SMALL_SET);
+  const diameter = size * pointSizePx(crowd.onStage, { widthPx: side, heightPx: side });
   return {
     count,
     x,

@@ -48,7 +48,7 @@ function offeredSlab(decDeg: readonly number[]): Extract<SlabOption, { kind: 'de
   return { kind: 'declination', decMinDeg: round(middle - half), decMaxDeg: round(middle + half) };
 }
 
-const round = (deg: number): number => Number(deg.toFixed(3));
+const round = (deg: number): number => Number(deg.toFixed(1));
 
 function byDeclination(
   { decMinDeg, decMaxDeg }: Extract<SlabOption, { kind: 'declination' }>,

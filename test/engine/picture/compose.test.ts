@@ -174,3 +174,18 @@ it('moves light at 45 degrees in the light-cone diagram', () => {
   // The outline of a cone tilted by 0.13 is steeper by less than one part in a hundred.
   expect(Math.abs(Math.abs((x2! - x1!) / (y2! - y1!)) - 1)).toBeLessThan(0.01);
 });
+
+it('ends at the depth asked for, says what lies beyond, and spreads the colours over what is shown', () => {
+  const options = small({ depthRedshift: 1, shells: false });
+  const scene = composePicture(options, facts);
+  const beyond = facts.selected!.sample.redshift.filter((z) => z > 1).length;
+  expect(scene.points.x.filter((x) => !Number.isNaN(x))).toHaveLength(scene.points.count - beyond);
+  const words = texts(scene).map((item) => item.text);
+  expect(words.join(' ')).toContain(
+    `${String(beyond).replace(/(?=\d{3}$)/, '\u202f')} lie beyond the depth shown`,
+  );
+  expect(words).toContain('1.00');
+  expect(() => composePicture(small({ depthRedshift: 1 }), facts)).toThrow(
+    /within the shells, which reach to 2/,
+  );
+});
