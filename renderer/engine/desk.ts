@@ -5,6 +5,7 @@ import { type Preview, previewCatalogue } from '../../shared-core/catalogue/prev
 import { select } from '../../shared-core/catalogue/select.ts';
 import { setAsideCsv } from '../../shared-core/catalogue/setAsideCsv.ts';
 import { createCosmology } from '../../shared-core/cosmology/cosmology.ts';
+import { cos, sin } from '../../shared-core/numerics/elementary/elementary.ts';
 import { localDensity } from '../../shared-core/shells/localDensity.ts';
 import { type SortedSample, sortSample } from '../../shared-core/shells/sample.ts';
 import { compileRegion } from '../../shared-core/sky/compileRegion.ts';
@@ -170,10 +171,10 @@ export class EngineDesk {
       const row = order[i]!;
       const ra = (catalogue.raDeg[row]! * Math.PI) / 180;
       const dec = (catalogue.decDeg[row]! * Math.PI) / 180;
-      const across = Math.cos(dec);
-      directions.x[i] = across * Math.cos(ra);
-      directions.y[i] = across * Math.sin(ra);
-      directions.z[i] = Math.sin(dec);
+      const across = cos(dec);
+      directions.x[i] = across * cos(ra);
+      directions.y[i] = across * sin(ra);
+      directions.z[i] = sin(dec);
       raDeg[i] = catalogue.raDeg[row]!;
       decDeg[i] = catalogue.decDeg[row]!;
       if (magnitude !== null) magnitude[i] = catalogue.magnitude![row]!;
