@@ -112,7 +112,8 @@ describe('history', () => {
       moveEdge(1, 0.5),
       change('P0', { p0Mpc3PerH3: 4000 }),
     ];
-    const states = edits.reduce((all, edit) => [...all, perform(all.at(-1)!, edit)], [start]);
+    const states = [start];
+    for (const edit of edits) states.push(perform(states.at(-1)!, edit));
     let history = states.at(-1)!;
     for (let i = states.length - 2; i >= 0; i--) {
       history = undo(history);
