@@ -37,16 +37,17 @@ const COARSE_DEG = 6;
 
 /** Frame, outline, solid and edges of a field. */
 export function prepareField(field: FieldInput): PreparedField {
-  const rings = field.rings
-    .map(ringDirections)
-    .filter((ring) => ring.length >= 9)
-    .map((ring) => simplerRing(ring, TOLERANCE_DEG, LONGEST_DEG));
+  const outline = field.rings.map(ringDirections).filter((ring) => ring.length >= 9);
+  const rings = outline.map((ring) => simplerRing(ring, TOLERANCE_DEG, LONGEST_DEG));
   const all = rings.flatMap((ring) => Array.from(ring));
   const look = lookAt(field, all);
   const frame = fieldFrame(look.raDeg, look.decDeg, look.positionAngleDeg);
   const [low, high] = angles(frame, all);
   const inPlane = (angle: number): Vec3 => outOfFrame(frame, [Math.cos(angle), Math.sin(angle), 0]);
-  const corners = rings.flatMap(cornersOf);
+  // Before points are left out: a small circle of few points would have a corner at each.
+  const corners = outline.flatMap(cornersOf);
+  const surrounds =
+    rings.length === 0 || all.some((_, i) => i % 3 === 0 && facing(frame, all, i) < SIDEWAYS_COSINE);
   const cap = triangulateRings(rings, field.radiusDeg < 40 ? FINE_DEG : COARSE_DEG);
   return {
     name: field.name ?? '',
@@ -55,13 +56,19 @@ export function prepareField(field: FieldInput): PreparedField {
     rings,
     extent: lateralExtent(frame, all),
     mesh: shellMesh(cap, rings),
-    corners: corners.length >= 3 && corners.length <= MOST_CORNERS ? corners : extremes(frame, all),
+    corners: edgesOf(corners, surrounds, () => extremes(frame, all)),
     upper: inPlane(high),
     lower: inPlane(low),
     north: northIn(look.positionAngleDeg),
     surrounds:
       rings.length === 0 || all.some((_, i) => i % 3 === 0 && facing(frame, all, i) < SIDEWAYS_COSINE),
   };
+}
+
+/** Edges that run outward: at the corners where there are a few, else at the extremes, none around the observer. */
+function edgesOf(corners: readonly Vec3[], surrounds: boolean, extreme: () => Vec3[]): readonly Vec3[] {
+  if (corners.length >= 3 && corners.length <= MOST_CORNERS) return corners;
+  return surrounds ? [] : extreme();
 }
 
 /** Directions farther from the line of sight than this have no place beside the edges of a cone. */

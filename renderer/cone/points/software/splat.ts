@@ -37,18 +37,31 @@ const f = Math.fround;
  */
 export function splat(points: PointArrays, from: number, to: number, how: Splat, sums: Float32Array): void {
   const { x, y, z, radius, value } = points;
+  const { side, discs } = how;
   const m = how.matrix;
-  const [a0, a1, a2, a3] = [m[0]!, m[1]!, m[2]!, m[3]!];
-  const [b0, b1, b2, b3] = [m[4]!, m[5]!, m[6]!, m[7]!];
-  const [c0, c1, c2, c3] = [m[8]!, m[9]!, m[10]!, m[11]!];
+  const a0 = m[0]!;
+  const a1 = m[1]!;
+  const a2 = m[2]!;
+  const a3 = m[3]!;
+  const b0 = m[4]!;
+  const b1 = m[5]!;
+  const b2 = m[6]!;
+  const b3 = m[7]!;
+  const c0 = m[8]!;
+  const c1 = m[9]!;
+  const c2 = m[10]!;
+  const c3 = m[11]!;
   const nearest = f(0.02);
   const byte = f(1 / 255);
   const stride = strideOf(how.width);
-  const half = how.side / 2;
-  const [right, bottom] = [how.width + half, how.height + half];
+  const half = side / 2;
+  const right = how.width + half;
+  const bottom = how.height + half;
+  const shift = f(0.5 - half);
   const full = f(how.light);
-  const dimmed = f(f(how.light) * f(how.dim));
-  const [eMin, eMax] = [f(how.emphasisMin), f(how.emphasisMax)];
+  const dimmed = f(full * f(how.dim));
+  const eMin = f(how.emphasisMin);
+  const eMax = f(how.emphasisMax);
   for (let s = from; s < to; s++) {
     const r = radius[s]!;
     const dx = f(x[s]! * r);
@@ -61,36 +74,24 @@ export function splat(points: PointArrays, from: number, to: number, how: Splat,
     if (!(px >= -half && px < right && py >= -half && py < bottom)) continue;
     const light = r >= eMin && r < eMax ? full : dimmed;
     const tinted = f(light * f(value[s]! * byte));
-    if (how.side === 0) {
+    if (side === 0) {
       const i = 2 * (((py | 0) + PAD) * stride + (px | 0) + PAD);
       sums[i]! += light;
       sums[i + 1]! += tinted;
-    } else disc(how, sums, stride, px, py, light, tinted);
-  }
-}
-
-function disc(
-  how: Splat,
-  sums: Float32Array,
-  stride: number,
-  px: number,
-  py: number,
-  light: number,
-  tinted: number,
-): void {
-  const { side, discs } = how;
-  // Left and top pixel of the square whose middle is nearest, and the place between pixels in quarters.
-  const shift = f(0.5 - side / 2);
-  const left = Math.floor(f(px + shift));
-  const top = Math.floor(f(py + shift));
-  const quarterX = f(f(f(px + shift) - left) * 4) | 0;
-  const quarterY = f(f(f(py + shift) - top) * 4) | 0;
-  let d = (quarterY * 4 + quarterX) * side * side;
-  for (let row = 0; row < side; row++) {
-    let i = 2 * ((top + row + PAD) * stride + left + PAD);
-    for (let column = 0; column < side; column++, i += 2, d++) {
-      sums[i]! += f(discs[d]! * light);
-      sums[i + 1]! += f(discs[d]! * tinted);
+      continue;
+    }
+    // Left and top pixel of the square whose middle is nearest, and the place between pixels in quarters.
+    const left = Math.floor(f(px + shift));
+    const top = Math.floor(f(py + shift));
+    const quarterX = f(f(f(px + shift) - left) * 4) | 0;
+    const quarterY = f(f(f(py + shift) - top) * 4) | 0;
+    let d = (quarterY * 4 + quarterX) * side * side;
+    for (let row = 0; row < side; row++) {
+      let i = 2 * ((top + row + PAD) * stride + left + PAD);
+      for (let column = 0; column < side; column++, i += 2, d++) {
+        sums[i]! += f(discs[d]! * light);
+        sums[i + 1]! += f(discs[d]! * tinted);
+      }
     }
   }
 }
