@@ -80,14 +80,14 @@ export class EngineDesk {
     ];
     for (const [stage, stageKey, work] of stages) {
       if (this.#keys[stage] === stageKey) continue;
-      delete this.#keys[stage];
+      // What comes after a stage rests on it: going back to an earlier wish must not find later results still valid.
+      for (const [later] of stages.slice(stages.findIndex(([s]) => s === stage))) delete this.#keys[later];
       this.runs[stage]++;
       try {
         await work();
       } catch (error) {
         if (error instanceof Superseded || this.#wanted !== wish) throw new Superseded();
         this.#around.emit({ kind: 'failed', stage, sentence: sentenceOf(error) });
-        for (const [later] of stages.slice(stages.findIndex(([s]) => s === stage))) delete this.#keys[later];
         return;
       }
       this.#keys[stage] = stageKey;
@@ -307,7 +307,8 @@ function key(...parts: unknown[]): string {
 /** A sentence for any error: memory that ran short is told as such, a defect of ours as one. */
 export function sentenceOf(error: unknown): string {
   if (error instanceof Refusal) return error.message;
-  if (error instanceof RangeError)
+  const short = error instanceof RangeError && !/call stack/i.test(error.message);
+  if (short || (error instanceof Error && error.name === 'DataCloneError'))
     return 'Memory ran short while working on the catalogue: close other programs, or cut the file to the columns and rows you need.';
   return `Something in Conewright failed (${error instanceof Error ? error.message : String(error)}); what you made is kept. Please report it.`;
 }

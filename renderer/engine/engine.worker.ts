@@ -1,3 +1,4 @@
+import { Refusal } from '../../shared-core/base/refusal.ts';
 import { EngineDesk, sentenceOf } from './desk.ts';
 import type { EngineAnswer, EngineEvent, EngineRequest } from './protocol.ts';
 
@@ -8,8 +9,11 @@ const post = (message: EngineEvent | EngineAnswer) => scope.postMessage(message,
 const desk = new EngineDesk({
   emit: post,
   openUrl: async (url) => {
-    const response = await fetch(url);
-    if (!response.ok || response.body === null) throw new Error(`the file answered ${response.status}`);
+    const gone = "The catalogue's file cannot be read any more, it was moved or changed: open it again.";
+    const response = await fetch(url).catch(() => {
+      throw new Refusal(gone);
+    });
+    if (!response.ok || response.body === null) throw new Refusal(gone);
     return response.body as unknown as AsyncIterable<Uint8Array>;
   },
   floats: (length) =>

@@ -18,6 +18,14 @@ export function checkEdges(edges: readonly number[]): readonly number[] {
       `${edges.length === 1 ? 'One shell edge' : 'No shell edge'} came, at least two are needed: give edges such as 0.6,0.8,1.`,
       'use',
     );
+  return checkSomeEdges(edges);
+}
+
+/**
+ * The same for edges in the making: none, or one alone, is no shell yet, but what is there must be usable.
+ * @throws Refusal ('use') unless they are finite, in 0..1100 and strictly increasing
+ */
+export function checkSomeEdges(edges: readonly number[]): readonly number[] {
   if (edges.length - 1 > MOST_SHELLS)
     throw new Refusal(
       `${edges.length - 1} shells were asked for, at most ${MOST_SHELLS} are allowed: give fewer edges.`,

@@ -1,5 +1,5 @@
 import { Refusal } from '../base/refusal.ts';
-import { checkEdges } from '../shells/edges.ts';
+import { checkEdges, checkSomeEdges } from '../shells/edges.ts';
 import type { Study } from './schema.ts';
 
 /** A change of the study. Edits with the same `merge` text in a row count as one step of undo (a drag, typing). */
@@ -48,7 +48,7 @@ export function addEdge(z: number): Edit {
       if (study.edges.includes(z))
         throw new Refusal(`There is an edge at redshift ${z} already: give another.`, 'use');
       const edges = [...study.edges, z].sort((a, b) => a - b);
-      if (edges.length > 1) checkEdges(edges);
+      checkSomeEdges(edges);
       return { ...study, edges };
     },
   };

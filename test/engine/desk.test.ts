@@ -133,3 +133,28 @@ describe('the engine does what the study asks, and nothing twice', () => {
     expect(lines.at(-1)).toBe('502,notANumber,ra,bad');
   });
 });
+
+describe('a wish taken back before it was done', () => {
+  it.each([
+    ['region', { region: { parts: [{ kind: 'cap', raDeg: 152, decDeg: 4, radiusDeg: 1 }], holes: [] } }],
+    ['source', { source: source('blob:one') }],
+    ['cosmology', { cosmology: { ...findPublishedSet('wmap9').parameters } }],
+  ] as const)('%s there and back leaves every result in place', async (_, change) => {
+    const { desk, events, last } = deskOf();
+    await desk.want(wanted);
+    const running = desk.want({ ...wanted, ...change });
+    while (
+      !events.slice(-1).some((e) => e.kind === 'progress' || e.kind === 'selected' || e.kind === 'background')
+    )
+      await new Promise((resume) => setTimeout(resume, 0));
+    await desk.want(wanted);
+    await running;
+    expect(last('loaded')!.loaded!.account.kept).toBe(500);
+    expect(last('selected')!.selected!.sample.count).toBe(500);
+    expect(last('background')!.background!.comovingMpc).toHaveLength(500);
+    // The background belongs to the selection that came last.
+    const order = events.map((e) => e.kind);
+    expect(order.lastIndexOf('background')).toBeGreaterThan(order.lastIndexOf('selected'));
+    expect(desk.row(0).redshift).toBe(0.1);
+  });
+});
