@@ -4,6 +4,7 @@ import { RADIAL_READINGS } from '../shared-core/study/schema.ts';
 import { fieldsInView } from './panels/fieldsInView.ts';
 import { type KeyCommand, keyCommand } from './panels/keyCommands.ts';
 import { keysShown } from './panels/keyTable.ts';
+import { pictureShown } from './panels/picture/pictureShown.ts';
 import type { App } from './state/app.ts';
 
 const RADIAL_WORDS = {
@@ -98,6 +99,9 @@ function run(app: App, command: KeyCommand): boolean {
       const perH = !studyState.study.value.look.perH;
       return studyState.perform(changeLook(perH ? 'Show Mpc/h' : 'Show Mpc', { perH }));
     }
+    case 'picture':
+      pictureShown.value = true;
+      return true;
     case 'showKeys':
       keysShown.value = true;
       return true;

@@ -14,6 +14,7 @@ export type KeyCommand =
   | 'nextField'
   | 'nextRadial'
   | 'toggleH'
+  | 'picture'
   | 'showKeys'
   | { readonly view: CameraView };
 
@@ -33,6 +34,7 @@ const PLAIN: Readonly<Record<string, KeyCommand>> = {
   f: 'nextField',
   r: 'nextRadial',
   h: 'toggleH',
+  p: 'picture',
   '?': 'showKeys',
   '1': { view: 'side-on' },
   '2': { view: 'down-the-cone' },

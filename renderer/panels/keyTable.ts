@@ -26,6 +26,7 @@ export const KEY_HELP: readonly { readonly title: string; readonly rows: readonl
       { keys: [shortcut('S', true)], does: 'save under another name' },
       { keys: [shortcut('O')], does: 'open a study' },
       { keys: [shortcut('N')], does: 'new study' },
+      { keys: ['P'], does: 'picture to export' },
     ],
   },
   {

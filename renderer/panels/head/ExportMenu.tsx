@@ -2,40 +2,50 @@ import { useComputed } from '@preact/signals';
 import { useApp } from '../../state/app.ts';
 import { Menu, type MenuEntry } from '../../ui/Menu.tsx';
 import { copyLedger, exportLedger, LEDGER_FORMATS } from '../ledger/ledgerFormats.ts';
+import { PictureBench } from '../picture/PictureBench.tsx';
+import { pictureShown } from '../picture/pictureShown.ts';
 
-/** The ledger to a file or to the clipboard. */
+/** The picture by way of its bench; the ledger to a file or to the clipboard. */
 export function ExportMenu() {
   const app = useApp();
   const empty = useComputed(() => app.derived.shells.value.length === 0).value;
   const copy = (label: string, hint: string, as: Parameters<typeof copyLedger>[1]) =>
-    ({ kind: 'item', label, hint, run: () => void copyLedger(app, as) }) satisfies MenuEntry;
+    ({ kind: 'item', label, hint, disabled: empty, run: () => void copyLedger(app, as) }) satisfies MenuEntry;
   return (
-    <Menu
-      label="Export"
-      buttonId="export-menu"
-      disabled={empty}
-      title={empty ? 'There are no shells to export yet' : 'Export the shell ledger'}
-      entries={[
-        {
-          kind: 'group',
-          label: 'Ledger to a file',
-          entries: LEDGER_FORMATS.map((format) => ({
-            kind: 'item',
-            label: format.label,
-            hint: format.hint,
-            run: () => void exportLedger(app, format),
-          })),
-        },
-        {
-          kind: 'group',
-          label: 'Ledger to the clipboard',
-          entries: [
-            copy('With tabs', 'every digit', 'tabs'),
-            copy('Aligned text', 'rounded', 'aligned'),
-            copy('LaTeX tabular', 'rounded', 'latex'),
-          ],
-        },
-      ]}
-    />
+    <>
+      <Menu
+        label="Export"
+        buttonId="export-menu"
+        title={
+          empty
+            ? 'Export the picture; there are no shells for a ledger yet, or the catalogue is still being read'
+            : 'Export picture or ledger'
+        }
+        entries={[
+          { kind: 'item', label: 'Picture…', hint: 'P', run: () => void (pictureShown.value = true) },
+          {
+            kind: 'group',
+            label: 'Ledger to a file',
+            entries: LEDGER_FORMATS.map((format) => ({
+              kind: 'item',
+              label: format.label,
+              hint: format.hint,
+              disabled: empty,
+              run: () => void exportLedger(app, format),
+            })),
+          },
+          {
+            kind: 'group',
+            label: 'Ledger to the clipboard',
+            entries: [
+              copy('With tabs', 'every digit', 'tabs'),
+              copy('Aligned text', 'rounded', 'aligned'),
+              copy('LaTeX tabular', 'rounded', 'latex'),
+            ],
+          },
+        ]}
+      />
+      {pictureShown.value ? <PictureBench onClose={() => void (pictureShown.value = false)} /> : null}
+    </>
   );
 }

@@ -47,6 +47,11 @@ describe('keys', () => {
     expect(keyCommand(press('1'), false)).toEqual({ view: 'side-on' });
     expect(keyCommand(press('4'), false)).toEqual({ view: 'whole' });
   });
+
+  it('open the picture bench, and leave printing to the browser', () => {
+    expect(keyCommand(press('p'), false)).toBe('picture');
+    expect(keyCommand(press('p', { ctrlKey: true }), false)).toBeNull();
+  });
 });
 
 describe('what is dropped', () => {

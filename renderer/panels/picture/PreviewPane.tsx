@@ -1,0 +1,60 @@
+import { useLayoutEffect, useRef } from 'preact/hooks';
+import { copyText } from '../../ui/clipboard.ts';
+import type { ShownPreview } from './usePicturePreview.ts';
+
+/** The picture as it will be exported, with its text alternative. */
+export function PreviewPane(props: {
+  readonly shown: ShownPreview;
+  readonly sizeText: string;
+  readonly waiting: string | null;
+  /** Of the paper that a clear picture is laid on. */
+  readonly ground: 'dark' | 'paper';
+  readonly onRoom: (room: readonly [number, number]) => void;
+  readonly onCopied: (sentence: string) => void;
+}) {
+  const { shown, sizeText, waiting, ground, onRoom, onCopied } = props;
+  const pane = useRef<HTMLDivElement>(null);
+  useLayoutEffect(() => {
+    const { current } = pane;
+    if (current === null) return;
+    const measure = (): void => {
+      const { clientWidth, clientHeight } = current;
+      const px = (css: number): number => Math.max(1, Math.round(css * devicePixelRatio));
+      onRoom([px(clientWidth), px(clientHeight)]);
+    };
+    measure();
+    const watch = new ResizeObserver(measure);
+    watch.observe(current);
+    return () => watch.disconnect();
+  }, []);
+  const description = shown.preview?.description ?? '';
+  const copy = async (): Promise<void> =>
+    onCopied(
+      (await copyText(description))
+        ? 'The text alternative is on the clipboard.'
+        : 'The browser did not let the text onto the clipboard: select it and copy it by hand.',
+    );
+  return (
+    <div class="bench-left">
+      <div class="bench-pane" ref={pane} data-drawing={shown.drawing}>
+        {shown.url === null ? (
+          <p class="quiet">{waiting ?? 'Drawing…'}</p>
+        ) : (
+          <img src={shown.url} alt={description} data-ground={ground} />
+        )}
+      </div>
+      <p class="bench-facts" role="status">
+        {sizeText}
+        {shown.drawing ? ' · drawing…' : ''}
+        {waiting === null ? '' : ` · ${waiting}`}
+      </p>
+      <div class="bench-words">
+        <label for="bench-alternative">Text alternative</label>
+        <button type="button" class="link-button" disabled={description === ''} onClick={() => void copy()}>
+          Copy it
+        </button>
+        <textarea id="bench-alternative" rows={3} readOnly value={description} />
+      </div>
+    </div>
+  );
+}

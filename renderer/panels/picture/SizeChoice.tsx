@@ -1,0 +1,59 @@
+import { ChoiceField } from '../../ui/ChoiceField.tsx';
+import { Switch } from '../../ui/Switch.tsx';
+import { BenchField } from './BenchField.tsx';
+import { isSheet, type PictureChoices, SIZE_CHOICES } from './pictureChoices.ts';
+import type { Troubles } from './readChoices.ts';
+
+/** How large: by name, as a sheet of paper, or by pixels. */
+export function SizeChoice(props: {
+  readonly choices: PictureChoices;
+  readonly troubles: Troubles;
+  readonly onChange: (part: Partial<PictureChoices>) => void;
+}) {
+  const { choices, troubles, onChange } = props;
+  return (
+    <>
+      <ChoiceField
+        label="Size"
+        value={choices.size}
+        choices={SIZE_CHOICES}
+        onChoose={(size) => onChange({ size })}
+      />
+      {isSheet(choices.size) ? (
+        <Switch
+          label="Upright sheet"
+          checked={choices.upright}
+          onChange={(upright) => onChange({ upright })}
+        />
+      ) : null}
+      {choices.size === 'own' ? (
+        <div class="bench-row">
+          <BenchField
+            label="Width"
+            unit="px"
+            value={choices.ownWidthPx}
+            field="ownWidthPx"
+            troubles={troubles}
+            onInput={(ownWidthPx) => onChange({ ownWidthPx })}
+          />
+          <BenchField
+            label="Height"
+            unit="px"
+            value={choices.ownHeightPx}
+            field="ownHeightPx"
+            troubles={troubles}
+            onInput={(ownHeightPx) => onChange({ ownHeightPx })}
+          />
+          <BenchField
+            label="On paper"
+            unit="dpi"
+            value={choices.dpi}
+            field="dpi"
+            troubles={troubles}
+            onInput={(dpi) => onChange({ dpi })}
+          />
+        </div>
+      ) : null}
+    </>
+  );
+}

@@ -1,0 +1,94 @@
+import type { PictureOptions, PictureView } from '../../../shared-core/picture/options.ts';
+import type { ColourChoice } from '../../../shared-core/study/schema.ts';
+
+/** A label as it is being typed. */
+export interface LabelDraft {
+  readonly raDeg: string;
+  readonly decDeg: string;
+  readonly redshift: string;
+  readonly text: string;
+}
+
+export type SlabKind = 'offered' | 'declination' | 'greatCircle';
+
+/** What the person has chosen on the bench; numbers as they are typed. */
+export interface PictureChoices {
+  readonly view: PictureView;
+  readonly size: string;
+  /** Sheets of paper stand upright. */
+  readonly upright: boolean;
+  readonly ownWidthPx: string;
+  readonly ownHeightPx: string;
+  readonly dpi: string;
+  readonly style: PictureOptions['style'];
+  readonly colourBy: ColourChoice | null;
+  readonly stretch: PictureOptions['stretch'];
+  readonly exposureStops: number;
+  readonly slab: SlabKind;
+  readonly decMinDeg: string;
+  readonly decMaxDeg: string;
+  readonly poleRaDeg: string;
+  readonly poleDecDeg: string;
+  readonly thicknessDeg: string;
+  /** Where the picture ends; empty shows everything. */
+  readonly depthRedshift: string;
+  /** Null takes the study's name, or the caption that is offered. */
+  readonly title: string | null;
+  readonly caption: string | null;
+  readonly credit: string;
+  readonly labels: readonly LabelDraft[];
+  readonly rulers: boolean;
+  readonly shells: boolean;
+  readonly transparent: boolean;
+}
+
+export const FIRST_CHOICES: PictureChoices = {
+  view: 'cone',
+  size: '4k',
+  upright: false,
+  ownWidthPx: '3000',
+  ownHeightPx: '2000',
+  dpi: '300',
+  style: 'dark',
+  colourBy: null,
+  stretch: 'asinh',
+  exposureStops: 0,
+  slab: 'offered',
+  decMinDeg: '',
+  decMaxDeg: '',
+  poleRaDeg: '',
+  poleDecDeg: '',
+  thicknessDeg: '4',
+  depthRedshift: '',
+  title: null,
+  caption: null,
+  credit: '',
+  labels: [],
+  rulers: true,
+  shells: true,
+  transparent: false,
+};
+
+export const VIEW_CHOICES: readonly { readonly value: PictureView; readonly label: string }[] = [
+  { value: 'cone', label: 'Cone, side-on' },
+  { value: 'perspective', label: 'Cone in perspective' },
+  { value: 'wedge', label: 'Wedge, laid flat' },
+  { value: 'sky', label: 'Shells on the sky' },
+  { value: 'light-cone', label: 'Light-cone diagram' },
+];
+
+export const SIZE_CHOICES = [
+  { value: 'screen', label: 'This window' },
+  { value: '4k', label: '4K, 3840 × 2160' },
+  { value: '8k', label: '8K, 7680 × 4320' },
+  { value: 'square', label: 'Square, 4096 × 4096' },
+  { value: 'portrait', label: 'Portrait, 2160 × 3840' },
+  { value: 'a4', label: 'A4 at 300 dpi' },
+  { value: 'a3', label: 'A3 at 300 dpi' },
+  { value: 'a2', label: 'A2 at 300 dpi' },
+  { value: 'a1', label: 'A1 at 300 dpi' },
+  { value: 'a0', label: 'A0 at 300 dpi' },
+  { value: 'own', label: 'Own size' },
+] as const;
+
+export const isSheet = (size: string): boolean => /^a[0-4]$/.test(size);

@@ -1,0 +1,45 @@
+import type { PictureFormat } from '../../../shared-core/picture/job.ts';
+import type { PictureOptions } from '../../../shared-core/picture/options.ts';
+import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
+
+/** Labels have three lines of some thirty letters each. */
+const LONG_LABEL = 80;
+/** Bytes that drawing takes beside the galaxies, and for each of them: their copy, places and colours. */
+const BASE_BYTES = 300e6;
+const BYTES_A_GALAXY = 90;
+
+/** What the person should know before a picture is exported, though nothing hinders it. */
+export function pictureRemarks(options: PictureOptions, shells: readonly ShellStatistics[]): string[] {
+  const out: string[] = [];
+  for (const { text } of options.labels) {
+    if (text.length > LONG_LABEL)
+      out.push(
+        `The label "${text.slice(0, 24)}…" has ${text.length} letters: in the picture it ends with … where three lines are full, in the text alternative it is whole.`,
+      );
+  }
+  if (options.shells) {
+    const empty = shells.filter((shell) => shell.count === 0);
+    if (empty.length > 0)
+      out.push(
+        `${empty.length === 1 ? 'The shell' : 'The shells'} ${empty.map((s) => `${s.zMin}–${s.zMax}`).join(', ')} ${empty.length === 1 ? 'holds' : 'hold'} no galaxies and ${empty.length === 1 ? 'is' : 'are'} drawn empty.`,
+      );
+  }
+  return out;
+}
+
+/**
+ * Why a picture is not begun for want of memory; null when there is enough, or nobody knows.
+ * @param deviceGb memory of the machine as the browser tells it (at most 8)
+ */
+export function memoryTrouble(galaxies: number, deviceGb: number | undefined): string | null {
+  const needed = BASE_BYTES + BYTES_A_GALAXY * galaxies;
+  // Half of a machine's memory belongs to what else runs on it.
+  if (deviceGb === undefined || needed <= (deviceGb * 1e9) / 2) return null;
+  return `The picture needs about ${(needed / 1e9).toFixed(1)} GB of memory, and this machine has ${deviceGb} GB in all: cut the catalogue to fewer galaxies, or use a larger machine.`;
+}
+
+export const MIME_TYPES: Readonly<Record<PictureFormat, string>> = {
+  png: 'image/png',
+  svg: 'image/svg+xml',
+  pdf: 'application/pdf',
+};

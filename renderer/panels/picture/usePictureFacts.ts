@@ -1,0 +1,33 @@
+import { useLayoutEffect, useMemo } from 'preact/hooks';
+import type { App } from '../../state/app.ts';
+import type { PictureClient } from './pictureClient.ts';
+
+/**
+ * Gives the worker what the window has made of the study.
+ * @returns `facts`: something that changes with them, null while they are being made; `waiting`: what is waited for
+ */
+export function usePictureFacts(
+  { engine, studyState, files }: App,
+  client: PictureClient,
+): { readonly facts: object | null; readonly waiting: string | null } {
+  const study = studyState.study.value;
+  const [selected, background, density] = [
+    engine.selected.value,
+    engine.background.value,
+    engine.density.value,
+  ];
+  const waiting =
+    engine.failure.value !== null
+      ? `The catalogue could not be used, so there is no picture of it: ${engine.failure.value.sentence}`
+      : files.missingSource.value !== null
+        ? `The study's catalogue ${files.missingSource.value.name} is not at hand: point at it first.`
+        : engine.progress.value !== null || (selected !== null && background === null)
+          ? 'The catalogue is still being read: the picture follows.'
+          : null;
+  useLayoutEffect(() => {
+    if (waiting === null) client.setFacts({ study, selected, background, density });
+  }, [client, study, selected, background, density, waiting]);
+  // A picture depends on the study whole: its name stands over it, its fingerprint within.
+  const facts = useMemo(() => ({}), [study, selected, background, density]);
+  return { facts: waiting === null ? facts : null, waiting };
+}
