@@ -3,13 +3,13 @@ import type { Cut, SetAsideRow } from '../../shared-core/catalogue/catalogue.ts'
 import { parseColumnMap } from '../../shared-core/catalogue/columnMap.ts';
 import type { LoadedCatalogue, LoadOptions } from '../../shared-core/catalogue/loadCatalogue.ts';
 import { loadCatalogue } from '../../shared-core/catalogue/loadCatalogue.ts';
+import { checkCuts } from '../../shared-core/catalogue/selection.ts';
 import { SET_ASIDE_HEADER, setAsideLine } from '../../shared-core/catalogue/setAsideCsv.ts';
 import type { Footprint } from '../../shared-core/sky/region.ts';
 import { parseCut } from './cuts.ts';
 import { fileBytes, fromHere, readableSize } from './files.ts';
-import { PieceQueue } from './pieceQueue.ts';
 import { progressBar } from './progress.ts';
-import { writeOutput } from './writeOutput.ts';
+import { OutputFile } from './writeOutput.ts';
 
 export interface CatalogueOptions {
   columns?: string;
@@ -34,37 +34,42 @@ export function addCatalogueOptions(command: Command): Command {
     .option('--overwrite', 'replace output files that exist');
 }
 
+export interface CatalogueReading extends Pick<LoadOptions, 'onKept'> {
+  readonly footprint: Footprint | null;
+  /** Absolute path for the list of rows not used, as outputPlaces gives it. */
+  readonly setAsidePath: string | undefined;
+}
+
 /** Reads a catalogue file under the options, with a progress bar, and writes the set-aside list if asked. */
 export async function readCatalogue(
   file: string,
   options: CatalogueOptions,
-  footprint: Footprint | null,
-  more: Pick<LoadOptions, 'onKept'> = {},
+  { footprint, setAsidePath, onKept }: CatalogueReading,
 ): Promise<LoadedCatalogue> {
   const path = fromHere(file);
+  const mapping = options.columns === undefined ? undefined : parseColumnMap(options.columns);
+  const cuts = options.cut ?? [];
+  checkCuts(cuts);
   const size = await readableSize(path);
   const bar = progressBar(`Reading ${file}`);
-  const list = options.setAside === undefined ? null : new PieceQueue();
-  const writing =
-    list === null
+  const list =
+    setAsidePath === undefined
       ? null
-      : writeOutput(fromHere(options.setAside!), list, { overwrite: options.overwrite === true });
-  list?.add(SET_ASIDE_HEADER);
+      : await OutputFile.begin(setAsidePath, { overwrite: options.overwrite === true });
   try {
+    list?.addText(SET_ASIDE_HEADER);
     const loaded = await loadCatalogue(fileBytes(path), {
-      mapping: options.columns === undefined ? undefined : parseColumnMap(options.columns),
-      cuts: options.cut ?? [],
+      mapping,
+      cuts,
       contains: footprint === null ? null : (ra, dec) => footprint.contains(ra, dec),
       onProgress: (bytesRead) => bar.update(bytesRead / size),
-      onSetAside: list === null ? undefined : (row: SetAsideRow) => list.add(setAsideLine(row)),
-      ...more,
+      onSetAside: list === null ? undefined : (row: SetAsideRow) => list.addText(setAsideLine(row)),
+      onKept,
     });
-    list?.end();
-    await writing;
+    await list?.finish();
     return loaded;
   } catch (error) {
-    list?.fail(error);
-    await writing?.catch(() => undefined);
+    await list?.abandon();
     throw error;
   } finally {
     bar.end();

@@ -20,15 +20,20 @@ export function addOutputOptions(command: Command): Command {
     .option('--h-units', 'lengths in Mpc/h instead of Mpc');
 }
 
-/** The result as text in the format asked for; `json` builds the JSON value. */
-export function render<Row>(table: Table<Row>, options: OutputOptions, json: () => unknown): string {
+/** The format asked for; null for text. @throws Refusal ('use') for two at once */
+export function formatOf(options: OutputOptions): 'json' | 'csv' | 'ecsv' | 'latex' | null {
   const chosen = (['json', 'csv', 'ecsv', 'latex'] as const).filter((name) => options[name]);
   if (chosen.length > 1)
     throw new Refusal(
       `${chosen.map((n) => `--${n}`).join(' and ')} came together: choose one format.`,
       'use',
     );
-  switch (chosen[0]) {
+  return chosen[0] ?? null;
+}
+
+/** The result as text in the format asked for; `json` builds the JSON value. */
+export function render<Row>(table: Table<Row>, options: OutputOptions, json: () => unknown): string {
+  switch (formatOf(options)) {
     case 'json':
       return `${JSON.stringify(json(), null, 2)}\n`;
     case 'csv':

@@ -26,6 +26,11 @@ export function addRegionOptions(command: Command): Command {
     .option('--hole <shape>', 'sky left out, in the same forms; repeat it for several', collect);
 }
 
+/** The files that the region will be read from. */
+export function regionFiles({ region = [], hole = [] }: RegionOptions): string[] {
+  return [...region, ...hole].flatMap((text) => polygonFileOf(text)?.file ?? []);
+}
+
 /** The region asked for, ready to use; null when none was given and the area must be estimated. */
 export async function regionOf(
   options: RegionOptions,

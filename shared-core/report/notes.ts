@@ -1,4 +1,10 @@
-import { type RowAccount, SET_ASIDE_REASONS, type SetAsideReason } from '../catalogue/catalogue.ts';
+import {
+  type ColumnMapping,
+  type RowAccount,
+  SET_ASIDE_REASONS,
+  type SetAsideReason,
+} from '../catalogue/catalogue.ts';
+import { describeMapping } from '../catalogue/mapping.ts';
 import { reasonText } from '../catalogue/reasons.ts';
 import type { Cosmology } from '../cosmology/cosmology.ts';
 import type { PublishedSet } from '../cosmology/publishedSets.ts';
@@ -33,6 +39,11 @@ export function describeAccount(account: RowAccount): string {
       ? ''
       : ` ${account.repeatedPositions} kept rows repeat an earlier position.`;
   return `Rows: ${account.rowsRead} read = ${account.kept} kept + ${account.setAside} set aside${why}.${repeats}`;
+}
+
+/** One line on which column was read as what, and how a velocity becomes a redshift. */
+export function describeColumns(mapping: ColumnMapping): string {
+  return `Columns: ${describeMapping(mapping)}.`;
 }
 
 /** One line on the sky area, that never lets an estimate pass for more. */

@@ -1,15 +1,18 @@
 import type { ColumnMapping, RowAccount } from '../catalogue/catalogue.ts';
+import type { Cosmology } from '../cosmology/cosmology.ts';
 import type { ShellStatistics } from '../shells/shell.ts';
-import type { ShellConditions } from '../shells/statistics.ts';
 import type { Footprint } from '../sky/region.ts';
 import { asObjects, type Table } from './table.ts';
 
 export interface ShellsResult {
   readonly table: Table<ShellStatistics>;
-  readonly account: RowAccount;
-  readonly mapping: ColumnMapping;
-  readonly footprint: Pick<Footprint, 'origin' | 'areaDeg2' | 'estimate'>;
-  readonly conditions: ShellConditions;
+  /** Null for a plan, which has no catalogue; the mapping likewise. */
+  readonly account: RowAccount | null;
+  readonly mapping: ColumnMapping | null;
+  /** Null where neither a region nor a catalogue says which sky it is. */
+  readonly footprint: Pick<Footprint, 'origin' | 'areaDeg2' | 'estimate'> | null;
+  readonly cosmology: Cosmology;
+  readonly p0Mpc3PerH3: number;
   /** Key of the published set, or null for own parameters. */
   readonly cosmologyName: string | null;
 }
@@ -20,12 +23,12 @@ export function shellsJson({
   account,
   mapping,
   footprint,
-  conditions,
+  cosmology,
+  p0Mpc3PerH3,
   cosmologyName,
 }: ShellsResult): unknown {
-  const { cosmology } = conditions;
   return {
-    catalogue: {
+    catalogue: account && {
       rowsRead: account.rowsRead,
       kept: account.kept,
       setAside: account.setAside,
@@ -39,12 +42,12 @@ export function shellsJson({
       omegaDe0: cosmology.omegaDe0,
       omegaK0: cosmology.omegaK0,
     },
-    region: {
+    region: footprint && {
       areaDeg2: footprint.areaDeg2,
       estimated: footprint.origin === 'estimated',
       ...(footprint.estimate === null ? {} : footprint.estimate),
     },
-    p0Mpc3PerH3: conditions.p0Mpc3PerH3,
+    p0Mpc3PerH3,
     lengthUnit: table.units.perH ? 'Mpc/h' : 'Mpc',
     shells: asObjects(table),
   };

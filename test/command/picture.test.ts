@@ -1,5 +1,6 @@
+import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
-import { checkMemory } from '../../main/command/verbs/picture.ts';
+import { checkMemory, obtainableBytes } from '../../main/command/verbs/picture.ts';
 import { emptyStudy, writeStudy } from '../../shared-core/study/document.ts';
 import { conewright, testFolder } from './capture.ts';
 
@@ -39,8 +40,19 @@ describe('picture refuses before it starts', () => {
     expect(err).toMatch(/gone\.csv is not beside the study.*--catalogue/);
   });
 
+  it('a picture in the place of its study', async () => {
+    const study = folder.write('mine.png', writeStudy(emptyStudy('Mine')));
+    const { code, err } = await conewright('picture', study, '-o', study, '--overwrite');
+    expect(code).toBe(2);
+    expect(err).toMatch(/same file as one which is read/);
+    expect(readFileSync(study, 'utf8')).toBe(writeStudy(emptyStudy('Mine')));
+  });
+
   it('memory that will not be enough', () => {
-    expect(() => checkMemory(10e9, 4e9)).toThrow(/needs about 40\.5 GB of memory and 4\.0 GB are free/);
+    expect(() => checkMemory(10e9, 4e9)).toThrow(/needs about 40\.5 GB of memory and 4\.0 GB can be had/);
     expect(() => checkMemory(1e6, 4e9)).not.toThrow();
+    // macOS calls little free, since it keeps memory that it can give back.
+    expect(obtainableBytes('darwin', 0.1e9, 16e9)).toBe(12e9);
+    expect(obtainableBytes('linux', 0.1e9, 16e9)).toBe(0.1e9);
   });
 });

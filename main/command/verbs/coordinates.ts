@@ -1,12 +1,11 @@
 import type { Command } from 'commander';
 import { CoordinateWriter } from '../../../shared-core/report/coordinates.ts';
-import { describeAccount } from '../../../shared-core/report/notes.ts';
+import { describeAccount, describeColumns } from '../../../shared-core/report/notes.ts';
 import { addCatalogueOptions, type CatalogueOptions, readCatalogue } from '../catalogueOptions.ts';
 import { addCosmologyOptions, type CosmologyOptions, cosmologyOf } from '../cosmologyOptions.ts';
-import { fromHere } from '../files.ts';
-import { PieceQueue } from '../pieceQueue.ts';
-import { addRegionOptions, type RegionOptions, regionOf } from '../region.ts';
-import { writeOutput } from '../writeOutput.ts';
+import { outputPlaces } from '../outputPlaces.ts';
+import { addRegionOptions, type RegionOptions, regionFiles, regionOf } from '../region.ts';
+import { OutputFile } from '../writeOutput.ts';
 
 interface CoordinatesOptions extends CatalogueOptions, RegionOptions, CosmologyOptions {
   output: string;
@@ -33,27 +32,33 @@ export function addCoordinates(program: Command, say: (text: string) => void): v
     )
     .action(async (file: string, options: CoordinatesOptions) => {
       const { cosmology, line: cosmologyLine } = cosmologyOf(options);
+      const overwrite = options.overwrite === true;
+      const places = await outputPlaces(
+        { '--output': options.output, '--set-aside': options.setAside },
+        [file, ...regionFiles(options)],
+        { overwrite },
+      );
       const given = await regionOf(options);
       const writer = new CoordinateWriter(cosmology, options.hUnits === true);
-      const queue = new PieceQueue();
-      const writing = writeOutput(fromHere(options.output), queue, { overwrite: options.overwrite === true });
+      const output = await OutputFile.begin(places['--output'], { overwrite });
       let begun = false;
       try {
-        const { catalogue } = await readCatalogue(file, options, given?.footprint ?? null, {
+        const { catalogue, mapping } = await readCatalogue(file, options, {
+          footprint: given?.footprint ?? null,
+          setAsidePath: places['--set-aside'],
           onKept: (row) => {
-            if (!begun) queue.add(writer.header(row.id !== null));
+            if (!begun) output.addText(writer.header(row.id !== null));
             begun = true;
-            queue.add(writer.line(row));
+            output.addText(writer.line(row));
           },
         });
-        if (!begun) queue.add(writer.header(false));
-        queue.end();
-        await writing;
+        if (!begun) output.addText(writer.header(false));
+        await output.finish();
         say(`${options.output}: ${catalogue.account.kept} rows. ${describeAccount(catalogue.account)}`);
+        say(describeColumns(mapping));
         say(cosmologyLine);
       } catch (error) {
-        queue.fail(error);
-        await writing.catch(() => undefined);
+        await output.abandon();
         throw error;
       }
     });

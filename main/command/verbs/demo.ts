@@ -1,3 +1,4 @@
+import { readFile } from 'node:fs/promises';
 import { join } from 'node:path';
 import type { Command } from 'commander';
 import { loadCatalogue } from '../../../shared-core/catalogue/loadCatalogue.ts';
@@ -7,6 +8,7 @@ import { findPublishedSet } from '../../../shared-core/cosmology/publishedSets.t
 import { makeDemoSurvey } from '../../../shared-core/demo/demoSurvey.ts';
 import {
   describeAccount,
+  describeColumns,
   describeCosmology,
   describeFootprint,
   describeMethod,
@@ -20,6 +22,7 @@ import { compileRegion } from '../../../shared-core/sky/compileRegion.ts';
 import { describeRegion, formatShape } from '../../../shared-core/sky/regionText.ts';
 import { fromHere } from '../files.ts';
 import { oneNumber } from '../numbers.ts';
+import { outputPlaces } from '../outputPlaces.ts';
 import { writeOutput } from '../writeOutput.ts';
 
 /** conewright demo: the invented survey as files, measured, its ledger printed. */
@@ -53,6 +56,7 @@ export function addDemo(program: Command, print: (text: string) => void, say: (t
         notes: [
           `${survey.name}. ${survey.description}`,
           describeAccount(catalogue.account),
+          describeColumns(mapping),
           describeFootprint(footprint, describeRegion(survey.region)),
           describeCosmology(cosmology, set),
           describeMethod(DEFAULT_P0_MPC3_PER_H3),
@@ -63,7 +67,8 @@ export function addDemo(program: Command, print: (text: string) => void, say: (t
         account: catalogue.account,
         mapping,
         footprint,
-        conditions,
+        cosmology,
+        p0Mpc3PerH3: DEFAULT_P0_MPC3_PER_H3,
         cosmologyName: set.key,
       });
       const text = asText(table);
@@ -77,12 +82,25 @@ export function addDemo(program: Command, print: (text: string) => void, say: (t
         'shells.tex': asLatex(table),
         'shells.json': `${JSON.stringify(json, null, 2)}\n`,
       };
-      const folder = fromHere(options.output);
-      for (const [name, content] of Object.entries(files))
-        await writeOutput(join(folder, name), [content], { overwrite: options.overwrite === true });
+      await writeNew(options.output, files, options.overwrite === true);
       print(text);
       say(`Written to ${options.output}: ${Object.keys(files).join(', ')}.`);
     });
+}
+
+/** Writes those files that do not stand there already as they would be written. */
+async function writeNew(
+  folder: string,
+  files: Readonly<Record<string, string>>,
+  overwrite: boolean,
+): Promise<void> {
+  const wanted: Record<string, string> = {};
+  for (const [name, content] of Object.entries(files)) {
+    const there = await readFile(fromHere(join(folder, name)), 'utf8').catch(() => null);
+    if (there !== content) wanted[name] = join(folder, name);
+  }
+  const places = await outputPlaces(wanted, [], { overwrite });
+  for (const [name, place] of Object.entries(places)) await writeOutput(place, [files[name]!], { overwrite });
 }
 
 async function* once(text: string): AsyncIterable<Uint8Array> {

@@ -1,4 +1,4 @@
-import { freemem, homedir } from 'node:os';
+import { freemem, homedir, totalmem } from 'node:os';
 import { basename, extname, join } from 'node:path';
 import type { Command } from 'commander';
 import { Refusal } from '../../../shared-core/base/refusal.ts';
@@ -19,6 +19,7 @@ import { userFolder } from '../../files/userFolder.ts';
 import { findBrowser } from '../../launch/findBrowser.ts';
 import { fromHere, readableSize, readTextFile } from '../files.ts';
 import { numberList, oneNumber } from '../numbers.ts';
+import { outputPlaces } from '../outputPlaces.ts';
 import { makePicture } from '../picture/makePicture.ts';
 
 interface PictureVerbOptions {
@@ -101,7 +102,12 @@ export function addPicture(program: Command, say: (text: string) => void, window
       const text = file === DEMO ? null : await readTextFile(file, 'a study');
       const catalogue =
         text === null ? null : await catalogueOf(readStudy(text), fromHere(file), options, say);
-      checkMemory(catalogue?.sizeBytes ?? 0, freemem());
+      const { '--output': path } = await outputPlaces(
+        { '--output': options.output },
+        [...(text === null ? [] : [file]), ...(catalogue === null ? [] : [catalogue.path])],
+        { overwrite: options.overwrite === true },
+      );
+      checkMemory(catalogue?.sizeBytes ?? 0, obtainableBytes(process.platform, freemem(), totalmem()));
       const browser = findBrowser({ platform: process.platform, env: process.env, homeFolder: homedir() });
       if (browser === null)
         throw new Refusal(
@@ -116,7 +122,7 @@ export function addPicture(program: Command, say: (text: string) => void, window
         windowFolder,
         job: { format, options: wanted, study: text },
         catalogue,
-        path: fromHere(options.output),
+        path,
         overwrite: options.overwrite === true,
         say,
       });
@@ -205,12 +211,20 @@ async function catalogueOf(
   return { path, name: basename(path), sizeBytes: await readableSize(path) };
 }
 
+/**
+ * Memory that the work may count on. macOS fills memory with what it can give back at once and does not count that
+ * as free; there it is a share of the whole (our choice), elsewhere what the system calls available.
+ */
+export function obtainableBytes(platform: NodeJS.Platform, freeBytes: number, totalBytes: number): number {
+  return platform === 'darwin' ? 0.75 * totalBytes : freeBytes;
+}
+
 /** Says so before starting where the catalogue will not fit. @throws Refusal */
-export function checkMemory(catalogueBytes: number, freeBytes: number): void {
+export function checkMemory(catalogueBytes: number, obtainable: number): void {
   const needed = BASE_BYTES + BYTES_A_BYTE * catalogueBytes;
-  if (needed <= freeBytes) return;
+  if (needed <= obtainable) return;
   const gb = (bytes: number): string => (bytes / 1e9).toFixed(1);
   throw new Refusal(
-    `The picture needs about ${gb(needed)} GB of memory and ${gb(freeBytes)} GB are free: close other programs, or cut the catalogue to the columns and rows you need.`,
+    `The picture needs about ${gb(needed)} GB of memory and ${gb(obtainable)} GB can be had: close other programs, or cut the catalogue to the columns and rows you need.`,
   );
 }

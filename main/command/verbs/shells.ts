@@ -1,19 +1,29 @@
 import type { Command } from 'commander';
 import { Refusal } from '../../../shared-core/base/refusal.ts';
 import type { LoadedCatalogue } from '../../../shared-core/catalogue/loadCatalogue.ts';
-import { describeAccount, describeFootprint, describeMethod } from '../../../shared-core/report/notes.ts';
+import {
+  describeAccount,
+  describeColumns,
+  describeFootprint,
+  describeMethod,
+} from '../../../shared-core/report/notes.ts';
 import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
 import { shellsJson } from '../../../shared-core/report/shellsJson.ts';
 import { edgesOf } from '../../../shared-core/shells/edges.ts';
 import { sortSample } from '../../../shared-core/shells/sample.ts';
 import type { ShellScheme } from '../../../shared-core/shells/shell.ts';
-import { DEFAULT_P0_MPC3_PER_H3, shellStatistics } from '../../../shared-core/shells/statistics.ts';
+import {
+  DEFAULT_P0_MPC3_PER_H3,
+  type ShellConditions,
+  shellStatistics,
+} from '../../../shared-core/shells/statistics.ts';
 import { estimateFootprint } from '../../../shared-core/sky/estimate.ts';
 import { addCatalogueOptions, type CatalogueOptions, readCatalogue } from '../catalogueOptions.ts';
 import { addCosmologyOptions, type CosmologyOptions, cosmologyOf } from '../cosmologyOptions.ts';
 import { numberList, oneNumber } from '../numbers.ts';
-import { addOutputOptions, type OutputOptions, render } from '../outputs.ts';
-import { addRegionOptions, type RegionOptions, regionOf } from '../region.ts';
+import { outputPlaces } from '../outputPlaces.ts';
+import { addOutputOptions, formatOf, type OutputOptions, render } from '../outputs.ts';
+import { addRegionOptions, type RegionOptions, regionFiles, regionOf } from '../region.ts';
 
 interface ShellsOptions extends CatalogueOptions, RegionOptions, CosmologyOptions, OutputOptions {
   edges?: number[];
@@ -59,8 +69,22 @@ export function addShells(program: Command, print: (text: string) => void): void
     .action(async (file: string, options: ShellsOptions) => {
       const { cosmology, name, line } = cosmologyOf(options);
       const scheme = schemeOf(options);
+      formatOf(options);
+      const places = await outputPlaces(
+        { '--set-aside': options.setAside },
+        [file, ...regionFiles(options)],
+        { overwrite: options.overwrite === true },
+      );
       const given = await regionOf(options);
-      const loaded = await readCatalogue(file, options, given?.footprint ?? null);
+      tryOnNothing(scheme, {
+        cosmology,
+        areaDeg2: given?.footprint.areaDeg2 ?? 1,
+        p0Mpc3PerH3: options.p0,
+      });
+      const loaded = await readCatalogue(file, options, {
+        footprint: given?.footprint ?? null,
+        setAsidePath: places['--set-aside'],
+      });
       const { catalogue } = loaded;
       if (catalogue.account.kept === 0) throw new Refusal(nothingLeft(loaded));
       const footprint = given?.footprint ?? estimateFootprint(catalogue.raDeg, catalogue.decDeg);
@@ -73,6 +97,7 @@ export function addShells(program: Command, print: (text: string) => void): void
         units: { perH: options.hUnits === true, h: cosmology.h },
         notes: [
           describeAccount(catalogue.account),
+          describeColumns(loaded.mapping),
           describeFootprint(footprint, given?.words ?? null),
           line,
           describeMethod(options.p0),
@@ -85,12 +110,29 @@ export function addShells(program: Command, print: (text: string) => void): void
             account: catalogue.account,
             mapping: loaded.mapping,
             footprint,
-            conditions,
+            cosmology,
+            p0Mpc3PerH3: options.p0,
             cosmologyName: name,
           }),
         ),
       );
     });
+}
+
+/** Tries the options on no galaxies at all: what is wrong in them is told before a long file is read. */
+function tryOnNothing(scheme: ShellScheme, conditions: ShellConditions): void {
+  const nothing = sortSample(new Float64Array(0), null);
+  const bounded: ShellScheme =
+    scheme.kind === 'edges'
+      ? scheme
+      : {
+          ...scheme,
+          kind: scheme.kind === 'count' ? 'redshift' : scheme.kind,
+          // Any range serves where the sample's own is not known yet.
+          zMin: scheme.zMin ?? 0.001,
+          zMax: scheme.zMax ?? 0.002,
+        };
+  shellStatistics(nothing, edgesOf(bounded, nothing, conditions.cosmology), conditions);
 }
 
 function schemeOf({ edges, shells, zRange }: ShellsOptions): ShellScheme {

@@ -2,18 +2,24 @@ import type { Table } from '../../../shared-core/report/table.ts';
 import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
 import type { App } from '../../state/app.ts';
 import { regionFootprint } from '../regionReady.ts';
-import { ledgerTable } from './ledgerTable.ts';
+import { type LedgerFacts, ledgerTable } from './ledgerTable.ts';
 
-/** The ledger of the app as it stands now. */
-export function currentLedgerTable({ studyState, engine, derived }: App): Table<ShellStatistics> {
+/** What the ledger of the app is made of as it stands now. */
+export function currentLedgerFacts({ studyState, engine, derived }: App): LedgerFacts {
   const study = studyState.study.value;
   const selected = engine.selected.value;
-  return ledgerTable({
+  return {
     study,
     shells: derived.shells.value,
     units: derived.units.value,
     cosmology: derived.cosmology.value,
     account: selected?.account ?? null,
+    mapping: selected === null ? null : (engine.loaded.value?.mapping ?? null),
     footprint: selected?.footprint ?? (study.region === null ? null : regionFootprint(study.region)),
-  });
+  };
+}
+
+/** The ledger of the app as it stands now. */
+export function currentLedgerTable(app: App): Table<ShellStatistics> {
+  return ledgerTable(currentLedgerFacts(app));
 }

@@ -1,10 +1,8 @@
-import { shellsJson } from '../../../shared-core/report/shellsJson.ts';
-import { asCsv, asEcsv, asLatex, asObjects, asText, type Table } from '../../../shared-core/report/table.ts';
-import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
+import { asCsv, asEcsv, asLatex, asText } from '../../../shared-core/report/table.ts';
 import type { App } from '../../state/app.ts';
 import { copyText } from '../../ui/clipboard.ts';
-import { currentLedgerTable } from './currentLedger.ts';
-import { asTsv } from './ledgerTable.ts';
+import { currentLedgerFacts, currentLedgerTable } from './currentLedger.ts';
+import { asTsv, ledgerJson } from './ledgerTable.ts';
 
 /** The forms in which the ledger leaves the program. */
 export const LEDGER_FORMATS = [
@@ -48,33 +46,6 @@ function ledgerText(app: App, key: LedgerFormat['key']): string {
     case 'text':
       return asText(table);
     case 'json':
-      return `${JSON.stringify(asJson(app, table), null, 2)}\n`;
+      return `${JSON.stringify(ledgerJson(currentLedgerFacts(app)), null, 2)}\n`;
   }
-}
-
-/** As the command's --json; a plan without a catalogue has no rows to account for. */
-function asJson({ engine, derived, studyState }: App, table: Table<ShellStatistics>): unknown {
-  const [selected, loaded, conditions] = [
-    engine.selected.value,
-    engine.loaded.value,
-    derived.conditions.value,
-  ];
-  const { region, cosmologySet } = studyState.study.value;
-  if (selected === null || loaded === null || selected.footprint === null || conditions === null) {
-    return {
-      catalogue: null,
-      cosmology: { name: cosmologySet, ...derived.cosmology.value.parameters },
-      region,
-      lengthUnit: table.units.perH ? 'Mpc/h' : 'Mpc',
-      shells: asObjects(table),
-    };
-  }
-  return shellsJson({
-    table,
-    account: selected.account,
-    mapping: loaded.mapping,
-    footprint: selected.footprint,
-    conditions,
-    cosmologyName: cosmologySet,
-  });
 }

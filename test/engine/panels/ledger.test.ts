@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { NARROW_LEDGER, WHOLE_LEDGER } from '../../../renderer/panels/ledger/ledgerColumns.ts';
-import { asTsv, ledgerTable } from '../../../renderer/panels/ledger/ledgerTable.ts';
+import { asTsv, ledgerJson, ledgerTable } from '../../../renderer/panels/ledger/ledgerTable.ts';
 import { nextOrder, sortShells } from '../../../renderer/panels/ledger/sortShells.ts';
 import { SHEET_KEYS } from '../../../renderer/panels/sheet/sheetLayout.ts';
 import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
@@ -63,6 +63,7 @@ describe('the ledger on the clipboard', () => {
     shells: shellsOf(evenly(10, 0.2, 0.3), [0.2, 0.3, 0.4]),
     cosmology,
     account: null,
+    mapping: null,
     footprint: { origin: 'given', areaDeg2: 100, estimate: null },
   } as const;
 
@@ -85,6 +86,38 @@ describe('the ledger on the clipboard', () => {
   it('says Mpc/h in its names when lengths are in Mpc/h', () => {
     const table = ledgerTable({ ...facts, units: { perH: true, h: cosmology.h } });
     expect(asTsv(table).split('\n')[0]!.split('\t')).toContain('volumeMpc3PerH3');
+  });
+
+  it('as JSON has of a plan all that repeats it, as the command has', () => {
+    const json = ledgerJson({ ...facts, units: { perH: false, h: cosmology.h } });
+    expect(json).toMatchObject({
+      catalogue: null,
+      cosmology: { name: 'flat70', omegaDe0: 0.7, omegaK0: 0 },
+      region: { areaDeg2: 100, estimated: false },
+      p0Mpc3PerH3: 10_000,
+      lengthUnit: 'Mpc',
+      shells: [{ zMin: 0.2 }, { zMin: 0.3 }],
+    });
+    const noSky = ledgerJson({
+      ...facts,
+      shells: [],
+      footprint: null,
+      units: { perH: true, h: cosmology.h },
+    });
+    expect(noSky).toMatchObject({ region: null, lengthUnit: 'Mpc/h', shells: [] });
+  });
+
+  it('notes which columns were read, and how a velocity became a redshift', () => {
+    const mapping = {
+      ra: 'RA',
+      dec: 'DEC',
+      radial: { column: 'V', kind: 'czKmS' },
+      weight: null,
+      magnitude: null,
+      id: null,
+    } as const;
+    const { notes } = ledgerTable({ ...facts, mapping, units: { perH: false, h: cosmology.h } });
+    expect(notes.join('\n')).toMatch(/Columns: .*from RA.*z = cz\/c.*from V/);
   });
 
   it('notes a plan, the exact area, the cosmology with its name and P0', () => {
