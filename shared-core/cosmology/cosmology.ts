@@ -43,7 +43,7 @@ export interface Cosmology {
   ageGyr(z: number): number;
   /** Comoving distance light has travelled since the beginning; Infinity where that diverges. */
   particleHorizonMpc(): number;
-  /** Of the whole sky within z, eq. 29. */
+  /** Of the whole sky within z, eq. 29. @throws Refusal beyond the antipode of a closed universe, as the next two */
   comovingVolumeMpc3(z: number): number;
   /** Of the whole sky between two redshifts, with full digits for shells of any thinness. */
   shellVolumeAllSkyMpc3(zMin: number, zMax: number): number;
@@ -75,8 +75,8 @@ export interface BackgroundTable {
  * The homogeneous universe of these parameters, by adaptive quadrature: relative error below 1e-12.
  *
  * @throws Refusal from here for parameters that make no universe (see validateCosmology); from the methods for a
- * redshift out of range, from the transverse, angular-diameter and luminosity distances beyond the antipode of a
- * closed universe, and from the inverses for a value that no redshift has
+ * redshift out of range, from the transverse, angular-diameter and luminosity distances and from the volumes beyond
+ * the antipode of a closed universe, and from the inverses for a value that no redshift has
  */
 export function createCosmology(parameters: CosmologyParameters): Cosmology {
   validateCosmology(parameters);
@@ -90,16 +90,15 @@ export function createCosmology(parameters: CosmologyParameters): Cosmology {
 
   const eOf = (z: number) => Math.sqrt(expansion.eSquared(logOnePlus(z)));
   const comovingMpc = (z: number) => hubbleMpc * integrals.comoving(0, logOnePlus(z));
-  const transverseComovingMpc = (z: number) => {
-    const comoving = comovingMpc(z);
-    if (comoving > geometry.antipode) {
-      throw new Refusal(
-        `Redshift ${z} lies beyond the antipode of this closed universe (comoving distance ${comoving.toPrecision(6)} Mpc, antipode ${geometry.antipode.toPrecision(6)} Mpc); choose a lower redshift or less curvature.`,
-        'use',
-      );
-    }
-    return geometry.transverse(comoving);
+  // Beyond the antipode space would be counted a second time.
+  const withinAntipode = (z: number, comoving: number): number => {
+    if (comoving <= geometry.antipode) return comoving;
+    throw new Refusal(
+      `Redshift ${z} lies beyond the antipode of this closed universe (comoving distance ${comoving.toPrecision(6)} Mpc, antipode ${geometry.antipode.toPrecision(6)} Mpc); choose a lower redshift or less curvature.`,
+      'use',
+    );
   };
+  const transverseComovingMpc = (z: number) => geometry.transverse(withinAntipode(z, comovingMpc(z)));
   const luminosityMpc = (z: number) => transverseComovingMpc(z) * (1 + z);
   const shellVolumeAllSkyMpc3 = (zMin: number, zMax: number) => {
     const near = logOnePlus(zMin);
@@ -112,7 +111,7 @@ export function createCosmology(parameters: CosmologyParameters): Cosmology {
     }
     const nearMpc = hubbleMpc * integrals.comoving(0, near);
     const thickness = hubbleMpc * integrals.comoving(near, log1p((zMax - zMin) / (1 + zMin)));
-    return geometry.shellVolume(nearMpc, nearMpc + thickness, thickness);
+    return geometry.shellVolume(nearMpc, withinAntipode(zMax, nearMpc + thickness), thickness);
   };
 
   return {
@@ -133,7 +132,7 @@ export function createCosmology(parameters: CosmologyParameters): Cosmology {
     ageGyr: (z) => hubbleGyr * integrals.timeToBeginning(logOnePlus(z)),
     particleHorizonMpc: () => hubbleMpc * integrals.comovingToBeginning(0),
     comovingVolumeMpc3: (z) => {
-      const comoving = comovingMpc(z);
+      const comoving = withinAntipode(z, comovingMpc(z));
       return geometry.shellVolume(0, comoving, comoving);
     },
     shellVolumeAllSkyMpc3,

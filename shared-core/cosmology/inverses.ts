@@ -89,7 +89,7 @@ export function createInverses(
 
     // the cube root of the volume is nearly a straight line in the comoving distance
     redshiftAtVolumeMpc3: (volumeMpc3) => {
-      const farthest = hubbleMpc * integrals.comoving(0, MAX_LOG);
+      const farthest = Math.min(hubbleMpc * integrals.comoving(0, MAX_LOG), geometry.antipode);
       const largest = geometry.shellVolume(0, farthest, farthest);
       refuseUnless(volumeMpc3 >= 0 && volumeMpc3 <= largest, 'All-sky volume', volumeMpc3, 'Mpc^3', largest);
       const target = cbrt(volumeMpc3);

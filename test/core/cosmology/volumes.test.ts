@@ -56,23 +56,32 @@ describe('a closed universe', () => {
   const closed = createCosmology(model({ omegaM0: 0.3, omegaDe0: 1.65 }));
   const radius = hubble / Math.sqrt(0.95);
 
-  it('has the volume 2 pi R^3 (chi - sin chi cos chi), beyond a quarter turn and a half turn too', () => {
-    const turns = [0.5, 1.5, 3, 20, 1000].map((z) => {
+  it('has the volume 2 pi R^3 (chi - sin chi cos chi), beyond a quarter turn too', () => {
+    const turns = [0.5, 1.5, 2].map((z) => {
       const chi = closed.comovingMpc(z) / radius;
       const exact = 2 * Math.PI * radius ** 3 * (chi - Math.sin(chi) * Math.cos(chi));
       expect(relative(closed.comovingVolumeMpc3(z), exact)).toBeLessThan(1e-13);
       return chi / Math.PI;
     });
     expect(turns.some((turn) => turn > 0.5 && turn < 1)).toBe(true);
-    expect(turns.some((turn) => turn > 1)).toBe(true);
   });
 
-  it('has no transverse distance beyond its antipode, and says so', () => {
+  it('has no transverse distance nor volume beyond its antipode, and says so', () => {
     expect(closed.comovingMpc(20)).toBeGreaterThan(Math.PI * radius);
     for (const method of ['transverseComovingMpc', 'angularDiameterMpc', 'luminosityMpc'] as const)
       expect(() => closed[method](20)).toThrow(
         /^Redshift 20 lies beyond the antipode of this closed universe \(comoving distance \d+\.\d Mpc, antipode 13804\.\d Mpc\); choose a lower redshift or less curvature\.$/,
       );
+    expect(() => closed.comovingVolumeMpc3(20)).toThrow(/^Redshift 20 lies beyond the antipode/);
+    expect(() => closed.shellVolumeAllSkyMpc3(1, 20)).toThrow(/^Redshift 20 lies beyond the antipode/);
+  });
+
+  it('gives no redshift for more than its whole space, 2 pi^2 R^3', () => {
+    const whole = 2 * Math.PI ** 2 * radius ** 3;
+    expect(() => closed.redshiftAtVolumeMpc3(1.001 * whole)).toThrow(/is at no redshift of this cosmology/);
+    // Near the antipode the volume hardly grows, so half of space is asked for.
+    const z = closed.redshiftAtVolumeMpc3(whole / 2);
+    expect(relative(closed.comovingMpc(z), (Math.PI / 2) * radius)).toBeLessThan(1e-10);
   });
 
   it('of matter alone has half its space within reach: pi^2 R^3 as z grows', () => {
