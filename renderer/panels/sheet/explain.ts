@@ -121,6 +121,8 @@ function uncertainty(key: string, { shell, conditions, estimate, units }: Explai
       return share === null ? `${BY_QUADRATURE} ${area}` : `${area} ${BY_QUADRATURE}`;
     case 'densityPerMpc3': {
       if (shell.count === 0) return 'No galaxy, no error: the density is 0 for want of data.';
+      if (shell.densityPerMpc3 === 0)
+        return 'No share can be given: the weights of the galaxies add up to 0, and so the density is 0.';
       const error = shellQuantity('densityErrorPerMpc3')!;
       const poisson = `Poisson ± ${shownText(error, shell, units)} ${shownUnit(error, units)} (${percent(shell.densityErrorPerMpc3 / shell.densityPerMpc3)}), without clustering.`;
       return `${poisson} ${area}`;

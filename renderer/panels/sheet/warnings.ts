@@ -31,19 +31,22 @@ export function shellWarnings(
   if (!planned && shell.count === 0)
     tell('count', 'No galaxy lies in this shell: it has a volume, but nothing was measured in it.');
   if (!planned && shell.count > 0) {
-    if (shell.count < FEW_GALAXIES)
+    const galaxies = `${shell.count} ${shell.count === 1 ? 'galaxy' : 'galaxies'}`;
+    if (shell.densityPerMpc3 === 0) {
+      tell('weightedCount', `The weights of the ${galaxies} add up to 0: nothing follows from this shell.`);
+    } else if (shell.count < FEW_GALAXIES)
       tell(
         'count',
-        `Only ${shell.count} ${shell.count === 1 ? 'galaxy' : 'galaxies'}: the Poisson error of n is ${percent(shell.densityErrorPerMpc3 / shell.densityPerMpc3)}.`,
+        `Only ${galaxies}: the Poisson error of n is ${percent(shell.densityErrorPerMpc3 / shell.densityPerMpc3)}.`,
       );
     const power = shell.densityPerMpc3 * (conditions.p0Mpc3PerH3 / conditions.cosmology.h ** 3);
-    if (power < 1)
+    if (power > 0 && power < 1)
       tell(
         'densityPerMpc3',
         `n P0 is ${formatNumber(power, { significant: 2 })}, below 1: shot noise is above the signal, more galaxies help more than more volume.`,
       );
     const ratio = shell.effectiveVolumeMpc3 / shell.effectiveVolumeUniformMpc3;
-    if (Math.abs(ratio - 1) > UNEVEN)
+    if (shell.densityPerMpc3 > 0 && Math.abs(ratio - 1) > UNEVEN)
       tell(
         'effectiveVolumeMpc3',
         `V eff is ${percent(ratio)} of what an even density would give: n(z) changes a good deal inside this shell, narrower shells would show it.`,

@@ -4,6 +4,8 @@ import { roundLength, shellOutline } from '../../../renderer/panels/sheet/shellO
 import { shellWarnings } from '../../../renderer/panels/sheet/warnings.ts';
 import { shownText } from '../../../shared-core/report/quantity.ts';
 import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
+import { sortSample } from '../../../shared-core/shells/sample.ts';
+import { shellStatistics } from '../../../shared-core/shells/statistics.ts';
 import { conditions, cosmology, evenly, shellsOf } from './shellFixture.ts';
 
 const units = { perH: false, h: cosmology.h };
@@ -48,6 +50,18 @@ describe('what to beware of in a shell', () => {
   it('is an uneven n(z): all galaxies in a tenth of the shell', () => {
     const uneven = shellsOf(evenly(50_000, 0.5, 0.51), [0.5, 0.6])[0]!;
     expect(keysOf(shellWarnings(uneven, conditions, null, false))).toContain('effectiveVolumeMpc3');
+  });
+
+  it('is weights that are all 0, without a share of nothing', () => {
+    const redshift = evenly(25, 0.5, 0.6);
+    const sample = sortSample(redshift, new Float64Array(25));
+    const weightless = shellStatistics(sample, [0.5, 0.6], conditions)[0]!;
+    const told = shellWarnings(weightless, conditions, null, false);
+    expect(keysOf(told)).toEqual(['weightedCount']);
+    expect(told[0]!.sentence).toMatch(/weights of the 25 galaxies add up to 0/);
+    const of = { shell: weightless, conditions, estimate: null, units, cosmologyName: 'Flat 70 / 0.3' };
+    for (const { key } of SHELL_QUANTITIES) expect(explain(key, of).uncertainty).not.toContain('NaN');
+    expect(explain('densityPerMpc3', of).uncertainty).toMatch(/weights of the galaxies add up to 0/);
   });
 
   it('is nothing about galaxies for a plan, which has none', () => {
