@@ -29,8 +29,9 @@ export class EngineClient {
       (() => new Worker(new URL('./engine.worker.ts', import.meta.url), { type: 'module' }));
   }
 
-  want(wanted: Wanted): void {
-    this.#send({ kind: 'want', wanted });
+  /** `serial` comes back with the idle event that follows. */
+  want(wanted: Wanted, serial: number): void {
+    this.#send({ kind: 'want', serial, wanted });
   }
 
   row(index: number): Promise<GalaxyRow> {

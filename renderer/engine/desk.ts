@@ -35,6 +35,7 @@ class Superseded extends Error {}
 export class EngineDesk {
   readonly #around: Surroundings;
   #wanted: Wanted | null = null;
+  #serial = 0;
   #running = false;
   #keys: Partial<Record<Stage, string>> = {};
   #catalogue: Catalogue | null = null;
@@ -47,8 +48,9 @@ export class EngineDesk {
   }
 
   /** Takes the newest wish; a stage that runs for an older one stops at its next breath. */
-  async want(wanted: Wanted): Promise<void> {
+  async want(wanted: Wanted, serial = 0): Promise<void> {
     this.#wanted = wanted;
+    this.#serial = serial;
     if (this.#running) return;
     this.#running = true;
     try {
@@ -64,7 +66,7 @@ export class EngineDesk {
     } finally {
       this.#running = false;
     }
-    this.#around.emit({ kind: 'idle' });
+    this.#around.emit({ kind: 'idle', serial: this.#serial });
   }
 
   async #fulfil(wish: Wanted): Promise<void> {

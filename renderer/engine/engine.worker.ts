@@ -48,7 +48,7 @@ async function answer(id: number, work: () => unknown) {
 scope.onmessage = ({ data }: MessageEvent<EngineRequest>) => {
   switch (data.kind) {
     case 'want':
-      void desk.want(data.wanted);
+      void desk.want(data.wanted, data.serial);
       break;
     case 'row':
       void answer(data.id, () => desk.row(data.index));

@@ -70,7 +70,8 @@ export type EngineEvent =
   | { readonly kind: 'density'; readonly density: Float32Array | null }
   /** A sentence for the person; the stages after it have no result. */
   | { readonly kind: 'failed'; readonly stage: Stage; readonly sentence: string }
-  | { readonly kind: 'idle' };
+  /** Everything is up to date with the wish of this number. */
+  | { readonly kind: 'idle'; readonly serial: number };
 
 /** One catalogue row for the person who points at it. */
 export interface GalaxyRow {
@@ -84,7 +85,7 @@ export interface GalaxyRow {
 }
 
 export type EngineRequest =
-  | { readonly kind: 'want'; readonly wanted: Wanted }
+  | { readonly kind: 'want'; readonly serial: number; readonly wanted: Wanted }
   | { readonly kind: 'row'; readonly id: number; readonly index: number }
   | { readonly kind: 'preview'; readonly id: number; readonly source: EngineSource }
   | { readonly kind: 'setAsideList'; readonly id: number };

@@ -19,6 +19,7 @@ import './sheet/sheet.css';
 /** What the shells are worth: the ledger, and the sheet of the chosen shell. */
 export function WorthPanel() {
   const app = useApp();
+  const { engine } = app;
   const [wide, setWide] = useState(false);
   const order = useSignal<LedgerOrder | null>(null);
   const count = useComputed(() => app.derived.shells.value.length).value;
@@ -31,7 +32,7 @@ export function WorthPanel() {
           <Menu
             label="Copy the ledger"
             title="Copy the ledger"
-            disabled={count === 0}
+            disabled={count === 0 || !engine.fresh.value}
             entries={[
               {
                 kind: 'item',

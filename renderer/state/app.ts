@@ -50,7 +50,7 @@ export function createApp(
   // The fingerprint of a file is known once it has been read whole; from then on a change of the file is told.
   effect(() => {
     const loaded = engine.loaded.value;
-    const { source } = studyState.study.peek();
+    const { source } = studyState.study.value;
     if (loaded === null || source?.kind !== 'file' || source.sha256 !== null) return;
     if (loaded.sizeBytes !== source.sizeBytes) return;
     studyState.amend((study) => ({ ...study, source: { ...source, sha256: loaded.sha256 } }));

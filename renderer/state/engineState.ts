@@ -20,6 +20,11 @@ export interface EngineState {
   readonly density: ReadonlySignal<Float32Array | null>;
   /** What is being worked on; null when everything is up to date. */
   readonly progress: ReadonlySignal<{ readonly stage: Stage; readonly fraction: number | null } | null>;
+  /**
+   * False while the galaxies, region and cuts shown are not yet those of the study: numbers are then of what was
+   * there before, shown faint, and not given out.
+   */
+  readonly fresh: ReadonlySignal<boolean>;
   /** Why a stage could not be done; results before it stand. */
   readonly failure: ReadonlySignal<{ readonly stage: Stage | 'worker'; readonly sentence: string } | null>;
   readonly client: EngineClient;
@@ -44,6 +49,9 @@ export function createEngineState(
   const progress = signal<{ stage: Stage; fraction: number | null } | null>(null);
   const failure = signal<{ stage: Stage | 'worker'; sentence: string } | null>(null);
 
+  const fresh = signal(false);
+  let serial = 0;
+
   const receive = (event: EngineEvent): void => {
     switch (event.kind) {
       case 'progress':
@@ -62,22 +70,24 @@ export function createEngineState(
         return;
       case 'background':
         background.value = event.background;
+        if (failure.value?.stage === 'background') failure.value = null;
         return;
       case 'density':
         density.value = event.density;
+        if (failure.value?.stage === 'density') failure.value = null;
         return;
       case 'failed':
         failure.value = { stage: event.stage, sentence: event.sentence };
         progress.value = null;
         if (event.stage === 'load') loaded.value = null;
-        if (event.stage === 'load' || event.stage === 'select') {
-          selected.value = null;
-          background.value = null;
-          density.value = null;
-        }
+        if (event.stage === 'load' || event.stage === 'select') selected.value = null;
+        if (event.stage !== 'density') background.value = null;
+        density.value = null;
         return;
       case 'idle':
+        if (event.serial !== serial) return;
         progress.value = null;
+        fresh.value = true;
     }
   };
   const client = new EngineClient({
@@ -93,13 +103,13 @@ export function createEngineState(
     const { mapping, cuts, region, cosmology, look } = study.value;
     return { source: source.value, mapping, cuts, region, cosmology, density: look.colourBy === 'density' };
   });
-  let sent = '';
+  let sent: Wanted | null = null;
   const send = (): void => {
     const wish = wanted.value;
-    const text = JSON.stringify(wish);
-    if (text === sent) return;
-    sent = text;
-    client.want(wish);
+    if (sent !== null && sameParts(sent, wish, EVERYTHING)) return;
+    if (sent === null || !sameParts(sent, wish, GALAXIES)) fresh.value = false;
+    sent = wish;
+    client.want(wish, ++serial);
   };
   const stopFollowing = effect(send);
   return {
@@ -108,12 +118,13 @@ export function createEngineState(
     background,
     density,
     progress,
+    fresh,
     failure,
     client,
     readAgain() {
       client.stop();
       failure.value = null;
-      sent = '';
+      sent = null;
       send();
     },
     dispose() {
@@ -121,4 +132,12 @@ export function createEngineState(
       client.stop();
     },
   };
+}
+
+const GALAXIES = ['source', 'mapping', 'cuts', 'region'] as const;
+const EVERYTHING = [...GALAXIES, 'cosmology', 'density'] as const;
+
+// A part that no edit touched is the same object, so a polygon of many vertices costs nothing while an edge is dragged.
+function sameParts(a: Wanted, b: Wanted, parts: readonly (keyof Wanted)[]): boolean {
+  return parts.every((part) => a[part] === b[part] || JSON.stringify(a[part]) === JSON.stringify(b[part]));
 }

@@ -16,6 +16,7 @@ import type { Notices } from './notices.ts';
 import type { StudyState } from './studyState.ts';
 
 const KEEP_AFTER_MS = 1500;
+const KEEP_AT_LEAST_MS = 5000;
 
 /** Opening, saving and keeping: everything between the study and the machine's files. */
 export interface FileState {
@@ -131,6 +132,7 @@ export function createFileState({
     at: FileStamp | null,
     id: string | null,
   ) => {
+    opened++;
     studyState.replace(next, saved);
     target.value = from;
     stamp.value = at;
@@ -157,6 +159,11 @@ export function createFileState({
 
   const openCatalogueFile = (file: OpenedFile): void => {
     const named = remember(file);
+    if (study.value.source?.kind === 'demo') {
+      // One's own catalogue in the demo's place is a study of its own: it never goes into the demo's file.
+      target.value = null;
+      stamp.value = null;
+    }
     studyState.perform(
       change(`Open ${file.name}`, {
         source: named,
@@ -170,20 +177,30 @@ export function createFileState({
             : study.value.name,
       }),
     );
-    // A demo study is never overwritten by the person's own work.
-    if (target.value === null) stamp.value = null;
+  };
+
+  // One save after another: a second must expect what the first has written. What is saved is the study that was open
+  // when saving was asked for; another one opened meanwhile keeps its own place.
+  let opened = 0;
+  let saving: Promise<unknown> = Promise.resolve();
+  const inTurn = <T>(work: () => Promise<T>): Promise<T> => {
+    const turn = saving.then(work);
+    saving = turn.catch(() => undefined);
+    return turn;
   };
 
   const write = async (to: SaveTarget, expected: FileStamp | null): Promise<boolean> => {
     const written = study.value;
+    const openedThen = opened;
     const outcome = await bridge.saveStudy(to.id, new TextEncoder().encode(writeStudy(written)), expected);
     switch (outcome.kind) {
       case 'saved':
-        target.value = to;
-        stamp.value = outcome.stamp;
-        studyFileId.value = to.id;
-        studyState.markSaved(written);
-        await guarded(() => bridge.dropUnsaved(workId), undefined);
+        if (openedThen === opened) {
+          target.value = to;
+          stamp.value = outcome.stamp;
+          studyFileId.value = to.id;
+          studyState.markSaved(written);
+        }
         await refreshRecent();
         return true;
       case 'conflict':
@@ -191,7 +208,7 @@ export function createFileState({
           case 'replace':
             return write(to, outcome.found);
           case 'saveAs':
-            return saveAs();
+            return saveByName();
           case 'stay':
             return false;
         }
@@ -202,36 +219,63 @@ export function createFileState({
     }
   };
   const save = (): Promise<boolean> =>
-    guarded(async () => (target.value === null ? saveAs() : write(target.value, stamp.value)), false);
-  const saveAs = (): Promise<boolean> =>
+    inTurn(() =>
+      guarded(async () => (target.value === null ? saveByName() : write(target.value, stamp.value)), false),
+    );
+  const saveAs = (): Promise<boolean> => inTurn(saveByName);
+  const saveByName = (): Promise<boolean> =>
     guarded(async () => {
       const to = await bridge.chooseSaveTarget(study.value.name, stamp.value?.sha256 ?? null);
       return to === null ? false : write(to, to.existing);
     }, false);
 
-  // Unsaved work is kept a moment after the last change, and forgotten once it is saved or given up.
+  // Unsaved work is kept a moment after a change, and now and then while changes go on; it is forgotten once it is
+  // saved or given up. One after the other, so that an old copy never comes after a newer one.
   let timer: ReturnType<typeof setTimeout> | undefined;
+  let keeping: Promise<unknown> = Promise.resolve();
   let kept = false;
-  effect(() => {
-    const now = study.value;
+  let waitingSince = 0;
+  const later = (work: () => Promise<unknown>): void => {
+    keeping = keeping.then(() => guarded(work, undefined));
+  };
+  const keepNow = (): void => {
+    waitingSince = 0;
+    if (!unsaved.peek()) return;
+    kept = true;
+    const now = study.peek();
+    later(() => bridge.keepUnsaved(workId, now.name, new TextEncoder().encode(writeStudy(now))));
+  };
+  const forget = (): void => {
     clearTimeout(timer);
-    if (!unsaved.value) {
-      if (kept) void guarded(() => bridge.dropUnsaved(workId), undefined);
-      kept = false;
-      return;
-    }
-    timer = setTimeout(() => {
-      kept = true;
-      void guarded(
-        () => bridge.keepUnsaved(workId, now.name, new TextEncoder().encode(writeStudy(now))),
-        undefined,
-      );
-    }, KEEP_AFTER_MS);
+    waitingSince = 0;
+    if (kept) later(() => bridge.dropUnsaved(workId));
+    kept = false;
+  };
+  effect(() => {
+    void study.value;
+    if (!unsaved.value) return forget();
+    const now = performance.now();
+    if (waitingSince === 0) waitingSince = now;
+    clearTimeout(timer);
+    timer = setTimeout(keepNow, Math.max(0, Math.min(KEEP_AFTER_MS, waitingSince + KEEP_AT_LEAST_MS - now)));
   });
   effect(() => {
-    void guarded(() => bridge.setWindowState({ title: study.value.name, unsaved: unsaved.value }), undefined);
+    void guarded(
+      () =>
+        bridge.setWindowState({
+          title: `${study.value.name}${unsaved.value ? ' (not saved)' : ''} - Conewright`,
+          unsaved: unsaved.value,
+        }),
+      undefined,
+    );
   });
-  bridge.onCloseRequest(async () => ((await leave()) ? 'close' : 'stay'));
+  bridge.onCloseRequest(async () => {
+    if (!(await leave())) return 'stay';
+    // Given up or saved: nothing is to be offered back.
+    forget();
+    await keeping;
+    return 'close';
+  });
   void refreshRecent();
   void guarded(async () => void (offered.value = await bridge.listUnsaved()), undefined);
 
@@ -244,7 +288,7 @@ export function createFileState({
     const catalogues = files.filter((f) => !/\.json$/i.test(f.name));
     if (catalogues.length > 1)
       notices.tell(
-        `${catalogues.length} catalogues came, a study holds one: ${catalogues.at(-1)?.name} is open; undo brings the others back.`,
+        `${catalogues.length} catalogues came, a study holds one: ${catalogues.at(-1)?.name} is open.`,
         { tone: 'fact' },
       );
   };
@@ -271,7 +315,10 @@ export function createFileState({
         const [file] = await bridge.chooseFiles('catalogue');
         const named = missingSource.value ?? source.value;
         if (file === undefined || named?.kind !== 'file') return;
-        atHand.value = new Map(atHand.value).set(sourceKey(named), file);
+        // The place is new, size and fingerprint stay those that the study knows: another file is then told.
+        const placed = { ...named, name: file.name, path: file.path };
+        atHand.value = new Map(atHand.value).set(sourceKey(placed), file);
+        studyState.perform(change(`Find the catalogue at ${file.name}`, { source: placed }));
       }, undefined),
     save,
     saveAs,
@@ -282,6 +329,9 @@ export function createFileState({
         if (!(await leave())) return;
         offered.value = offered.value.filter((w) => w.workId !== id);
         await show(next, false, null, null, null);
+        // Kept under this window's name before the old copy goes: at no moment is there none.
+        await bridge.keepUnsaved(workId, next.name, new TextEncoder().encode(writeStudy(next)));
+        kept = true;
         await bridge.dropUnsaved(id);
       }, undefined),
     dropOffered: (id) =>
@@ -301,8 +351,9 @@ export function createFileState({
   };
 }
 
+// Not by size or contents: those change when a changed file is accepted, and the file stays the same one.
 function sourceKey(source: Extract<StudySource, { kind: 'file' }>): string {
-  return JSON.stringify([source.name, source.path]);
+  return source.path ?? source.name;
 }
 
 function baseName(fileName: string): string {

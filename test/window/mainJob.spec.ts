@@ -100,11 +100,14 @@ test("a catalogue of one's own: open, region, drag an edge, undo, save, reopen, 
   await page.keyboard.press('Control+Shift+z');
   expect(await edgesOf(page)).toEqual(dragged);
 
+  await expect(page).toHaveTitle('shapley (not saved) - Conewright');
+
   // Save under a name, and find everything again in another window.
   await page.keyboard.press('Control+s');
   await page.getByRole('textbox', { name: 'Name', exact: true }).fill('supercluster');
   await page.getByRole('dialog').getByRole('button', { name: 'Save' }).click();
   await expect(page.getByText(/not saved/)).toHaveCount(0);
+  await expect(page).toHaveTitle('shapley - Conewright');
   const saved = join(desk.folder, 'supercluster.study.json');
   await expect.poll(() => readJson(saved)?.edges).toEqual(dragged);
   const again = await desk.open({ files: [saved] });

@@ -18,8 +18,8 @@ export function LedgerTable(props: {
 }) {
   const { label, columns, order, onEnter } = props;
   const { derived, view, engine } = useApp();
-  // Until the galaxies are in, the numbers are those of an empty survey: shown faint.
-  const reading = engine.selected.value === null && engine.progress.value !== null;
+  // Until the galaxies are those of the study, its numbers are of something else: shown faint.
+  const reading = !engine.fresh.value && engine.failure.value === null;
   const shells = derived.shells.value;
   const total = derived.total.value;
   const rows = sortShells(shells, order.value, SHELL_QUANTITIES);

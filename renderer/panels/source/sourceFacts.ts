@@ -5,9 +5,9 @@ import type { Loaded } from '../../engine/protocol.ts';
 
 /** Whether the file that was read is another than the one that the study was made with. */
 export function sourceChanged(source: StudySource | null, loaded: Loaded | null): boolean {
-  return (
-    source?.kind === 'file' && source.sha256 !== null && loaded !== null && loaded.sha256 !== source.sha256
-  );
+  if (source?.kind !== 'file' || loaded === null) return false;
+  // Without a fingerprint (saved before the file was read whole) the size is all that is known.
+  return source.sha256 === null ? loaded.sizeBytes !== source.sizeBytes : loaded.sha256 !== source.sha256;
 }
 
 /** Why rows were set aside, in the order of the tests, only what occurred. */

@@ -182,7 +182,10 @@ describe('the source', () => {
   it('has changed only when another fingerprint was known before', () => {
     expect(sourceChanged(source, loaded('b'.repeat(64)))).toBe(true);
     expect(sourceChanged(source, loaded(source.sha256))).toBe(false);
-    expect(sourceChanged({ ...source, sha256: null }, loaded('b'.repeat(64)))).toBe(false);
+    // Without a fingerprint the size is all that is known.
+    const read = loaded('b'.repeat(64));
+    expect(sourceChanged({ ...source, sha256: null, sizeBytes: read.sizeBytes }, read)).toBe(false);
+    expect(sourceChanged({ ...source, sha256: null, sizeBytes: read.sizeBytes + 1 }, read)).toBe(true);
     expect(sourceChanged({ kind: 'demo', seed: 1 }, loaded('b'.repeat(64)))).toBe(false);
     expect(sourceChanged(source, null)).toBe(false);
   });

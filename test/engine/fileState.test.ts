@@ -1,0 +1,106 @@
+import { describe, expect, it, vi } from 'vitest';
+import { createFileState } from '../../renderer/state/fileState.ts';
+import { createNotices } from '../../renderer/state/notices.ts';
+import { createStudyState } from '../../renderer/state/studyState.ts';
+import type { Bridge } from '../../shared-core/bridge/contract.ts';
+import { emptyStudy, writeStudy } from '../../shared-core/study/document.ts';
+import { change } from '../../shared-core/study/edits.ts';
+
+const stamp = (n: number) => ({ sizeBytes: n, modifiedMs: n, sha256: String(n).padStart(64, '0') });
+const target = (id: string) => ({ id, name: `${id}.study.json`, folder: '/', existing: null });
+const text = (bytes: Uint8Array) => JSON.parse(new TextDecoder().decode(bytes)).name as string;
+
+/** A bridge that writes down what it is asked, and saves as slowly as the test likes. */
+function deskOf() {
+  const log: string[] = [];
+  let saves = 0;
+  let release = () => {};
+  const gate = { slow: false };
+  const bridge = {
+    hostKind: 'local',
+    saveFolder: '/',
+    launch: { files: [], troubles: [] },
+    chooseSaveTarget: async () => target('a'),
+    saveStudy: async (id: string, bytes: Uint8Array, expected: { sizeBytes: number } | null) => {
+      log.push(`save ${id} ${text(bytes)} expecting ${expected?.sizeBytes ?? 'nothing'}`);
+      if (gate.slow) await new Promise<void>((resume) => (release = resume));
+      return { kind: 'saved', stamp: stamp(++saves) };
+    },
+    recentStudies: async () => [],
+    listUnsaved: async () => [],
+    keepUnsaved: async (_: string, title: string) => void log.push(`keep ${title}`),
+    takeUnsaved: async () => new TextEncoder().encode(writeStudy(emptyStudy('found again'))),
+    dropUnsaved: async (id: string) => void log.push(id === 'old' ? 'drop old' : 'drop mine'),
+    setWindowState: async () => undefined,
+    onCloseRequest: () => () => undefined,
+  } as unknown as Bridge;
+  const notices = createNotices();
+  const studyState = createStudyState(emptyStudy('one'), notices);
+  const files = createFileState({
+    bridge,
+    notices,
+    studyState,
+    askLeave: async () => 'leave',
+    askReplace: async () => 'stay',
+  });
+  const rename = (name: string) => studyState.perform(change('Rename', { name }));
+  return { log, files, studyState, rename, gate, release: () => release() };
+}
+const settle = () => new Promise((resume) => setTimeout(resume, 5));
+
+describe('saving', () => {
+  it('two saves in a row expect each other, and an edit made meanwhile stays unsaved', async () => {
+    const { log, files, rename, studyState, gate, release } = deskOf();
+    rename('first');
+    gate.slow = true;
+    const first = files.save();
+    await settle();
+    rename('second');
+    const second = files.save();
+    await settle();
+    expect(log).toEqual(['save a first expecting nothing']);
+    release();
+    await first;
+    await settle();
+    expect(studyState.unsaved.value).toBe(true);
+    release();
+    await second;
+    expect(log).toEqual(['save a first expecting nothing', 'save a second expecting 1']);
+    expect(studyState.unsaved.value).toBe(false);
+  });
+
+  it('a save that ends after another study was opened leaves that study its own place', async () => {
+    const { files, rename, gate, release } = deskOf();
+    rename('first');
+    gate.slow = true;
+    const saving = files.save();
+    await settle();
+    await files.newStudy();
+    release();
+    await saving;
+    expect(files.target.value).toBeNull();
+  });
+});
+
+describe('work that is not saved', () => {
+  it('is kept while changes go on, not only once they stop', async () => {
+    vi.useFakeTimers();
+    try {
+      const { log, rename } = deskOf();
+      for (let i = 0; i < 8; i++) {
+        rename(`edit ${i}`);
+        await vi.advanceTimersByTimeAsync(1000);
+      }
+      expect(log.filter((l) => l.startsWith('keep'))).not.toEqual([]);
+    } finally {
+      vi.useRealTimers();
+    }
+  });
+
+  it('taken up again is kept under the new window before the old copy goes', async () => {
+    const { log, files, studyState } = deskOf();
+    await files.takeOffered('old');
+    expect(studyState.study.value.name).toBe('found again');
+    expect(log).toEqual(['keep found again', 'drop old']);
+  });
+});
