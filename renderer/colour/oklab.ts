@@ -57,8 +57,3 @@ export function encodeSrgb(linear: number): number {
   const v = Math.min(1, Math.max(0, linear));
   return v <= 0.0031308 ? 12.92 * v : 1.055 * v ** (1 / 2.4) - 0.055;
 }
-
-/** sRGB code value 0..1 to linear light (IEC 61966-2-1). */
-export function decodeSrgb(code: number): number {
-  return code <= 0.04045 ? code / 12.92 : ((code + 0.055) / 1.055) ** 2.4;
-}

@@ -315,9 +315,10 @@ export class ConeView {
           if (this.again) this.invalidate();
         },
         () => {
-          // Workers that ended are replaced by the painter, which asks for a new picture.
+          // Workers that ended are replaced by the painter, which has asked for a new picture.
           this.drawing = false;
           this.drawnKey = '';
+          if (this.again) this.invalidate();
         },
       );
   }

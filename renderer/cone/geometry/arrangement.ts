@@ -53,10 +53,13 @@ export function fittingView(fieldCount: number, wide: boolean): ViewName {
 
 /**
  * Heights of parallel lanes in pixels: each field gets what it needs at true scale when there is room; narrow ones
- * get at least an equal share of half the room so that they can be opened, wide ones share the rest by need.
+ * get at least an equal share of two fifths of the room so that they can be opened, wide ones share the rest by need.
  */
 export function laneHeights(naturalPx: readonly number[], availablePx: number): number[] {
-  const least = Math.min(availablePx / naturalPx.length, Math.max(60, availablePx / (2 * naturalPx.length)));
+  const least = Math.min(
+    availablePx / naturalPx.length,
+    Math.max(60, availablePx / (2.5 * naturalPx.length)),
+  );
   const wanted = naturalPx.map((h) => Math.max(h, least));
   const total = wanted.reduce((sum, h) => sum + h, 0);
   if (total <= availablePx) {
@@ -73,15 +76,6 @@ export function laneHeights(naturalPx: readonly number[], availablePx: number): 
 export function commonFrame(fields: readonly ArrangedField[]): Frame {
   const only = fields.length === 1 ? fields[0]! : undefined;
   return only && !only.surrounds ? only.frame : SKY_FRAME;
-}
-
-/** How high above and below its axis a cone of far radius `far` reaches in display space. */
-export function reach(
-  extent: LateralExtent,
-  sidewaysFactor: number,
-  far: number,
-): [down: number, up: number] {
-  return [-extent.alongMin * sidewaysFactor * far, extent.alongMax * sidewaysFactor * far];
 }
 
 /**

@@ -62,6 +62,9 @@ export function strength(light: number, stretch: Stretch, single: number, full: 
   }
 }
 
+/** Toward full strength the colour itself begins to glow: how much of it gives way to the glow's, by brightness 0..1. */
+export const glowShare = (cover: number): number => (0.65 * Math.max(0, cover - 0.7)) / 0.3;
+
 /**
  * Table of finished pixels: VALUE_STEPS rows of LIGHT_STEPS words, each red, green, blue, alpha bytes in memory order
  * of a little-endian machine (as ImageData wants). Entry 0 of each row is the bare ground.
@@ -74,8 +77,7 @@ export function toneTable<T extends Uint32Array>(tone: Tone, table: T): T {
   const fixed = [0, 1, 2].map(() => new Float64Array(LIGHT_STEPS));
   for (let i = 0; i < LIGHT_STEPS; i++) {
     const cover = i === 0 ? 0 : strength(lightOfIndex(i), tone.stretch, tone.single, tone.full);
-    // Toward full strength the colour itself begins to glow.
-    const burn = (0.65 * Math.max(0, cover - 0.7)) / 0.3;
+    const burn = glowShare(cover);
     share[i] = cover * (1 - burn);
     for (let k = 0; k < 3; k++) {
       fixed[k]![i] = tone.background[k]! * (1 - cover) + cover * burn * tone.glow[k]! + 0.5;

@@ -8,6 +8,7 @@ import type {
   Tick,
   ViewName,
 } from '../../../renderer/cone/types.ts';
+import { measureCone, measurePlainPoints } from './measure.ts';
 import { clustered, type Patch, read, universe } from './sample.ts';
 
 const query = new URLSearchParams(location.search);
@@ -185,35 +186,14 @@ if (query.has('view')) cone.setView(text('view', 'sideOn') as ViewName);
 const galaxies = clustered(chosen.patches);
 cone.setGalaxies(galaxies);
 
-/** Orbits for so many frames after a warm-up and says how quick it was. */
-async function measure(frames: number) {
-  const next = () => new Promise((resolve) => requestAnimationFrame(resolve));
-  const frame = async (up: number) => {
-    const before = log.length;
-    cone.orbitBy(3, up);
-    while (log.length === before) await next();
-  };
-  for (let i = 0; i < 8; i++) await frame(1);
-  const start = performance.now();
-  const from = log.length;
-  for (let i = 0; i < frames; i++) await frame(i < frames / 2 ? 1 : -1);
-  const ms = (performance.now() - start) / frames;
-  const moving = log.slice(from);
-  const restStart = performance.now();
-  while (!log.at(-1)!.atRest) await next();
-  const restMs = performance.now() - restStart;
-  const times = moving.map((f) => f.milliseconds).sort((a, b) => a - b);
-  const pickStart = performance.now();
-  for (let i = 0; i < 10; i++) await cone.galaxyAt(500 + 10 * i, 380);
-  return {
-    framesASecond: +(1000 / ms).toFixed(1),
-    drawnWhileMoving: Math.round(moving.reduce((sum, f) => sum + f.drawn, 0) / moving.length),
-    total: moving.at(-1)!.total,
-    answerMs: { median: times[times.length >> 1], worst: times.at(-1) },
-    restMs: Math.round(restMs),
-    pickMs: +((performance.now() - pickStart) / 10).toFixed(1),
-    layer: moving.at(-1)!.layer,
-  };
-}
-
-Object.assign(window, { cone, log, makeScale, THEMES, shells, galaxies, measure });
+Object.assign(window, {
+  cone,
+  log,
+  makeScale,
+  THEMES,
+  shells,
+  galaxies,
+  measure: (frames: number) => measureCone(cone, log, frames),
+  measurePlain: (points: number, frames: number) =>
+    measurePlainPoints(points, innerWidth, innerHeight, frames),
+});

@@ -4,6 +4,8 @@ import type { PointLayout } from '../pointArrays.ts';
 export const RESERVED_BYTES = 1048576;
 export const TABLE_AT = 64;
 export const SCRATCH_AT = 655360;
+/** A counter of workers that have splatted their share: the tones begin when all have. */
+export const BARRIER_AT = 16;
 
 /** A run of slots to be splatted with one matrix; start is a multiple of four. */
 export interface Run {
@@ -11,6 +13,18 @@ export interface Run {
   readonly to: number;
   readonly matrix: Float32Array;
   readonly light: number;
+}
+
+/** How a worker finishes its part of a picture once all points are in. */
+export interface Finish {
+  readonly rows: readonly [from: number, to: number];
+  /** Byte offsets of all sums to be added up, and of the picture; not used by a worker with its own memory. */
+  readonly allSumsAt: readonly number[];
+  readonly imageAt: number;
+  /** Workers to wait for. */
+  readonly hands: number;
+  /** For a worker with its own memory, when it changed. */
+  readonly table: Uint32Array | null;
 }
 
 /** What the page says to a splat worker. Every message with an id is answered by one with the same id. */
@@ -38,7 +52,7 @@ export type ToWorker =
       readonly value?: Uint8Array;
     }
   | {
-      readonly kind: 'splat';
+      readonly kind: 'draw';
       readonly id: number;
       readonly runs: readonly Run[];
       readonly width: number;
@@ -49,17 +63,8 @@ export type ToWorker =
       readonly sumsAt: number;
       /** Begin anew rather than add to what is there. */
       readonly clear: boolean;
-    }
-  | {
-      readonly kind: 'tone';
-      readonly id: number;
-      readonly width: number;
-      readonly rows: readonly [from: number, to: number];
-      readonly height: number;
-      readonly sumsAt: readonly number[];
-      readonly imageAt: number;
-      /** For a worker with its own memory, when it changed. */
-      readonly table: Uint32Array | null;
+      /** With the last part of a picture: finish it. */
+      readonly finish: Finish | null;
     }
   | {
       readonly kind: 'pick';
@@ -73,7 +78,12 @@ export type ToWorker =
 export type FromWorker =
   | { readonly kind: 'done'; readonly id: number; readonly wide?: boolean; readonly milliseconds?: number }
   /** The finished picture, from a worker with its own memory. */
-  | { readonly kind: 'image'; readonly id: number; readonly image: Uint32Array<ArrayBuffer> }
+  | {
+      readonly kind: 'image';
+      readonly id: number;
+      readonly image: Uint32Array<ArrayBuffer>;
+      readonly milliseconds: number;
+    }
   | {
       readonly kind: 'hit';
       readonly id: number;

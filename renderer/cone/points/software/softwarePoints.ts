@@ -58,10 +58,12 @@ export class SoftwarePoints implements PointLayer {
     const width = Math.max(1, Math.round(frame.viewport.widthPx * frame.pixelRatio));
     const height = Math.max(1, Math.round(frame.viewport.heightPx * frame.pixelRatio));
     const points = frame.parts.reduce((sum, part) => sum + part.range.count, 0) * frame.fraction;
-    if (!this.store || points === 0) {
+    if (points === 0) {
       this.blank(width, height, frame);
       return true;
     }
+    // New workers wait for their points: the old picture stands.
+    if (!this.store) return false;
     await this.ready;
     const picture: SplatPicture = {
       width,
@@ -72,20 +74,22 @@ export class SoftwarePoints implements PointLayer {
         : [0, Number.MAX_VALUE, 1],
     };
     const steps = Math.max(1, Math.ceil(points / this.affordable(STEP_MS, frame)));
-    let spent = 0;
-    for (let step = 0; step < steps; step++) {
-      spent += await this.pool.splat(runsOf(frame, step / steps, (step + 1) / steps), picture, step === 0);
-      if (step < steps - 1 && stop()) return false;
-    }
-    this.learn(frame, points, spent);
     if (this.image?.width !== width || this.image.height !== height)
       this.image = new ImageData(width, height);
-    await this.pool.develop(picture, frame.tone, this.image);
+    const image = this.image;
+    let spent = 0;
+    for (let step = 0; step < steps; step++) {
+      const last = step === steps - 1;
+      const runs = runsOf(frame, step / steps, (step + 1) / steps);
+      spent += await this.pool.draw(runs, picture, step === 0, last ? { tone: frame.tone, image } : null);
+      if (!last && stop()) return false;
+    }
+    this.learn(frame, points, spent);
     if (this.canvas.width !== width || this.canvas.height !== height) {
       this.canvas.width = width;
       this.canvas.height = height;
     }
-    this.context.putImageData(this.image, 0, 0);
+    this.context.putImageData(image, 0, 0);
     return true;
   }
 

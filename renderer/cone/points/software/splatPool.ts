@@ -2,7 +2,7 @@ import type { PointLayout } from '../pointArrays.ts';
 import type { PointStore } from '../pointStore.ts';
 import { nextTask } from '../slices.ts';
 import { LIGHT_STEPS, type Tone, toneTable, VALUE_STEPS } from '../tone.ts';
-import { type FromWorker, type Run, SCRATCH_AT, TABLE_AT, type ToWorker } from './messages.ts';
+import { BARRIER_AT, type FromWorker, type Run, SCRATCH_AT, TABLE_AT, type ToWorker } from './messages.ts';
 import { sumsLength } from './splat.ts';
 import { SCRATCH_BYTES } from './wideKernel.ts';
 
@@ -12,6 +12,8 @@ const MOST_PAGES = 65536;
 const MOST_WORKERS = 4;
 /** So many single points are one worker's work: more hands would only bring more sums to add. */
 const WORK_OF_ONE = 300_000;
+/** Longer than any honest step takes. */
+const LONGEST_ANSWER_MS = 15_000;
 /** Slots sent at once to a worker with its own memory. */
 const SENT_AT_ONCE = 262144;
 
@@ -37,6 +39,7 @@ export class SplatPool {
   private memory: WebAssembly.Memory | null = null;
   private layout: PointLayout | null = null;
   private nextId = 1;
+  private ended = false;
   private tone: Tone | null = null;
   /** Workers whose sums hold the picture. */
   private used = 1;
@@ -115,48 +118,57 @@ export class SplatPool {
   }
 
   /**
-   * Adds runs to the sums; every worker takes its share of each run, but a small picture is the work of one.
-   * Answers the milliseconds spent by all of them together.
+   * Adds runs to the sums; every worker takes its share of each run, but a small picture is the work of one. With the
+   * last runs of a picture the sums become an image. Answers the milliseconds of splatting by all of them together.
    *
    * @param fresh begins a new picture
    */
-  async splat(runs: readonly Run[], picture: SplatPicture, fresh: boolean): Promise<number> {
-    const sumsAt = this.room(picture).sumsAt;
+  async draw(
+    runs: readonly Run[],
+    picture: SplatPicture,
+    fresh: boolean,
+    finish: { readonly tone: Tone; readonly image: ImageData } | null,
+  ): Promise<number> {
+    const { width, height } = picture;
+    const { sumsAt, imageAt } = this.room(picture);
+    const all = this.workers.length;
     if (fresh) {
       const points = runs.reduce((sum, run) => sum + run.to - run.from, 0);
-      this.used = points * (picture.diameter > 1.5 ? 4 : 1) < WORK_OF_ONE ? 1 : this.workers.length;
+      this.used = points * (picture.diameter > 1.5 ? 4 : 1) < WORK_OF_ONE ? 1 : all;
     }
     // Toning leaves the sums at zero; they are cleared only where a picture was given up or has another size.
     const clear = fresh && !this.clean;
     this.clean = false;
+    const table = finish ? this.tableFor(finish.tone) : null;
+    if (this.memory) Atomics.store(new Int32Array(this.memory.buffer, BARRIER_AT, 1), 0, 0);
     const answers = await Promise.all(
-      Array.from({ length: clear ? this.workers.length : this.used }, (_, i) => {
-        const share = i < this.used ? this.share(runs, i, this.used) : [];
-        return this.ask(i, { kind: 'splat', ...picture, runs: share, clear, sumsAt: sumsAt[i]! });
-      }),
+      Array.from({ length: clear || finish ? all : this.used }, (_, i) =>
+        this.ask(i, {
+          kind: 'draw',
+          ...picture,
+          runs: i < this.used ? this.share(runs, i, this.used) : [],
+          clear,
+          sumsAt: sumsAt[i]!,
+          finish: finish && {
+            rows: [Math.floor((height * i) / all), Math.floor((height * (i + 1)) / all)],
+            allSumsAt: sumsAt.slice(0, this.used),
+            imageAt,
+            hands: all,
+            table,
+          },
+        }),
+      ),
     );
-    return answers.reduce((sum, m) => sum + (m.kind === 'done' ? (m.milliseconds ?? 0) : 0), 0);
-  }
-
-  /** Tones the sums into an image of the picture's size. */
-  async develop(picture: SplatPicture, tone: Tone, image: ImageData): Promise<void> {
-    const { width, height } = picture;
-    const { sumsAt, imageAt } = this.room(picture);
-    const used = sumsAt.slice(0, this.used);
-    const table = this.tableFor(tone);
-    const count = this.workers.length;
-    const answers = await Promise.all(
-      this.workers.map((_, i) => {
-        const rows = [Math.floor((height * i) / count), Math.floor((height * (i + 1)) / count)] as const;
-        return this.ask(i, { kind: 'tone', width, height, rows, sumsAt: used, imageAt, table });
-      }),
-    );
-    this.clean = true;
-    this.cleanSize = `${width} ${height}`;
-    const first = answers[0]!;
-    // ImageData takes no shared memory: one copy is needed.
-    if (first.kind === 'image') image.data.set(new Uint8Array(first.image.buffer));
-    else if (this.memory) image.data.set(new Uint8Array(this.memory.buffer, imageAt, 4 * width * height));
+    if (finish) {
+      this.clean = true;
+      this.cleanSize = `${width} ${height}`;
+      const first = answers[0]!;
+      // ImageData takes no shared memory: one copy is needed.
+      if (first.kind === 'image') finish.image.data.set(new Uint8Array(first.image.buffer));
+      else if (this.memory)
+        finish.image.data.set(new Uint8Array(this.memory.buffer, imageAt, 4 * width * height));
+    }
+    return answers.reduce((sum, m) => sum + ('milliseconds' in m ? (m.milliseconds ?? 0) : 0), 0);
   }
 
   /** The slot drawn nearest to a pixel, searched by all workers. */
@@ -172,7 +184,9 @@ export class SplatPool {
   }
 
   dispose(): void {
+    this.ended = true;
     for (const worker of this.workers) worker.terminate();
+    for (const { reject } of this.waiting.values()) reject(new Error('the drawing workers were ended'));
     this.waiting.clear();
   }
 
@@ -213,7 +227,19 @@ export class SplatPool {
   private ask(worker: number, message: Unsent, transfer: Transferable[] = []): Promise<FromWorker> {
     const id = this.nextId++;
     return new Promise((resolve, reject) => {
-      this.waiting.set(id, { resolve, reject });
+      // A worker that is ended for want of memory says nothing.
+      const late = setTimeout(() => this.fail('a drawing worker does not answer'), LONGEST_ANSWER_MS);
+      const settled = () => clearTimeout(late);
+      this.waiting.set(id, {
+        resolve: (m) => {
+          settled();
+          resolve(m);
+        },
+        reject: (e) => {
+          settled();
+          reject(e);
+        },
+      });
       this.workers[worker]!.postMessage({ ...message, id }, transfer);
     });
   }
@@ -222,11 +248,17 @@ export class SplatPool {
     const asked = this.waiting.get(message.id);
     this.waiting.delete(message.id);
     if (!asked) return;
-    if (message.kind === 'failed') asked.reject(new Error(message.reason));
-    else asked.resolve(message);
+    if (message.kind !== 'failed') {
+      asked.resolve(message);
+      return;
+    }
+    asked.reject(new Error(message.reason));
+    this.fail(message.reason);
   }
 
   private fail(reason: string): void {
+    if (this.ended) return;
+    this.ended = true;
     for (const { reject } of this.waiting.values()) reject(new Error(reason));
     this.waiting.clear();
     this.failed(reason);

@@ -1,12 +1,23 @@
 import { pickPoint } from '../../geometry/pickPoint.ts';
 import { type PointArrays, type PointLayout, pointLayout, pointViews } from '../pointArrays.ts';
 import { LIGHT_STEPS, VALUE_STEPS } from '../tone.ts';
-import { type FromWorker, RESERVED_BYTES, SCRATCH_AT, TABLE_AT, type ToWorker } from './messages.ts';
+import {
+  BARRIER_AT,
+  type Finish,
+  type FromWorker,
+  RESERVED_BYTES,
+  SCRATCH_AT,
+  TABLE_AT,
+  type ToWorker,
+} from './messages.ts';
 import { softDiscs, splat, sumsLength } from './splat.ts';
 import { toneRows } from './toneRows.ts';
 import { type WideKernel, wideKernel } from './wideKernel.ts';
 
 const PAGE = 65536;
+const LONGEST_WAIT_MS = 5000;
+
+type Draw = Extract<ToWorker, { kind: 'draw' }>;
 
 let memory: WebAssembly.Memory | null = null;
 let isShared = false;
@@ -45,7 +56,7 @@ function ownRoom(width: number, height: number): { sumsAt: number; imageAt: numb
   return { sumsAt, imageAt };
 }
 
-function splatRuns(message: Extract<ToWorker, { kind: 'splat' }>): void {
+function splatRuns(message: Draw): void {
   const { width, height, diameter, emphasis } = message;
   const sumsAt = isShared ? message.sumsAt : ownRoom(width, height).sumsAt;
   const sums = new Float32Array(memory!.buffer, sumsAt, sumsLength(width, height));
@@ -69,26 +80,50 @@ function splatRuns(message: Extract<ToWorker, { kind: 'splat' }>): void {
   }
 }
 
-function tone(message: Extract<ToWorker, { kind: 'tone' }>): void {
-  const { id, width, height } = message;
-  const room = isShared ? message : ownRoom(width, height);
-  const sumsAt = isShared ? message.sumsAt : [ownRoom(width, height).sumsAt];
-  const buffer = memory!.buffer;
-  const table = new Uint32Array(buffer, TABLE_AT, VALUE_STEPS * LIGHT_STEPS);
-  if (message.table) table.set(message.table);
-  const image = new Uint32Array(buffer, room.imageAt, width * height);
-  const [from, to] = message.rows;
-  if (kernel) kernel.toneRows(sumsAt, TABLE_AT, room.imageAt, width, from, to);
-  else {
-    const sums = sumsAt.map((at) => new Float32Array(buffer, at, sumsLength(width, height)));
-    toneRows(sums, table, image, width, from, to);
-  }
-  if (isShared) {
-    answer({ kind: 'done', id });
+/** Waits until all hands have splatted their share. */
+function meet(hands: number): void {
+  const barrier = new Int32Array(memory!.buffer, BARRIER_AT, 1);
+  if (Atomics.add(barrier, 0, 1) + 1 >= hands) {
+    Atomics.notify(barrier, 0);
     return;
   }
-  const copy = new Uint32Array(image);
-  answer({ kind: 'image', id, image: copy }, [copy.buffer]);
+  for (let there = Atomics.load(barrier, 0); there < hands; there = Atomics.load(barrier, 0)) {
+    // A worker that ended will not come: the page is told, and starts anew.
+    if (Atomics.wait(barrier, 0, there, LONGEST_WAIT_MS) === 'timed-out')
+      throw new Error('a drawing worker is missing');
+  }
+}
+
+function toneTo(sumsAt: readonly number[], imageAt: number, message: Draw, [from, to]: Finish['rows']): void {
+  const { width, height } = message;
+  const buffer = memory!.buffer;
+  if (kernel) {
+    kernel.toneRows(sumsAt, TABLE_AT, imageAt, width, from, to);
+    return;
+  }
+  const sums = sumsAt.map((at) => new Float32Array(buffer, at, sumsLength(width, height)));
+  const table = new Uint32Array(buffer, TABLE_AT, VALUE_STEPS * LIGHT_STEPS);
+  toneRows(sums, table, new Uint32Array(buffer, imageAt, width * height), width, from, to);
+}
+
+function draw(message: Draw): void {
+  const { id, finish } = message;
+  const start = performance.now();
+  splatRuns(message);
+  const milliseconds = performance.now() - start;
+  if (finish && isShared) {
+    meet(finish.hands);
+    toneTo(finish.allSumsAt, finish.imageAt, message, finish.rows);
+  } else if (finish) {
+    const { width, height } = message;
+    const room = ownRoom(width, height);
+    if (finish.table) new Uint32Array(memory!.buffer, TABLE_AT, finish.table.length).set(finish.table);
+    toneTo([room.sumsAt], room.imageAt, message, finish.rows);
+    const image = new Uint32Array(memory!.buffer, room.imageAt, width * height).slice();
+    answer({ kind: 'image', id, image, milliseconds }, [image.buffer]);
+    return;
+  }
+  answer({ kind: 'done', id, milliseconds });
 }
 
 function fill(message: Extract<ToWorker, { kind: 'fill' }>): void {
@@ -117,14 +152,8 @@ async function handle(message: ToWorker): Promise<void> {
       fill(message);
       answer({ kind: 'done', id });
       return;
-    case 'splat': {
-      const start = performance.now();
-      splatRuns(message);
-      answer({ kind: 'done', id, milliseconds: performance.now() - start });
-      return;
-    }
-    case 'tone':
-      tone(message);
+    case 'draw':
+      draw(message);
       return;
     case 'pick': {
       let hit = null;
