@@ -27,7 +27,12 @@ describe('files that cannot be used: exit 1 and a sentence', () => {
     [
       'a-million-columns.csv',
       `${Array.from({ length: 1_000_000 }, (_, i) => `c${i}`).join(',')}\n1\n`,
-      /columns/,
+      /^conewright: Line 1 is longer than/,
+    ],
+    [
+      'many-columns.csv',
+      `${Array.from({ length: 20_000 }, (_, i) => `c${i}`).join(',')}\n1\n`,
+      /20000 columns/,
     ],
     ['open-quote.csv', `ra,dec,z\n"150,2,0.1\n${rows.join('\n')}\n`, /quote/i],
     ['no-redshift.csv', 'ra,dec,flux\n1,2,3\n', /redshift/i],
