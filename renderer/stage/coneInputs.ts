@@ -51,8 +51,14 @@ export function radialScale(
     comovingMpc[i] = distance.at(z);
     radius[i] = own.at(z);
   }
-  const title = (r: Reading) => `${r.words}${r.unit === 'z' ? '' : `, ${r.unit}`}`;
-  const ticks = (r: Reading) => rulerTicks(r, scale, deepest, distance.at);
+  const title = (r: Reading) =>
+    `${r.words}${r.kind === 'lookback' ? ' (age)' : ''}${r.unit === 'z' ? '' : `, ${r.unit}`}`;
+  // Where there is room a lookback time is joined by the age that the universe had then.
+  const ageTodayGyr = cosmology.ageGyr(0);
+  const withAge = (lookbackGyr: number) =>
+    Number.isFinite(ageTodayGyr) ? ` (${formatNumber(ageTodayGyr - lookbackGyr, { decimals: 1 })})` : '';
+  const ticks = (r: Reading) =>
+    rulerTicks(r, scale, deepest, distance.at, r.kind === 'lookback' ? withAge : () => '');
   const mpcText = (mpc: number) => {
     const shown = units.perH ? mpc * units.h : mpc;
     return `${markText(Number(shown.toPrecision(3)))} ${readings.comoving.unit}`;
@@ -80,13 +86,14 @@ function rulerTicks(
   scale: RadialPixel,
   deepest: number,
   distanceAt: (z: number) => number,
+  more: (value: number) => string,
 ): Tick[] {
   const pxOf = (value: number) => scale.at(reading.redshiftAt(value));
   const high = reading.shownAt(deepest);
   const coarse = new Set(roundValues(0, high, pxOf, () => WIDE_GAP_PX));
   return roundValues(0, high, pxOf, () => NARROW_GAP_PX).map((value) => ({
     comovingMpc: distanceAt(reading.redshiftAt(value)),
-    text: markText(value),
+    text: markText(value) + (coarse.has(value) && value > 0 ? more(value) : ''),
     level: coarse.has(value) ? 0 : 1,
   }));
 }

@@ -82,3 +82,13 @@ export function findPublishedSet(key: string): PublishedSet {
     'use',
   );
 }
+
+/** The key of the published set that has exactly these parameters, or null for own ones. */
+export function publishedSetKey(parameters: CosmologyParameters): string | null {
+  const text = canonical(parameters);
+  return PUBLISHED_SETS.find((set) => canonical(set.parameters) === text)?.key ?? null;
+}
+
+function canonical(p: CosmologyParameters): string {
+  return JSON.stringify([p.h0KmSMpc, p.omegaM0, p.omegaDe0, p.w0, p.wa, p.tCmbK, p.nEff, p.neutrinoMassesEv]);
+}

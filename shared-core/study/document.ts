@@ -1,6 +1,6 @@
 import { Refusal } from '../base/refusal.ts';
 import { validateCosmology } from '../cosmology/parameters.ts';
-import { findPublishedSet, PUBLISHED_SETS } from '../cosmology/publishedSets.ts';
+import { findPublishedSet, publishedSetKey } from '../cosmology/publishedSets.ts';
 import { checkSomeEdges } from '../shells/edges.ts';
 import { DEFAULT_P0_MPC3_PER_H3 } from '../shells/statistics.ts';
 import { compileRegion } from '../sky/compileRegion.ts';
@@ -74,7 +74,8 @@ export function readStudy(text: string, migrations: Migrations = MIGRATIONS): St
     );
   }
   checkMeaning(parsed.data);
-  return { ...parsed.data, cosmologySet: setOf(parsed.data) };
+  // A name stands for its paper's numbers: a study edited by hand may not lend it to others.
+  return { ...parsed.data, cosmologySet: publishedSetKey(parsed.data.cosmology) };
 }
 
 function checkMeaning(study: Study): void {
@@ -86,13 +87,4 @@ function checkMeaning(study: Study): void {
     if (error instanceof Refusal) throw new Refusal(`The study cannot be used: ${error.message}`);
     throw error;
   }
-}
-
-// A name stands for its paper's numbers: a study edited by hand may not lend it to others.
-function setOf({ cosmologySet, cosmology }: Study): string | null {
-  const set = PUBLISHED_SETS.find(({ key }) => key === cosmologySet);
-  if (set === undefined) return null;
-  const keys = Object.keys(set.parameters) as (keyof typeof set.parameters)[];
-  const same = keys.every((k) => JSON.stringify(set.parameters[k]) === JSON.stringify(cosmology[k]));
-  return same ? set.key : null;
 }

@@ -1,5 +1,9 @@
 import type { CosmologyParameters } from '../../../shared-core/cosmology/parameters.ts';
-import { findPublishedSet, PUBLISHED_SETS } from '../../../shared-core/cosmology/publishedSets.ts';
+import {
+  findPublishedSet,
+  PUBLISHED_SETS,
+  publishedSetKey,
+} from '../../../shared-core/cosmology/publishedSets.ts';
 import { change } from '../../../shared-core/study/edits.ts';
 import { useApp } from '../../state/app.ts';
 import { ChoiceField } from '../../ui/ChoiceField.tsx';
@@ -8,7 +12,6 @@ import { Section } from '../../ui/Section.tsx';
 import { useStudyPart } from '../useStudyPart.ts';
 import { DerivedNumbers } from './DerivedNumbers.tsx';
 import { OwnParameters } from './OwnParameters.tsx';
-import { setOf } from './parameterFields.ts';
 
 const OWN = 'own';
 
@@ -51,7 +54,7 @@ export function CosmologySection() {
       )}
       <OwnParameters
         parameters={cosmology}
-        onChange={(parameters, label) => put(parameters, setOf(parameters), label)}
+        onChange={(parameters, label) => put(parameters, publishedSetKey(parameters), label)}
       />
       <DerivedNumbers />
       <NumberField

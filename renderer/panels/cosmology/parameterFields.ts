@@ -1,7 +1,6 @@
 import { Refusal } from '../../../shared-core/base/refusal.ts';
 import { parseNumber } from '../../../shared-core/catalogue/numbers.ts';
 import { type CosmologyParameters, validateCosmology } from '../../../shared-core/cosmology/parameters.ts';
-import { PUBLISHED_SETS } from '../../../shared-core/cosmology/publishedSets.ts';
 
 export type ParameterName = keyof CosmologyParameters;
 type NumberName = Exclude<ParameterName, 'omegaDe0' | 'neutrinoMassesEv'>;
@@ -62,14 +61,4 @@ export function readMasses(text: string): number[] | null {
   const cells = text.split(/[\s,;]+/).filter((cell) => cell !== '');
   const masses = cells.map(parseNumber);
   return masses.some(Number.isNaN) ? null : masses;
-}
-
-/** The key of the published set that has exactly these parameters, or null for own ones. */
-export function setOf(parameters: CosmologyParameters): string | null {
-  const text = canonical(parameters);
-  return PUBLISHED_SETS.find((set) => canonical(set.parameters) === text)?.key ?? null;
-}
-
-function canonical(p: CosmologyParameters): string {
-  return JSON.stringify([p.h0KmSMpc, p.omegaM0, p.omegaDe0, p.w0, p.wa, p.tCmbK, p.nEff, p.neutrinoMassesEv]);
 }

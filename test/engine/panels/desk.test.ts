@@ -8,11 +8,15 @@ import {
   isGuessable,
   roleOf,
 } from '../../../renderer/panels/columns/mappingDraft.ts';
-import { parameterTrouble, readMasses, setOf } from '../../../renderer/panels/cosmology/parameterFields.ts';
+import { parameterTrouble, readMasses } from '../../../renderer/panels/cosmology/parameterFields.ts';
 import { withoutShape, withShapes } from '../../../renderer/panels/region/regionParts.ts';
 import { draftOfShape, finishShape, newDraft } from '../../../renderer/panels/region/shapeDraft.ts';
 import { setAsideLines, sourceChanged } from '../../../renderer/panels/source/sourceFacts.ts';
-import { findPublishedSet, PUBLISHED_SETS } from '../../../shared-core/cosmology/publishedSets.ts';
+import {
+  findPublishedSet,
+  PUBLISHED_SETS,
+  publishedSetKey,
+} from '../../../shared-core/cosmology/publishedSets.ts';
 import type { SkyShape } from '../../../shared-core/sky/region.ts';
 
 describe('the choice of columns', () => {
@@ -163,8 +167,8 @@ describe('parameters of a cosmology', () => {
   });
 
   it('are a published set exactly when nothing differs', () => {
-    for (const set of PUBLISHED_SETS) expect(setOf(structuredClone(set.parameters))).toBe(set.key);
-    expect(setOf({ ...parameters, w0: -0.99 })).toBeNull();
+    for (const set of PUBLISHED_SETS) expect(publishedSetKey(structuredClone(set.parameters))).toBe(set.key);
+    expect(publishedSetKey({ ...parameters, w0: -0.99 })).toBeNull();
   });
 
   it('read neutrino masses parted by commas or spaces', () => {
@@ -177,7 +181,8 @@ describe('parameters of a cosmology', () => {
 
 describe('the source', () => {
   const source = { kind: 'file', name: 'a.csv', path: null, sizeBytes: 1, sha256: 'a'.repeat(64) } as const;
-  const loaded = (sha256: string) => ({ sha256 }) as Parameters<typeof sourceChanged>[1];
+  const loaded = (sha256: string) =>
+    ({ sha256, sizeBytes: 1 }) as NonNullable<Parameters<typeof sourceChanged>[1]>;
 
   it('has changed only when another fingerprint was known before', () => {
     expect(sourceChanged(source, loaded('b'.repeat(64)))).toBe(true);
