@@ -1,5 +1,11 @@
 import { type ReadonlySignal, useComputed, useSignal, useSignalEffect } from '@preact/signals';
-import { DISTANCE_QUANTITIES, distanceRows } from '../../shared-core/report/distanceQuantities.ts';
+import { Refusal } from '../../shared-core/base/refusal.ts';
+import type { Cosmology } from '../../shared-core/cosmology/cosmology.ts';
+import {
+  DISTANCE_QUANTITIES,
+  type DistanceRow,
+  distanceRows,
+} from '../../shared-core/report/distanceQuantities.ts';
 import { formatNumber, shownText, shownUnit } from '../../shared-core/report/quantity.ts';
 import type { GalaxyRow } from '../engine/protocol.ts';
 import { useApp } from '../state/app.ts';
@@ -35,7 +41,7 @@ export function GalaxyCard({
   const galaxy = row.value;
   if (galaxy === null) return null;
   const units = derived.units.value;
-  const [distances] = distanceRows(derived.cosmology.value, [galaxy.redshift]);
+  const distances = distancesAt(derived.cosmology.value, galaxy.redshift);
   const apart = hovered.value === null ? pickedSeparation(app) : null;
   const picked = view.pickedGalaxies.value.length;
   const length = (mpc: number) =>
@@ -59,7 +65,7 @@ export function GalaxyCard({
         </dd>
         <dt>z</dt>
         <dd>{String(Number(galaxy.redshift.toPrecision(8)))}</dd>
-        {DISTANCE_QUANTITIES.filter((q) => SHOWN.includes(q.key)).map((q) => (
+        {DISTANCE_QUANTITIES.filter((q) => distances !== null && SHOWN.includes(q.key)).map((q) => (
           <>
             <dt>{q.title}</dt>
             <dd>
@@ -104,4 +110,14 @@ export function GalaxyCard({
       )}
     </section>
   );
+}
+
+// A strongly closed universe has no distances beyond its far side.
+function distancesAt(cosmology: Cosmology, redshift: number): DistanceRow | null {
+  try {
+    return distanceRows(cosmology, [redshift])[0] ?? null;
+  } catch (error) {
+    if (error instanceof Refusal) return null;
+    throw error;
+  }
 }

@@ -55,6 +55,7 @@ export function createApp(
     if (loaded.sizeBytes !== source.sizeBytes) return;
     studyState.amend((study) => ({ ...study, source: { ...source, sha256: loaded.sha256 } }));
   });
+  const derived = createDerived(studyState, engine);
   const view = createViewState(options.theme);
   // What was pointed at belongs to the catalogue that was open then.
   const source = computed(() => JSON.stringify(files.engineSource.value));
@@ -68,13 +69,16 @@ export function createApp(
     void engine.selected.value;
     view.pickedGalaxies.value = [];
   });
+  effect(() => {
+    if (derived.trouble.value !== null) notices.tell(derived.trouble.value);
+  });
   return {
     bridge,
     notices,
     questions,
     studyState,
     engine,
-    derived: createDerived(studyState, engine),
+    derived,
     view,
     files,
   };

@@ -23,6 +23,8 @@ export interface Derived {
   readonly shells: ReadonlySignal<readonly ShellStatistics[]>;
   /** One shell from the first to the last edge. */
   readonly total: ReadonlySignal<ShellStatistics | null>;
+  /** Why the shells cannot be measured in this cosmology; null when they can. */
+  readonly trouble: ReadonlySignal<string | null>;
   /** The deepest redshift worth showing: of galaxies and edges. */
   readonly deepestRedshift: ReadonlySignal<number>;
 }
@@ -57,23 +59,33 @@ export function createDerived({ study }: StudyState, engine: EngineState): Deriv
   const conditions = computed<ShellConditions | null>(() =>
     area.value === null ? null : { cosmology: cosmology.value, areaDeg2: area.value, p0Mpc3PerH3: p0.value },
   );
+  // A strongly closed universe ends: shells beyond it have no volume, and the sentence says so.
+  const measured = computed(() => {
+    const [first, last] = [edges.value[0], edges.value.at(-1)];
+    if (conditions.value === null || edges.value.length < 2 || first === undefined || last === undefined)
+      return { shells: [], total: null, trouble: null };
+    try {
+      return {
+        shells: shellStatistics(sample.value, edges.value, conditions.value),
+        total: shellStatistics(sample.value, [first, last], conditions.value)[0] ?? null,
+        trouble: null,
+      };
+    } catch (error) {
+      if (!(error instanceof Refusal)) throw error;
+      return { shells: [], total: null, trouble: error.message };
+    }
+  });
+  const shells = computed<readonly ShellStatistics[]>(() => measured.value.shells);
+  const total = computed<ShellStatistics | null>(() => measured.value.total);
   return {
     cosmology,
     axis: computed(() => radialAxis(radial.value, cosmology.value)),
     units: computed(() => ({ perH: perH.value, h: cosmology.value.h })),
     sample,
     conditions,
-    shells: computed(() =>
-      conditions.value === null || edges.value.length < 2
-        ? []
-        : shellStatistics(sample.value, edges.value, conditions.value),
-    ),
-    total: computed(() => {
-      const [first, last] = [edges.value[0], edges.value.at(-1)];
-      if (conditions.value === null || edges.value.length < 2 || first === undefined || last === undefined)
-        return null;
-      return shellStatistics(sample.value, [first, last], conditions.value)[0] ?? null;
-    }),
+    shells,
+    total,
+    trouble: computed(() => measured.value.trouble),
     deepestRedshift: computed(() => {
       const { redshift, count } = sample.value;
       const deepest = Math.max(count === 0 ? 0 : redshift[count - 1]!, edges.value.at(-1) ?? 0);

@@ -1,4 +1,5 @@
 import { computed, type ReadonlySignal, type Signal, signal } from '@preact/signals';
+import { Refusal } from '../../shared-core/base/refusal.ts';
 import { UNITS } from '../../shared-core/report/quantity.ts';
 import { densityProfile } from '../../shared-core/shells/profile.ts';
 import { WHOLE_SKY_DEG2 } from '../../shared-core/shells/statistics.ts';
@@ -100,9 +101,16 @@ export function createStripModel({ derived, view, studyState }: App): StripModel
       hasCurve,
     };
   };
-  const profile = computed(() =>
-    scale.value === null || sample.value.count === 0 ? null : profileOver(scale.value, window.value),
-  );
+  const profile = computed(() => {
+    if (scale.value === null || sample.value.count === 0) return null;
+    try {
+      return profileOver(scale.value, window.value);
+    } catch (error) {
+      // Galaxies beyond the far side of a strongly closed universe have no density; the ledger says why.
+      if (error instanceof Refusal) return null;
+      throw error;
+    }
+  });
   const seen = ({ bins, count, density }: ShownProfile) => ({
     count,
     density,
