@@ -8,6 +8,7 @@ export default defineConfig({
       'test/desktop/**/*.test.ts',
     ],
     environment: 'node',
+    setupFiles: [new URL('./rules/seededCases.ts', import.meta.url).pathname],
     testTimeout: 60_000,
     hookTimeout: 60_000,
   },

@@ -101,16 +101,18 @@ export function createStripModel({ derived, view, studyState }: App): StripModel
       hasCurve,
     };
   };
-  const profile = computed(() => {
-    if (scale.value === null || sample.value.count === 0) return null;
+  // Galaxies beyond the far side of a strongly closed universe have no density: no curve, and the ledger says why.
+  const profileIfAny = (at: RadialPixel, range: RedshiftWindow): ShownProfile | null => {
     try {
-      return profileOver(scale.value, window.value);
+      return profileOver(at, range);
     } catch (error) {
-      // Galaxies beyond the far side of a strongly closed universe have no density; the ledger says why.
       if (error instanceof Refusal) return null;
       throw error;
     }
-  });
+  };
+  const profile = computed(() =>
+    scale.value === null || sample.value.count === 0 ? null : profileIfAny(scale.value, window.value),
+  );
   const seen = ({ bins, count, density }: ShownProfile) => ({
     count,
     density,
@@ -126,7 +128,8 @@ export function createStripModel({ derived, view, studyState }: App): StripModel
     if (chosenUpward.value !== null) return chosenUpward.value;
     if (widthPx.value === null || sample.value.count === 0) return 'linear';
     const all = wholeWindow(axis.value, deepestOf(sample.value));
-    return proposedUpward(seen(profileOver(radialPixel(axis.value, all, widthPx.value), all)));
+    const whole = profileIfAny(radialPixel(axis.value, all, widthPx.value), all);
+    return whole === null ? 'linear' : proposedUpward(seen(whole));
   });
   return {
     size,
