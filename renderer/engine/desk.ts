@@ -21,6 +21,8 @@ export interface Surroundings {
   readonly openUrl: (url: string) => Promise<AsyncIterable<Uint8Array>>;
   /** Shared memory where the host allows it, plain memory elsewhere. */
   readonly floats: (length: number) => Float32Array;
+  /** The same for the sample: in shared memory it reaches the page without being copied there. */
+  readonly share: (sample: SortedSample) => SortedSample;
   /** Lets waiting messages in, so that a newer wish can stop this one. */
   readonly breathe: () => Promise<void>;
 }
@@ -161,7 +163,7 @@ export class EngineDesk {
     await this.#pause(wish);
     const footprint = given ?? estimateOf(catalogue, indices);
     await this.#pause(wish);
-    const sample = sortSample(catalogue.redshift, catalogue.weight, indices);
+    const sample = this.#around.share(sortSample(catalogue.redshift, catalogue.weight, indices));
     this.#sample = sample;
     await this.#pause(wish);
     const { count, order } = sample;

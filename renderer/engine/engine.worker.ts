@@ -1,6 +1,7 @@
 import { Refusal } from '../../shared-core/base/refusal.ts';
 import { EngineDesk, sentenceOf } from './desk.ts';
 import type { EngineAnswer, EngineEvent, EngineRequest } from './protocol.ts';
+import { sharedSample } from './sharedSample.ts';
 
 // A worker entry is a few lines around the desk: it only carries messages.
 const scope = self as unknown as DedicatedWorkerGlobalScope;
@@ -20,6 +21,7 @@ const desk = new EngineDesk({
     scope.crossOriginIsolated
       ? new Float32Array(new SharedArrayBuffer(4 * length))
       : new Float32Array(length),
+  share: (sample) => (scope.crossOriginIsolated ? sharedSample(sample) : sample),
   breathe: () => new Promise((resume) => setTimeout(resume, 0)),
 });
 

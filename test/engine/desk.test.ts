@@ -1,7 +1,9 @@
 import { describe, expect, it } from 'vitest';
 import { EngineDesk } from '../../renderer/engine/desk.ts';
 import type { EngineEvent, Wanted } from '../../renderer/engine/protocol.ts';
+import { sharedSample } from '../../renderer/engine/sharedSample.ts';
 import { findPublishedSet } from '../../shared-core/cosmology/publishedSets.ts';
+import { sortSample } from '../../shared-core/shells/sample.ts';
 import { emptyStudy } from '../../shared-core/study/document.ts';
 
 const rows = Array.from(
@@ -23,6 +25,7 @@ function deskOf() {
     emit: (event) => events.push(event),
     openUrl: async (url) => bytes(FILES[url]!),
     floats: (length) => new Float32Array(length),
+    share: (sample) => sample,
     breathe: () => new Promise((resume) => setTimeout(resume, 0)),
   });
   const last = <K extends EngineEvent['kind']>(kind: K) =>
@@ -156,5 +159,17 @@ describe('a wish taken back before it was done', () => {
     const order = events.map((e) => e.kind);
     expect(order.lastIndexOf('background')).toBeGreaterThan(order.lastIndexOf('selected'));
     expect(desk.row(0).redshift).toBe(0.1);
+  });
+});
+
+describe('a sample in shared memory', () => {
+  it('is the same sample, to the last digit', () => {
+    const redshift = Float64Array.of(0.3, 0.1, 0.2);
+    for (const weight of [null, Float64Array.of(1, 2, 0.5)]) {
+      const sample = sortSample(redshift, weight);
+      const shared = sharedSample(sample);
+      expect(shared).toEqual(sample);
+      expect(shared.redshift.buffer).toBeInstanceOf(SharedArrayBuffer);
+    }
   });
 });

@@ -37,6 +37,7 @@ export async function factsOf(
     },
     openUrl: () => Promise.resolve(stream(rows())),
     floats: (length) => new Float32Array(length),
+    share: (sample) => sample,
     breathe: () => Promise.resolve(),
   });
   await desk.want({
