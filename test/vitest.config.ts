@@ -9,6 +9,8 @@ export default defineConfig({
     ],
     environment: 'node',
     setupFiles: [new URL('./rules/seededCases.ts', import.meta.url).pathname],
+    // Both of two cores: the default leaves one idle.
+    maxWorkers: 2,
     testTimeout: 60_000,
     hookTimeout: 60_000,
   },
