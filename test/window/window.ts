@@ -1,4 +1,5 @@
 import { type ChildProcess, spawn } from 'node:child_process';
+import { once } from 'node:events';
 import { mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
@@ -98,8 +99,15 @@ export const test = base.extend<{ desk: Desk }, { chrome: Browser }>({
       },
     });
     for (const context of chrome.contexts()) await context.close();
-    for (const child of started) child.kill();
-    rmSync(folder, { recursive: true, force: true });
+    // A program that is still ending may still write: the folder goes when all have ended.
+    await Promise.all(
+      started.map((child) => {
+        if (child.exitCode !== null || child.signalCode !== null) return null;
+        child.kill();
+        return once(child, 'exit');
+      }),
+    );
+    rmSync(folder, { recursive: true, force: true, maxRetries: 10, retryDelay: 100 });
     // Whatever a test looks at, the page itself must be quiet: no exception, no violation of the content policy.
     if (info.status === info.expectedStatus) expect(complaints).toEqual([]);
   },
