@@ -80,11 +80,11 @@ export class ConeLayers {
       pixels: frame.pixels,
       unitsPerPixel: frame.shown.pose.unitsPerPixel,
       perspective: frame.shown.pose.perspective > 0,
-      lanes: frame.lanes.map((lane, i) => ({
-        ...lane,
-        matrix: frame.laneMatrices[i]!,
-        shape: model.fields[lane.field]!,
-      })),
+      // Galaxies are splatted meanwhile: a region that changed since has asked for the next picture already.
+      lanes: frame.lanes.flatMap((lane, i) => {
+        const shape = model.fields[lane.field];
+        return shape === undefined ? [] : [{ ...lane, matrix: frame.laneMatrices[i]!, shape }];
+      }),
       scale: look.scale,
       radius: (mpc) => radiusAt(frame.shown.table, mpc),
       farMpc: model.farMpc,

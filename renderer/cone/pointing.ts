@@ -77,8 +77,16 @@ export class Pointing {
     const backRow = [...pose.axes[2], 0, 0, 0, 0, 0, 0, 0, 0, 0];
     let best: ShellHit | null = null;
     for (const [i, lane] of frame.lanes.entries()) {
-      const { mesh } = this.source.model.fields[lane.field]!;
-      const hit = pickShell(mesh, frame.laneMatrices[i]!, compose(backRow, lane.model), radii, xPx, yPx);
+      const field = this.source.model.fields[lane.field];
+      if (field === undefined) continue;
+      const hit = pickShell(
+        field.mesh,
+        frame.laneMatrices[i]!,
+        compose(backRow, lane.model),
+        radii,
+        xPx,
+        yPx,
+      );
       if (hit && (!best || hit.nearness > best.nearness)) best = hit;
     }
     return best?.shell ?? null;
