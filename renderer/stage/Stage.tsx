@@ -113,7 +113,15 @@ export function Stage() {
     const shown = { min: scale.low, max: scale.high };
     cone.value.setAxisWindow(shown, { leftPx: STRIP_LEFT_PX, rightPx: STRIP_RIGHT_PX });
     cone.value.setRadialScale(
-      radialScale(radial.value, readings.value, derived.cosmology.value, derived.units.value, scale, deepest),
+      radialScale(
+        radial.value,
+        readings.value,
+        derived.cosmology.value,
+        derived.units.value,
+        scale,
+        deepest,
+        'with ages',
+      ),
       shown,
     );
   });

@@ -39,6 +39,7 @@ export function radialScale(
   units: ShownUnits,
   scale: RadialPixel,
   deepestRedshift: number,
+  ages: 'with ages' | 'without ages' = 'without ages',
 ): RadialScaleInput {
   const own = drawnAxis(reading, cosmology);
   const distance = drawnAxis('comoving', cosmology);
@@ -52,11 +53,13 @@ export function radialScale(
     radius[i] = own.at(z);
   }
   const title = (r: Reading) =>
-    `${r.words}${r.kind === 'lookback' ? ' (age)' : ''}${r.unit === 'z' ? '' : `, ${r.unit}`}`;
+    `${r.words}${r.kind === 'lookback' && ages === 'with ages' ? ' (age)' : ''}${r.unit === 'z' ? '' : `, ${r.unit}`}`;
   // Where there is room a lookback time is joined by the age that the universe had then.
   const ageTodayGyr = cosmology.ageGyr(0);
   const withAge = (lookbackGyr: number) =>
-    Number.isFinite(ageTodayGyr) ? ` (${formatNumber(ageTodayGyr - lookbackGyr, { decimals: 1 })})` : '';
+    ages === 'with ages' && Number.isFinite(ageTodayGyr)
+      ? ` (${formatNumber(ageTodayGyr - lookbackGyr, { decimals: 1 })})`
+      : '';
   const ticks = (r: Reading) =>
     rulerTicks(r, scale, deepest, distance.at, r.kind === 'lookback' ? withAge : () => '');
   const mpcText = (mpc: number) => {
