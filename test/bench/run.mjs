@@ -13,7 +13,9 @@ const server = await createServer({
   logLevel: 'error',
 });
 const only = process.argv.slice(2);
-const names = ['distances', 'catalogue', 'shells', 'points'].filter((n) => only.length === 0 || only.includes(n));
+const names = ['distances', 'catalogue', 'shells', 'points'].filter(
+  (n) => only.length === 0 || only.includes(n),
+);
 try {
   for (const name of names) {
     const { bench } = await server.ssrLoadModule(pathToFileURL(join(root, `test/bench/${name}.ts`)).pathname);
