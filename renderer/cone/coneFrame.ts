@@ -1,5 +1,6 @@
 import type { ConeModel, Shown } from './coneModel.ts';
 import type { Lane } from './geometry/arrangement.ts';
+import type { PreparedField } from './geometry/preparedField.ts';
 import { compose, type PixelMatrix, pixelMatrix, project, type Viewport } from './geometry/projection.ts';
 import type { Point } from './overlay/pen.ts';
 import type { Galaxies } from './points/galaxies.ts';
@@ -8,6 +9,8 @@ import { radiusAt } from './points/radiusTable.ts';
 
 /** Matrices of one moment: every layer of a picture is drawn with the same. */
 export interface ConeFrame {
+  /** The fields that the lanes count: a region may change while a picture of the old one is drawn. */
+  readonly fields: readonly PreparedField[];
   readonly shown: Shown;
   readonly lanes: readonly Lane[];
   /** Display space to CSS pixels. */
@@ -20,7 +23,13 @@ export function coneFrame(model: ConeModel, viewport: Viewport, now: number): Co
   const shown = model.shown(now);
   const lanes = model.lanes(shown.factors);
   const pixels = pixelMatrix(shown.pose, viewport);
-  return { shown, lanes, pixels, laneMatrices: lanes.map((lane) => compose(pixels, lane.model)) };
+  return {
+    fields: model.fields,
+    shown,
+    lanes,
+    pixels,
+    laneMatrices: lanes.map((lane) => compose(pixels, lane.model)),
+  };
 }
 
 /** The galaxies of the lanes; before there is a region, all of them as they stand on the sky. */

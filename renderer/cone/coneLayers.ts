@@ -1,13 +1,15 @@
 import { Color } from 'three';
 import type { Triple } from '../colour/oklab.ts';
 import { type ConeFrame, pixelOf } from './coneFrame.ts';
-import type { ConeModel, Shown } from './coneModel.ts';
+import type { ConeModel } from './coneModel.ts';
 import { compose } from './geometry/projection.ts';
 import type { GlStage } from './glStage.ts';
+import { MergedCanvas } from './merged.ts';
 import { paintOverlay } from './overlay/paintOverlay.ts';
 import { Pen } from './overlay/pen.ts';
 import type { Galaxies } from './points/galaxies.ts';
 import { radiusAt } from './points/radiusTable.ts';
+import { type FlatPlace, paintFlatSolids } from './solids/flatSolids.ts';
 import { ShellSolids, type SolidLook } from './solids/shellSolids.ts';
 import type { Stage } from './stage.ts';
 import type { ConeTheme, RadialScaleInput, ShellsInput } from './types.ts';
@@ -26,15 +28,21 @@ export interface LayerLook {
 /** Strength of a shell's glass on dark and light ground. */
 const GLASS = { dark: 0.045, light: 0.06 } as const;
 
-/** Solids by three.js and lines, rulers and labels on a 2D canvas, above the points. */
+/**
+ * Everything but the splatting of points: solids, lines, rulers and labels. With a GPU they are layers above the
+ * points, the solids by three.js; without one all is drawn into one canvas, and three.js takes over the solids only
+ * where the caps are too round for flat faces.
+ */
 export class ConeLayers {
   readonly solids = new ShellSolids();
   private readonly stage: Stage;
   private readonly gl: GlStage;
+  private readonly merged: MergedCanvas;
 
   constructor(stage: Stage, gl: GlStage) {
     this.stage = stage;
     this.gl = gl;
+    this.merged = new MergedCanvas(stage.points);
   }
 
   /** Clears the WebGL canvas: to the ground where it carries the points, else to nothing. */
@@ -53,38 +61,77 @@ export class ConeLayers {
     renderer.clear();
   }
 
-  drawSolids(frame: ConeFrame, model: ConeModel, look: LayerLook): void {
+  /** Over points that WebGL has drawn. */
+  drawAbove(frame: ConeFrame, model: ConeModel, look: LayerLook, galaxies: Galaxies): void {
+    const { overlay, solids, pixelRatio, widthPx, heightPx } = this.stage;
+    this.drawSolids(frame, look);
+    const context = overlay.getContext('2d');
+    if (context) {
+      this.stage.fit(overlay);
+      context.setTransform(pixelRatio, 0, 0, pixelRatio, 0, 0);
+      context.clearRect(0, 0, widthPx, heightPx);
+      this.paint(context, frame, model, look, galaxies);
+    }
+    this.stage.show(solids, overlay);
+  }
+
+  /** Together with an image of the points, `ratio` of its pixels for one CSS pixel. */
+  drawTogether(
+    image: ImageData,
+    ratio: number,
+    frame: ConeFrame,
+    model: ConeModel,
+    look: LayerLook,
+    galaxies: Galaxies,
+  ): void {
+    const flat = !this.gl.usable || frame.fields.every((field) => field.flat);
+    this.merged.show(image, ratio, (context) => {
+      if (flat) paintFlatSolids(context, flatPlaces(frame), solidLooks(frame, look));
+      this.paint(context, frame, model, look, galaxies);
+    });
+    if (!flat) {
+      this.clear(null);
+      this.drawSolids(frame, look);
+    }
+    this.stage.show(this.stage.points, ...(flat ? [] : [this.stage.solids]));
+  }
+
+  dispose(): void {
+    this.solids.dispose();
+  }
+
+  private drawSolids(frame: ConeFrame, look: LayerLook): void {
     const { renderer } = this.gl;
     if (!renderer || !this.gl.usable) return;
-    const seen = frame.shown.pose.axes.flatMap((axis) => [...axis, 0]);
+    const seen = viewRows(frame);
     const places = frame.lanes.map((lane, i) => ({
       field: lane.field,
       pixels: frame.laneMatrices[i]!,
       seen: compose(seen, lane.model),
     }));
-    this.solids.draw(renderer, this.stage, places, solidLooks(frame.shown, model, look));
+    this.solids.draw(renderer, this.stage, places, solidLooks(frame, look));
   }
 
-  drawOverlay(frame: ConeFrame, model: ConeModel, look: LayerLook, galaxies: Galaxies): void {
-    const { overlay, pixelRatio, widthPx, heightPx } = this.stage;
-    const context = overlay.getContext('2d');
-    if (!context) return;
-    this.stage.fit(overlay);
-    context.setTransform(pixelRatio, 0, 0, pixelRatio, 0, 0);
-    context.clearRect(0, 0, widthPx, heightPx);
+  private paint(
+    context: CanvasRenderingContext2D,
+    frame: ConeFrame,
+    model: ConeModel,
+    look: LayerLook,
+    galaxies: Galaxies,
+  ): void {
     if (!look.scale) return;
-    paintOverlay(new Pen(context, look.theme, widthPx, heightPx), {
+    paintOverlay(new Pen(context, look.theme, this.stage.widthPx, this.stage.heightPx), {
       view: model.view,
       reading: model.reading,
       aligned: model.aligned,
       pixels: frame.pixels,
       unitsPerPixel: frame.shown.pose.unitsPerPixel,
       perspective: frame.shown.pose.perspective > 0,
-      // Galaxies are splatted meanwhile: a region that changed since has asked for the next picture already.
-      lanes: frame.lanes.flatMap((lane, i) => {
-        const shape = model.fields[lane.field];
-        return shape === undefined ? [] : [{ ...lane, matrix: frame.laneMatrices[i]!, shape }];
-      }),
+      lanes: frame.lanes.map((lane, i) => ({
+        ...lane,
+        matrix: frame.laneMatrices[i]!,
+        shape: frame.fields[lane.field]!,
+      })),
       scale: look.scale,
       radius: (mpc) => radiusAt(frame.shown.table, mpc),
       farMpc: model.farMpc,
@@ -98,16 +145,25 @@ export class ConeLayers {
       },
     });
   }
-
-  dispose(): void {
-    this.solids.dispose();
-  }
 }
 
-function solidLooks(shown: Shown, model: ConeModel, look: LayerLook): SolidLook[] {
+/** Display space to right, up and back, as three rows of four. */
+const viewRows = (frame: ConeFrame): number[] => frame.shown.pose.axes.flatMap((axis) => [...axis, 0]);
+
+/** A field around the observer has no flat faces: without WebGL it is drawn by its edges alone. */
+function flatPlaces(frame: ConeFrame): FlatPlace[] {
+  const seen = viewRows(frame);
+  return frame.lanes.flatMap((lane, i) => {
+    const { rings, centre, surrounds } = frame.fields[lane.field]!;
+    const place = { rings, centre, pixels: frame.laneMatrices[i]!, seen: compose(seen, lane.model) };
+    return surrounds ? [] : [place];
+  });
+}
+
+function solidLooks({ shown, fields }: ConeFrame, look: LayerLook): SolidLook[] {
   const { shells, selected, hovered } = look.shells;
   // Spheres in spheres: every line of sight crosses all of them.
-  const wholeSky = model.fields.every((field) => field.rings.length === 0);
+  const wholeSky = fields.every((field) => field.rings.length === 0);
   return shells.map((shell, i) => {
     const strength = i === selected ? 2.2 : i === hovered ? 1.7 : selected === null ? 1 : 0.7;
     return {

@@ -6,7 +6,7 @@ import { ConeModel } from './coneModel.ts';
 import { GlStage } from './glStage.ts';
 import { listen } from './navigation.ts';
 import { Pointing } from './pointing.ts';
-import type { Emphasis, PointFrame } from './points/pointLayer.ts';
+import { type Emphasis, type PointFrame, pictureKey } from './points/pointLayer.ts';
 import { type LayerChoice, PointPainter } from './points/pointPainter.ts';
 import { radiusAt } from './points/radiusTable.ts';
 import type { Stretch } from './points/tone.ts';
@@ -31,6 +31,8 @@ import type {
 const TRANSITION_MS = 520;
 /** So long after the last touch the picture counts as at rest. */
 const REST_MS = 140;
+/** Pictures are drawn to the beat of the screen while they are quicker than this. */
+const BEAT_MS = 14;
 /** Galaxies outside the chosen shell keep this part of their light. */
 const DIMMED = 0.3;
 
@@ -63,7 +65,9 @@ export class ConeView {
   private drawnKey = '';
   private lookVersion = 0;
   private touchedAt = Number.NEGATIVE_INFINITY;
+  /** When the picture being drawn was asked for, and the one after it. */
   private requestedAt = 0;
+  private askedAt = 0;
   private lastState = '';
   private disposed = false;
 
@@ -72,17 +76,16 @@ export class ConeView {
     this.events = events;
     this.stage = new Stage(container, () => this.resized());
     this.gl = new GlStage(this.stage.solids, (state) => this.drawingStateChanged(state));
-    this.painter = new PointPainter(this.stage.points, this.gl, () => this.invalidate());
+    this.painter = new PointPainter(this.gl, () => this.invalidate());
     this.layers = new ConeLayers(this.stage, this.gl);
     this.pointing = new Pointing({
-      model: this.model,
       painter: this.painter,
       events,
       frame: () => this.frame(performance.now()),
       shells: () => this.shells.shells,
       redraw: () => this.invalidate(),
     });
-    this.stopListening = listen(this.stage.overlay, {
+    this.stopListening = listen(this.stage.surface, {
       orbit: (dx, dy) => this.orbitBy(dx, dy),
       pan: (dx, dy) => this.panBy(dx, dy),
       zoom: (factor, x, y) => this.zoomBy(factor, x, y),
@@ -267,6 +270,7 @@ export class ConeView {
   }
 
   private invalidate(): void {
+    if (this.drawing && !this.again) this.askedAt = performance.now();
     if (this.drawing) this.again = true;
     if (this.frameRequest !== 0 || this.drawing || this.disposed) return;
     this.requestedAt = performance.now();
@@ -286,6 +290,7 @@ export class ConeView {
       this.again = true;
       return;
     }
+    this.drawing = true;
     this.takeAsked();
     const now = performance.now();
     const frame = this.frame(now);
@@ -293,14 +298,16 @@ export class ConeView {
     this.painter.galaxies.setTable(frame.shown.table, animated);
     const moving = animated || now - this.touchedAt < REST_MS;
     const points = this.pointFrame(frame, moving);
-    const key = this.pointKey(points);
+    const key = pictureKey(points, `${this.painter.version} ${this.lookVersion}`);
     const software = this.painter.layer === 'software';
+    // What changed up to here is in this picture.
+    this.again = false;
     if (software && key === this.drawnKey) {
+      this.drawing = false;
       this.finish(frame, points, animated);
+      if (animated) this.invalidate();
       return;
     }
-    this.again = false;
-    this.drawing = true;
     if (!software) this.layers.clear(points.tone.background);
     this.painter
       .draw(points, () => this.again)
@@ -312,7 +319,12 @@ export class ConeView {
             this.drawnKey = key;
             this.finish(frame, points, animated);
           }
-          if (this.again) this.invalidate();
+          // A picture that took longer than the screen's beat does not wait for the next one.
+          if (!this.again && !animated) return;
+          if (performance.now() - now > BEAT_MS) {
+            this.requestedAt = this.askedAt;
+            this.draw();
+          } else this.invalidate();
         },
         () => {
           // Workers that ended are replaced by the painter, which has asked for a new picture.
@@ -334,9 +346,9 @@ export class ConeView {
       picked: this.picked,
       pairText: this.pairText,
     };
-    if (this.painter.layer !== 'webgl') this.layers.clear(null);
-    this.layers.drawSolids(frame, this.model, look);
-    this.layers.drawOverlay(frame, this.model, look, this.painter.galaxies);
+    const { image, galaxies } = this.painter;
+    if (image) this.layers.drawTogether(image, points.pixelRatio, frame, this.model, look, galaxies);
+    else this.layers.drawAbove(frame, this.model, look, galaxies);
     this.tellState();
     const total = this.painter.galaxies.store?.count ?? 0;
     const whole = points.fraction === 1 && points.pixelRatio === this.stage.pixelRatio;
@@ -348,16 +360,7 @@ export class ConeView {
       atRest: !animated && whole,
     });
     clearTimeout(this.restTimer);
-    if (animated) this.invalidate();
-    else if (!whole) this.restTimer = window.setTimeout(() => this.invalidate(), REST_MS);
-  }
-
-  /** Pictures of the points with the same key are the same. */
-  private pointKey(points: PointFrame): string {
-    const { viewport, pixelRatio, fraction, sizePx, emphasis, tone, parts } = points;
-    const size = [viewport.widthPx, viewport.heightPx, pixelRatio, fraction, sizePx, tone.full];
-    const look = [this.painter.version, this.lookVersion, emphasis?.min, emphasis?.max];
-    return [...size, ...look, ...parts.flatMap((part) => [part.range.start, ...part.matrix])].join(' ');
+    if (!animated && !whole) this.restTimer = window.setTimeout(() => this.invalidate(), REST_MS);
   }
 
   private emphasis(frame: ConeFrame): Emphasis | null {

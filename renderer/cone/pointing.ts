@@ -1,5 +1,4 @@
 import { type ConeFrame, partsOf } from './coneFrame.ts';
-import type { ConeModel } from './coneModel.ts';
 import { pickShell, type ShellHit } from './geometry/pickShell.ts';
 import { compose } from './geometry/projection.ts';
 import type { PointPainter } from './points/pointPainter.ts';
@@ -10,7 +9,6 @@ const REACH_PX = 8;
 
 /** What pointing needs to know of the view at this moment. */
 export interface PointingSource {
-  readonly model: ConeModel;
   readonly painter: PointPainter;
   readonly events: ConeEvents;
   frame(): ConeFrame;
@@ -77,16 +75,8 @@ export class Pointing {
     const backRow = [...pose.axes[2], 0, 0, 0, 0, 0, 0, 0, 0, 0];
     let best: ShellHit | null = null;
     for (const [i, lane] of frame.lanes.entries()) {
-      const field = this.source.model.fields[lane.field];
-      if (field === undefined) continue;
-      const hit = pickShell(
-        field.mesh,
-        frame.laneMatrices[i]!,
-        compose(backRow, lane.model),
-        radii,
-        xPx,
-        yPx,
-      );
+      const { mesh } = frame.fields[lane.field]!;
+      const hit = pickShell(mesh, frame.laneMatrices[i]!, compose(backRow, lane.model), radii, xPx, yPx);
       if (hit && (!best || hit.nearness > best.nearness)) best = hit;
     }
     return best?.shell ?? null;

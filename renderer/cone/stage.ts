@@ -4,6 +4,8 @@ export class Stage {
   readonly points: HTMLCanvasElement;
   readonly solids: HTMLCanvasElement;
   readonly overlay: HTMLCanvasElement;
+  /** Lies over the canvases and takes the pointer; nothing is painted on it. */
+  readonly surface: HTMLElement;
   widthPx = 1;
   heightPx = 1;
   pixelRatio = 1;
@@ -15,13 +17,14 @@ export class Stage {
   constructor(container: HTMLElement, changed: () => void) {
     this.container = container;
     this.changed = changed;
-    this.points = this.layer();
-    this.solids = this.layer();
-    this.overlay = this.layer();
-    this.overlay.style.touchAction = 'none';
-    this.overlay.style.pointerEvents = 'auto';
+    this.points = this.layer('canvas');
+    this.solids = this.layer('canvas');
+    this.overlay = this.layer('canvas');
+    this.surface = this.layer('div');
+    this.surface.style.touchAction = 'none';
+    this.surface.style.pointerEvents = 'auto';
     if (getComputedStyle(container).position === 'static') container.style.position = 'relative';
-    container.append(this.points, this.solids, this.overlay);
+    container.append(this.points, this.solids, this.overlay, this.surface);
     this.observer = new ResizeObserver(() => this.measure());
     this.observer.observe(container);
     this.measure(false);
@@ -40,21 +43,28 @@ export class Stage {
   dispose(): void {
     this.observer.disconnect();
     this.ratioQuery?.removeEventListener('change', this.onRatio);
-    for (const canvas of [this.points, this.solids, this.overlay]) canvas.remove();
+    for (const layer of [this.points, this.solids, this.overlay, this.surface]) layer.remove();
   }
 
-  private layer(): HTMLCanvasElement {
-    const canvas = document.createElement('canvas');
-    Object.assign(canvas.style, {
+  /** Shows only these layers: one that is hidden costs nothing. */
+  show(...layers: HTMLElement[]): void {
+    for (const layer of [this.points, this.solids, this.overlay]) {
+      const display = layers.includes(layer) ? 'block' : 'none';
+      if (layer.style.display !== display) layer.style.display = display;
+    }
+  }
+
+  private layer<K extends 'canvas' | 'div'>(kind: K): HTMLElementTagNameMap[K] {
+    const layer = document.createElement(kind);
+    Object.assign(layer.style, {
       position: 'absolute',
       inset: '0',
       width: '100%',
       height: '100%',
-      display: 'block',
       pointerEvents: 'none',
     });
-    canvas.setAttribute('aria-hidden', 'true');
-    return canvas;
+    layer.setAttribute('aria-hidden', 'true');
+    return layer;
   }
 
   private measure(tell = true): void {

@@ -22,6 +22,8 @@ export interface PreparedField {
   readonly north: Vec3;
   /** True when the field lies on all sides of the observer, so that rulers are rings. */
   readonly surrounds: boolean;
+  /** True when its caps bulge so little that flat faces show them well. */
+  readonly flat: boolean;
 }
 
 /** Turns sharper than this are corners. */
@@ -34,6 +36,9 @@ const LONGEST_DEG = 2.5;
 /** Longest edges of the solids' caps, degrees: finer where a field fills the stage. */
 const FINE_DEG = 3;
 const COARSE_DEG = 6;
+
+/** A cap of this radius rises by a seventh of its width. */
+const FLAT_RADIUS_DEG = 32;
 
 /** Frame, outline, solid and edges of a field. */
 export function prepareField(field: FieldInput): PreparedField {
@@ -60,8 +65,8 @@ export function prepareField(field: FieldInput): PreparedField {
     upper: inPlane(high),
     lower: inPlane(low),
     north: northIn(look.positionAngleDeg),
-    surrounds:
-      rings.length === 0 || all.some((_, i) => i % 3 === 0 && facing(frame, all, i) < SIDEWAYS_COSINE),
+    surrounds,
+    flat: !surrounds && field.radiusDeg <= FLAT_RADIUS_DEG,
   };
 }
 

@@ -39,3 +39,11 @@ export interface PointLayer {
   radiiChanged(): void;
   dispose(): void;
 }
+
+/** Pictures with the same key are the same. @param version of what is not in the frame: points, colours, look */
+export function pictureKey(frame: PointFrame, version: string): string {
+  const { viewport, pixelRatio, fraction, sizePx, emphasis, tone, parts } = frame;
+  const size = [viewport.widthPx, viewport.heightPx, pixelRatio, fraction, sizePx, tone.full, tone.single];
+  const places = parts.flatMap((part) => [part.range.start, ...part.matrix]);
+  return [version, ...size, emphasis?.min, emphasis?.max, ...places].join(' ');
+}

@@ -37,7 +37,6 @@ export class PointPainter {
   readonly galaxies: Galaxies;
   /** Rises whenever the points change, so that an unchanged picture need not be drawn again. */
   version = 0;
-  private readonly canvas: HTMLCanvasElement;
   private readonly gl: GlStage;
   private readonly changed: () => void;
   private readonly tones = new ToneSource();
@@ -47,8 +46,7 @@ export class PointPainter {
   private webgl: WebglPoints | null = null;
   private restarts = 0;
 
-  constructor(canvas: HTMLCanvasElement, gl: GlStage, changed: () => void) {
-    this.canvas = canvas;
+  constructor(gl: GlStage, changed: () => void) {
     this.gl = gl;
     this.changed = changed;
     this.startPool();
@@ -66,6 +64,11 @@ export class PointPainter {
     if (wanted === 'webgl' && this.gl.usable && this.webgl) return 'webgl';
     if (this.software) return 'software';
     return this.gl.usable && this.webgl ? 'webgl' : 'none';
+  }
+
+  /** The software layer's picture of the points; null when it is not the one in use. */
+  get image(): ImageData | null {
+    return this.layer === 'software' && this.software ? this.software.image : null;
   }
 
   choose(choice: LayerChoice): void {
@@ -159,7 +162,7 @@ export class PointPainter {
   private startPool(): void {
     try {
       this.pool = new SplatPool(() => this.poolFailed());
-      this.software = new SoftwarePoints(this.canvas, this.pool);
+      this.software = new SoftwarePoints(this.pool);
     } catch {
       // A host without module workers: WebGL draws the points.
       this.pool = null;

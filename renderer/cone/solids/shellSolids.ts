@@ -49,6 +49,9 @@ void main() {
   pixel = vec4(colour * a, a);
 }`;
 
+/** How much stronger a wall looks that is seen edge on. */
+export const RIM = 2.5;
+
 /** How one shell is drawn: radii on the display scale, colour as sRGB bytes, strength 0..1. */
 export interface SolidLook {
   readonly inner: number;
@@ -159,7 +162,7 @@ export class ShellSolids {
         radii: { value: new Vector2() },
         colour: { value: new Color() },
         alpha: { value: 0 },
-        rim: { value: 2.5 },
+        rim: { value: RIM },
       },
       side: DoubleSide,
       transparent: true,

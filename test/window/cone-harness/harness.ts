@@ -132,10 +132,13 @@ function makeScale(of: RadialReading): RadialScaleInput {
 }
 
 const log: FrameStatistics[] = [];
+const waiting: (() => void)[] = [];
+const nextFrame = () => new Promise<void>((resolve) => waiting.push(resolve));
 const stage = document.querySelector<HTMLElement>('#stage')!;
 const cone = new ConeView(stage, {
   onFrame: (statistics) => {
     log.push(statistics);
+    for (const tell of waiting.splice(0)) tell();
     document.documentElement.dataset.rest = statistics.atRest && statistics.total > 0 ? 'yes' : 'no';
   },
   onViewChanged: (state) => console.log(JSON.stringify(state)),
@@ -193,7 +196,7 @@ Object.assign(window, {
   THEMES,
   shells,
   galaxies,
-  measure: (frames: number) => measureCone(cone, log, frames),
+  measure: (frames: number) => measureCone(cone, log, nextFrame, frames),
   measurePlain: (points: number, frames: number) =>
     measurePlainPoints(points, innerWidth, innerHeight, frames),
 });

@@ -28,16 +28,17 @@ export interface ConeSpeed {
   readonly layer: string;
 }
 
-/** Orbits for so many frames, comes to rest, picks. */
+/** Orbits for so many frames, as a hand that never stops does; comes to rest, picks. */
 export async function measureCone(
   cone: ConeView,
   log: readonly FrameStatistics[],
+  nextFrame: () => Promise<void>,
   frames: number,
 ): Promise<ConeSpeed> {
   const frame = async (up: number) => {
-    const before = log.length;
+    const shown = nextFrame();
     cone.orbitBy(3, up);
-    while (log.length === before) await next();
+    await shown;
   };
   for (let i = 0; i < WARM_UP; i++) await frame(1);
   const start = performance.now();

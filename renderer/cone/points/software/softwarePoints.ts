@@ -9,24 +9,19 @@ const STEP_MS = 22;
 const FIRST_COST = { pixel: 14, disc: 60 };
 
 /**
- * Points without a GPU: workers sum light into buffers, a table turns it into colours, and the picture is put into a 2D
- * canvas under everything else. The old picture stays until the new one is whole.
+ * Points without a GPU: workers sum light into buffers, and a table turns it into colours. The old picture stays until
+ * the new one is whole.
  */
 export class SoftwarePoints implements PointLayer {
   readonly kind = 'software';
-  private readonly canvas: HTMLCanvasElement;
-  private readonly context: CanvasRenderingContext2D;
+  /** The finished picture of the points, ground included. */
+  image: ImageData = new ImageData(1, 1);
   private readonly pool: SplatPool;
   private store: PointStore | null = null;
   private ready: Promise<void> = Promise.resolve();
-  private image: ImageData | null = null;
   private readonly cost = { ...FIRST_COST };
 
-  constructor(canvas: HTMLCanvasElement, pool: SplatPool) {
-    const context = canvas.getContext('2d', { alpha: false });
-    if (!context) throw new Error('no 2D canvas');
-    this.canvas = canvas;
-    this.context = context;
+  constructor(pool: SplatPool) {
     this.pool = pool;
   }
 
@@ -49,10 +44,10 @@ export class SoftwarePoints implements PointLayer {
   }
 
   /**
-   * Draws and shows the picture.
+   * Draws the picture into `image`.
    *
    * @param stop asked between the steps of a large picture: true gives it up and leaves the old one standing
-   * @returns whether the picture is on the canvas
+   * @returns whether the image is the picture asked for
    */
   async draw(frame: PointFrame, stop: () => boolean): Promise<boolean> {
     const width = Math.max(1, Math.round(frame.viewport.widthPx * frame.pixelRatio));
@@ -74,9 +69,7 @@ export class SoftwarePoints implements PointLayer {
         : [0, Number.MAX_VALUE, 1],
     };
     const steps = Math.max(1, Math.ceil(points / this.affordable(STEP_MS, frame)));
-    if (this.image?.width !== width || this.image.height !== height)
-      this.image = new ImageData(width, height);
-    const image = this.image;
+    const image = this.imageOf(width, height);
     let spent = 0;
     for (let step = 0; step < steps; step++) {
       const last = step === steps - 1;
@@ -85,25 +78,23 @@ export class SoftwarePoints implements PointLayer {
       if (!last && stop()) return false;
     }
     this.learn(frame, points, spent);
-    if (this.canvas.width !== width || this.canvas.height !== height) {
-      this.canvas.width = width;
-      this.canvas.height = height;
-    }
-    this.context.putImageData(image, 0, 0);
+    this.image = image;
     return true;
   }
 
   dispose(): void {
     this.store = null;
-    this.image = null;
   }
 
   private blank(width: number, height: number, { tone }: PointFrame): void {
-    this.canvas.width = width;
-    this.canvas.height = height;
     const [r, g, b] = tone.background;
-    this.context.fillStyle = `rgb(${r} ${g} ${b})`;
-    this.context.fillRect(0, 0, width, height);
+    this.image = this.imageOf(width, height);
+    new Uint32Array(this.image.data.buffer).fill((0xff000000 | (b << 16) | (g << 8) | r) >>> 0);
+  }
+
+  private imageOf(width: number, height: number): ImageData {
+    const { image } = this;
+    return image.width === width && image.height === height ? image : new ImageData(width, height);
   }
 
   private resend(name: 'value' | 'radius'): void {
