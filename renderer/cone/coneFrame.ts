@@ -4,8 +4,9 @@ import type { PreparedField } from './geometry/preparedField.ts';
 import { compose, type PixelMatrix, pixelMatrix, project, type Viewport } from './geometry/projection.ts';
 import type { Point } from './overlay/pen.ts';
 import type { Galaxies } from './points/galaxies.ts';
-import type { PointPart } from './points/pointLayer.ts';
+import type { Emphasis, PointPart } from './points/pointLayer.ts';
 import { radiusAt } from './points/radiusTable.ts';
+import type { ShellsInput } from './types.ts';
 
 /** Matrices of one moment: every layer of a picture is drawn with the same. */
 export interface ConeFrame {
@@ -40,6 +41,17 @@ export function partsOf(frame: ConeFrame, galaxies: Galaxies): PointPart[] {
     const range = ranges[lane.field];
     return range ? [{ matrix: frame.laneMatrices[i]!, range }] : [];
   });
+}
+
+/** Galaxies outside the chosen shell keep this part of their light. */
+const DIMMED = 0.3;
+
+/** The chosen shell at full light, all else dimmed; null when none is chosen. */
+export function emphasisOf({ shown }: ConeFrame, { shells, selected }: ShellsInput): Emphasis | null {
+  const shell = selected === null ? undefined : shells[selected];
+  if (!shell) return null;
+  const min = radiusAt(shown.table, shell.comovingMinMpc);
+  return { min, max: radiusAt(shown.table, shell.comovingMaxMpc), dim: DIMMED };
 }
 
 /** Where a row of the catalogue is drawn; null when it is not. */

@@ -1,14 +1,13 @@
 import type { Triple } from '../colour/oklab.ts';
 import { shellColours } from '../colour/shellColours.ts';
-import { type ConeFrame, coneFrame, partsOf } from './coneFrame.ts';
+import { type ConeFrame, coneFrame, emphasisOf, partsOf } from './coneFrame.ts';
 import { ConeLayers } from './coneLayers.ts';
 import { ConeModel } from './coneModel.ts';
 import { GlStage } from './glStage.ts';
 import { listen } from './navigation.ts';
 import { Pointing } from './pointing.ts';
-import { type Emphasis, type PointFrame, pictureKey } from './points/pointLayer.ts';
+import { type PointFrame, pictureKey } from './points/pointLayer.ts';
 import { type LayerChoice, PointPainter } from './points/pointPainter.ts';
-import { radiusAt } from './points/radiusTable.ts';
 import type { Stretch } from './points/tone.ts';
 import { Stage } from './stage.ts';
 import { DARK } from './theme.ts';
@@ -33,9 +32,6 @@ const TRANSITION_MS = 520;
 const REST_MS = 140;
 /** Pictures are drawn to the beat of the screen while they are quicker than this. */
 const BEAT_MS = 14;
-/** Galaxies outside the chosen shell keep this part of their light. */
-const DIMMED = 0.3;
-
 /**
  * The cone: galaxies, shells and rulers in an element. Plain data in, events out; it draws when something changed and
  * never in a loop.
@@ -304,7 +300,7 @@ export class ConeView {
     this.again = false;
     if (software && key === this.drawnKey) {
       this.drawing = false;
-      this.finish(frame, points, animated);
+      this.finish(frame, points, animated, performance.now() - this.requestedAt);
       if (animated) this.invalidate();
       return;
     }
@@ -315,16 +311,20 @@ export class ConeView {
         (shown) => {
           this.drawing = false;
           if (this.disposed) return;
-          if (shown) {
-            this.drawnKey = key;
-            this.finish(frame, points, animated);
-          }
-          // A picture that took longer than the screen's beat does not wait for the next one.
-          if (!this.again && !animated) return;
-          if (performance.now() - now > BEAT_MS) {
-            this.requestedAt = this.askedAt;
+          if (shown) this.drawnKey = key;
+          const latencyMs = performance.now() - this.requestedAt;
+          const next = this.again || animated;
+          // A picture that took longer than the screen's beat does not wait for the next one: the workers go on with
+          // what was asked meanwhile while the page finishes this one.
+          const atOnce = next && performance.now() - now > BEAT_MS;
+          if (atOnce) {
+            this.requestedAt = this.again ? this.askedAt : performance.now();
             this.draw();
-          } else this.invalidate();
+            // Nothing of the points had changed: that picture is finished already, and newer.
+            if (!this.drawing) return;
+          }
+          if (shown) this.finish(frame, points, animated, latencyMs);
+          if (next && !atOnce) this.invalidate();
         },
         () => {
           // Workers that ended are replaced by the painter, which has asked for a new picture.
@@ -336,7 +336,8 @@ export class ConeView {
   }
 
   /** Solids, lines and labels over the points just shown, for the same moment. */
-  private finish(frame: ConeFrame, points: PointFrame, animated: boolean): void {
+  private finish(frame: ConeFrame, points: PointFrame, animated: boolean, latencyMs: number): void {
+    const start = performance.now();
     const look = {
       theme: this.theme,
       scale: this.scale,
@@ -355,24 +356,12 @@ export class ConeView {
     this.events.onFrame?.({
       drawn: Math.round(points.parts.reduce((sum, part) => sum + part.range.count, 0) * points.fraction),
       total,
-      milliseconds: performance.now() - this.requestedAt,
+      milliseconds: latencyMs + performance.now() - start,
       layer: this.painter.layer,
       atRest: !animated && whole,
     });
     clearTimeout(this.restTimer);
     if (!animated && !whole) this.restTimer = window.setTimeout(() => this.invalidate(), REST_MS);
-  }
-
-  private emphasis(frame: ConeFrame): Emphasis | null {
-    const { shells, selected } = this.shells;
-    const shell = selected === null ? undefined : shells[selected];
-    if (!shell) return null;
-    const { table } = frame.shown;
-    return {
-      min: radiusAt(table, shell.comovingMinMpc),
-      max: radiusAt(table, shell.comovingMaxMpc),
-      dim: DIMMED,
-    };
   }
 
   private pointFrame(frame: ConeFrame, moving: boolean): PointFrame {
@@ -389,7 +378,7 @@ export class ConeView {
       viewport,
       pixelRatio,
       look,
-      this.emphasis(frame),
+      emphasisOf(frame, this.shells),
       moving,
     );
   }

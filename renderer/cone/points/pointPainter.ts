@@ -18,7 +18,7 @@ export type LayerChoice = 'auto' | 'software' | 'webgl';
 /** Up to so many galaxies a search on the page is quicker than asking the workers. */
 const PICK_ON_PAGE = 200_000;
 /** Time for the points of one picture while it moves. */
-const MOVING_BUDGET_MS = 13;
+const MOVING_BUDGET_MS = 10;
 /** So many points are drawn whatever it takes. */
 const ALWAYS_DRAWN = 120_000;
 /** Workers that end are started again so often. */

@@ -28,23 +28,29 @@ export interface ConeSpeed {
   readonly layer: string;
 }
 
-/** Orbits for so many frames, as a hand that never stops does; comes to rest, picks. */
+/** Orbits for so many frames, as a hand that never stops does: a step with every beat of the screen. Rests, picks. */
 export async function measureCone(
   cone: ConeView,
   log: readonly FrameStatistics[],
   nextFrame: () => Promise<void>,
   frames: number,
 ): Promise<ConeSpeed> {
-  const frame = async (up: number) => {
-    const shown = nextFrame();
-    cone.orbitBy(3, up);
-    await shown;
+  let turning = true;
+  let steps = 0;
+  const turn = async () => {
+    while (turning) {
+      cone.orbitBy(3, steps++ % 120 < 60 ? 1 : -1);
+      await next();
+    }
   };
-  for (let i = 0; i < WARM_UP; i++) await frame(1);
+  const turned = turn();
+  for (let i = 0; i < WARM_UP; i++) await nextFrame();
   const start = performance.now();
   const from = log.length;
-  for (let i = 0; i < frames; i++) await frame(i < frames / 2 ? 1 : -1);
+  for (let i = 0; i < frames; i++) await nextFrame();
   const frameSeconds = (performance.now() - start) / frames / 1000;
+  turning = false;
+  await turned;
   const moving = log.slice(from);
   const restStart = performance.now();
   while (!log.at(-1)!.atRest) await next();
