@@ -19,8 +19,7 @@ export class GlStage {
         event.preventDefault();
         this.state = {
           webgl: 'lost',
-          reason:
-            'The graphics driver took its context away: the cone is drawn without solids until it comes back.',
+          reason: 'the graphics driver took its context away; they are drawn flat until it comes back',
         };
         changed(this.state);
       },
@@ -63,8 +62,7 @@ export class GlStage {
     } catch {
       return {
         webgl: 'absent',
-        reason:
-          'This machine offers no WebGL: the cone is drawn without solids; points, rulers and edges are there.',
+        reason: 'this machine offers no WebGL; they are drawn flat',
       };
     }
   }

@@ -145,6 +145,7 @@ export interface ViewState {
 
 export type DrawingState =
   | { readonly webgl: 'ready'; readonly renderer: string; readonly software: boolean }
+  /** The reason goes on after "shells cannot be drawn in 3D:"; everything else works as before. */
   | { readonly webgl: 'lost' | 'absent'; readonly reason: string };
 
 export interface ConeEvents {
