@@ -9,9 +9,11 @@ export interface Crowding {
   /** Galaxies a CSS pixel where the densest three in a thousand of them stand, and where the thinnest tenth does. */
   readonly densestPerPixel: number;
   readonly thinnestPerPixel: number;
+  /** The same where the middle one stands. */
+  readonly middlePerPixel: number;
 }
 
-export const NOTHING: Crowding = { onStage: 0, densestPerPixel: 0, thinnestPerPixel: 0 };
+export const NOTHING: Crowding = { onStage: 0, densestPerPixel: 0, thinnestPerPixel: 0, middlePerPixel: 0 };
 
 const CELL_PX = 6;
 const SAMPLE = 16384;
@@ -56,6 +58,7 @@ export function crowding(arrays: PointArrays, parts: readonly PointPart[], viewp
     onStage,
     densestPerPixel: percentile(bins, 0.997 * onStage) / CELL_PX ** 2,
     thinnestPerPixel: percentile(bins, 0.1 * onStage) / CELL_PX ** 2,
+    middlePerPixel: percentile(bins, 0.5 * onStage) / CELL_PX ** 2,
   };
 }
 
@@ -85,11 +88,15 @@ function percentile(bins: Float64Array, galaxies: number): number {
 }
 
 /**
- * Diameter of a galaxy in CSS pixels for so many on a stage: small sets get discs that can be seen and clicked, large
- * ones a pixel each.
+ * Diameter of a galaxy in CSS pixels: small sets get discs that can be seen and clicked, large and crowded ones a pixel
+ * each.
+ *
+ * @param middlePerPixel where given, the room that galaxies have among each other counts as much as the stage's
  */
-export function pointSizePx(onStage: number, viewport: Viewport): number {
-  const room = Math.sqrt((viewport.widthPx * viewport.heightPx) / Math.max(1, onStage));
+export function pointSizePx(onStage: number, viewport: Viewport, middlePerPixel?: number): number {
+  const onAll = Math.sqrt((viewport.widthPx * viewport.heightPx) / Math.max(1, onStage));
+  const among = middlePerPixel !== undefined && middlePerPixel > 0 ? 1 / Math.sqrt(middlePerPixel) : onAll;
+  const room = Math.sqrt(onAll * Math.min(onAll, among));
   const most = 4 + 6 * Math.exp(-onStage / 150);
   return Math.min(most, Math.max(1, 1.05 * room ** 0.75));
 }
@@ -104,7 +111,7 @@ export const discLight = (diameter: number): number =>
  * that a large set keeps its contrast.
  */
 export function exposure(
-  crowd: Crowding,
+  crowd: Omit<Crowding, 'middlePerPixel'>,
   pixelRatio: number,
   diameter: number,
 ): { full: number; single: number } {

@@ -102,7 +102,7 @@ export class PointPainter {
   ): PointFrame {
     const { store, ready } = this.galaxies;
     const crowd = store ? crowding(store.arrays, parts, viewport) : NOTHING;
-    const sizePx = pointSizePx(crowd.onStage, viewport);
+    const sizePx = pointSizePx(crowd.onStage, viewport, crowd.middlePerPixel);
     // Large sets move at one pixel a CSS pixel: sharper is for rest.
     const many = crowd.onStage > 400_000;
     const pixelRatio = moving && many && this.layer === 'software' ? Math.min(1, ratio) : ratio;

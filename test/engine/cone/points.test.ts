@@ -240,6 +240,10 @@ describe('light and tone', () => {
     const sizes = [12, 4000, 60_000, 1e6, 1e7].map((n) => pointSizePx(n, { widthPx: 1280, heightPx: 500 }));
     for (let i = 1; i < sizes.length; i++) expect(sizes[i]!).toBeLessThanOrEqual(sizes[i - 1]!);
     expect(sizes.at(-1)).toBe(1);
+    // Crowded together on a part of the stage they are drawn smaller, sparse ones are not.
+    const stage = { widthPx: 1280, heightPx: 500 };
+    expect(pointSizePx(60_000, stage, 1)).toBeLessThan(pointSizePx(60_000, stage));
+    expect(pointSizePx(60_000, stage, 0.01)).toBe(pointSizePx(60_000, stage));
   });
 });
 
