@@ -1,7 +1,10 @@
 import { BOLD_WIDTHS, REGULAR_WIDTHS } from './helveticaWidths.ts';
 
+/** The program's own typeface for pictures (faces.ts loads it). */
+export const FACE_NAME = 'Arimo';
+
 /** The fonts of a picture: one design under the names that it has on the common systems, all of one width. */
-export const FONT_FAMILY = "Helvetica, Arial, 'Liberation Sans', 'Nimbus Sans', sans-serif";
+export const FONT_FAMILY = `${FACE_NAME}, Helvetica, Arial, 'Liberation Sans', 'Nimbus Sans', sans-serif`;
 
 /** From this weight on the bold font is used: pictures know two weights. */
 export const BOLD_FROM = 600;

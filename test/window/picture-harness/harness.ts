@@ -1,8 +1,24 @@
 import { composePicture } from '../../../renderer/picture/composePicture.ts';
 import { eachBand } from '../../../renderer/picture/renderPng.ts';
-import { textWidth } from '../../../renderer/picture/text/measure.ts';
+import type { TextItem } from '../../../renderer/picture/scene.ts';
+import { loadFaces } from '../../../renderer/picture/text/faces.ts';
+import { FONT_FAMILY, textWidth } from '../../../renderer/picture/text/measure.ts';
 import { demoStudy } from '../../../renderer/state/demoStudy.ts';
 import { type PictureView, pictureOptions } from '../../../shared-core/picture/options.ts';
+
+/** Long texts at every slant across the borders of bands. */
+const SLANTED: readonly TextItem[] = Array.from({ length: 24 }, (_, i) => ({
+  kind: 'text',
+  text: 'Comoving distance 1234 Mpc, lookback time 5.67 Gyr, ägyptisch Ωσμ',
+  x: 120 + 110 * (i % 6),
+  y: 100 + 130 * Math.floor(i / 6),
+  anchor: (['start', 'middle', 'end'] as const)[i % 3]!,
+  size: 9 + (i % 5) * 6,
+  bold: i % 2 === 1,
+  angle: (i * Math.PI) / 12,
+  paint: { colour: [255, 255, 255], alpha: 1 },
+  halo: i % 4 === 0 ? { colour: [10, 10, 10], alpha: 1, width: 4, dash: [] } : null,
+}));
 
 /** The finished pixels of a plan's picture, drawn in bands of so many pixels. */
 async function drawn(view: PictureView, bandPixels: number): Promise<{ pixels: Uint8Array; bands: number }> {
@@ -18,7 +34,8 @@ async function drawn(view: PictureView, bandPixels: number): Promise<{ pixels: U
     parts.push(pixels.slice());
     return Promise.resolve();
   };
-  await eachBand(composePicture(options, facts), {}, take, bandPixels);
+  const scene = composePicture(options, facts);
+  await eachBand({ ...scene, items: [...scene.items, ...SLANTED] }, {}, take, bandPixels);
   return { pixels: new Uint8Array(await new Blob(parts as BlobPart[]).arrayBuffer()), bands: parts.length };
 }
 
@@ -31,9 +48,10 @@ async function compared(view: PictureView, bandPixels: number) {
 }
 
 /** Width of a text as this browser draws it over the width that layouts count with. */
-function widthRatio(text: string, weight: number): number {
+async function widthRatio(text: string, weight: number): Promise<number> {
+  await loadFaces();
   const context = new OffscreenCanvas(10, 10).getContext('2d')!;
-  context.font = `${weight} 200px Helvetica, Arial, 'Liberation Sans'`;
+  context.font = `${weight} 200px ${FONT_FAMILY}`;
   return context.measureText(text).width / textWidth(text, 200, weight);
 }
 
