@@ -82,6 +82,7 @@ function NoShells() {
   const { studyState, derived, notices } = useApp();
   const { edges } = studyState.study.value;
   const sample = derived.sample.value;
+  if (derived.trouble.value !== null) return <p class="empty">{derived.trouble.value}</p>;
   if (edges.length >= 2)
     return (
       <p class="empty">

@@ -8,7 +8,8 @@ import { depthTexts, profileSentence } from './words.ts';
 /** What to know or do where there is nothing to draw. */
 export function Sentence({ model, rows }: { readonly model: StripModel; readonly rows: StripRows }) {
   const app = useApp();
-  const { empty, hint } = stripSentence(app);
+  const { empty: nothing, hint } = stripSentence(app);
+  const empty = nothing ?? model.trouble.value;
   const scale = model.scale.value;
   if (scale === null) return null;
   const width = `${scale.rightPx - scale.leftPx}px`;

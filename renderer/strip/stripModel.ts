@@ -1,6 +1,6 @@
 import { computed, type ReadonlySignal, type Signal, signal } from '@preact/signals';
 import { Refusal } from '../../shared-core/base/refusal.ts';
-import { UNITS } from '../../shared-core/report/quantity.ts';
+import { formatNumber, UNITS } from '../../shared-core/report/quantity.ts';
 import { densityProfile } from '../../shared-core/shells/profile.ts';
 import { WHOLE_SKY_DEG2 } from '../../shared-core/shells/statistics.ts';
 import type { App } from '../state/app.ts';
@@ -42,8 +42,10 @@ export interface StripModel {
   readonly window: ReadonlySignal<RedshiftWindow>;
   /** Null until the strip has been laid out. */
   readonly scale: ReadonlySignal<RadialPixel | null>;
-  /** Null without galaxies. */
+  /** Null without galaxies, and where they have no density. */
   readonly profile: ReadonlySignal<ShownProfile | null>;
+  /** Why the galaxies in view have no density; null where they have one. */
+  readonly trouble: ReadonlySignal<string | null>;
   /** Width of a bin in the shown reading: the step of the reading cursor. */
   readonly binStep: ReadonlySignal<number>;
   readonly density: ReadonlySignal<DensityScale>;
@@ -101,18 +103,23 @@ export function createStripModel({ derived, view, studyState }: App): StripModel
       hasCurve,
     };
   };
-  // Galaxies beyond the far side of a strongly closed universe have no density: no curve, and the ledger says why.
-  const profileIfAny = (at: RadialPixel, range: RedshiftWindow): ShownProfile | null => {
+  // Galaxies beyond the far side of a strongly closed universe have no density: no curve, but the sentence that says so.
+  const profileOrWhy = (at: RadialPixel, range: RedshiftWindow): ShownProfile | string => {
     try {
       return profileOver(at, range);
     } catch (error) {
-      if (error instanceof Refusal) return null;
-      throw error;
+      if (!(error instanceof Refusal)) throw error;
+      const { antipodeMpc } = cosmology.value;
+      if (!Number.isFinite(antipodeMpc)) return error.message;
+      const { factor, unit } = readings.value.comoving;
+      const end = formatNumber(antipodeMpc * factor, { significant: 4 });
+      return `This closed universe ends (at its antipode) ${end} ${unit} away, nearer than some galaxies in view, and no density is drawn: zoom in, or choose less curvature.`;
     }
   };
-  const profile = computed(() =>
-    scale.value === null || sample.value.count === 0 ? null : profileIfAny(scale.value, window.value),
+  const drawn = computed(() =>
+    scale.value === null || sample.value.count === 0 ? null : profileOrWhy(scale.value, window.value),
   );
+  const profile = computed(() => (typeof drawn.value === 'string' ? null : drawn.value));
   const seen = ({ bins, count, density }: ShownProfile) => ({
     count,
     density,
@@ -128,8 +135,8 @@ export function createStripModel({ derived, view, studyState }: App): StripModel
     if (chosenUpward.value !== null) return chosenUpward.value;
     if (widthPx.value === null || sample.value.count === 0) return 'linear';
     const all = wholeWindow(axis.value, deepestOf(sample.value));
-    const whole = profileIfAny(radialPixel(axis.value, all, widthPx.value), all);
-    return whole === null ? 'linear' : proposedUpward(seen(whole));
+    const whole = profileOrWhy(radialPixel(axis.value, all, widthPx.value), all);
+    return typeof whole === 'string' ? 'linear' : proposedUpward(seen(whole));
   });
   return {
     size,
@@ -138,6 +145,7 @@ export function createStripModel({ derived, view, studyState }: App): StripModel
     window,
     scale,
     profile,
+    trouble: computed(() => (typeof drawn.value === 'string' ? drawn.value : null)),
     binStep: computed(() => {
       if (profile.value !== null) return profile.value.bins.step;
       return scale.value === null

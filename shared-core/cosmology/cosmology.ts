@@ -20,6 +20,8 @@ export interface Cosmology {
   readonly h: number;
   readonly omegaDe0: number;
   readonly omegaK0: number;
+  /** Comoving distance of the antipode of a closed universe, pi times its radius of curvature; Infinity in any other. */
+  readonly antipodeMpc: number;
   /** Photons, and neutrinos (massless and massive, as they weigh today). */
   readonly omegaGamma0: number;
   readonly omegaNu0: number;
@@ -94,7 +96,7 @@ export function createCosmology(parameters: CosmologyParameters): Cosmology {
   const withinAntipode = (z: number, comoving: number): number => {
     if (comoving <= geometry.antipode) return comoving;
     throw new Refusal(
-      `Redshift ${z} lies beyond the antipode of this closed universe (comoving distance ${comoving.toPrecision(6)} Mpc, antipode ${geometry.antipode.toPrecision(6)} Mpc); choose a lower redshift or less curvature.`,
+      `Redshift ${Number(z.toPrecision(6))} lies beyond the antipode of this closed universe (comoving distance ${comoving.toPrecision(6)} Mpc, antipode ${geometry.antipode.toPrecision(6)} Mpc); choose a lower redshift or less curvature.`,
       'use',
     );
   };
@@ -119,6 +121,7 @@ export function createCosmology(parameters: CosmologyParameters): Cosmology {
     h: h0 / 100,
     omegaDe0: expansion.omegaDe0,
     omegaK0: expansion.omegaK0,
+    antipodeMpc: geometry.antipode,
     omegaGamma0: expansion.omegaGamma0,
     omegaNu0: expansion.omegaNu0,
     hubbleKmSMpc: (z) => h0 * eOf(z),

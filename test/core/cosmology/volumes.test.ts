@@ -68,6 +68,7 @@ describe('a closed universe', () => {
 
   it('has no transverse distance nor volume beyond its antipode, and says so', () => {
     expect(closed.comovingMpc(20)).toBeGreaterThan(Math.PI * radius);
+    expect(relative(closed.antipodeMpc, Math.PI * radius)).toBeLessThan(1e-14);
     for (const method of ['transverseComovingMpc', 'angularDiameterMpc', 'luminosityMpc'] as const)
       expect(() => closed[method](20)).toThrow(
         /^Redshift 20 lies beyond the antipode of this closed universe \(comoving distance \d+\.\d Mpc, antipode 13804\.\d Mpc\); choose a lower redshift or less curvature\.$/,

@@ -59,6 +59,18 @@ describe('the strip model', () => {
       expect(profile.power).not.toBeNull();
     }
   });
+  it('says where a closed universe ends before the galaxies do, and draws nearer ones all the same', () => {
+    // Omega_m 0.3 and dark energy 1.7 put the antipode, pi c / (H0 sqrt(-Omega_k)) = 13.9 Gpc, at z 1.4.
+    const { model, studyState, view } = stage(galaxies, { edges: [] });
+    const { cosmology } = studyState.study.value;
+    expect(model.trouble.value).toBeNull();
+    studyState.perform(change('closed', { cosmology: { ...cosmology, omegaM0: 0.3, omegaDe0: 1.7 } }));
+    expect(model.profile.value).toBeNull();
+    expect(model.trouble.value).toMatch(/^This closed universe ends \(at its antipode\) 13\d{3} Mpc away/);
+    view.redshiftWindow.value = [0.1, 0.6];
+    expect(model.trouble.value).toBeNull();
+    expect(model.profile.value!.density.some((n) => n > 0)).toBe(true);
+  });
   it('does not count again when an edge moves', () => {
     const { model, studyState } = stage(galaxies);
     const [profile, scale, density] = [model.profile.value, model.scale.value, model.density.value];
