@@ -81,6 +81,7 @@ function run(app: App, command: KeyCommand): boolean {
     case 'nextShell':
       return stepShell(app, command === 'nextShell' ? 1 : -1);
     case 'noShell':
+      if (app.cancelReading()) return true;
       if (view.explained.value !== null) view.explained.value = null;
       else view.selectedShell.value = null;
       return true;

@@ -18,7 +18,8 @@ import { sourceBytes, startSha256 } from './sourceBytes.ts';
 /** What the desk needs of its surroundings: a thread in the window, plain objects in a test. */
 export interface Surroundings {
   readonly emit: (event: EngineEvent) => void;
-  readonly openUrl: (url: string) => Promise<AsyncIterable<Uint8Array>>;
+  /** `signal` ends it, also while nothing comes (a disk that sleeps, a network that stalls). */
+  readonly openUrl: (url: string, signal?: AbortSignal) => Promise<AsyncIterable<Uint8Array>>;
   /** Shared memory where the host allows it, plain memory elsewhere. */
   readonly floats: (length: number) => Float32Array;
   /** The same for the sample: in shared memory it reaches the page without being copied there. */
@@ -26,6 +27,12 @@ export interface Surroundings {
   /** Lets waiting messages in, so that a newer wish can stop this one. */
   readonly breathe: () => Promise<void>;
 }
+
+/**
+ * Up to so many galaxies the old catalogue stays in memory while another is read, so that giving the reading up has
+ * it back at once; a larger one makes room, and is read again. Two million rows of eight numbers are 128 MB.
+ */
+const MOST_KEPT = 2_000_000;
 
 /** The latest wish changed while a stage ran: its result is not wanted any more. */
 class Superseded extends Error {}
@@ -39,6 +46,7 @@ export class EngineDesk {
   #wanted: Wanted | null = null;
   #serial = 0;
   #running = false;
+  #reading = new AbortController();
   #keys: Partial<Record<Stage, string>> = {};
   #catalogue: Catalogue | null = null;
   #sample: SortedSample | null = null;
@@ -51,6 +59,8 @@ export class EngineDesk {
 
   /** Takes the newest wish; a stage that runs for an older one stops at its next breath. */
   async want(wanted: Wanted, serial = 0): Promise<void> {
+    // What does not concern the file lets its reading go on.
+    if (this.#wanted !== null && loadKey(this.#wanted) !== loadKey(wanted)) this.#reading.abort();
     this.#wanted = wanted;
     this.#serial = serial;
     if (this.#running) return;
@@ -72,7 +82,7 @@ export class EngineDesk {
   }
 
   async #fulfil(wish: Wanted): Promise<void> {
-    const load = key(wish.source, wish.mapping, [...new Set(wish.cuts.map((c) => c.column))].sort());
+    const load = loadKey(wish);
     const choose = load + key(wish.region, wish.cuts);
     const background = choose + key(wish.cosmology);
     const density = background + key(wish.density);
@@ -84,13 +94,19 @@ export class EngineDesk {
     ];
     for (const [stage, stageKey, work] of stages) {
       if (this.#keys[stage] === stageKey) continue;
+      const before = { ...this.#keys };
       // What comes after a stage rests on it: going back to an earlier wish must not find later results still valid.
       for (const [later] of stages.slice(stages.findIndex(([s]) => s === stage))) delete this.#keys[later];
       this.runs[stage]++;
       try {
         await work();
       } catch (error) {
-        if (error instanceof Superseded || this.#wanted !== wish) throw new Superseded();
+        if (error instanceof Superseded || this.#wanted !== wish) {
+          // A file that was not read to its end has changed nothing: what was there before still holds.
+          if (stage === 'load' && this.#catalogue !== null) this.#keys = before;
+          throw new Superseded();
+        }
+        if (stage === 'load') this.#drop();
         this.#around.emit({ kind: 'failed', stage, sentence: sentenceOf(error) });
         return;
       }
@@ -101,25 +117,21 @@ export class EngineDesk {
   }
 
   async #load(wish: Wanted): Promise<void> {
-    this.#catalogue = null;
-    this.#sample = null;
     const { emit } = this.#around;
     if (wish.source === null) {
+      this.#drop();
       emit({ kind: 'loaded', loaded: null });
       return;
     }
+    if (this.#catalogue !== null && this.#catalogue.account.kept > MOST_KEPT) this.#drop();
+    this.#reading = new AbortController();
+    const { signal } = this.#reading;
     const total = wish.source.kind === 'url' ? wish.source.sizeBytes : null;
     const hash = startSha256();
     let sizeBytes = 0;
     let told = 0;
-    const desk = this;
-    const signal = {
-      get aborted() {
-        return desk.#wanted !== wish;
-      },
-    };
     emit({ kind: 'progress', stage: 'load', fraction: 0 });
-    const { catalogue, header, mapping } = await loadCatalogue(await this.#bytes(wish.source), {
+    const { catalogue, header, mapping } = await loadCatalogue(await this.#bytes(wish.source, signal), {
       ...(wish.mapping === null ? {} : { mapping: wish.mapping }),
       extras: [...new Set(wish.cuts.map((c) => c.column))],
       contains: null,
@@ -139,9 +151,17 @@ export class EngineDesk {
       },
     });
     this.#catalogue = catalogue;
+    this.#sample = null;
     emit({
       kind: 'loaded',
-      loaded: { header, mapping, account: catalogue.account, sha256: hash.digestHex(), sizeBytes },
+      loaded: {
+        source: wish.source,
+        header,
+        mapping,
+        account: catalogue.account,
+        sha256: hash.digestHex(),
+        sizeBytes,
+      },
     });
   }
 
@@ -242,8 +262,13 @@ export class EngineDesk {
     if (this.#wanted !== wish) throw new Superseded();
   }
 
-  #bytes(source: EngineSource): Promise<AsyncIterable<Uint8Array>> {
-    return sourceBytes(source, this.#around.openUrl);
+  #drop(): void {
+    this.#catalogue = null;
+    this.#sample = null;
+  }
+
+  #bytes(source: EngineSource, signal?: AbortSignal): Promise<AsyncIterable<Uint8Array>> {
+    return sourceBytes(source, (url) => this.#around.openUrl(url, signal));
   }
 
   /** The catalogue row behind the i-th galaxy by redshift. @throws Refusal when there is none (any more) */
@@ -302,6 +327,11 @@ function picture(footprint: Footprint): FootprintPicture {
     rings: footprint.outline(),
     fields: footprintFields(footprint),
   };
+}
+
+/** What the reading of the file depends on. */
+function loadKey({ source, mapping, cuts }: Wanted): string {
+  return key(source, mapping, [...new Set(cuts.map((c) => c.column))].sort());
 }
 
 function key(...parts: unknown[]): string {

@@ -9,9 +9,9 @@ const post = (message: EngineEvent | EngineAnswer) => scope.postMessage(message,
 
 const desk = new EngineDesk({
   emit: post,
-  openUrl: async (url) => {
+  openUrl: async (url, signal) => {
     const gone = "The catalogue's file cannot be read any more, it was moved or changed: open it again.";
-    const response = await fetch(url).catch(() => {
+    const response = await fetch(url, signal === undefined ? {} : { signal }).catch(() => {
       throw new Refusal(gone);
     });
     if (!response.ok || response.body === null) throw new Refusal(gone);

@@ -23,6 +23,7 @@ export interface Wanted {
 
 /** The file as read: before region and cuts. */
 export interface Loaded {
+  readonly source: EngineSource;
   readonly header: readonly string[];
   readonly mapping: ColumnMapping;
   readonly account: RowAccount;

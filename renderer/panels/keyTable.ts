@@ -27,6 +27,7 @@ export const KEY_HELP: readonly { readonly title: string; readonly rows: readonl
       { keys: [shortcut('O')], does: 'open a study' },
       { keys: [shortcut('N')], does: 'new study' },
       { keys: ['P'], does: 'picture to export' },
+      { keys: ['Esc'], does: 'stop reading a catalogue' },
     ],
   },
   {
@@ -40,11 +41,12 @@ export const KEY_HELP: readonly { readonly title: string; readonly rows: readonl
   {
     title: 'Depth strip',
     rows: [
-      { keys: ['←', '→'], does: 'move the edge, or the cursor' },
-      { keys: ['Enter'], does: 'type the edge; choose the shell' },
+      { keys: ['←', '→'], does: 'move the edge or the cursor; with Shift in larger steps' },
+      { keys: ['Home', 'End'], does: 'to the neighbouring edge' },
+      { keys: ['Enter'], does: 'type an edge; at the cursor, choose the shell' },
       { keys: ['Delete'], does: 'remove the edge' },
       { keys: ['A'], does: 'add an edge at the cursor' },
-      { keys: ['+', '-', '0'], does: 'closer, farther, all' },
+      { keys: ['+', '−', '0'], does: 'nearer, farther, all' },
     ],
   },
   {
@@ -60,17 +62,6 @@ export const KEY_HELP: readonly { readonly title: string; readonly rows: readonl
       { keys: ['R'], does: 'radius as distance, redshift, lookback time' },
       { keys: ['H'], does: 'Mpc or Mpc/h' },
       { keys: ['?'], does: 'these keys' },
-    ],
-  },
-  {
-    title: 'In the strip',
-    rows: [
-      { keys: ['← →'], does: 'move the edge or the cursor; with Shift in larger steps' },
-      { keys: ['Home', 'End'], does: 'to the neighbouring edge' },
-      { keys: ['Enter'], does: 'type an edge; at the cursor, choose the shell' },
-      { keys: ['Delete'], does: 'remove the edge' },
-      { keys: ['A'], does: 'add an edge at the cursor' },
-      { keys: ['+', '−', '0'], does: 'nearer, farther, all' },
     ],
   },
 ];

@@ -2,7 +2,7 @@ import './stage.css';
 import { useComputed, useSignal, useSignalEffect } from '@preact/signals';
 import { useEffect, useRef } from 'preact/hooks';
 import { ConeView } from '../cone/coneView.ts';
-import type { ViewState as ConeState, DrawingState } from '../cone/types.ts';
+import type { ViewState as ConeState, DrawingState, FootprintInput } from '../cone/types.ts';
 import { regionFields, regionFootprint } from '../panels/regionReady.ts';
 import { useApp } from '../state/app.ts';
 import { radialPixel, STRIP_LEFT_PX, STRIP_RIGHT_PX, shownWindow } from '../strip/layout.ts';
@@ -12,6 +12,8 @@ import { GalaxyCard } from './GalaxyCard.tsx';
 import { readTheme } from './readTheme.ts';
 import { StageBar } from './StageBar.tsx';
 import { separationText } from './separationText.ts';
+
+const NO_FOOTPRINT: FootprintInput = { fields: [], wide: false, estimated: false };
 
 /** Mounts the cone and keeps it in step with the study, the strip and the ledger. */
 export function Stage() {
@@ -92,8 +94,9 @@ export function Stage() {
     return { ...regionFootprint(region.value), fields: regionFields(region.value) };
   });
   useSignalEffect(() => {
-    if (cone.value !== null && footprint.value !== null)
-      cone.value.setFootprint(coneFootprint(footprint.value));
+    // Nothing is left of the study before once there is neither region nor catalogue.
+    const fitting = footprint.value === null ? NO_FOOTPRINT : coneFootprint(footprint.value);
+    cone.value?.setFootprint(fitting);
   });
   useSignalEffect(() => {
     const input = colours.value?.input;

@@ -21,6 +21,8 @@ export interface App {
   readonly derived: Derived;
   readonly view: ViewState;
   readonly files: FileState;
+  /** Gives up reading the catalogue: what was open before it is open again. False when none is being read. */
+  cancelReading(): boolean;
 }
 
 export function createApp(
@@ -49,11 +51,10 @@ export function createApp(
   );
   // The fingerprint of a file is known once it has been read whole; from then on a change of the file is told.
   effect(() => {
-    const loaded = engine.loaded.value;
+    const loaded = engine.loadedNow.value;
     const { source } = studyState.study.value;
     if (loaded === null || source?.kind !== 'file' || source.sha256 !== null) return;
-    if (loaded.sizeBytes !== source.sizeBytes) return;
-    studyState.amend((study) => ({ ...study, source: { ...source, sha256: loaded.sha256 } }));
+    if (loaded.sizeBytes === source.sizeBytes) files.noteFingerprint(loaded.sha256);
   });
   const derived = createDerived(studyState, engine);
   const view = createViewState(options.theme);
@@ -69,9 +70,6 @@ export function createApp(
     void engine.selected.value;
     view.pickedGalaxies.value = [];
   });
-  effect(() => {
-    if (derived.trouble.value !== null) notices.tell(derived.trouble.value);
-  });
   return {
     bridge,
     notices,
@@ -81,6 +79,22 @@ export function createApp(
     derived,
     view,
     files,
+    cancelReading() {
+      const reading = files.engineSource.value;
+      if (engine.progress.value?.stage !== 'load' || reading?.kind !== 'url') return false;
+      const before = files.beforeOpening.value;
+      if (before === null)
+        engine.giveUpReading(
+          `Reading ${reading.name} was cancelled: the study is open without its galaxies. Press "Read again" to have them.`,
+        );
+      else {
+        studyState.backTo(before);
+        notices.tell(`Reading ${reading.name} was cancelled: everything is as it was before.`, {
+          tone: 'fact',
+        });
+      }
+      return true;
+    },
   };
 }
 

@@ -28,6 +28,10 @@ export interface EngineState {
   /** Why a stage could not be done; results before it stand. */
   readonly failure: ReadonlySignal<{ readonly stage: Stage | 'worker'; readonly sentence: string } | null>;
   readonly client: EngineClient;
+  /** What was read of the source that the study has now; null while it is being read. */
+  readonly loadedNow: ReadonlySignal<Loaded | null>;
+  /** Gives up reading the source. Nothing is read until it is asked for again, or there is another. */
+  giveUpReading(sentence: string): void;
   /** Starts the engine anew and does everything again. */
   readAgain(): void;
   dispose(): void;
@@ -104,8 +108,11 @@ export function createEngineState(
     return { source: source.value, mapping, cuts, region, cosmology, density: look.colourBy === 'density' };
   });
   let sent: Wanted | null = null;
+  let givenUp: string | null = null;
   const send = (): void => {
     const wish = wanted.value;
+    if (givenUp === JSON.stringify(wish.source)) return;
+    givenUp = null;
     if (sent !== null && sameParts(sent, wish, EVERYTHING)) return;
     if (sent === null || !sameParts(sent, wish, GALAXIES)) fresh.value = false;
     sent = wish;
@@ -121,8 +128,19 @@ export function createEngineState(
     fresh,
     failure,
     client,
+    loadedNow: computed(() => {
+      const read = loaded.value;
+      return JSON.stringify(read?.source) === JSON.stringify(source.value) ? read : null;
+    }),
+    giveUpReading(sentence) {
+      client.stop();
+      sent = null;
+      givenUp = JSON.stringify(source.peek());
+      receive({ kind: 'failed', stage: 'load', sentence });
+    },
     readAgain() {
       client.stop();
+      givenUp = null;
       failure.value = null;
       sent = null;
       send();

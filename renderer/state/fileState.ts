@@ -1,5 +1,6 @@
 import { computed, effect, type ReadonlySignal, signal } from '@preact/signals';
 import type { Bridge } from '../../shared-core/bridge/contract.ts';
+import { STUDY_ENDING } from '../../shared-core/bridge/fileNames.ts';
 import type {
   FileStamp,
   OpenedFile,
@@ -12,6 +13,7 @@ import { change } from '../../shared-core/study/edits.ts';
 import type { Study, StudySource } from '../../shared-core/study/schema.ts';
 import type { EngineSource } from '../engine/protocol.ts';
 import { demoStudy } from './demoStudy.ts';
+import { createFilesAtHand, type FileSource } from './filesAtHand.ts';
 import type { Notices } from './notices.ts';
 import type { StudyState } from './studyState.ts';
 
@@ -23,7 +25,13 @@ export interface FileState {
   /** What the engine should read; null when the study has no source or its file is not at hand. */
   readonly engineSource: ReadonlySignal<EngineSource | null>;
   /** The study names a file that is not at hand: the person must point at it. */
-  readonly missingSource: ReadonlySignal<Extract<StudySource, { kind: 'file' }> | null>;
+  readonly missingSource: ReadonlySignal<FileSource | null>;
+  /** The study as it was before its present catalogue was opened; null when it came with it. */
+  readonly beforeOpening: ReadonlySignal<Study | null>;
+  /** The source was read whole for the first time: from now on a change of the file is told. */
+  noteFingerprint(sha256: string): void;
+  /** Takes the changed file, as it was read, for the study's source. */
+  acceptChanged(read: { readonly sizeBytes: number; readonly sha256: string }): void;
   /** Where the study is saved; null when it never was. */
   readonly target: ReadonlySignal<SaveTarget | null>;
   readonly recent: ReadonlySignal<readonly RecentStudy[]>;
@@ -65,7 +73,7 @@ export function createFileState({
   askReplace,
 }: FileStateOptions): FileState {
   const { study, unsaved } = studyState;
-  const atHand = signal<ReadonlyMap<string, OpenedFile>>(new Map());
+  const atHand = createFilesAtHand();
   const target = signal<SaveTarget | null>(null);
   const stamp = signal<FileStamp | null>(null);
   const studyFileId = signal<string | null>(null);
@@ -74,20 +82,19 @@ export function createFileState({
   const workId = newWorkId();
 
   const source = computed(() => study.value.source);
-  const sourceFile = computed(() => {
-    const named = source.value;
-    return named?.kind === 'file' ? (atHand.value.get(sourceKey(named)) ?? null) : null;
-  });
-  const engineSource = computed<EngineSource | null>(() => {
-    const named = source.value;
-    if (named === null) return null;
-    if (named.kind === 'demo') return named;
-    const file = sourceFile.value;
+  const readable = (named: StudySource | null): EngineSource | null => {
+    if (named === null || named.kind === 'demo') return named;
+    const file = atHand.of(named);
     return file === null ? null : { kind: 'url', url: file.url, name: file.name, sizeBytes: file.sizeBytes };
-  });
+  };
+  const engineSource = computed(() => readable(source.value));
   const missingSource = computed(() =>
-    source.value?.kind === 'file' && sourceFile.value === null ? source.value : null,
+    source.value?.kind === 'file' && engineSource.value === null ? source.value : null,
   );
+  const beforeOpening = computed(() => {
+    const now = JSON.stringify(engineSource.value);
+    return studyState.earlier((before) => JSON.stringify(readable(before.source)) !== now);
+  });
 
   /** Runs what a button does; a Refusal, or anything else that went wrong, becomes a sentence. */
   const guarded = async <T>(work: () => Promise<T>, otherwise: T): Promise<T> => {
@@ -101,7 +108,16 @@ export function createFileState({
   const refreshRecent = () =>
     guarded(async () => void (recent.value = await bridge.recentStudies()), undefined);
 
-  const remember = (file: OpenedFile): Extract<StudySource, { kind: 'file' }> => {
+  const exportFile: FileState['exportFile'] = (name, mimeType, content) =>
+    guarded(async () => {
+      const done = await bridge.exportFile(name, mimeType, content);
+      if (done !== null)
+        notices.tell(`${done.name} was written to ${done.folder ?? "the browser's downloads"}.`, {
+          tone: 'fact',
+        });
+    }, undefined);
+
+  const remember = (file: OpenedFile): FileSource => {
     const named = {
       kind: 'file',
       name: file.name,
@@ -109,7 +125,7 @@ export function createFileState({
       sizeBytes: file.sizeBytes,
       sha256: null,
     } as const;
-    atHand.value = new Map(atHand.value).set(sourceKey(named), file);
+    atHand.put(named, file);
     return named;
   };
 
@@ -142,11 +158,10 @@ export function createFileState({
 
   const locate = async (next: Study): Promise<void> => {
     const named = next.source;
-    if (named?.kind !== 'file' || atHand.value.has(sourceKey(named))) return;
+    if (named?.kind !== 'file' || atHand.of(named) !== null) return;
     const { name, path, sizeBytes } = named;
     const file = await bridge.locateSource({ name, path, sizeBytes, studyId: studyFileId.value });
-    if (file === null) return;
-    atHand.value = new Map(atHand.value).set(sourceKey(named), file);
+    if (file !== null) atHand.put(named, file);
   };
 
   const openStudyFile = async (file: OpenedFile): Promise<void> => {
@@ -214,10 +229,21 @@ export function createFileState({
         }
         return false;
       case 'failed':
-        notices.tell(outcome.sentence, { actions: [{ label: 'Save elsewhere', run: () => void saveAs() }] });
+        notices.tell(outcome.sentence, { actions: [rescue(written)] });
         return false;
     }
   };
+  // The browser's host saves in one folder only; a download goes elsewhere, and the study stays "not saved".
+  const rescue = (written: Study) =>
+    bridge.hostKind === 'desktop'
+      ? { label: 'Save elsewhere', run: () => void saveAs() }
+      : { label: 'Download a copy', run: () => void downloadCopy(written) };
+  const downloadCopy = (written: Study): Promise<void> =>
+    exportFile(
+      `${written.name}${STUDY_ENDING}`,
+      'application/json',
+      new TextEncoder().encode(writeStudy(written)),
+    );
   const save = (): Promise<boolean> =>
     inTurn(() =>
       guarded(async () => (target.value === null ? saveByName() : write(target.value, stamp.value)), false),
@@ -296,6 +322,20 @@ export function createFileState({
   return {
     engineSource,
     missingSource,
+    beforeOpening,
+    noteFingerprint(sha256) {
+      const named = source.value;
+      if (named?.kind !== 'file') return;
+      atHand.carry(named, { ...named, sha256 });
+      studyState.amend((now) => ({ ...now, source: { ...named, sha256 } }));
+    },
+    acceptChanged({ sizeBytes, sha256 }) {
+      const named = source.value;
+      if (named?.kind !== 'file') return;
+      const accepted = { ...named, sizeBytes, sha256 };
+      atHand.carry(named, accepted);
+      studyState.perform(change('Accept the changed catalogue', { source: accepted }));
+    },
     target,
     recent,
     offered,
@@ -317,7 +357,7 @@ export function createFileState({
         if (file === undefined || named?.kind !== 'file') return;
         // The place is new, size and fingerprint stay those that the study knows: another file is then told.
         const placed = { ...named, name: file.name, path: file.path };
-        atHand.value = new Map(atHand.value).set(sourceKey(placed), file);
+        atHand.put(placed, file);
         studyState.perform(change(`Find the catalogue at ${file.name}`, { source: placed }));
       }, undefined),
     save,
@@ -340,20 +380,8 @@ export function createFileState({
         offered.value = offered.value.filter((w) => w.workId !== id);
       }, undefined),
     mayLeave: leave,
-    exportFile: (name, mimeType, content) =>
-      guarded(async () => {
-        const done = await bridge.exportFile(name, mimeType, content);
-        if (done !== null)
-          notices.tell(`${done.name} was written to ${done.folder ?? "the browser's downloads"}.`, {
-            tone: 'fact',
-          });
-      }, undefined),
+    exportFile,
   };
-}
-
-// Not by size or contents: those change when a changed file is accepted, and the file stays the same one.
-function sourceKey(source: Extract<StudySource, { kind: 'file' }>): string {
-  return source.path ?? source.name;
 }
 
 function baseName(fileName: string): string {

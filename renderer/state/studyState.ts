@@ -14,6 +14,10 @@ export interface StudyState {
   readonly redoLabel: ReadonlySignal<string | null>;
   /** Applies an edit; a Refusal becomes a notice and the study stays. @returns whether it was applied */
   perform(edit: Edit): boolean;
+  /** The latest earlier state that fits; null when none does. */
+  earlier(fits: (study: Study) => boolean): Study | null;
+  /** Takes back every step since that state; redo brings them again. */
+  backTo(study: Study): void;
   undo(): void;
   redo(): void;
   /** Opens another study, with a history of its own. */
@@ -42,6 +46,12 @@ export function createStudyState(initial: Study, notices: Notices): StudyState {
         notices.tell(error.message);
         return false;
       }
+    },
+    earlier: (fits) => history.value.past.findLast((step) => fits(step.study))?.study ?? null,
+    backTo(earlier) {
+      let back = history.value;
+      while (back.present !== earlier && back.past.length > 0) back = undo(back);
+      if (back.present === earlier) history.value = back;
     },
     undo: () => void (history.value = undo(history.value)),
     redo: () => void (history.value = redo(history.value)),

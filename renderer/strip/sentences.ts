@@ -26,6 +26,10 @@ function emptySentence(noSource: boolean, hasShells: boolean, { progress, loaded
       : 'No catalogue yet: open one to see its density.';
   if (progress.value !== null) return 'The catalogue is being read.';
   if (loaded.value === null) return 'The catalogue could not be read: no galaxies to count.';
+  if (loaded.value.account.rowsRead === 0)
+    return 'The catalogue has a header and no rows: no galaxies to count.';
+  if (loaded.value.account.kept === 0)
+    return 'No row of the catalogue can be used: see Source for the reasons.';
   return 'No galaxy is left inside the region and the cuts.';
 }
 

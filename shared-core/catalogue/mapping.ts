@@ -97,7 +97,7 @@ function noSuchColumn(header: readonly string[], absent: readonly string[]): Ref
     );
   }
   return new Refusal(
-    `No column was recognised as ${absent.join(' nor as ')} among ${listColumns(header)}: say which column it is (on a command line as in ra=RA,dec=DEC,z=Z).`,
+    `No column was recognised as ${absent.join(' nor as ')} among ${listColumns(header)}: choose them yourself (in the window under Columns, on a command line as in --columns ra=RA,dec=DEC,z=Z).`,
   );
 }
 

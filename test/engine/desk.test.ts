@@ -16,6 +16,7 @@ const FILES: Record<string, string> = {
   'blob:broken': 'nothing here that is a table of galaxies\n1\n',
   'blob:one': 'ra,dec,z\n10,10,0.5\n',
   'blob:none': 'ra,dec,z\n',
+  'blob:stalled': 'ra,dec,z\n',
   'blob:same-z': 'ra,dec,z\n10,10,0.5\n11,10,0.5\n12,10,0.5\n',
 };
 
@@ -23,7 +24,7 @@ function deskOf() {
   const events: EngineEvent[] = [];
   const desk = new EngineDesk({
     emit: (event) => events.push(event),
-    openUrl: async (url) => bytes(FILES[url]!),
+    openUrl: async (url, signal) => (url === 'blob:stalled' ? stalled(signal!) : bytes(FILES[url]!)),
     floats: (length) => new Float32Array(length),
     share: (sample) => sample,
     breathe: () => new Promise((resume) => setTimeout(resume, 0)),
@@ -36,6 +37,11 @@ function deskOf() {
 async function* bytes(text: string): AsyncIterable<Uint8Array> {
   const all = new TextEncoder().encode(text);
   for (let i = 0; i < all.length; i += 1000) yield all.subarray(i, i + 1000);
+}
+
+/** A file of which nothing comes, until the reading is given up. */
+function stalled(signal: AbortSignal): Promise<never> {
+  return new Promise((_, reject) => signal.addEventListener('abort', () => reject(new Error('aborted'))));
 }
 
 const source = (url: string) => ({ kind: 'url', url, name: url, sizeBytes: FILES[url]!.length }) as const;
@@ -64,6 +70,30 @@ describe('the engine does what the study asks, and nothing twice', () => {
     const { comovingMpc } = last('background')!.background!;
     expect([...comovingMpc]).toEqual([...comovingMpc].sort((a, b) => a - b));
     expect(desk.row(0)).toMatchObject({ redshift: 0.1, line: 2 });
+  });
+
+  it('a file whose reading is given up, even while nothing comes of it, leaves everything as it was', async () => {
+    const { desk, events, last } = deskOf();
+    await desk.want(wanted, 1);
+    const before = events.length;
+    const reading = desk.want({ ...wanted, source: source('blob:stalled') }, 2);
+    await new Promise((resume) => setTimeout(resume, 0));
+    expect(last('progress')).toMatchObject({ stage: 'load' });
+    await desk.want(wanted, 3);
+    await reading;
+    expect(desk.runs).toEqual({ load: 2, select: 1, background: 1, density: 1 });
+    expect(events.slice(before).map((e) => e.kind)).toEqual(['progress', 'idle']);
+    expect(last('idle')!.serial).toBe(3);
+    expect(desk.row(0)).toMatchObject({ redshift: 0.1, line: 2 });
+  });
+
+  it('reading a file goes on while what does not concern it changes', async () => {
+    const { desk, last } = deskOf();
+    const reading = desk.want(wanted);
+    await desk.want({ ...wanted, cosmology: { ...findPublishedSet('wmap9').parameters } }, 2);
+    await reading;
+    expect(desk.runs.load).toBe(1);
+    expect(last('selected')!.selected!.account.kept).toBe(500);
   });
 
   it('a new cosmology, region or cut redoes what depends on it and nothing else', async () => {

@@ -82,6 +82,65 @@ describe('saving', () => {
   });
 });
 
+describe('files of one name, as a browser gives them', () => {
+  const picked = (url: string, sizeBytes: number) => ({
+    id: url,
+    name: 'survey.csv',
+    sizeBytes,
+    modifiedMs: 0,
+    path: null,
+    url,
+  });
+  const url = (files: ReturnType<typeof deskOf>['files']) => {
+    const source = files.engineSource.value;
+    return source?.kind === 'url' ? source.url : null;
+  };
+
+  it.each([
+    ['another size', 20],
+    ['the same size', 10],
+  ])('and %s are two files: undo brings the first back, redo the second', async (_, sizeBytes) => {
+    const { files, studyState } = deskOf();
+    await files.openFiles([picked('blob:first', 10)]);
+    files.noteFingerprint('a'.repeat(64));
+    expect(url(files)).toBe('blob:first');
+    await files.openFiles([picked('blob:second', sizeBytes)]);
+    expect(url(files)).toBe('blob:second');
+    files.noteFingerprint('b'.repeat(64));
+    studyState.undo();
+    expect(url(files)).toBe('blob:first');
+    expect(studyState.study.value.source).toMatchObject({ sizeBytes: 10, sha256: 'a'.repeat(64) });
+    studyState.redo();
+    expect(url(files)).toBe('blob:second');
+    expect(files.missingSource.value).toBeNull();
+  });
+
+  it('a changed file that is accepted is still that file, and so it is after undo', async () => {
+    const { files, studyState } = deskOf();
+    await files.openFiles([picked('blob:first', 10)]);
+    files.noteFingerprint('a'.repeat(64));
+    files.acceptChanged({ sizeBytes: 12, sha256: 'c'.repeat(64) });
+    expect(url(files)).toBe('blob:first');
+    expect(studyState.study.value.source).toMatchObject({ sizeBytes: 12, sha256: 'c'.repeat(64) });
+    studyState.undo();
+    expect(url(files)).toBe('blob:first');
+  });
+
+  it('what was open before the present catalogue is known, with all that was done to it', async () => {
+    const { files, studyState, rename } = deskOf();
+    expect(files.beforeOpening.value).toBeNull();
+    await files.openFiles([picked('blob:first', 10)]);
+    rename('named');
+    const before = studyState.study.value;
+    await files.openFiles([picked('blob:second', 20)]);
+    rename('meanwhile');
+    expect(files.beforeOpening.value).toBe(before);
+    studyState.backTo(before);
+    expect(studyState.study.value).toBe(before);
+    expect(url(files)).toBe('blob:first');
+  });
+});
+
 describe('work that is not saved', () => {
   it('is kept while changes go on, not only once they stop', async () => {
     vi.useFakeTimers();

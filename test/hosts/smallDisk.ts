@@ -21,7 +21,8 @@ export function mountSmallDisk(folder: string): SmallDisk | null {
       if (!run('mount', '-o', 'remount,ro', folder)) throw new Error('the disk could not be made read-only');
     },
     remove() {
-      run('umount', folder);
+      // A program that still has it for its folder keeps it no longer than it lives.
+      run('umount', '-l', folder);
     },
   };
 }

@@ -35,6 +35,8 @@ export interface WindowOptions {
   readonly folder?: string;
   /** Runs in the page before anything of it. */
   readonly init?: () => void;
+  /** Runs before the window's address is opened. */
+  readonly prepare?: (page: Page) => Promise<void>;
 }
 
 export interface Desk {
@@ -70,6 +72,7 @@ export const test = base.extend<{ desk: Desk }, { chrome: Browser }>({
         size = { width: 1280, height: 800 },
         folder: base = folder,
         init,
+        prepare,
       } = {}) {
         const child = spawn(process.execPath, [join(root, 'main/launch/start.mjs'), '--no-open', ...files], {
           cwd: base,
@@ -89,6 +92,7 @@ export const test = base.extend<{ desk: Desk }, { chrome: Browser }>({
           if (message.type() === 'error') complaints.push(message.text());
         });
         if (init !== undefined) await page.addInitScript(init);
+        await prepare?.(page);
         await page.goto(address);
         programs.set(page, child);
         return page;

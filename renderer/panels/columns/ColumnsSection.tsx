@@ -15,7 +15,7 @@ export function ColumnsSection() {
   const { studyState, engine, files } = useApp();
   const chosen = useStudyPart('mapping');
   const source = useStudyPart('source');
-  const loaded = engine.loaded.value;
+  const loaded = engine.loadedNow.value;
   const [looking, setLooking] = useState(false);
   // A file whose columns could not be guessed is not loaded: its header comes from the preview then.
   const unread = source !== null && loaded === null && engine.progress.value === null;

@@ -41,7 +41,7 @@ export function finishDraft(
       ...(dec === null ? ['declination'] : []),
       ...(radialColumn === null ? ['redshift'] : []),
     ];
-    return { sentence: `Choose the column of ${open.join(' and ')}.` };
+    return { sentence: `Choose the column of ${open.join(', ').replace(/, (?!.*, )/, ' and ')}.` };
   }
   try {
     const radial = { column: radialColumn, kind: radialKind };

@@ -16,7 +16,7 @@ const MOST_CUTS = 200;
 export function CutsSection() {
   const { studyState, engine } = useApp();
   const cuts = useStudyPart('cuts');
-  const loaded = engine.loaded.value;
+  const loaded = engine.loadedNow.value;
   const header = (loaded?.header ?? []).filter((name) => name !== '');
   const cutCounts = engine.selected.value?.cutCounts ?? [];
   const outside = engine.selected.value?.account.reasons.outsideCuts ?? 0;

@@ -11,7 +11,8 @@ const STAGE_TEXTS: Readonly<Record<Stage, string>> = {
 
 /** What the engine is at; at rest, the rows that it kept and set aside. */
 export function EngineLine() {
-  const { engine } = useApp();
+  const app = useApp();
+  const { engine, files } = app;
   const progress = engine.progress.value;
   const account = engine.selected.value?.account ?? engine.loaded.value?.account ?? null;
   if (progress !== null) {
@@ -27,6 +28,16 @@ export function EngineLine() {
           max={1}
           {...(fraction === null ? {} : { value: fraction })}
         />
+        {stage === 'load' && files.engineSource.value?.kind === 'url' ? (
+          <button
+            type="button"
+            class="button cancel-reading"
+            title="Stop reading; what was open before stays (Escape)"
+            onClick={() => app.cancelReading()}
+          >
+            Cancel
+          </button>
+        ) : null}
       </span>
     );
   }

@@ -7,8 +7,10 @@ import { setAsideLines } from './sourceFacts.ts';
 export function RowsAccount() {
   const { engine, files, notices, studyState } = useApp();
   const [busy, setBusy] = useState(false);
-  const account = engine.selected.value?.account ?? engine.loaded.value?.account ?? null;
-  if (account === null) return null;
+  // While another file is being read, the rows counted are still those of the file before.
+  const read = engine.loadedNow.value;
+  if (read === null) return null;
+  const account = engine.selected.value?.account ?? read.account;
   const download = async (): Promise<void> => {
     setBusy(true);
     try {

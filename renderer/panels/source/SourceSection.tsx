@@ -10,7 +10,7 @@ import { sourceChanged } from './sourceFacts.ts';
 export function SourceSection() {
   const { engine, files } = useApp();
   const source = useStudyPart('source');
-  const loaded = engine.loaded.value;
+  const loaded = engine.loadedNow.value;
   const missing = files.missingSource.value;
   const changed = sourceChanged(source, loaded);
   const trouble = missing !== null || changed || engine.failure.value !== null;

@@ -1,4 +1,3 @@
-import { change } from '../../../shared-core/study/edits.ts';
 import type { StudySource } from '../../../shared-core/study/schema.ts';
 import { useApp } from '../../state/app.ts';
 import { sizeText } from '../../ui/numberText.ts';
@@ -24,9 +23,9 @@ export function SourceMissing({ source }: { readonly source: Extract<StudySource
 
 /** The file is there, but its contents are others. */
 export function SourceChanged() {
-  const { studyState, engine, files } = useApp();
+  const { engine, files } = useApp();
   const source = useStudyPart('source');
-  const loaded = engine.loaded.value;
+  const loaded = engine.loadedNow.value;
   if (source?.kind !== 'file' || loaded === null) return null;
   return (
     <div class="trouble" role="status">
@@ -36,17 +35,7 @@ export function SourceChanged() {
         now.
       </p>
       <div class="actions">
-        <button
-          type="button"
-          class="button"
-          onClick={() =>
-            studyState.perform(
-              change('Accept the changed catalogue', {
-                source: { ...source, sizeBytes: loaded.sizeBytes, sha256: loaded.sha256 },
-              }),
-            )
-          }
-        >
+        <button type="button" class="button" onClick={() => files.acceptChanged(loaded)}>
           Go on with it
         </button>
         <button type="button" class="button" onClick={() => void files.pointAtSource()}>
@@ -59,9 +48,10 @@ export function SourceChanged() {
 
 /** What the engine could not do, in its own sentence. */
 export function ReadFailure() {
-  const { engine, files } = useApp();
+  const { engine, files, studyState } = useApp();
   const failure = engine.failure.value;
   if (failure === null || files.missingSource.value !== null) return null;
+  const before = failure.stage === 'load' ? files.beforeOpening.value : null;
   return (
     <div class="trouble" role="alert">
       <p>{failure.sentence}</p>
@@ -74,7 +64,17 @@ export function ReadFailure() {
             Columns
           </button>
         ) : null}
+        {before === null ? null : (
+          <button type="button" class="button" onClick={() => studyState.backTo(before)}>
+            Back to {catalogueName(before.source)}
+          </button>
+        )}
       </div>
     </div>
   );
+}
+
+function catalogueName(source: StudySource | null): string {
+  if (source === null) return 'no catalogue';
+  return source.kind === 'demo' ? 'the invented demo' : source.name;
 }

@@ -25,7 +25,7 @@ describe('the choice of columns', () => {
 
   it('says what is still missing', () => {
     expect(finishDraft(EMPTY_DRAFT, header)).toEqual({
-      sentence: 'Choose the column of right ascension and declination and redshift.',
+      sentence: 'Choose the column of right ascension, declination and redshift.',
     });
     expect(finishDraft(half, header)).toEqual({ sentence: 'Choose the column of redshift.' });
   });
