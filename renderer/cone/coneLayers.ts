@@ -3,7 +3,7 @@ import type { Triple } from '../colour/oklab.ts';
 import { type ConeFrame, pixelOf } from './coneFrame.ts';
 import type { ConeModel } from './coneModel.ts';
 import { compose } from './geometry/projection.ts';
-import type { GlStage } from './glStage.ts';
+import type { GlStage } from './graphics/glStage.ts';
 import { MergedCanvas } from './merged.ts';
 import { paintOverlay } from './overlay/paintOverlay.ts';
 import { Pen } from './overlay/pen.ts';
@@ -30,8 +30,7 @@ const GLASS = { dark: 0.045, light: 0.06 } as const;
 
 /**
  * Everything but the splatting of points: solids, lines, rulers and labels. With a GPU they are layers above the
- * points, the solids by three.js; without one all is drawn into one canvas, and three.js takes over the solids only
- * where the caps are too round for flat faces.
+ * points, the solids by three.js; without one all is drawn into one canvas.
  */
 export class ConeLayers {
   readonly solids = new ShellSolids();
@@ -84,16 +83,11 @@ export class ConeLayers {
     look: LayerLook,
     galaxies: Galaxies,
   ): void {
-    const flat = !this.gl.usable || frame.fields.every((field) => field.flat);
     this.merged.show(image, ratio, (context) => {
-      if (flat) paintFlatSolids(context, flatPlaces(frame), solidLooks(frame, look));
+      paintFlatSolids(context, flatPlaces(frame), solidLooks(frame, look));
       this.paint(context, frame, model, look, galaxies);
     });
-    if (!flat) {
-      this.clear(null);
-      this.drawSolids(frame, look);
-    }
-    this.stage.show(this.stage.points, ...(flat ? [] : [this.stage.solids]));
+    this.stage.show(this.stage.points);
   }
 
   dispose(): void {
@@ -150,13 +144,12 @@ export class ConeLayers {
 /** Display space to right, up and back, as three rows of four. */
 const viewRows = (frame: ConeFrame): number[] => frame.shown.pose.axes.flatMap((axis) => [...axis, 0]);
 
-/** A field around the observer has no flat faces: without WebGL it is drawn by its edges alone. */
 function flatPlaces(frame: ConeFrame): FlatPlace[] {
   const seen = viewRows(frame);
-  return frame.lanes.flatMap((lane, i) => {
-    const { rings, centre, surrounds } = frame.fields[lane.field]!;
-    const place = { rings, centre, pixels: frame.laneMatrices[i]!, seen: compose(seen, lane.model) };
-    return surrounds ? [] : [place];
+  return frame.lanes.map((lane, i) => {
+    const { rings, centre, flat, mesh } = frame.fields[lane.field]!;
+    const curved = flat ? null : mesh;
+    return { rings, centre, curved, pixels: frame.laneMatrices[i]!, seen: compose(seen, lane.model) };
   });
 }
 

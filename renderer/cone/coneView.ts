@@ -3,7 +3,7 @@ import { shellColours } from '../colour/shellColours.ts';
 import { type ConeFrame, coneFrame, emphasisOf, partsOf } from './coneFrame.ts';
 import { ConeLayers } from './coneLayers.ts';
 import { ConeModel } from './coneModel.ts';
-import { GlStage } from './glStage.ts';
+import { GlStage } from './graphics/glStage.ts';
 import { listen } from './navigation.ts';
 import { Pointing } from './pointing.ts';
 import { type PointFrame, pictureKey } from './points/pointLayer.ts';

@@ -144,6 +144,8 @@ export interface ViewState {
 }
 
 export type DrawingState =
+  /** No GPU was found (yet): the processor draws all. */
+  | { readonly webgl: 'unused' }
   | { readonly webgl: 'ready'; readonly renderer: string; readonly software: boolean }
   /** The reason goes on after "shells cannot be drawn in 3D:"; everything else works as before. */
   | { readonly webgl: 'lost' | 'absent'; readonly reason: string };

@@ -149,7 +149,7 @@ export function Stage() {
       <StageBar coneState={coneState} colours={colours} />
       <div class="stage-cone" ref={place} />
       <GalaxyCard hovered={hovered} />
-      {drawing.value !== null && drawing.value.webgl !== 'ready' ? (
+      {drawing.value?.webgl === 'lost' || drawing.value?.webgl === 'absent' ? (
         <p class="stage-notice" role="status">
           Shells cannot be drawn in 3D now ({drawing.value.reason}); everything else goes on working.
         </p>

@@ -1,19 +1,8 @@
-import { fileURLToPath } from 'node:url';
 import { chromium } from '@playwright/test';
-import { createServer } from 'vite';
 import { findBrowser } from '../../main/launch/findBrowser.ts';
+import { FLAGS } from '../window/chromiumFlags.ts';
 import type { ConeSpeed } from '../window/cone-harness/measure.ts';
-
-const FLAGS = [
-  '--no-sandbox',
-  '--use-angle=swiftshader',
-  '--enable-unsafe-swiftshader',
-  '--ignore-gpu-blocklist',
-  '--disable-background-networking',
-  '--disable-component-update',
-  '--disable-sync',
-  '--no-first-run',
-];
+import { serveCone } from '../window/coneServer.ts';
 
 /** Orbiting galaxies without a GPU at 1280 x 800: the cone's software layer against a plain three.js cloud. */
 export async function bench() {
@@ -23,33 +12,16 @@ export async function bench() {
     homeFolder: process.env.HOME ?? '',
   });
   if (browserFile === null) return { name: 'Points without a GPU: no Chromium here, not measured', rows: [] };
-  const server = await createServer({
-    configFile: false,
-    root: fileURLToPath(new URL('../window/cone-harness/', import.meta.url)),
-    logLevel: 'error',
-    server: {
-      host: '127.0.0.1',
-      port: 0,
-      ws: false,
-      headers: {
-        'Cross-Origin-Opener-Policy': 'same-origin',
-        'Cross-Origin-Embedder-Policy': 'require-corp',
-      },
-      fs: { allow: [fileURLToPath(new URL('../..', import.meta.url))] },
-    },
-    worker: { format: 'es' },
-  });
-  await server.listen();
+  const server = await serveCone();
   const browser = await chromium.launch({ executablePath: browserFile.path, args: FLAGS });
   try {
-    const address = server.resolvedUrls?.local[0] ?? '';
     const rows: { what: string; seconds: number; ratio: number }[] = [];
     for (const [count, plainFrames, frames] of [
       [1_000_000, 8, 60],
       [10_000_000, 2, 40],
     ] as const) {
       const page = await browser.newPage({ viewport: { width: 1280, height: 800 } });
-      await page.goto(`${address}?n=${count}`);
+      await page.goto(`${server.address}?n=${count}`);
       await page.waitForFunction(() => document.documentElement.dataset.rest === 'yes', null, {
         timeout: 300_000,
       });

@@ -12,14 +12,16 @@ const server = await createServer({
   server: { middlewareMode: true, ws: false },
   logLevel: 'error',
 });
+const all = ['distances', 'catalogue', 'shells', 'points', 'window'];
 const only = process.argv.slice(2);
-const names = ['distances', 'catalogue', 'shells', 'points'].filter(
-  (n) => only.length === 0 || only.includes(n),
-);
+const chosen = all.filter((n) => only.includes(n));
+const names = chosen.length === 0 ? all : chosen;
+// What names no bench goes to the benches: npm run bench -- window large stacks
+const words = only.filter((n) => !all.includes(n));
 try {
   for (const name of names) {
     const { bench } = await server.ssrLoadModule(pathToFileURL(join(root, `test/bench/${name}.ts`)).pathname);
-    const { name: title, rows } = await bench();
+    const { name: title, rows } = await bench(words);
     console.log(`\n${title}`);
     for (const row of rows)
       console.log(

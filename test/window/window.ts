@@ -7,6 +7,7 @@ import { fileURLToPath } from 'node:url';
 import { AxeBuilder } from '@axe-core/playwright';
 import { type Browser, test as base, chromium, expect, type Page } from '@playwright/test';
 import { findBrowser } from '../../main/launch/findBrowser.ts';
+import { FLAGS } from './chromiumFlags.ts';
 
 const root = fileURLToPath(new URL('../..', import.meta.url));
 const browser = findBrowser({
@@ -14,18 +15,6 @@ const browser = findBrowser({
   env: process.env,
   homeFolder: process.env.HOME ?? '',
 });
-
-/** Software WebGL, and no calls to the outside. */
-const FLAGS = [
-  '--no-sandbox',
-  '--use-angle=swiftshader',
-  '--enable-unsafe-swiftshader',
-  '--ignore-gpu-blocklist',
-  '--disable-background-networking',
-  '--disable-component-update',
-  '--disable-sync',
-  '--no-first-run',
-];
 
 export interface WindowOptions {
   readonly files?: readonly string[];

@@ -1,6 +1,6 @@
 import { type PointHit, pickPoint } from '../geometry/pickPoint.ts';
 import type { Viewport } from '../geometry/projection.ts';
-import type { GlStage } from '../glStage.ts';
+import type { GlStage } from '../graphics/glStage.ts';
 import type { ColouringInput, ConeTheme } from '../types.ts';
 import { crowding, exposure, NOTHING, pointSizePx } from './exposure.ts';
 import { Galaxies, type GalaxiesChange } from './galaxies.ts';
@@ -73,6 +73,7 @@ export class PointPainter {
 
   choose(choice: LayerChoice): void {
     this.choice = choice;
+    if (choice === 'webgl') this.gl.start();
     this.version++;
     this.changed();
   }
@@ -164,9 +165,10 @@ export class PointPainter {
       this.pool = new SplatPool(() => this.poolFailed());
       this.software = new SoftwarePoints(this.pool);
     } catch {
-      // A host without module workers: WebGL draws the points.
+      // A host without module workers: WebGL draws the points, whatever stands behind it.
       this.pool = null;
       this.software = null;
+      queueMicrotask(() => this.gl.start());
     }
   }
 
@@ -176,6 +178,7 @@ export class PointPainter {
     this.pool = null;
     this.software = null;
     if (this.restarts++ < MOST_RESTARTS) this.startPool();
+    else this.gl.start();
     // The new workers do not know the memory: the points are laid out again.
     this.galaxies.relay();
     this.version++;

@@ -1,12 +1,16 @@
 import { cssColour } from '../../colour/shellColours.ts';
 import { NEAREST_W } from '../geometry/projection.ts';
+import type { ShellMesh } from '../geometry/shellMesh.ts';
 import { cross, dot, norm, type Vec3 } from '../geometry/vector.ts';
+import { type CapPart, capParts } from './capParts.ts';
 import { RIM, type SolidLook } from './shellSolids.ts';
 
 /** What is drawn of a field: its rings, and its matrices of this frame. */
 export interface FlatPlace {
   readonly rings: readonly Float64Array[];
   readonly centre: Vec3;
+  /** Of a field whose caps are too round for one flat face each. */
+  readonly curved: ShellMesh | null;
   /** Sky direction times radius to CSS pixels, three rows of four. */
   readonly pixels: Float64Array;
   /** The same to right, up and back in units of the display. */
@@ -17,8 +21,8 @@ export interface FlatPlace {
 const SAME_FACING = 0.12;
 
 /**
- * Shells as translucent fills on a 2D canvas, face by face: the same glass as the solids of WebGL where the caps are
- * nearly flat, for machines on which a layer of WebGL costs more than it shows, and for those without it.
+ * Shells as translucent fills on a 2D canvas, face by face: the same glass as the solids of WebGL, for machines on which
+ * a layer of WebGL costs more than it shows, and for those without it.
  */
 export function paintFlatSolids(
   context: CanvasRenderingContext2D,
@@ -27,10 +31,14 @@ export function paintFlatSolids(
 ): void {
   for (const place of places) {
     const capFacing = facing(place.seen, place.centre);
+    const parts = place.curved && capParts(place.curved, place.seen);
     const strips = place.rings.map((ring) => wallStrips(ring, place.seen));
     for (const look of looks) {
       if (look.alpha <= 0) continue;
-      for (const radius of [look.inner, look.outer]) fillCap(context, place, radius, look, capFacing);
+      for (const radius of [look.inner, look.outer]) {
+        if (parts) fillParts(context, place, parts, radius, look);
+        else fillCap(context, place, radius, look, capFacing);
+      }
       for (const [i, ring] of place.rings.entries()) {
         for (const strip of strips[i]!) fillStrip(context, place.pixels, ring, strip, look);
       }
@@ -53,20 +61,21 @@ export function wallStrips(ring: Float64Array, seen: ArrayLike<number>): WallStr
   let start = wallFacing(ring, 0, seen);
   for (let i = 1; i <= n; i++) {
     const next = i < n ? wallFacing(ring, i, seen) : Number.POSITIVE_INFINITY;
-    if (Math.abs(next - start) < SAME_FACING) continue;
-    out.push({ first, edges: i - first, facing: (start + wallFacing(ring, i - 1, seen)) / 2 });
+    // A wall seen from outside and one seen from inside lie over each other: never in one fill.
+    if (Math.abs(next - start) < SAME_FACING && next > 0 === start > 0) continue;
+    out.push({ first, edges: i - first, facing: Math.abs(start + wallFacing(ring, i - 1, seen)) / 2 });
     first = i;
     start = next;
   }
   return out;
 }
 
-/** |back component| of the unit normal of the wall over an edge. */
+/** Back component of the unit normal of the wall over an edge: below 0 it is seen from outside. */
 function wallFacing(ring: Float64Array, i: number, seen: ArrayLike<number>): number {
   const n = ring.length / 3;
   const normal = cross(inView(seen, pointOf(ring, i)), inView(seen, pointOf(ring, (i + 1) % n)));
   const length = norm(normal);
-  return length > 0 ? Math.abs(normal[2]) / length : 0;
+  return length > 0 ? normal[2] / length : 0;
 }
 
 /** |back component| of a direction in the view: a cap stands across the line of sight to its middle. */
@@ -104,6 +113,29 @@ function fillCap(
   context.fill('evenodd');
 }
 
+/** The parts of a curved cap; one that reaches behind the eye is left out. */
+function fillParts(
+  context: CanvasRenderingContext2D,
+  { curved, pixels }: FlatPlace,
+  parts: readonly CapPart[],
+  radius: number,
+  look: SolidLook,
+): void {
+  for (const { facing: faced, loops } of parts) {
+    context.beginPath();
+    const whole = loops.every((loop) => {
+      const inFront = loop.every((point, i) =>
+        lineTo(context, pixels, curved!.directions, point, radius, i === 0),
+      );
+      context.closePath();
+      return inFront;
+    });
+    if (!whole) continue;
+    context.fillStyle = glass(look, faced);
+    context.fill();
+  }
+}
+
 function fillStrip(
   context: CanvasRenderingContext2D,
   pixels: Float64Array,
@@ -128,7 +160,7 @@ function fillStrip(
 function lineTo(
   context: CanvasRenderingContext2D,
   m: Float64Array,
-  ring: Float64Array,
+  ring: ArrayLike<number>,
   i: number,
   radius: number,
   start: boolean,

@@ -55,9 +55,31 @@ describe('flat solids', () => {
     expect(strips.reduce((sum, strip) => sum + strip.edges, 0)).toBe(round.rings[0]!.length / 3);
   });
 
+  it('never take a near and a far wall together, which would cancel where they lie over each other', () => {
+    // Looking along the axis of the view at a prism whose two sides face alike, one from outside and one from inside.
+    const wedge = prepareField({
+      centreRaDeg: 0,
+      centreDecDeg: 0,
+      radiusDeg: 20,
+      positionAngleDeg: 90,
+      rings: [{ raDeg: Float64Array.of(-10, 10, 0), decDeg: Float64Array.of(0, 0, 15) }],
+    });
+    const ring = wedge.rings[0]!;
+    const back = [0, 1, 0];
+    const along = Float64Array.of(1, 0, 0, 0, 0, 0, 1, 0, ...back, 0);
+    const normalBack = (i: number): number => {
+      const [a, b] = [i, (i + 1) % (ring.length / 3)].map((k) => ring.subarray(3 * k, 3 * k + 3));
+      return a![2]! * b![0]! - a![0]! * b![2]!;
+    };
+    for (const { first, edges } of wallStrips(ring, along)) {
+      const signs = Array.from({ length: edges }, (_, k) => Math.sign(normalBack(first + k)));
+      expect(new Set(signs).size).toBe(1);
+    }
+  });
+
   it('fill two caps and the walls of every shell, stronger where they are edge on', () => {
     const { fills, context } = notes();
-    const place = { rings: field.rings, centre: field.centre, seen };
+    const place = { rings: field.rings, centre: field.centre, curved: null, seen };
     const behind = Float64Array.from(seen);
     behind.fill(0, 8);
     paintFlatSolids(context, [{ ...place, pixels: behind }], [look, look]);
@@ -65,7 +87,7 @@ describe('flat solids', () => {
     expect(fills).toHaveLength(0);
     const pixels = Float64Array.from(seen);
     pixels.set([0, 0, 0, 1], 8);
-    paintFlatSolids(context, [{ rings: field.rings, centre: field.centre, pixels, seen }], [look, look]);
+    paintFlatSolids(context, [{ ...place, pixels }], [look, look]);
     expect(fills).toHaveLength(2 * (2 + 4));
     expect(fills.filter((fill) => fill.rule === 'evenodd')).toHaveLength(4);
     const alpha = (style: string): number => Number(/\/ ([\d.]+)\)/.exec(style)![1]);
@@ -82,7 +104,7 @@ describe('flat solids', () => {
     pixels.set([0, 0, 0, 1], 8);
     paintFlatSolids(
       context,
-      [{ rings: field.rings, centre: field.centre, pixels, seen }],
+      [{ rings: field.rings, centre: field.centre, curved: null, pixels, seen }],
       [{ ...look, alpha: 0 }],
     );
     expect(fills).toHaveLength(0);
