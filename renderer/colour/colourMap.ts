@@ -1,4 +1,5 @@
 import { Refusal } from '../../shared-core/base/refusal.ts';
+import type { ColourMapName } from '../../shared-core/study/schema.ts';
 import { encodeSrgb, greatestChroma, oklabToLinear, oklch, type Triple } from './oklab.ts';
 
 /** The ground that a colour map stands on: the dark stage, or white paper. */
@@ -43,9 +44,7 @@ const RECIPES = {
     chroma: 0.02,
     lightness: { dark: [0.45, 0.96], light: [0.2, 0.7] },
   },
-} as const satisfies Record<string, Recipe>;
-
-export type ColourMapName = keyof typeof RECIPES;
+} as const satisfies Record<ColourMapName, Recipe>;
 
 export interface ColourMap {
   readonly name: ColourMapName;

@@ -1,5 +1,6 @@
 import type { ConeModel, Shown } from './coneModel.ts';
 import type { Lane } from './geometry/arrangement.ts';
+import { type DepthCue, depthCue } from './geometry/depthCue.ts';
 import type { PreparedField } from './geometry/preparedField.ts';
 import { compose, type PixelMatrix, pixelMatrix, project, type Viewport } from './geometry/projection.ts';
 import type { Point } from './overlay/pen.ts';
@@ -18,28 +19,36 @@ export interface ConeFrame {
   readonly pixels: PixelMatrix;
   /** Sky direction times radius to CSS pixels, for each lane. */
   readonly laneMatrices: readonly Float64Array[];
+  /** How light falls with depth in a lane (in display space, where there is none). */
+  readonly depthIn: (lane: Lane | null) => DepthCue | null;
 }
 
-export function coneFrame(model: ConeModel, viewport: Viewport, now: number): ConeFrame {
+/** @param cue how much fainter what is farthest is than what is nearest, 0..1 */
+export function coneFrame(model: ConeModel, viewport: Viewport, now: number, cue: number): ConeFrame {
   const shown = model.shown(now);
   const lanes = model.lanes(shown.factors);
   const pixels = pixelMatrix(shown.pose, viewport);
+  const range = cue > 0 ? model.depth(shown) : { near: 0, far: 0 };
   return {
     fields: model.fields,
     shown,
     lanes,
     pixels,
     laneMatrices: lanes.map((lane) => compose(pixels, lane.model)),
+    depthIn: (lane) => depthCue(shown.pose, lane?.model ?? DISPLAY, range, cue),
   };
 }
+
+const DISPLAY = [1, 0, 0, 0, 0, 1, 0, 0, 0, 0, 1, 0];
 
 /** The galaxies of the lanes; before there is a region, all of them as they stand on the sky. */
 export function partsOf(frame: ConeFrame, galaxies: Galaxies): PointPart[] {
   const ranges = galaxies.store?.ranges ?? [];
-  if (frame.lanes.length === 0 && ranges[0]) return [{ matrix: frame.pixels, range: ranges[0] }];
+  if (frame.lanes.length === 0 && ranges[0])
+    return [{ matrix: frame.pixels, range: ranges[0], depth: frame.depthIn(null) }];
   return frame.lanes.flatMap((lane, i) => {
     const range = ranges[lane.field];
-    return range ? [{ matrix: frame.laneMatrices[i]!, range }] : [];
+    return range ? [{ matrix: frame.laneMatrices[i]!, range, depth: frame.depthIn(lane) }] : [];
   });
 }
 

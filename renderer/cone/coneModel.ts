@@ -7,6 +7,7 @@ import {
   lanes,
   proposeSidewaysFactor,
 } from './geometry/arrangement.ts';
+import { type DepthRange, depthRange } from './geometry/depthCue.ts';
 import { SKY_FRAME } from './geometry/fieldFrame.ts';
 import {
   axisWindowOf,
@@ -214,6 +215,11 @@ export class ConeModel {
   lanes(factors: readonly number[]): Lane[] {
     const heights = this.heights().map((px) => px * this.fullScale());
     return lanes(this.view, this.fields, this.current, this.wide, factors, heights);
+  }
+
+  /** How far what is shown reaches along the line of sight. */
+  depth({ pose }: Shown): DepthRange {
+    return depthRange(pose, this.corners());
   }
 
   state(): ViewState {

@@ -1,3 +1,4 @@
+import { type Light, USUAL_LIGHT } from '../../shared-core/study/schema.ts';
 import type { Triple } from '../colour/oklab.ts';
 import { shellColours } from '../colour/shellColours.ts';
 import { type ConeFrame, coneFrame, emphasisOf, partsOf } from './coneFrame.ts';
@@ -8,7 +9,6 @@ import { listen } from './navigation.ts';
 import { Pointing } from './pointing.ts';
 import { type PointFrame, pictureKey } from './points/pointLayer.ts';
 import { type LayerChoice, PointPainter } from './points/pointPainter.ts';
-import type { Stretch } from './points/tone.ts';
 import { Stage } from './stage.ts';
 import { DARK } from './theme.ts';
 import type {
@@ -51,7 +51,7 @@ export class ConeView {
   private shells: ShellsInput = { shells: [], selected: null, hovered: null };
   private colours: readonly Triple[] = [];
   private colouring: ColouringInput = { kind: 'radius', map: 'harbour' };
-  private stretch: Stretch = 'asinh';
+  private light: Light = USUAL_LIGHT;
   private picked: readonly number[] = [];
   private pairText = '';
   private frameRequest = 0;
@@ -107,8 +107,8 @@ export class ConeView {
     this.invalidate();
   }
 
-  setStretch(stretch: Stretch): void {
-    this.stretch = stretch;
+  setLight(light: Light): void {
+    this.light = light;
     this.lookVersion++;
     this.invalidate();
   }
@@ -277,7 +277,7 @@ export class ConeView {
   }
 
   private frame(now: number): ConeFrame {
-    return coneFrame(this.model, this.stage, now);
+    return coneFrame(this.model, this.stage, now, this.light.depthCue);
   }
 
   private draw(): void {
@@ -369,7 +369,7 @@ export class ConeView {
       theme: this.theme,
       colouring: this.colouring,
       shellCount: this.shells.shells.length,
-      stretch: this.stretch,
+      light: this.light,
     };
     const { widthPx, heightPx, pixelRatio } = this.stage;
     const viewport = { widthPx, heightPx };

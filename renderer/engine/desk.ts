@@ -12,6 +12,7 @@ import { compileRegion } from '../../shared-core/sky/compileRegion.ts';
 import { estimateFootprint } from '../../shared-core/sky/estimate.ts';
 import { footprintFields } from '../../shared-core/sky/fields.ts';
 import type { Footprint } from '../../shared-core/sky/region.ts';
+import { columnRows, type NamedColumn } from './columnRows.ts';
 import type { EngineEvent, EngineSource, FootprintPicture, GalaxyRow, Stage, Wanted } from './protocol.ts';
 import { sourceBytes, startSha256 } from './sourceBytes.ts';
 
@@ -39,7 +40,8 @@ class Superseded extends Error {}
 
 /**
  * Catalogue work in stages, each redone only when what it depends on changed:
- * load (source, mapping, columns) -> select (region, cuts) -> background (cosmology) -> density (cosmology).
+ * load (source, mapping, cut columns) -> select (region, cuts) -> background (cosmology) -> density (cosmology);
+ * columns (of the colours) rests on select alone.
  */
 export class EngineDesk {
   readonly #around: Surroundings;
@@ -50,8 +52,10 @@ export class EngineDesk {
   #keys: Partial<Record<Stage, string>> = {};
   #catalogue: Catalogue | null = null;
   #sample: SortedSample | null = null;
+  /** Columns of all rows of the catalogue, kept while something is coloured by them. */
+  #columns: readonly NamedColumn[] = [];
   /** How often each stage ran: what a test asks to see that nothing is done twice. */
-  readonly runs: Record<Stage, number> = { load: 0, select: 0, background: 0, density: 0 };
+  readonly runs: Record<Stage, number> = { load: 0, select: 0, background: 0, density: 0, columns: 0 };
 
   constructor(around: Surroundings) {
     this.#around = around;
@@ -86,17 +90,19 @@ export class EngineDesk {
     const choose = load + key(wish.region, wish.cuts);
     const background = choose + key(wish.cosmology);
     const density = background + key(wish.density);
+    const columns = choose + key(wish.columns);
     const stages: [Stage, string, () => Promise<void>][] = [
       ['load', load, () => this.#load(wish)],
       ['select', choose, () => this.#select(wish)],
       ['background', background, () => this.#background(wish)],
       ['density', density, () => this.#density(wish)],
+      ['columns', columns, () => this.#colourColumns(wish)],
     ];
     for (const [stage, stageKey, work] of stages) {
       if (this.#keys[stage] === stageKey) continue;
       const before = { ...this.#keys };
-      // What comes after a stage rests on it: going back to an earlier wish must not find later results still valid.
-      for (const [later] of stages.slice(stages.findIndex(([s]) => s === stage))) delete this.#keys[later];
+      // What rests on a stage: going back to an earlier wish must not find later results still valid.
+      for (const later of RESTING_ON[stage]) delete this.#keys[later];
       this.runs[stage]++;
       try {
         await work();
@@ -152,6 +158,7 @@ export class EngineDesk {
     });
     this.#catalogue = catalogue;
     this.#sample = null;
+    this.#columns = [];
     emit({
       kind: 'loaded',
       loaded: {
@@ -257,6 +264,38 @@ export class EngineDesk {
     emit({ kind: 'density', density });
   }
 
+  /** Columns that the catalogue was not loaded with are read from the file in one more pass; nothing else is redone. */
+  async #colourColumns(wish: Wanted): Promise<void> {
+    const { emit, floats } = this.#around;
+    const [sample, catalogue] = [this.#sample, this.#catalogue];
+    const { source } = wish;
+    if (wish.columns.length === 0 || sample === null || catalogue === null || source === null) {
+      this.#columns = [];
+      emit({ kind: 'columns', columns: [] });
+      return;
+    }
+    emit({ kind: 'progress', stage: 'columns', fraction: null });
+    const desk = this;
+    this.#columns = await columnRows(wish.columns, {
+      catalogue,
+      known: this.#columns,
+      open: () => this.#bytes(source),
+      mapping: wish.mapping,
+      signal: {
+        get aborted() {
+          return desk.#wanted !== wish;
+        },
+      },
+    });
+    await this.#pause(wish);
+    const columns = this.#columns.map(({ column, rows }) => {
+      const values = floats(sample.count);
+      for (let i = 0; i < sample.count; i++) values[i] = rows[sample.order[i]!]!;
+      return { column, values };
+    });
+    emit({ kind: 'columns', columns });
+  }
+
   async #pause(wish: Wanted): Promise<void> {
     await this.#around.breathe();
     if (this.#wanted !== wish) throw new Superseded();
@@ -265,6 +304,7 @@ export class EngineDesk {
   #drop(): void {
     this.#catalogue = null;
     this.#sample = null;
+    this.#columns = [];
   }
 
   #bytes(source: EngineSource, signal?: AbortSignal): Promise<AsyncIterable<Uint8Array>> {
@@ -310,6 +350,14 @@ export class EngineDesk {
     return list.parts();
   }
 }
+
+const RESTING_ON: Readonly<Record<Stage, readonly Stage[]>> = {
+  load: ['load', 'select', 'background', 'density', 'columns'],
+  select: ['select', 'background', 'density', 'columns'],
+  background: ['background', 'density'],
+  density: ['density'],
+  columns: ['columns'],
+};
 
 function estimateOf(catalogue: Catalogue, indices: Uint32Array): Footprint | null {
   if (indices.length === 0) return null;

@@ -36,6 +36,7 @@ function transferable(message: EngineEvent | EngineAnswer): Transferable[] {
   if (message.kind === 'background' && message.background !== null)
     arrays.push(message.background.comovingMpc, message.background.lookbackGyr);
   if (message.kind === 'density' && message.density !== null) arrays.push(message.density);
+  if (message.kind === 'columns') arrays.push(...message.columns.map((column) => column.values));
   return arrays.map((a) => a.buffer).filter((b): b is ArrayBuffer => b instanceof ArrayBuffer);
 }
 

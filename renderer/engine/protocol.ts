@@ -19,6 +19,8 @@ export interface Wanted {
   readonly cosmology: CosmologyParameters;
   /** Local density costs time, so it is made only when a colour asks for it. */
   readonly density: boolean;
+  /** Columns whose numbers something is coloured by. */
+  readonly columns: readonly string[];
 }
 
 /** The file as read: before region and cuts. */
@@ -60,7 +62,13 @@ export interface Background {
   readonly lookbackGyr: Float32Array;
 }
 
-export const STAGES = ['load', 'select', 'background', 'density'] as const;
+/** The numbers of a column, sorted by redshift; NaN where the file gives none. */
+export interface ColumnValues {
+  readonly column: string;
+  readonly values: Float32Array;
+}
+
+export const STAGES = ['load', 'select', 'background', 'density', 'columns'] as const;
 export type Stage = (typeof STAGES)[number];
 
 export type EngineEvent =
@@ -69,6 +77,7 @@ export type EngineEvent =
   | { readonly kind: 'selected'; readonly selected: Selected | null }
   | { readonly kind: 'background'; readonly background: Background | null }
   | { readonly kind: 'density'; readonly density: Float32Array | null }
+  | { readonly kind: 'columns'; readonly columns: readonly ColumnValues[] }
   /** A sentence for the person; the stages after it have no result. */
   | { readonly kind: 'failed'; readonly stage: Stage; readonly sentence: string }
   /** Everything is up to date with the wish of this number. */

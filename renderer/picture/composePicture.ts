@@ -58,7 +58,7 @@ export function composePicture(options: PictureOptions, facts: PictureFacts): Sc
     height: paper.height,
     background: options.transparent ? null : groundOf(theme),
     items: [...drawing.under, { kind: 'points' }, ...drawing.over, ...marked.items, ...around.items],
-    points: placePoints(drawing, box, options, numbers, theme),
+    points: placePoints(drawing, box, numbers, theme),
     metadata: {
       title: title.trim() === '' ? numbers.study.name : title,
       description: describeInWords(options, numbers, drawing),

@@ -8,9 +8,10 @@ import type { ShellStatistics } from '../../shared-core/shells/shell.ts';
 import { shellStatistics } from '../../shared-core/shells/statistics.ts';
 import { compileRegion } from '../../shared-core/sky/compileRegion.ts';
 import { footprintFields } from '../../shared-core/sky/fields.ts';
-import type { ColourChoice, Study } from '../../shared-core/study/schema.ts';
+import { colourKey } from '../../shared-core/study/colourBy.ts';
+import type { ColourBy, Light, Study } from '../../shared-core/study/schema.ts';
 import type { ShellInput } from '../cone/types.ts';
-import type { Background, FootprintPicture, Selected } from '../engine/protocol.ts';
+import type { Background, ColumnValues, FootprintPicture, Selected } from '../engine/protocol.ts';
 import { type Colours, colouring, coneShells, radialScale } from '../stage/coneInputs.ts';
 import { radialPixel, wholeWindow } from '../strip/layout.ts';
 import { type Readings, readingsOf } from '../strip/readings.ts';
@@ -24,6 +25,7 @@ export interface PictureFacts {
   readonly background: Background | null;
   /** Only needed where galaxies are coloured by it. */
   readonly density: Float32Array | null;
+  readonly columns: readonly ColumnValues[];
 }
 
 /** Everything that the views draw, by the functions that the window uses. */
@@ -40,7 +42,8 @@ export interface PictureNumbers {
   readonly shells: readonly ShellStatistics[];
   readonly shellInputs: readonly ShellInput[];
   readonly colours: Colours;
-  readonly colourBy: ColourChoice;
+  readonly colourBy: ColourBy;
+  readonly light: Light;
 }
 
 /**
@@ -83,6 +86,7 @@ export function pictureNumbers(options: PictureOptions, facts: PictureFacts): Pi
     shellInputs: coneShells(shells),
     colours,
     colourBy,
+    light: lightOf(options, study.look.light),
   };
 }
 
@@ -125,19 +129,39 @@ function coloursOf(
   facts: PictureFacts,
   within: number,
 ): Pick<PictureNumbers, 'colours' | 'colourBy'> {
-  const { selected, background, density, study } = facts;
+  const { selected, background, density, columns, study } = facts;
   const byShell: Colours = { input: { kind: 'shell' }, legend: null };
   if (selected === null || background === null) return { colours: byShell, colourBy: 'shell' };
   const wanted = options.colourBy ?? study.look.colourBy;
+  const map = options.colourMap ?? study.look.colourMap;
   // The colours span what is shown.
   const { sample } = selected;
   const shown = { ...selected, sample: { ...sample, redshift: sample.redshift.subarray(0, within) } };
-  const found = colouring(wanted, shown, background.lookbackGyr.subarray(0, within), density);
+  const lookbackGyr = background.lookbackGyr.subarray(0, within);
+  const found = colouring(wanted, map, shown, {
+    lookbackGyr,
+    density: density?.subarray(0, within) ?? null,
+    columns: columns.map(({ column, values }) => ({ column, values: values.subarray(0, within) })),
+  });
   if (found !== null) return { colours: found, colourBy: wanted };
   if (options.colourBy !== null)
     throw new Refusal(
-      `Galaxies were to be coloured by ${wanted}, which this catalogue has no values for: choose redshift, lookback or shell.`,
+      `Galaxies were to be coloured by ${colourKey(wanted)}, which this catalogue has no values for: choose redshift, lookback or shell.`,
       'use',
     );
-  return { colours: colouring('redshift', shown, null, null) ?? byShell, colourBy: 'redshift' };
+  return {
+    colours: colouring('redshift', map, shown, { lookbackGyr, density: null, columns: [] }) ?? byShell,
+    colourBy: 'redshift',
+  };
+}
+
+/** The study's light, as far as the options say nothing else. */
+function lightOf(options: PictureOptions, own: Light): Light {
+  return {
+    stretch: options.stretch ?? own.stretch,
+    exposureStops: options.exposureStops ?? own.exposureStops,
+    glow: options.glow ?? own.glow,
+    depthCue: options.depthCue ?? own.depthCue,
+    pointSize: options.pointSize ?? own.pointSize,
+  };
 }

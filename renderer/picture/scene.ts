@@ -1,5 +1,5 @@
+import type { Stretch } from '../../shared-core/study/schema.ts';
 import type { Triple } from '../colour/oklab.ts';
-import type { Stretch } from '../cone/points/tone.ts';
 
 /*
  * A picture before it has pixels. Lengths are in units, of which a square picture has SIDE_UNITS a side; y downward.
@@ -71,12 +71,16 @@ export interface ScenePoints {
   readonly y: Float32Array;
   /** Index of the colour, 0..255. */
   readonly value: Uint8Array;
+  /** Part of its light that a galaxy keeps, 0..1; null: all of it. */
+  readonly light: Float32Array | null;
   /** 256 colours, sRGB bytes. */
   readonly colours: Uint8Array;
   readonly stretch: Stretch;
   readonly exposureStops: number;
   /** Toward which the brightest places turn. */
   readonly glow: Triple;
+  /** How far they do, 0..1. */
+  readonly glowShare: number;
   /** Diameter of a galaxy. */
   readonly diameter: number;
   /** Galaxies a square unit where the densest hundredth stands, and where the thinnest tenth does. */

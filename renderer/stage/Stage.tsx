@@ -64,11 +64,17 @@ export function Stage() {
   const pixel = useComputed(() => radialPixel(derived.axis.value, window.value, widthPx.value));
   const readings = useComputed(() => readingsOf(derived.cosmology.value, derived.units.value));
   const shells = useComputed(() => coneShells(derived.shells.value));
+  const colourBy = useComputed(() => studyState.study.value.look.colourBy);
+  const colourMap = useComputed(() => studyState.study.value.look.colourMap);
+  const light = useComputed(() => studyState.study.value.look.light);
   const colours = useComputed(() => {
     const selected = engine.selected.value;
-    const choice = studyState.study.value.look.colourBy;
     if (selected === null) return null;
-    return colouring(choice, selected, engine.background.value?.lookbackGyr ?? null, engine.density.value);
+    return colouring(colourBy.value, colourMap.value, selected, {
+      lookbackGyr: engine.background.value?.lookbackGyr ?? null,
+      density: engine.density.value,
+      columns: engine.columns.value,
+    });
   });
   const radial = useComputed(() => studyState.study.value.look.radial);
   const sideways = useComputed(() => studyState.study.value.look.sideways);
@@ -102,6 +108,7 @@ export function Stage() {
     const input = colours.value?.input;
     if (cone.value !== null && input !== undefined) cone.value.setColouring(input);
   });
+  useSignalEffect(() => cone.value?.setLight(light.value));
   useSignalEffect(() => {
     cone.value?.setShells({
       shells: shells.value,

@@ -1,12 +1,14 @@
 import type { ReadonlySignal } from '@preact/signals';
+import { useId } from 'preact/hooks';
 import { changeLook } from '../../shared-core/study/edits.ts';
-import { COLOUR_CHOICES, type ColourChoice } from '../../shared-core/study/schema.ts';
 import type { ViewState as ConeState } from '../cone/types.ts';
 import { useApp } from '../state/app.ts';
 import type { CameraView } from '../state/viewState.ts';
 import { IconButton } from '../ui/IconButton.tsx';
 import { Segments } from '../ui/Segments.tsx';
+import { ColourSelect } from './ColourSelect.tsx';
 import { type Colours, VIEW_NAMES } from './coneInputs.ts';
+import { LightPopover } from './LightPopover.tsx';
 import { SidewaysField } from './SidewaysField.tsx';
 import { StageLegend } from './StageLegend.tsx';
 
@@ -23,14 +25,6 @@ const VIEWS: readonly { value: CameraView; label: string; title: string; needs?:
     needs: 'fields',
   },
 ];
-const COLOUR_WORDS: Readonly<Record<ColourChoice, string>> = {
-  redshift: 'redshift',
-  lookback: 'lookback time',
-  shell: 'shell',
-  magnitude: 'magnitude',
-  density: 'local density',
-};
-
 /** The view that the cone is in; '' once it was orbited away from all of them. */
 function shownView(state: ConeState | null): CameraView | '' {
   if (state === null) return 'side-on';
@@ -46,7 +40,8 @@ export function StageBar({
   readonly coneState: ReadonlySignal<ConeState | null>;
   readonly colours: ReadonlySignal<Colours | null>;
 }) {
-  const { studyState, view, engine } = useApp();
+  const { studyState, view } = useApp();
+  const colourId = useId();
   const { look } = studyState.study.value;
   const fields = coneState.value?.fieldCount ?? 1;
   const stepField = (step: number): void => {
@@ -54,7 +49,6 @@ export function StageBar({
     if (coneState.value?.view === 'parallel') view.lookFrom('side-on');
     view.field.value = (view.field.value + step) % fields;
   };
-  const hasMagnitude = engine.selected.value?.magnitude != null;
   return (
     <fieldset class="stage-bar">
       <legend class="unseen">How the cone is shown</legend>
@@ -64,24 +58,18 @@ export function StageBar({
         choices={VIEWS.filter((v) => v.needs === undefined || fields > 1)}
         onChoose={(value) => view.lookFrom(value)}
       />
-      <label class="stage-colour">
-        <span>colour</span>
-        <select
+      <span class="stage-colour">
+        <label for={colourId}>colour</label>
+        <ColourSelect
+          id={colourId}
           value={look.colourBy}
-          onChange={(e) =>
-            studyState.perform(
-              changeLook('Colour otherwise', { colourBy: e.currentTarget.value as ColourChoice }),
-            )
+          onChoose={(by) =>
+            by === null ? undefined : studyState.perform(changeLook('Colour otherwise', { colourBy: by }))
           }
-        >
-          {COLOUR_CHOICES.map((choice) => (
-            <option key={choice} value={choice} disabled={choice === 'magnitude' && !hasMagnitude}>
-              {COLOUR_WORDS[choice]}
-            </option>
-          ))}
-        </select>
-      </label>
+        />
+      </span>
       <StageLegend colours={colours} />
+      <LightPopover />
       {fields > 1 ? (
         <span class="stage-fields">
           <IconButton icon="before" label="Previous field" onClick={() => stepField(fields - 1)} />

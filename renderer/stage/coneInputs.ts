@@ -1,7 +1,7 @@
 import type { Cosmology } from '../../shared-core/cosmology/cosmology.ts';
 import { formatNumber, type ShownUnits } from '../../shared-core/report/quantity.ts';
 import type { ShellStatistics } from '../../shared-core/shells/shell.ts';
-import type { ColourChoice, RadialReading } from '../../shared-core/study/schema.ts';
+import type { ColourBy, ColourMapName, RadialReading } from '../../shared-core/study/schema.ts';
 import type {
   ColouringInput,
   FootprintInput,
@@ -10,7 +10,7 @@ import type {
   Tick,
   ViewName,
 } from '../cone/types.ts';
-import type { FootprintPicture, Selected } from '../engine/protocol.ts';
+import type { ColumnValues, FootprintPicture, Selected } from '../engine/protocol.ts';
 import type { CameraView } from '../state/viewState.ts';
 import { markText } from '../strip/axisMarks.ts';
 import type { RadialPixel } from '../strip/layout.ts';
@@ -133,22 +133,34 @@ export interface Colours {
   readonly legend: ColourLegend | null;
 }
 
+/** What galaxies may be coloured by, beside the selection itself; sorted by redshift. */
+export interface ColourValues {
+  readonly lookbackGyr: Float32Array | null;
+  readonly density: Float32Array | null;
+  readonly columns: readonly ColumnValues[];
+}
+
 /** How galaxies are coloured, and what the legend says; null while the values are still being made. */
 export function colouring(
-  choice: ColourChoice,
+  by: ColourBy,
+  map: ColourMapName,
   selected: Selected,
-  lookbackGyr: Float32Array | null,
-  density: Float32Array | null,
+  { lookbackGyr, density, columns }: ColourValues,
 ): Colours | null {
   const { redshift } = selected.sample;
-  switch (choice) {
+  if (typeof by === 'object') {
+    const values = columns.find((c) => c.column === by.column)?.values;
+    if (values === undefined) return null;
+    return valued(values, by.column, map, middlePart(values), (v) => String(Number(v.toPrecision(3))));
+  }
+  switch (by) {
     case 'shell':
       return { input: { kind: 'shell' }, legend: null };
     case 'redshift':
-      return valued(redshift, 'redshift', 'harbour', ends(redshift), (v) => formatNumber(v, { decimals: 2 }));
+      return valued(redshift, 'redshift', map, ends(redshift), (v) => formatNumber(v, { decimals: 2 }));
     case 'lookback':
       if (lookbackGyr === null) return null;
-      return valued(lookbackGyr, 'lookback time, Gyr', 'harbour', ends(lookbackGyr), (v) =>
+      return valued(lookbackGyr, 'lookback time, Gyr', map, ends(lookbackGyr), (v) =>
         formatNumber(v, { decimals: 1 }),
       );
     case 'magnitude':
@@ -156,7 +168,7 @@ export function colouring(
       return valued(
         selected.magnitude,
         'magnitude',
-        'harbour',
+        map,
         middlePart(selected.magnitude),
         (v) => formatNumber(v, { decimals: 1 }),
         true,
@@ -166,7 +178,7 @@ export function colouring(
       return valued(
         density,
         'local density, relative to its depth',
-        'harbour',
+        map,
         middlePart(density),
         (v) => `× ${Number((10 ** v).toPrecision(2))}`,
       );

@@ -43,7 +43,8 @@ export function createApp(
     askLeave: (name) => questions.askLeave(name),
     askReplace: (sentence) => questions.askReplace(sentence),
   });
-  const engine = createEngineState(studyState, files.engineSource, options.makeWorker);
+  const view = createViewState(options.theme);
+  const engine = createEngineState(studyState, files.engineSource, view.pictureColour, options.makeWorker);
   bridge.onHostLost(() =>
     notices.tell(
       'The program behind this window has ended, so nothing can be saved from here: start it again, and unsaved work is offered back.',
@@ -57,7 +58,6 @@ export function createApp(
     if (loaded.sizeBytes === source.sizeBytes) files.noteFingerprint(loaded.sha256);
   });
   const derived = createDerived(studyState, engine);
-  const view = createViewState(options.theme);
   // What was pointed at belongs to the catalogue that was open then.
   const source = computed(() => JSON.stringify(files.engineSource.value));
   effect(() => {

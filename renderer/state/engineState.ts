@@ -1,7 +1,10 @@
 import { computed, effect, type ReadonlySignal, signal } from '@preact/signals';
+import { columnsOf } from '../../shared-core/study/colourBy.ts';
+import type { ColourBy } from '../../shared-core/study/schema.ts';
 import { EngineClient } from '../engine/client.ts';
 import type {
   Background,
+  ColumnValues,
   EngineEvent,
   EngineSource,
   Loaded,
@@ -18,6 +21,8 @@ export interface EngineState {
   readonly background: ReadonlySignal<Background | null>;
   /** Local density (log10, relative to the typical at that depth), sorted by redshift; made on demand. */
   readonly density: ReadonlySignal<Float32Array | null>;
+  /** Columns that something is coloured by; made on demand. */
+  readonly columns: ReadonlySignal<readonly ColumnValues[]>;
   /** What is being worked on; null when everything is up to date. */
   readonly progress: ReadonlySignal<{ readonly stage: Stage; readonly fraction: number | null } | null>;
   /**
@@ -40,16 +45,20 @@ export interface EngineState {
 /**
  * Follows the study: whenever something that the engine's results depend on changes, the whole wish is sent, and the
  * engine does the stale stages again.
+ *
+ * @param alsoColour what something beside the cone colours galaxies by
  */
 export function createEngineState(
   { study }: StudyState,
   source: ReadonlySignal<EngineSource | null>,
+  alsoColour: ReadonlySignal<ColourBy | null>,
   makeWorker?: () => Worker,
 ): EngineState {
   const loaded = signal<Loaded | null>(null);
   const selected = signal<Selected | null>(null);
   const background = signal<Background | null>(null);
   const density = signal<Float32Array | null>(null);
+  const columns = signal<readonly ColumnValues[]>([]);
   const progress = signal<{ stage: Stage; fraction: number | null } | null>(null);
   const failure = signal<{ stage: Stage | 'worker'; sentence: string } | null>(null);
 
@@ -69,6 +78,7 @@ export function createEngineState(
         // The old background belongs to other galaxies: they must never be drawn together.
         background.value = null;
         density.value = null;
+        columns.value = [];
         selected.value = event.selected;
         failure.value = null;
         return;
@@ -80,11 +90,17 @@ export function createEngineState(
         density.value = event.density;
         if (failure.value?.stage === 'density') failure.value = null;
         return;
+      case 'columns':
+        columns.value = event.columns;
+        if (failure.value?.stage === 'columns') failure.value = null;
+        return;
       case 'failed':
         failure.value = { stage: event.stage, sentence: event.sentence };
         progress.value = null;
         if (event.stage === 'load') loaded.value = null;
         if (event.stage === 'load' || event.stage === 'select') selected.value = null;
+        columns.value = [];
+        if (event.stage === 'columns') return;
         if (event.stage !== 'density') background.value = null;
         density.value = null;
         return;
@@ -105,7 +121,16 @@ export function createEngineState(
 
   const wanted = computed<Wanted>(() => {
     const { mapping, cuts, region, cosmology, look } = study.value;
-    return { source: source.value, mapping, cuts, region, cosmology, density: look.colourBy === 'density' };
+    const colours = [look.colourBy, alsoColour.value];
+    return {
+      source: source.value,
+      mapping,
+      cuts,
+      region,
+      cosmology,
+      density: colours.includes('density'),
+      columns: columnsOf(colours),
+    };
   });
   let sent: Wanted | null = null;
   let givenUp: string | null = null;
@@ -124,6 +149,7 @@ export function createEngineState(
     selected,
     background,
     density,
+    columns,
     progress,
     fresh,
     failure,
@@ -153,7 +179,7 @@ export function createEngineState(
 }
 
 const GALAXIES = ['source', 'mapping', 'cuts', 'region'] as const;
-const EVERYTHING = [...GALAXIES, 'cosmology', 'density'] as const;
+const EVERYTHING = [...GALAXIES, 'cosmology', 'density', 'columns'] as const;
 
 // A part that no edit touched is the same object, so a polygon of many vertices costs nothing while an edge is dragged.
 function sameParts(a: Wanted, b: Wanted, parts: readonly (keyof Wanted)[]): boolean {

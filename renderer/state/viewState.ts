@@ -1,4 +1,5 @@
 import { batch, type Signal, signal } from '@preact/signals';
+import type { ColourBy } from '../../shared-core/study/schema.ts';
 
 /** From where the cone is to be seen. */
 export const CAMERA_VIEWS = [
@@ -28,6 +29,8 @@ export interface ViewState {
   readonly cameraAsked: Signal<number>;
   /** Asks for a view. */
   lookFrom(view: CameraView): void;
+  /** What the open picture bench colours by, where that is not the study's choice. */
+  readonly pictureColour: Signal<ColourBy | null>;
   /** The quantity, by key, whose explanation is open. */
   readonly explained: Signal<string | null>;
 }
@@ -50,6 +53,7 @@ export function createViewState(theme: 'light' | 'dark'): ViewState {
         cameraAsked.value++;
       });
     },
+    pictureColour: signal(null),
     explained: signal(null),
   };
 }

@@ -1,6 +1,6 @@
 import { Refusal } from '../base/refusal.ts';
 import { z } from '../base/schema.ts';
-import { COLOUR_CHOICES } from '../study/schema.ts';
+import { COLOUR_MAP_NAMES, colourBySchema, lightParts } from '../study/schema.ts';
 
 /** Longest side of a picture in pixels. */
 export const MOST_SIDE_PX = 16_384;
@@ -51,11 +51,14 @@ export const pictureOptionsSchema = z.strictObject({
   labels: z.array(label).max(200).default([]),
   rulers: z.boolean().default(true),
   shells: z.boolean().default(true),
-  stretch: z.enum(['linear', 'squareRoot', 'logarithmic', 'asinh']).default('asinh'),
-  /** Stops brighter (above 0) or fainter than the data's own exposure. */
-  exposureStops: z.number().min(-8).max(8).default(0),
-  /** Null takes the study's choice. */
-  colourBy: z.enum(COLOUR_CHOICES).nullable().default(null),
+  /** Null takes the study's choice; the same for colour. */
+  stretch: lightParts.stretch.nullable().default(null),
+  exposureStops: lightParts.exposureStops.nullable().default(null),
+  glow: lightParts.glow.nullable().default(null),
+  depthCue: lightParts.depthCue.nullable().default(null),
+  pointSize: lightParts.pointSize.nullable().default(null),
+  colourBy: colourBySchema.nullable().default(null),
+  colourMap: z.enum(COLOUR_MAP_NAMES).nullable().default(null),
   slab: slab.nullable().default(null),
   /** Redshift at which the picture ends; null shows everything. */
   depthRedshift: z.number().positive().max(1100).nullable().default(null),

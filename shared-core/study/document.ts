@@ -5,7 +5,7 @@ import { checkSomeEdges } from '../shells/edges.ts';
 import { DEFAULT_P0_MPC3_PER_H3 } from '../shells/statistics.ts';
 import { compileRegion } from '../sky/compileRegion.ts';
 import { MIGRATIONS, type Migrations } from './migrations.ts';
-import { STUDY_FORMAT, STUDY_VERSION, type Study, studySchema } from './schema.ts';
+import { STUDY_FORMAT, STUDY_VERSION, type Study, studySchema, USUAL_LIGHT } from './schema.ts';
 
 /** A study with nothing in it yet: Planck 2018, no catalogue, no shells. */
 export function emptyStudy(name = 'Untitled'): Study {
@@ -22,7 +22,15 @@ export function emptyStudy(name = 'Untitled'): Study {
     cosmologySet: set.key,
     edges: [],
     p0Mpc3PerH3: DEFAULT_P0_MPC3_PER_H3,
-    look: { radial: 'comoving', perH: false, colourBy: 'redshift', sideways: null, snap: false },
+    look: {
+      radial: 'comoving',
+      perH: false,
+      colourBy: 'redshift',
+      colourMap: 'harbour',
+      light: USUAL_LIGHT,
+      sideways: null,
+      snap: false,
+    },
   };
 }
 

@@ -1,7 +1,7 @@
 import { z } from '../base/schema.ts';
 
 /** Version written by this program; older ones are migrated, newer ones refused. */
-export const STUDY_VERSION = 1;
+export const STUDY_VERSION = 2;
 export const STUDY_FORMAT = 'conewright-study';
 
 const finite = z.number().finite();
@@ -78,10 +78,46 @@ export type RadialReading = (typeof RADIAL_READINGS)[number];
 export const COLOUR_CHOICES = ['redshift', 'lookback', 'shell', 'magnitude', 'density'] as const;
 export type ColourChoice = (typeof COLOUR_CHOICES)[number];
 
+/** What galaxies are coloured by: one of the choices, or the numbers of any column of the catalogue. */
+export const colourBySchema = z.union([z.enum(COLOUR_CHOICES), z.strictObject({ column: columnName })]);
+export type ColourBy = DeepReadonly<z.infer<typeof colourBySchema>>;
+
+/** Colour maps, even to the eye and safe for colour-blind readers. */
+export const COLOUR_MAP_NAMES = ['harbour', 'lantern', 'heath', 'slate'] as const;
+export type ColourMapName = (typeof COLOUR_MAP_NAMES)[number];
+
+/** How summed light becomes brightness. */
+export const STRETCHES = ['asinh', 'logarithmic', 'squareRoot', 'linear'] as const;
+export type Stretch = (typeof STRETCHES)[number];
+
+/** How the galaxies' light is shown, on the stage and in pictures. */
+export const lightParts = {
+  stretch: z.enum(STRETCHES),
+  /** Stops brighter (above 0) or fainter than the data's own exposure. */
+  exposureStops: finite.min(-8).max(8),
+  /** How far the brightest places turn toward the glow's colour. */
+  glow: finite.min(0).max(1),
+  /** How much fainter the farthest galaxies are than the nearest, where the cone is seen from outside. */
+  depthCue: finite.min(0).max(1),
+  /** Diameter of a galaxy over the one that suits how crowded they are. */
+  pointSize: finite.min(0.25).max(4),
+} as const;
+const light = z.strictObject(lightParts);
+export type Light = DeepReadonly<z.infer<typeof light>>;
+export const USUAL_LIGHT: Light = {
+  stretch: 'asinh',
+  exposureStops: 0,
+  glow: 0.65,
+  depthCue: 0,
+  pointSize: 1,
+};
+
 const look = z.strictObject({
   radial: z.enum(RADIAL_READINGS),
   perH: z.boolean(),
-  colourBy: z.enum(COLOUR_CHOICES),
+  colourBy: colourBySchema,
+  colourMap: z.enum(COLOUR_MAP_NAMES),
+  light,
   /** Widening of narrow fields in the side-on view; null takes the program's proposal. */
   sideways: finite.min(1).max(10_000).nullable(),
   /** Edges dragged jump to round values of the radial reading. */

@@ -52,6 +52,7 @@ const wanted: Wanted = {
   region: null,
   cosmology: emptyStudy().cosmology,
   density: false,
+  columns: [],
 };
 
 describe('the engine does what the study asks, and nothing twice', () => {
@@ -81,7 +82,7 @@ describe('the engine does what the study asks, and nothing twice', () => {
     expect(last('progress')).toMatchObject({ stage: 'load' });
     await desk.want(wanted, 3);
     await reading;
-    expect(desk.runs).toEqual({ load: 2, select: 1, background: 1, density: 1 });
+    expect(desk.runs).toEqual({ load: 2, select: 1, background: 1, density: 1, columns: 1 });
     expect(events.slice(before).map((e) => e.kind)).toEqual(['progress', 'idle']);
     expect(last('idle')!.serial).toBe(3);
     expect(desk.row(0)).toMatchObject({ redshift: 0.1, line: 2 });
@@ -99,25 +100,47 @@ describe('the engine does what the study asks, and nothing twice', () => {
   it('a new cosmology, region or cut redoes what depends on it and nothing else', async () => {
     const { desk } = deskOf();
     await desk.want(wanted);
-    expect(desk.runs).toEqual({ load: 1, select: 1, background: 1, density: 1 });
+    expect(desk.runs).toEqual({ load: 1, select: 1, background: 1, density: 1, columns: 1 });
     await desk.want({ ...wanted });
-    expect(desk.runs).toEqual({ load: 1, select: 1, background: 1, density: 1 });
+    expect(desk.runs).toEqual({ load: 1, select: 1, background: 1, density: 1, columns: 1 });
     const other = { ...wanted, cosmology: { ...findPublishedSet('wmap9').parameters } };
     await desk.want(other);
-    expect(desk.runs).toEqual({ load: 1, select: 1, background: 2, density: 2 });
+    expect(desk.runs).toEqual({ load: 1, select: 1, background: 2, density: 2, columns: 1 });
     const boxed = {
       ...other,
       region: { parts: [{ kind: 'cap', raDeg: 152, decDeg: 4, radiusDeg: 2 }], holes: [] },
     } as const;
     await desk.want(boxed);
-    expect(desk.runs).toEqual({ load: 1, select: 2, background: 3, density: 3 });
+    expect(desk.runs).toEqual({ load: 1, select: 2, background: 3, density: 3, columns: 2 });
     await desk.want({ ...boxed, density: true });
-    expect(desk.runs).toEqual({ load: 1, select: 2, background: 3, density: 4 });
+    expect(desk.runs).toEqual({ load: 1, select: 2, background: 3, density: 4, columns: 2 });
     // A cut on a column that is not in memory reads the file again; new limits of the same cut do not.
     await desk.want({ ...boxed, cuts: [{ column: 'mag', min: null, max: 18 }] });
     expect(desk.runs.load).toBe(2);
     await desk.want({ ...boxed, cuts: [{ column: 'mag', min: null, max: 17 }] });
     expect(desk.runs).toMatchObject({ load: 2, select: 4 });
+  });
+
+  it('reads a column to colour by in a pass of its own, and redoes nothing else for it', async () => {
+    const { desk, last } = deskOf();
+    await desk.want(wanted);
+    await desk.want({ ...wanted, columns: ['mag'] });
+    expect(desk.runs).toEqual({ load: 1, select: 1, background: 1, density: 1, columns: 2 });
+    const [mag] = last('columns')!.columns;
+    expect(mag!.column).toBe('mag');
+    expect(mag!.values).toEqual(last('selected')!.selected!.magnitude);
+    // Another selection takes its values from memory.
+    const region = { parts: [{ kind: 'cap', raDeg: 152, decDeg: 4, radiusDeg: 2 }], holes: [] } as const;
+    await desk.want({ ...wanted, region, columns: ['mag', 'ra'] });
+    const { selected } = last('selected')!;
+    const [magnitudes, ra] = last('columns')!.columns;
+    expect(magnitudes!.values).toEqual(selected!.magnitude);
+    expect(ra!.values).toEqual(selected!.raDeg);
+    expect(desk.runs).toMatchObject({ load: 1, select: 2, background: 2 });
+    await desk.want({ ...wanted, region, columns: ['colour'] });
+    expect(last('failed')).toMatchObject({ stage: 'columns' });
+    expect(last('failed')!.sentence).toMatch(/colour/);
+    expect(last('selected')!.selected).toBe(selected);
   });
 
   it('drops work for a wish that is out of date', async () => {

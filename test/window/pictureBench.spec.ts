@@ -31,7 +31,7 @@ test("the picture bench: previews, says what hinders, and exports the command's 
   await accessible(page);
 
   // What cannot be used is said, and nothing can be started with it.
-  await bench.getByLabel('Size').selectOption('own');
+  await bench.getByLabel('Size', { exact: true }).selectOption('own');
   await bench.getByLabel('Width').fill('0');
   await expect(
     bench.getByText('The width in pixels is 0: give a number from 64 to 16384.').first(),
@@ -79,7 +79,7 @@ test('a large export shows how far it is, and can be cancelled', async ({ desk }
   await ready(page);
   await page.keyboard.press('p');
   const bench = page.getByRole('dialog', { name: 'Picture' });
-  await bench.getByLabel('Size').selectOption('a0');
+  await bench.getByLabel('Size', { exact: true }).selectOption('a0');
   await drawn(page);
   await bench.getByRole('button', { name: 'Export PNG' }).click();
   await expect(bench.getByRole('progressbar', { name: 'Writing PNG' })).toBeVisible();

@@ -11,8 +11,14 @@ import {
   pictureOptions,
   SIZE_FORMS,
 } from '../../../shared-core/picture/options.ts';
+import { colourOfKey } from '../../../shared-core/study/colourBy.ts';
 import { readStudy } from '../../../shared-core/study/document.ts';
-import { COLOUR_CHOICES, type Study } from '../../../shared-core/study/schema.ts';
+import {
+  COLOUR_CHOICES,
+  COLOUR_MAP_NAMES,
+  STRETCHES,
+  type Study,
+} from '../../../shared-core/study/schema.ts';
 import { FileHistory } from '../../files/history.ts';
 import { locateSource } from '../../files/locateSource.ts';
 import { userFolder } from '../../files/userFolder.ts';
@@ -36,7 +42,11 @@ interface PictureVerbOptions {
   shells: boolean;
   stretch?: string;
   exposure?: number;
+  glow?: number;
+  depthCue?: number;
+  pointSize?: number;
   colour?: string;
+  colourMap?: string;
   dec?: number[];
   greatCircle?: number[];
   depth?: number;
@@ -73,14 +83,22 @@ export function addPicture(program: Command, say: (text: string) => void, window
     .option('--no-shells', 'leave the shells out')
     .option(
       '--colour <by>',
-      `colour galaxies by ${COLOUR_CHOICES.join(', ')}; the study's choice if not given`,
+      `colour galaxies by ${COLOUR_CHOICES.join(', ')} or column:NAME; the study's choice if not given, as for all of the light`,
     )
-    .option('--stretch <name>', 'linear, squareRoot, logarithmic or asinh (asinh if not given)')
+    .option('--colour-map <name>', COLOUR_MAP_NAMES.join(', '))
+    .option('--stretch <name>', STRETCHES.join(', '))
     .option(
       '--exposure <stops>',
       "brighter (above 0) or fainter than the data's own",
       oneNumber('--exposure'),
     )
+    .option('--glow <share>', 'how far the brightest places turn to white, 0 to 1', oneNumber('--glow'))
+    .option(
+      '--depth-cue <share>',
+      'how much fainter the farthest galaxies are than the nearest, 0 to 1',
+      oneNumber('--depth-cue'),
+    )
+    .option('--point-size <times>', 'diameter of a galaxy, 0.25 to 4 times', oneNumber('--point-size'))
     .option('--dec <min,max>', 'slab of the wedge by declination, degrees', numberList('--dec'))
     .option(
       '--great-circle <ra,dec,thickness>',
@@ -154,7 +172,11 @@ function optionsOf(options: PictureVerbOptions): PictureOptions {
     shells: options.shells,
     stretch: options.stretch,
     exposureStops: options.exposure,
-    colourBy: options.colour ?? null,
+    glow: options.glow,
+    depthCue: options.depthCue,
+    pointSize: options.pointSize,
+    colourBy: options.colour === undefined ? null : colourOfKey(options.colour),
+    colourMap: options.colourMap,
     slab: slabOf(options),
     depthRedshift: options.depth ?? null,
     transparent: options.transparent === true,

@@ -1,3 +1,4 @@
+import type { DepthCue } from '../geometry/depthCue.ts';
 import type { Viewport } from '../geometry/projection.ts';
 import type { FieldRange, PointStore } from './pointStore.ts';
 import type { Tone } from './tone.ts';
@@ -6,6 +7,8 @@ import type { Tone } from './tone.ts';
 export interface PointPart {
   readonly matrix: Float64Array;
   readonly range: FieldRange;
+  /** How light falls with depth; null where it does not. */
+  readonly depth: DepthCue | null;
 }
 
 /** Galaxies in a part of the radius at full light; all others at `dim` of it. */
@@ -44,6 +47,6 @@ export interface PointLayer {
 export function pictureKey(frame: PointFrame, version: string): string {
   const { viewport, pixelRatio, fraction, sizePx, emphasis, tone, parts } = frame;
   const size = [viewport.widthPx, viewport.heightPx, pixelRatio, fraction, sizePx, tone.full, tone.single];
-  const places = parts.flatMap((part) => [part.range.start, ...part.matrix]);
+  const places = parts.flatMap((part) => [part.range.start, ...part.matrix, ...(part.depth?.row ?? [])]);
   return [version, ...size, emphasis?.min, emphasis?.max, ...places].join(' ');
 }

@@ -1,15 +1,13 @@
 import { type PointHit, pickPoint } from '../geometry/pickPoint.ts';
 import type { Viewport } from '../geometry/projection.ts';
 import type { GlStage } from '../graphics/glStage.ts';
-import type { ColouringInput, ConeTheme } from '../types.ts';
 import { crowding, exposure, NOTHING, pointSizePx } from './exposure.ts';
 import { Galaxies, type GalaxiesChange } from './galaxies.ts';
 import type { Emphasis, PointFrame, PointPart } from './pointLayer.ts';
 import { RESERVED_BYTES } from './software/messages.ts';
 import { SoftwarePoints } from './software/softwarePoints.ts';
 import { SplatPool } from './software/splatPool.ts';
-import type { Stretch } from './tone.ts';
-import { ToneSource } from './toneSource.ts';
+import { type ToneLook, ToneSource } from './toneSource.ts';
 import { WebglPoints } from './webglPoints.ts';
 
 /** How points are drawn: as the machine suggests, or as one says. */
@@ -23,14 +21,6 @@ const MOVING_BUDGET_MS = 10;
 const ALWAYS_DRAWN = 120_000;
 /** Workers that end are started again so often. */
 const MOST_RESTARTS = 2;
-
-/** Look of the points that does not depend on the view. */
-export interface PointLook {
-  readonly theme: ConeTheme;
-  readonly colouring: ColouringInput;
-  readonly shellCount: number;
-  readonly stretch: Stretch;
-}
 
 /** The galaxies and the layer that draws them. */
 export class PointPainter {
@@ -97,18 +87,18 @@ export class PointPainter {
     parts: readonly PointPart[],
     viewport: Viewport,
     ratio: number,
-    look: PointLook,
+    look: ToneLook,
     emphasis: Emphasis | null,
     moving: boolean,
   ): PointFrame {
     const { store, ready } = this.galaxies;
     const crowd = store ? crowding(store.arrays, parts, viewport) : NOTHING;
-    const sizePx = pointSizePx(crowd.onStage, viewport, crowd.middlePerPixel);
+    const sizePx = look.light.pointSize * pointSizePx(crowd.onStage, viewport, crowd.middlePerPixel);
     // Large sets move at one pixel a CSS pixel: sharper is for rest.
     const many = crowd.onStage > 400_000;
     const pixelRatio = moving && many && this.layer === 'software' ? Math.min(1, ratio) : ratio;
-    const light = exposure(crowd, pixelRatio, sizePx * pixelRatio);
-    const tone = this.tones.tone(look.theme, look.colouring, look.shellCount, look.stretch, light);
+    const sums = exposure(crowd, pixelRatio, sizePx * pixelRatio);
+    const tone = this.tones.tone(look, sums);
     const frame: PointFrame = { viewport, pixelRatio, parts, fraction: ready, emphasis, sizePx, tone };
     if (!moving || this.layer !== 'software' || !this.software) return frame;
     const total = parts.reduce((sum, part) => sum + part.range.count, 0);
@@ -142,6 +132,8 @@ export class PointPainter {
         to: range.start + range.count,
         matrix: Float32Array.from(matrix),
         light: 1,
+        depth: null,
+        least: 1,
       }));
       return this.pool.pick(runs, xPx, yPx, reachPx);
     }

@@ -1,7 +1,5 @@
+import type { Stretch } from '../../../shared-core/study/schema.ts';
 import type { Triple } from '../../colour/oklab.ts';
-
-/** How summed light becomes brightness. */
-export type Stretch = 'linear' | 'squareRoot' | 'logarithmic' | 'asinh';
 
 export interface Tone {
   /** sRGB bytes of the ground. */
@@ -15,6 +13,8 @@ export interface Tone {
   readonly single: number;
   /** Dark ground: the brightest places turn toward white. On paper: toward a deeper tone of their own. */
   readonly glow: Triple;
+  /** How far they do, 0..1. */
+  readonly glowShare: number;
 }
 
 /** Steps of the colour value and of the light in the table. */
@@ -63,7 +63,7 @@ export function strength(light: number, stretch: Stretch, single: number, full: 
 }
 
 /** Toward full strength the colour itself begins to glow: how much of it gives way to the glow's, by brightness 0..1. */
-export const glowShare = (cover: number): number => (0.65 * Math.max(0, cover - 0.7)) / 0.3;
+export const glowAt = (cover: number, share: number): number => (share * Math.max(0, cover - 0.7)) / 0.3;
 
 /**
  * Table of finished pixels: VALUE_STEPS rows of LIGHT_STEPS words, each red, green, blue, alpha bytes in memory order
@@ -77,7 +77,7 @@ export function toneTable<T extends Uint32Array>(tone: Tone, table: T): T {
   const fixed = [0, 1, 2].map(() => new Float64Array(LIGHT_STEPS));
   for (let i = 0; i < LIGHT_STEPS; i++) {
     const cover = i === 0 ? 0 : strength(lightOfIndex(i), tone.stretch, tone.single, tone.full);
-    const burn = glowShare(cover);
+    const burn = glowAt(cover, tone.glowShare);
     share[i] = cover * (1 - burn);
     for (let k = 0; k < 3; k++) {
       fixed[k]![i] = tone.background[k]! * (1 - cover) + cover * burn * tone.glow[k]! + 0.5;

@@ -1,25 +1,33 @@
+import type { Light } from '../../../shared-core/study/schema.ts';
 import { parseCssColour } from '../cssColour.ts';
 import type { ColouringInput, ConeTheme } from '../types.ts';
 import { palette } from './colouring.ts';
-import type { Stretch, Tone } from './tone.ts';
+import type { Tone } from './tone.ts';
+
+/** What a tone is made from, beside the sums of light. */
+export interface ToneLook {
+  readonly theme: ConeTheme;
+  readonly colouring: ColouringInput;
+  readonly shellCount: number;
+  readonly light: Light;
+}
 
 /** Makes tones, and hands out the same one while nothing of it changes, so that its table need not be made anew. */
 export class ToneSource {
   private last: { key: string; tone: Tone } | null = null;
 
-  /** @param light sums that fix the curve; taken in sixths of an octave, too small a step to be seen */
+  /** @param sums of light that fix the curve; taken in sixths of an octave, too small a step to be seen */
   tone(
-    theme: ConeTheme,
-    colouring: ColouringInput,
-    shellCount: number,
-    stretch: Stretch,
-    light: { readonly full: number; readonly single: number },
+    { theme, colouring, shellCount, light }: ToneLook,
+    sums: { readonly full: number; readonly single: number },
   ): Tone {
-    const full = rounded(light.full);
-    const single = rounded(light.single);
+    const { stretch, glow } = light;
+    const brighter = 2 ** light.exposureStops;
+    const full = rounded(sums.full) / brighter;
+    const single = rounded(sums.single) / brighter;
     const map =
       colouring.kind === 'shell' ? `shells ${shellCount}` : `${colouring.map} ${colouring.reversed}`;
-    const key = [theme.mode, theme.background, map, stretch, full, single].join(' ');
+    const key = [theme.mode, theme.background, map, stretch, glow, full, single].join(' ');
     if (this.last?.key === key) return this.last.tone;
     const tone: Tone = {
       background: parseCssColour(theme.background),
@@ -28,6 +36,7 @@ export class ToneSource {
       full,
       single,
       glow: theme.mode === 'dark' ? [255, 250, 240] : [12, 16, 40],
+      glowShare: glow,
     };
     this.last = { key, tone };
     return tone;

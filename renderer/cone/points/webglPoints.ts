@@ -19,6 +19,7 @@ import {
   Scene,
   UnsignedByteType,
   Vector3,
+  Vector4,
   type WebGLRenderer,
   WebGLRenderTarget,
 } from 'three';
@@ -34,6 +35,8 @@ uniform mat4 clip;
 uniform float size;
 uniform float light;
 uniform vec3 emphasis;
+uniform vec4 depth;
+uniform float least;
 out vec2 vLight;
 void main() {
   // A slot without a galaxy has no radius: put it outside the picture.
@@ -41,6 +44,7 @@ void main() {
   gl_Position = clip * vec4(vec3(px, py, pz) * radius, 1.0);
   gl_PointSize = size;
   float weight = light * (radius >= emphasis.x && radius < emphasis.y ? 1.0 : emphasis.z);
+  weight *= clamp(dot(depth, vec4(vec3(px, py, pz) * radius, 1.0)), least, 1.0);
   vLight = vec2(weight, weight * value);
 }`;
 
@@ -153,6 +157,8 @@ export class WebglPoints implements PointLayer {
           size: { value: 1 },
           light: { value: 1 },
           emphasis: { value: new Vector3(0, 1e9, 1) },
+          depth: { value: new Vector4(0, 0, 0, 1) },
+          least: { value: 1 },
         },
         blending: CustomBlending,
         blendSrc: OneFactor,
@@ -211,6 +217,8 @@ export class WebglPoints implements PointLayer {
     (uniforms.clip!.value as Matrix4).fromArray(clipMatrix(part.matrix, frame.viewport));
     uniforms.size!.value = Math.max(1, frame.sizePx * frame.pixelRatio);
     uniforms.light!.value = drawn > 0 ? part.range.count / drawn : 0;
+    (uniforms.depth!.value as Vector4).fromArray(part.depth?.row ?? [0, 0, 0, 1]);
+    uniforms.least!.value = part.depth?.least ?? 1;
     const e = frame.emphasis;
     (uniforms.emphasis!.value as Vector3).set(e ? e.min : 0, e ? e.max : 1e9, e ? e.dim : 1);
   }

@@ -7,6 +7,7 @@ const STAGE_TEXTS: Readonly<Record<Stage, string>> = {
   select: 'Selecting galaxies',
   background: 'Computing distances',
   density: 'Measuring local density',
+  columns: 'Reading the column of the colours',
 };
 
 /** What the engine is at; at rest, the rows that it kept and set aside. */

@@ -1,19 +1,13 @@
-import { useId } from 'preact/hooks';
-import { COLOUR_CHOICES, type ColourChoice } from '../../../shared-core/study/schema.ts';
+import { useEffect, useId } from 'preact/hooks';
+import type { ColourMapName } from '../../../shared-core/study/schema.ts';
+import { COLOUR_MAPS } from '../../colour/colourMap.ts';
+import { ColourSelect, colourWords } from '../../stage/ColourSelect.tsx';
+import { LightFields } from '../../stage/LightFields.tsx';
 import { useApp } from '../../state/app.ts';
 import { ChoiceField } from '../../ui/ChoiceField.tsx';
 import { Segments } from '../../ui/Segments.tsx';
 import { Switch } from '../../ui/Switch.tsx';
 import type { PictureChoices } from './pictureChoices.ts';
-
-const COLOUR_WORDS: Readonly<Record<ColourChoice, string>> = {
-  redshift: 'Redshift',
-  lookback: 'Lookback time',
-  shell: 'Shell',
-  magnitude: 'Magnitude',
-  density: 'Local density',
-};
-const MOST_STOPS = 8;
 
 /** Style and light. */
 export function LookChoice(props: {
@@ -21,13 +15,16 @@ export function LookChoice(props: {
   readonly onChange: (part: Partial<PictureChoices>) => void;
 }) {
   const { choices, onChange } = props;
-  const { engine, studyState } = useApp();
-  const own = studyState.study.value.look.colourBy;
-  const missing = (by: ColourChoice): string | null => {
-    if (by === 'magnitude' && engine.selected.value?.magnitude == null) return 'no such column';
-    if (by === 'density' && engine.density.value === null) return 'colour the cone by it first';
-    return null;
-  };
+  const { studyState, view } = useApp();
+  const id = useId();
+  const { look } = studyState.study.value;
+  // What the picture is coloured by is made while the bench is open.
+  useEffect(() => {
+    view.pictureColour.value = choices.colourBy;
+    return () => {
+      view.pictureColour.value = null;
+    };
+  }, [view, choices.colourBy]);
   return (
     <>
       <Segments
@@ -39,34 +36,38 @@ export function LookChoice(props: {
         ]}
         onChoose={(style) => onChange({ style })}
       />
+      <div class="field">
+        <label for={id}>Colour by</label>
+        <span class="field-box">
+          <ColourSelect
+            id={id}
+            value={choices.colourBy}
+            unsaid={`As the study: ${colourWords(look.colourBy)}`}
+            onChoose={(colourBy) => onChange({ colourBy })}
+          />
+        </span>
+      </div>
       <ChoiceField
-        label="Colour by"
-        value={choices.colourBy ?? ''}
+        label="Colours"
+        value={choices.colourMap ?? ''}
         choices={[
-          { value: '', label: `As the study: ${COLOUR_WORDS[own].toLowerCase()}` },
-          ...COLOUR_CHOICES.map((by) => {
-            const why = missing(by);
-            return {
-              value: by,
-              label: why === null ? COLOUR_WORDS[by] : `${COLOUR_WORDS[by]} (${why})`,
-              disabled: why !== null,
-            };
-          }),
+          { value: '', label: `As the study: ${look.colourMap}` },
+          ...COLOUR_MAPS.map(({ name, title }) => ({ value: name, label: title })),
         ]}
-        onChoose={(by) => onChange({ colourBy: by === '' ? null : (by as ColourChoice) })}
+        onChoose={(name) => onChange({ colourMap: name === '' ? null : (name as ColourMapName) })}
       />
-      <ChoiceField
-        label="Stretch"
-        value={choices.stretch}
-        choices={[
-          { value: 'asinh', label: 'Asinh' },
-          { value: 'logarithmic', label: 'Logarithmic' },
-          { value: 'squareRoot', label: 'Square root' },
-          { value: 'linear', label: 'Linear' },
-        ]}
-        onChoose={(stretch) => onChange({ stretch: stretch as PictureChoices['stretch'] })}
+      <LightFields
+        light={{ ...look.light, ...choices.light }}
+        onChange={(part) => onChange({ light: { ...choices.light, ...part } })}
       />
-      <Exposure stops={choices.exposureStops} onChange={(exposureStops) => onChange({ exposureStops })} />
+      <button
+        type="button"
+        class="link-button"
+        disabled={Object.keys(choices.light).length === 0}
+        onClick={() => onChange({ light: {} })}
+      >
+        Take the study's light
+      </button>
       <div class="bench-switches">
         <Switch label="Rulers" checked={choices.rulers} onChange={(rulers) => onChange({ rulers })} />
         <Switch label="Shells" checked={choices.shells} onChange={(shells) => onChange({ shells })} />
@@ -77,32 +78,5 @@ export function LookChoice(props: {
         />
       </div>
     </>
-  );
-}
-
-function Exposure({
-  stops,
-  onChange,
-}: {
-  readonly stops: number;
-  readonly onChange: (stops: number) => void;
-}) {
-  const id = useId();
-  const words = stops === 0 ? '0 stops' : `${stops > 0 ? '+' : '−'}${Math.abs(stops)} stops`;
-  return (
-    <div class="bench-exposure">
-      <label for={id}>Exposure</label>
-      <input
-        id={id}
-        type="range"
-        min={-MOST_STOPS}
-        max={MOST_STOPS}
-        step={0.25}
-        value={stops}
-        aria-valuetext={words}
-        onInput={(e) => onChange(Number(e.currentTarget.value))}
-      />
-      <span>{words}</span>
-    </div>
   );
 }

@@ -1,5 +1,5 @@
 import type { PictureOptions, PictureView } from '../../../shared-core/picture/options.ts';
-import type { ColourChoice } from '../../../shared-core/study/schema.ts';
+import type { ColourBy, ColourMapName, Light } from '../../../shared-core/study/schema.ts';
 
 /** A label as it is being typed. */
 export interface LabelDraft {
@@ -21,9 +21,10 @@ export interface PictureChoices {
   readonly ownHeightPx: string;
   readonly dpi: string;
   readonly style: PictureOptions['style'];
-  readonly colourBy: ColourChoice | null;
-  readonly stretch: PictureOptions['stretch'];
-  readonly exposureStops: number;
+  /** Null takes the study's; of the light, whatever is not named here. */
+  readonly colourBy: ColourBy | null;
+  readonly colourMap: ColourMapName | null;
+  readonly light: Partial<Light>;
   readonly slab: SlabKind;
   readonly decMinDeg: string;
   readonly decMaxDeg: string;
@@ -51,8 +52,8 @@ export const FIRST_CHOICES: PictureChoices = {
   dpi: '300',
   style: 'dark',
   colourBy: null,
-  stretch: 'asinh',
-  exposureStops: 0,
+  colourMap: null,
+  light: {},
   slab: 'offered',
   decMinDeg: '',
   decMaxDeg: '',

@@ -104,8 +104,12 @@ export class PictureDesk {
       caption: null,
       credit: '',
       labels: [],
-      stretch: 0,
-      exposureStops: 0,
+      stretch: null,
+      exposureStops: null,
+      glow: null,
+      depthCue: null,
+      pointSize: null,
+      colourMap: null,
     });
     if (this.#offer?.facts !== facts || this.#offer.key !== key)
       this.#offer = { facts, key, caption: captionOffer(options, facts) };

@@ -51,19 +51,8 @@ export function readChoices(choices: PictureChoices, screenPx: readonly [number,
       redshift: number(`label${i}.redshift`, label.redshift, name('Redshift'), 0, 1100),
     };
   });
-  const {
-    view,
-    style,
-    colourBy,
-    stretch,
-    exposureStops,
-    title,
-    caption,
-    credit,
-    rulers,
-    shells,
-    transparent,
-  } = choices;
+  const { view, style, colourBy, colourMap, light, title, caption, credit, rulers, shells, transparent } =
+    choices;
   if (troubles.size > 0) return { options: null, troubles };
   try {
     const options = pictureOptions({
@@ -71,8 +60,8 @@ export function readChoices(choices: PictureChoices, screenPx: readonly [number,
       view,
       style,
       colourBy,
-      stretch,
-      exposureStops,
+      colourMap,
+      ...light,
       slab,
       depthRedshift,
       title,

@@ -11,10 +11,11 @@ export function usePictureFacts(
   client: PictureClient,
 ): { readonly facts: object | null; readonly waiting: string | null } {
   const study = studyState.study.value;
-  const [selected, background, density] = [
+  const [selected, background, density, columns] = [
     engine.selected.value,
     engine.background.value,
     engine.density.value,
+    engine.columns.value,
   ];
   const waiting =
     engine.failure.value !== null
@@ -25,9 +26,9 @@ export function usePictureFacts(
           ? 'The catalogue is still being read: the picture follows.'
           : null;
   useLayoutEffect(() => {
-    if (waiting === null) client.setFacts({ study, selected, background, density });
-  }, [client, study, selected, background, density, waiting]);
+    if (waiting === null) client.setFacts({ study, selected, background, density, columns });
+  }, [client, study, selected, background, density, columns, waiting]);
   // A picture depends on the study whole: its name stands over it, its fingerprint within.
-  const facts = useMemo(() => ({}), [study, selected, background, density]);
+  const facts = useMemo(() => ({}), [study, selected, background, density, columns]);
   return { facts: waiting === null ? facts : null, waiting };
 }

@@ -1,4 +1,3 @@
-import type { PictureOptions } from '../../../shared-core/picture/options.ts';
 import { indexer, palette } from '../../cone/points/colouring.ts';
 import { pointSizePx } from '../../cone/points/exposure.ts';
 import { radiusTable } from '../../cone/points/radiusTable.ts';
@@ -20,7 +19,6 @@ const SMALL_SET = 15_000;
 export function placePoints(
   drawing: ViewDrawing,
   box: ViewBox,
-  options: PictureOptions,
   numbers: PictureNumbers,
   theme: PictureTheme,
 ): ScenePoints {
@@ -29,8 +27,10 @@ export function placePoints(
   const x = new Float32Array(count);
   const y = new Float32Array(count);
   const value = new Uint8Array(count);
+  const { light } = numbers;
+  const kept = light.depthCue > 0 ? new Float32Array(count).fill(1) : null;
   if (background && count > 0) {
-    drawing.placeAll(x, y);
+    drawing.placeAll(x, y, kept);
     // Sorted by redshift: what lies beyond the picture's depth is the end of the list.
     x.fill(Number.NaN, numbers.galaxiesWithin);
     y.fill(Number.NaN, numbers.galaxiesWithin);
@@ -43,16 +43,18 @@ export function placePoints(
   // Points are made for the room that they have, which in a picture is often a part of the box.
   const side = Math.sqrt(Math.min(box.width * box.height, ROOM_SHARE * crowd.area));
   const size = FINER + LARGER * Math.exp(-crowd.onStage / SMALL_SET);
-  const diameter = size * pointSizePx(crowd.onStage, { widthPx: side, heightPx: side });
+  const diameter = light.pointSize * size * pointSizePx(crowd.onStage, { widthPx: side, heightPx: side });
   return {
     count,
     x,
     y,
     value,
+    light: kept,
     colours: palette(numbers.colours.input, numbers.shells.length, theme.mode),
-    stretch: options.stretch,
-    exposureStops: options.exposureStops + theme.exposureStops,
+    stretch: light.stretch,
+    exposureStops: light.exposureStops + theme.exposureStops,
     glow: theme.glow,
+    glowShare: light.glow,
     diameter,
     densest: crowd.densest,
     thinnest: crowd.thinnest,

@@ -51,7 +51,7 @@ export function pointTiles(points: ScenePoints, pxPerUnit: number): PointTiles {
         // Fractions of grid points as whole numbers: the same for every tile, to the last bit.
         const x = Math.round(points.x[i]! * grid * FINE) - tile.left * SUPERSAMPLING * FINE;
         const y = Math.round(points.y[i]! * grid * FINE) - tile.top * SUPERSAMPLING * FINE;
-        addDisc(disc, light, width, height, x, y, points.value[i]! / 255);
+        addDisc(disc, light, width, height, x, y, points.value[i]! / 255, points.light?.[i] ?? 1);
       }
       return toned(light, table, tile);
     },
@@ -111,6 +111,7 @@ function addDisc(
   xFine: number,
   yFine: number,
   value: number,
+  strength: number,
 ): void {
   const shift = ((1 - side) * FINE) / 2;
   const left = Math.floor((xFine + shift) / FINE);
@@ -125,8 +126,9 @@ function addDisc(
     let w = base + row * side + firstColumn;
     let i = 2 * ((top + row) * width + left + firstColumn);
     for (let column = firstColumn; column < endColumn; column++, w++, i += 2) {
-      light[i]! += weights[w]!;
-      light[i + 1]! += weights[w]! * value;
+      const more = weights[w]! * strength;
+      light[i]! += more;
+      light[i + 1]! += more * value;
     }
   }
 }

@@ -1,5 +1,5 @@
 import { exposure } from '../../cone/points/exposure.ts';
-import { LIGHT_STEPS, lightOfIndex, strength, VALUE_STEPS } from '../../cone/points/tone.ts';
+import { glowAt, LIGHT_STEPS, lightOfIndex, strength, VALUE_STEPS } from '../../cone/points/tone.ts';
 import type { ScenePoints } from '../scene.ts';
 
 const DEEPER = 1.4;
@@ -22,7 +22,7 @@ export function toneAlpha(points: ScenePoints, pxPerUnit: number): Uint8Array {
   const table = new Uint8Array(VALUE_STEPS * LIGHT_STEPS * 4);
   for (let i = 1; i < LIGHT_STEPS; i++) {
     const cover = strength(lightOfIndex(i), points.stretch, single * dim, DEEPER * full * dim);
-    const burn = (0.75 * Math.max(0, cover - 0.62)) / 0.38;
+    const burn = glowAt(cover, points.glowShare);
     for (let v = 0; v < VALUE_STEPS; v++) {
       const colour = 3 * Math.round((255 * v) / (VALUE_STEPS - 1));
       const at = 4 * (v * LIGHT_STEPS + i);

@@ -2,6 +2,7 @@ import { Refusal } from '../../../shared-core/base/refusal.ts';
 import { utf8Bytes } from '../../../shared-core/base/textCoding.ts';
 import type { PictureJob } from '../../../shared-core/picture/job.ts';
 import type { PictureOptions } from '../../../shared-core/picture/options.ts';
+import { columnsOf } from '../../../shared-core/study/colourBy.ts';
 import { writeStudy } from '../../../shared-core/study/document.ts';
 import type { Study } from '../../../shared-core/study/schema.ts';
 import { EngineDesk } from '../../engine/desk.ts';
@@ -30,6 +31,7 @@ export async function gatherFacts(
     selected: null,
     background: null,
     density: null,
+    columns: [],
   };
   const troubles: string[] = [];
   const take = (event: EngineEvent): void => {
@@ -38,6 +40,7 @@ export async function gatherFacts(
     else if (event.kind === 'selected') facts.selected = event.selected;
     else if (event.kind === 'background') facts.background = event.background;
     else if (event.kind === 'density') facts.density = event.density;
+    else if (event.kind === 'columns') facts.columns = event.columns;
     else if (event.kind === 'loaded' && event.loaded !== null && study.source?.kind === 'file') {
       const { sha256 } = study.source;
       if (sha256 !== null && sha256 !== event.loaded.sha256)
@@ -55,13 +58,15 @@ export async function gatherFacts(
     share: (sample) => sample,
     breathe: () => new Promise((resume) => setTimeout(resume, 0)),
   });
+  const colourBy = options.colourBy ?? study.look.colourBy;
   await desk.want({
     source: sourceOf(study, catalogue),
     mapping: study.mapping,
     cuts: study.cuts,
     region: study.region,
     cosmology: study.cosmology,
-    density: (options.colourBy ?? study.look.colourBy) === 'density',
+    density: colourBy === 'density',
+    columns: columnsOf([colourBy]),
   });
   if (troubles.length > 0) throw new Refusal(troubles[0]!);
   return facts;

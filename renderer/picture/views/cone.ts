@@ -1,5 +1,6 @@
 import { cssColour, shellColours } from '../../colour/shellColours.ts';
 import { ConeModel } from '../../cone/coneModel.ts';
+import { depthCue, lightAt } from '../../cone/geometry/depthCue.ts';
 import { compose, pixelMatrix, project } from '../../cone/geometry/projection.ts';
 import { COMOVING_DROP_PX } from '../../cone/overlay/coneRulers.ts';
 import { paintOverlay } from '../../cone/overlay/paintOverlay.ts';
@@ -86,14 +87,23 @@ export function coneView(input: ViewInput, perspective: boolean): ViewDrawing {
       ? `a survey of ${countText(centres.length)} seen in perspective, the observer at the common tip`
       : `a survey of ${countText(centres.length)} seen from the side, the observer at the left and depth to the right`,
     place,
-    placeAll(outX, outY) {
+    placeAll(outX, outY, light) {
       const { selected, background } = numbers.facts;
       if (!selected || !background) return;
       const { x, y, z } = selected.directions;
       const matrices = model.fields.length === 0 ? [pixels] : model.fields.map((_, f) => matrixFor(f));
+      const range = model.depth(shown);
+      const cues = model.fields.map((_, f) => {
+        const lane = lanes.find(({ field }) => field === f);
+        return lane ? depthCue(shown.pose, lane.model, range, numbers.light.depthCue) : null;
+      });
       for (let i = 0; i < outX.length; i++) {
-        const matrix = matrices[fieldsOf(x[i]!, y[i]!, z[i]!)];
-        const p = matrix ? project(matrix, x[i]!, y[i]!, z[i]!, radius(background.comovingMpc[i]!)) : null;
+        const field = fieldsOf(x[i]!, y[i]!, z[i]!);
+        const matrix = matrices[field];
+        const r = radius(background.comovingMpc[i]!);
+        const p = matrix ? project(matrix, x[i]!, y[i]!, z[i]!, r) : null;
+        const cue = cues[field];
+        if (light && cue) light[i] = lightAt(cue, r * x[i]!, r * y[i]!, r * z[i]!);
         outX[i] = p ? p[0] + box.left : Number.NaN;
         outY[i] = p ? p[1] + box.top : Number.NaN;
       }

@@ -31,8 +31,11 @@ export interface ViewDrawing {
   readonly words: string;
   /** Place in the box of a position on the sky at a comoving distance; null when the view does not show it. */
   readonly place: (direction: readonly [number, number, number], comovingMpc: number) => Point | null;
-  /** The same for every galaxy, in units of the scene; NaN where it is not shown. */
-  readonly placeAll: (x: Float32Array, y: Float32Array) => void;
+  /**
+   * The same for every galaxy, in units of the scene; NaN where it is not shown. Where an array for light comes (all 1),
+   * a view that has depth fills in each galaxy's part of it.
+   */
+  readonly placeAll: (x: Float32Array, y: Float32Array, light: Float32Array | null) => void;
 }
 
 /** A pen on a fresh recording of the box. */

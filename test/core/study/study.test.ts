@@ -9,7 +9,7 @@ import {
   setEdges,
 } from '../../../shared-core/study/edits.ts';
 import { perform, redo, startHistory, undo } from '../../../shared-core/study/history.ts';
-import type { Study } from '../../../shared-core/study/schema.ts';
+import { type Study, USUAL_LIGHT } from '../../../shared-core/study/schema.ts';
 
 const full: Study = {
   ...emptyStudy('Round trip'),
@@ -55,12 +55,12 @@ describe('the study document', () => {
     ['null', /not a study/],
     ['{"format":"something"}', /not a study/],
     [
-      writeStudy(full).replace('"version": 1', '"version": 2'),
-      /version 2, this program reads up to version 1: open it with a newer/,
+      writeStudy(full).replace('"version": 2', '"version": 3'),
+      /version 3, this program reads up to version 2: open it with a newer/,
     ],
-    [writeStudy(full).replace('"version": 1', '"version": "one"'), /version is "one"/],
+    [writeStudy(full).replace('"version": 2', '"version": "one"'), /version is "one"/],
     [
-      writeStudy(full).replace('"version": 1', '"version": 0'),
+      writeStudy(full).replace('"version": 2', '"version": 0'),
       /version 0, which this program can no longer read/,
     ],
     [writeStudy(full).replace('0.1,', '0.25,'), /must increase: 0.25 is followed by 0.2/],
@@ -72,9 +72,31 @@ describe('the study document', () => {
     expect(() => readStudy(text)).toThrow(sentence);
   });
 
+  it('lifts version 1, whose look had neither colour map nor light', () => {
+    const { colourMap, light, ...look } = full.look;
+    const lifted = readStudy(JSON.stringify({ ...full, version: 1, look }));
+    expect(lifted).toEqual({ ...full, look: { ...full.look, colourMap: 'harbour', light: USUAL_LIGHT } });
+    expect([colourMap, light]).toEqual([lifted.look.colourMap, lifted.look.light]);
+  });
+
+  it.each([
+    ['pointSize', 0],
+    ['pointSize', 4.5],
+    ['exposureStops', 9],
+    ['glow', -0.1],
+    ['depthCue', 1.1],
+    ['stretch', 'cubic'],
+  ])('refuses a light whose %s is %s, and says where', (key, value) => {
+    const look = { ...full.look, light: { ...full.look.light, [key]: value } };
+    expect(() => readStudy(JSON.stringify({ ...full, look }))).toThrow(new RegExp(`at look.light.${key}`));
+  });
+
   it('lifts old versions step by step through the migrations', () => {
     const { p0Mpc3PerH3, ...old } = { ...full, version: 0 };
-    const lifted = readStudy(JSON.stringify(old), { 0: (raw) => ({ ...raw, version: 1, p0Mpc3PerH3 }) });
+    const lifted = readStudy(JSON.stringify(old), {
+      0: (raw) => ({ ...raw, version: 1, p0Mpc3PerH3 }),
+      1: (raw) => ({ ...raw, version: 2 }),
+    });
     expect(lifted).toEqual(full);
   });
 });

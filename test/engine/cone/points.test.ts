@@ -159,6 +159,7 @@ describe('light and tone', () => {
     full: 50,
     single: 1,
     glow: [255, 250, 240],
+    glowShare: 0.65,
   };
   const table = toneTable(tone, new Uint32Array(VALUE_STEPS * LIGHT_STEPS));
 
@@ -228,7 +229,7 @@ describe('light and tone', () => {
     };
     const store = build(galaxies, []);
     const matrix = Float64Array.from([0, 2000, 0, 100, 0, 0, 2000, 100, 0, 0, 0, 1]);
-    const parts = [{ matrix, range: store.ranges[0]! }];
+    const parts = [{ matrix, range: store.ranges[0]!, depth: null }];
     const crowd = crowding(store.arrays, parts, { widthPx: 800, heightPx: 400 });
     expect(crowd.onStage).toBe(3000);
     // A grid of 3.49 pixels: one galaxy in 12.2 square pixels.

@@ -64,6 +64,8 @@ function how(diameter: number, perspective: number): Splat {
     emphasisMin: 0.4,
     emphasisMax: 0.7,
     dim: 0.3,
+    depth: null,
+    least: 1,
     ...softDiscs(diameter),
   };
 }
@@ -112,19 +114,37 @@ describe('the splat', () => {
     }
   });
 
+  it('gives each place its part of the light by depth, within its ends', () => {
+    const layout = pointLayout(4, 0);
+    const points = pointViews(new ArrayBuffer(layout.end), layout);
+    points.radius.fill(1);
+    points.x.set([0, 0.25, 0.5, 1]);
+    const sums = new Float32Array(sumsLength(WIDTH, HEIGHT));
+    // A pixel each, ten apart; light 1.25 - 1.5 x, kept within 0.2 and 1: exact in binary but for the least.
+    const matrix = Float32Array.from([40, 0, 0, 5, 0, 0, 0, 5, 0, 0, 0, 1]);
+    const depth = Float32Array.from([-1.5, 0, 0, 1.25]);
+    const whole = { emphasisMin: 0, emphasisMax: 9, light: 1, depth, least: 0.2 };
+    splat(points, 0, 4, { ...how(1, 0), matrix, ...whole }, sums);
+    const at = (px: number): number => sums[2 * ((5 + PAD) * strideOf(WIDTH) + px + PAD)]!;
+    expect([at(5), at(15), at(25), at(45)]).toEqual([1, 0.875, 0.5, Math.fround(0.2)]);
+  });
+
   for (const shared of [false, true]) {
-    for (const [name, diameter, perspective] of [
+    for (const [name, diameter, perspective, depth] of [
       ['single pixels', 1, 0],
       ['discs', 3.2, 0],
       ['large discs', 12, 0],
       ['single pixels in perspective', 1, 0.7],
       ['discs in perspective', 5, 0.7],
+      ['single pixels with a depth cue', 1, 0.7, [-0.4, 0.2, 0.5, 0.6]],
+      ['discs with a depth cue', 4, 0, [0.9, 0.3, -0.4, 0.5]],
     ] as const) {
       it(`sums alike in WebAssembly and JavaScript, ${shared ? 'shared' : 'own'} memory: ${name}`, async () => {
         const { memory, layout, points, sums, sumsAt } = scene(shared);
         const wide = await wideKernel(memory, shared, layout, 1024);
         expect(wide).not.toBeNull();
-        const settings = how(diameter, perspective);
+        const cue = depth ? { depth: Float32Array.from(depth), least: 0.25 } : {};
+        const settings = { ...how(diameter, perspective), ...cue };
         wide!.splat(0, SLOTS, settings, sumsAt);
         const reference = new Float32Array(sumsLength(WIDTH, HEIGHT));
         splat(points, 0, SLOTS, settings, reference);
@@ -157,6 +177,7 @@ describe('the splat', () => {
         full: 40,
         single: 1,
         glow: [255, 255, 255],
+        glowShare: 0.65,
       },
       table,
     );

@@ -129,8 +129,8 @@ async function exported(options: object, giveUpAfter = Number.POSITIVE_INFINITY)
     const kind = ++pieces > giveUpAfter ? 'cancel' : 'more';
     queueMicrotask(() => void desk.take({ kind, id: 7 }));
   }, fingerprintOf);
-  const { study, selected, background, density } = facts;
-  await desk.take({ kind: 'facts', facts: { study, selected, background, density } });
+  const { study, selected, background, density, columns } = facts;
+  await desk.take({ kind: 'facts', facts: { study, selected, background, density, columns } });
   await desk.take({ kind: 'export', id: 7, format: 'svg', options: { ...small(), ...options } });
   return answers;
 }

@@ -28,6 +28,7 @@ export async function factsOf(
     selected: null,
     background: null,
     density: null,
+    columns: [],
   };
   const desk = new EngineDesk({
     emit: (event) => {
@@ -47,6 +48,7 @@ export async function factsOf(
     region: study.region,
     cosmology: study.cosmology,
     density: false,
+    columns: [],
   });
   return facts;
 }

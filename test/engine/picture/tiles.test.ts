@@ -16,10 +16,12 @@ function crowd(count: number, more: Partial<ScenePoints> = {}): ScenePoints {
     x,
     y,
     value: Uint8Array.from({ length: count }, (_, i) => i % 256),
+    light: null,
     colours: Uint8Array.from({ length: 768 }, (_, i) => (i * 7) % 256),
     stretch: 'asinh',
     exposureStops: 0,
     glow: [255, 250, 240],
+    glowShare: 0.65,
     diameter: 2.5,
     densest: 0.4,
     thinnest: 0.02,
@@ -96,4 +98,29 @@ it('gives a clear picture for no galaxies', () => {
   const none = crowd(0, { x: new Float32Array(0), y: new Float32Array(0) });
   const pixels = pointTiles({ ...none, count: 0 }, 1).render({ left: 0, top: 0, width: 9, height: 5 });
   expect(pixels.every((byte) => byte === 0)).toBe(true);
+});
+
+it('takes a part of the light of the galaxies that have less', () => {
+  const two = (light: Float32Array | null) =>
+    crowd(2, {
+      x: Float32Array.of(10, 30),
+      y: Float32Array.of(10, 10),
+      value: Uint8Array.of(0, 0),
+      light,
+      stretch: 'linear',
+      exposureStops: -3,
+    });
+  const shares = (points: ScenePoints): number[] => {
+    const pixels = pointTiles(points, 2).render({ left: 0, top: 0, width: 80, height: 40 });
+    const sums = [0, 0];
+    for (let i = 3; i < pixels.length; i += 4) sums[Math.floor(((i >> 2) % 80) / 40)]! += pixels[i]!;
+    return sums;
+  };
+  const [a, b] = shares(two(null));
+  expect(a).toBe(b);
+  const [whole, half] = shares(two(Float32Array.of(1, 0.5)));
+  expect(whole).toBe(a);
+  // Opacity is rounded to bytes, and light to 32 steps an octave.
+  expect(half! / whole!).toBeGreaterThan(0.46);
+  expect(half! / whole!).toBeLessThan(0.54);
 });

@@ -28,7 +28,14 @@ async function drawn(view: PictureView, bandPixels: number): Promise<{ pixels: U
     heightPx: 450,
     labels: [{ text: 'צביר גדול', raDeg: 212, decDeg: 12, redshift: 1 }],
   });
-  const facts = { study: demoStudy(), fingerprint: '', selected: null, background: null, density: null };
+  const facts = {
+    study: demoStudy(),
+    fingerprint: '',
+    selected: null,
+    background: null,
+    density: null,
+    columns: [],
+  };
   const parts: Uint8ClampedArray[] = [];
   const take = (pixels: Uint8ClampedArray): Promise<void> => {
     parts.push(pixels.slice());

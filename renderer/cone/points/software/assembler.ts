@@ -103,6 +103,8 @@ export const wide = {
   f32Sub: simd(229),
   f32Mul: simd(230),
   f32Div: simd(231),
+  f32Min: simd(232),
+  f32Max: simd(233),
   f32Floor: simd(104),
   i32TruncF32: simd(248),
   f32FromI32: simd(250),

@@ -13,6 +13,9 @@ export interface Run {
   readonly to: number;
   readonly matrix: Float32Array;
   readonly light: number;
+  /** Splat's depth and least. */
+  readonly depth: Float32Array | null;
+  readonly least: number;
 }
 
 /** How a worker finishes its part of a picture once all points are in. */

@@ -125,10 +125,17 @@ export class SoftwarePoints implements PointLayer {
 /** The part of every range between two shares of what is drawn, in device pixels. */
 function runsOf(frame: PointFrame, from: number, to: number): Run[] {
   const ratio = frame.pixelRatio;
-  return frame.parts.map(({ matrix, range }) => {
+  return frame.parts.map(({ matrix, range, depth }) => {
     const drawn = Math.ceil(range.count * frame.fraction);
     const cut = (share: number): number => range.start + 4 * Math.round(Math.ceil(drawn / 4) * share);
     const device = Float32Array.from(matrix, (v, i) => (i < 8 ? v * ratio : v));
-    return { from: cut(from), to: cut(to), matrix: device, light: drawn > 0 ? range.count / drawn : 0 };
+    return {
+      from: cut(from),
+      to: cut(to),
+      matrix: device,
+      light: drawn > 0 ? range.count / drawn : 0,
+      depth: depth && Float32Array.from(depth.row),
+      least: depth?.least ?? 1,
+    };
   });
 }

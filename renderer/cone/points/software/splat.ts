@@ -14,6 +14,9 @@ export interface Splat {
   readonly emphasisMin: number;
   readonly emphasisMax: number;
   readonly dim: number;
+  /** Four numbers that give a place its part of the light, which stays within `least` and 1; null: all have all. */
+  readonly depth: Float32Array | null;
+  readonly least: number;
   /** Side of the disc's square in pixels, even; 0 puts all light into one pixel. */
   readonly side: number;
   /** 16 discs (4 places between pixels down, 4 across) of side x side weights; empty when side is 0. */
@@ -60,6 +63,9 @@ export function splat(points: PointArrays, from: number, to: number, how: Splat,
   const shift = f(0.5 - half);
   const full = f(how.light);
   const dimmed = f(full * f(how.dim));
+  const d = how.depth;
+  const [d0, d1, d2, d3] = d ? [d[0]!, d[1]!, d[2]!, d[3]!] : [0, 0, 0, 1];
+  const least = f(how.least);
   const eMin = f(how.emphasisMin);
   const eMax = f(how.emphasisMax);
   for (let s = from; s < to; s++) {
@@ -72,7 +78,11 @@ export function splat(points: PointArrays, from: number, to: number, how: Splat,
     const px = f(f(f(f(f(a0 * dx) + f(a1 * dy)) + f(a2 * dz)) + a3) / w);
     const py = f(f(f(f(f(b0 * dx) + f(b1 * dy)) + f(b2 * dz)) + b3) / w);
     if (!(px >= -half && px < right && py >= -half && py < bottom)) continue;
-    const light = r >= eMin && r < eMax ? full : dimmed;
+    let light = r >= eMin && r < eMax ? full : dimmed;
+    if (d) {
+      const near = f(f(f(f(d0 * dx) + f(d1 * dy)) + f(d2 * dz)) + d3);
+      light = f(light * Math.min(1, Math.max(least, near)));
+    }
     const tinted = f(light * f(value[s]! * byte));
     if (side === 0) {
       const i = 2 * (((py | 0) + PAD) * stride + (px | 0) + PAD);
@@ -85,12 +95,12 @@ export function splat(points: PointArrays, from: number, to: number, how: Splat,
     const top = Math.floor(f(py + shift));
     const quarterX = f(f(f(px + shift) - left) * 4) | 0;
     const quarterY = f(f(f(py + shift) - top) * 4) | 0;
-    let d = (quarterY * 4 + quarterX) * side * side;
+    let k = (quarterY * 4 + quarterX) * side * side;
     for (let row = 0; row < side; row++) {
       let i = 2 * ((top + row + PAD) * stride + left + PAD);
-      for (let column = 0; column < side; column++, i += 2, d++) {
-        sums[i]! += f(discs[d]! * light);
-        sums[i + 1]! += f(discs[d]! * tinted);
+      for (let column = 0; column < side; column++, i += 2, k++) {
+        sums[i]! += f(discs[k]! * light);
+        sums[i + 1]! += f(discs[k]! * tinted);
       }
     }
   }

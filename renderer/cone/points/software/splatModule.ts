@@ -33,7 +33,12 @@ export const PARAMETER = {
   value: 128,
   sums: 132,
   discs: 136,
-  size: 144,
+  /** Four floats, and the two that they stay between; whether they count at all (an integer). */
+  depth: 140,
+  least: 156,
+  one: 160,
+  cued: 164,
+  size: 176,
 } as const;
 
 const P = PARAMETER;
@@ -56,22 +61,25 @@ const four = (array: number): number[] => [
   ...wide.load(),
 ];
 
-/** Row of the matrix times (X, Y, Z, 1), in the order ((a X + b Y) + c Z) + d. */
-const rowTimesPoint = (row: number): number[] => [
-  ...op.get(M + 4 * row),
+/** Four numbers times (X, Y, Z, 1), in the order ((a X + b Y) + c Z) + d. */
+const timesPoint = (number: (nth: number) => number[]): number[] => [
+  ...number(0),
   ...op.get(X),
   ...wide.f32Mul,
-  ...op.get(M + 4 * row + 1),
+  ...number(1),
   ...op.get(Y),
   ...wide.f32Mul,
   ...wide.f32Add,
-  ...op.get(M + 4 * row + 2),
+  ...number(2),
   ...op.get(Z),
   ...wide.f32Mul,
   ...wide.f32Add,
-  ...op.get(M + 4 * row + 3),
+  ...number(3),
   ...wide.f32Add,
 ];
+
+/** Row of the matrix times the points. */
+const rowTimesPoint = (row: number): number[] => timesPoint((nth) => op.get(M + 4 * row + nth));
 
 const inside = (coordinate: number, end: number): number[] => [
   ...op.get(coordinate),
@@ -124,7 +132,19 @@ const lightOfFour: number[] = [
   ...wide.f32Lt,
   ...wide.and,
   ...wide.bitselect,
-  ...op.tee(LIGHT),
+  ...op.set(LIGHT),
+  ...parameter(P.cued),
+  ...op.if,
+  ...timesPoint((nth) => spread(P.depth + 4 * nth)),
+  ...spread(P.least),
+  ...wide.f32Max,
+  ...spread(P.one),
+  ...wide.f32Min,
+  ...op.get(LIGHT),
+  ...wide.f32Mul,
+  ...op.set(LIGHT),
+  ...op.end,
+  ...op.get(LIGHT),
   // Four bytes of colour value, widened.
   ...parameter(P.value),
   ...op.get(FROM),

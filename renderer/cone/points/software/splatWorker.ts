@@ -63,7 +63,7 @@ function splatRuns(message: Draw): void {
   if (message.clear) sums.fill(0);
   if (discs.diameter !== diameter) discs = { diameter, ...softDiscs(diameter) };
   const [emphasisMin, emphasisMax, dim] = emphasis;
-  for (const { from, to, matrix, light } of message.runs) {
+  for (const { from, to, matrix, light, depth, least } of message.runs) {
     const how = {
       matrix,
       width,
@@ -72,6 +72,8 @@ function splatRuns(message: Draw): void {
       emphasisMin,
       emphasisMax,
       dim,
+      depth,
+      least,
       side: discs.side,
       discs: discs.discs,
     };

@@ -67,6 +67,10 @@ export async function wideKernel(
       floats[P.byte / 4] = 1 / 255;
       floats[P.shift / 4] = 0.5 - half;
       floats[P.four / 4] = 4;
+      if (how.depth) floats.set(how.depth, P.depth / 4);
+      floats[P.least / 4] = how.least;
+      floats[P.one / 4] = 1;
+      words[P.cued / 4] = how.depth ? 1 : 0;
       const stride = strideOf(how.width);
       words[P.stride / 4] = stride;
       words[P.origin / 4] = PAD * stride + PAD;
