@@ -1,4 +1,5 @@
-import type { ColourBy } from './schema.ts';
+import { Refusal } from '../base/refusal.ts';
+import { COLOUR_CHOICES, type ColourBy } from './schema.ts';
 
 /** The columns among some choices of colour, each once, in order of name. */
 export function columnsOf(choices: readonly (ColourBy | null)[]): string[] {
@@ -6,9 +7,22 @@ export function columnsOf(choices: readonly (ColourBy | null)[]): string[] {
   return [...new Set(columns)].sort();
 }
 
-/** The choice as one word, for lists and the command line: `column:NAME` for a column. */
-export const colourKey = (by: ColourBy): string => (typeof by === 'object' ? `column:${by.column}` : by);
+const COLUMN = 'column:';
 
-/** The choice behind a word that colourKey made; other words are handed on as they are, for the schema to judge. */
-export const colourOfKey = (key: string): ColourBy =>
-  key.startsWith('column:') ? { column: key.slice('column:'.length) } : (key as ColourBy);
+/** The choice as one word, for lists and the command line: `column:NAME` for a column. */
+export const colourKey = (by: ColourBy): string => (typeof by === 'object' ? COLUMN + by.column : by);
+
+/**
+ * The choice behind a word that colourKey makes.
+ * @throws Refusal ('use') for any other word
+ */
+export function colourOfKey(key: string): ColourBy {
+  if (key.startsWith(COLUMN) && key.length > COLUMN.length) return { column: key.slice(COLUMN.length) };
+  const choice = COLOUR_CHOICES.find((known) => known === key);
+  if (choice === undefined)
+    throw new Refusal(
+      `The colour was to be by "${key}", expected ${COLOUR_CHOICES.join(', ')}, or ${COLUMN}NAME for a column of the catalogue.`,
+      'use',
+    );
+  return choice;
+}

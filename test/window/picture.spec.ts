@@ -5,7 +5,8 @@ import type { Browser } from '@playwright/test';
 import { build, preview } from 'vite';
 import { PICTURE_VIEWS } from '../../shared-core/picture/options.ts';
 import { emptyStudy, writeStudy } from '../../shared-core/study/document.ts';
-import { conewright } from './command.ts';
+import { mountSmallDisk } from '../hosts/smallDisk.ts';
+import { conewright, conewrightIn } from './command.ts';
 import { expect, test } from './window.ts';
 
 const SHAPLEY = fileURLToPath(new URL('../data/shapley.csv', import.meta.url));
@@ -155,4 +156,42 @@ test('lines and text have no seam between bands, and are as wide as the layout c
   }
   await page.close();
   await server.close();
+});
+
+test('any column colours a picture by command; one that is not there, or holds no number, is refused', async ({
+  desk,
+}) => {
+  const { folder } = desk;
+  const study = shapleyStudy(folder);
+  const by = (colour: string, name: string) =>
+    conewright(folder, 'picture', study, '-o', name, '--size', '640x400', '--colour', colour);
+  await by('column:V', 'v.svg');
+  const svg = readFileSync(join(folder, 'v.svg'), 'utf8');
+  expect(svg).toMatch(/>V<\/text>/);
+  expect(svg).toMatch(/Colour shows V, from \d+ to \d+\./);
+  await expect(by('column:Vmag', 'no.svg')).rejects.toThrow(/Vmag/);
+  await expect(by('brightness', 'no.svg')).rejects.toThrow(/"brightness", expected redshift/);
+  expect(readdirSync(folder)).not.toContain('no.svg');
+});
+
+test('a disk that fills in the middle of a picture is told, and no half file stands there', async ({
+  desk,
+}) => {
+  const disk = mountSmallDisk(join(desk.folder, 'disk'));
+  test.skip(disk === null, 'not run: only root on Linux can mount a disk for this');
+  try {
+    const wishes = ['picture', 'demo', '-o', 'disk/cone.png', '--size', '2400x1600'];
+    await expect(conewright(desk.folder, ...wishes)).rejects.toThrow(/is full/);
+    expect(readdirSync(disk!.folder)).toEqual([]);
+  } finally {
+    disk?.remove();
+  }
+});
+
+test('a machine without a browser is told what to install', async ({ desk }) => {
+  const none = { PATH: '', CHROME_PATH: '' };
+  await expect(
+    conewrightIn(desk.folder, none, 'picture', 'demo', '-o', 'cone.png', '--size', '400x300'),
+  ).rejects.toThrow(/No Chromium, Chrome or Edge was found/);
+  expect(readdirSync(desk.folder).filter((name) => name.endsWith('.png'))).toEqual([]);
 });
