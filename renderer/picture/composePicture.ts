@@ -4,13 +4,13 @@ import { describeInWords } from './describe.ts';
 import { type PictureFrame, paintFrame, viewBox } from './frame.ts';
 import { placePoints } from './galaxies/placePoints.ts';
 import { paintLabels } from './labels.ts';
-import { type PictureFacts, pictureNumbers } from './numbers.ts';
-import { type Scene, SIDE_UNITS } from './scene.ts';
+import { type PictureFacts, type PictureNumbers, pictureNumbers } from './numbers.ts';
+import { type Scene, type SceneMetadata, SIDE_UNITS } from './scene.ts';
 import { groundOf, pictureTheme } from './themes.ts';
 import { coneView } from './views/cone.ts';
 import { lightConeView } from './views/lightCone.ts';
 import { skyView } from './views/sky.ts';
-import { penOn, type ViewDrawing, type ViewInput } from './views/view.ts';
+import { penOn, type ViewBox, type ViewDrawing, type ViewInput } from './views/view.ts';
 import { wedgeView } from './views/wedge.ts';
 
 const VIEWS: Readonly<Record<PictureView, (input: ViewInput) => ViewDrawing>> = {
@@ -23,6 +23,43 @@ const VIEWS: Readonly<Record<PictureView, (input: ViewInput) => ViewDrawing>> = 
 /** The caption tells what the view did, and takes room from it: agreed after a few rounds at most. */
 const MOST_ROUNDS = 3;
 
+/** A picture's paper, words and view, before anything is drawn around it. */
+export interface Layout<View> {
+  readonly pxPerUnit: number;
+  readonly frame: PictureFrame;
+  readonly box: ViewBox;
+  readonly view: View;
+}
+
+/** Finds room for the caption and the view beside each other. @param draw makes the view in a box */
+export function laidOut<View extends { readonly notes: readonly string[] }>(
+  options: PictureOptions,
+  numbers: PictureNumbers,
+  draw: (input: ViewInput) => View,
+): Layout<View> {
+  const theme = pictureTheme(options.style);
+  const pxPerUnit = Math.sqrt(options.widthPx * options.heightPx) / SIDE_UNITS;
+  let frame: PictureFrame = {
+    width: options.widthPx / pxPerUnit,
+    height: options.heightPx / pxPerUnit,
+    title: options.title ?? numbers.study.name,
+    caption: options.caption ?? '',
+    options,
+    numbers,
+    theme,
+  };
+  let box = viewBox(frame);
+  let view = draw({ box, options, numbers, theme });
+  for (let round = 0; options.caption === null && round < MOST_ROUNDS; round++) {
+    frame = { ...frame, caption: offeredCaption(numbers, view.notes) };
+    const next = viewBox(frame);
+    if (next.height === box.height) break;
+    box = next;
+    view = draw({ box, options, numbers, theme });
+  }
+  return { pxPerUnit, frame, box, view };
+}
+
 /**
  * Composes a picture: what the writers turn into PNG, SVG or PDF. The same options and facts give the same scene.
  *
@@ -30,42 +67,38 @@ const MOST_ROUNDS = 3;
  */
 export function composePicture(options: PictureOptions, facts: PictureFacts): Scene {
   const numbers = pictureNumbers(options, facts);
-  const theme = pictureTheme(options.style);
-  const pxPerUnit = Math.sqrt(options.widthPx * options.heightPx) / SIDE_UNITS;
-  const paper = { left: 0, top: 0, width: options.widthPx / pxPerUnit, height: options.heightPx / pxPerUnit };
-  const title = options.title ?? numbers.study.name;
-  let frame: PictureFrame = { ...paper, title, caption: options.caption ?? '', options, numbers, theme };
-  let box = viewBox(frame);
-  let drawing = VIEWS[options.view]({ box, options, numbers, theme });
-  for (let round = 0; options.caption === null && round < MOST_ROUNDS; round++) {
-    frame = { ...frame, caption: offeredCaption(numbers, drawing.notes) };
-    const next = viewBox(frame);
-    if (next.height === box.height) break;
-    box = next;
-    drawing = VIEWS[options.view]({ box, options, numbers, theme });
-  }
-  const around = penOn({ box: paper, theme });
+  const { pxPerUnit, frame, box, view } = laidOut(options, numbers, VIEWS[options.view]);
+  const { theme, width, height } = frame;
+  const around = penOn({ box: { left: 0, top: 0, width, height }, theme });
   paintFrame(around.pen, frame);
   const marked = penOn({ box, theme });
-  paintLabels(marked.pen, options, numbers, drawing);
-  const { fingerprint } = facts;
+  paintLabels(marked.pen, options, numbers, view);
   return {
     widthPx: options.widthPx,
     heightPx: options.heightPx,
     dpi: options.dpi,
     pxPerUnit,
-    width: paper.width,
-    height: paper.height,
+    width,
+    height,
     background: options.transparent ? null : groundOf(theme),
-    items: [...drawing.under, { kind: 'points' }, ...drawing.over, ...marked.items, ...around.items],
-    points: placePoints(drawing, box, numbers, theme),
-    metadata: {
-      title: title.trim() === '' ? numbers.study.name : title,
-      description: describeInWords(options, numbers, drawing),
-      credit: options.credit,
-      software: 'Conewright',
-      fingerprint,
-    },
+    items: [...view.under, { kind: 'points' }, ...view.over, ...marked.items, ...around.items],
+    points: placePoints(view, box, numbers, theme),
+    metadata: sceneMetadata(frame, facts, describeInWords(options, numbers, view)),
+  };
+}
+
+/** What a file says of itself. */
+export function sceneMetadata(
+  { title, options, numbers }: PictureFrame,
+  { fingerprint }: PictureFacts,
+  description: string,
+): SceneMetadata {
+  return {
+    title: title.trim() === '' ? numbers.study.name : title,
+    description,
+    credit: options.credit,
+    software: 'Conewright',
+    fingerprint,
   };
 }
 

@@ -11,14 +11,18 @@ const VIEW_WORDS = {
   'light-cone': 'Light-cone diagram',
 } as const;
 
-/** The picture in words, for who cannot see it: kind, contents, depth, shells with their numbers, labels. */
+/**
+ * The picture in words, for who cannot see it: kind, contents, depth, shells with their numbers, labels.
+ * @param kind of picture, as the sentence begins
+ */
 export function describeInWords(
   options: PictureOptions,
   numbers: PictureNumbers,
   drawing: Pick<ViewDrawing, 'words' | 'notes'>,
+  kind: string = VIEW_WORDS[options.view],
 ): string {
   const { shells, facts, cosmology } = numbers;
-  const out = [`${VIEW_WORDS[options.view]}: ${drawing.words}. ${galaxiesText(numbers)}`];
+  const out = [`${kind}: ${drawing.words}. ${galaxiesText(numbers)}`];
   const z = facts.selected?.sample.redshift;
   if (z && z.length > 0) {
     const [low, high] = [z[0]!, z[z.length - 1]!];

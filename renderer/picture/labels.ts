@@ -21,19 +21,23 @@ const OFFSETS: readonly Point[] = [
   [-46, 60],
 ];
 
-/** Labels tied to places in the survey: a small ring, a leader and the text, clear of each other where there is room. */
+/**
+ * Labels tied to places in the survey: a small ring, a leader and the text, clear of each other where there is room.
+ * @param moving in a film a label stays at one side of its place: it would jump if it looked for room in each frame
+ */
 export function paintLabels(
   pen: Pen,
   options: PictureOptions,
   numbers: PictureNumbers,
-  drawing: ViewDrawing,
+  drawing: Pick<ViewDrawing, 'place'>,
+  moving = false,
 ): void {
   for (const { text, raDeg, decDeg, redshift } of options.labels) {
     const at = drawing.place(direction(raDeg, decDeg), numbers.cosmology.comovingMpc(redshift));
     if (!at || !(at[0] > 0 && at[0] < pen.width && at[1] > 0 && at[1] < pen.height)) continue;
     pen.ring(at, 4, pen.theme.background, 3.5);
     pen.ring(at, 4, pen.theme.ink, 1.2);
-    paintText(pen, at, linesOf(text));
+    paintText(pen, at, linesOf(text), moving ? [steadyOffset(pen, at)] : OFFSETS, moving);
   }
 }
 
@@ -45,13 +49,22 @@ function linesOf(text: string): string[] {
   return [...lines.slice(0, MOST_LINES - 1), fitText(rest, WIDTH, SIZE, 600)];
 }
 
-function paintText(pen: Pen, at: Point, lines: readonly string[]): void {
+/** Toward the middle of the stage and upward, where there is height for it. */
+const steadyOffset = (pen: Pen, [x, y]: Point): Point => [x < pen.width / 2 ? 26 : -26, y < 80 ? 26 : -26];
+
+function paintText(
+  pen: Pen,
+  at: Point,
+  lines: readonly string[],
+  offsets: readonly Point[],
+  must: boolean,
+): void {
   const width = Math.max(...lines.map((line) => textWidth(line, SIZE, 600)));
   const height = lines.length * LEADING;
-  for (const [dx, dy] of OFFSETS) {
+  for (const [dx, dy] of offsets) {
     const x = at[0] + dx + (dx < 0 ? -width : 0);
     const y = at[1] + dy - (dy < 0 ? height : 0);
-    if (!pen.labels.place({ x, y, width, height })) continue;
+    if (!must && !pen.labels.place({ x, y, width, height })) continue;
     const length = Math.hypot(dx, dy);
     const end: Point = [at[0] + dx * 0.92, at[1] + dy * 0.92];
     pen.line([[at[0] + (5 * dx) / length, at[1] + (5 * dy) / length], end], pen.theme.ink, 0.9);

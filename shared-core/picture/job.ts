@@ -3,12 +3,19 @@ import { z } from '../base/schema.ts';
 /** Formats of a picture, by the ending of its file's name. */
 export const PICTURE_FORMATS = ['png', 'svg', 'pdf'] as const;
 export type PictureFormat = (typeof PICTURE_FORMATS)[number];
+export const FILM_FORMATS = ['webm', 'mp4'] as const;
+export type FilmFormat = (typeof FILM_FORMATS)[number];
+
+export const isFilmFormat = (format: string): format is FilmFormat =>
+  FILM_FORMATS.some((name) => name === format);
 
 /** What the command gives the page that draws for it. */
 export const pictureJobSchema = z.strictObject({
-  format: z.enum(PICTURE_FORMATS),
+  format: z.enum([...PICTURE_FORMATS, ...FILM_FORMATS]),
   /** Checked by the page again, as everything that comes from outside. */
   options: z.unknown(),
+  /** What happens in a film, for the formats of films. */
+  film: z.unknown().nullable(),
   /** Text of a study's file, or null for the demo. */
   study: z.string().nullable(),
   /** Where the page reads the catalogue; null when the study has none or makes its own. */

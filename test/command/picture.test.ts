@@ -1,15 +1,30 @@
 import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
+import { sayFilm } from '../../main/command/picture/filmWishes.ts';
 import { checkMemory, obtainableBytes } from '../../main/command/verbs/picture.ts';
+import { filmOptions } from '../../shared-core/picture/film.ts';
+import { pictureOptions } from '../../shared-core/picture/options.ts';
 import { emptyStudy, writeStudy } from '../../shared-core/study/document.ts';
 import { conewright, testFolder } from './capture.ts';
 
 const folder = testFolder();
 const out = folder.path('cone.png');
+const film = folder.path('cone.webm');
 
 describe('picture refuses before it starts', () => {
   it.each([
-    [['-o', folder.path('cone.gif')], /ending \.png, \.svg or \.pdf/],
+    [['-o', folder.path('cone.gif')], /ending \.png, \.svg or \.pdf, or \.webm or \.mp4 for a film/],
+    [['-o', film], /a film: say which with --film turntable, fly-along, shell-by-shell/],
+    [['-o', film, '--film', 'spin'], /--film is "spin"/],
+    [['-o', out, '--film', 'turntable'], /--film is for films: give a name that ends in \.webm or \.mp4/],
+    [['-o', out, '--fps', '20'], /--fps is for films/],
+    [['-o', film, '--film', 'turntable', '--view', 'sky'], /which has its own: leave --view out/],
+    [['-o', film, '--film', 'turntable', '--transparent'], /no clear ground/],
+    [['-o', film, '--film', 'turntable', '--field', '2'], /leave it out/],
+    [['-o', film, '--film', 'turntable', '--size', '1280x721'], /even sides, such as 722/],
+    [['-o', film, '--film', 'turntable', '--size', '8k'], /sides of 64 to 4096/],
+    [['-o', film, '--film', 'turntable', '--seconds', '0'], /was to last 0 seconds/],
+    [['-o', film, '--film', 'turntable', '--seconds', '600', '--fps', '60'], /36000 frames/],
     [['-o', out, '--size', '0x0'], /sides of 64 to 16384 pixels/],
     [['-o', out, '--size', '1000000x1000000'], /sides of 64 to 16384 pixels/],
     [['-o', out, '--size', 'huge'], /expected WIDTHxHEIGHT/],
@@ -46,6 +61,17 @@ describe('picture refuses before it starts', () => {
     expect(code).toBe(2);
     expect(err).toMatch(/same file as one which is read/);
     expect(readFileSync(study, 'utf8')).toBe(writeStudy(emptyStudy('Mine')));
+  });
+
+  it('a film that memory will not be enough for; else it says how much work it is', () => {
+    const wanted = filmOptions({ kind: 'turntable', seconds: 2, framesPerSecond: 25 });
+    const said: string[] = [];
+    const size = pictureOptions({ widthPx: 1280, heightPx: 720 });
+    sayFilm(wanted, size, 0, 8e9, (text) => void said.push(text));
+    expect(said).toEqual(['50 frames of 1280 x 720 pixels, with about 0.4 GB of memory.']);
+    expect(() => sayFilm(wanted, size, 8e9, 4e9, () => undefined)).toThrow(
+      /needs about .* GB of memory and 4\.0 GB/,
+    );
   });
 
   it('memory that will not be enough', () => {

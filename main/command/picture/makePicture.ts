@@ -29,7 +29,7 @@ export async function makePicture(work: PictureWork): Promise<void> {
   const queue = new ByteQueue();
   const bars = {
     catalogue: progressBar('Reading the catalogue'),
-    picture: progressBar('Drawing the picture'),
+    picture: progressBar(work.job.film === null ? 'Drawing the picture' : 'Drawing the film'),
   };
   let received = 0;
   let heard: () => void = () => undefined;

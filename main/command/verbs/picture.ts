@@ -2,7 +2,7 @@ import { freemem, homedir, totalmem } from 'node:os';
 import { basename, extname, join } from 'node:path';
 import type { Command } from 'commander';
 import { Refusal } from '../../../shared-core/base/refusal.ts';
-import { PICTURE_FORMATS, type PictureFormat } from '../../../shared-core/picture/job.ts';
+import { FILM_FORMATS, PICTURE_FORMATS, type PictureJob } from '../../../shared-core/picture/job.ts';
 import {
   PICTURE_STYLES,
   PICTURE_VIEWS,
@@ -26,13 +26,14 @@ import { findBrowser } from '../../launch/findBrowser.ts';
 import { fromHere, readableSize, readTextFile } from '../files.ts';
 import { numberList, oneNumber } from '../numbers.ts';
 import { outputPlaces } from '../outputPlaces.ts';
+import { addFilmOptions, type FilmWishes, filmOf, sayFilm } from '../picture/filmWishes.ts';
 import { makePicture } from '../picture/makePicture.ts';
 
-interface PictureVerbOptions {
+interface PictureVerbOptions extends FilmWishes {
   output: string;
-  size: string;
+  size?: string;
   dpi: number;
-  view: string;
+  view?: string;
   style: string;
   title?: string;
   caption?: string;
@@ -60,15 +61,18 @@ const DEMO = 'demo';
 const BASE_BYTES = 500e6;
 const BYTES_A_BYTE = 4;
 
-/** conewright picture: a study as a picture worth printing. */
+/** conewright picture: a study as a picture worth printing, or as a film. */
 export function addPicture(program: Command, say: (text: string) => void, windowFolder: string | null): void {
-  program
+  const verb = program
     .command('picture')
     .argument('<study>', 'study file, or demo for the invented survey')
-    .description('draw a study as PNG, SVG or PDF')
-    .requiredOption('-o, --output <file>', 'picture to write; its ending says the format: .png, .svg or .pdf')
-    .option('--view <name>', PICTURE_VIEWS.join(', '), 'cone')
-    .option('--size <size>', SIZE_FORMS, '4k')
+    .description('draw a study as PNG, SVG or PDF, or film it as WebM or MP4')
+    .requiredOption(
+      '-o, --output <file>',
+      'file to write; its ending says the format: .png, .svg or .pdf, for a film .webm or .mp4',
+    )
+    .option('--view <name>', `${PICTURE_VIEWS.join(', ')} (cone if not given)`)
+    .option('--size <size>', `${SIZE_FORMS} (4k if not given, 1920x1080 for a film)`)
     .option('--dpi <n>', 'pixels an inch, for sizes on paper', oneNumber('--dpi'), 300)
     .option('--style <name>', PICTURE_STYLES.join(' or '), 'dark')
     .option('--title <text>', "title; the study's name if not given, an empty text for none")
@@ -112,11 +116,16 @@ export function addPicture(program: Command, say: (text: string) => void, window
     )
     .option('--transparent', 'leave the ground clear')
     .option('--catalogue <file>', "the study's catalogue, where it was moved")
-    .option('--overwrite', 'replace a picture that exists')
-    .addHelpText('after', '\nExample:\n  npm run -s conewright -- picture demo -o cone.png --size 7680x4320')
+    .option('--overwrite', 'replace a picture that exists');
+  addFilmOptions(verb)
+    .addHelpText(
+      'after',
+      '\nExamples:\n  npm run -s conewright -- picture demo -o cone.png --size 7680x4320\n  npm run -s conewright -- picture demo -o cone.webm --film turntable --seconds 12 --fps 30',
+    )
     .action(async (file: string, options: PictureVerbOptions) => {
       const format = formatOf(options.output);
-      const wanted = optionsOf(options);
+      const film = filmOf(format, options);
+      const wanted = optionsOf(options, film === null ? '4k' : '1920x1080');
       const text = file === DEMO ? null : await readTextFile(file, 'a study');
       const catalogue =
         text === null ? null : await catalogueOf(readStudy(text), fromHere(file), options, say);
@@ -125,7 +134,9 @@ export function addPicture(program: Command, say: (text: string) => void, window
         [...(text === null ? [] : [file]), ...(catalogue === null ? [] : [catalogue.path])],
         { overwrite: options.overwrite === true },
       );
-      checkMemory(catalogue?.sizeBytes ?? 0, obtainableBytes(process.platform, freemem(), totalmem()));
+      const obtainable = obtainableBytes(process.platform, freemem(), totalmem());
+      checkMemory(catalogue?.sizeBytes ?? 0, obtainable);
+      if (film !== null) sayFilm(film, wanted, catalogue?.sizeBytes ?? 0, obtainable, say);
       const browser = findBrowser({ platform: process.platform, env: process.env, homeFolder: homedir() });
       if (browser === null)
         throw new Refusal(
@@ -138,7 +149,7 @@ export function addPicture(program: Command, say: (text: string) => void, window
       await makePicture({
         browser,
         windowFolder,
-        job: { format, options: wanted, study: text },
+        job: { format, options: wanted, film, study: text },
         catalogue,
         path,
         overwrite: options.overwrite === true,
@@ -148,19 +159,22 @@ export function addPicture(program: Command, say: (text: string) => void, window
     });
 }
 
-function formatOf(output: string): PictureFormat {
+function formatOf(output: string): PictureJob['format'] {
   const ending = extname(output).slice(1).toLowerCase();
-  const format = PICTURE_FORMATS.find((name) => name === ending);
+  const format = [...PICTURE_FORMATS, ...FILM_FORMATS].find((name) => name === ending);
   if (format === undefined)
-    throw new Refusal(`The picture's file is ${output}, expected an ending .png, .svg or .pdf.`, 'use');
+    throw new Refusal(
+      `The picture's file is ${output}, expected an ending .png, .svg or .pdf, or .webm or .mp4 for a film.`,
+      'use',
+    );
   return format;
 }
 
-function optionsOf(options: PictureVerbOptions): PictureOptions {
+function optionsOf(options: PictureVerbOptions, size: string): PictureOptions {
   if (!(options.dpi >= 1 && options.dpi <= 10_000))
     throw new Refusal(`--dpi is ${options.dpi}, expected a number from 1 to 10000.`, 'use');
   return pictureOptions({
-    ...parsePictureSize(options.size, options.dpi),
+    ...parsePictureSize(options.size ?? size, options.dpi),
     dpi: options.dpi,
     view: options.view,
     style: options.style,

@@ -1,0 +1,97 @@
+import { readdirSync, readFileSync, writeFileSync } from 'node:fs';
+import { join } from 'node:path';
+import { makeLargeSurvey } from '../../shared-core/demo/largeSurvey.ts';
+import { DEMO_EDGES, DEMO_MAPPING, DEMO_REGION } from '../../shared-core/demo/scenario.ts';
+import { emptyStudy, writeStudy } from '../../shared-core/study/document.ts';
+import type { Study } from '../../shared-core/study/schema.ts';
+import { at, readBoxes, readEbml, tagsOf } from '../engine/picture/film/containers.ts';
+import { conewright } from './command.ts';
+import { differing, seenFilm } from './filmSeen.ts';
+import { expect, test } from './window.ts';
+
+/** A study of 3000 invented galaxies with its catalogue beside it: small, since every frame draws all of them. */
+function smallStudy(folder: string): string {
+  writeFileSync(join(folder, 'some.csv'), Buffer.concat([...makeLargeSurvey(3000)]));
+  const study: Study = {
+    ...emptyStudy('Three fields'),
+    source: { kind: 'file', name: 'some.csv', path: null, sizeBytes: 0, sha256: null },
+    mapping: DEMO_MAPPING,
+    region: { parts: [...DEMO_REGION.parts], holes: [...DEMO_REGION.holes] } as Study['region'],
+    edges: [...DEMO_EDGES],
+  };
+  writeFileSync(join(folder, 'some.study.json'), writeStudy(study));
+  return 'some.study.json';
+}
+
+const TINY = ['--size', '320x192', '--seconds', '0.8', '--fps', '10'];
+/** The middle of a frame of a tenth of a second. */
+const middleOf = (frame: number): number => (frame + 0.5) / 10;
+
+test('a film by command plays, has its frames, times and study, and is the same again', async ({
+  chrome,
+  desk,
+}) => {
+  test.setTimeout(120_000);
+  const { folder } = desk;
+  const study = smallStudy(folder);
+  const read = (name: string) => readFileSync(join(folder, name));
+  await conewright(folder, 'picture', study, '-o', 'a.webm', '--film', 'shell-by-shell', ...TINY);
+  await conewright(folder, 'picture', study, '-o', 'b.webm', '--film', 'shell-by-shell', ...TINY);
+  const parts = readEbml(read('a.webm'));
+  expect(at(parts, '18538067', '1f43b675', 'a3')).toHaveLength(8);
+  expect(tagsOf(parts).STUDY).toMatch(/^study sha256:[0-9a-f]{64}$/);
+  expect(tagsOf(parts).TITLE).toBe('Three fields');
+  // Not in their order: the player must find them without an index.
+  const times = [6, 1, 3, 0].map(middleOf);
+  const a = await seenFilm(chrome, read('a.webm'), 'video/webm', times);
+  expect(a).toMatchObject({ width: 320, height: 192 });
+  // To the millisecond of the file's clock.
+  expect(a.seconds).toBeCloseTo(0.8, 2);
+  const [sixth, first, third, start] = a.pictures;
+  for (const [one, other] of [
+    [sixth, first],
+    [first, third],
+    [third, start],
+  ])
+    expect(differing(one!, other!)).toBeGreaterThan(50);
+  const b = await seenFilm(chrome, read('b.webm'), 'video/webm', times);
+  expect(b.pictures).toEqual(a.pictures);
+  await expect(
+    conewright(folder, 'picture', study, '-o', 'a.webm', '--film', 'turntable', ...TINY),
+  ).rejects.toThrow(/exists already/);
+});
+
+test('a film as MP4 where the browser can encode it, else a sentence and no file', async ({
+  chrome,
+  desk,
+}) => {
+  test.setTimeout(120_000);
+  const { folder } = desk;
+  const study = smallStudy(folder);
+  const refused = await conewright(
+    folder,
+    'picture',
+    study,
+    '-o',
+    'turn.mp4',
+    '--film',
+    'turntable',
+    ...TINY,
+  ).then(
+    () => null,
+    (error: unknown) => String(error),
+  );
+  if (refused !== null) {
+    // A Chromium built without H.264.
+    expect(refused).toMatch(/cannot encode H\.264 .* choose WebM/);
+    expect(readdirSync(folder).filter((name) => name.includes('turn'))).toEqual([]);
+    return;
+  }
+  const bytes = readFileSync(join(folder, 'turn.mp4'));
+  const list = at(readBoxes(bytes), 'moov', 'udta', 'meta', 'ilst')[0]!;
+  expect(Buffer.from(list.content).toString('utf8')).toMatch(/study sha256:[0-9a-f]{64}/);
+  const seen = await seenFilm(chrome, bytes, 'video/mp4', [middleOf(4), middleOf(0)]);
+  expect(seen).toMatchObject({ width: 320, height: 192 });
+  expect(seen.seconds).toBeCloseTo(0.8, 3);
+  expect(differing(seen.pictures[0]!, seen.pictures[1]!)).toBeGreaterThan(50);
+});
