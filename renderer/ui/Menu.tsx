@@ -18,6 +18,10 @@ export type MenuEntry =
       readonly entries: readonly Extract<MenuEntry, { kind: 'item' }>[];
     };
 
+/** Between a menu and its button, and between it and the edge of the window. */
+const GAP_PX = 4;
+const EDGE_PX = 8;
+
 /** A button that opens a list of commands under it. Arrow keys walk, Escape closes, focus comes back to the button. */
 export function Menu(props: {
   readonly label: string;
@@ -38,10 +42,16 @@ export function Menu(props: {
   const place = (): void => {
     const [menu, from] = [list.current, button.current?.getBoundingClientRect()];
     if (menu === null || from === undefined) return;
-    const room = document.documentElement.clientWidth - menu.offsetWidth - 8;
-    menu.style.left = `${Math.max(8, Math.min(from.left, room))}px`;
-    menu.style.top = `${from.bottom + 4}px`;
-    menu.style.maxHeight = `${document.documentElement.clientHeight - from.bottom - 12}px`;
+    const { clientWidth, clientHeight } = document.documentElement;
+    const room = clientWidth - menu.offsetWidth - EDGE_PX;
+    menu.style.left = `${Math.max(EDGE_PX, Math.min(from.left, room))}px`;
+    // Under its button, or over it where the foot of the window leaves less room.
+    const [above, below] = [from.top - GAP_PX - EDGE_PX, clientHeight - from.bottom - GAP_PX - EDGE_PX];
+    menu.style.maxHeight = 'none';
+    const height = menu.offsetHeight;
+    const upward = height > below && above > below;
+    menu.style.maxHeight = `${upward ? above : below}px`;
+    menu.style.top = `${upward ? from.top - GAP_PX - Math.min(height, above) : from.bottom + GAP_PX}px`;
   };
   const onToggle = (event: TargetedToggleEvent<HTMLDivElement>): void => {
     const open = event.newState === 'open';

@@ -2,7 +2,7 @@ import { existsSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import type { Page } from '@playwright/test';
-import { expect, ready, test } from './window.ts';
+import { accessible, expect, ready, test } from './window.ts';
 
 const SHAPLEY = fileURLToPath(new URL('../data/shapley.csv', import.meta.url));
 const ledger = (page: Page) => page.getByRole('grid', { name: 'Shell ledger' });
@@ -63,6 +63,7 @@ test('a study whose catalogue is not there asks for it and keeps everything', as
   const again = await desk.open({ files: [moved] });
   await expect(again.getByText(/gone\.csv/).first()).toBeVisible();
   await expect(again.getByRole('button', { name: /point/i })).toBeVisible();
+  await accessible(again, '.desk');
   // The shells are the study's own; only the galaxies are missing.
   await expect(ledger(again).locator('tbody tr')).toHaveCount(0);
   await expect(again.getByRole('slider', { name: /^Edge 1 of/ })).toBeVisible();
@@ -103,6 +104,7 @@ test('two windows on one study: the second to save is told, and nothing is lost'
   await expect.poll(() => JSON.parse(readFileSync(path, 'utf8')).name).toBe('from the second');
   await rename(page, 'from the first');
   await expect(page.getByRole('dialog')).toContainText(/changed by somebody else/);
+  await accessible(page, '.dialog[open]');
   expect(JSON.parse(readFileSync(path, 'utf8')).name).toBe('from the second');
   await page.getByRole('button', { name: 'Save under another name' }).click();
   await page.getByRole('textbox', { name: 'Name', exact: true }).fill('mine');
@@ -132,6 +134,7 @@ test('unsaved work is offered back after the window died', async ({ desk }) => {
   await desk.kill(page);
   const again = await desk.open();
   await expect(again.getByText(/almost lost/)).toBeVisible();
+  await accessible(again, '.notices');
   await again.getByRole('button', { name: /Take it up/ }).click();
   await expect(again.getByLabel('Name of the study')).toHaveValue('almost lost');
   await expect(again.getByText('not saved').first()).toBeVisible();

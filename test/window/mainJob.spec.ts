@@ -140,6 +140,7 @@ test('a file named on the command line, and a study beside its catalogue, need n
   appendFileSync(catalogue, '\n200,-30,17,9000,50\n');
   const third = await desk.open({ files: [study] });
   await expect(third.getByText(/changed since/)).toBeVisible();
+  await accessible(third, '.desk');
 });
 
 /** A file as JSON; null while it is not there. */
