@@ -6,6 +6,9 @@ export type PictureFormat = (typeof PICTURE_FORMATS)[number];
 export const FILM_FORMATS = ['webm', 'mp4'] as const;
 export type FilmFormat = (typeof FILM_FORMATS)[number];
 
+/** Formats of what is drawn: a picture, or a film. */
+export type DrawnFormat = PictureFormat | FilmFormat;
+
 export const isFilmFormat = (format: string): format is FilmFormat =>
   FILM_FORMATS.some((name) => name === format);
 

@@ -7,7 +7,7 @@ import type { Study } from '../../shared-core/study/schema.ts';
 import { at, readBoxes, readEbml, tagsOf } from '../engine/picture/film/containers.ts';
 import { conewright } from './command.ts';
 import { differing, seenFilm } from './filmSeen.ts';
-import { expect, test } from './window.ts';
+import { accessible, expect, ready, test } from './window.ts';
 
 /** A study of 3000 invented galaxies with its catalogue beside it: small, since every frame draws all of them. */
 function smallStudy(folder: string): string {
@@ -94,4 +94,59 @@ test('a film as MP4 where the browser can encode it, else a sentence and no file
   expect(seen).toMatchObject({ width: 320, height: 192 });
   expect(seen.seconds).toBeCloseTo(0.8, 3);
   expect(differing(seen.pictures[0]!, seen.pictures[1]!)).toBeGreaterThan(50);
+});
+
+test('a film from the bench: any moment is seen, it is written whole, and a cancel leaves nothing', async ({
+  chrome,
+  desk,
+}) => {
+  test.setTimeout(240_000);
+  const page = await desk.open({ theme: 'light' });
+  await ready(page);
+  await page.keyboard.press('p');
+  const bench = page.getByRole('dialog', { name: 'Picture' });
+  await bench.getByText('Film', { exact: true }).click();
+  await bench.getByLabel('Kind').selectOption('shell-by-shell');
+  await bench.getByLabel('Size', { exact: true }).selectOption('own');
+  await bench.getByLabel('Width').fill('321');
+  await bench.getByLabel('Height').fill('192');
+  await expect(bench.getByText(/films need even sides, such as 322/).first()).toBeVisible();
+  await expect(bench.getByRole('button', { name: 'Export WebM' })).toBeDisabled();
+  await bench.getByLabel('Width').fill('320');
+  await bench.getByLabel('Length').fill('0.6');
+  await bench.getByLabel('Frames').fill('5');
+  const facts = bench.locator('.bench-facts');
+  await expect(facts).toHaveText(/^320 × 192 pixels · 3 frames · takes .* · 0\.\d GB of memory$/, {
+    timeout: 60_000,
+  });
+  // By the keyboard to the last moment: another picture.
+  const picture = bench.locator('.bench-pane img');
+  const first = await picture.getAttribute('src');
+  const moment = bench.getByRole('slider', { name: 'Moment' });
+  await expect(moment).toHaveAttribute('aria-valuetext', '0.0 of 0.6 s');
+  await moment.focus();
+  await page.keyboard.press('ArrowRight');
+  await expect(moment).toHaveAttribute('aria-valuetext', '0.2 of 0.6 s');
+  await expect(picture).not.toHaveAttribute('src', first!);
+  await expect(facts).not.toHaveText(/drawing/, { timeout: 60_000 });
+  await accessible(page);
+  const [download] = await Promise.all([
+    page.waitForEvent('download'),
+    bench.getByRole('button', { name: 'Export WebM' }).click(),
+  ]);
+  expect(download.suggestedFilename()).toMatch(/shell-by-shell\.webm$/);
+  const seen = await seenFilm(chrome, readFileSync(await download.path()), 'video/webm', [0.3, 0.1]);
+  expect(seen).toMatchObject({ width: 320, height: 192 });
+  expect(seen.seconds).toBeCloseTo(0.6, 2);
+  expect(differing(seen.pictures[0]!, seen.pictures[1]!)).toBeGreaterThan(50);
+
+  await bench.getByLabel('Size', { exact: true }).selectOption('4k');
+  await bench.getByLabel('Length').fill('60');
+  await expect(facts).toHaveText(/300 frames/);
+  await bench.getByRole('button', { name: 'Export WebM' }).click();
+  await expect(bench.getByRole('progressbar', { name: 'Writing WEBM' })).toBeVisible();
+  await bench.getByRole('button', { name: 'Cancel' }).click();
+  await expect(bench.getByText('The export was cancelled; no file was written.')).toBeVisible({
+    timeout: 60_000,
+  });
 });

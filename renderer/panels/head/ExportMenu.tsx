@@ -22,7 +22,7 @@ export function ExportMenu() {
             : 'Export picture or ledger'
         }
         entries={[
-          { kind: 'item', label: 'Picture…', hint: 'P', run: () => void (pictureShown.value = true) },
+          { kind: 'item', label: 'Picture or film…', hint: 'P', run: () => void (pictureShown.value = true) },
           {
             kind: 'group',
             label: 'Ledger to a file',

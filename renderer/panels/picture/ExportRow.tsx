@@ -1,25 +1,35 @@
-import { PICTURE_FORMATS, type PictureFormat } from '../../../shared-core/picture/job.ts';
+import type { DrawnFormat } from '../../../shared-core/picture/job.ts';
 import type { ExportState } from './usePictureExport.ts';
 
-const HINTS: Readonly<Record<PictureFormat, string>> = {
+const HINTS: Readonly<Record<DrawnFormat, string>> = {
   png: 'Pixels',
   svg: 'Vector text, lines and shells; galaxies as an image',
   pdf: 'One page with vector text, lines and shells; galaxies as an image',
+  webm: 'VP9, for browsers and free players',
+  mp4: 'H.264, for slides and most players',
 };
 
-/** What hinders an export, the three formats, and how far the one that runs is. */
+const NAMES: Readonly<Record<DrawnFormat, string>> = {
+  png: 'PNG',
+  svg: 'SVG',
+  pdf: 'PDF',
+  webm: 'WebM',
+  mp4: 'MP4',
+};
+
+/** What hinders an export, the formats, the first of them the usual one, and how far the one that runs is. */
 export function ExportRow(props: {
   readonly state: ExportState;
-  /** By format: why it cannot be written; null when it can. */
-  readonly hindered: Readonly<Record<PictureFormat, string | null>>;
+  /** In their order: each format, and why it cannot be written; null when it can. */
+  readonly hindered: readonly (readonly [DrawnFormat, string | null])[];
   readonly remarks: readonly string[];
   readonly said: string | null;
-  readonly onExport: (format: PictureFormat) => void;
+  readonly onExport: (format: DrawnFormat) => void;
   readonly onCancel: () => void;
 }) {
   const { state, hindered, remarks, said, onExport, onCancel } = props;
   const writing = state.kind === 'writing';
-  const hindrances = [...new Set(Object.values(hindered).filter((why) => why !== null))];
+  const hindrances = [...new Set(hindered.map(([, why]) => why).filter((why) => why !== null))];
   return (
     <div class="bench-export">
       <div class="bench-sentences" aria-live="polite">
@@ -39,7 +49,7 @@ export function ExportRow(props: {
       </p>
       {writing ? (
         <div class="bench-progress">
-          <label for="bench-progress">Writing {state.format.toUpperCase()}</label>
+          <label for="bench-progress">Writing {NAMES[state.format]}</label>
           <progress id="bench-progress" max={1} value={state.fraction} />
           <button type="button" class="button" onClick={onCancel}>
             Cancel
@@ -47,16 +57,16 @@ export function ExportRow(props: {
         </div>
       ) : (
         <div class="bench-formats">
-          {PICTURE_FORMATS.map((format) => (
+          {hindered.map(([format, why], i) => (
             <button
               key={format}
               type="button"
-              class={format === 'png' ? 'button accent-button' : 'button'}
-              title={hindered[format] ?? HINTS[format]}
-              disabled={hindered[format] !== null}
+              class={i === 0 ? 'button accent-button' : 'button'}
+              title={why ?? HINTS[format]}
+              disabled={why !== null}
               onClick={() => onExport(format)}
             >
-              Export {format.toUpperCase()}
+              Export {NAMES[format]}
             </button>
           ))}
         </div>

@@ -71,11 +71,13 @@ export function LookChoice(props: {
       <div class="bench-switches">
         <Switch label="Rulers" checked={choices.rulers} onChange={(rulers) => onChange({ rulers })} />
         <Switch label="Shells" checked={choices.shells} onChange={(shells) => onChange({ shells })} />
-        <Switch
-          label="Transparent ground"
-          checked={choices.transparent}
-          onChange={(transparent) => onChange({ transparent })}
-        />
+        {choices.what === 'film' ? null : (
+          <Switch
+            label="Transparent ground"
+            checked={choices.transparent}
+            onChange={(transparent) => onChange({ transparent })}
+          />
+        )}
       </div>
     </>
   );

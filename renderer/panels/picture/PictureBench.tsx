@@ -1,18 +1,23 @@
 import { useEffect, useMemo, useState } from 'preact/hooks';
-import type { PictureFormat } from '../../../shared-core/picture/job.ts';
+import { filmFrames, filmMemoryBytes, waitText } from '../../../shared-core/picture/film.ts';
+import type { DrawnFormat } from '../../../shared-core/picture/job.ts';
 import { useApp } from '../../state/app.ts';
 import { ChoiceField } from '../../ui/ChoiceField.tsx';
 import { Dialog } from '../../ui/Dialog.tsx';
+import { Segments } from '../../ui/Segments.tsx';
+import { fieldsInView } from '../fieldsInView.ts';
 import { BenchField } from './BenchField.tsx';
+import type { FilmForecast, FilmMoment } from './benchMessages.ts';
 import { choicesFor } from './benchState.ts';
 import { ExportRow } from './ExportRow.tsx';
+import { FilmChoice } from './FilmChoice.tsx';
 import { LabelsChoice } from './LabelsChoice.tsx';
 import { LookChoice } from './LookChoice.tsx';
 import { PreviewPane } from './PreviewPane.tsx';
 import { type PictureChoices, VIEW_CHOICES } from './pictureChoices.ts';
 import { PictureClient } from './pictureClient.ts';
-import { memoryTrouble, pictureRemarks } from './pictureRemarks.ts';
-import { readChoices } from './readChoices.ts';
+import { memoryTrouble, pictureMemoryBytes, pictureRemarks } from './pictureRemarks.ts';
+import { type ReadPicture, readChoices } from './readChoices.ts';
 import { SizeChoice } from './SizeChoice.tsx';
 import { SlabChoice } from './SlabChoice.tsx';
 import { usePictureExport } from './usePictureExport.ts';
@@ -21,7 +26,7 @@ import { usePicturePreview } from './usePicturePreview.ts';
 import { WordsChoice } from './WordsChoice.tsx';
 import './bench.css';
 
-/** Composes the picture that will be exported, and shows it as it will be. */
+/** Composes the picture or the film that will be exported, and shows it, or a moment of it, as it will be. */
 export function PictureBench({ onClose }: { readonly onClose: () => void }) {
   const app = useApp();
   const client = useMemo(() => new PictureClient(), []);
@@ -33,28 +38,45 @@ export function PictureBench({ onClose }: { readonly onClose: () => void }) {
   const { facts, waiting } = usePictureFacts(app, client);
   const [room, setRoom] = useState<readonly [number, number] | null>(null);
   const [said, setSaid] = useState<string | null>(null);
-  const { options, troubles } = readChoices(choices, windowPx());
-  const shown = usePicturePreview(client, options, facts, room);
+  const [frame, setFrame] = useState(0);
+  const fields = fieldsInView(app);
+  const field = Math.min(choices.field, Math.max(1, fields.length));
+  const read = readChoices({ ...choices, field }, windowPx());
+  const { options, film, troubles } = read;
+  const isFilm = choices.what === 'film';
+  const moment: FilmMoment | null =
+    film === null ? null : { film, frame: Math.min(frame, filmFrames(film) - 1) };
+  const shown = usePicturePreview(client, options, moment, facts, room);
   const exporting = usePictureExport(app, client);
   useEffect(() => () => client.stop(), [client]);
 
+  const galaxies = app.engine.selected.value?.sample.count ?? 0;
+  const needed = neededBytes(read, galaxies);
   const general =
     troubles.get('') ??
     [...troubles.values()][0] ??
     waiting ??
     shown.trouble ??
-    memoryTrouble(app.engine.selected.value?.sample.count ?? 0, deviceGb());
-  const hindered: Readonly<Record<PictureFormat, string | null>> = {
-    png: general,
-    svg: general,
-    pdf: general ?? shown.preview?.pdfTrouble ?? null,
-  };
+    memoryTrouble(isFilm ? 'The film' : 'The picture', needed, deviceGb());
+  const { preview } = shown;
+  const hindered: readonly (readonly [DrawnFormat, string | null])[] = isFilm
+    ? [
+        ['webm', general ?? preview?.forecast?.troubles.webm ?? null],
+        ['mp4', general ?? preview?.forecast?.troubles.mp4 ?? null],
+      ]
+    : [
+        ['png', general],
+        ['svg', general],
+        ['pdf', general ?? preview?.pdfTrouble ?? null],
+      ];
   return (
-    <Dialog title="Picture" kind="wide" lightDismiss={false} onClose={onClose}>
+    <Dialog title="Picture or film" kind="wide" lightDismiss={false} onClose={onClose}>
       <div class="bench">
         <PreviewPane
           shown={shown}
-          sizeText={options === null ? 'No size yet' : `${options.widthPx} × ${options.heightPx} pixels`}
+          sizeText={sizeText(read, needed, preview?.forecast ?? null)}
+          moment={moment}
+          onFrame={setFrame}
           waiting={waiting}
           ground={choices.style}
           onRoom={setRoom}
@@ -62,12 +84,30 @@ export function PictureBench({ onClose }: { readonly onClose: () => void }) {
         />
         <div class="bench-right">
           <section class="bench-choices" aria-label="Choices">
-            <ChoiceField
-              label="View"
-              value={choices.view}
-              choices={VIEW_CHOICES}
-              onChoose={(view) => change({ view: view as PictureChoices['view'] })}
+            <Segments
+              label="What to draw"
+              value={choices.what}
+              choices={[
+                { value: 'picture', label: 'Picture' },
+                { value: 'film', label: 'Film' },
+              ]}
+              onChoose={(what) => change({ what })}
             />
+            {isFilm ? (
+              <FilmChoice
+                choices={choices}
+                troubles={troubles}
+                fields={fields.map((_, i) => `Field ${i + 1} of ${fields.length}`)}
+                onChange={change}
+              />
+            ) : (
+              <ChoiceField
+                label="View"
+                value={choices.view}
+                choices={VIEW_CHOICES}
+                onChoose={(view) => change({ view: view as PictureChoices['view'] })}
+              />
+            )}
             <SlabChoice choices={choices} troubles={troubles} onChange={change} />
             <BenchField
               label="Ends at redshift (empty: shows everything)"
@@ -76,7 +116,7 @@ export function PictureBench({ onClose }: { readonly onClose: () => void }) {
               troubles={troubles}
               onInput={(depthRedshift) => change({ depthRedshift })}
             />
-            <SizeChoice choices={choices} troubles={troubles} onChange={change} />
+            {isFilm ? null : <SizeChoice choices={choices} troubles={troubles} onChange={change} />}
             <LookChoice choices={choices} onChange={change} />
             <WordsChoice
               choices={choices}
@@ -92,7 +132,7 @@ export function PictureBench({ onClose }: { readonly onClose: () => void }) {
             remarks={options === null ? [] : pictureRemarks(options, app.derived.shells.value)}
             said={said}
             onExport={(format) => {
-              if (options !== null) void exporting.start(format, options);
+              if (options !== null) void exporting.start(format, options, film);
             }}
             onCancel={exporting.cancel}
           />
@@ -100,6 +140,25 @@ export function PictureBench({ onClose }: { readonly onClose: () => void }) {
       </div>
     </Dialog>
   );
+}
+
+const neededBytes = ({ options, film }: ReadPicture, galaxies: number): number =>
+  options === null || film === null
+    ? pictureMemoryBytes(galaxies)
+    : filmMemoryBytes(options.widthPx, options.heightPx, galaxies);
+
+/** How large it becomes; of a film also how much work it is. */
+function sizeText(
+  { options, film }: ReadPicture,
+  neededBytes: number,
+  forecast: FilmForecast | null,
+): string {
+  if (options === null) return 'No size yet';
+  const pixels = `${options.widthPx} × ${options.heightPx} pixels`;
+  if (film === null) return pixels;
+  const frames = filmFrames(film);
+  const time = forecast === null ? '' : ` · takes ${waitText(frames * forecast.secondsAFrame)}`;
+  return `${pixels} · ${frames} frames${time} · ${(neededBytes / 1e9).toFixed(1)} GB of memory`;
 }
 
 const windowPx = (): readonly [number, number] => [

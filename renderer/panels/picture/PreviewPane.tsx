@@ -1,5 +1,7 @@
 import { useLayoutEffect, useRef } from 'preact/hooks';
 import { copyText } from '../../ui/clipboard.ts';
+import type { FilmMoment } from './benchMessages.ts';
+import { MomentField } from './MomentField.tsx';
 import type { ShownPreview } from './usePicturePreview.ts';
 
 /** The picture as it will be exported, with its text alternative. */
@@ -9,10 +11,13 @@ export function PreviewPane(props: {
   readonly waiting: string | null;
   /** Of the paper that a clear picture is laid on. */
   readonly ground: 'dark' | 'paper';
+  /** The frame of a film that is shown; null for a picture. */
+  readonly moment: FilmMoment | null;
+  readonly onFrame: (frame: number) => void;
   readonly onRoom: (room: readonly [number, number]) => void;
   readonly onCopied: (sentence: string) => void;
 }) {
-  const { shown, sizeText, waiting, ground, onRoom, onCopied } = props;
+  const { shown, sizeText, waiting, ground, moment, onFrame, onRoom, onCopied } = props;
   const pane = useRef<HTMLDivElement>(null);
   useLayoutEffect(() => {
     const { current } = pane;
@@ -43,6 +48,7 @@ export function PreviewPane(props: {
           <img src={shown.url} alt={description} data-ground={ground} />
         )}
       </div>
+      {moment === null ? null : <MomentField moment={moment} onFrame={onFrame} />}
       <p class="bench-facts" role="status">
         {sizeText}
         {shown.drawing ? ' · drawing…' : ''}

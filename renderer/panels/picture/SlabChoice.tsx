@@ -25,7 +25,7 @@ export function SlabChoice(props: {
   readonly onChange: (part: Partial<PictureChoices>) => void;
 }) {
   const { choices, troubles, onChange } = props;
-  if (choices.view !== 'wedge') return null;
+  if (choices.what === 'film' || choices.view !== 'wedge') return null;
   return (
     <>
       <ChoiceField

@@ -1,4 +1,5 @@
-import type { PictureFormat } from '../../../shared-core/picture/job.ts';
+import type { FilmOptions } from '../../../shared-core/picture/film.ts';
+import type { DrawnFormat, FilmFormat } from '../../../shared-core/picture/job.ts';
 import type { PictureOptions } from '../../../shared-core/picture/options.ts';
 import type { PictureFacts } from '../../picture/numbers.ts';
 
@@ -9,18 +10,34 @@ export type BenchRequest =
       readonly kind: 'preview';
       readonly id: number;
       readonly options: PictureOptions;
+      /** A film and the frame of it to look at; null for a picture. */
+      readonly moment: FilmMoment | null;
       /** Pixels that the preview may take, of the screen. */
       readonly room: readonly [widthPx: number, heightPx: number];
     }
   | {
       readonly kind: 'export';
       readonly id: number;
-      readonly format: PictureFormat;
+      readonly format: DrawnFormat;
       readonly options: PictureOptions;
+      readonly film: FilmOptions | null;
     }
   /** The piece has been taken: the next may come. */
   | { readonly kind: 'more'; readonly id: number }
   | { readonly kind: 'cancel'; readonly id: number };
+
+export interface FilmMoment {
+  readonly film: FilmOptions;
+  readonly frame: number;
+}
+
+/** What a film's preview tells beside its picture. */
+export interface FilmForecast {
+  /** Why the browser cannot write a format; null where it can. */
+  readonly troubles: Readonly<Record<FilmFormat, string | null>>;
+  /** How long a frame takes at the film's own size, guessed from the preview. */
+  readonly secondsAFrame: number;
+}
 
 /** The picture as it will be exported, at a size that fits the screen. */
 export interface PicturePreview {
@@ -31,6 +48,8 @@ export interface PicturePreview {
   readonly offeredCaption: string;
   /** Why this picture cannot be a PDF; null when it can. */
   readonly pdfTrouble: string | null;
+  /** Null for a picture. */
+  readonly forecast: FilmForecast | null;
 }
 
 export type BenchAnswer =

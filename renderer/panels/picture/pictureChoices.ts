@@ -1,3 +1,4 @@
+import type { FilmKind } from '../../../shared-core/picture/film.ts';
 import type { PictureOptions, PictureView } from '../../../shared-core/picture/options.ts';
 import type { ColourBy, ColourMapName, Light } from '../../../shared-core/study/schema.ts';
 
@@ -13,6 +14,13 @@ export type SlabKind = 'offered' | 'declination' | 'greatCircle';
 
 /** What the person has chosen on the bench; numbers as they are typed. */
 export interface PictureChoices {
+  readonly what: 'picture' | 'film';
+  readonly filmKind: FilmKind;
+  readonly filmSize: string;
+  readonly seconds: string;
+  readonly framesPerSecond: string;
+  /** The field that a fly-along goes through, from 1. */
+  readonly field: number;
   readonly view: PictureView;
   readonly size: string;
   /** Sheets of paper stand upright. */
@@ -44,6 +52,12 @@ export interface PictureChoices {
 }
 
 export const FIRST_CHOICES: PictureChoices = {
+  what: 'picture',
+  filmKind: 'turntable',
+  filmSize: '1920x1080',
+  seconds: '12',
+  framesPerSecond: '30',
+  field: 1,
   view: 'cone',
   size: '4k',
   upright: false,
@@ -89,6 +103,21 @@ export const SIZE_CHOICES = [
   { value: 'a2', label: 'A2 at 300 dpi' },
   { value: 'a1', label: 'A1 at 300 dpi' },
   { value: 'a0', label: 'A0 at 300 dpi' },
+  { value: 'own', label: 'Own size' },
+] as const;
+
+export const FILM_KIND_CHOICES: readonly { readonly value: FilmKind; readonly label: string }[] = [
+  { value: 'turntable', label: 'Turntable' },
+  { value: 'fly-along', label: 'Fly-along' },
+  { value: 'shell-by-shell', label: 'Shell by shell' },
+];
+
+export const FILM_SIZE_CHOICES = [
+  { value: '1280x720', label: '1280 × 720' },
+  { value: '1920x1080', label: '1920 × 1080' },
+  { value: '4k', label: '4K, 3840 × 2160' },
+  { value: '1080x1080', label: 'Square, 1080 × 1080' },
+  { value: '1080x1920', label: 'Portrait, 1080 × 1920' },
   { value: 'own', label: 'Own size' },
 ] as const;
 

@@ -1,9 +1,10 @@
 import { Cancelled } from '../../../shared-core/base/cancelled.ts';
 import { Refusal } from '../../../shared-core/base/refusal.ts';
-import type { PictureFormat } from '../../../shared-core/picture/job.ts';
+import type { FilmOptions } from '../../../shared-core/picture/film.ts';
+import type { DrawnFormat } from '../../../shared-core/picture/job.ts';
 import type { PictureOptions } from '../../../shared-core/picture/options.ts';
 import type { PictureFacts } from '../../picture/numbers.ts';
-import type { BenchAnswer, BenchRequest, PicturePreview } from './benchMessages.ts';
+import type { BenchAnswer, BenchRequest, FilmMoment, PicturePreview } from './benchMessages.ts';
 
 const DIED =
   'The part of Conewright that draws pictures stopped, most likely for want of memory: choose a smaller size, or close other programs, and try again.';
@@ -28,11 +29,15 @@ export class PictureClient {
   }
 
   /** @returns null when a newer wish overtook this one. @throws Refusal */
-  async preview(options: PictureOptions, room: readonly [number, number]): Promise<PicturePreview | null> {
+  async preview(
+    options: PictureOptions,
+    moment: FilmMoment | null,
+    room: readonly [number, number],
+  ): Promise<PicturePreview | null> {
     const id = ++this.#asked;
     const answer = await new Promise<BenchAnswer>((resolve) => {
       this.#listeners.set(id, resolve);
-      this.#send({ kind: 'preview', id, options, room });
+      this.#send({ kind: 'preview', id, options, moment, room });
     });
     this.#listeners.delete(id);
     if (answer.kind === 'refused') throw new Refusal(answer.sentence);
@@ -44,8 +49,9 @@ export class PictureClient {
    * @throws Refusal; Cancelled once the signal is up
    */
   async *pieces(
-    format: PictureFormat,
+    format: DrawnFormat,
     options: PictureOptions,
+    film: FilmOptions | null,
     { signal, onProgress }: { signal: AbortSignal; onProgress: (fraction: number) => void },
   ): AsyncGenerator<Uint8Array<ArrayBuffer>, void, undefined> {
     if (signal.aborted) throw new Cancelled();
@@ -63,7 +69,7 @@ export class PictureClient {
     signal.addEventListener('abort', cancel);
     let ended = false;
     try {
-      this.#send({ kind: 'export', id, format, options });
+      this.#send({ kind: 'export', id, format, options, film });
       for (;;) {
         if (waiting.length === 0)
           await new Promise<void>((resolve) => {

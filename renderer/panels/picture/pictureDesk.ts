@@ -1,15 +1,20 @@
 import { Cancelled } from '../../../shared-core/base/cancelled.ts';
 import { Refusal } from '../../../shared-core/base/refusal.ts';
+import type { FilmOptions } from '../../../shared-core/picture/film.ts';
+import { type FilmFormat, isFilmFormat } from '../../../shared-core/picture/job.ts';
 import type { PictureOptions } from '../../../shared-core/picture/options.ts';
 import { composePicture, describePicture } from '../../picture/composePicture.ts';
+import { composeFilm, type Film } from '../../picture/film/composeFilm.ts';
+import { filmEncoding } from '../../picture/film/encoding.ts';
+import { renderFilm } from '../../picture/film/renderFilm.ts';
 import type { PictureFacts } from '../../picture/numbers.ts';
 import { PieceSender } from '../../picture/page/pieceSender.ts';
 import { renderPng } from '../../picture/renderPng.ts';
 import type { Scene } from '../../picture/scene.ts';
 import { sceneToPdf } from '../../picture/sceneToPdf.ts';
 import { sceneToSvg } from '../../picture/sceneToSvg.ts';
-import { type ByteSink, MemorySink } from '../../picture/write/sink.ts';
-import type { BenchAnswer, BenchRequest, PicturePreview } from './benchMessages.ts';
+import { type ByteSink, MemorySink, type WriteOptions } from '../../picture/write/sink.ts';
+import type { BenchAnswer, BenchRequest, FilmForecast, PicturePreview } from './benchMessages.ts';
 import { captionOffer } from './captionOffer.ts';
 import { previewScene } from './previewScene.ts';
 
@@ -29,6 +34,7 @@ export class PictureDesk {
   readonly #fingerprint: (study: PictureFacts['study']) => string;
   #facts: PictureFacts | null = null;
   #newest = 0;
+  #film: { readonly facts: PictureFacts; readonly key: string; readonly film: Film } | null = null;
   #offer: { readonly facts: PictureFacts; readonly key: string; readonly caption: string } | null = null;
   readonly #running = new Map<number, Running>();
 
@@ -78,23 +84,36 @@ export class PictureDesk {
     return this.#facts;
   }
 
-  async #preview({ id, options, room }: Extract<BenchRequest, { kind: 'preview' }>): Promise<void> {
+  async #preview({ id, options, moment, room }: Extract<BenchRequest, { kind: 'preview' }>): Promise<void> {
     await breathe();
     if (id !== this.#newest) {
       this.#post({ kind: 'superseded', id });
       return;
     }
     const facts = this.#factsAtHand();
-    const scene = composePicture(options, facts);
+    const film = moment === null ? null : this.#filmFor(options, moment.film, facts);
+    const began = performance.now();
+    const scene = film?.sceneAt(moment!.frame) ?? composePicture(options, facts);
+    const seen = previewScene(scene, room);
     const sink = new MemorySink();
-    await renderPng(previewScene(scene, room), sink);
+    await renderPng(seen, sink);
+    const share = (seen.widthPx * seen.heightPx) / (scene.widthPx * scene.heightPx);
     const preview: PicturePreview = {
       png: sink.bytes(),
       description: describePicture(scene),
-      offeredCaption: this.#captionFor(options, facts),
-      pdfTrouble: await pdfTrouble(scene),
+      offeredCaption: film?.offeredCaption ?? this.#captionFor(options, facts),
+      pdfTrouble: film === null ? await pdfTrouble(scene) : null,
+      forecast: film === null ? null : await forecast(film, (performance.now() - began) / 1000 / share),
     };
     this.#post({ kind: 'preview', id, preview });
+  }
+
+  /** The film is kept while one looks at its frames: to lay it out takes longer than to draw one. */
+  #filmFor(options: PictureOptions, film: FilmOptions, facts: PictureFacts): Film {
+    const key = JSON.stringify([options, film]);
+    if (this.#film?.facts !== facts || this.#film.key !== key)
+      this.#film = { facts, key, film: composeFilm(options, film, facts) };
+    return this.#film.film;
   }
 
   /** Light, labels and words do not change what a caption must tell, and to ask again takes a drawing. */
@@ -116,11 +135,10 @@ export class PictureDesk {
     return this.#offer.caption;
   }
 
-  async #export({ id, format, options }: Extract<BenchRequest, { kind: 'export' }>): Promise<void> {
+  async #export({ id, format, options, film }: Extract<BenchRequest, { kind: 'export' }>): Promise<void> {
     const running: Running = { aborted: false, wake: () => undefined };
     this.#running.set(id, running);
     try {
-      const scene = composePicture(options, this.#factsAtHand());
       const sender = new PieceSender(async (bytes) => {
         if (running.aborted) throw new Cancelled();
         const taken = new Promise<void>((resolve) => {
@@ -130,10 +148,15 @@ export class PictureDesk {
         await taken;
         if (running.aborted) throw new Cancelled();
       });
-      await WRITERS[format](scene, listening(sender), {
+      const how: WriteOptions = {
         signal: running,
         onProgress: (fraction) => this.#post({ kind: 'progress', id, fraction }),
-      });
+      };
+      const facts = this.#factsAtHand();
+      if (!isFilmFormat(format))
+        await WRITERS[format](composePicture(options, facts), listening(sender), how);
+      else if (film !== null) await renderFilm(this.#filmFor(options, film, facts), format, sender, how);
+      else throw new Refusal('There is no film to write: choose one.');
       await sender.end();
       this.#post({ kind: 'done', id });
     } finally {
@@ -155,6 +178,14 @@ function listening(sink: ByteSink): ByteSink {
       last = performance.now();
     },
   };
+}
+
+/** What the browser can write, and how long a frame takes. */
+async function forecast(film: Film, secondsAFrame: number): Promise<FilmForecast> {
+  const { widthPx, heightPx, options } = film;
+  const size = { widthPx, heightPx, framesPerSecond: options.framesPerSecond };
+  const trouble = (format: FilmFormat) => filmEncoding(format, size).then(() => null, sentenceFor);
+  return { troubles: { webm: await trouble('webm'), mp4: await trouble('mp4') }, secondsAFrame };
 }
 
 class Begun extends Error {}

@@ -1,4 +1,4 @@
-import type { PictureFormat } from '../../../shared-core/picture/job.ts';
+import type { DrawnFormat } from '../../../shared-core/picture/job.ts';
 import type { PictureOptions } from '../../../shared-core/picture/options.ts';
 import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
 
@@ -27,19 +27,28 @@ export function pictureRemarks(options: PictureOptions, shells: readonly ShellSt
   return out;
 }
 
+/** Memory that drawing takes, whatever the size of a picture: it is drawn band by band. */
+export const pictureMemoryBytes = (galaxies: number): number => BASE_BYTES + BYTES_A_GALAXY * galaxies;
+
 /**
- * Why a picture is not begun for want of memory; null when there is enough, or nobody knows.
+ * Why drawing is not begun for want of memory; null when there is enough, or nobody knows.
+ * @param what is drawn, as a sentence begins
  * @param deviceGb memory of the machine as the browser tells it (at most 8)
  */
-export function memoryTrouble(galaxies: number, deviceGb: number | undefined): string | null {
-  const needed = BASE_BYTES + BYTES_A_GALAXY * galaxies;
+export function memoryTrouble(
+  what: string,
+  neededBytes: number,
+  deviceGb: number | undefined,
+): string | null {
   // Half of a machine's memory belongs to what else runs on it.
-  if (deviceGb === undefined || needed <= (deviceGb * 1e9) / 2) return null;
-  return `The picture needs about ${(needed / 1e9).toFixed(1)} GB of memory, and this machine has ${deviceGb} GB in all: cut the catalogue to fewer galaxies, or use a larger machine.`;
+  if (deviceGb === undefined || neededBytes <= (deviceGb * 1e9) / 2) return null;
+  return `${what} needs about ${(neededBytes / 1e9).toFixed(1)} GB of memory, and this machine has ${deviceGb} GB in all: cut the catalogue to fewer galaxies, or use a larger machine.`;
 }
 
-export const MIME_TYPES: Readonly<Record<PictureFormat, string>> = {
+export const MIME_TYPES: Readonly<Record<DrawnFormat, string>> = {
   png: 'image/png',
   svg: 'image/svg+xml',
   pdf: 'application/pdf',
+  webm: 'video/webm',
+  mp4: 'video/mp4',
 };

@@ -1,5 +1,11 @@
 import { Refusal } from '../../../shared-core/base/refusal.ts';
 import {
+  checkFilmSize,
+  type FilmOptions,
+  filmOptions,
+  MOST_FILM_SIDE_PX,
+} from '../../../shared-core/picture/film.ts';
+import {
   LEAST_SIDE_PX,
   MOST_SIDE_PX,
   type PictureOptions,
@@ -17,6 +23,8 @@ export type Troubles = ReadonlyMap<string, string>;
 export interface ReadPicture {
   /** Null while something cannot be used. */
   readonly options: PictureOptions | null;
+  /** The film, where one was chosen and can be used. */
+  readonly film: FilmOptions | null;
   /** By field: a sentence that says what to do. What belongs to no field stands under ''. */
   readonly troubles: Troubles;
 }
@@ -34,7 +42,12 @@ export function readChoices(choices: PictureChoices, screenPx: readonly [number,
       troubles.set(field, `${name} is ${text.trim()}: give a number from ${low} to ${high}.`);
     return 'sentence' in read ? Number.NaN : read.value;
   };
-  const size = sizeOf(choices, screenPx, number);
+  const isFilm = choices.what === 'film';
+  const size = isFilm ? filmSizeOf(choices, number) : sizeOf(choices, screenPx, number);
+  const seconds = isFilm ? number('seconds', choices.seconds, 'The length in seconds', 0.1, 600) : 0;
+  const framesPerSecond = isFilm
+    ? number('framesPerSecond', choices.framesPerSecond, 'Frames a second', 1, 60)
+    : 0;
   const slab = slabOf(choices, number);
   const depthRedshift =
     choices.depthRedshift.trim() === ''
@@ -53,11 +66,12 @@ export function readChoices(choices: PictureChoices, screenPx: readonly [number,
   });
   const { view, style, colourBy, colourMap, light, title, caption, credit, rulers, shells, transparent } =
     choices;
-  if (troubles.size > 0) return { options: null, troubles };
+  if (troubles.size > 0) return { options: null, film: null, troubles };
   try {
     const options = pictureOptions({
       ...size,
-      view,
+      // A film has a view of its own, and no clear ground.
+      view: isFilm ? 'cone' : view,
       style,
       colourBy,
       colourMap,
@@ -70,12 +84,15 @@ export function readChoices(choices: PictureChoices, screenPx: readonly [number,
       labels,
       rulers,
       shells,
-      transparent,
+      transparent: transparent && !isFilm,
     });
-    return { options, troubles };
+    if (!isFilm) return { options, film: null, troubles };
+    checkFilmSize(options.widthPx, options.heightPx);
+    const film = filmOptions({ kind: choices.filmKind, seconds, framesPerSecond, field: choices.field });
+    return { options, film, troubles };
   } catch (error) {
     if (!(error instanceof Refusal)) throw error;
-    return { options: null, troubles: new Map([['', error.message]]) };
+    return { options: null, film: null, troubles: new Map([['', error.message]]) };
   }
 }
 
@@ -96,8 +113,19 @@ function sizeOf(choices: PictureChoices, screenPx: readonly [number, number], nu
   return { ...parsePictureSize(name, PRINT_DPI), dpi: PRINT_DPI };
 }
 
+function filmSizeOf(choices: PictureChoices, number: ReadField) {
+  if (choices.filmSize !== 'own') return { ...parsePictureSize(choices.filmSize, PRINT_DPI), dpi: PRINT_DPI };
+  const side = (field: string, text: string, name: string): number =>
+    Math.round(number(field, text, name, LEAST_SIDE_PX, MOST_FILM_SIDE_PX));
+  return {
+    widthPx: side('ownWidthPx', choices.ownWidthPx, 'The width in pixels'),
+    heightPx: side('ownHeightPx', choices.ownHeightPx, 'The height in pixels'),
+    dpi: PRINT_DPI,
+  };
+}
+
 function slabOf(choices: PictureChoices, number: ReadField): PictureOptions['slab'] {
-  if (choices.view !== 'wedge' || choices.slab === 'offered') return null;
+  if (choices.what === 'film' || choices.view !== 'wedge' || choices.slab === 'offered') return null;
   if (choices.slab === 'declination')
     return {
       kind: 'declination',

@@ -1,6 +1,7 @@
 import { useEffect, useRef, useState } from 'preact/hooks';
 import { Cancelled } from '../../../shared-core/base/cancelled.ts';
-import type { PictureFormat } from '../../../shared-core/picture/job.ts';
+import type { FilmOptions } from '../../../shared-core/picture/film.ts';
+import type { DrawnFormat } from '../../../shared-core/picture/job.ts';
 import type { PictureOptions } from '../../../shared-core/picture/options.ts';
 import type { App } from '../../state/app.ts';
 import type { PictureClient } from './pictureClient.ts';
@@ -8,7 +9,7 @@ import { MIME_TYPES } from './pictureRemarks.ts';
 
 export type ExportState =
   | { readonly kind: 'idle' }
-  | { readonly kind: 'writing'; readonly format: PictureFormat; readonly fraction: number }
+  | { readonly kind: 'writing'; readonly format: DrawnFormat; readonly fraction: number }
   | { readonly kind: 'ended'; readonly sentence: string; readonly well: boolean };
 
 /**
@@ -31,17 +32,21 @@ export function usePictureExport(app: App, client: PictureClient) {
     if (open.current) setState({ kind: 'ended', sentence, well });
     else app.notices.tell(sentence, { tone: well ? 'fact' : 'problem' });
   };
-  const start = async (format: PictureFormat, options: PictureOptions): Promise<void> => {
+  const start = async (
+    format: DrawnFormat,
+    options: PictureOptions,
+    film: FilmOptions | null,
+  ): Promise<void> => {
     if (running.current !== null) return;
     const controller = new AbortController();
     running.current = controller;
     setState({ kind: 'writing', format, fraction: 0 });
-    const name = `${app.studyState.study.peek().name} ${options.view}.${format}`;
+    const name = `${app.studyState.study.peek().name} ${film?.kind ?? options.view}.${format}`;
     try {
       const done = await app.bridge.exportFile(
         name,
         MIME_TYPES[format],
-        client.pieces(format, options, {
+        client.pieces(format, options, film, {
           signal: controller.signal,
           onProgress: (fraction) => {
             if (open.current) setState({ kind: 'writing', format, fraction });

@@ -41,6 +41,8 @@ export async function renderFilm(
   const keyEvery = Math.max(1, Math.round(KEY_EVERY_SECONDS * framesPerSecond));
   try {
     for (let frame = 0; frame < frames; frame++) {
+      // Messages arrive between frames: a cancel above all.
+      await new Promise((resume) => setTimeout(resume, 0));
       throwIfCancelled(signal);
       const yuv = await drawn(film.sceneAt(frame), signal);
       const start = frameStartUs(options, frame);

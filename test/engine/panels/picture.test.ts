@@ -3,7 +3,11 @@ import type { BenchAnswer } from '../../../renderer/panels/picture/benchMessages
 import { captionOffer } from '../../../renderer/panels/picture/captionOffer.ts';
 import { FIRST_CHOICES, type PictureChoices } from '../../../renderer/panels/picture/pictureChoices.ts';
 import { PictureDesk } from '../../../renderer/panels/picture/pictureDesk.ts';
-import { memoryTrouble, pictureRemarks } from '../../../renderer/panels/picture/pictureRemarks.ts';
+import {
+  memoryTrouble,
+  pictureMemoryBytes,
+  pictureRemarks,
+} from '../../../renderer/panels/picture/pictureRemarks.ts';
 import { previewScene } from '../../../renderer/panels/picture/previewScene.ts';
 import { readChoices } from '../../../renderer/panels/picture/readChoices.ts';
 import { composePicture } from '../../../renderer/picture/composePicture.ts';
@@ -74,6 +78,27 @@ describe('what stands on the bench', () => {
     expect(read({ depthRedshift: '-1' }).troubles.get('depthRedshift')).toMatch(/ends is -1: give a number/);
   });
 
+  it('is a film by choice, with a size, length and view of its own', () => {
+    const film = read({ what: 'film', view: 'sky', transparent: true, size: 'a0' });
+    expect(film.options).toEqual(pictureOptions({ widthPx: 1920, heightPx: 1080 }));
+    expect(film.film).toEqual({ kind: 'turntable', seconds: 12, framesPerSecond: 30, field: 1 });
+    expect(read().film).toBeNull();
+  });
+
+  it.each([
+    [{ seconds: '0' }, 'seconds', /The length in seconds is 0: give a number from 0\.1 to 600/],
+    [{ seconds: 'long' }, 'seconds', /The length in seconds is "long"/],
+    [{ framesPerSecond: '1000' }, 'framesPerSecond', /Frames a second is 1000/],
+    [{ filmSize: 'own', ownWidthPx: '1e6' }, 'ownWidthPx', /give a number from 64 to 4096/],
+    [{ filmSize: 'own', ownWidthPx: '1281', ownHeightPx: '720' }, '', /even sides, such as 1282/],
+    [{ seconds: '600', framesPerSecond: '60' }, '', /36000 frames/],
+    [{ framesPerSecond: '29.97' }, '', /29\.97 frames a second: give a whole number/],
+  ] as const)('a film of %j is refused at its field', (part, at, sentence) => {
+    const { options, film, troubles } = read({ what: 'film', ...part });
+    expect([options, film]).toEqual([null, null]);
+    expect(troubles.get(at)).toMatch(sentence);
+  });
+
   it('refuses a title longer than a picture takes', () => {
     expect(read({ title: 'x'.repeat(2001) }).troubles.get('')).toMatch(/title/);
   });
@@ -93,9 +118,12 @@ describe('remarks', () => {
   });
 
   it('tell of memory that is short before anything is begun', () => {
-    expect(memoryTrouble(10_000_000, 2)).toMatch(/needs about 1\.2 GB of memory, and this machine has 2 GB/);
-    expect(memoryTrouble(10_000_000, 8)).toBeNull();
-    expect(memoryTrouble(10_000_000, undefined)).toBeNull();
+    const needed = pictureMemoryBytes(10_000_000);
+    expect(memoryTrouble('The picture', needed, 2)).toMatch(
+      /needs about 1\.2 GB of memory, and this machine has 2 GB/,
+    );
+    expect(memoryTrouble('The picture', needed, 8)).toBeNull();
+    expect(memoryTrouble('The picture', needed, undefined)).toBeNull();
   });
 });
 
@@ -131,7 +159,7 @@ async function exported(options: object, giveUpAfter = Number.POSITIVE_INFINITY)
   }, fingerprintOf);
   const { study, selected, background, density, columns } = facts;
   await desk.take({ kind: 'facts', facts: { study, selected, background, density, columns } });
-  await desk.take({ kind: 'export', id: 7, format: 'svg', options: { ...small(), ...options } });
+  await desk.take({ kind: 'export', id: 7, format: 'svg', options: { ...small(), ...options }, film: null });
   return answers;
 }
 
