@@ -9,6 +9,7 @@ import { WorthPanel } from './panels/WorthPanel.tsx';
 import { Stage } from './stage/Stage.tsx';
 import { useApp } from './state/app.ts';
 import { DepthStrip } from './strip/DepthStrip.tsx';
+import { InTurn } from './ui/InTurn.tsx';
 
 /** The window: head on top; catalogue, region and cosmology at the left; cone and strip; ledger and sheet. */
 export function Frame() {
@@ -24,18 +25,26 @@ export function Frame() {
         <HeadBar />
       </header>
       <aside class="desk" aria-label="Catalogue, region and cosmology">
-        <DeskPanel />
+        <InTurn>
+          <DeskPanel />
+        </InTurn>
       </aside>
       <main class="centre">
         <section class="stage" aria-label="The cone">
-          <Stage />
+          <InTurn>
+            <Stage />
+          </InTurn>
         </section>
         <section class="depth" aria-label="Depth strip">
-          <DepthStrip />
+          <InTurn>
+            <DepthStrip />
+          </InTurn>
         </section>
       </main>
       <aside class="worth" aria-label="Shell ledger and sheet">
-        <WorthPanel />
+        <InTurn>
+          <WorthPanel />
+        </InTurn>
       </aside>
       <Notices />
       <QuestionDialog />

@@ -22,14 +22,13 @@ import {
   viewPose,
   zoomed,
 } from './geometry/poses.ts';
-import { type PreparedField, prepareField } from './geometry/preparedField.ts';
+import { type PreparedField, prepareFields } from './geometry/preparedField.ts';
 import type { Pose, Viewport } from './geometry/projection.ts';
 import type { Vec3 } from './geometry/vector.ts';
 import { mixTables, type RadiusTable, radiusTable, sameTable } from './points/radiusTable.ts';
 import type {
   AxisInsets,
   AxisWindow,
-  FieldInput,
   FootprintInput,
   RadialReading,
   RadialScaleInput,
@@ -46,15 +45,6 @@ const SEAT_ROOM: Margins = { left: 60, right: 60, top: 30, bottom: 30 };
 const NEAREST_SCALE = 1e-8;
 const FARTHEST_SCALE = 0.05;
 const ORBIT_RADIANS_PER_PIXEL = 0.0075;
-
-/** No outline: the field is everything. */
-const WHOLE_SKY: FieldInput = {
-  centreRaDeg: 0,
-  centreDecDeg: 0,
-  radiusDeg: 180,
-  positionAngleDeg: 90,
-  rings: [],
-};
 
 /** What is on screen at one moment of a transition. */
 export interface Shown {
@@ -121,7 +111,12 @@ export class ConeModel {
   }
 
   setFootprint(input: FootprintInput): void {
-    this.fields = (input.fields.length > 0 ? input.fields : [WHOLE_SKY]).map(prepareField);
+    this.setFields(prepareFields(input), input);
+  }
+
+  /** @param fields made of the footprint by `prepareFields` */
+  setFields(fields: readonly PreparedField[], input: FootprintInput): void {
+    this.fields = fields;
     this.wide = input.wide;
     this.estimated = input.estimated ?? false;
     this.chosenFactors.clear();

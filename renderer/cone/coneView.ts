@@ -4,6 +4,7 @@ import { shellColours } from '../colour/shellColours.ts';
 import { type ConeFrame, coneFrame, emphasisOf, partsOf } from './coneFrame.ts';
 import { ConeLayers } from './coneLayers.ts';
 import { ConeModel } from './coneModel.ts';
+import type { PreparedField } from './geometry/preparedField.ts';
 import { GlStage } from './graphics/glStage.ts';
 import { listen } from './navigation.ts';
 import { Pointing } from './pointing.ts';
@@ -26,6 +27,7 @@ import type {
   ViewName,
   ViewState,
 } from './types.ts';
+import { ConeWork } from './work/coneWork.ts';
 
 const TRANSITION_MS = 520;
 /** So long after the last touch the picture counts as at rest. */
@@ -40,6 +42,7 @@ export class ConeView {
   private readonly stage: Stage;
   private readonly gl: GlStage;
   private readonly model = new ConeModel();
+  private readonly work = new ConeWork();
   private readonly painter: PointPainter;
   private readonly layers: ConeLayers;
   private readonly pointing: Pointing;
@@ -65,6 +68,10 @@ export class ConeView {
   private requestedAt = 0;
   private askedAt = 0;
   private lastState = '';
+  /** A region that is being made ready, with the galaxies that came since (undefined: none came). */
+  private preparing: { galaxies: GalaxyInput | null | undefined } | null = null;
+  /** What is asked of the view while a region is on its way; null while none is. */
+  private viewAsked: (() => void)[] | null = null;
   private disposed = false;
 
   /** @param container an element with a size; the cone fills it */
@@ -72,7 +79,7 @@ export class ConeView {
     this.events = events;
     this.stage = new Stage(container, () => this.resized());
     this.gl = new GlStage(this.stage.solids, (state) => this.drawingStateChanged(state));
-    this.painter = new PointPainter(this.gl, () => this.invalidate());
+    this.painter = new PointPainter(this.gl, this.work, () => this.invalidate());
     this.layers = new ConeLayers(this.stage, this.gl);
     this.pointing = new Pointing({
       painter: this.painter,
@@ -93,11 +100,18 @@ export class ConeView {
     this.drawingStateChanged(this.gl.state);
   }
 
-  /** The galaxies; null for none. Large sets are taken in slices, and the old picture stays until they are ready. */
+  /** The galaxies; null for none. The old picture stays until they and the region are ready. */
   setGalaxies(galaxies: GalaxyInput | null): void {
-    this.pointing.forget();
-    this.painter.galaxies.setInput(galaxies);
+    this.holdGalaxies();
+    if (this.preparing) this.preparing.galaxies = galaxies;
+    else this.painter.galaxies.setInput(galaxies);
     this.invalidate();
+  }
+
+  /** Other galaxies will come: the picture stays, and none of it can be pointed at. */
+  holdGalaxies(): void {
+    this.pointing.forget();
+    this.painter.galaxies.hold();
   }
 
   setColouring(colouring: ColouringInput): void {
@@ -113,13 +127,20 @@ export class ConeView {
     this.invalidate();
   }
 
-  /** The observed region; takes the view that fits it. */
+  /** The observed region; takes the view that fits it. The old picture stays until it is ready. */
   setFootprint(footprint: FootprintInput): void {
-    this.change(0, () => this.model.setFootprint(footprint));
-    this.painter.galaxies.setCentres(
-      Float64Array.from(this.model.fields.flatMap((field) => [...field.centre])),
-    );
-    this.layers.solids.setMeshes(this.model.fields.map((field) => field.mesh));
+    const waiting = { galaxies: this.preparing?.galaxies };
+    this.preparing = waiting;
+    this.viewAsked = [];
+    void this.work.fields(footprint).then((fields) => {
+      // A newer region is on its way.
+      if (this.preparing !== waiting || this.disposed) return;
+      this.preparing = null;
+      const centres = Float64Array.from(fields.flatMap((field) => [...field.centre]));
+      const { galaxies } = this.painter;
+      galaxies.setCentres(centres, () => this.takeFields(fields, footprint));
+      if (waiting.galaxies !== undefined) galaxies.setInput(waiting.galaxies);
+    });
   }
 
   setShells(shells: ShellsInput): void {
@@ -165,21 +186,21 @@ export class ConeView {
   }
 
   setView(view: ViewName): void {
-    this.change(TRANSITION_MS, () => this.model.setView(view));
+    this.changeView(() => this.model.setView(view));
   }
 
   /** One field of several, seen by itself; steps wrap around. */
   stepField(step: number): void {
-    this.change(TRANSITION_MS, () => this.model.setCurrent(this.model.current + step));
+    this.changeView(() => this.model.setCurrent(this.model.current + step));
   }
 
   setField(field: number): void {
-    this.change(TRANSITION_MS, () => this.model.setCurrent(field));
+    this.changeView(() => this.model.setCurrent(field));
   }
 
   /** null takes the proposal for the field. */
   setSidewaysFactor(factor: number | null): void {
-    this.change(TRANSITION_MS, () => this.model.setSidewaysFactor(factor));
+    this.changeView(() => this.model.setSidewaysFactor(factor));
   }
 
   /** Rings around galaxies (rows of the catalogue), and a line with a text between the first two. */
@@ -227,10 +248,26 @@ export class ConeView {
     clearTimeout(this.restTimer);
     this.stopListening();
     this.painter.dispose();
+    this.work.dispose();
     this.layers.dispose();
     this.pointing.dispose();
     this.gl.dispose();
     this.stage.dispose();
+  }
+
+  private takeFields(fields: readonly PreparedField[], footprint: FootprintInput): void {
+    this.change(0, () => this.model.setFields(fields, footprint));
+    this.layers.solids.setMeshes(fields.map((field) => field.mesh));
+    if (this.preparing) return;
+    const asked = this.viewAsked ?? [];
+    this.viewAsked = null;
+    for (const change of asked) this.change(0, change);
+  }
+
+  /** What is asked of the view while a region is made ready holds for that one too. */
+  private changeView(change: () => void): void {
+    this.viewAsked?.push(change);
+    this.change(TRANSITION_MS, change);
   }
 
   private takeAsked(): void {
@@ -351,6 +388,7 @@ export class ConeView {
     if (image) this.layers.drawTogether(image, points.pixelRatio, frame, this.model, look, galaxies);
     else this.layers.drawAbove(frame, this.model, look, galaxies);
     this.tellState();
+    if (galaxies.store) this.gl.look();
     const total = this.painter.galaxies.store?.count ?? 0;
     const whole = points.fraction === 1 && points.pixelRatio === this.stage.pixelRatio;
     this.events.onFrame?.({

@@ -54,12 +54,12 @@ export class Pointing {
   /** The galaxy drawn nearest to a pixel, within reach. */
   async galaxyAt(xPx: number, yPx: number): Promise<GalaxyHit | null> {
     const { painter } = this.source;
-    const { store } = painter.galaxies;
-    if (!store) return null;
+    const { store, current } = painter.galaxies;
+    if (!store || !current) return null;
     const parts = partsOf(this.source.frame(), painter.galaxies);
     // Workers that end in the middle find nothing; the next search asks new ones.
     const best = await painter.pick(parts, xPx, yPx, REACH_PX).catch(() => null);
-    if (!best || store !== painter.galaxies.store) return null;
+    if (!best || store !== painter.galaxies.store || !painter.galaxies.current) return null;
     return { index: store.rows[best.slot]!, xPx: best.xPx, yPx: best.yPx };
   }
 

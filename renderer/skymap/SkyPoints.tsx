@@ -1,8 +1,11 @@
 import { useEffect, useRef } from 'preact/hooks';
+import { runSliced } from '../cone/points/slices.ts';
 import { useApp } from '../state/app.ts';
 import type { MapBox } from './skyFrames.ts';
 import { countPoints, tonePoints } from './skyPoints.ts';
 import type { SkyFrame } from './skyProjection.ts';
+
+const NONE = { x: new Float32Array(0), y: new Float32Array(0), z: new Float32Array(0) };
 
 /** The galaxies on a canvas, in the colour of the text. */
 export function SkyPoints(props: {
@@ -16,21 +19,28 @@ export function SkyPoints(props: {
   const selected = engine.selected.value;
   const theme = view.theme.value;
   useEffect(() => {
-    // The theme's colours stand in the page by the next frame.
-    const wait = requestAnimationFrame(() => {
+    const job = new AbortController();
+    const draw = async () => {
       const element = canvas.current;
       const context = element?.getContext('2d', { willReadFrequently: true });
       if (element == null || context == null) return;
       const ratio = devicePixelRatio;
-      element.width = Math.max(1, Math.round(size.widthPx * ratio));
-      element.height = Math.max(1, Math.round(size.heightPx * ratio));
-      if (selected === null) return;
-      const counted = countPoints(selected.directions, frame, box, size, ratio);
+      const directions = selected?.directions ?? NONE;
+      const counted = await runSliced(countPoints(directions, frame, box, size, ratio), job.signal);
+      if (counted === null) return;
       const image = context.createImageData(counted.width, counted.height);
       tonePoints(counted, colourOf(getComputedStyle(element).color), image.data);
+      // A new size empties the canvas: not before the picture is there.
+      if (element.width !== counted.width) element.width = counted.width;
+      if (element.height !== counted.height) element.height = counted.height;
       context.putImageData(image, 0, 0);
-    });
-    return () => cancelAnimationFrame(wait);
+    };
+    // The theme's colours stand in the page by the next frame.
+    const wait = requestAnimationFrame(() => void draw());
+    return () => {
+      cancelAnimationFrame(wait);
+      job.abort();
+    };
   }, [selected, theme, frame, box, size]);
   return (
     // biome-ignore lint/a11y/noAriaHiddenOnFocusable: a canvas takes no focus; the caption says what it shows

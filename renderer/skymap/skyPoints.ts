@@ -13,18 +13,21 @@ export interface SkyCounts {
   readonly counts: Uint16Array;
 }
 
+/** Galaxies counted before giving way. */
+const SLICE = 4096;
+
 /**
- * Counts galaxies on the pixels of the map; of very many, every n-th. They come sorted by redshift, so that every
- * n-th is an even sample of the sky.
+ * Steps that count galaxies on the pixels of the map; of very many, every n-th. They come sorted by redshift, so that
+ * every n-th is an even sample of the sky.
  * @param pixelRatio device pixels in a CSS pixel
  */
-export function countPoints(
+export function* countPoints(
   { x, y, z }: Directions,
   frame: SkyFrame,
   box: MapBox,
   size: { readonly widthPx: number; readonly heightPx: number },
   pixelRatio: number,
-): SkyCounts {
+): Generator<void, SkyCounts> {
   const width = Math.max(1, Math.round(size.widthPx * pixelRatio));
   const height = Math.max(1, Math.round(size.heightPx * pixelRatio));
   const counts = new Uint16Array(width * height);
@@ -32,7 +35,8 @@ export function countPoints(
   const step = Math.max(1, Math.ceil(x.length / MOST_POINTS));
   const dot = dotOffsets(dotRadius(x.length, pixelRatio));
   const at = { x: 0, y: 0 };
-  for (let i = 0; i < x.length; i += step) {
+  for (let i = 0, n = 1; i < x.length; i += step, n++) {
+    if (n % SLICE === 0) yield;
     project(x[i]!, y[i]!, z[i]!, at);
     if (!(at.x >= box.left && at.x < box.right && at.y >= box.top && at.y < box.bottom)) continue;
     const [px, py] = [Math.floor(at.x * pixelRatio), Math.floor(at.y * pixelRatio)];

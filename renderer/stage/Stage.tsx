@@ -80,18 +80,18 @@ export function Stage() {
   const sideways = useComputed(() => studyState.study.value.look.sideways);
 
   useSignalEffect(() => {
-    const { selected, background } = engine;
+    const { selected, background, failure } = engine;
     if (cone.value === null) return;
     const [galaxies, distances] = [selected.value, background.value];
-    cone.value.setGalaxies(
-      galaxies === null || distances === null
-        ? null
-        : {
-            count: galaxies.sample.count,
-            directions: galaxies.directions,
-            comovingMpc: distances.comovingMpc,
-          },
-    );
+    if (galaxies !== null && distances !== null)
+      cone.value.setGalaxies({
+        count: galaxies.sample.count,
+        directions: galaxies.directions,
+        comovingMpc: distances.comovingMpc,
+      });
+    // Their distances are on the way: the old picture stays.
+    else if (galaxies !== null && failure.value === null) cone.value.holdGalaxies();
+    else cone.value.setGalaxies(null);
   });
   // Before the catalogue is in, and in a plan without one, the region alone says what the cone looks like.
   const region = useComputed(() => studyState.study.value.region);

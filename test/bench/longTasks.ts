@@ -1,22 +1,11 @@
 import type { Browser, Page } from '@playwright/test';
 
-/** Tasks over 50 ms (the browser's own measure of one that can be felt) since the last call, in milliseconds. */
-export async function longTasks(page: Page): Promise<number[]> {
-  return page.evaluate(() => {
-    const kept = (globalThis as unknown as { longTasks: number[] }).longTasks;
-    return kept.splice(0);
-  });
-}
-
-/** Counts them from the first script of the page on. */
-export async function watchLongTasks(page: Page): Promise<void> {
-  await page.addInitScript(() => {
-    const kept: number[] = [];
-    Object.assign(globalThis, { longTasks: kept });
-    new PerformanceObserver((list) => {
-      for (const entry of list.getEntries()) kept.push(entry.duration);
-    }).observe({ type: 'longtask', buffered: true });
-  });
+/** A task of the page, in milliseconds: by the clock, and what its thread itself ran (the rest it waited for a core). */
+export interface PageTask {
+  readonly clockMs: number;
+  readonly ownMs: number;
+  /** The functions in which most of its time went, where stacks were asked for. */
+  readonly stacks: string;
 }
 
 interface TraceEvent {
@@ -46,66 +35,78 @@ interface Node {
   readonly callFrame: { readonly functionName: string; readonly url?: string; readonly lineNumber?: number };
 }
 
-const CATEGORIES = [
-  'devtools.timeline',
-  'disabled-by-default-devtools.timeline',
-  'disabled-by-default-v8.cpu_profiler',
-];
+const CATEGORIES = ['devtools.timeline', 'disabled-by-default-devtools.timeline', 'blink.user_timing'];
+const STACKS = 'disabled-by-default-v8.cpu_profiler';
+const MARK = 'conewright-bench';
 
-/** Records a page; `stop` tells its long tasks with the functions in which most of their time went. */
-export async function traceTasks(browser: Browser, page: Page): Promise<{ stop(): Promise<string[]> }> {
-  await browser.startTracing(page, { categories: CATEGORIES });
+/** Records a page; `stop` tells its tasks of over so many milliseconds by the clock. */
+export async function traceTasks(
+  browser: Browser,
+  page: Page,
+  { stacks, overMs }: { readonly stacks: boolean; readonly overMs: number },
+): Promise<{ stop(): Promise<PageTask[]> }> {
+  await browser.startTracing(page, { categories: stacks ? [...CATEGORIES, STACKS] : CATEGORIES });
   // The profiler lists all code that is there with the first task that it sees: that task is nobody's.
   await page.evaluate(() => new Promise((resolve) => setTimeout(resolve, 300)));
-  await longTasks(page).catch(() => []);
+  const from = await page.evaluate((name) => performance.mark(name).name, MARK);
   return {
     stop: async () => {
+      // Once more: another page may stand in another process.
+      await page.evaluate((name) => performance.mark(name).name, from);
       const text = (await browser.stopTracing()).toString('utf8');
-      return taskLines((JSON.parse(text) as { traceEvents: TraceEvent[] }).traceEvents);
+      return tasksOf((JSON.parse(text) as { traceEvents: TraceEvent[] }).traceEvents, overMs);
     },
   };
 }
 
-function taskLines(events: readonly TraceEvent[]): string[] {
-  const mains = new Set(
-    events
-      .filter((e) => e.name === 'thread_name' && e.args.name === 'CrRendererMain')
-      .map((e) => `${e.pid} ${e.tid}`),
-  );
-  const tasks = events.filter(
-    (e) => e.name === 'RunTask' && mains.has(`${e.pid} ${e.tid}`) && (e.dur ?? 0) > 50_000,
-  );
-  const samples = samplesOf(events.filter((e) => e.name !== 'Profile' || mains.has(`${e.pid} ${e.tid}`)));
-  return tasks.map((task) => {
-    const end = task.ts + task.dur!;
-    const inside = (at: number) => at >= task.ts && at <= end;
-    const self = new Map<string, number>();
-    const whole = new Map<string, number>();
-    for (const { pid, at, spent, stack } of samples) {
-      if (pid !== task.pid || !inside(at)) continue;
-      self.set(stack[0]!, (self.get(stack[0]!) ?? 0) + spent);
-      for (const name of new Set(stack)) whole.set(name, (whole.get(name) ?? 0) + spent);
-    }
-    // What the browser itself did: layout, painting, garbage.
-    for (const e of events) {
-      if (e.pid !== task.pid || e.tid !== task.tid || e === task || e.name === 'RunTask') continue;
-      if (inside(e.ts) && (e.dur ?? 0) > 3000)
-        whole.set(`<${e.name}>`, (whole.get(`<${e.name}>`) ?? 0) + e.dur!);
-    }
-    const top = (map: Map<string, number>, n: number) =>
-      [...map]
-        .sort((a, b) => b[1] - a[1])
-        .slice(0, n)
-        .map(([name, spent]) => `${name} ${Math.round(spent / 1000)}`)
-        .join(', ');
-    const [wall, ran] = [task.dur!, task.tdur ?? task.dur!].map((micro) => Math.round(micro / 1000));
-    return `${wall} ms (${ran} of the processor); own: ${top(self, 5)}; with what they call: ${top(whole, 16)}`;
-  });
+function tasksOf(events: readonly TraceEvent[], overMs: number): PageTask[] {
+  const marks = events.filter((e) => e.name === MARK);
+  const since = Math.min(...marks.map((e) => e.ts));
+  const threads = new Set(marks.map((e) => `${e.pid} ${e.tid}`));
+  const own = events.filter((e) => threads.has(`${e.pid} ${e.tid}`));
+  const tasks = own.filter((e) => e.name === 'RunTask' && e.ts > since && (e.dur ?? 0) > 1000 * overMs);
+  const samples = samplesOf(events.filter((e) => e.name !== 'Profile' || threads.has(`${e.pid} ${e.tid}`)));
+  return tasks.map((task) => ({
+    clockMs: task.dur! / 1000,
+    ownMs: (task.tdur ?? task.dur!) / 1000,
+    stacks: samples.length === 0 ? '' : stacksOf(task, own, samples),
+  }));
+}
+
+function stacksOf(task: TraceEvent, own: readonly TraceEvent[], samples: readonly Sample[]): string {
+  const inside = (at: number) => at >= task.ts && at <= task.ts + task.dur!;
+  const self = new Map<string, number>();
+  const whole = new Map<string, number>();
+  const add = (map: Map<string, number>, name: string, spent: number) =>
+    map.set(name, (map.get(name) ?? 0) + spent);
+  for (const { pid, at, spent, stack } of samples) {
+    if (pid !== task.pid || !inside(at)) continue;
+    add(self, stack[0]!, spent);
+    for (const name of new Set(stack)) add(whole, name, spent);
+  }
+  // What the browser itself did: layout, painting, garbage.
+  for (const e of own)
+    if (e !== task && e.name !== 'RunTask' && inside(e.ts) && (e.dur ?? 0) > 3000)
+      add(whole, `<${e.name}>`, e.dur!);
+  const top = (map: Map<string, number>, n: number) =>
+    [...map]
+      .sort((a, b) => b[1] - a[1])
+      .slice(0, n)
+      .map(([name, spent]) => `${name} ${Math.round(spent / 1000)}`)
+      .join(', ');
+  return `in: ${top(self, 5)}; with what they call: ${top(whole, 14)}`;
+}
+
+interface Sample {
+  readonly pid: number;
+  readonly at: number;
+  readonly spent: number;
+  readonly stack: readonly string[];
 }
 
 /** Samples of the profiles that begin among the events, each with the names from the innermost function outward. */
-function samplesOf(events: readonly TraceEvent[]) {
-  const out: { pid: number; at: number; spent: number; stack: string[] }[] = [];
+function samplesOf(events: readonly TraceEvent[]): Sample[] {
+  const out: Sample[] = [];
   const profiles = new Map<string, { at: number; nodes: Map<number, Node> }>();
   for (const e of events) {
     const key = `${e.pid} ${e.id}`;

@@ -1,4 +1,4 @@
-import type { FieldInput } from '../types.ts';
+import type { FieldInput, FootprintInput } from '../types.ts';
 import { fieldFrame, type LateralExtent, lateralExtent } from './fieldFrame.ts';
 import { ringDirections, simplerRing } from './rings.ts';
 import { type ShellMesh, shellMesh } from './shellMesh.ts';
@@ -39,6 +39,20 @@ const COARSE_DEG = 6;
 
 /** A cap of this radius rises by a seventh of its width. */
 const FLAT_RADIUS_DEG = 32;
+
+/** No outline: the field is everything. */
+const WHOLE_SKY: FieldInput = {
+  centreRaDeg: 0,
+  centreDecDeg: 0,
+  radiusDeg: 180,
+  positionAngleDeg: 90,
+  rings: [],
+};
+
+/** The fields of a footprint, made ready; the whole sky is one. */
+export function prepareFields({ fields }: FootprintInput): PreparedField[] {
+  return (fields.length > 0 ? fields : [WHOLE_SKY]).map(prepareField);
+}
 
 /** Frame, outline, solid and edges of a field. */
 export function prepareField(field: FieldInput): PreparedField {

@@ -13,14 +13,12 @@ export class GlStage {
   private readonly canvas: HTMLCanvasElement;
   private readonly changed: (state: DrawingState) => void;
   private readonly end = new AbortController();
+  private looked = false;
 
   constructor(canvas: HTMLCanvasElement, changed: (state: DrawingState) => void) {
     this.canvas = canvas;
     this.changed = changed;
     const { signal } = this.end;
-    void findGpu(signal).then((found) => {
-      if (found && !signal.aborted) this.start();
-    });
     canvas.addEventListener(
       'webglcontextlost',
       (event) => {
@@ -38,6 +36,16 @@ export class GlStage {
 
   get usable(): boolean {
     return this.state.webgl === 'ready' && this.renderer !== null;
+  }
+
+  /** Looks for a GPU, once. While one is looked for the browser may keep other canvases waiting: not before a picture. */
+  look(): void {
+    if (this.looked) return;
+    this.looked = true;
+    const { signal } = this.end;
+    void findGpu(signal).then((found) => {
+      if (found && !signal.aborted) this.start();
+    });
   }
 
   /** Makes the context if there is none yet, whatever stands behind it: without a GPU the page waits for that. */

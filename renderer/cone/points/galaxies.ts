@@ -1,7 +1,6 @@
 import type { ColouringInput, GalaxyInput, ShellInput } from '../types.ts';
-import { indexer } from './colouring.ts';
-import type { PointLayout } from './pointArrays.ts';
-import { PointStore } from './pointStore.ts';
+import type { ConeMemory, ConeWork } from '../work/coneWork.ts';
+import type { PointStore } from './pointStore.ts';
 import { fillRadius, type RadiusTable, radiusTable } from './radiusTable.ts';
 import { runSliced } from './slices.ts';
 
@@ -10,21 +9,18 @@ export type GalaxiesChange = 'store' | 'values' | 'radii';
 /** Up to so many galaxies a change of radius is done at once; beyond, an even sample moves and the rest follows. */
 const AT_ONCE = 300_000;
 
-/** Where the points of the store live. */
-export interface PointMemory {
-  readonly base: number;
-  allocate(layout: PointLayout): ArrayBufferLike;
-}
-
-const OWN_MEMORY: PointMemory = { base: 0, allocate: (layout) => new ArrayBuffer(layout.end) };
-
-/** The galaxies as they are drawn: builds the store in slices, keeps colours and radii up to date. */
+/** The galaxies as they are drawn: has the store built, keeps colours and radii up to date. */
 export class Galaxies {
   store: PointStore | null = null;
   /** The part of each field's range whose radii are right. */
   ready = 1;
+  /** False while the galaxies drawn are not (or not known to be) those of the input: then none can be pointed at. */
+  current = false;
   private input: GalaxyInput | null = null;
+  /** Of the fields that the store is sorted by, and of those that it is to be sorted by. */
   private centres: Float64Array = new Float64Array(0);
+  private nextCentres = this.centres;
+  private whenSorted: (() => void) | null = null;
   private table: RadiusTable = radiusTable([0, 1], [0, 1]);
   private colouring: ColouringInput = { kind: 'radius', map: 'harbour' };
   private shells: readonly ShellInput[] = [];
@@ -32,23 +28,35 @@ export class Galaxies {
   private colourJob: AbortController | null = null;
   private radiusJob: AbortController | null = null;
   private readonly changed: (what: GalaxiesChange) => void;
-  private readonly memory: PointMemory;
+  private readonly work: ConeWork;
+  private readonly memory: ConeMemory;
 
-  constructor(changed: (what: GalaxiesChange) => void, memory: PointMemory = OWN_MEMORY) {
+  constructor(changed: (what: GalaxiesChange) => void, work: ConeWork, memory: ConeMemory) {
     this.changed = changed;
+    this.work = work;
     this.memory = memory;
   }
 
+  /** Others will come: what is drawn stays, and none of it can be pointed at. */
+  hold(): void {
+    this.current = false;
+    this.building?.abort();
+    this.colourJob?.abort();
+  }
+
   setInput(input: GalaxyInput | null): void {
+    this.hold();
     this.input = input;
     this.rebuild();
   }
 
-  setCentres(centres: Float64Array): void {
+  /** Sorts the galaxies by other fields; `sorted` is called when they are, and the picture may change. */
+  setCentres(centres: Float64Array, sorted: () => void): void {
     const same = centres.length === this.centres.length && centres.every((v, i) => v === this.centres[i]);
-    if (same) return;
-    this.centres = centres;
-    if (this.input) this.rebuild();
+    this.nextCentres = centres;
+    this.whenSorted = sorted;
+    if (same || !this.input) this.takeCentres();
+    else this.rebuild();
   }
 
   setColouring(colouring: ColouringInput): void {
@@ -107,6 +115,7 @@ export class Galaxies {
   }
 
   dispose(): void {
+    this.whenSorted = null;
     this.building?.abort();
     this.colourJob?.abort();
     this.radiusJob?.abort();
@@ -114,50 +123,56 @@ export class Galaxies {
     this.input = null;
   }
 
+  private takeCentres(): void {
+    this.centres = this.nextCentres;
+    const sorted = this.whenSorted;
+    this.whenSorted = null;
+    sorted?.();
+  }
+
   private rebuild(): void {
     this.building?.abort();
     this.colourJob?.abort();
     this.radiusJob?.abort();
     this.radiusJob = null;
-    const { input, table, memory } = this;
+    const { input, table, colouring, shells } = this;
     if (!input || input.count === 0) {
       this.store = null;
+      this.current = true;
+      this.takeCentres();
       this.changed('store');
       return;
     }
     const job = new AbortController();
     this.building = job;
-    const index = indexer(this.colouring, this.shells, table);
-    const steps = function* (centres: Float64Array): Generator<void, PointStore> {
-      const store = yield* PointStore.build(input, centres, table, memory.base, (layout) =>
-        memory.allocate(layout),
-      );
-      yield* store.colour(index);
-      return store;
-    };
-    void runSliced(steps(this.centres), job.signal).then((store) => {
-      if (!store) return;
-      const stale = table !== this.table;
+    const basis = { galaxies: input, centres: this.nextCentres, table, colouring, shells };
+    void this.work.store(basis, this.memory, job.signal).then((store) => {
+      if (!store || job.signal.aborted) return;
+      this.building = null;
       this.store = store;
+      this.current = true;
       this.ready = 1;
+      this.takeCentres();
       this.changed('store');
-      if (stale) {
+      if (table !== this.table) {
         this.ready = 0;
         this.setTable(this.table, false);
       }
-      this.recolour();
+      const asColoured =
+        colouring === this.colouring && (shells === this.shells || colouring.kind !== 'shell');
+      if (!asColoured) this.recolour();
     });
   }
 
   private recolour(): void {
     this.colourJob?.abort();
-    const { store } = this;
-    if (!store) return;
+    const { store, colouring, shells, table } = this;
+    // The colours of other galaxies say nothing of these; a store that is being built takes the newest with it.
+    if (!store || !this.current) return;
     const job = new AbortController();
     this.colourJob = job;
-    const index = indexer(this.colouring, this.shells, this.table);
-    void runSliced(store.colour(index), job.signal).then((done) => {
-      if (done !== null) this.changed('values');
+    void this.work.colours(store, { colouring, shells, table }, job.signal).then((done) => {
+      if (done && !job.signal.aborted) this.changed('values');
     });
   }
 

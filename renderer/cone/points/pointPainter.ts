@@ -1,6 +1,7 @@
 import { type PointHit, pickPoint } from '../geometry/pickPoint.ts';
 import type { Viewport } from '../geometry/projection.ts';
 import type { GlStage } from '../graphics/glStage.ts';
+import type { ConeWork } from '../work/coneWork.ts';
 import { crowding, exposure, NOTHING, pointSizePx } from './exposure.ts';
 import { Galaxies, type GalaxiesChange } from './galaxies.ts';
 import type { Emphasis, PointFrame, PointPart } from './pointLayer.ts';
@@ -36,13 +37,15 @@ export class PointPainter {
   private webgl: WebglPoints | null = null;
   private restarts = 0;
 
-  constructor(gl: GlStage, changed: () => void) {
+  constructor(gl: GlStage, work: ConeWork, changed: () => void) {
     this.gl = gl;
     this.changed = changed;
     this.startPool();
-    this.galaxies = new Galaxies((what) => this.galaxiesChanged(what), {
+    this.galaxies = new Galaxies((what) => this.galaxiesChanged(what), work, {
       base: RESERVED_BYTES,
       allocate: (layout) => this.pool?.allocate(layout) ?? new ArrayBuffer(layout.end),
+      rows: (slots) => new Uint32Array(slots),
+      adopt: (memory) => this.pool?.adopt(memory) ?? false,
     });
     this.takeGl();
   }

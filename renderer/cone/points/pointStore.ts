@@ -9,8 +9,26 @@ export interface FieldRange {
   readonly count: number;
 }
 
+/** What there is to a store beside its memory: it can be sent to and from a worker. */
+export interface StoreParts {
+  readonly count: number;
+  readonly ranges: readonly FieldRange[];
+  readonly layout: PointLayout;
+  readonly rows: Uint32Array;
+}
+
+/** Where a store lives. */
+export interface StoreMemory {
+  /** Bytes before the points. */
+  readonly base: number;
+  /** A buffer that holds the layout. */
+  allocate(layout: PointLayout): ArrayBufferLike;
+  /** Numbers for so many slots. */
+  rows(slots: number): Uint32Array;
+}
+
 /** Rows worked on before giving way. */
-const SLICE = 16384;
+const SLICE = 8192;
 
 const DEGREE = Math.PI / 180;
 
@@ -23,31 +41,25 @@ export class PointStore {
   /** Catalogue row of each slot. */
   readonly rows: Uint32Array;
 
-  private constructor(
-    count: number,
-    ranges: readonly FieldRange[],
-    layout: PointLayout,
-    buffer: ArrayBufferLike,
-  ) {
+  /** @param buffer holds the arrays of the layout */
+  constructor({ count, ranges, layout, rows }: StoreParts, buffer: ArrayBufferLike) {
     this.count = count;
     this.ranges = ranges;
     this.layout = layout;
+    this.rows = rows;
     this.arrays = pointViews(buffer, layout);
-    this.rows = new Uint32Array(layout.slots);
   }
 
   /**
    * Steps that build a store; each yields after a few milliseconds of work so that the page stays quick.
    *
    * @param centres unit vectors of the fields' centres, three numbers each; a galaxy belongs to the nearest
-   * @param allocate gives a buffer that holds the layout
    */
   static *build(
     galaxies: GalaxyInput,
     centres: ArrayLike<number>,
     table: RadiusTable,
-    base: number,
-    allocate: (layout: PointLayout) => ArrayBufferLike,
+    memory: StoreMemory,
   ): Generator<void, PointStore> {
     const fieldCount = Math.max(1, centres.length / 3);
     const { count } = galaxies;
@@ -60,8 +72,9 @@ export class PointStore {
       ranges.push({ start: next, count: inField });
       next += Math.ceil(inField / GROUP) * GROUP;
     }
-    const layout = pointLayout(next, base);
-    const store = new PointStore(count, ranges, layout, allocate(layout));
+    const layout = pointLayout(next, memory.base);
+    const parts = { count, ranges, layout, rows: memory.rows(layout.slots) };
+    const store = new PointStore(parts, memory.allocate(layout));
     const { arrays, rows } = store;
     const d = new Float64Array(3);
     for (let f = 0; f < fieldCount; f++) {

@@ -25,7 +25,11 @@ import {
 
 function build(galaxies: Parameters<typeof PointStore.build>[0], centres: number[]): PointStore {
   const table = radiusTable([0, 100], [0, 100]);
-  const steps = PointStore.build(galaxies, centres, table, 64, (layout) => new ArrayBuffer(layout.end));
+  const steps = PointStore.build(galaxies, centres, table, {
+    base: 64,
+    allocate: (layout) => new ArrayBuffer(layout.end),
+    rows: (slots) => new Uint32Array(slots),
+  });
   for (;;) {
     const step = steps.next();
     if (step.done) return step.value;

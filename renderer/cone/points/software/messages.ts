@@ -1,4 +1,5 @@
 import type { PointLayout } from '../pointArrays.ts';
+import type { Tone } from '../tone.ts';
 
 /** Bytes at the start of the points' memory that are not points: the table of tones, then scratch for each worker. */
 export const RESERVED_BYTES = 1048576;
@@ -26,8 +27,8 @@ export interface Finish {
   readonly imageAt: number;
   /** Workers to wait for. */
   readonly hands: number;
-  /** For a worker with its own memory, when it changed. */
-  readonly table: Uint32Array | null;
+  /** The tone whose table this worker makes, when it changed. */
+  readonly tone: Tone | null;
 }
 
 /** What the page says to a splat worker. Every message with an id is answered by one with the same id. */

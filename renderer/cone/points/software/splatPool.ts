@@ -1,14 +1,13 @@
 import type { PointLayout } from '../pointArrays.ts';
 import type { PointStore } from '../pointStore.ts';
 import { nextTask } from '../slices.ts';
-import { LIGHT_STEPS, type Tone, toneTable, VALUE_STEPS } from '../tone.ts';
-import { BARRIER_AT, type FromWorker, type Run, SCRATCH_AT, TABLE_AT, type ToWorker } from './messages.ts';
+import type { Tone } from '../tone.ts';
+import { BARRIER_AT, type FromWorker, type Run, SCRATCH_AT, type ToWorker } from './messages.ts';
+import { sharedMemory } from './sharedMemory.ts';
 import { sumsLength } from './splat.ts';
 import { SCRATCH_BYTES } from './wideKernel.ts';
 
 const PAGE = 65536;
-/** Addresses are 32 bits wide. */
-const MOST_PAGES = 65536;
 const MOST_WORKERS = 4;
 /** So many single points are one worker's work: more hands would only bring more sums to add. */
 const WORK_OF_ONE = 300_000;
@@ -71,10 +70,15 @@ export class SplatPool {
   /** Memory for a store: shared with the workers where that is allowed. */
   allocate(layout: PointLayout): ArrayBufferLike {
     if (!this.shared) return new ArrayBuffer(layout.end);
-    const initial = Math.ceil(layout.end / PAGE);
-    const memory = sharedMemory(initial);
-    this.memories.set(memory.buffer, memory);
+    const memory = sharedMemory(layout.end);
+    this.adopt(memory);
     return memory.buffer;
+  }
+
+  /** Takes shared memory made elsewhere, so that a store in it can be set; false where the workers share none. */
+  adopt(memory: WebAssembly.Memory): boolean {
+    this.memories.set(memory.buffer, memory);
+    return this.shared;
   }
 
   /** Tells the workers of a store whose memory came from `allocate`. */
@@ -139,7 +143,9 @@ export class SplatPool {
     // Toning leaves the sums at zero; they are cleared only where a picture was given up or has another size.
     const clear = fresh && !this.clean;
     this.clean = false;
-    const table = finish ? this.tableFor(finish.tone) : null;
+    // The table is made anew only when the tone changed.
+    const tone = finish && finish.tone !== this.tone ? finish.tone : null;
+    if (tone) this.tone = tone;
     if (this.memory) Atomics.store(new Int32Array(this.memory.buffer, BARRIER_AT, 1), 0, 0);
     const answers = await Promise.all(
       Array.from({ length: clear || finish ? all : this.used }, (_, i) =>
@@ -154,7 +160,7 @@ export class SplatPool {
             allSumsAt: sumsAt.slice(0, this.used),
             imageAt,
             hands: all,
-            table,
+            tone: i === 0 ? tone : null,
           },
         }),
       ),
@@ -214,16 +220,6 @@ export class SplatPool {
     return { sumsAt, imageAt };
   }
 
-  /** Writes the table where the workers find it; one to send when they share no memory and it changed. */
-  private tableFor(tone: Tone): Uint32Array | null {
-    if (tone === this.tone) return null;
-    this.tone = tone;
-    const length = VALUE_STEPS * LIGHT_STEPS;
-    if (!this.memory) return toneTable(tone, new Uint32Array(length));
-    toneTable(tone, new Uint32Array(this.memory.buffer, TABLE_AT, length));
-    return null;
-  }
-
   private ask(worker: number, message: Unsent, transfer: Transferable[] = []): Promise<FromWorker> {
     const id = this.nextId++;
     return new Promise((resolve, reject) => {
@@ -263,17 +259,4 @@ export class SplatPool {
     this.waiting.clear();
     this.failed(reason);
   }
-}
-
-/** Shared memory that can grow; a smaller promise where the machine does not give the whole address space. */
-function sharedMemory(initial: number): WebAssembly.Memory {
-  for (const maximum of [MOST_PAGES, MOST_PAGES / 2, MOST_PAGES / 4, initial + 8192]) {
-    if (maximum < initial) continue;
-    try {
-      return new WebAssembly.Memory({ initial, maximum, shared: true });
-    } catch (error) {
-      if (!(error instanceof RangeError)) throw error;
-    }
-  }
-  throw new RangeError('no memory for the points');
 }

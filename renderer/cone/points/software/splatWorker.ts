@@ -1,6 +1,6 @@
 import { pickPoint } from '../../geometry/pickPoint.ts';
 import { type PointArrays, type PointLayout, pointLayout, pointViews } from '../pointArrays.ts';
-import { LIGHT_STEPS, VALUE_STEPS } from '../tone.ts';
+import { LIGHT_STEPS, toneTable, VALUE_STEPS } from '../tone.ts';
 import {
   BARRIER_AT,
   type Finish,
@@ -113,13 +113,14 @@ function draw(message: Draw): void {
   const start = performance.now();
   splatRuns(message);
   const milliseconds = performance.now() - start;
+  if (finish?.tone)
+    toneTable(finish.tone, new Uint32Array(memory!.buffer, TABLE_AT, VALUE_STEPS * LIGHT_STEPS));
   if (finish && isShared) {
     meet(finish.hands);
     toneTo(finish.allSumsAt, finish.imageAt, message, finish.rows);
   } else if (finish) {
     const { width, height } = message;
     const room = ownRoom(width, height);
-    if (finish.table) new Uint32Array(memory!.buffer, TABLE_AT, finish.table.length).set(finish.table);
     toneTo([room.sumsAt], room.imageAt, message, finish.rows);
     const image = new Uint32Array(memory!.buffer, room.imageAt, width * height).slice();
     answer({ kind: 'image', id, image, milliseconds }, [image.buffer]);
