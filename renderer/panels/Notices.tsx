@@ -1,4 +1,4 @@
-import { useEffect } from 'preact/hooks';
+import { useEffect, useLayoutEffect, useRef } from 'preact/hooks';
 import { useApp } from '../state/app.ts';
 import type { Notice } from '../state/notices.ts';
 import { IconButton } from '../ui/IconButton.tsx';
@@ -11,8 +11,27 @@ const FACT_STAYS_MS = 12_000;
 /** Sentences for the person, at the foot of the window; and unsaved work from before, offered back. */
 export function Notices() {
   const { notices, files } = useApp();
+  const box = useRef<HTMLElement>(null);
+  const cameFrom = useRef<EventTarget | null>(null);
+  // A notice that goes takes its buttons along: the focus goes to the next one, or back to where it came from.
+  useLayoutEffect(() => {
+    if (cameFrom.current === null || document.activeElement !== document.body) return;
+    const next = box.current?.querySelector('button') ?? cameFrom.current;
+    if (next instanceof HTMLElement || next instanceof SVGElement) next.focus();
+  }, [notices.list.value, files.offered.value]);
   return (
-    <section class="notices" aria-label="Notices">
+    <section
+      ref={box}
+      class="notices"
+      aria-label="Notices"
+      onFocusIn={({ relatedTarget }) => {
+        if (relatedTarget !== null && !box.current?.contains(relatedTarget as Node))
+          cameFrom.current = relatedTarget;
+      }}
+      onFocusOut={({ relatedTarget }) => {
+        if (relatedTarget !== null && !box.current?.contains(relatedTarget as Node)) cameFrom.current = null;
+      }}
+    >
       {files.offered.value.map(({ workId, title, keptMs }) => (
         <div key={workId} class="notice notice-offer">
           <p>

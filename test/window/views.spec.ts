@@ -86,29 +86,3 @@ test('empty, a plan alone, twelve rows, one row, all at one redshift', async ({ 
   await same.getByRole('button', { name: /^volume: shells of equal/ }).click();
   await expect(same.locator('tr[data-shell="0"], [role=log]').first()).toBeVisible();
 });
-
-test('the whole main job by keyboard alone', async ({ desk }) => {
-  const page = await desk.open();
-  await ready(page);
-  // Read the depth in redshift, so that a redshift can be typed.
-  await page.keyboard.press('r');
-  const edge = page.getByRole('slider', { name: 'Edge 2 of 6' });
-  for (let i = 0; i < 200 && !(await edge.evaluate((e) => e === document.activeElement)); i++)
-    await page.keyboard.press('Tab');
-  await expect(edge).toBeFocused();
-  const before = Number(await edge.getAttribute('aria-valuenow'));
-  await page.keyboard.press('ArrowRight');
-  expect(Number(await edge.getAttribute('aria-valuenow'))).toBeGreaterThan(before);
-  await page.keyboard.press('Enter');
-  await page.keyboard.press('Control+a');
-  await page.keyboard.type('0.75');
-  await page.keyboard.press('Enter');
-  await expect.poll(async () => Number(await edge.getAttribute('aria-valuenow'))).toBe(0.75);
-  await page.keyboard.press(']');
-  await expect(page.locator('tr[data-shell="0"]')).toHaveAttribute('aria-selected', 'true');
-  await page.keyboard.press('Control+z');
-  await page.keyboard.press('Control+z');
-  await expect.poll(async () => Number(await edge.getAttribute('aria-valuenow'))).toBe(before);
-  await page.keyboard.press('h');
-  await expect(page.locator('.ledger').first()).toContainText('(Mpc/h)³');
-});

@@ -1,4 +1,4 @@
-import { useEffect, useState } from 'preact/hooks';
+import { useEffect, useRef, useState } from 'preact/hooks';
 import type { ColumnMapping } from '../../../shared-core/catalogue/catalogue.ts';
 import { change } from '../../../shared-core/study/edits.ts';
 import { useApp } from '../../state/app.ts';
@@ -21,7 +21,12 @@ export function ColumnsSection() {
   const unread = source !== null && loaded === null && engine.progress.value === null;
   const state = usePreview(looking || unread);
   const preview = state.kind === 'read' ? state.preview : null;
-  const header = loaded?.header ?? preview?.header ?? null;
+  // While the file is read again for columns just chosen, the choice stays where the hand is.
+  const file = JSON.stringify(files.engineSource.value);
+  const known = useRef<{ readonly file: string; readonly header: readonly string[] } | null>(null);
+  const found = loaded?.header ?? preview?.header ?? null;
+  if (found !== null) known.current = { file, header: found };
+  const header = known.current?.file === file ? known.current.header : null;
   const mapping = chosen ?? loaded?.mapping ?? preview?.mapping ?? null;
   const [draft, setDraft] = useState<{
     draft: MappingDraft;

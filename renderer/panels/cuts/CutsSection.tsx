@@ -4,6 +4,7 @@ import { checkCuts } from '../../../shared-core/catalogue/selection.ts';
 import { change } from '../../../shared-core/study/edits.ts';
 import { useApp } from '../../state/app.ts';
 import { ChoiceField } from '../../ui/ChoiceField.tsx';
+import { focusSoon } from '../../ui/focusSoon.ts';
 import { IconButton } from '../../ui/IconButton.tsx';
 import { NumberField } from '../../ui/NumberField.tsx';
 import { countText } from '../../ui/numberText.ts';
@@ -11,6 +12,7 @@ import { Section } from '../../ui/Section.tsx';
 import { useStudyPart } from '../useStudyPart.ts';
 
 const MOST_CUTS = 200;
+const ADD_ID = 'add-cut';
 
 /** Rows kept only where a column lies between two bounds. */
 export function CutsSection() {
@@ -63,7 +65,10 @@ export function CutsSection() {
             <IconButton
               icon="close"
               label={`Remove the cut on ${cut.column}`}
-              onClick={() => put(cuts.toSpliced(i, 1), `Remove the cut on ${cut.column}`)}
+              onClick={() => {
+                put(cuts.toSpliced(i, 1), `Remove the cut on ${cut.column}`);
+                focusSoon(ADD_ID);
+              }}
             />
             {cuts.length > 1 ? <p class="quiet cut-count">{countText(cutCounts[i] ?? 0)} set aside</p> : null}
           </li>
@@ -81,6 +86,7 @@ export function CutsSection() {
       <div class="actions">
         <button
           type="button"
+          id={ADD_ID}
           class="button"
           disabled={loaded === null || cuts.length >= MOST_CUTS}
           onClick={add}

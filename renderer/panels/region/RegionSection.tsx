@@ -7,6 +7,7 @@ import { change } from '../../../shared-core/study/edits.ts';
 import type { Study } from '../../../shared-core/study/schema.ts';
 import { SkyMap } from '../../skymap/SkyMap.tsx';
 import { useApp } from '../../state/app.ts';
+import { focusSoon } from '../../ui/focusSoon.ts';
 import { IconButton } from '../../ui/IconButton.tsx';
 import { Menu } from '../../ui/Menu.tsx';
 import { Section } from '../../ui/Section.tsx';
@@ -23,6 +24,8 @@ interface Editing {
   /** The region that the place is in: an undo in between makes the place stale. */
   readonly of: Region | null;
 }
+
+const ADD_ID = 'add-shape';
 
 /** The observed sky: its map, its area, and its shapes by numbers or text. */
 export function RegionSection() {
@@ -46,6 +49,10 @@ export function RegionSection() {
       put({ parts: [{ kind }], holes: [] }, 'Observe the whole sky');
     else setEditing({ draft: newDraft(kind), list: 'parts', inPlaceOf: null, of: region });
   };
+  const finish = (): void => {
+    setEditing(null);
+    focusSoon(ADD_ID);
+  };
   const apply = (shapes: readonly SkyShape[]): string | null => {
     if (editing === null) return null;
     const { list, inPlaceOf } = editing;
@@ -56,7 +63,7 @@ export function RegionSection() {
         ? `Add an ${what}`.replace('an hole', 'a hole')
         : `Change an ${what}`.replace('an hole', 'a hole'),
     );
-    if (why === null) setEditing(null);
+    if (why === null) finish();
     return why;
   };
   const partsLeft = (region?.parts.length ?? 0) - (editing?.inPlaceOf?.list === 'parts' ? 1 : 0);
@@ -88,6 +95,7 @@ export function RegionSection() {
         <div class="actions">
           <Menu
             label="Add a shape"
+            buttonId={ADD_ID}
             entries={[
               { kind: 'item', label: 'Box…', hint: 'RA and Dec from, to', run: () => start('box') },
               { kind: 'item', label: 'Cap…', hint: 'centre and radius', run: () => start('cap') },
@@ -105,7 +113,10 @@ export function RegionSection() {
               type="button"
               class="button"
               title="Give the region up: the area is estimated from the catalogue"
-              onClick={() => put(null, 'Give the region up')}
+              onClick={() => {
+                put(null, 'Give the region up');
+                focusSoon(ADD_ID);
+              }}
             >
               None
             </button>
@@ -119,7 +130,7 @@ export function RegionSection() {
           isNew={editing.inPlaceOf === null}
           onChange={(draft, list) => setEditing({ ...editing, draft, list })}
           onApply={apply}
-          onCancel={() => setEditing(null)}
+          onCancel={finish}
         />
       )}
     </Section>
@@ -143,6 +154,7 @@ function ShapeList(props: {
       next === null ? 'Give the region up' : list === 'parts' ? 'Remove an observed shape' : 'Remove a hole',
     );
     if (why !== null) notices.tell(why);
+    focusSoon(ADD_ID);
   };
   return (
     <ul class="shapes" aria-label={list === 'parts' ? 'Observed shapes' : 'Holes'}>
