@@ -19,7 +19,6 @@ export interface PictureWork {
 }
 
 const LONGEST_START_MS = 60_000;
-const CANCELLED = 'The picture was cancelled; nothing was written.';
 
 /**
  * Has a picture drawn by a headless browser and writes it, so that its name never stands for half of it.
@@ -27,9 +26,10 @@ const CANCELLED = 'The picture was cancelled; nothing was written.';
  */
 export async function makePicture(work: PictureWork): Promise<void> {
   const queue = new ByteQueue();
+  const what = work.job.film === null ? 'picture' : 'film';
   const bars = {
     catalogue: progressBar('Reading the catalogue'),
-    picture: progressBar(work.job.film === null ? 'Drawing the picture' : 'Drawing the film'),
+    picture: progressBar(`Drawing the ${what}`),
   };
   let received = 0;
   let heard: () => void = () => undefined;
@@ -44,7 +44,7 @@ export async function makePicture(work: PictureWork): Promise<void> {
     } else if (news.kind === 'remark') work.say(news.sentence);
     else if (news.kind === 'refused') queue.fail(new Refusal(news.sentence));
     else if (news.bytes === received) queue.end();
-    else queue.fail(new Refusal('Parts of the picture were lost on the way: try again.'));
+    else queue.fail(new Refusal(`Parts of the ${what} were lost on the way: try again.`));
   };
   const server = await startPictureServer({
     windowFolder: work.windowFolder,
@@ -57,7 +57,7 @@ export async function makePicture(work: PictureWork): Promise<void> {
       await queue.add(bytes);
     },
   });
-  const cancel = () => queue.fail(new Refusal(CANCELLED));
+  const cancel = () => queue.fail(new Refusal(`The ${what} was cancelled; nothing was written.`));
   process.once('SIGINT', cancel);
   process.once('SIGTERM', cancel);
   const writing = writeOutput(work.path, queue, { overwrite: work.overwrite });
@@ -67,7 +67,7 @@ export async function makePicture(work: PictureWork): Promise<void> {
   void browser.ended.then((reason) =>
     queue.fail(
       new Refusal(
-        `The browser ${work.browser.path} ended before the picture was done${reason === null ? '; memory may have run short: choose a smaller size' : ` (${reason})`}.`,
+        `The browser ${work.browser.path} ended before the ${what} was done${reason === null ? '; memory may have run short: choose a smaller size' : ` (${reason})`}.`,
       ),
     ),
   );

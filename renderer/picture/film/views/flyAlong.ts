@@ -14,8 +14,9 @@ import { flownShare } from '../paths.ts';
 import { DEPTH_RULER_HEIGHT, depthRuler } from './depthRuler.ts';
 import type { FilmView } from './filmView.ts';
 
-/** Where a flight ends, as a share of the way to the far end: galaxies are still ahead of it. */
-const END = 0.74;
+/** Where a flight ends at the latest, as a share of the way to the far end, and how many galaxies are behind it then. */
+const FARTHEST_END = 0.74;
+const PASSED_SHARE = 0.8;
 /** Share of the stage that the field takes when it is seen from the observer's place. */
 const SEAT_SHARE = 0.62;
 /** Distance of the plane that is shown true to scale, in displayed radii; only the nearest thing seen depends on it. */
@@ -50,6 +51,7 @@ export function flyAlongView(whole: ViewInput, fieldNumber: number): FilmView {
   const viewport = { widthPx: input.box.width, heightPx: input.box.height };
   const axes = lookingFrom([-1, 0, 0], field.north);
   const unitsPerPixel = PLANE / pixelsOfTangent(field, axes, viewport);
+  const end = endOf(setting, whole);
   const ruler = depthRuler(whole, setting, foot);
   const only = (fields: number): string => (fields > 1 ? `field ${fieldNumber} of ${fields}` : 'the field');
   return {
@@ -59,7 +61,7 @@ export function flyAlongView(whole: ViewInput, fieldNumber: number): FilmView {
     ],
     words: `a flight from the observer outward through ${only(model.fields.length)}, the outlines of the shells passing as gates`,
     drawingAt(share) {
-      const at = END * flownShare(share);
+      const at = end * flownShare(share);
       const pose: Pose = { axes, target: [at + PLANE, 0, 0], unitsPerPixel, perspective: 1 / PLANE };
       const pixels = pixelMatrix(pose, viewport);
       const lanes = setting.lanes.map(
@@ -95,6 +97,12 @@ export function flyAlongView(whole: ViewInput, fieldNumber: number): FilmView {
       };
     },
   };
+}
+
+/** Displayed radius at which the flight ends: some galaxies are still ahead, so that it does not end in the dark. */
+function endOf({ radius }: ConeSetting, { numbers }: ViewInput): number {
+  const last = numbers.facts.background?.comovingMpc[Math.floor(PASSED_SHARE * numbers.galaxiesWithin)];
+  return last === undefined ? FARTHEST_END : Math.min(FARTHEST_END, radius(last));
 }
 
 /** Pixels of a tangent of one, with which the field's outline takes its share of the stage. */

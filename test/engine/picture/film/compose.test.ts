@@ -100,7 +100,12 @@ describe('fly-along', () => {
     );
     expect(redshifts[0]).toBe(0);
     for (let i = 1; i < 40; i++) expect(redshifts[i]!).toBeGreaterThanOrEqual(redshifts[i - 1]!);
+    // It ends where four fifths of the galaxies, sorted by redshift, are behind it, or a little before.
+    const z = facts.selected!.sample.redshift;
     expect(redshifts[39]!).toBeGreaterThan(1);
+    expect(redshifts[39]!).toBeLessThanOrEqual(z[Math.floor(0.8 * z.length)]! + 5e-4);
+    const { x } = made.sceneAt(39).points;
+    expect(x.filter((at) => Number.isFinite(at)).length).toBeGreaterThan(20);
   });
 
   it('goes through the field that is asked for, and refuses one that is not there', () => {
