@@ -324,7 +324,12 @@ export class EngineDesk {
       redshift: catalogue.redshift[row]!,
       weight: catalogue.weight?.[row] ?? null,
       magnitude: catalogue.magnitude?.[row] ?? null,
-      extras: [...catalogue.extras].map(([column, values]) => [column, values[row]!] as const),
+      extras: [
+        ...[...catalogue.extras].map(([column, values]) => [column, values[row]!] as const),
+        ...this.#columns
+          .filter(({ column }) => !catalogue.extras.has(column))
+          .map(({ column, rows }) => [column, rows[row]!] as const),
+      ],
     };
   }
 

@@ -129,6 +129,7 @@ describe('the engine does what the study asks, and nothing twice', () => {
     const [mag] = last('columns')!.columns;
     expect(mag!.column).toBe('mag');
     expect(mag!.values).toEqual(last('selected')!.selected!.magnitude);
+    expect(desk.row(3).extras).toEqual([['mag', desk.row(3).magnitude]]);
     // Another selection takes its values from memory.
     const region = { parts: [{ kind: 'cap', raDeg: 152, decDeg: 4, radiusDeg: 2 }], holes: [] } as const;
     await desk.want({ ...wanted, region, columns: ['mag', 'ra'] });
