@@ -87,6 +87,16 @@ export function composePicture(options: PictureOptions, facts: PictureFacts): Sc
   };
 }
 
+/**
+ * The caption that a picture has when none is given, as a text that can be edited.
+ *
+ * @throws Refusal as composePicture does
+ */
+export function captionOffer(options: PictureOptions, facts: PictureFacts): string {
+  const numbers = pictureNumbers(options, facts);
+  return laidOut({ ...options, caption: null }, numbers, VIEWS[options.view]).frame.caption;
+}
+
 /** What a file says of itself. */
 export function sceneMetadata(
   { title, options, numbers }: PictureFrame,

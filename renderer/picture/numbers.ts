@@ -9,7 +9,7 @@ import { shellStatistics } from '../../shared-core/shells/statistics.ts';
 import { compileRegion } from '../../shared-core/sky/compileRegion.ts';
 import { footprintFields } from '../../shared-core/sky/fields.ts';
 import { colourKey } from '../../shared-core/study/colourBy.ts';
-import type { ColourBy, Light, Study } from '../../shared-core/study/schema.ts';
+import type { Light, Study } from '../../shared-core/study/schema.ts';
 import type { ShellInput } from '../cone/types.ts';
 import type { Background, ColumnValues, FootprintPicture, Selected } from '../engine/protocol.ts';
 import { type Colours, colouring, coneShells, radialScale } from '../stage/coneInputs.ts';
@@ -42,7 +42,6 @@ export interface PictureNumbers {
   readonly shells: readonly ShellStatistics[];
   readonly shellInputs: readonly ShellInput[];
   readonly colours: Colours;
-  readonly colourBy: ColourBy;
   readonly light: Light;
 }
 
@@ -72,7 +71,7 @@ export function pictureNumbers(options: PictureOptions, facts: PictureFacts): Pi
   const units = { perH: study.look.perH, h: cosmology.h };
   const deepest = depthOf(options, sample, edges);
   const galaxiesWithin = rankBelow(sample, deepest, true);
-  const { colours, colourBy } = coloursOf(options, facts, galaxiesWithin);
+  const colours = coloursOf(options, facts, galaxiesWithin);
   return {
     study,
     facts,
@@ -85,19 +84,25 @@ export function pictureNumbers(options: PictureOptions, facts: PictureFacts): Pi
     shells,
     shellInputs: coneShells(shells),
     colours,
-    colourBy,
     light: lightOf(options, study.look.light),
   };
 }
 
-/** The radial scale of a picture whose radius takes `lengthUnits`, in the study's reading. */
-export function pictureScale(numbers: PictureNumbers, lengthUnits: number) {
+/**
+ * The radial scale of a picture whose radius takes `lengthUnits`, in the study's reading.
+ * @param ages beside the lookback times, where there is no ruler of ages
+ */
+export function pictureScale(
+  numbers: PictureNumbers,
+  lengthUnits: number,
+  ages: 'with ages' | 'without ages' = 'without ages',
+) {
   const { cosmology, study, readings, units, deepestRedshift } = numbers;
   const axis = radialAxis(study.look.radial, cosmology);
   const window = wholeWindow(axis, deepestRedshift);
   // The strip's pixel scale says how dense the marks may stand; its insets are added to what the radius takes.
   const pixel = radialPixel(axis, window, lengthUnits + 128);
-  const scale = radialScale(study.look.radial, readings, cosmology, units, pixel, window[1] / 1.1);
+  const scale = radialScale(study.look.radial, readings, cosmology, units, pixel, window[1] / 1.1, ages);
   return { axis, window, scale };
 }
 
@@ -124,14 +129,10 @@ function givenFootprint(study: Study): FootprintPicture | null {
   return { origin, areaDeg2, estimate, rings: made.outline(), fields: footprintFields(made) };
 }
 
-function coloursOf(
-  options: PictureOptions,
-  facts: PictureFacts,
-  within: number,
-): Pick<PictureNumbers, 'colours' | 'colourBy'> {
+function coloursOf(options: PictureOptions, facts: PictureFacts, within: number): Colours {
   const { selected, background, density, columns, study } = facts;
   const byShell: Colours = { input: { kind: 'shell' }, legend: null };
-  if (selected === null || background === null) return { colours: byShell, colourBy: 'shell' };
+  if (selected === null || background === null) return byShell;
   const wanted = options.colourBy ?? study.look.colourBy;
   const map = options.colourMap ?? study.look.colourMap;
   // The colours span what is shown.
@@ -143,16 +144,13 @@ function coloursOf(
     density: density?.subarray(0, within) ?? null,
     columns: columns.map(({ column, values }) => ({ column, values: values.subarray(0, within) })),
   });
-  if (found !== null) return { colours: found, colourBy: wanted };
+  if (found !== null) return found;
   if (options.colourBy !== null)
     throw new Refusal(
       `Galaxies were to be coloured by ${colourKey(wanted)}, which this catalogue has no values for: choose redshift, lookback or shell.`,
       'use',
     );
-  return {
-    colours: colouring('redshift', map, shown, { lookbackGyr, density: null, columns: [] }) ?? byShell,
-    colourBy: 'redshift',
-  };
+  return colouring('redshift', map, shown, { lookbackGyr, density: null, columns: [] }) ?? byShell;
 }
 
 /** The study's light, as far as the options say nothing else. */

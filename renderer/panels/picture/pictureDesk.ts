@@ -3,7 +3,7 @@ import { Refusal } from '../../../shared-core/base/refusal.ts';
 import type { FilmOptions } from '../../../shared-core/picture/film.ts';
 import { type FilmFormat, isFilmFormat } from '../../../shared-core/picture/job.ts';
 import type { PictureOptions } from '../../../shared-core/picture/options.ts';
-import { composePicture, describePicture } from '../../picture/composePicture.ts';
+import { captionOffer, composePicture, describePicture } from '../../picture/composePicture.ts';
 import { composeFilm, type Film } from '../../picture/film/composeFilm.ts';
 import { filmEncoding } from '../../picture/film/encoding.ts';
 import { renderFilm } from '../../picture/film/renderFilm.ts';
@@ -15,7 +15,6 @@ import { sceneToPdf } from '../../picture/sceneToPdf.ts';
 import { sceneToSvg } from '../../picture/sceneToSvg.ts';
 import { type ByteSink, MemorySink, type WriteOptions } from '../../picture/write/sink.ts';
 import type { BenchAnswer, BenchRequest, FilmForecast, PicturePreview } from './benchMessages.ts';
-import { captionOffer } from './captionOffer.ts';
 import { previewScene } from './previewScene.ts';
 
 const WRITERS = { png: renderPng, svg: sceneToSvg, pdf: sceneToPdf } as const;

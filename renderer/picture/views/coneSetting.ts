@@ -39,7 +39,11 @@ export interface ConeSetting {
 /** @param arrange chooses what is looked at and from where, once fields and scale are known */
 export function coneSetting(input: ViewInput, arrange: (model: ConeModel) => void): ConeSetting {
   const { box, numbers, options, theme } = input;
-  const { scale, axis, window } = pictureScale(numbers, box.width - INSETS.leftPx - INSETS.rightPx);
+  const { scale, axis, window } = pictureScale(
+    numbers,
+    box.width - INSETS.leftPx - INSETS.rightPx,
+    'with ages',
+  );
   const model = new ConeModel();
   const viewport = { widthPx: box.width, heightPx: box.height - TITLE_ROOM };
   const extent = { min: 0, max: axis.at(window[1]) };

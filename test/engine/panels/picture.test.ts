@@ -1,6 +1,5 @@
 import { beforeAll, describe, expect, it } from 'vitest';
 import type { BenchAnswer } from '../../../renderer/panels/picture/benchMessages.ts';
-import { captionOffer } from '../../../renderer/panels/picture/captionOffer.ts';
 import { FIRST_CHOICES, type PictureChoices } from '../../../renderer/panels/picture/pictureChoices.ts';
 import { PictureDesk } from '../../../renderer/panels/picture/pictureDesk.ts';
 import {
@@ -10,7 +9,7 @@ import {
 } from '../../../renderer/panels/picture/pictureRemarks.ts';
 import { previewScene } from '../../../renderer/panels/picture/previewScene.ts';
 import { readChoices } from '../../../renderer/panels/picture/readChoices.ts';
-import { composePicture } from '../../../renderer/picture/composePicture.ts';
+import { captionOffer, composePicture } from '../../../renderer/picture/composePicture.ts';
 import { type PictureFacts, pictureNumbers } from '../../../renderer/picture/numbers.ts';
 import { fingerprintOf } from '../../../renderer/picture/page/gatherFacts.ts';
 import { sceneToSvg } from '../../../renderer/picture/sceneToSvg.ts';
