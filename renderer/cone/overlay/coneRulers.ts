@@ -8,6 +8,8 @@ import type { OverlayScene, PaintedLane } from './scene.ts';
 
 /** Room between the lower edge of the cone and the comoving ruler, in pixels. */
 export const COMOVING_DROP_PX = 42;
+/** The same beside the lower edge of a free view, where the redshifts' title stands in between. */
+const FREE_DROP_PX = 58;
 
 /** Rulers along the edges of cones, the observer, and the names of lanes. */
 export function paintCone(pen: Pen, scene: OverlayScene): void {
@@ -170,7 +172,7 @@ function paintFreeRulers(pen: Pen, scene: OverlayScene, lane: PaintedLane): void
     normal = [-normal[0], -normal[1]];
   const beside = (mpc: number): Point | null => {
     const p = at(mpc);
-    return p ? [p[0] + 46 * normal[0], p[1] + 46 * normal[1]] : null;
+    return p ? [p[0] + FREE_DROP_PX * normal[0], p[1] + FREE_DROP_PX * normal[1]] : null;
   };
   drawRuler(pen, {
     title: scene.scale.titles.comoving,
