@@ -18,6 +18,9 @@ export interface Ruler {
 
 const NUMBER_OUT_PX = 15.5;
 const TITLE_OUT_PX = 40;
+const NUMBER_GAP_PX = 9;
+/** From the numbers to the middle of a title outside of them. */
+const TITLE_ROOM_PX = 15;
 /** Places for a title along its ruler, the best first. */
 const TITLE_SHARES = [0.62, 0.5, 0.75, 0.4, 0.86, 0.3, 0.66, 0.54, 0.46, 0.58, 0.7, 0.34, 0.8, 0.26, 0.2];
 const MARK_PX = [6, 4.5, 3] as const;
@@ -35,7 +38,12 @@ export function drawRuler(pen: Pen, ruler: Ruler): void {
   const away = (middle[0] - ruler.awayFrom[0]) * normal[0] + (middle[1] - ruler.awayFrom[1]) * normal[1];
   if (away < 0) normal = [-normal[0], -normal[1]];
   pen.line([start, end], pen.theme.line, 1);
-  if (!ruler.inline) drawTitle(pen, ruler, start, end, along, normal, length, TITLE_OUT_PX);
+  /** Half of what a number takes across the ruler. */
+  const halfOf = (text: string): number =>
+    (Math.abs(normal[0]) * pen.measure(text)) / 2 + Math.abs(normal[1]) * 6.5;
+  const widest = Math.max(0, ...ruler.ticks.map(({ text }) => (text === '' ? 0 : halfOf(text))));
+  const outside = Math.max(TITLE_OUT_PX, NUMBER_GAP_PX + 2 * widest + TITLE_ROOM_PX);
+  if (!ruler.inline) drawTitle(pen, ruler, start, end, along, normal, length, outside);
   const shown = ruler.ticks
     .filter(
       (tick) =>
@@ -54,13 +62,12 @@ export function drawRuler(pen: Pen, ruler: Ruler): void {
     const long = MARK_PX[Math.min(tick.level, 2)]!;
     pen.line([p!, [p![0] + normal[0] * long, p![1] + normal[1] * long]], pen.theme.inkMuted, 1);
     if (tick.text === '') continue;
-    const half = (Math.abs(normal[0]) * pen.measure(tick.text)) / 2 + Math.abs(normal[1]) * 6.5;
-    const out = 9 + half;
+    const out = NUMBER_GAP_PX + halfOf(tick.text);
     pen.text(tick.text, p![0] + normal[0] * out, p![1] + normal[1] * out, pen.theme.inkMuted, { gap: 4 });
   }
   // Where no gap between numbers is wide enough the title goes outside after all.
   if (ruler.inline && !drawTitle(pen, ruler, start, end, along, normal, length, NUMBER_OUT_PX)) {
-    drawTitle(pen, ruler, start, end, along, normal, length, TITLE_OUT_PX);
+    drawTitle(pen, ruler, start, end, along, normal, length, outside);
   }
 }
 
