@@ -349,6 +349,7 @@ export class ConeView {
           this.drawing = false;
           if (this.disposed) return;
           if (shown) this.drawnKey = key;
+          if (shown && moving) this.painter.pacing.finished(performance.now());
           const latencyMs = performance.now() - this.requestedAt;
           const next = this.again || animated;
           // A picture that took longer than the screen's beat does not wait for the next one: the workers go on with

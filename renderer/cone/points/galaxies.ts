@@ -1,5 +1,6 @@
 import type { ColouringInput, GalaxyInput, ShellInput } from '../types.ts';
 import type { ConeMemory, ConeWork } from '../work/coneWork.ts';
+import type { PickIndex } from './pickIndex.ts';
 import type { PointStore } from './pointStore.ts';
 import { fillRadius, type RadiusTable, radiusTable } from './radiusTable.ts';
 import { runSliced } from './slices.ts';
@@ -9,6 +10,9 @@ export type GalaxiesChange = 'store' | 'values' | 'radii';
 /** Up to so many galaxies a change of radius is done at once; beyond, an even sample moves and the rest follows. */
 const AT_ONCE = 300_000;
 
+/** Fewer are searched as quickly one by one. */
+const INDEXED = 200_000;
+
 /** The galaxies as they are drawn: has the store built, keeps colours and radii up to date. */
 export class Galaxies {
   store: PointStore | null = null;
@@ -16,6 +20,8 @@ export class Galaxies {
   ready = 1;
   /** False while the galaxies drawn are not (or not known to be) those of the input: then none can be pointed at. */
   current = false;
+  /** Of each field, for pointing; null until it is made, and where it cannot be. */
+  index: readonly PickIndex[] | null = null;
   private input: GalaxyInput | null = null;
   /** Of the fields that the store is sorted by, and of those that it is to be sorted by. */
   private centres: Float64Array = new Float64Array(0);
@@ -148,12 +154,17 @@ export class Galaxies {
     const basis = { galaxies: input, centres: this.nextCentres, table, colouring, shells };
     void this.work.store(basis, this.memory, job.signal).then((store) => {
       if (!store || job.signal.aborted) return;
-      this.building = null;
       this.store = store;
       this.current = true;
       this.ready = 1;
       this.takeCentres();
       this.changed('store');
+      this.index = null;
+      if (store.count >= INDEXED) {
+        void this.work.index(store, job.signal).then((index) => {
+          if (this.store === store) this.index = index;
+        });
+      }
       if (table !== this.table) {
         this.ready = 0;
         this.setTable(this.table, false);

@@ -1,9 +1,11 @@
+import { pickNear } from '../geometry/pickNear.ts';
 import { type PointHit, pickPoint } from '../geometry/pickPoint.ts';
 import type { Viewport } from '../geometry/projection.ts';
 import type { GlStage } from '../graphics/glStage.ts';
 import type { ConeWork } from '../work/coneWork.ts';
 import { crowding, exposure, NOTHING, pointSizePx } from './exposure.ts';
 import { Galaxies, type GalaxiesChange } from './galaxies.ts';
+import { Pacing } from './pacing.ts';
 import type { Emphasis, PointFrame, PointPart } from './pointLayer.ts';
 import { RESERVED_BYTES } from './software/messages.ts';
 import { SoftwarePoints } from './software/softwarePoints.ts';
@@ -16,8 +18,6 @@ export type LayerChoice = 'auto' | 'software' | 'webgl';
 
 /** Up to so many galaxies a search on the page is quicker than asking the workers. */
 const PICK_ON_PAGE = 200_000;
-/** Time for the points of one picture while it moves. */
-const MOVING_BUDGET_MS = 10;
 /** So many points are drawn whatever it takes. */
 const ALWAYS_DRAWN = 120_000;
 /** Workers that end are started again so often. */
@@ -28,6 +28,7 @@ export class PointPainter {
   readonly galaxies: Galaxies;
   /** Rises whenever the points change, so that an unchanged picture need not be drawn again. */
   version = 0;
+  readonly pacing = new Pacing();
   private readonly gl: GlStage;
   private readonly changed: () => void;
   private readonly tones = new ToneSource();
@@ -105,7 +106,7 @@ export class PointPainter {
     const frame: PointFrame = { viewport, pixelRatio, parts, fraction: ready, emphasis, sizePx, tone };
     if (!moving || this.layer !== 'software' || !this.software) return frame;
     const total = parts.reduce((sum, part) => sum + part.range.count, 0);
-    const affordable = this.software.affordable(MOVING_BUDGET_MS, frame);
+    const affordable = this.software.affordable(this.pacing.budgetMs, frame);
     // A little over is better than a second picture at rest, and a thin sample would flicker.
     if (total <= Math.max(1.4 * affordable, ALWAYS_DRAWN)) return frame;
     return { ...frame, fraction: Math.min(ready, Math.max(affordable, ALWAYS_DRAWN) / total) };
@@ -126,8 +127,14 @@ export class PointPainter {
     yPx: number,
     reachPx: number,
   ): Promise<PointHit | null> {
-    const { store } = this.galaxies;
+    const { store, index, ready } = this.galaxies;
     if (!store) return null;
+    if (index && ready === 1) {
+      return parts.reduce<PointHit | null>((best, { matrix, range }) => {
+        const own = index[store.ranges.indexOf(range)];
+        return own ? pickNear(store.arrays, own, matrix, xPx, yPx, reachPx, best) : best;
+      }, null);
+    }
     const total = parts.reduce((sum, part) => sum + part.range.count, 0);
     if (total > PICK_ON_PAGE && this.pool && this.software) {
       const runs = parts.map(({ matrix, range }) => ({

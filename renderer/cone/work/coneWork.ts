@@ -1,5 +1,6 @@
 import { type PreparedField, prepareFields } from '../geometry/preparedField.ts';
 import { indexer } from '../points/colouring.ts';
+import type { PickIndex } from '../points/pickIndex.ts';
 import { PointStore, type StoreMemory } from '../points/pointStore.ts';
 import { runSliced } from '../points/slices.ts';
 import type { FootprintInput } from '../types.ts';
@@ -55,6 +56,17 @@ export class ConeWork {
       if (done || signal.aborted) return done;
     }
     return runSliced(store.colour(indexer(colouring, basis.shells, basis.table)), signal);
+  }
+
+  /** An index of each field for pointing, where a worker can make it; null where not. */
+  async index(store: PointStore, signal: AbortSignal): Promise<readonly PickIndex[] | null> {
+    const { buffer } = store.arrays.x;
+    if (buffer instanceof ArrayBuffer) return null;
+    const { count, ranges, layout } = store;
+    // Its rows are not asked for.
+    const rows = new Uint32Array(0);
+    const task = { kind: 'index', parts: { count, ranges, layout, rows }, buffer } as const;
+    return this.ask<'index'>(task, signal).catch(() => null);
   }
 
   dispose(): void {

@@ -1,9 +1,12 @@
 import { prepareFields } from '../geometry/preparedField.ts';
 import { indexer } from '../points/colouring.ts';
+import { type PickIndex, pickIndex } from '../points/pickIndex.ts';
 import { PointStore } from '../points/pointStore.ts';
 import { runSliced } from '../points/slices.ts';
 import { sharedMemory } from '../points/software/sharedMemory.ts';
 import type { ConeResults, ConeTask, FromConeWorker, ToConeWorker } from './messages.ts';
+
+const sharedWords = (length: number) => new Uint32Array(new SharedArrayBuffer(4 * length));
 
 const running = new Map<number, AbortController>();
 
@@ -20,7 +23,7 @@ function* steps(task: ConeTask): Generator<void, ConeResults[keyof ConeResults]>
           memory = sharedMemory(layout.end);
           return memory.buffer;
         },
-        rows: (slots) => new Uint32Array(new SharedArrayBuffer(4 * slots)),
+        rows: sharedWords,
       });
       yield* store.colour(indexer(colouring, shells, table));
       const { count, ranges, layout, rows } = store;
@@ -30,6 +33,12 @@ function* steps(task: ConeTask): Generator<void, ConeResults[keyof ConeResults]>
       const { colouring, shells, table } = task.basis;
       const store = new PointStore(task.parts, task.buffer);
       return yield* store.colour(indexer(colouring, shells, table));
+    }
+    case 'index': {
+      const { ranges, arrays } = new PointStore(task.parts, task.buffer);
+      const made: PickIndex[] = [];
+      for (const range of ranges) made.push(yield* pickIndex(arrays, range, sharedWords));
+      return made;
     }
   }
 }

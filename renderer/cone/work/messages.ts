@@ -1,4 +1,5 @@
 import type { PreparedField } from '../geometry/preparedField.ts';
+import type { PickIndex } from '../points/pickIndex.ts';
 import type { StoreParts } from '../points/pointStore.ts';
 import type { RadiusTable } from '../points/radiusTable.ts';
 import type { ColouringInput, FootprintInput, GalaxyInput, ShellInput } from '../types.ts';
@@ -26,12 +27,15 @@ export type ConeTask =
       readonly parts: StoreParts;
       readonly buffer: SharedArrayBuffer;
       readonly basis: ColourBasis;
-    };
+    }
+  /** An index of each field of a store. */
+  | { readonly kind: 'index'; readonly parts: StoreParts; readonly buffer: SharedArrayBuffer };
 
 export interface ConeResults {
   readonly fields: readonly PreparedField[];
   readonly store: { readonly parts: StoreParts; readonly memory: WebAssembly.Memory };
   readonly colours: true;
+  readonly index: readonly PickIndex[];
 }
 
 export type ToConeWorker =

@@ -1,5 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { pickNear } from '../../../renderer/cone/geometry/pickNear.ts';
 import { pickPoint } from '../../../renderer/cone/geometry/pickPoint.ts';
 import { pickShell } from '../../../renderer/cone/geometry/pickShell.ts';
 import { FRONT, sideOnPose, turned } from '../../../renderer/cone/geometry/poses.ts';
@@ -13,6 +14,7 @@ import {
 } from '../../../renderer/cone/geometry/projection.ts';
 import { separation } from '../../../renderer/cone/geometry/separation.ts';
 import { direction } from '../../../renderer/cone/geometry/vector.ts';
+import { pickIndex } from '../../../renderer/cone/points/pickIndex.ts';
 import { pointLayout, pointViews } from '../../../renderer/cone/points/pointArrays.ts';
 import { boxRing } from './skies.ts';
 
@@ -53,6 +55,63 @@ describe('picking a galaxy', () => {
       expect(hit?.slot ?? -1).toBe(best);
       if (hit) expect(Math.sqrt(hit.distance2)).toBeCloseTo(least, 4);
     }
+  });
+});
+
+describe('picking by an index', () => {
+  const count = 30_000;
+  const layout = pointLayout(count, 0);
+  const points = pointViews(new ArrayBuffer(layout.end), layout);
+  for (let s = 0; s < count; s++) {
+    // Half of them in a field, half on the whole sky; every slot another distance.
+    const wide = s % 2 === 0;
+    const [x, y, z] = wide
+      ? direction((360 * s * 0.618) % 360, 90 * Math.sin(3.1 * s))
+      : direction(10 * Math.sin(7.1 * s), 6 * Math.cos(3.3 * s));
+    points.x[s] = x;
+    points.y[s] = y;
+    points.z[s] = z;
+    points.comoving[s] = s % 500 === 1 ? Number.NaN : (s * 7919) % count;
+    points.radius[s] = points.comoving[s]! / count;
+  }
+  const steps = pickIndex(points, { start: 0, count }, (length) => new Uint32Array(length));
+  let made = steps.next();
+  while (!made.done) made = steps.next();
+  const index = made.value;
+
+  it('holds every slot once, near to far in its cell', () => {
+    expect(Uint32Array.from(index.slots).sort()).toEqual(Uint32Array.from({ length: count }, (_, s) => s));
+    expect(index.starts.length - 1).toBeGreaterThan(20);
+    for (let cell = 0; cell + 1 < index.starts.length; cell++) {
+      const own = index.slots.subarray(index.starts[cell]!, index.starts[cell + 1]!);
+      const known = Array.from(own, (s) => points.comoving[s]!).filter((mpc) => !Number.isNaN(mpc));
+      expect(known).toEqual(known.toSorted((a, b) => a - b));
+    }
+  });
+
+  it('finds what a search among all finds', () => {
+    // Seeded by the rule of the tests; a pose, a pixel and a reach.
+    fc.assert(
+      fc.property(
+        fc.double({ min: -3, max: 3, noNaN: true }),
+        fc.double({ min: -1.5, max: 1.5, noNaN: true }),
+        fc.double({ min: 0, max: 0.9, noNaN: true }),
+        fc.double({ min: 0, max: 800, noNaN: true }),
+        fc.double({ min: 0, max: 400, noNaN: true }),
+        fc.double({ min: 0.5, max: 30, noNaN: true }),
+        (a, b, perspective, xPx, yPx, reachPx) => {
+          const pose: Pose = { axes: turned(a, b), target: [0.4, 0, 0], unitsPerPixel: 0.003, perspective };
+          const matrix = pixelMatrix(pose, VIEWPORT);
+          const all = pickPoint(points, matrix, 0, count, xPx, yPx, reachPx);
+          const near = pickNear(points, index, matrix, xPx, yPx, reachPx);
+          expect(near === null).toBe(all === null);
+          // The two sum in another order: the same place to a thousandth of a pixel.
+          if (all && near)
+            expect(Math.abs(Math.sqrt(near.distance2) - Math.sqrt(all.distance2))).toBeLessThan(1e-3);
+        },
+      ),
+      { numRuns: 200 },
+    );
   });
 });
 

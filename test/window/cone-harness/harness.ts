@@ -3,6 +3,7 @@ import type {
   ConeTheme,
   FieldInput,
   FrameStatistics,
+  GalaxyInput,
   RadialReading,
   RadialScaleInput,
   Tick,
@@ -153,6 +154,22 @@ cone.setAxisWindow({ min: 0, max: 1 }, { leftPx: 56, rightPx: 28 });
 const scale = makeScale(reading);
 cone.setRadialScale(scale, { min: 0, max: scale.table.radius.at(-1)! });
 
+/** As the program's engine hands them over. */
+function inSharedMemory({ count: n, directions, comovingMpc }: GalaxyInput): GalaxyInput {
+  const share = (values: Float64Array | Float32Array) => {
+    const copy = new Float64Array(new SharedArrayBuffer(8 * values.length));
+    copy.set(values);
+    return copy;
+  };
+  if (!crossOriginIsolated || !('raDeg' in directions)) return { count: n, directions, comovingMpc };
+  const { raDeg, decDeg } = directions;
+  return {
+    count: n,
+    directions: { raDeg: share(raDeg), decDeg: share(decDeg) },
+    comovingMpc: share(comovingMpc),
+  };
+}
+
 /** A parallel of declination, interior to its north or south. */
 function parallel(decDeg: number, northward: boolean) {
   const raDeg = Float64Array.from({ length: 720 }, (_, i) => (northward ? i / 2 : 360 - i / 2));
@@ -186,7 +203,7 @@ cone.setColouring(
   text('colour', 'radius') === 'shell' ? { kind: 'shell' } : { kind: 'radius', map: text('map', 'harbour') },
 );
 if (query.has('view')) cone.setView(text('view', 'sideOn') as ViewName);
-const galaxies = clustered(chosen.patches);
+const galaxies = inSharedMemory(clustered(chosen.patches));
 cone.setGalaxies(galaxies);
 
 Object.assign(window, {
