@@ -31,7 +31,7 @@ test('a film by command plays, has its frames, times and study, and is the same 
   chrome,
   desk,
 }) => {
-  test.setTimeout(120_000);
+  test.setTimeout(240_000);
   const { folder } = desk;
   const study = smallStudy(folder);
   const read = (name: string) => readFileSync(join(folder, name));
@@ -65,7 +65,7 @@ test('a film as MP4 where the browser can encode it, else a sentence and no file
   chrome,
   desk,
 }) => {
-  test.setTimeout(120_000);
+  test.setTimeout(240_000);
   const { folder } = desk;
   const study = smallStudy(folder);
   const refused = await conewright(
@@ -101,7 +101,7 @@ test('a film from the bench: any moment is seen, it is written whole, and a canc
   desk,
 }) => {
   test.setTimeout(240_000);
-  const page = await desk.open({ theme: 'light' });
+  const page = await desk.open({ theme: 'light', files: [smallStudy(desk.folder)] });
   await ready(page);
   await page.keyboard.press('p');
   const bench = page.getByRole('dialog', { name: 'Picture' });

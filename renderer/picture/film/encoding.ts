@@ -1,6 +1,6 @@
 import { Refusal } from '../../../shared-core/base/refusal.ts';
 import type { FilmFormat } from '../../../shared-core/picture/job.ts';
-import { h264Codecs, vp9Codec } from './levels.ts';
+import { h264Codecs, MOST_H264_BITS, vp9Codec } from './levels.ts';
 import type { FilmFacts } from './write/filmFile.ts';
 
 /** How the frames of a film are coded. */
@@ -12,8 +12,8 @@ export interface FilmEncoding {
 
 /** Every frame's quantizer for VP9 (0..63): looked at on moving points and thin lines, which stay as they were drawn. */
 const VP9_QUANTIZER = 60;
-/** Bits for a pixel of each frame where the encoder shares them out: chosen by eye, for points that all move. */
-const BITS_A_PIXEL = 0.8;
+/** Bits for a pixel of each frame, at most, where the encoder shares them out: with fewer, thin lines lose their colour. */
+const BITS_A_PIXEL = 1.6;
 
 /**
  * The encoding of a format that this browser can do: VP9 for WebM, H.264 for MP4, by the processor rather than by
@@ -33,10 +33,8 @@ export async function filmEncoding(
     latencyMode: 'quality',
     hardwareAcceleration: 'prefer-software',
   } as const;
-  const shared = {
-    bitrateMode: 'variable',
-    bitrate: Math.round(BITS_A_PIXEL * widthPx * heightPx * framesPerSecond),
-  } as const;
+  const bitrate = Math.round(Math.min(MOST_H264_BITS, BITS_A_PIXEL * widthPx * heightPx * framesPerSecond));
+  const shared = { bitrateMode: 'variable', bitrate } as const;
   const vp9 = { ...common, codec: vp9Codec(size) };
   const wishes: FilmEncoding[] =
     format === 'webm'
@@ -44,7 +42,7 @@ export async function filmEncoding(
           { config: { ...vp9, bitrateMode: 'quantizer' }, quantizer: VP9_QUANTIZER },
           { config: { ...vp9, ...shared }, quantizer: null },
         ]
-      : h264Codecs(size).map((codec) => ({
+      : h264Codecs(size, bitrate).map((codec) => ({
           config: { ...common, ...shared, codec, avc: { format: 'avc' } },
           quantizer: null,
         }));

@@ -20,17 +20,24 @@ const VP9_LEVELS: readonly Level[] = [
   { name: '51', pictureSize: 8_912_896, rate: 588_251_136, side: 8384 },
 ];
 
-/** Blocks of 16 by 16 samples, of a frame and of a second: ITU-T H.264, table A-1; sides are at most sqrt(8 blocks). */
-const H264_LEVELS: readonly Omit<Level, 'side'>[] = [
-  { name: '1E', pictureSize: 1620, rate: 40_500 },
-  { name: '1F', pictureSize: 3600, rate: 108_000 },
-  { name: '20', pictureSize: 5120, rate: 216_000 },
-  { name: '28', pictureSize: 8192, rate: 245_760 },
-  { name: '2A', pictureSize: 8704, rate: 522_240 },
-  { name: '32', pictureSize: 22_080, rate: 589_824 },
-  { name: '33', pictureSize: 36_864, rate: 983_040 },
-  { name: '34', pictureSize: 36_864, rate: 2_073_600 },
+/**
+ * Blocks of 16 by 16 samples, of a frame and of a second, and thousands of bits a second: ITU-T H.264, table A-1. Sides
+ * are at most sqrt(8 blocks).
+ */
+const H264_LEVELS: readonly (Omit<Level, 'side'> & { readonly kiloBits: number })[] = [
+  { name: '1E', pictureSize: 1620, rate: 40_500, kiloBits: 10_000 },
+  { name: '1F', pictureSize: 3600, rate: 108_000, kiloBits: 14_000 },
+  { name: '20', pictureSize: 5120, rate: 216_000, kiloBits: 20_000 },
+  { name: '28', pictureSize: 8192, rate: 245_760, kiloBits: 20_000 },
+  { name: '29', pictureSize: 8192, rate: 245_760, kiloBits: 50_000 },
+  { name: '2A', pictureSize: 8704, rate: 522_240, kiloBits: 50_000 },
+  { name: '32', pictureSize: 22_080, rate: 589_824, kiloBits: 135_000 },
+  { name: '33', pictureSize: 36_864, rate: 983_040, kiloBits: 240_000 },
+  { name: '34', pictureSize: 36_864, rate: 2_073_600, kiloBits: 240_000 },
 ];
+
+/** Bits a second that no level goes beyond. */
+export const MOST_H264_BITS = 240e6;
 
 interface FrameRate {
   readonly widthPx: number;
@@ -49,13 +56,17 @@ export function vp9Codec({ widthPx, heightPx, framesPerSecond }: FrameRate): str
 }
 
 /** The same for H.264 (RFC 6381, section 3.3): High, Main and Baseline profile, the better first. */
-export function h264Codecs({ widthPx, heightPx, framesPerSecond }: FrameRate): string[] {
+export function h264Codecs(
+  { widthPx, heightPx, framesPerSecond }: FrameRate,
+  bitsPerSecond: number,
+): string[] {
   const [across, down] = [Math.ceil(widthPx / 16), Math.ceil(heightPx / 16)];
   const size = across * down;
   const level = H264_LEVELS.find(
-    ({ pictureSize, rate }) =>
+    ({ pictureSize, rate, kiloBits }) =>
       size <= pictureSize &&
       size * framesPerSecond <= rate &&
+      bitsPerSecond <= 1000 * kiloBits &&
       Math.max(across, down) <= Math.sqrt(8 * pictureSize),
   );
   return ['6400', '4D40', '42E0'].map((profile) => `avc1.${profile}${(level ?? H264_LEVELS.at(-1)!).name}`);

@@ -62,6 +62,12 @@ describe('what moves in a film', () => {
 });
 
 describe('levels of the codecs', () => {
+  it('rise with the bits a second', () => {
+    const film = { widthPx: 1280, heightPx: 720, framesPerSecond: 30 };
+    // Level 4.1 takes 50 million, level 5 135 million (ITU-T H.264, table A-1).
+    expect([44e6, 51e6].map((bits) => h264Codecs(film, bits)[1])).toEqual(['avc1.4D4029', 'avc1.4D4032']);
+  });
+
   // 1280 x 720 x 30 is 27.6 million samples a second: VP9 level 3.1 (webmproject.org/vp9/levels), and 3600 blocks of
   // 16 x 16 in each frame: H.264 level 3.1 (ITU-T H.264, table A-1). 1080p30 is level 4 of both, 2160p30 5 and 5.1.
   it.each([
@@ -72,6 +78,6 @@ describe('levels of the codecs', () => {
   ])('%d x %d at %d', (widthPx, heightPx, framesPerSecond, vp9, h264) => {
     const film = { widthPx, heightPx, framesPerSecond };
     expect(vp9Codec(film)).toBe(vp9);
-    expect(h264Codecs(film)[0]).toBe(h264);
+    expect(h264Codecs(film, 1e6)[0]).toBe(h264);
   });
 });
