@@ -73,7 +73,7 @@ export function createQuestions(): Questions {
     async askSaveName({ suggestedName, folder, problem }) {
       const { key, text } = await ask({
         title: 'Save the study',
-        text: `${problem === null ? '' : `${problem} `}It is saved in ${folder}.`,
+        text: `${problem === null ? '' : `${problem} `}Studies are saved in ${folder}.`,
         field: { label: 'Name', value: suggestedName },
         answers: [
           { key: 'stay', label: 'Not now' },

@@ -127,7 +127,8 @@ function readTable(coefficients: Float64Array, cells: number): BackgroundTable {
       t += step;
       if (Math.abs(step) <= 1e-9 * t) break;
     }
-    return toRedshift((low + t) / perCell);
+    // The last value stands for the last redshift, not for a rounding beyond it.
+    return Math.min(TABLE_MAX_REDSHIFT, toRedshift((low + t) / perCell));
   };
 
   return {

@@ -2,7 +2,7 @@ import type { Quantity } from '../../../shared-core/report/quantity.ts';
 import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
 import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
 
-/** A column of the ledger: one number a row, or two that are read together, one above the other. */
+/** A column of the ledger: one number a row, or two or three that are read together, one above the other. */
 export interface LedgerColumn {
   readonly quantities: readonly Quantity<ShellStatistics>[];
   /** Shorter headings than the quantities' own titles, where room is short. */
@@ -22,21 +22,20 @@ export const NARROW_LEDGER: readonly LedgerColumn[] = [
   { ...column(7, 'lookbackMinGyr', 'lookbackMaxGyr'), headings: ['t_L min', 't_L max'] },
 ];
 
-/** Every number of the core. */
+/** Every number of the core, in the room over the cone of the smallest window. */
 export const WHOLE_LEDGER: readonly LedgerColumn[] = [
   column(7.5, 'zMin', 'zMax'),
   column(9, 'count', 'weightedCount'),
-  column(8.5, 'zMean', 'zMedian'),
-  column(7.5, 'zEffective'),
+  column(8.5, 'zMean', 'zMedian', 'zEffective'),
   column(8, 'comovingMinMpc', 'comovingMaxMpc'),
   { ...column(8, 'lookbackMinGyr', 'lookbackMaxGyr'), headings: ['t_L min', 't_L max'] },
   { ...column(8, 'ageMinGyr', 'ageMaxGyr'), headings: ['age min', 'age max'] },
   column(9.5, 'densityPerMpc3', 'densityErrorPerMpc3'),
-  column(10, 'volumeMpc3', 'effectiveVolumeMpc3'),
   {
-    ...column(13, 'fundamentalWavenumberPerMpc', 'effectiveVolumeUniformMpc3'),
-    headings: ['k fund', 'V_eff even'],
+    ...column(10, 'volumeMpc3', 'effectiveVolumeMpc3', 'effectiveVolumeUniformMpc3'),
+    headings: ['V', 'V eff', 'V eff even'],
   },
+  { ...column(9, 'fundamentalWavenumberPerMpc'), headings: ['k fund'] },
 ];
 
 function column(characters: number, ...keys: readonly string[]): LedgerColumn {

@@ -23,10 +23,10 @@ export function ShapeEditor(props: {
   const { draft, list, holePossible, isNew, onChange, onApply, onCancel } = props;
   const [trouble, setTrouble] = useState<DraftTrouble | null>(null);
   const form = useRef<HTMLFormElement>(null);
-  useLayoutEffect(
-    () => form.current?.querySelector<HTMLElement>('input:not([type=radio]), textarea, button')?.focus(),
-    [],
-  );
+  useLayoutEffect(() => {
+    form.current?.querySelector<HTMLElement>('input:not([type=radio]), textarea, button')?.focus();
+    form.current?.scrollIntoView({ block: 'nearest' });
+  }, []);
   const put = (next: ShapeDraft): void => {
     setTrouble(null);
     onChange(next, list);

@@ -53,6 +53,16 @@ describe.each([
     }
   });
 
+  it('inverts to redshifts that it can read again, up to the last', () => {
+    const [farthest, earliest] = [table.comovingMpc(1100), table.lookbackGyr(1100)];
+    for (let i = 0; i <= 40; i++) {
+      // From the last value down, each time by twice the distance of neighbouring numbers.
+      const share = i === 0 ? 1 : 1 - 2 ** (i - 54);
+      expect(table.redshiftAtComovingMpc(farthest * share)).toBeLessThanOrEqual(1100);
+      expect(table.redshiftAtLookbackGyr(earliest * share)).toBeLessThanOrEqual(1100);
+    }
+  });
+
   it('never falls, across cells too', () => {
     const z = Float64Array.from({ length: 20_001 }, (_, i) => 20 * (i / 20_000) ** 3);
     const comoving = new Float64Array(z.length);
