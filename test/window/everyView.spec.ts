@@ -34,6 +34,10 @@ test('axe finds nothing in any view, dark and light: the window and its panels',
     await page.keyboard.press('Escape');
   }
 
+  await page.getByRole('button', { name: 'Light', exact: true }).click();
+  await bothThemes(page, '.popover:popover-open', 'the light');
+  await page.keyboard.press('Escape');
+
   await page.keyboard.press(']');
   await page.getByRole('button', { name: 'Whole ledger' }).click();
   await bothThemes(page, '.wide-ledger', 'whole ledger');
@@ -94,7 +98,10 @@ test('axe finds nothing in any view, dark and light: dialogs, notices and the pi
     await views.selectOption({ label: view });
     await accessible(page, dialog);
   }
-  await bench.getByLabel('Size').selectOption('own');
+  await bench.getByText('Film', { exact: true }).click();
+  await accessible(page, dialog);
+  await bench.getByText('Picture', { exact: true }).click();
+  await bench.getByLabel('Size', { exact: true }).selectOption('own');
   await bench.getByLabel('Width').fill('0');
   await expect(bench.getByRole('button', { name: 'Export PNG' })).toBeDisabled();
   await bothThemes(page, dialog, 'picture bench, a size that is refused');

@@ -141,7 +141,11 @@ export async function legible(page: Page, within = 'body'): Promise<void> {
 
 async function judged(axe: AxeBuilder): Promise<void> {
   const { violations } = await axe.analyze();
-  expect(violations.map((v) => `${v.id}: ${v.nodes.map((n) => n.target.join(' ')).join(', ')}`)).toEqual([]);
+  expect(
+    violations.map(
+      (v) => `${v.id}: ${v.nodes.map((n) => `${n.target.join(' ')} (${n.failureSummary})`).join('; ')}`,
+    ),
+  ).toEqual([]);
 }
 
 /** What a download holds, as text. */
