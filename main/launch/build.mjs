@@ -51,7 +51,7 @@ export async function build(wanted) {
     await bundle({
       configFile: join(root, part.config),
       root: join(root, folderOf(part.config)),
-      logLevel: 'warn',
+      logLevel: 'error',
     });
     writeFileSync(stamp, print);
   }
