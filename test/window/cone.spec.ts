@@ -1,4 +1,6 @@
 import type { Page } from '@playwright/test';
+import type { ConeView } from '../../renderer/cone/coneView.ts';
+import type { FrameStatistics, GalaxyInput } from '../../renderer/cone/types.ts';
 import { serveCone } from './coneServer.ts';
 import { expect, ready, test } from './window.ts';
 
@@ -36,9 +38,81 @@ test('without a GPU the page makes no WebGL context, not for a whole sky either'
   await expect(page.locator('.stage-notice')).toHaveCount(0);
 });
 
+/** Notes what the page asks of its workers; runs before anything of it. */
+function noteTasks(): void {
+  const asked: string[] = [];
+  Object.assign(globalThis, { asked });
+  const original = Worker.prototype.postMessage as (message: unknown, ...more: unknown[]) => void;
+  Worker.prototype.postMessage = function (this: Worker, message: unknown, ...more: unknown[]) {
+    const { task } = message as { task?: { kind?: string } | null };
+    if (task?.kind !== undefined) asked.push(task.kind);
+    return original.call(this, message, ...more);
+  } as typeof Worker.prototype.postMessage;
+}
+
+test('region, galaxies and colours are made ready in a worker', async ({ desk }) => {
+  const page = await desk.open({ init: noteTasks });
+  await ready(page);
+  const asked = () => page.evaluate(() => (globalThis as unknown as { asked: string[] }).asked);
+  await expect.poll(asked).toContain('store');
+  expect(await asked()).toContain('fields');
+  await page.locator('.stage-colour select').selectOption('shell');
+  await expect.poll(asked).toContain('colours');
+});
+
+test('a region that changes while galaxies are drawn and sorted: the newest wins, nothing throws', async ({
+  chrome,
+}) => {
+  const server = await serveCone();
+  const page = await chrome.newPage({ viewport: { width: 900, height: 600 } });
+  const errors: string[] = [];
+  page.on('pageerror', (error) => errors.push(String(error)));
+  try {
+    await page.goto(`${server.address}?n=300000`);
+    await page.waitForFunction(() => document.documentElement.dataset.rest === 'yes');
+    await page.evaluate(async () => {
+      const { cone, galaxies } = globalThis as unknown as Harness;
+      const box = (raDeg: number) => ({
+        centreRaDeg: raDeg,
+        centreDecDeg: 4,
+        radiusDeg: 3,
+        positionAngleDeg: 90,
+        rings: [
+          {
+            raDeg: Float64Array.of(raDeg - 2, raDeg + 2, raDeg + 2, raDeg - 2),
+            decDeg: Float64Array.of(2, 2, 6, 6),
+          },
+        ],
+      });
+      for (const fields of [1, 3, 2, 4, 2]) {
+        cone.setFootprint({
+          fields: Array.from({ length: fields }, (_, i) => box(152 + 5 * i)),
+          wide: false,
+        });
+        cone.setGalaxies(galaxies);
+        for (let i = 0; i < 4; i++) {
+          cone.orbitBy(3, 1);
+          await new Promise(requestAnimationFrame);
+        }
+      }
+    });
+    const fields = () =>
+      page.evaluate(() => {
+        const { cone, log } = globalThis as unknown as Harness;
+        return log.at(-1)?.atRest ? `${cone.state().fieldCount} fields, ${log.at(-1)!.total} galaxies` : '';
+      });
+    await expect.poll(fields).toBe('2 fields, 300000 galaxies');
+    expect(errors).toEqual([]);
+  } finally {
+    await page.close();
+    await server.close();
+  }
+});
+
 interface Harness {
-  readonly log: { readonly layer: string; readonly drawn: number }[];
-  readonly cone: { drawingState(): { readonly webgl: string }; orbitBy(x: number, y: number): void };
+  readonly log: readonly FrameStatistics[];
+  readonly cone: ConeView;
+  readonly galaxies: GalaxyInput;
 }
 
 test('WebGL by choice: it draws, its loss is told and drawn around, and it is taken up again', async ({
