@@ -86,7 +86,7 @@ test('reading shows how far it is and can be cancelled: what was open before is 
   await expect(page.locator('tr[data-shell="0"]')).toHaveText(first ?? '');
 });
 
-test('two different files of one name are two: undo brings the first back, redo the second', async ({
+test('two files of one name are two: undo brings the first back; files without usable rows say so', async ({
   desk,
 }) => {
   const page = await desk.open();
@@ -101,6 +101,14 @@ test('two different files of one name are two: undo brings the first back, redo 
   await page.keyboard.press('Control+Shift+z');
   await expect(line(page)).toHaveText('400 kept · 0 set aside');
   await expect(source(page)).not.toContainText('has changed');
+
+  // Without a row, or without one that can be used, the window says so.
+  await pick(page, csv('none.csv', 'ra,dec,z\n'));
+  await expect(line(page)).toHaveText('0 kept · 0 set aside');
+  await expect(page.getByText('The catalogue has a header and no rows: no galaxies to count.')).toBeVisible();
+  await pick(page, csv('bad.csv', 'ra,dec,z\n10,95,0.5\n400,5,0.5\n'));
+  await expect(line(page)).toHaveText('0 kept · 2 set aside');
+  await expect(page.getByText(/^No row of the catalogue can be used: see Source/)).toBeVisible();
 });
 
 test('memory that is too short for a catalogue is told, and the one before comes back', async ({ desk }) => {
@@ -110,15 +118,4 @@ test('memory that is too short for a catalogue is told, and the one before comes
   await expect(source(page)).toContainText(/Memory ran short while working on the catalogue: /);
   await page.getByRole('button', { name: 'Back to shapley.csv' }).click();
   await expect(line(page)).toHaveText(/4.212 kept/);
-});
-
-test('a catalogue of no rows, and one of which no row can be used, say so', async ({ desk }) => {
-  const page = await desk.open();
-  await ready(page);
-  await pick(page, csv('none.csv', 'ra,dec,z\n'));
-  await expect(line(page)).toHaveText('0 kept · 0 set aside');
-  await expect(page.getByText('The catalogue has a header and no rows: no galaxies to count.')).toBeVisible();
-  await pick(page, csv('bad.csv', 'ra,dec,z\n10,95,0.5\n400,5,0.5\n'));
-  await expect(line(page)).toHaveText('0 kept · 2 set aside');
-  await expect(page.getByText(/^No row of the catalogue can be used: see Source/)).toBeVisible();
 });
