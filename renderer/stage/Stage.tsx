@@ -161,8 +161,12 @@ export function Stage() {
           Shells cannot be drawn in 3D now ({drawing.value.reason}); everything else goes on working.
         </p>
       ) : null}
-      {engine.selected.value === null && engine.progress.value === null ? (
-        <p class="stage-empty">Open a catalogue, or drop a file here, and its cone is drawn.</p>
+      {footprint.value === null && engine.selected.value === null && engine.progress.value === null ? (
+        <p class="stage-empty">
+          {studyState.study.value.source === null
+            ? 'Open a catalogue, or drop a file here, and its cone is drawn.'
+            : 'The cone is drawn once the catalogue can be read: see Source.'}
+        </p>
       ) : null}
     </div>
   );
