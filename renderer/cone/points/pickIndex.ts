@@ -33,8 +33,11 @@ export function* pickIndex(
   const filled = coarse.reduce((sum, one) => sum + one, 0);
   const side = Math.min(FINEST, Math.max(4, Math.round(COARSE * Math.sqrt(count / (PER_CELL * filled)))));
   const counts = new Uint32Array(6 * side * side);
+  const cells = new Uint32Array(count);
   for (let s = start; s < start + count; s++) {
-    counts[cellOf(x[s]!, y[s]!, z[s]!, side)]!++;
+    const cell = cellOf(x[s]!, y[s]!, z[s]!, side);
+    cells[s - start] = cell;
+    counts[cell]!++;
     if (s % SLICE === 0) yield;
   }
   const used = counts.reduce((sum, n) => sum + (n > 0 ? 1 : 0), 0);
@@ -49,37 +52,72 @@ export function* pickIndex(
   starts[used] = count;
   const slots = words(count);
   for (let s = start; s < start + count; s++) {
-    slots[next[cellOf(x[s]!, y[s]!, z[s]!, side)]!++] = s;
+    slots[next[cells[s - start]!]!++] = s;
     if (s % SLICE === 0) yield;
   }
+  const bits = new Uint32Array(comoving.buffer, comoving.byteOffset, comoving.length);
   const caps = new Float32Array(words(4 * used).buffer);
   for (let cell = 0; cell < used; cell++) {
     const own = slots.subarray(starts[cell]!, starts[cell + 1]!);
-    own.set(Array.from(own).sort((a, b) => depth(comoving[a]!) - depth(comoving[b]!)));
-    let [mx, my, mz] = [0, 0, 0];
+    sortByDepth(own, bits);
+    let mx = 0;
+    let my = 0;
+    let mz = 0;
     for (const s of own) {
       mx += x[s]! / own.length;
       my += y[s]! / own.length;
       mz += z[s]! / own.length;
     }
-    let reach = 0;
-    for (const s of own) reach = Math.max(reach, Math.hypot(x[s]! - mx, y[s]! - my, z[s]! - mz));
+    let reach2 = 0;
+    for (const s of own) {
+      const dx = x[s]! - mx;
+      const dy = y[s]! - my;
+      const dz = z[s]! - mz;
+      reach2 = Math.max(reach2, dx * dx + dy * dy + dz * dz);
+    }
     // The middle is kept in 32 bits: the reach covers what that moves it.
-    caps.set([mx, my, mz, reach + 1e-6], 4 * cell);
+    caps.set([mx, my, mz, Math.sqrt(reach2) + 1e-6], 4 * cell);
     yield;
   }
   return { slots, starts, caps };
 }
 
-/** A galaxy whose distance is not known stands last. */
-const depth = (mpc: number): number => (Number.isNaN(mpc) ? Number.MAX_VALUE : mpc);
+/** Slots in one number beside the 32 bits of a distance. */
+const ROOM = 2 ** 21;
+
+/**
+ * Sorts a cell's slots from near to far. The bits of positive floats stand in the order of the floats, and those of no
+ * number behind all: as plain numbers they are sorted many times faster than by a function.
+ */
+function sortByDepth(slots: Uint32Array, bits: Uint32Array): void {
+  if (slots.length > ROOM) {
+    slots.sort((a, b) => bits[a]! - bits[b]!);
+    return;
+  }
+  const keys = Float64Array.from(slots, (s, k) => bits[s]! * ROOM + k).sort();
+  slots.set(Uint32Array.from(keys, (key) => slots[key % ROOM]!));
+}
 
 /** The cell of a direction on the six faces of a cube, side x side each. */
 function cellOf(x: number, y: number, z: number, side: number): number {
-  const [ax, ay, az] = [Math.abs(x), Math.abs(y), Math.abs(z)];
-  let [face, u, v, w] = [z < 0 ? 5 : 4, x, y, az];
-  if (ax >= ay && ax >= az) [face, u, v, w] = [x < 0 ? 1 : 0, y, z, ax];
-  else if (ay >= az) [face, u, v, w] = [y < 0 ? 3 : 2, x, z, ay];
-  const place = (t: number) => Math.min(side - 1, Math.floor(((t / w + 1) / 2) * side));
-  return (face * side + place(v)) * side + place(u);
+  // Plain variables: this runs for every galaxy.
+  const ax = Math.abs(x);
+  const ay = Math.abs(y);
+  const az = Math.abs(z);
+  let face = z < 0 ? 5 : 4;
+  let u = x / az;
+  let v = y / az;
+  if (ax >= ay && ax >= az) {
+    face = x < 0 ? 1 : 0;
+    u = y / ax;
+    v = z / ax;
+  } else if (ay >= az) {
+    face = y < 0 ? 3 : 2;
+    u = x / ay;
+    v = z / ay;
+  }
+  const half = side / 2;
+  const column = Math.min(side - 1, Math.floor((u + 1) * half));
+  const row = Math.min(side - 1, Math.floor((v + 1) * half));
+  return (face * side + row) * side + column;
 }
