@@ -3,6 +3,7 @@ import { createHash } from 'node:crypto';
 import { existsSync, readdirSync, readFileSync, statSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { root } from './install.mjs';
+import { takeTurn } from './turn.mjs';
 
 /**
  * @typedef {object} Part
@@ -42,19 +43,36 @@ function fingerprint(folders) {
  */
 export async function build(wanted) {
   for (const name of wanted) {
-    const part = parts[name];
-    const print = fingerprint(part.sources);
-    const stamp = join(root, 'build', `${name}.stamp`);
-    if (existsSync(stamp) && readFileSync(stamp, 'utf8') === print) continue;
-    console.error(`conewright: building ${part.words} ...`);
-    const { build: bundle } = await import('vite');
-    await bundle({
-      configFile: join(root, part.config),
-      root: join(root, folderOf(part.config)),
-      logLevel: 'error',
-    });
-    writeFileSync(stamp, print);
+    if (isFresh(name)) continue;
+    const { words, config } = parts[name];
+    const giveBack = takeTurn(join(root, 'build', `${name}.turn`), () =>
+      console.error(`conewright: another start is building ${words}, waiting for it ...`),
+    );
+    try {
+      if (isFresh(name)) continue;
+      console.error(`conewright: building ${words} ...`);
+      // Taken before: a source that changes meanwhile is built anew by the next start.
+      const print = fingerprint(parts[name].sources);
+      const { build: bundle } = await import('vite');
+      await bundle({
+        configFile: join(root, config),
+        root: join(root, folderOf(config)),
+        logLevel: 'error',
+      });
+      writeFileSync(stampOf(name), print);
+    } finally {
+      giveBack();
+    }
   }
+}
+
+/** @param {keyof typeof parts} name */
+const stampOf = (name) => join(root, 'build', `${name}.stamp`);
+
+/** @param {keyof typeof parts} name */
+function isFresh(name) {
+  const stamp = stampOf(name);
+  return existsSync(stamp) && readFileSync(stamp, 'utf8') === fingerprint(parts[name].sources);
 }
 
 /** @param {string} path */

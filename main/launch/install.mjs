@@ -4,6 +4,7 @@ import { createHash } from 'node:crypto';
 import { existsSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
+import { takeTurn } from './turn.mjs';
 
 export const root = fileURLToPath(new URL('../..', import.meta.url));
 const oldestNode = { major: 20, minor: 19 };
@@ -25,7 +26,23 @@ export function install() {
     .update(readFileSync(join(root, 'package-lock.json')))
     .digest('hex');
   const stamp = join(root, 'node_modules', '.conewright-installed');
-  if (existsSync(stamp) && readFileSync(stamp, 'utf8') === lock) return;
+  const isThere = () => existsSync(stamp) && readFileSync(stamp, 'utf8') === lock;
+  if (isThere()) return;
+  const giveBack = takeTurn(join(root, 'build', 'packages.turn'), () =>
+    console.error('conewright: another start is installing packages, waiting for it ...'),
+  );
+  // Also where npm fails and the process ends.
+  process.on('exit', giveBack);
+  if (!isThere()) installAll(stamp, lock);
+  giveBack();
+  process.off('exit', giveBack);
+}
+
+/**
+ * @param {string} stamp
+ * @param {string} lock
+ */
+function installAll(stamp, lock) {
   console.error('conewright: installing packages (once, about a minute) ...');
   const npm = process.platform === 'win32' ? 'npm.cmd' : 'npm';
   const run = spawnSync(npm, ['ci', '--no-audit', '--no-fund', '--loglevel=error'], {
