@@ -1,4 +1,4 @@
-import { computed, effect, type ReadonlySignal, signal } from '@preact/signals';
+import { batch, computed, effect, type ReadonlySignal, signal } from '@preact/signals';
 import { columnsOf } from '../../shared-core/study/colourBy.ts';
 import type { ColourBy } from '../../shared-core/study/schema.ts';
 import { EngineClient } from '../engine/client.ts';
@@ -99,7 +99,8 @@ export function createEngineState(
         progress.value = null;
         if (event.stage === 'load') loaded.value = null;
         if (event.stage === 'load' || event.stage === 'select') selected.value = null;
-        columns.value = [];
+        // Distances and densities of these galaxies failed: their columns are still theirs, and are not sent again.
+        if (event.stage !== 'background' && event.stage !== 'density') columns.value = [];
         if (event.stage === 'columns') return;
         if (event.stage !== 'density') background.value = null;
         density.value = null;
@@ -111,7 +112,8 @@ export function createEngineState(
     }
   };
   const client = new EngineClient({
-    onEvent: receive,
+    // One event is one change: between its parts, galaxies would stand beside what belongs to others.
+    onEvent: (event) => batch(() => receive(event)),
     onDeath: (sentence) => {
       progress.value = null;
       failure.value = { stage: 'worker', sentence };

@@ -1,0 +1,86 @@
+import { effect, signal } from '@preact/signals';
+import { describe, expect, it } from 'vitest';
+import { EngineDesk } from '../../renderer/engine/desk.ts';
+import type { EngineEvent, EngineRequest, EngineSource } from '../../renderer/engine/protocol.ts';
+import { createEngineState } from '../../renderer/state/engineState.ts';
+import { createNotices } from '../../renderer/state/notices.ts';
+import { createStudyState } from '../../renderer/state/studyState.ts';
+import { findPublishedSet } from '../../shared-core/cosmology/publishedSets.ts';
+import { emptyStudy } from '../../shared-core/study/document.ts';
+import { change, changeLook } from '../../shared-core/study/edits.ts';
+import type { ColourBy } from '../../shared-core/study/schema.ts';
+
+const FILE = `ra,dec,z,mag,name\n${Array.from({ length: 40 }, (_, i) => `${150 + i / 20},3,${0.5 + i / 50},${15 + i},g${i}`).join('\n')}\n`;
+
+async function* bytes(): AsyncIterable<Uint8Array> {
+  yield new TextEncoder().encode(FILE);
+}
+
+/** The page's state with the engine's own desk behind it, in place of a thread; `short` of memory when told so. */
+function stateOf() {
+  const studyState = createStudyState(emptyStudy(), createNotices());
+  const source = signal<EngineSource | null>({ kind: 'url', url: 'blob:a', name: 'a.csv', sizeBytes: 1 });
+  const memory = { short: false };
+  const makeWorker = (): Worker => {
+    const worker = { onmessage: null as ((event: { data: EngineEvent }) => void) | null };
+    const desk = new EngineDesk({
+      emit: (data) => worker.onmessage?.({ data }),
+      openUrl: async () => bytes(),
+      floats: (length) => {
+        if (memory.short) throw new RangeError('Array buffer allocation failed');
+        return new Float32Array(length);
+      },
+      share: (sample) => sample,
+      breathe: () => new Promise((resume) => setTimeout(resume, 0)),
+    });
+    const postMessage = (request: EngineRequest) => {
+      if (request.kind === 'want') void desk.want(request.wanted, request.serial);
+    };
+    return Object.assign(worker, { postMessage, terminate: () => undefined }) as unknown as Worker;
+  };
+  const engine = createEngineState(studyState, source, signal<ColourBy | null>(null), makeWorker);
+  return { studyState, engine, memory };
+}
+
+describe('what the page keeps of the engine', () => {
+  it('columns of the galaxies outlast a failure of what does not concern them', async () => {
+    const { studyState, engine, memory } = stateOf();
+    studyState.perform(changeLook('Colour otherwise', { colourBy: { column: 'mag' } }));
+    await expect.poll(() => engine.columns.value.length).toBe(1);
+    const [mag] = engine.columns.value;
+    memory.short = true;
+    const { parameters } = findPublishedSet('wmap9');
+    studyState.perform(change('Another cosmology', { cosmology: parameters }));
+    await expect.poll(() => engine.failure.value?.stage).toBe('background');
+    expect(engine.background.value).toBeNull();
+    memory.short = false;
+    studyState.undo();
+    await expect.poll(() => engine.background.value).not.toBeNull();
+    await expect.poll(() => engine.progress.value).toBeNull();
+    expect(engine.failure.value).toBeNull();
+    expect(engine.columns.value).toEqual([mag]);
+  });
+
+  it('galaxies never stand beside what belongs to others, between one event and the next either', async () => {
+    const { studyState, engine } = stateOf();
+    await expect.poll(() => engine.fresh.value).toBe(true);
+    const seen: (readonly [number, number | null])[] = [];
+    const stop = effect(() => {
+      const galaxies = engine.selected.value;
+      if (galaxies !== null)
+        seen.push([galaxies.sample.count, engine.background.value?.comovingMpc.length ?? null]);
+    });
+    const region = { parts: [{ kind: 'cap', raDeg: 150, decDeg: 3, radiusDeg: 1 }], holes: [] } as const;
+    studyState.perform(change('Observe less', { region }));
+    await expect.poll(() => seen.length).toBeGreaterThan(2);
+    stop();
+    // All with their distances, the fewer without, the fewer with theirs; never all of them without.
+    const few = seen.at(-1)![0];
+    expect(few).toBeLessThan(40);
+    expect(seen).toEqual([
+      [40, 40],
+      [few, null],
+      [few, few],
+    ]);
+  });
+});
