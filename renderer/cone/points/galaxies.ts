@@ -30,6 +30,8 @@ export class Galaxies {
   private table: RadiusTable = radiusTable([0, 1], [0, 1]);
   private colouring: ColouringInput = { kind: 'radius', map: 'harbour' };
   private shells: readonly ShellInput[] = [];
+  /** Others will come: a store sorted anew until then is still of those before. */
+  private held = false;
   private building: AbortController | null = null;
   private colourJob: AbortController | null = null;
   private radiusJob: AbortController | null = null;
@@ -45,6 +47,7 @@ export class Galaxies {
 
   /** Others will come: what is drawn stays, and none of it can be pointed at. */
   hold(): void {
+    this.held = true;
     this.current = false;
     this.building?.abort();
     this.colourJob?.abort();
@@ -52,16 +55,18 @@ export class Galaxies {
 
   setInput(input: GalaxyInput | null): void {
     this.hold();
+    this.held = false;
     this.input = input;
     this.rebuild();
   }
 
   /** Sorts the galaxies by other fields; `sorted` is called when they are, and the picture may change. */
   setCentres(centres: Float64Array, sorted: () => void): void {
-    const same = centres.length === this.centres.length && centres.every((v, i) => v === this.centres[i]);
+    // Sorting by others may be under way, and would end after this.
+    const settled = sameNumbers(this.nextCentres, this.centres);
     this.nextCentres = centres;
     this.whenSorted = sorted;
-    if (same || !this.input) this.takeCentres();
+    if ((settled && sameNumbers(centres, this.centres)) || !this.input) this.takeCentres();
     else this.rebuild();
   }
 
@@ -155,7 +160,7 @@ export class Galaxies {
     void this.work.store(basis, this.memory, job.signal).then((store) => {
       if (!store || job.signal.aborted) return;
       this.store = store;
-      this.current = true;
+      this.current = !this.held;
       this.ready = 1;
       this.takeCentres();
       this.changed('store');
@@ -208,3 +213,6 @@ export class Galaxies {
     });
   }
 }
+
+const sameNumbers = (a: Float64Array, b: Float64Array): boolean =>
+  a.length === b.length && a.every((v, i) => v === b[i]);

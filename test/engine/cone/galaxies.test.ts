@@ -61,6 +61,36 @@ describe('galaxies that change', () => {
     expect(galaxies.place(1500)!.field).toBe(1);
   });
 
+  it('are sorted by the fields that came last, also where those are the ones of before', async () => {
+    const { galaxies, log } = galaxiesWithLog();
+    const sorted: string[] = [];
+    galaxies.setCentres(ONE, () => undefined);
+    galaxies.setInput(around(1000));
+    await expect.poll(() => log).toContain('store');
+    const before = galaxies.store;
+    galaxies.setCentres(TWO, () => sorted.push('overtaken'));
+    galaxies.setCentres(ONE, () => sorted.push(`one with ${galaxies.store!.ranges.length} range`));
+    await expect.poll(() => galaxies.store).not.toBe(before);
+    expect(galaxies.store!.ranges).toHaveLength(1);
+    expect(sorted).toEqual(['one with 1 range']);
+    expect(galaxies.place(500)!.field).toBe(0);
+  });
+
+  it('cannot be pointed at while others are on the way, also after they were sorted by other fields', async () => {
+    const { galaxies, log } = galaxiesWithLog();
+    galaxies.setCentres(ONE, () => undefined);
+    galaxies.setInput(around(1000));
+    await expect.poll(() => galaxies.current).toBe(true);
+    galaxies.hold();
+    galaxies.setCentres(TWO, () => log.push('two'));
+    await expect.poll(() => log).toContain('two');
+    expect(galaxies.store!.ranges).toHaveLength(2);
+    expect(galaxies.current).toBe(false);
+    galaxies.setInput(around(1200));
+    await expect.poll(() => galaxies.current).toBe(true);
+    expect(galaxies.store!.count).toBe(1200);
+  });
+
   it('keep their colours from values that belong to others', async () => {
     const { galaxies, log } = galaxiesWithLog();
     galaxies.setInput(around(100));
