@@ -1,6 +1,6 @@
 import './stage.css';
 import { useComputed, useSignal, useSignalEffect } from '@preact/signals';
-import { useEffect, useRef } from 'preact/hooks';
+import { useEffect, useMemo, useRef } from 'preact/hooks';
 import { ConeView } from '../cone/coneView.ts';
 import type { ViewState as ConeState, DrawingState, FootprintInput } from '../cone/types.ts';
 import { regionFields, regionFootprint } from '../panels/regionReady.ts';
@@ -9,6 +9,7 @@ import { radialPixel, STRIP_LEFT_PX, STRIP_RIGHT_PX, shownWindow } from '../stri
 import { readingsOf } from '../strip/readings.ts';
 import { colouring, coneFootprint, coneShells, radialScale, VIEW_NAMES } from './coneInputs.ts';
 import { GalaxyCard } from './GalaxyCard.tsx';
+import { ownColouring } from './ownColouring.ts';
 import { readTheme } from './readTheme.ts';
 import { StageBar } from './StageBar.tsx';
 import { separationText } from './separationText.ts';
@@ -104,9 +105,11 @@ export function Stage() {
     const fitting = footprint.value === null ? NO_FOOTPRINT : coneFootprint(footprint.value);
     cone.value?.setFootprint(fitting);
   });
+  const colouringOf = useMemo(ownColouring, []);
   useSignalEffect(() => {
-    const input = colours.value?.input;
-    if (cone.value !== null && input !== undefined) cone.value.setColouring(input);
+    if (cone.value === null) return;
+    const input = colouringOf(engine.selected.value, colours.value?.input ?? null, colourMap.value);
+    if (input !== null) cone.value.setColouring(input);
   });
   useSignalEffect(() => cone.value?.setLight(light.value));
   useSignalEffect(() => {
