@@ -13,6 +13,7 @@ import { estimateFootprint } from '../../shared-core/sky/estimate.ts';
 import { footprintFields } from '../../shared-core/sky/fields.ts';
 import type { Footprint } from '../../shared-core/sky/region.ts';
 import { columnRows, type NamedColumn } from './columnRows.ts';
+import { loadKey } from './loadKey.ts';
 import type { EngineEvent, EngineSource, FootprintPicture, GalaxyRow, Stage, Wanted } from './protocol.ts';
 import { sourceBytes, startSha256 } from './sourceBytes.ts';
 
@@ -163,6 +164,7 @@ export class EngineDesk {
       kind: 'loaded',
       loaded: {
         source: wish.source,
+        readFor: loadKey(wish),
         header,
         mapping,
         account: catalogue.account,
@@ -380,11 +382,6 @@ function picture(footprint: Footprint): FootprintPicture {
     rings: footprint.outline(),
     fields: footprintFields(footprint),
   };
-}
-
-/** What the reading of the file depends on. */
-function loadKey({ source, mapping, cuts }: Wanted): string {
-  return key(source, mapping, [...new Set(cuts.map((c) => c.column))].sort());
 }
 
 function key(...parts: unknown[]): string {

@@ -26,6 +26,8 @@ export interface Wanted {
 /** The file as read: before region and cuts. */
 export interface Loaded {
   readonly source: EngineSource;
+  /** The loadKey of the wish that it was read for. */
+  readonly readFor: string;
   readonly header: readonly string[];
   readonly mapping: ColumnMapping;
   readonly account: RowAccount;

@@ -82,7 +82,9 @@ export function createApp(
     cancelReading() {
       const reading = files.engineSource.value;
       if (engine.progress.value?.stage !== 'load' || reading?.kind !== 'url') return false;
-      const before = files.beforeOpening.value;
+      // Where the same file is read again for other columns, only what asked for that is taken back.
+      const read = engine.loadedNow.value;
+      const before = read === null ? files.beforeOpening.value : files.askedBefore(read.readFor);
       if (before === null)
         engine.giveUpReading(
           `Reading ${reading.name} was cancelled: the study is open without its galaxies. Press "Read again" to have them.`,

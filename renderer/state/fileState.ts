@@ -11,6 +11,7 @@ import type {
 import { emptyStudy, readStudy, writeStudy } from '../../shared-core/study/document.ts';
 import { change } from '../../shared-core/study/edits.ts';
 import type { Study, StudySource } from '../../shared-core/study/schema.ts';
+import { loadKey } from '../engine/loadKey.ts';
 import type { EngineSource } from '../engine/protocol.ts';
 import { demoStudy } from './demoStudy.ts';
 import { createFilesAtHand, type FileSource } from './filesAtHand.ts';
@@ -28,6 +29,8 @@ export interface FileState {
   readonly missingSource: ReadonlySignal<FileSource | null>;
   /** The study as it was before its present catalogue was opened; null when it came with it. */
   readonly beforeOpening: ReadonlySignal<Study | null>;
+  /** The latest earlier study that asked for a reading with this loadKey; null when none did. */
+  askedBefore(readFor: string): Study | null;
   /** The source was read whole for the first time: from now on a change of the file is told. */
   noteFingerprint(sha256: string): void;
   /** Takes the changed file, as it was read, for the study's source. */
@@ -323,6 +326,8 @@ export function createFileState({
     engineSource,
     missingSource,
     beforeOpening,
+    askedBefore: (readFor) =>
+      studyState.earlier((before) => loadKey({ ...before, source: readable(before.source) }) === readFor),
     noteFingerprint(sha256) {
       const named = source.value;
       if (named?.kind !== 'file') return;

@@ -1,7 +1,6 @@
 import { effect, signal } from '@preact/signals';
 import { describe, expect, it } from 'vitest';
-import { EngineDesk } from '../../renderer/engine/desk.ts';
-import type { EngineEvent, EngineRequest, EngineSource } from '../../renderer/engine/protocol.ts';
+import type { EngineSource } from '../../renderer/engine/protocol.ts';
 import { createEngineState } from '../../renderer/state/engineState.ts';
 import { createNotices } from '../../renderer/state/notices.ts';
 import { createStudyState } from '../../renderer/state/studyState.ts';
@@ -9,6 +8,7 @@ import { findPublishedSet } from '../../shared-core/cosmology/publishedSets.ts';
 import { emptyStudy } from '../../shared-core/study/document.ts';
 import { change, changeLook } from '../../shared-core/study/edits.ts';
 import type { ColourBy } from '../../shared-core/study/schema.ts';
+import { deskWorker } from './deskWorker.ts';
 
 const FILE = `ra,dec,z,mag,name\n${Array.from({ length: 40 }, (_, i) => `${150 + i / 20},3,${0.5 + i / 50},${15 + i},g${i}`).join('\n')}\n`;
 
@@ -16,28 +16,17 @@ async function* bytes(): AsyncIterable<Uint8Array> {
   yield new TextEncoder().encode(FILE);
 }
 
-/** The page's state with the engine's own desk behind it, in place of a thread; `short` of memory when told so. */
+/** The page's state of the engine; `short` of memory when told so. */
 function stateOf() {
   const studyState = createStudyState(emptyStudy(), createNotices());
   const source = signal<EngineSource | null>({ kind: 'url', url: 'blob:a', name: 'a.csv', sizeBytes: 1 });
   const memory = { short: false };
-  const makeWorker = (): Worker => {
-    const worker = { onmessage: null as ((event: { data: EngineEvent }) => void) | null };
-    const desk = new EngineDesk({
-      emit: (data) => worker.onmessage?.({ data }),
-      openUrl: async () => bytes(),
-      floats: (length) => {
-        if (memory.short) throw new RangeError('Array buffer allocation failed');
-        return new Float32Array(length);
-      },
-      share: (sample) => sample,
-      breathe: () => new Promise((resume) => setTimeout(resume, 0)),
-    });
-    const postMessage = (request: EngineRequest) => {
-      if (request.kind === 'want') void desk.want(request.wanted, request.serial);
-    };
-    return Object.assign(worker, { postMessage, terminate: () => undefined }) as unknown as Worker;
-  };
+  const makeWorker = deskWorker(async () => bytes(), {
+    floats: (length) => {
+      if (memory.short) throw new RangeError('Array buffer allocation failed');
+      return new Float32Array(length);
+    },
+  });
   const engine = createEngineState(studyState, source, signal<ColourBy | null>(null), makeWorker);
   return { studyState, engine, memory };
 }
