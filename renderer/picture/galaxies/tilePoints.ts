@@ -4,11 +4,10 @@ import { toneAlpha } from './toneAlpha.ts';
 
 /** Each pixel of a picture is this many squared of the grid that light is summed on. */
 export const SUPERSAMPLING = 2;
-/** Places of a disc's middle between grid points, each way. */
+/** Places of a disc's middle between grid points, each way; of a wide one half a grid point is nothing. */
 const PLACES = 8;
+const WIDE = 320;
 const FINE = 1024;
-/** Wider discs are given by a sharper one of this width, which only the largest prints of a few galaxies reach. */
-const MOST_SIDE = 320;
 
 /** A part of the picture in whole pixels. */
 export interface Tile {
@@ -79,18 +78,20 @@ function rowIndex(points: ScenePoints, pxPerUnit: number): { order: Uint32Array;
 
 interface Disc {
   readonly side: number;
+  readonly places: number;
   readonly weights: Float32Array;
 }
 
-/** The window's soft disc, exp(-4.5 (2r/diameter)^2), for PLACES x PLACES places of the middle between grid points. */
+/** The window's soft disc, exp(-4.5 (2r/diameter)^2), for each place of the middle between grid points. */
 function softDisc(diameter: number): Disc {
-  const side = Math.min(MOST_SIDE, 2 * Math.ceil((diameter + 0.5) / 2));
-  const weights = new Float32Array(PLACES * PLACES * side * side);
+  const side = 2 * Math.ceil((diameter + 0.5) / 2);
+  const places = side > WIDE ? 1 : PLACES;
+  const weights = new Float32Array(places * places * side * side);
   let d = 0;
-  for (let py = 0; py < PLACES; py++) {
-    for (let px = 0; px < PLACES; px++) {
-      const cx = (side - 1) / 2 + (px + 0.5) / PLACES;
-      const cy = (side - 1) / 2 + (py + 0.5) / PLACES;
+  for (let py = 0; py < places; py++) {
+    for (let px = 0; px < places; px++) {
+      const cx = (side - 1) / 2 + (px + 0.5) / places;
+      const cy = (side - 1) / 2 + (py + 0.5) / places;
       for (let row = 0; row < side; row++) {
         for (let column = 0; column < side; column++) {
           const r2 = (column + 0.5 - cx) ** 2 + (row + 0.5 - cy) ** 2;
@@ -99,12 +100,12 @@ function softDisc(diameter: number): Disc {
       }
     }
   }
-  return { side, weights };
+  return { side, places, weights };
 }
 
 /** @param xFine,yFine the galaxy's place in FINE-ths of a grid point from the tile's corner, whole numbers */
 function addDisc(
-  { side, weights }: Disc,
+  { side, places, weights }: Disc,
   light: Float32Array,
   width: number,
   height: number,
@@ -117,9 +118,9 @@ function addDisc(
   const left = Math.floor((xFine + shift) / FINE);
   const top = Math.floor((yFine + shift) / FINE);
   if (left >= width || top >= height || left + side <= 0 || top + side <= 0) return;
-  const placeX = Math.floor(((xFine + shift - FINE * left) * PLACES) / FINE);
-  const placeY = Math.floor(((yFine + shift - FINE * top) * PLACES) / FINE);
-  const base = (placeY * PLACES + placeX) * side * side;
+  const placeX = Math.floor(((xFine + shift - FINE * left) * places) / FINE);
+  const placeY = Math.floor(((yFine + shift - FINE * top) * places) / FINE);
+  const base = (placeY * places + placeX) * side * side;
   const firstColumn = Math.max(0, -left);
   const endColumn = Math.min(side, width - left);
   for (let row = Math.max(0, -top); row < Math.min(side, height - top); row++) {

@@ -214,8 +214,21 @@ describe('light and tone', () => {
     expect(image.filter((pixel) => pixel === table[0])).toHaveLength(width * height - 2);
   });
 
+  it('draws round discs, however wide they are wished', () => {
+    for (const diameter of [9, 32, 79, 300]) {
+      const { side, discs } = softDiscs(diameter);
+      expect(side).toBeLessThanOrEqual(PAD);
+      // Where the square ends there is next to no light: e^-4.5 is 0.011, and a quarter of a pixel more.
+      const first = discs.slice(0, side * side);
+      const border = first.filter((_, i) => i < side || i % side === 0);
+      expect(Math.max(...border)).toBeLessThan(0.03);
+      expect(Math.max(...first)).toBeGreaterThan(0.9);
+    }
+  });
+
   it('knows the light of a disc', () => {
-    for (const diameter of [2.4, 4, 9]) {
+    // To the widest: a few galaxies at four times their size, on a screen of two pixels a CSS pixel.
+    for (const diameter of [2.4, 4, 9, 16, 32, 80]) {
       const { discs } = softDiscs(diameter);
       const mean = discs.reduce((a, b) => a + b, 0) / 16;
       // Mean over the places between pixels; the square holds a little more than the circle, e^-4.5 of the light.

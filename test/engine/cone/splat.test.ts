@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { pointLayout, pointViews } from '../../../renderer/cone/points/pointArrays.ts';
+import { MOST_WORKERS, RESERVED_BYTES, SCRATCH_AT } from '../../../renderer/cone/points/software/messages.ts';
 import {
   PAD,
   type Splat,
@@ -27,7 +28,7 @@ function seeded(seed: number): () => number {
 
 /** A memory with points in all directions, some beyond the picture, some empty slots, and room for the sums. */
 function scene(shared: boolean) {
-  const layout = pointLayout(SLOTS, 65536);
+  const layout = pointLayout(SLOTS, RESERVED_BYTES);
   const sumsAt = Math.ceil(layout.end / 16) * 16;
   const bytes = sumsAt + 4 * sumsLength(WIDTH, HEIGHT);
   const pages = Math.ceil(bytes / 65536);
@@ -134,6 +135,7 @@ describe('the splat', () => {
       ['single pixels', 1, 0],
       ['discs', 3.2, 0],
       ['large discs', 12, 0],
+      ['the largest discs', 80, 0],
       ['single pixels in perspective', 1, 0.7],
       ['discs in perspective', 5, 0.7],
       ['single pixels with a depth cue', 1, 0.7, [-0.4, 0.2, 0.5, 0.6]],
@@ -141,7 +143,7 @@ describe('the splat', () => {
     ] as const) {
       it(`sums alike in WebAssembly and JavaScript, ${shared ? 'shared' : 'own'} memory: ${name}`, async () => {
         const { memory, layout, points, sums, sumsAt } = scene(shared);
-        const wide = await wideKernel(memory, shared, layout, 1024);
+        const wide = await wideKernel(memory, shared, layout, SCRATCH_AT);
         expect(wide).not.toBeNull();
         const cue = depth ? { depth: Float32Array.from(depth), least: 0.25 } : {};
         const settings = { ...how(diameter, perspective), ...cue };
@@ -210,7 +212,7 @@ describe('the splat', () => {
     }
   });
 
-  it('has scratch for the largest disc below the points', () => {
-    expect(1024 + SCRATCH_BYTES).toBeLessThan(65536);
+  it('has scratch for the largest disc of every worker below the points', () => {
+    expect(SCRATCH_AT + MOST_WORKERS * (SCRATCH_BYTES + 64)).toBeLessThanOrEqual(RESERVED_BYTES);
   });
 });

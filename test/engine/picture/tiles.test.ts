@@ -124,3 +124,23 @@ it('takes a part of the light of the galaxies that have less', () => {
   expect(half! / whole!).toBeGreaterThan(0.46);
   expect(half! / whole!).toBeLessThan(0.54);
 });
+
+it('draws a galaxy round also where a large print makes it wide', () => {
+  // One galaxy in the middle, some 720 points of the grid wide.
+  const points = {
+    ...crowd(1, { diameter: 60, densest: 0, thinnest: 0 }),
+    x: Float32Array.of(50),
+    y: Float32Array.of(50),
+  };
+  const side = 600;
+  const pixels = pointTiles(points, 6).render({ left: 0, top: 0, width: side, height: side });
+  const cover = (x: number, y: number): number => pixels[4 * (y * side + x) + 3]!;
+  const middle = side / 2;
+  // The same distance across and aslant, well inside, near the border and beyond it.
+  for (const r of [50, 100, 150, 250]) {
+    const aslant = Math.round(r / Math.SQRT2);
+    expect(Math.abs(cover(middle + r, middle) - cover(middle + aslant, middle + aslant))).toBeLessThan(6);
+  }
+  expect(cover(middle + 100, middle)).toBeGreaterThan(20);
+  expect(cover(middle + 250, middle)).toBe(0);
+});

@@ -2,9 +2,11 @@ import type { PointLayout } from '../pointArrays.ts';
 import type { Tone } from '../tone.ts';
 
 /** Bytes at the start of the points' memory that are not points: the table of tones, then scratch for each worker. */
-export const RESERVED_BYTES = 1048576;
+export const RESERVED_BYTES = 4194304;
 export const TABLE_AT = 64;
 export const SCRATCH_AT = 655360;
+/** Each has scratch of its own. */
+export const MOST_WORKERS = 4;
 /** A counter of workers that have splatted their share: the tones begin when all have. */
 export const BARRIER_AT = 16;
 

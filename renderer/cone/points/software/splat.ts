@@ -1,7 +1,10 @@
 import type { PointArrays } from '../pointArrays.ts';
 
-/** Free pixels around the sums on every side, so that a disc at the border needs no clipping. */
-export const PAD = 16;
+/**
+ * Free pixels around the sums on every side, so that a disc at the border needs no clipping: the widest of a few
+ * galaxies, at four times their size on a screen of two pixels a CSS pixel.
+ */
+export const PAD = 80;
 
 /** One run of the splat: where points go and how much light they bring. Everything in device pixels. */
 export interface Splat {
@@ -108,10 +111,11 @@ export function splat(points: PointArrays, from: number, to: number, how: Splat,
 
 /**
  * Soft discs of a diameter in pixels, 1 in the middle: exp(-4.5 (2r/diameter)^2), for 4 x 4 places of the middle
- * between pixels. Diameters up to 1.5 are drawn as one pixel: side 0.
+ * between pixels. Diameters up to 1.5 are drawn as one pixel: side 0; those beyond PAD as PAD, round all the same.
  */
-export function softDiscs(diameter: number): { side: number; discs: Float32Array } {
-  if (diameter <= 1.5) return { side: 0, discs: new Float32Array(0) };
+export function softDiscs(wished: number): { side: number; discs: Float32Array } {
+  if (wished <= 1.5) return { side: 0, discs: new Float32Array(0) };
+  const diameter = Math.min(PAD, wished);
   const side = Math.min(PAD, 2 * Math.ceil((diameter + 0.5) / 2));
   const discs = new Float32Array(16 * side * side);
   let d = 0;

@@ -2,13 +2,19 @@ import type { PointLayout } from '../pointArrays.ts';
 import type { PointStore } from '../pointStore.ts';
 import { nextTask } from '../slices.ts';
 import type { Tone } from '../tone.ts';
-import { BARRIER_AT, type FromWorker, type Run, SCRATCH_AT, type ToWorker } from './messages.ts';
+import {
+  BARRIER_AT,
+  type FromWorker,
+  MOST_WORKERS,
+  type Run,
+  SCRATCH_AT,
+  type ToWorker,
+} from './messages.ts';
 import { sharedMemory } from './sharedMemory.ts';
 import { sumsLength } from './splat.ts';
 import { SCRATCH_BYTES } from './wideKernel.ts';
 
 const PAGE = 65536;
-const MOST_WORKERS = 4;
 /** So many single points are one worker's work: more hands would only bring more sums to add. */
 const WORK_OF_ONE = 300_000;
 /** Longer than any honest step takes. */
