@@ -7,7 +7,7 @@ export interface DepthCue {
   readonly least: number;
 }
 
-/** How far before and behind the target things reach along the line of sight, in display units. */
+/** Where things begin and end along the line of sight, from the middle of the display on, in its units. */
 export interface DepthRange {
   readonly near: number;
   readonly far: number;

@@ -31,7 +31,7 @@ export class ConeWork {
 
   async fields(footprint: FootprintInput): Promise<readonly PreparedField[]> {
     const task = { kind: 'fields', footprint } as const;
-    const fields = await this.ask<'fields'>(task, NEVER).catch(() => null);
+    const fields = await this.ask<'fields'>(task, null).catch(() => null);
     return fields ?? prepareFields(footprint);
   }
 
@@ -76,17 +76,17 @@ export class ConeWork {
 
   private ask<K extends ConeTask['kind']>(
     task: Extract<ConeTask, { kind: K }>,
-    signal: AbortSignal,
+    signal: AbortSignal | null,
   ): Promise<ConeResults[K] | null> {
     const id = this.nextId++;
     return new Promise((resolve, reject) => {
-      if (this.ended || signal.aborted) {
+      if (this.ended || signal?.aborted) {
         resolve(null);
         return;
       }
       this.waiting.set(id, { resolve: resolve as (m: unknown) => void, reject });
       this.post({ id, task });
-      signal.addEventListener('abort', () => this.worker?.postMessage({ id, task: null }), { once: true });
+      signal?.addEventListener('abort', () => this.worker?.postMessage({ id, task: null }), { once: true });
     });
   }
 
@@ -124,8 +124,6 @@ export class ConeWork {
     this.waiting.clear();
   }
 }
-
-const NEVER = new AbortController().signal;
 
 function* storeSteps(basis: StoreBasis, memory: StoreMemory): Generator<void, PointStore> {
   const { galaxies, centres, table, colouring, shells } = basis;

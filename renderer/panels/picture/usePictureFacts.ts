@@ -1,5 +1,6 @@
 import { useLayoutEffect, useMemo } from 'preact/hooks';
 import type { App } from '../../state/app.ts';
+import type { EngineState } from '../../state/engineState.ts';
 import type { PictureClient } from './pictureClient.ts';
 
 /**
@@ -17,9 +18,10 @@ export function usePictureFacts(
     engine.density.value,
     engine.columns.value,
   ];
+  const failure = engine.failure.value;
   const waiting =
-    engine.failure.value !== null
-      ? `The catalogue could not be used, so there is no picture of it: ${engine.failure.value.sentence}`
+    failure !== null
+      ? failureText(failure)
       : files.missingSource.value !== null
         ? `The study's catalogue ${files.missingSource.value.name} is not at hand: point at it first.`
         : engine.progress.value !== null || (selected !== null && background === null)
@@ -32,3 +34,9 @@ export function usePictureFacts(
   const facts = useMemo(() => ({}), [study, selected, background, density, columns]);
   return { facts: waiting === null ? facts : null, waiting };
 }
+
+/** A colour that cannot be made is no fault of the catalogue: its sentence says all. */
+const failureText = ({ stage, sentence }: NonNullable<EngineState['failure']['value']>): string =>
+  stage === 'columns' || stage === 'density'
+    ? sentence
+    : `The catalogue could not be used, so there is no picture of it: ${sentence}`;

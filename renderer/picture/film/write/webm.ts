@@ -58,7 +58,7 @@ const KEY_FLAG = 0x80;
 /**
  * A WebM file with one VP9 track. Frames gather in clusters that begin with a key frame. Nothing is known of the whole
  * when its beginning is written, so the segment's length is left unknown, which Matroska allows (RFC 9559, section
- * 26), and there is no index, which players do without.
+ * 5.1), and there is no index, which players do without.
  */
 export class WebmFile implements FilmFile {
   private readonly sink: ByteSink;
@@ -156,7 +156,7 @@ const tracks = ({ widthPx, heightPx, framesPerSecond }: FilmFacts): Uint8Array =
     ),
   );
 
-/** Names that Matroska's tag registry has (RFC 9559, section 6), and the study under one of our own. */
+/** Names of IANA's registry of Matroska tag names, and the study under one of our own. */
 function tags({ metadata }: FilmFacts): Uint8Array {
   const texts: (readonly [string, string])[] = [
     ['TITLE', metadata.title],

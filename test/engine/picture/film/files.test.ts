@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import type { FilmFacts, FilmFile } from '../../../../renderer/picture/film/write/filmFile.ts';
 import { Mp4File } from '../../../../renderer/picture/film/write/mp4.ts';
+import { movieBox } from '../../../../renderer/picture/film/write/mp4Movie.ts';
 import { WebmFile } from '../../../../renderer/picture/film/write/webm.ts';
 import { YuvFrame } from '../../../../renderer/picture/film/yuv.ts';
 import { MemorySink } from '../../../../renderer/picture/write/sink.ts';
@@ -123,6 +124,57 @@ describe('MP4 (ISO/IEC 14496-12)', () => {
       '©too': 'Conewright',
       cprt: 'A survey',
     });
+  });
+});
+
+describe('MP4 beyond 4 GB', () => {
+  const offsetsOf = (offsets: readonly number[]) => {
+    const chunks = offsets.map((offset) => ({ offset, frames: 1 }));
+    const samples = { sizes: offsets.map(() => 9), keys: [1], chunks, avcC: Uint8Array.of(1) };
+    const parts = readBoxes(movieBox({ ...FACTS, frames: offsets.length }, samples));
+    const [table] = at(parts, 'moov', 'trak', 'mdia', 'minf', 'stbl');
+    return table!.parts.filter(({ id }) => id === 'stco' || id === 'co64');
+  };
+
+  // ISO/IEC 14496-12, section 8.7.5: chunk offsets of 32 bits in stco, of 64 in co64; version, flags and count before.
+  it('tells places of 64 bits once one needs them, and of 32 below', () => {
+    const [small, ...more] = offsetsOf([48, 2 ** 32 - 1]);
+    expect([small!.id, more]).toEqual(['stco', []]);
+    const wide = offsetsOf([48, 2 ** 32, 2 ** 40 + 5]);
+    expect(wide.map(({ id }) => id)).toEqual(['co64']);
+    const { content } = wide[0]!;
+    const view = new DataView(content.buffer, content.byteOffset);
+    expect(view.getUint32(4)).toBe(3);
+    expect([0, 1, 2].map((i) => Number(view.getBigUint64(8 + 8 * i)))).toEqual([48, 2 ** 32, 2 ** 40 + 5]);
+    expect(content).toHaveLength(8 + 3 * 8);
+  });
+
+  // Sections 8.3.2, 8.4.2, 8.5.2 and 12.1.5: track width and height in 16.16, both clocks in ticks, the entry's size in
+  // whole pixels, and colours of ITU-T H.273 (1 is BT.709) without the full-range bit.
+  it('says size, clocks and colours where the standard has them', () => {
+    const parts = readBoxes(
+      movieBox(FACTS, { sizes: [1], keys: [1], chunks: [], avcC: Uint8Array.of(1, 2) }),
+    );
+    const viewOf = (...path: string[]) => {
+      const { content } = at(parts, 'moov', 'trak', ...path)[0]!;
+      return new DataView(content.buffer, content.byteOffset, content.length);
+    };
+    const track = viewOf('tkhd');
+    expect(track.byteLength).toBe(84);
+    expect([track.getUint32(76), track.getUint32(80)]).toEqual([640 * 65536, 360 * 65536]);
+    const media = viewOf('mdia', 'mdhd');
+    expect(media.byteLength).toBe(24);
+    // Seven frames of 1/30 s.
+    expect(media.getUint32(16) / media.getUint32(12)).toBeCloseTo(7 / 30, 12);
+    // The track's own length is told by the movie's clock.
+    const movie = at(parts, 'moov', 'mvhd')[0]!.content;
+    expect(movie).toHaveLength(100);
+    expect(track.getUint32(20)).toBe(new DataView(movie.buffer, movie.byteOffset).getUint32(16));
+    const entry = viewOf('mdia', 'minf', 'stbl', 'stsd');
+    expect([entry.getUint16(8 + 8 + 24), entry.getUint16(8 + 8 + 26)]).toEqual([640, 360]);
+    const colour = Buffer.from(entry.buffer, entry.byteOffset, entry.byteLength);
+    const place = colour.indexOf('colrnclx');
+    expect([...colour.subarray(place + 8, place + 15)]).toEqual([0, 1, 0, 1, 0, 1, 0]);
   });
 });
 
