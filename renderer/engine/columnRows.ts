@@ -2,6 +2,7 @@ import type { CancelSignal } from '../../shared-core/base/cancelled.ts';
 import { Refusal } from '../../shared-core/base/refusal.ts';
 import type { Catalogue, ColumnMapping } from '../../shared-core/catalogue/catalogue.ts';
 import { loadCatalogue } from '../../shared-core/catalogue/loadCatalogue.ts';
+import { startSha256 } from './sourceBytes.ts';
 
 /** The numbers of one column for every row of a catalogue that was kept. */
 export interface NamedColumn {
@@ -11,6 +12,8 @@ export interface NamedColumn {
 
 interface Places {
   readonly catalogue: Catalogue;
+  /** SHA-256 of the bytes that it was read from. */
+  readonly sha256: string;
   /** Columns read before. */
   readonly known: readonly NamedColumn[];
   readonly open: () => Promise<AsyncIterable<Uint8Array>>;
@@ -26,23 +29,24 @@ interface Places {
  * Cancelled
  */
 export async function columnRows(columns: readonly string[], places: Places): Promise<NamedColumn[]> {
-  const { catalogue, known, open, mapping, signal } = places;
+  const { catalogue, sha256, known, open, mapping, signal } = places;
   const rowsOf = (column: string): ArrayLike<number> | undefined =>
     known.find((k) => k.column === column)?.rows ?? catalogue.extras.get(column);
   const missing = columns.filter((column) => rowsOf(column) === undefined);
   const read = new Map<string, Float64Array>();
   if (missing.length > 0) {
+    const hash = startSha256();
     const again = await loadCatalogue(await open(), {
       ...(mapping === null ? {} : { mapping }),
       extras: missing,
       contains: null,
       cuts: [],
       signal,
+      onBytes: (chunk) => hash.update(chunk),
     });
-    if (again.catalogue.line.length !== catalogue.line.length)
-      throw new Refusal(
-        `The catalogue's file has changed: ${again.catalogue.line.length} rows are kept now, ${catalogue.line.length} were before. Open it again.`,
-      );
+    // Rows of another file may be as many, and would lend their numbers to other galaxies.
+    if (hash.digestHex() !== sha256)
+      throw new Refusal("The catalogue's file has changed since it was read: read it again.");
     for (const [column, rows] of again.catalogue.extras) read.set(column, rows);
   }
   return columns.map((column) => {

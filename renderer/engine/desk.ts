@@ -52,6 +52,8 @@ export class EngineDesk {
   #reading = new AbortController();
   #keys: Partial<Record<Stage, string>> = {};
   #catalogue: Catalogue | null = null;
+  /** Of the bytes that the catalogue was read from. */
+  #sha256 = '';
   #sample: SortedSample | null = null;
   /** Columns of all rows of the catalogue, kept while something is coloured by them. */
   #columns: readonly NamedColumn[] = [];
@@ -158,6 +160,7 @@ export class EngineDesk {
       },
     });
     this.#catalogue = catalogue;
+    this.#sha256 = hash.digestHex();
     this.#sample = null;
     this.#columns = [];
     emit({
@@ -168,7 +171,7 @@ export class EngineDesk {
         header,
         mapping,
         account: catalogue.account,
-        sha256: hash.digestHex(),
+        sha256: this.#sha256,
         sizeBytes,
       },
     });
@@ -280,6 +283,7 @@ export class EngineDesk {
     const desk = this;
     this.#columns = await columnRows(wish.columns, {
       catalogue,
+      sha256: this.#sha256,
       known: this.#columns,
       open: () => this.#bytes(source),
       mapping: wish.mapping,

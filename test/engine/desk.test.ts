@@ -144,6 +144,23 @@ describe('the engine does what the study asks, and nothing twice', () => {
     expect(last('selected')!.selected).toBe(selected);
   });
 
+  it('does not colour by a column of a file that has changed, though its rows are as many', async () => {
+    const { desk, last } = deskOf();
+    const was = FILES['blob:one']!;
+    try {
+      await desk.want({ ...wanted, source: source('blob:one') });
+      FILES['blob:one'] = was.replace('0.5', '0.7');
+      await desk.want({ ...wanted, source: source('blob:one'), columns: ['z'] });
+      expect(last('columns')!.columns).toEqual([]);
+      expect(last('failed')).toMatchObject({ stage: 'columns' });
+      expect(last('failed')!.sentence).toBe(
+        "The catalogue's file has changed since it was read: read it again.",
+      );
+    } finally {
+      FILES['blob:one'] = was;
+    }
+  });
+
   it('drops work for a wish that is out of date', async () => {
     const { desk, events, last } = deskOf();
     const first = desk.want(wanted);
