@@ -50,6 +50,8 @@ export class EngineDesk {
   #serial = 0;
   #running = false;
   #reading = new AbortController();
+  /** Of columns alone. */
+  #lookingUp = new AbortController();
   #keys: Partial<Record<Stage, string>> = {};
   #catalogue: Catalogue | null = null;
   /** Of the bytes that the catalogue was read from. */
@@ -68,6 +70,7 @@ export class EngineDesk {
   async want(wanted: Wanted, serial = 0): Promise<void> {
     // What does not concern the file lets its reading go on.
     if (this.#wanted !== null && loadKey(this.#wanted) !== loadKey(wanted)) this.#reading.abort();
+    if (this.#wanted !== wanted) this.#lookingUp.abort();
     this.#wanted = wanted;
     this.#serial = serial;
     if (this.#running) return;
@@ -280,18 +283,15 @@ export class EngineDesk {
       return;
     }
     emit({ kind: 'progress', stage: 'columns', fraction: null });
-    const desk = this;
+    this.#lookingUp = new AbortController();
+    const { signal } = this.#lookingUp;
     this.#columns = await columnRows(wish.columns, {
       catalogue,
       sha256: this.#sha256,
       known: this.#columns,
-      open: () => this.#bytes(source),
+      open: () => this.#bytes(source, signal),
       mapping: wish.mapping,
-      signal: {
-        get aborted() {
-          return desk.#wanted !== wish;
-        },
-      },
+      signal,
     });
     await this.#pause(wish);
     const columns = this.#columns.map(({ column, rows }) => {

@@ -112,7 +112,7 @@ const BYTES_A_GALAXY = 110;
 export const filmMemoryBytes = (widthPx: number, heightPx: number, galaxies: number): number =>
   BASE_BYTES + BYTES_A_PIXEL * widthPx * heightPx + BYTES_A_GALAXY * galaxies;
 
-/** A time as a person is told of it before waiting: seconds below two minutes, else minutes. */
+/** A time as a person is told of it before waiting: seconds up to a hundred, else minutes. */
 export function waitText(seconds: number): string {
   if (seconds < 2) return 'a second or two';
   if (seconds < 100) return `about ${Math.ceil(seconds / 5) * 5} seconds`;

@@ -22,16 +22,18 @@ const FILES: Record<string, string> = {
 
 function deskOf() {
   const events: EngineEvent[] = [];
+  const disk = { asleep: false };
   const desk = new EngineDesk({
     emit: (event) => events.push(event),
-    openUrl: async (url, signal) => (url === 'blob:stalled' ? stalled(signal!) : bytes(FILES[url]!)),
+    openUrl: async (url, signal) =>
+      disk.asleep || url === 'blob:stalled' ? stalled(signal!) : bytes(FILES[url]!),
     floats: (length) => new Float32Array(length),
     share: (sample) => sample,
     breathe: () => new Promise((resume) => setTimeout(resume, 0)),
   });
   const last = <K extends EngineEvent['kind']>(kind: K) =>
     events.filter((e): e is Extract<EngineEvent, { kind: K }> => e.kind === kind).at(-1);
-  return { desk, events, last };
+  return { desk, disk, events, last };
 }
 
 async function* bytes(text: string): AsyncIterable<Uint8Array> {
@@ -142,6 +144,19 @@ describe('the engine does what the study asks, and nothing twice', () => {
     expect(last('failed')).toMatchObject({ stage: 'columns' });
     expect(last('failed')!.sentence).toMatch(/colour/);
     expect(last('selected')!.selected).toBe(selected);
+  });
+
+  it('another choice ends the reading of a column, also while nothing comes of it', async () => {
+    const { desk, disk, last } = deskOf();
+    await desk.want(wanted);
+    disk.asleep = true;
+    const reading = desk.want({ ...wanted, columns: ['mag'] }, 2);
+    await new Promise((resume) => setTimeout(resume, 0));
+    expect(last('progress')).toMatchObject({ stage: 'columns' });
+    await desk.want(wanted, 3);
+    await reading;
+    expect(last('idle')!.serial).toBe(3);
+    expect(last('failed')).toBeUndefined();
   });
 
   it('does not colour by a column of a file that has changed, though its rows are as many', async () => {
