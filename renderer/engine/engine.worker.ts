@@ -1,6 +1,7 @@
 import { Refusal } from '../../shared-core/base/refusal.ts';
-import { EngineDesk, sentenceOf } from './desk.ts';
+import { EngineDesk } from './desk.ts';
 import type { EngineAnswer, EngineEvent, EngineRequest } from './protocol.ts';
+import { sentenceOf } from './sentenceOf.ts';
 import { sharedSample } from './sharedSample.ts';
 
 // A worker entry is a few lines around the desk: it only carries messages.

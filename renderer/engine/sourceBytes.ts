@@ -2,13 +2,15 @@ import { sha256 } from '@noble/hashes/sha2.js';
 import { bytesToHex } from '@noble/hashes/utils.js';
 import { makeDemoSurvey } from '../../shared-core/demo/demoSurvey.ts';
 import type { EngineSource } from './protocol.ts';
+import type { Surroundings } from './surroundings.ts';
 
-/** The bytes of a source, in chunks. */
+/** The bytes of a source, in chunks; `signal` ends a url's, also while nothing comes. */
 export async function sourceBytes(
   source: EngineSource,
-  openUrl: (url: string) => Promise<AsyncIterable<Uint8Array>>,
+  openUrl: Surroundings['openUrl'],
+  signal?: AbortSignal,
 ): Promise<AsyncIterable<Uint8Array>> {
-  return source.kind === 'url' ? openUrl(source.url) : inChunks(demoBytes(source.seed));
+  return source.kind === 'url' ? openUrl(source.url, signal) : inChunks(demoBytes(source.seed));
 }
 
 let made: { readonly seed: number; readonly bytes: Uint8Array } | null = null;

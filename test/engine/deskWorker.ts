@@ -1,5 +1,6 @@
-import { EngineDesk, type Surroundings } from '../../renderer/engine/desk.ts';
+import { EngineDesk } from '../../renderer/engine/desk.ts';
 import type { EngineEvent, EngineRequest } from '../../renderer/engine/protocol.ts';
+import type { Surroundings } from '../../renderer/engine/surroundings.ts';
 
 /** The engine's own desk in place of a thread: it takes wishes alone. @param around what a test has otherwise */
 export function deskWorker(

@@ -10,7 +10,7 @@ import {
 } from '../../../shared-core/picture/job.ts';
 import { type PictureOptions, pictureOptions } from '../../../shared-core/picture/options.ts';
 import { readStudy } from '../../../shared-core/study/document.ts';
-import { sentenceOf } from '../../engine/desk.ts';
+import { sentenceOf } from '../../engine/sentenceOf.ts';
 import { demoStudy } from '../../state/demoStudy.ts';
 import { composePicture } from '../composePicture.ts';
 import { composeFilm } from '../film/composeFilm.ts';

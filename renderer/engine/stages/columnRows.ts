@@ -1,8 +1,11 @@
-import type { CancelSignal } from '../../shared-core/base/cancelled.ts';
-import { Refusal } from '../../shared-core/base/refusal.ts';
-import type { Catalogue, ColumnMapping } from '../../shared-core/catalogue/catalogue.ts';
-import { loadCatalogue } from '../../shared-core/catalogue/loadCatalogue.ts';
-import { startSha256 } from './sourceBytes.ts';
+import type { CancelSignal } from '../../../shared-core/base/cancelled.ts';
+import { Refusal } from '../../../shared-core/base/refusal.ts';
+import type { Catalogue, ColumnMapping } from '../../../shared-core/catalogue/catalogue.ts';
+import { loadCatalogue } from '../../../shared-core/catalogue/loadCatalogue.ts';
+import type { SortedSample } from '../../../shared-core/shells/sample.ts';
+import type { ColumnValues } from '../protocol.ts';
+import { startSha256 } from '../sourceBytes.ts';
+import type { StageTools } from '../surroundings.ts';
 
 /** The numbers of one column for every row of a catalogue that was kept. */
 export interface NamedColumn {
@@ -56,6 +59,19 @@ export async function columnRows(columns: readonly string[], places: Places): Pr
         `Column ${column} holds no number in the rows that are in: colour by a column of numbers.`,
       );
     return { column, rows };
+  });
+}
+
+/** The numbers of columns for the galaxies of a sample, in its order. */
+export function inSampleOrder(
+  columns: readonly NamedColumn[],
+  { count, order }: SortedSample,
+  floats: StageTools['floats'],
+): ColumnValues[] {
+  return columns.map(({ column, rows }) => {
+    const values = floats(count);
+    for (let i = 0; i < count; i++) values[i] = rows[order[i]!]!;
+    return { column, values };
   });
 }
 
