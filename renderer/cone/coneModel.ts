@@ -214,7 +214,11 @@ export class ConeModel {
 
   /** How far what is shown reaches along the line of sight. */
   depth({ pose }: Shown): DepthRange {
-    return depthRange(pose, this.corners());
+    const { near, far } = depthRange(pose, this.corners());
+    const lanes = this.lanes(this.factors());
+    // What lies on all sides reaches toward the viewer as far as away, wherever its outline runs.
+    const around = lanes.length === 0 || lanes.some((lane) => this.fields[lane.field]!.surrounds);
+    return around ? { near: Math.min(near, -1), far: Math.max(far, 1) } : { near, far };
   }
 
   state(): ViewState {

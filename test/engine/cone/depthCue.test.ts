@@ -1,4 +1,5 @@
 import { expect, it } from 'vitest';
+import { ConeModel } from '../../../renderer/cone/coneModel.ts';
 import { depthCue, depthRange, lightAt } from '../../../renderer/cone/geometry/depthCue.ts';
 import { SKY_FRAME } from '../../../renderer/cone/geometry/fieldFrame.ts';
 import { lookingFrom } from '../../../renderer/cone/geometry/poses.ts';
@@ -33,4 +34,21 @@ it('follows a field that is stretched and lifted', () => {
 it('is nothing where it is off, and where there is no depth', () => {
   expect(depthCue(pose, model, { near: -1, far: 1 }, 0)).toBeNull();
   expect(depthCue(pose, model, { near: 1, far: 1 }, 0.5)).toBeNull();
+});
+
+it('reaches through the whole of a sky without an outline, from wherever it is seen', () => {
+  const model = new ConeModel();
+  model.setViewport({ widthPx: 600, heightPx: 400 });
+  model.setFootprint({ fields: [], wide: true });
+  for (const from of [
+    [1, 0, 0],
+    [0, 0, 1],
+    [0.1, 0, 0.995],
+  ] as const) {
+    const axes = lookingFrom(from, from[2] > 0.9 ? [0, 1, 0] : [0, 0, 1]);
+    const { near, far } = model.depth({ ...model.shown(0), pose: { ...pose, axes } });
+    // A sphere of radius 1 around the observer.
+    expect(near).toBeCloseTo(-1, 9);
+    expect(far).toBeCloseTo(1, 9);
+  }
 });
