@@ -19,11 +19,18 @@ export class FrameEncoder {
   private done: EncodedPart[] = [];
   private failure: Refusal | null = null;
   private wake: () => void = () => undefined;
+  private latestUs = Number.NEGATIVE_INFINITY;
 
   constructor(encoding: FilmEncoding) {
     this.encoding = encoding;
     this.encoder = new VideoEncoder({
       output: (chunk, metadata) => {
+        // Neither container is told times of its own for each frame: they stand in the order of showing.
+        if (chunk.timestamp <= this.latestUs)
+          this.failure ??= new Refusal(
+            "The browser's encoder gives frames out of their order, which these films cannot hold: choose the other format.",
+          );
+        this.latestUs = chunk.timestamp;
         const bytes = new Uint8Array(chunk.byteLength);
         chunk.copyTo(bytes);
         const description = metadata?.decoderConfig?.description;
