@@ -177,7 +177,9 @@ export function createFileState({
 
   const openCatalogueFile = (file: OpenedFile): void => {
     const named = remember(file);
-    if (study.value.source?.kind === 'demo') {
+    const { source: before, look, name } = study.value;
+    const fresh = before === null || before.kind === 'demo';
+    if (before?.kind === 'demo') {
       // One's own catalogue in the demo's place is a study of its own: it never goes into the demo's file.
       target.value = null;
       stamp.value = null;
@@ -189,10 +191,9 @@ export function createFileState({
         cuts: [],
         region: null,
         edges: [],
-        name:
-          study.value.source === null || study.value.source.kind === 'demo'
-            ? baseName(file.name)
-            : study.value.name,
+        name: fresh ? baseName(file.name) : name,
+        // The demo's columns are not one's own; another file of one's own may well have the same.
+        look: fresh && typeof look.colourBy === 'object' ? { ...look, colourBy: 'redshift' } : look,
       }),
     );
   };

@@ -4,7 +4,7 @@ import { createNotices } from '../../renderer/state/notices.ts';
 import { createStudyState } from '../../renderer/state/studyState.ts';
 import type { Bridge } from '../../shared-core/bridge/contract.ts';
 import { emptyStudy, writeStudy } from '../../shared-core/study/document.ts';
-import { change } from '../../shared-core/study/edits.ts';
+import { change, changeLook } from '../../shared-core/study/edits.ts';
 
 const stamp = (n: number) => ({ sizeBytes: n, modifiedMs: n, sha256: String(n).padStart(64, '0') });
 const target = (id: string) => ({ id, name: `${id}.study.json`, folder: '/', existing: null });
@@ -124,6 +124,21 @@ describe('files of one name, as a browser gives them', () => {
     expect(studyState.study.value.source).toMatchObject({ sizeBytes: 12, sha256: 'c'.repeat(64) });
     studyState.undo();
     expect(url(files)).toBe('blob:first');
+  });
+
+  it("one's own catalogue is not coloured by a column of the demo's, another one keeps its own", async () => {
+    const { files, studyState } = deskOf();
+    await files.openDemo();
+    const colour = (column: string) => studyState.perform(changeLook('Colour', { colourBy: { column } }));
+    colour('made-up');
+    await files.openFiles([picked('blob:first', 10)]);
+    expect(studyState.study.value.look.colourBy).toBe('redshift');
+    studyState.undo();
+    expect(studyState.study.value.look.colourBy).toEqual({ column: 'made-up' });
+    studyState.redo();
+    colour('Mag');
+    await files.openFiles([picked('blob:second', 20)]);
+    expect(studyState.study.value.look.colourBy).toEqual({ column: 'Mag' });
   });
 
   it('what was open before the present catalogue is known, with all that was done to it', async () => {
