@@ -94,6 +94,7 @@ async function local() {
     open: !wishes.noOpen,
     print: (line) => console.log(line),
     baseFolder: here,
+    programFolder: root,
   });
   for (const signal of /** @type {const} */ (['SIGINT', 'SIGTERM']))
     process.once(signal, () => void running.stop());

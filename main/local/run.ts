@@ -20,6 +20,8 @@ export interface LocalOptions {
   print(line: string): void;
   /** The folder that the user started the program in. */
   baseFolder: string;
+  /** The program's own folder, where studies are not saved. */
+  programFolder: string;
   machine?: Machine;
 }
 
@@ -46,7 +48,12 @@ export async function runLocal(options: LocalOptions): Promise<RunningLocal> {
     browser === null
       ? null
       : await takeBrowserProfile(profileParent(browser, own, machine), join(own, 'locks'));
-  const saveFolder = saveFolderFor(paths, options.baseFolder);
+  const { baseFolder, programFolder } = options;
+  const saveFolder = await saveFolderFor(paths, {
+    baseFolder,
+    programFolder,
+    homeFolder: machine.homeFolder,
+  });
   let server: LocalServer;
   try {
     server = await startLocalServer({

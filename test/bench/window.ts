@@ -57,6 +57,7 @@ export async function bench(words: readonly string[] = []) {
       open: false,
       print: () => undefined,
       baseFolder: folder,
+      programFolder: windowFolder,
     });
     const browser = await chromium.launch({ executablePath: found.path, args: FLAGS });
     try {

@@ -310,6 +310,7 @@ describe.skipIf(found === null)('the local host in a real browser', () => {
       open: true,
       print: (line) => void lines.push(line),
       baseFolder: folder,
+      programFolder: windowFolder,
       machine: {
         platform: process.platform,
         env: { CHROME_PATH: headless, CONEWRIGHT_HOME: own },

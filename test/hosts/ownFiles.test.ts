@@ -1,4 +1,4 @@
-import { mkdirSync, readdirSync, readFileSync, writeFileSync } from 'node:fs';
+import { mkdirSync, readdirSync, readFileSync, rmSync, symlinkSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import { FileHistory } from '../../main/files/history.ts';
@@ -61,8 +61,6 @@ describe("the program's own files", () => {
   it('named on the command line are taken from where the program was started', async () => {
     const paths = launchPaths(['a.csv', '/b/c.study.json', '../d.csv'], '/home/ada');
     expect(paths).toEqual(['/home/ada/a.csv', '/b/c.study.json', '/home/d.csv']);
-    expect(saveFolderFor(paths, '/home/ada')).toBe('/b');
-    expect(saveFolderFor(['/x/a.csv'], '/home/ada')).toBe('/home/ada');
     await expect(checkLaunchPaths([join(root.folder, 'missing.csv')])).rejects.toThrow(
       /^missing\.csv could not be opened: /,
     );
@@ -70,6 +68,28 @@ describe("the program's own files", () => {
     await expect(checkLaunchPaths([join(root.folder, 'folder')])).rejects.toThrow(
       /is a folder, a file was expected/,
     );
+  });
+
+  it('decide where studies are saved: beside the first, else here, never among the sources of the program', async () => {
+    const programFolder = join(root.folder, 'program');
+    const homeFolder = join(root.folder, 'home');
+    mkdirSync(join(programFolder, 'main'), { recursive: true });
+    mkdirSync(join(root.folder, 'programmes'));
+    mkdirSync(homeFolder);
+    symlinkSync(programFolder, join(root.folder, 'link'));
+    const saved = (paths: string[], baseFolder: string) =>
+      saveFolderFor(paths, { baseFolder, programFolder, homeFolder });
+
+    expect(await saved(['/x/a.csv', '/b/c.study.json'], homeFolder)).toBe('/x');
+    expect(await saved([], root.folder)).toBe(root.folder);
+    expect(await saved([], join(root.folder, 'programmes'))).toBe(join(root.folder, 'programmes'));
+    for (const own of [programFolder, join(programFolder, 'main'), join(root.folder, 'link')])
+      expect(await saved([], own)).toBe(homeFolder);
+    writeFileSync(join(homeFolder, 'Documents'), 'a file of that name');
+    expect(await saved([], programFolder)).toBe(homeFolder);
+    rmSync(join(homeFolder, 'Documents'));
+    mkdirSync(join(homeFolder, 'Documents'));
+    expect(await saved([], programFolder)).toBe(join(homeFolder, 'Documents'));
   });
 
   it('of a window that is not built are told in a sentence', () => {

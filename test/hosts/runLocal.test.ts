@@ -25,6 +25,7 @@ describe('running the local host', () => {
       open: true,
       print: (line) => void lines.push(line),
       baseFolder: root.folder,
+      programFolder: inRoot('window'),
       machine: {
         platform: process.platform,
         env: { CONEWRIGHT_HOME: inRoot('own'), PATH: '', ...env },
@@ -133,6 +134,13 @@ ${code}
     writeFileSync(inRoot('field/deep.study.json'), '{}');
     const { stop } = await run({ open: false, files: ['field/deep.study.json'] });
     expect(lines[0]).toBe(`Studies are saved in ${inRoot('field')}`);
+    await stop();
+  });
+
+  it('started in its own folder, saves in the documents of the person', async () => {
+    mkdirSync(inRoot('Documents'));
+    const { stop } = await run({ open: false, baseFolder: inRoot('window') });
+    expect(lines[0]).toBe(`Studies are saved in ${inRoot('Documents')}`);
     await stop();
   });
 

@@ -1,4 +1,4 @@
-import { existsSync, readFileSync, writeFileSync } from 'node:fs';
+import { copyFileSync, existsSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import type { Page } from '@playwright/test';
@@ -47,7 +47,9 @@ test('studies that cannot be used: a sentence each, and what was open stays', as
 });
 
 test('a study whose catalogue is not there asks for it and keeps everything', async ({ desk }) => {
-  const page = await desk.open({ files: [SHAPLEY] });
+  const catalogue = join(desk.folder, 'shapley.csv');
+  copyFileSync(SHAPLEY, catalogue);
+  const page = await desk.open({ files: [catalogue] });
   await expect(page.locator('.engine-line')).toHaveText(/4.212 kept/);
   await page.getByRole('button', { name: /^z: shells of equal/ }).click();
   await page.keyboard.press('Control+s');
