@@ -1,6 +1,6 @@
 import { signal } from '@preact/signals';
-import type { OpenedFile } from '../../shared-core/bridge/messages.ts';
-import type { StudySource } from '../../shared-core/study/schema.ts';
+import type { OpenedFile } from '../../../shared-core/bridge/messages.ts';
+import type { StudySource } from '../../../shared-core/study/schema.ts';
 
 export type FileSource = Extract<StudySource, { kind: 'file' }>;
 
