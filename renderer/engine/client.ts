@@ -38,6 +38,11 @@ export class EngineClient {
     return this.#ask<GalaxyRow>((id) => ({ kind: 'row', id, index }));
   }
 
+  /** What the name column says in the row at a line; null for nothing. */
+  name(line: number): Promise<string | null> {
+    return this.#ask<string | null>((id) => ({ kind: 'name', id, line }));
+  }
+
   preview(source: EngineSource): Promise<Preview> {
     return this.#ask<Preview>((id) => ({ kind: 'preview', id, source }));
   }

@@ -1,6 +1,7 @@
 import { Refusal } from '../../shared-core/base/refusal.ts';
 import type { Catalogue } from '../../shared-core/catalogue/catalogue.ts';
 import { type Preview, previewCatalogue } from '../../shared-core/catalogue/preview.ts';
+import { rowName } from '../../shared-core/catalogue/rowName.ts';
 import type { SortedSample } from '../../shared-core/shells/sample.ts';
 import { galaxyRow } from './galaxyRow.ts';
 import { loadKey } from './loadKey.ts';
@@ -208,6 +209,13 @@ export class EngineDesk {
     if (row === undefined || catalogue === null)
       throw new Refusal('This galaxy is not loaded any more: point at it again.');
     return galaxyRow(catalogue, row, this.#columns);
+  }
+
+  /** What the name column says in the row at a line: the file is read up to there. */
+  async name(line: number): Promise<string | null> {
+    const wish = this.#wanted;
+    if (wish?.source == null) return null;
+    return rowName(await this.#bytes(wish.source), wish.mapping ?? undefined, line);
   }
 
   /** The head of a file, for choosing its columns. */

@@ -57,6 +57,9 @@ scope.onmessage = ({ data }: MessageEvent<EngineRequest>) => {
     case 'row':
       void answer(data.id, () => desk.row(data.index));
       break;
+    case 'name':
+      void answer(data.id, () => desk.name(data.line));
+      break;
     case 'preview':
       void answer(data.id, () => desk.preview(data.source));
       break;

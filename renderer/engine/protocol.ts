@@ -99,11 +99,16 @@ export interface GalaxyRow {
 export type EngineRequest =
   | { readonly kind: 'want'; readonly serial: number; readonly wanted: Wanted }
   | { readonly kind: 'row'; readonly id: number; readonly index: number }
+  | { readonly kind: 'name'; readonly id: number; readonly line: number }
   | { readonly kind: 'preview'; readonly id: number; readonly source: EngineSource }
   | { readonly kind: 'setAsideList'; readonly id: number };
 
 export type EngineAnswer =
-  | { readonly kind: 'answer'; readonly id: number; readonly value: GalaxyRow | Preview | Blob }
+  | {
+      readonly kind: 'answer';
+      readonly id: number;
+      readonly value: GalaxyRow | string | null | Preview | Blob;
+    }
   | { readonly kind: 'refused'; readonly id: number; readonly sentence: string };
 
 export type { Preview };

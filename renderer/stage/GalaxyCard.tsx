@@ -12,6 +12,7 @@ import { useApp } from '../state/app.ts';
 import { IconButton } from '../ui/IconButton.tsx';
 import { unitText } from '../ui/unitText.ts';
 import { pickedSeparation } from './separationText.ts';
+import { useRowName } from './useRowName.ts';
 
 const SHOWN = ['comovingMpc', 'luminosityMpc', 'angularDiameterMpc', 'lookbackGyr', 'ageGyr'];
 
@@ -38,6 +39,7 @@ export function GalaxyCard({
       () => (row.value = null),
     );
   });
+  const name = useRowName(row);
   const galaxy = row.value;
   if (galaxy === null) return null;
   const units = derived.units.value;
@@ -49,7 +51,7 @@ export function GalaxyCard({
   return (
     <section class="galaxy-card" aria-label="Galaxy pointed at" aria-live="polite">
       <header>
-        <strong>Row at line {galaxy.line}</strong>
+        <strong>{name ?? `Row at line ${galaxy.line}`}</strong>
         {picked > 0 ? (
           <IconButton
             icon="close"
@@ -59,6 +61,12 @@ export function GalaxyCard({
         ) : null}
       </header>
       <dl>
+        {name === null ? null : (
+          <>
+            <dt>line</dt>
+            <dd>{galaxy.line}</dd>
+          </>
+        )}
         <dt>RA, Dec</dt>
         <dd>
           {galaxy.raDeg.toFixed(5)}°, {galaxy.decDeg.toFixed(5)}°

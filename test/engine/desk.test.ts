@@ -176,6 +176,21 @@ describe('the engine does what the study asks, and nothing twice', () => {
     }
   });
 
+  it('finds the name of a row where a column has names', async () => {
+    const { desk } = deskOf();
+    expect(await desk.name(2)).toBeNull();
+    await desk.want(wanted);
+    expect(await desk.name(2)).toBeNull();
+    const mapping = {
+      ra: 'ra',
+      dec: 'dec',
+      radial: { column: 'z', kind: 'redshift' },
+      weight: null,
+    } as const;
+    await desk.want({ ...wanted, mapping: { ...mapping, magnitude: null, id: 'mag' } });
+    expect(await desk.name(desk.row(0).line)).toBe('15');
+  });
+
   it('drops work for a wish that is out of date', async () => {
     const { desk, events, last } = deskOf();
     const first = desk.want(wanted);
