@@ -79,8 +79,10 @@ export class EngineDesk {
   }
 
   async #fulfil(wish: Wanted): Promise<void> {
+    /** Stages that what failed is needed for. */
+    const without = new Set<Stage>();
     for (const [stage, stageKey] of stageKeys(wish)) {
-      if (this.#keys[stage] === stageKey) continue;
+      if (this.#keys[stage] === stageKey || without.has(stage)) continue;
       const before = { ...this.#keys };
       // What rests on a stage: going back to an earlier wish must not find later results still valid.
       for (const later of RESTING_ON[stage]) delete this.#keys[later];
@@ -95,7 +97,8 @@ export class EngineDesk {
         }
         if (stage === 'load') this.#drop();
         this.#around.emit({ kind: 'failed', stage, sentence: sentenceOf(error) });
-        return;
+        for (const later of RESTING_ON[stage]) without.add(later);
+        continue;
       }
       this.#keys[stage] = stageKey;
       await this.#pause(wish);
@@ -169,7 +172,6 @@ export class EngineDesk {
         sha256: this.#sha256,
         known: this.#columns,
         open: () => this.#bytes(source, signal),
-        mapping: wish.mapping,
         signal,
       });
       await this.#pause(wish);

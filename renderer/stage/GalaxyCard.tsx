@@ -28,6 +28,8 @@ export function GalaxyCard({
   const row = useSignal<GalaxyRow | null>(null);
   useSignalEffect(() => {
     const asked = index.value;
+    // Asked anew once the column of the colours is there: its number is told as well.
+    void engine.columns.value;
     if (asked === null || engine.selected.value === null) {
       row.value = null;
       return;

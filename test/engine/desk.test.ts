@@ -176,6 +176,20 @@ describe('the engine does what the study asks, and nothing twice', () => {
     }
   });
 
+  it('reads columns also where distances fail, which they do not need', async () => {
+    const { desk, events, last } = deskOf();
+    await desk.want({
+      ...wanted,
+      cosmology: { ...wanted.cosmology, h0KmSMpc: -70 },
+      density: true,
+      columns: ['mag'],
+    });
+    expect(events.filter((e) => e.kind === 'failed')).toMatchObject([{ stage: 'background' }]);
+    expect(last('columns')!.columns).toMatchObject([{ column: 'mag' }]);
+    await desk.want({ ...wanted, density: true, columns: ['mag'] });
+    expect(desk.runs).toEqual({ load: 1, select: 1, background: 2, density: 1, columns: 1 });
+  });
+
   it('finds the name of a row where a column has names', async () => {
     const { desk } = deskOf();
     expect(await desk.name(2)).toBeNull();

@@ -1,7 +1,7 @@
 import type { CancelSignal } from '../../../shared-core/base/cancelled.ts';
 import { Refusal } from '../../../shared-core/base/refusal.ts';
-import type { Catalogue, ColumnMapping } from '../../../shared-core/catalogue/catalogue.ts';
-import { loadCatalogue } from '../../../shared-core/catalogue/loadCatalogue.ts';
+import type { Catalogue } from '../../../shared-core/catalogue/catalogue.ts';
+import { columnsAtLines } from '../../../shared-core/catalogue/columnsAtLines.ts';
 import type { SortedSample } from '../../../shared-core/shells/sample.ts';
 import type { ColumnValues } from '../protocol.ts';
 import { startSha256 } from '../sourceBytes.ts';
@@ -20,7 +20,6 @@ interface Places {
   /** Columns read before. */
   readonly known: readonly NamedColumn[];
   readonly open: () => Promise<AsyncIterable<Uint8Array>>;
-  readonly mapping: ColumnMapping | null;
   readonly signal: CancelSignal;
 }
 
@@ -32,25 +31,21 @@ interface Places {
  * Cancelled
  */
 export async function columnRows(columns: readonly string[], places: Places): Promise<NamedColumn[]> {
-  const { catalogue, sha256, known, open, mapping, signal } = places;
+  const { catalogue, sha256, known, open, signal } = places;
   const rowsOf = (column: string): ArrayLike<number> | undefined =>
     known.find((k) => k.column === column)?.rows ?? catalogue.extras.get(column);
   const missing = columns.filter((column) => rowsOf(column) === undefined);
   const read = new Map<string, Float64Array>();
   if (missing.length > 0) {
     const hash = startSha256();
-    const again = await loadCatalogue(await open(), {
-      ...(mapping === null ? {} : { mapping }),
-      extras: missing,
-      contains: null,
-      cuts: [],
+    const found = await columnsAtLines(await open(), missing, catalogue.line, {
       signal,
       onBytes: (chunk) => hash.update(chunk),
     });
     // Rows of another file may be as many, and would lend their numbers to other galaxies.
     if (hash.digestHex() !== sha256)
       throw new Refusal("The catalogue's file has changed since it was read: read it again.");
-    for (const [column, rows] of again.catalogue.extras) read.set(column, rows);
+    for (const [column, rows] of found) read.set(column, rows);
   }
   return columns.map((column) => {
     const rows = rowsOf(column) ?? read.get(column)!;

@@ -21,10 +21,8 @@ export function LookChoice(props: {
   // What the picture is coloured by is made while the bench is open.
   useEffect(() => {
     view.pictureColour.value = choices.colourBy;
-    return () => {
-      view.pictureColour.value = null;
-    };
   }, [view, choices.colourBy]);
+  useEffect(() => () => void (view.pictureColour.value = null), [view]);
   return (
     <>
       <Segments
