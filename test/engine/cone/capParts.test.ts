@@ -63,10 +63,12 @@ describe('the parts of a curved cap', () => {
   });
 
   it('walk every outer edge once', () => {
-    const mesh = meshOf([ringDirections(capRing(40, 90, 40))], 5);
+    const ring = ringDirections(capRing(40, 90, 40));
+    const mesh = meshOf([ring], 5);
     const walked = capParts(mesh, FROM_ABOVE).flatMap(({ loops }) =>
       loops.flatMap((loop) => loop.map((a, i) => `${a} ${loop[(i + 1) % loop.length]!}`)),
     );
+    expect(walked.length).toBeGreaterThanOrEqual(ring.length / 3);
     expect(new Set(walked).size).toBe(walked.length);
   });
 });

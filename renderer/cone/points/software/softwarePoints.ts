@@ -58,8 +58,11 @@ export class SoftwarePoints implements PointLayer {
       return true;
     }
     // New workers wait for their points: the old picture stands.
-    if (!this.store) return false;
+    const { store } = this;
+    if (!store) return false;
     await this.ready;
+    // Other points meanwhile: the frame counts the slots of those before, and a new one has been asked for.
+    if (this.store !== store) return false;
     const picture: SplatPicture = {
       width,
       height,
