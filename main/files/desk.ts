@@ -47,6 +47,7 @@ export function createDesk(host: HostParts): Desk {
     keepUnsaved: ({ workId, title }, { windowId, bytes }) =>
       unsaved.keep(workId, title, bytes, windowId).then(nothing),
     listUnsaved: () => unsaved.list(),
+    lookAtUnsaved: async ({ workId }) => withBytes({}, await unsaved.read(workId)),
     takeUnsaved: async ({ workId }, { windowId }) => withBytes({}, await unsaved.take(workId, windowId)),
     dropUnsaved: ({ workId }, { windowId }) => unsaved.drop(workId, windowId).then(nothing),
     setWindowState: async (state, { windowId }) => nothing(host.windows.setState(windowId, state)),

@@ -61,14 +61,19 @@ export class UnsavedWorks {
     return works.sort((a, b) => b.keptMs - a.keptMs);
   }
 
+  /** The bytes of a work; whose it is stays. Throws Refusal when they cannot be read. */
+  async read(workId: string): Promise<Uint8Array> {
+    const path = join(this.#folder, workId + WORK_ENDING);
+    return await readFile(path).catch((error: unknown) => {
+      throw fileRefusal(error, path, 'be read');
+    });
+  }
+
   /** The bytes of a work, which the asking window holds from now on. Throws Refusal when another holds it. */
   async take(workId: string, windowId: string): Promise<Uint8Array> {
     return await this.#locked(workId, async () => {
       await this.#refuseIfOthers(workId, windowId);
-      const path = join(this.#folder, workId + WORK_ENDING);
-      const bytes = await readFile(path).catch((error: unknown) => {
-        throw fileRefusal(error, path, 'be read');
-      });
+      const bytes = await this.read(workId);
       await this.#writeAbout(workId, (await this.#about(workId))?.about.title ?? '', windowId);
       return bytes;
     });

@@ -77,6 +77,8 @@ export async function createBridge(parts: BridgeParts): Promise<Bridge> {
     keepUnsaved: async (workId, title, bytes) =>
       void (await wire.call('keepUnsaved', { workId, title }, bytes)),
     listUnsaved: async () => (await wire.call('listUnsaved', {})).answer,
+    lookAtUnsaved: async (workId) =>
+      (await wire.call('lookAtUnsaved', { workId })).bytes ?? new Uint8Array(0),
     takeUnsaved: async (workId) => (await wire.call('takeUnsaved', { workId })).bytes ?? new Uint8Array(0),
     dropUnsaved: async (workId) => void (await wire.call('dropUnsaved', { workId })),
 

@@ -2,6 +2,7 @@ import { useEffect, useLayoutEffect, useRef } from 'preact/hooks';
 import { useApp } from '../state/app.ts';
 import type { Notice } from '../state/notices.ts';
 import { IconButton } from '../ui/IconButton.tsx';
+import { Offered } from './offered/Offered.tsx';
 import './panels.css';
 import './notices.css';
 
@@ -32,21 +33,7 @@ export function Notices() {
         if (relatedTarget !== null && !box.current?.contains(relatedTarget as Node)) cameFrom.current = null;
       }}
     >
-      {files.offered.value.map(({ workId, title, keptMs }) => (
-        <div key={workId} class="notice notice-offer">
-          <p>
-            Work on “{title}” from {when(keptMs)} was not saved.
-          </p>
-          <div class="notice-actions">
-            <button type="button" class="button accent-button" onClick={() => void files.takeOffered(workId)}>
-              Take it up
-            </button>
-            <button type="button" class="button" onClick={() => void files.dropOffered(workId)}>
-              Forget it
-            </button>
-          </div>
-        </div>
-      ))}
+      <Offered />
       <div class="notice-live" role="log" aria-live="polite" aria-label="Messages">
         {notices.list.value.map((notice) => (
           <OneNotice key={notice.id} notice={notice} />
@@ -90,11 +77,4 @@ function OneNotice({ notice }: { readonly notice: Notice }) {
       </div>
     </div>
   );
-}
-
-/** Date and time on this machine's clock. Written by hand: the first text by the system's rules takes a tenth of a second. */
-function when(ms: number): string {
-  const d = new Date(ms);
-  const two = (n: number) => String(n).padStart(2, '0');
-  return `${d.getFullYear()}-${two(d.getMonth() + 1)}-${two(d.getDate())}, ${two(d.getHours())}:${two(d.getMinutes())}`;
 }

@@ -6,7 +6,7 @@ import './ui.css';
 /** A window over the window. The rest waits; Escape closes it, and focus goes back to where it came from. */
 export function Dialog(props: {
   readonly title: string;
-  readonly kind?: 'small' | 'middle' | 'wide';
+  readonly kind?: 'small' | 'middle' | 'wide' | 'offered';
   readonly onClose: () => void;
   /** Absent: a cross at the top closes. */
   readonly closeButton?: boolean;

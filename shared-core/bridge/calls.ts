@@ -99,6 +99,8 @@ export const CALLS = {
     from: 'page',
   },
   listUnsaved: { argument: nothing, answer: z.array(unsavedWorkSchema), bytes: 0, from: 'page' },
+  /** Answers the work's bytes as well; whose it is stays. */
+  lookAtUnsaved: { argument: z.strictObject({ workId: idSchema }), answer: nothing, bytes: 0, from: 'page' },
   /** Answers the work's bytes as well, and makes the asking window its owner. */
   takeUnsaved: { argument: z.strictObject({ workId: idSchema }), answer: nothing, bytes: 0, from: 'page' },
   dropUnsaved: { argument: z.strictObject({ workId: idSchema }), answer: nothing, bytes: 0, from: 'page' },

@@ -105,6 +105,8 @@ export interface Bridge {
   keepUnsaved(workId: string, title: string, bytes: Uint8Array): Promise<void>;
   /** Kept work that no living window holds, newest first. */
   listUnsaved(): Promise<UnsavedWork[]>;
+  /** What kept work holds, for choosing: it stays where it is. */
+  lookAtUnsaved(workId: string): Promise<Uint8Array>;
   /** Takes kept work over into this window: from now on it is this window's. */
   takeUnsaved(workId: string): Promise<Uint8Array>;
   /** Forgets kept work: it was saved, or the user does not want it. */

@@ -181,6 +181,9 @@ export function describeStudies(stage: Stage): void {
       expect(await other.listUnsaved()).toEqual([
         { workId, title: 'Deep field', sizeBytes: 6, keptMs: expect.any(Number) },
       ]);
+      // Looking at it before choosing leaves it to whoever takes it.
+      expect(textOf(await third.lookAtUnsaved(workId))).toBe('second');
+      expect(await third.listUnsaved()).toHaveLength(1);
       expect(textOf(await other.takeUnsaved(workId))).toBe('second');
       expect(await third.listUnsaved()).toEqual([]);
       await expect(third.takeUnsaved(workId)).rejects.toThrow(/open in another window/);

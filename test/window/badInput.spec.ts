@@ -1,7 +1,16 @@
-import { copyFileSync, existsSync, readFileSync, writeFileSync } from 'node:fs';
+import {
+  copyFileSync,
+  existsSync,
+  mkdirSync,
+  readdirSync,
+  readFileSync,
+  utimesSync,
+  writeFileSync,
+} from 'node:fs';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import type { Page } from '@playwright/test';
+import { emptyStudy, writeStudy } from '../../shared-core/study/document.ts';
 import { accessible, expect, ready, test } from './window.ts';
 
 const SHAPLEY = fileURLToPath(new URL('../data/shapley.csv', import.meta.url));
@@ -140,6 +149,58 @@ test('unsaved work is offered back after the window died', async ({ desk }) => {
   await again.getByRole('button', { name: /Take it up/ }).click();
   await expect(again.getByLabel('Name of the study')).toHaveValue('almost lost');
   await expect(again.getByText('not saved').first()).toBeVisible();
+});
+
+test('many pieces of unsaved work are one notice, and a list to choose from', async ({ desk }) => {
+  const kept = join(desk.folder, 'config', 'conewright', 'unsaved');
+  mkdirSync(kept, { recursive: true });
+  const left = () => readdirSync(kept).filter((name) => name.endsWith('.study.json')).length;
+  for (let i = 1; i <= 11; i++) {
+    const source = { kind: 'file', name: `field ${i}.csv`, path: null, sizeBytes: 1, sha256: null } as const;
+    const study = { ...emptyStudy(`piece ${i}`), source: i === 1 ? null : source, edges: [0.1, 0.2, 0.3] };
+    const path = join(kept, `work-00000000${String(i).padStart(2, '0')}`);
+    writeFileSync(`${path}.study.json`, i === 2 ? 'cut off' : writeStudy(study));
+    writeFileSync(`${path}.about.json`, JSON.stringify({ version: 1, title: `piece ${i}`, owner: null }));
+    utimesSync(`${path}.study.json`, 1e9 + i, 1e9 + i);
+  }
+  // Closed, it is kept for the next start.
+  const first = await desk.open();
+  await expect(first.locator('.notice-offer')).toHaveCount(1);
+  await expect(first.locator('.notice-offer')).toContainText(/^11 pieces of work/);
+  await accessible(first, '.notices');
+  await first.getByRole('button', { name: 'Not now' }).click();
+  await expect(first.locator('.notice-offer')).toHaveCount(0);
+  expect(left()).toBe(11);
+
+  const page = await desk.open();
+  await page.getByRole('button', { name: 'Look…' }).click();
+  const list = page.getByRole('dialog', { name: 'Work that was not saved' });
+  const rows = list.locator('tbody tr');
+  await expect(rows).toHaveCount(11);
+  await expect(rows.first()).toContainText(/^piece 11.*2field 11\.csv/);
+  await expect(rows.nth(9)).toContainText(/^piece 2.*–cannot be read/);
+  await expect(rows.nth(10)).toContainText(/^piece 1.*2none/);
+  await accessible(page, '.dialog[open]');
+  await list.getByRole('button', { name: /^Forget: “piece 11”/ }).click();
+  await expect(rows).toHaveCount(10);
+  expect(left()).toBe(10);
+  await list.getByRole('button', { name: /^Take it up: “piece 10”/ }).click();
+  await expect(list).toHaveCount(0);
+  await expect(page.getByLabel('Name of the study')).toHaveValue('piece 10');
+  await expect(page.locator('.notice-offer')).toContainText(/^9 pieces of work/);
+
+  // All at once is asked about once.
+  await page.getByRole('button', { name: 'Look…' }).click();
+  await list.getByRole('button', { name: 'Forget all' }).click();
+  const question = page.getByRole('dialog', { name: 'Forget 9 pieces of unsaved work?' });
+  await question.getByRole('button', { name: 'Keep them' }).click();
+  await expect(rows).toHaveCount(9);
+  await list.getByRole('button', { name: 'Forget all' }).click();
+  await question.getByRole('button', { name: 'Forget all' }).click();
+  await expect(list).toHaveCount(0);
+  await expect(page.locator('.notice-offer')).toHaveCount(0);
+  // What was taken up is this window's own work by now.
+  await expect.poll(left).toBe(1);
 });
 
 /** Lets the test raise the error that a worker raises when it runs out of memory. */
