@@ -62,11 +62,17 @@ export class ConePictures {
         return painter.draw(points, stop).then(
           (shown) => {
             if (shown) this.drawnKey = key;
+            if (shown && painter.galaxies.store) this.sources.events.onTrouble?.(null);
             if (shown && moving) painter.pacing.finished(performance.now());
             return shown;
           },
           (error) => {
             this.forgetPoints();
+            // The workers' memory cannot grow; those that ended are replaced, and say nothing here.
+            if (error instanceof RangeError)
+              this.sources.events.onTrouble?.(
+                `Memory ran short for a picture of ${stage.widthPx} by ${stage.heightPx}: make the window smaller, or close other programs. All numbers stand.`,
+              );
             throw error;
           },
         );

@@ -59,7 +59,12 @@ export class ConeView {
     });
     this.stage = new Stage(container, () => this.resized());
     this.gl = new GlStage(this.stage.solids, (state) => this.drawingStateChanged(state));
-    this.painter = new PointPainter(this.gl, this.work, () => this.loop.invalidate());
+    this.painter = new PointPainter(
+      this.gl,
+      this.work,
+      () => this.loop.invalidate(),
+      (sentence) => events.onTrouble?.(sentence),
+    );
     this.layers = new ConeLayers(this.stage, this.gl);
     this.region = new RegionInTurn(this.work, this.painter.galaxies, (fields, footprint, views) => {
       this.change(0, () => this.model.setFields(fields, footprint));

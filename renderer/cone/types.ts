@@ -159,4 +159,6 @@ export interface ConeEvents {
   readonly onViewChanged?: (state: ViewState) => void;
   readonly onFrame?: (statistics: FrameStatistics) => void;
   readonly onDrawingState?: (state: DrawingState) => void;
+  /** Why galaxies cannot be drawn, as a sentence; null once they can. */
+  readonly onTrouble?: (sentence: string | null) => void;
 }

@@ -24,6 +24,7 @@ export function Stage() {
   const cone = useSignal<ConeView | null>(null);
   const coneState = useSignal<ConeState | null>(null);
   const drawing = useSignal<DrawingState | null>(null);
+  const trouble = useSignal<string | null>(null);
   const widthPx = useSignal(640);
   const hovered = useSignal<{ readonly index: number; readonly xPx: number; readonly yPx: number } | null>(
     null,
@@ -47,6 +48,7 @@ export function Stage() {
       },
       onViewChanged: (state) => (coneState.value = state),
       onDrawingState: (state) => (drawing.value = state),
+      onTrouble: (sentence) => (trouble.value = sentence),
     });
     cone.value = made;
     const watch = new ResizeObserver(([entry]) => {
@@ -159,6 +161,11 @@ export function Stage() {
       <StageBar coneState={coneState} colours={colours} />
       <div class="stage-cone" ref={place} />
       <GalaxyCard hovered={hovered} />
+      {trouble.value === null ? null : (
+        <p class="stage-notice" role="status">
+          {trouble.value}
+        </p>
+      )}
       {drawing.value?.webgl === 'lost' || drawing.value?.webgl === 'absent' ? (
         <p class="stage-notice" role="status">
           Shells cannot be drawn in 3D now ({drawing.value.reason}); everything else goes on working.

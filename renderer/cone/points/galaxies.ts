@@ -38,8 +38,16 @@ export class Galaxies {
   private readonly changed: (what: GalaxiesChange) => void;
   private readonly work: ConeWork;
   private readonly memory: ConeMemory;
+  private readonly trouble: (sentence: string | null) => void;
 
-  constructor(changed: (what: GalaxiesChange) => void, work: ConeWork, memory: ConeMemory) {
+  /** @param trouble told why the galaxies cannot be laid out, and null once they are */
+  constructor(
+    changed: (what: GalaxiesChange) => void,
+    work: ConeWork,
+    memory: ConeMemory,
+    trouble: (sentence: string | null) => void = () => undefined,
+  ) {
+    this.trouble = trouble;
     this.changed = changed;
     this.work = work;
     this.memory = memory;
@@ -157,8 +165,19 @@ export class Galaxies {
     const job = new AbortController();
     this.building = job;
     const basis = { galaxies: input, centres: this.nextCentres, table, colouring, shells };
+    const failed = (): void => {
+      if (job.signal.aborted) return;
+      this.store = null;
+      this.current = !this.held;
+      this.takeCentres();
+      this.changed('store');
+      this.trouble(
+        `Memory ran short for drawing ${input.count} galaxies: close other programs, or cut the file to the rows you need. All numbers stand.`,
+      );
+    };
     void this.work.store(basis, this.memory, job.signal).then((store) => {
       if (!store || job.signal.aborted) return;
+      this.trouble(null);
       this.store = store;
       this.current = !this.held;
       this.ready = 1;
@@ -177,7 +196,7 @@ export class Galaxies {
       const asColoured =
         colouring === this.colouring && (shells === this.shells || colouring.kind !== 'shell');
       if (!asColoured) this.recolour();
-    });
+    }, failed);
   }
 
   private recolour(): void {

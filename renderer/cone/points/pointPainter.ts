@@ -2,7 +2,7 @@ import { pickNear } from '../geometry/pickNear.ts';
 import { type PointHit, pickPoint } from '../geometry/pickPoint.ts';
 import type { Viewport } from '../geometry/projection.ts';
 import type { GlStage } from '../graphics/glStage.ts';
-import type { ConeWork } from '../work/coneWork.ts';
+import type { ConeMemory, ConeWork } from '../work/coneWork.ts';
 import { crowding, exposure, NOTHING, pointSizePx } from './exposure.ts';
 import { Galaxies, type GalaxiesChange } from './galaxies.ts';
 import { Pacing } from './pacing.ts';
@@ -38,16 +38,18 @@ export class PointPainter {
   private webgl: WebglPoints | null = null;
   private restarts = 0;
 
-  constructor(gl: GlStage, work: ConeWork, changed: () => void) {
+  /** @param trouble told why the galaxies cannot be drawn, and null once they can */
+  constructor(gl: GlStage, work: ConeWork, changed: () => void, trouble: (sentence: string | null) => void) {
     this.gl = gl;
     this.changed = changed;
     this.startPool();
-    this.galaxies = new Galaxies((what) => this.galaxiesChanged(what), work, {
+    const memory: ConeMemory = {
       base: RESERVED_BYTES,
       allocate: (layout) => this.pool?.allocate(layout) ?? new ArrayBuffer(layout.end),
       rows: (slots) => new Uint32Array(slots),
-      adopt: (memory) => this.pool?.adopt(memory) ?? false,
-    });
+      adopt: (made) => this.pool?.adopt(made) ?? false,
+    };
+    this.galaxies = new Galaxies((what) => this.galaxiesChanged(what), work, memory, trouble);
     this.takeGl();
   }
 

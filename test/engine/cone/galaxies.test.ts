@@ -14,16 +14,26 @@ const ONE = Float64Array.of(1, 0, 0);
 const TWO = Float64Array.of(1, 0, 0, -1, 0, 0);
 
 /** Galaxies and all that they told. Here is no worker: the work is done in slices, as on a page that has none. */
-function galaxiesWithLog() {
+function galaxiesWithLog(mostBytes = Number.POSITIVE_INFINITY) {
   const log: string[] = [];
+  const troubles: (string | null)[] = [];
   const memory = {
     base: 0,
-    allocate: ({ end }: { end: number }) => new ArrayBuffer(end),
+    allocate({ end }: { end: number }) {
+      // As the engine refuses what it has no memory for.
+      if (end > mostBytes) throw new RangeError('Array buffer allocation failed');
+      return new ArrayBuffer(end);
+    },
     rows: (slots: number) => new Uint32Array(slots),
     adopt: () => false,
   };
-  const galaxies = new Galaxies((what) => log.push(what), new ConeWork(), memory);
-  return { galaxies, log };
+  const galaxies = new Galaxies(
+    (what) => log.push(what),
+    new ConeWork(),
+    memory,
+    (sentence) => troubles.push(sentence),
+  );
+  return { galaxies, log, troubles };
 }
 
 describe('galaxies that change', () => {
@@ -43,6 +53,19 @@ describe('galaxies that change', () => {
     expect(galaxies.current).toBe(false);
     galaxies.setInput(null);
     expect(galaxies.store).toBe(null);
+  });
+
+  it('say so where there is no memory for them, and are drawn again once there is', async () => {
+    const { galaxies, log, troubles } = galaxiesWithLog(60_000);
+    galaxies.setCentres(ONE, () => undefined);
+    galaxies.setInput(around(1000));
+    await expect.poll(() => log).toContain('store');
+    galaxies.setInput(around(5000));
+    await expect.poll(() => galaxies.store).toBe(null);
+    expect(troubles.at(-1)).toMatch(/Memory ran short for drawing 5000 galaxies: close other programs/);
+    galaxies.setInput(around(900));
+    await expect.poll(() => galaxies.store?.count).toBe(900);
+    expect(troubles.at(-1)).toBeNull();
   });
 
   it('take other fields together with the galaxies sorted by them, and the newest alone', async () => {
