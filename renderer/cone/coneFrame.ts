@@ -1,8 +1,9 @@
-import type { ConeModel, Shown } from './coneModel.ts';
+import type { ConeModel } from './coneModel.ts';
 import type { Lane } from './geometry/arrangement.ts';
 import { type DepthCue, depthCue } from './geometry/depthCue.ts';
 import type { PreparedField } from './geometry/preparedField.ts';
 import { compose, type PixelMatrix, pixelMatrix, project, type Viewport } from './geometry/projection.ts';
+import type { Shown } from './movement.ts';
 import type { Point } from './overlay/pen.ts';
 import type { Galaxies } from './points/galaxies.ts';
 import type { Emphasis, PointPart } from './points/pointLayer.ts';

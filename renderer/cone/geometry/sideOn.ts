@@ -1,0 +1,60 @@
+import { laneHeights, proposeSidewaysFactor } from './arrangement.ts';
+import type { PreparedField } from './preparedField.ts';
+import type { Viewport } from './projection.ts';
+
+/** Room for rulers above and below a cone seen side-on. */
+const SIDE_ROOM = { top: 46, bottom: 74 };
+/** A lane's cone leaves a part of the lane free. */
+const LANE_SHARE = 0.86;
+
+/** What the heights of cones seen side-on depend on. */
+export interface SideOn {
+  readonly fields: readonly PreparedField[];
+  readonly parallel: boolean;
+  readonly viewport: Viewport;
+  readonly insets: { readonly leftPx: number; readonly rightPx: number };
+  /** Sideways factors that were chosen, by field; the others are proposed. */
+  readonly chosenFactors: ReadonlyMap<number, number>;
+}
+
+/** One sideways factor a field. */
+export function sidewaysFactors(side: SideOn): number[] {
+  const natural = naturalPx(side);
+  const rooms = side.parallel ? lanesPx(side).map((h) => h * LANE_SHARE) : natural.map(() => roomPx(side));
+  // A lane of several is opened as soon as it can be; a cone alone keeps its true shape where that fills the stage.
+  const slack = side.parallel ? 1.2 : 2.5;
+  return natural.map((px, i) => side.chosenFactors.get(i) ?? proposeSidewaysFactor(px, rooms[i]!, slack));
+}
+
+/** Heights of the parallel lanes in display units, gaps included. */
+export function laneHeightsOf(side: SideOn): number[] {
+  return lanesPx(side).map((px) => px * fullScale(side));
+}
+
+/** Display height at the middle of the stage for cones at rest in their room between the rulers. */
+export function restingHeight(side: SideOn, current: number, unitsPerPixel: number): number {
+  const shift = ((SIDE_ROOM.bottom - SIDE_ROOM.top) / 2) * unitsPerPixel;
+  const field = side.fields[current];
+  if (side.parallel || !field) return -shift;
+  const factor = sidewaysFactors(side)[current]!;
+  return ((field.extent.alongMax + field.extent.alongMin) / 2) * factor - shift;
+}
+
+/** Display units of a pixel when the whole radial scale lies between the insets. */
+function fullScale({ viewport, insets }: SideOn): number {
+  return 1 / Math.max(1, viewport.widthPx - insets.leftPx - insets.rightPx);
+}
+
+function roomPx({ viewport }: SideOn): number {
+  return Math.max(60, viewport.heightPx - SIDE_ROOM.top - SIDE_ROOM.bottom);
+}
+
+/** Heights of the cones at true scale. */
+function naturalPx(side: SideOn): number[] {
+  const scale = fullScale(side);
+  return side.fields.map(({ extent }) => (extent.alongMax - extent.alongMin) / scale);
+}
+
+function lanesPx(side: SideOn): number[] {
+  return side.fields.length > 0 ? laneHeights(naturalPx(side), roomPx(side)) : [];
+}
