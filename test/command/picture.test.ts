@@ -1,7 +1,7 @@
 import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import { sayFilm } from '../../main/command/picture/filmWishes.ts';
-import { checkMemory, obtainableBytes } from '../../main/command/verbs/picture.ts';
+import { checkMemory, obtainableBytes } from '../../main/command/picture/memory.ts';
 import { filmOptions } from '../../shared-core/picture/film.ts';
 import { pictureOptions } from '../../shared-core/picture/options.ts';
 import { emptyStudy, writeStudy } from '../../shared-core/study/document.ts';
