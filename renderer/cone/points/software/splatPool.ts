@@ -2,27 +2,17 @@ import type { PointLayout } from '../pointArrays.ts';
 import type { PointStore } from '../pointStore.ts';
 import { nextTask } from '../slices.ts';
 import type { Tone } from '../tone.ts';
-import {
-  BARRIER_AT,
-  type FromWorker,
-  MOST_WORKERS,
-  type Run,
-  SCRATCH_AT,
-  type ToWorker,
-} from './messages.ts';
+import { BARRIER_AT, MOST_WORKERS, type Run, SCRATCH_AT } from './messages.ts';
 import { sharedMemory } from './sharedMemory.ts';
 import { sumsLength } from './splat.ts';
+import { SplatHands } from './splatHands.ts';
 import { SCRATCH_BYTES } from './wideKernel.ts';
 
 const PAGE = 65536;
 /** So many single points are one worker's work: more hands would only bring more sums to add. */
 const WORK_OF_ONE = 300_000;
-/** Longer than any honest step takes. */
-const LONGEST_ANSWER_MS = 15_000;
 /** Slots sent at once to a worker with its own memory. */
 const SENT_AT_ONCE = 262144;
-
-type Unsent<M = ToWorker> = M extends { id: number } ? Omit<M, 'id'> : never;
 
 export interface SplatPicture {
   readonly width: number;
@@ -35,42 +25,30 @@ export interface SplatPicture {
 export class SplatPool {
   /** Whether page and workers share memory. */
   readonly shared: boolean;
-  private readonly workers: Worker[] = [];
-  private readonly waiting = new Map<
-    number,
-    { resolve: (m: FromWorker) => void; reject: (e: Error) => void }
-  >();
+  private readonly hands: SplatHands;
   private readonly memories = new WeakMap<ArrayBufferLike, WebAssembly.Memory>();
   private memory: WebAssembly.Memory | null = null;
   private layout: PointLayout | null = null;
-  private nextId = 1;
-  private ended = false;
   private tone: Tone | null = null;
   /** Workers whose sums hold the picture. */
   private used = 1;
   /** Whether all sums are zero, and for which size. */
   private clean = false;
   private cleanSize = '';
-  private readonly failed: (reason: string) => void;
   /** Kernel in use, known once the points are there. */
   wide = false;
 
+  /** @param failed told once, when workers end or cannot go on */
   constructor(failed: (reason: string) => void) {
-    this.failed = failed;
     this.shared = globalThis.crossOriginIsolated === true;
     const cores = navigator.hardwareConcurrency || 2;
     const count = this.shared ? Math.max(1, Math.min(MOST_WORKERS, cores)) : 1;
-    for (let i = 0; i < count; i++) {
-      const worker = new Worker(new URL('./splatWorker.ts', import.meta.url), { type: 'module' });
-      worker.onmessage = (event: MessageEvent<FromWorker>) => this.receive(event.data);
-      worker.onerror = (event) => this.fail(event.message || 'a drawing worker ended');
-      this.workers.push(worker);
-    }
+    this.hands = new SplatHands(count, failed);
   }
 
   /** Hands for a large picture. */
   get size(): number {
-    return this.workers.length;
+    return this.hands.count;
   }
 
   /** Memory for a store: shared with the workers where that is allowed. */
@@ -95,21 +73,17 @@ export class SplatPool {
     const memory = this.memories.get(store.arrays.x.buffer);
     this.memory = memory ?? null;
     if (memory) {
-      const answers = await Promise.all(
-        this.workers.map((_, i) =>
-          this.ask(i, {
-            kind: 'shared',
-            memory,
-            layout: store.layout,
-            scratchAt: SCRATCH_AT + i * Math.ceil(SCRATCH_BYTES / 64) * 64,
-            wide,
-          }),
-        ),
-      );
+      const answers = await this.hands.askEach(this.size, (i) => ({
+        kind: 'shared',
+        memory,
+        layout: store.layout,
+        scratchAt: SCRATCH_AT + i * Math.ceil(SCRATCH_BYTES / 64) * 64,
+        wide,
+      }));
       this.wide = answers.every((m) => m.kind === 'done' && m.wide === true);
       return;
     }
-    const answer = await this.ask(0, { kind: 'own', slots: store.layout.slots, wide });
+    const answer = await this.hands.ask(0, { kind: 'own', slots: store.layout.slots, wide });
     this.wide = answer.kind === 'done' && answer.wide === true;
     await this.send(store, ['x', 'y', 'z', 'radius', 'value']);
   }
@@ -122,7 +96,7 @@ export class SplatPool {
         names.map((name) => [name, store.arrays[name].slice(at, at + SENT_AT_ONCE)]),
       );
       const transfer = Object.values(part).map((array) => array.buffer as ArrayBuffer);
-      await this.ask(0, { kind: 'fill', at, ...part }, transfer);
+      await this.hands.ask(0, { kind: 'fill', at, ...part }, transfer);
       await nextTask();
     }
   }
@@ -141,7 +115,7 @@ export class SplatPool {
   ): Promise<number> {
     const { width, height } = picture;
     const { sumsAt, imageAt } = this.room(picture);
-    const all = this.workers.length;
+    const all = this.size;
     if (fresh) {
       const points = runs.reduce((sum, run) => sum + run.to - run.from, 0);
       this.used = points * (picture.diameter > 1.5 ? 4 : 1) < WORK_OF_ONE ? 1 : all;
@@ -153,24 +127,20 @@ export class SplatPool {
     const tone = finish && finish.tone !== this.tone ? finish.tone : null;
     if (tone) this.tone = tone;
     if (this.memory) Atomics.store(new Int32Array(this.memory.buffer, BARRIER_AT, 1), 0, 0);
-    const answers = await Promise.all(
-      Array.from({ length: clear || finish ? all : this.used }, (_, i) =>
-        this.ask(i, {
-          kind: 'draw',
-          ...picture,
-          runs: i < this.used ? this.share(runs, i, this.used) : [],
-          clear,
-          sumsAt: sumsAt[i]!,
-          finish: finish && {
-            rows: [Math.floor((height * i) / all), Math.floor((height * (i + 1)) / all)],
-            allSumsAt: sumsAt.slice(0, this.used),
-            imageAt,
-            hands: all,
-            tone: i === 0 ? tone : null,
-          },
-        }),
-      ),
-    );
+    const answers = await this.hands.askEach(clear || finish ? all : this.used, (i) => ({
+      kind: 'draw',
+      ...picture,
+      runs: i < this.used ? share(runs, i, this.used) : [],
+      clear,
+      sumsAt: sumsAt[i]!,
+      finish: finish && {
+        rows: [Math.floor((height * i) / all), Math.floor((height * (i + 1)) / all)],
+        allSumsAt: sumsAt.slice(0, this.used),
+        imageAt,
+        hands: all,
+        tone: i === 0 ? tone : null,
+      },
+    }));
     if (finish) {
       this.clean = true;
       this.cleanSize = `${width} ${height}`;
@@ -185,33 +155,20 @@ export class SplatPool {
 
   /** The slot drawn nearest to a pixel, searched by all workers. */
   async pick(runs: readonly Run[], xPx: number, yPx: number, reachPx: number) {
-    const answers = await Promise.all(
-      this.workers.map((_, i) =>
-        this.ask(i, { kind: 'pick', runs: this.share(runs, i, this.workers.length), xPx, yPx, reachPx }),
-      ),
-    );
+    const answers = await this.hands.askEach(this.size, (i) => ({
+      kind: 'pick',
+      runs: share(runs, i, this.size),
+      xPx,
+      yPx,
+      reachPx,
+    }));
     const hits = answers.flatMap((m) => (m.kind === 'hit' && m.hit ? [m.hit] : []));
     hits.sort((a, b) => a.distance2 - b.distance2);
     return hits[0] ?? null;
   }
 
   dispose(): void {
-    this.ended = true;
-    for (const worker of this.workers) worker.terminate();
-    for (const { reject } of this.waiting.values()) reject(new Error('the drawing workers were ended'));
-    this.waiting.clear();
-  }
-
-  /** Part i of n of each run, cut at groups of four. */
-  private share(runs: readonly Run[], i: number, n: number): Run[] {
-    return runs.map((run) => {
-      const groups = Math.ceil((run.to - run.from) / 4);
-      return {
-        ...run,
-        from: run.from + 4 * Math.floor((groups * i) / n),
-        to: run.from + 4 * Math.floor((groups * (i + 1)) / n),
-      };
-    });
+    this.hands.dispose();
   }
 
   /** Where sums and picture stand behind the points; the memory grows when they need more. */
@@ -219,50 +176,22 @@ export class SplatPool {
     if (this.cleanSize !== `${width} ${height}`) this.clean = false;
     const bytes = Math.ceil((4 * sumsLength(width, height)) / 64) * 64;
     if (!this.memory || !this.layout) return { sumsAt: [0], imageAt: 0 };
-    const sumsAt = this.workers.map((_, i) => this.layout!.end + i * bytes);
-    const imageAt = this.layout.end + this.workers.length * bytes;
+    const sumsAt = Array.from({ length: this.size }, (_, i) => this.layout!.end + i * bytes);
+    const imageAt = this.layout.end + this.size * bytes;
     const missing = imageAt + 4 * width * height - this.memory.buffer.byteLength;
     if (missing > 0) this.memory.grow(Math.ceil(missing / PAGE));
     return { sumsAt, imageAt };
   }
+}
 
-  private ask(worker: number, message: Unsent, transfer: Transferable[] = []): Promise<FromWorker> {
-    const id = this.nextId++;
-    return new Promise((resolve, reject) => {
-      // A worker that is ended for want of memory says nothing.
-      const late = setTimeout(() => this.fail('a drawing worker does not answer'), LONGEST_ANSWER_MS);
-      const settled = () => clearTimeout(late);
-      this.waiting.set(id, {
-        resolve: (m) => {
-          settled();
-          resolve(m);
-        },
-        reject: (e) => {
-          settled();
-          reject(e);
-        },
-      });
-      this.workers[worker]!.postMessage({ ...message, id }, transfer);
-    });
-  }
-
-  private receive(message: FromWorker): void {
-    const asked = this.waiting.get(message.id);
-    this.waiting.delete(message.id);
-    if (!asked) return;
-    if (message.kind !== 'failed') {
-      asked.resolve(message);
-      return;
-    }
-    asked.reject(new Error(message.reason));
-    this.fail(message.reason);
-  }
-
-  private fail(reason: string): void {
-    if (this.ended) return;
-    this.ended = true;
-    for (const { reject } of this.waiting.values()) reject(new Error(reason));
-    this.waiting.clear();
-    this.failed(reason);
-  }
+/** Part i of n of each run, cut at groups of four. */
+function share(runs: readonly Run[], i: number, n: number): Run[] {
+  return runs.map((run) => {
+    const groups = Math.ceil((run.to - run.from) / 4);
+    return {
+      ...run,
+      from: run.from + 4 * Math.floor((groups * i) / n),
+      to: run.from + 4 * Math.floor((groups * (i + 1)) / n),
+    };
+  });
 }
