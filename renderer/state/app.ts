@@ -42,6 +42,7 @@ export function createApp(
     studyState,
     askLeave: (name) => questions.askLeave(name),
     askReplace: (sentence) => questions.askReplace(sentence),
+    askOther: (question) => questions.askOther(question),
   });
   const view = createViewState(options.theme);
   const engine = createEngineState(studyState, files.engineSource, view.pictureColour, options.makeWorker);

@@ -1,18 +1,13 @@
 import { effect, type ReadonlySignal, signal } from '@preact/signals';
-import type {
-  FileStamp,
-  OpenedFile,
-  RecentStudy,
-  SaveTarget,
-  UnsavedWork,
-} from '../../shared-core/bridge/messages.ts';
+import type { OpenedFile, RecentStudy, UnsavedWork } from '../../shared-core/bridge/messages.ts';
 import { emptyStudy, readStudy } from '../../shared-core/study/document.ts';
 import type { Study } from '../../shared-core/study/schema.ts';
 import { demoStudy } from './demoStudy.ts';
 import { createExportFile, type ExportFile } from './files/exporting.ts';
 import { guard } from './files/guard.ts';
 import { createSaving, type Saving, type SavingOptions } from './files/saving.ts';
-import { createStudySource, type StudySourceState } from './files/studySource.ts';
+import { createStudyFiles, type StudyFile } from './files/studyFiles.ts';
+import { catalogueTitle, createStudySource, type StudySourceState } from './files/studySource.ts';
 import { keepUnsavedWork } from './files/unsavedWork.ts';
 
 /** Opening, saving and keeping: everything between the study and the machine's files. */
@@ -34,7 +29,8 @@ export interface FileState extends StudySourceState, Pick<Saving, 'target' | 'sa
   readonly exportFile: ExportFile;
 }
 
-interface FileStateOptions extends Pick<SavingOptions, 'bridge' | 'notices' | 'studyState' | 'askReplace'> {
+interface FileStateOptions
+  extends Pick<SavingOptions, 'bridge' | 'notices' | 'studyState' | 'askReplace' | 'askOther'> {
   /** Asks "save, leave without saving, or stay". */
   readonly askLeave: (name: string) => Promise<'save' | 'leave' | 'stay'>;
 }
@@ -47,8 +43,9 @@ export function createFileState(options: FileStateOptions): FileState {
   const refreshRecent = (): Promise<void> =>
     guarded(async () => void (recent.value = await bridge.recentStudies()), undefined);
   const exportFile = createExportFile(bridge, notices, guarded);
-  const source = createStudySource(bridge, studyState);
-  const saving = createSaving({ ...options, guarded, exportFile, onSaved: refreshRecent });
+  const files = createStudyFiles(study);
+  const source = createStudySource(bridge, studyState, files.carry);
+  const saving = createSaving({ ...options, files, guarded, exportFile, onSaved: refreshRecent });
   const unsavedWork = keepUnsavedWork(bridge, studyState, guarded);
 
   /** True when nothing would be lost by leaving the study, or the person agreed. */
@@ -63,11 +60,21 @@ export function createFileState(options: FileStateOptions): FileState {
         return false;
     }
   };
-  const show = async (next: Study, saved: boolean, from: StudyFile = NO_FILE): Promise<void> => {
+  /** The name that the study came with, where that was not typed since it was saved. */
+  let givenName: string | null = study.value.name;
+  const show = async (
+    next: Study,
+    saved: boolean,
+    from: { readonly id: string; readonly file: StudyFile | null } | null = null,
+  ): Promise<void> => {
     studyState.replace(next, saved);
-    saving.startAt(from.target, from.stamp);
-    await source.locate(next, from.id);
+    saving.startAt(from?.file ?? null);
+    givenName = saved ? next.name : null;
+    await source.locate(next, from?.id ?? null);
   };
+  /** A name that somebody typed and that is in no file yet is kept, whatever is opened. */
+  const isTypedName = ({ name, source: of }: Study): boolean =>
+    name !== givenName && !files.isNamed(name) && !(of?.kind === 'file' && name === catalogueTitle(of.name));
   const showNew = (next: Study): Promise<void> =>
     guarded(async () => {
       if (await mayLeave()) await show(next, true);
@@ -77,19 +84,15 @@ export function createFileState(options: FileStateOptions): FileState {
     const { bytes, target, stamp } = await bridge.readStudy(file);
     const next = readStudy(new TextDecoder().decode(bytes));
     if (!(await mayLeave())) return;
-    await show(next, true, { target, stamp, id: file.id });
+    const at = target === null ? null : { target, stamp, name: next.name, sources: [next.source] };
+    await show(next, true, { id: file.id, file: at });
     await refreshRecent();
-  };
-  const openCatalogueFile = (file: OpenedFile): void => {
-    // One's own catalogue in the demo's place is a study of its own: it never goes into the demo's file.
-    if (study.value.source?.kind === 'demo') saving.leaveFile();
-    source.openCatalogue(file);
   };
   const openFiles = async (files: readonly OpenedFile[]): Promise<void> => {
     for (const file of files)
       await guarded(async () => {
         if (isStudy(file)) await openStudyFile(file);
-        else openCatalogueFile(file);
+        else source.openCatalogue(file, isTypedName(study.value));
       }, undefined);
     const catalogues = files.filter((file) => !isStudy(file));
     if (catalogues.length > 1)
@@ -136,14 +139,6 @@ export function createFileState(options: FileStateOptions): FileState {
     exportFile,
   };
 }
-
-interface StudyFile {
-  readonly target: SaveTarget | null;
-  readonly stamp: FileStamp | null;
-  readonly id: string | null;
-}
-
-const NO_FILE: StudyFile = { target: null, stamp: null, id: null };
 
 function isStudy({ name }: OpenedFile): boolean {
   return /\.json$/i.test(name);

@@ -17,6 +17,11 @@ export interface Questions {
   ask(question: Question): Promise<{ readonly key: string; readonly text: string }>;
   askLeave(name: string): Promise<'save' | 'leave' | 'stay'>;
   askReplace(sentence: string): Promise<'replace' | 'saveAs' | 'stay'>;
+  /** `file` holds a study of another catalogue than the one that is open. */
+  askOther(question: {
+    readonly file: string;
+    readonly catalogue: string;
+  }): Promise<'replace' | 'saveAs' | 'stay'>;
   askSaveName(question: {
     readonly suggestedName: string;
     readonly folder: string;
@@ -66,6 +71,19 @@ export function createQuestions(): Questions {
           { key: 'stay', label: 'Not now' },
           { key: 'replace', label: 'Replace it with mine', danger: true },
           { key: 'saveAs', label: 'Save under another name' },
+        ],
+      });
+      return key as 'replace' | 'saveAs' | 'stay';
+    },
+    async askOther({ file, catalogue }) {
+      const { key } = await ask({
+        title: `${file} holds a study of another catalogue`,
+        text: `The study that is open now has ${catalogue}. Under a name of its own both are kept.`,
+        field: null,
+        answers: [
+          { key: 'stay', label: 'Not now' },
+          { key: 'replace', label: `Replace ${file}`, danger: true },
+          { key: 'saveAs', label: 'Save under a new name…' },
         ],
       });
       return key as 'replace' | 'saveAs' | 'stay';

@@ -16,11 +16,16 @@ function deskOf() {
   let saves = 0;
   let release = () => {};
   const gate = { slow: false };
+  const person = { name: 'a', other: 'stay' as 'stay' | 'replace' | 'saveAs' };
   const bridge = {
     hostKind: 'local',
     saveFolder: '/',
     launch: { files: [], troubles: [] },
-    chooseSaveTarget: async () => target('a'),
+    chooseSaveTarget: async (suggested: string, openedSha256: string | null) => {
+      if (person.name !== 'a')
+        log.push(`name ${suggested}, ${openedSha256 === null ? 'none' : 'one'} opened`);
+      return target(person.name);
+    },
     saveStudy: async (id: string, bytes: Uint8Array, expected: { sizeBytes: number } | null) => {
       log.push(`save ${id} ${text(bytes)} expecting ${expected?.sizeBytes ?? 'nothing'}`);
       if (gate.slow) await new Promise<void>((resume) => (release = resume));
@@ -42,9 +47,13 @@ function deskOf() {
     studyState,
     askLeave: async () => 'leave',
     askReplace: async () => 'stay',
+    askOther: async ({ file, catalogue }) => {
+      log.push(`ask ${file} ${catalogue}`);
+      return person.other;
+    },
   });
   const rename = (name: string) => studyState.perform(change('Rename', { name }));
-  return { log, files, studyState, rename, gate, release: () => release() };
+  return { log, files, studyState, rename, gate, person, release: () => release() };
 }
 const settle = () => new Promise((resume) => setTimeout(resume, 5));
 
@@ -79,6 +88,109 @@ describe('saving', () => {
     release();
     await saving;
     expect(files.target.value).toBeNull();
+  });
+});
+
+const named = (name: string, path: string | null = `/${name}`, sizeBytes = 10) => ({
+  id: `id of ${name} ${sizeBytes}`,
+  name,
+  sizeBytes,
+  modifiedMs: 0,
+  path,
+  url: `blob:${name} ${sizeBytes}`,
+});
+
+describe('another catalogue opened in a saved study', () => {
+  async function savedThenOther(path?: null) {
+    const desk = deskOf();
+    await desk.files.openFiles([named('deep.csv', path)]);
+    desk.rename('My deep field');
+    await desk.files.save();
+    await desk.files.openFiles([named('other.csv', path)]);
+    desk.log.length = 0;
+    return desk;
+  }
+
+  it.each([undefined, null])('never goes into its file without a question (path %s)', async (path) => {
+    const { log, files, studyState } = await savedThenOther(path);
+    expect(studyState.study.value.name).toBe('other');
+    expect(await files.save()).toBe(false);
+    expect(log).toEqual(['ask a.study.json other.csv']);
+    expect(studyState.unsaved.value).toBe(true);
+  });
+
+  it('goes under a name of its own, and undo brings back the study that goes into its own file', async () => {
+    const { log, files, studyState, person } = await savedThenOther();
+    Object.assign(person, { other: 'saveAs', name: 'b' });
+    expect(await files.save()).toBe(true);
+    await files.save();
+    studyState.undo();
+    expect(studyState.study.value.name).toBe('My deep field');
+    await files.save();
+    studyState.redo();
+    await files.save();
+    expect(log).toEqual([
+      'ask a.study.json other.csv',
+      'name other, none opened',
+      'save b other expecting nothing',
+      'save b other expecting 2',
+      'save a My deep field expecting 1',
+      'save b other expecting 3',
+    ]);
+  });
+
+  it('taken back before it was saved leaves no trace', async () => {
+    const { log, files, studyState } = await savedThenOther();
+    studyState.undo();
+    await files.save();
+    expect(log).toEqual(['save a My deep field expecting 1']);
+  });
+
+  it('replaces it where that is chosen, and then it is the other way about', async () => {
+    const { log, files, studyState, person } = await savedThenOther();
+    person.other = 'replace';
+    await files.save();
+    await files.save();
+    person.other = 'stay';
+    studyState.undo();
+    await files.save();
+    expect(log).toEqual([
+      'ask a.study.json other.csv',
+      'save a other expecting 1',
+      'save a other expecting 2',
+      'ask a.study.json deep.csv',
+    ]);
+  });
+
+  it('is told from its own, pointed at, read or accepted', async () => {
+    const { log, files } = deskOf();
+    await files.openFiles([named('deep.csv', null)]);
+    await files.save();
+    files.noteFingerprint('a'.repeat(64));
+    await files.save();
+    files.acceptChanged({ sizeBytes: 12, sha256: 'c'.repeat(64) });
+    await files.save();
+    expect(log.filter((line) => line.startsWith('ask'))).toEqual([]);
+    await files.openFiles([named('deep.csv', null, 12)]);
+    await files.save();
+    expect(log.at(-1)).toBe('ask a.study.json deep.csv');
+  });
+
+  it('leaves a name that was typed since and is in no file yet', async () => {
+    const { files, studyState, rename } = deskOf();
+    const name = () => studyState.study.value.name;
+    await files.openFiles([named('deep.csv')]);
+    expect(name()).toBe('deep');
+    await files.openFiles([named('other.csv')]);
+    expect(name()).toBe('other');
+    rename('Mine');
+    await files.openFiles([named('third.csv')]);
+    expect(name()).toBe('Mine');
+    studyState.undo();
+    expect(name()).toBe('Mine');
+    studyState.undo();
+    studyState.undo();
+    expect(name()).toBe('deep');
   });
 });
 

@@ -1,4 +1,4 @@
-import { type ReadonlySignal, signal } from '@preact/signals';
+import { computed, type ReadonlySignal } from '@preact/signals';
 import { utf8Bytes } from '../../../shared-core/base/textCoding.ts';
 import type { Bridge } from '../../../shared-core/bridge/contract.ts';
 import { STUDY_ENDING } from '../../../shared-core/bridge/fileNames.ts';
@@ -9,28 +9,33 @@ import type { Notices } from '../notices.ts';
 import type { StudyState } from '../studyState.ts';
 import type { ExportFile } from './exporting.ts';
 import type { Guarded } from './guard.ts';
+import type { StudyFile, StudyFiles } from './studyFiles.ts';
 
 export interface SavingOptions {
   readonly bridge: Bridge;
   readonly notices: Notices;
   readonly studyState: StudyState;
+  readonly files: StudyFiles;
   readonly guarded: Guarded;
   readonly exportFile: ExportFile;
   /** Asks whether a file changed by somebody else may be replaced. */
   readonly askReplace: (sentence: string) => Promise<'replace' | 'saveAs' | 'stay'>;
+  /** Asks what becomes of a file whose study is of another catalogue than the open one. */
+  readonly askOther: (question: {
+    readonly file: string;
+    readonly catalogue: string;
+  }) => Promise<'replace' | 'saveAs' | 'stay'>;
   readonly onSaved: () => Promise<void>;
 }
 
-/** The study's own file. */
+/** Saving the study in its own file. */
 export interface Saving {
-  /** Where the study is saved; null when it never was. */
+  /** Where the study is saved; null when it never was, with the catalogue that it has now. */
   readonly target: ReadonlySignal<SaveTarget | null>;
   save(): Promise<boolean>;
   saveAs(): Promise<boolean>;
-  /** Another study is open, read from this file as it was then; null for none. */
-  startAt(target: SaveTarget | null, stamp: FileStamp | null): void;
-  /** From now on the study is another than the one of this file: saving asks for a name. */
-  leaveFile(): void;
+  /** Another study is open, with the file that it was read from. */
+  startAt(file: StudyFile | null): void;
 }
 
 /**
@@ -38,11 +43,8 @@ export interface Saving {
  * when saving was asked for; another one opened meanwhile keeps its own place.
  */
 export function createSaving(options: SavingOptions): Saving {
-  const { bridge, notices, studyState, guarded, exportFile, askReplace, onSaved } = options;
+  const { bridge, notices, studyState, files, guarded, exportFile, askReplace, askOther, onSaved } = options;
   const { study } = studyState;
-  const target = signal<SaveTarget | null>(null);
-  /** The file as it was when it was last read or written. */
-  let stamp: FileStamp | null = null;
   let opened = 0;
   let saving: Promise<unknown> = Promise.resolve();
   const inTurn = <T>(work: () => Promise<T>): Promise<T> => {
@@ -58,8 +60,7 @@ export function createSaving(options: SavingOptions): Saving {
     switch (outcome.kind) {
       case 'saved':
         if (openedThen === opened) {
-          target.value = to;
-          stamp = outcome.stamp;
+          files.wrote(written, to, outcome.stamp);
           studyState.markSaved(written);
         }
         await onSaved();
@@ -89,25 +90,37 @@ export function createSaving(options: SavingOptions): Saving {
   const saveAs = (): Promise<boolean> => inTurn(saveByName);
   const saveByName = (): Promise<boolean> =>
     guarded(async () => {
-      const to = await bridge.chooseSaveTarget(study.value.name, stamp?.sha256 ?? null);
+      const to = await bridge.chooseSaveTarget(study.value.name, files.own.value?.stamp?.sha256 ?? null);
       return to === null ? false : write(to, to.existing);
     }, false);
 
+  /** Another catalogue makes another study: it never goes over the one that was saved without a question. */
+  const saveBesides = async ({ target, stamp }: StudyFile): Promise<boolean> => {
+    const { source } = study.value;
+    const catalogue =
+      source === null ? 'no catalogue' : source.kind === 'demo' ? 'the invented demo survey' : source.name;
+    switch (await askOther({ file: target.name, catalogue })) {
+      case 'saveAs':
+        return saveByName();
+      case 'replace':
+        return write(target, stamp);
+      case 'stay':
+        return false;
+    }
+  };
+  const saveNow = async (): Promise<boolean> => {
+    const [own, last] = [files.own.value, files.last.value];
+    if (own !== null) return write(own.target, own.stamp);
+    return last === null ? saveByName() : saveBesides(last);
+  };
+
   return {
-    target,
-    save: () =>
-      inTurn(() =>
-        guarded(async () => (target.value === null ? saveByName() : write(target.value, stamp)), false),
-      ),
+    target: computed(() => files.own.value?.target ?? null),
+    save: () => inTurn(() => guarded(saveNow, false)),
     saveAs,
-    startAt(at, was) {
+    startAt(file) {
       opened++;
-      target.value = at;
-      stamp = was;
-    },
-    leaveFile() {
-      target.value = null;
-      stamp = null;
+      files.startAt(file);
     },
   };
 }

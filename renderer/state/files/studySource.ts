@@ -25,15 +25,23 @@ export interface StudySourceState {
 }
 
 interface SourceFiles extends StudySourceState {
-  /** Makes a file the study's catalogue, with nothing cut and no shells. */
-  openCatalogue(file: OpenedFile): void;
+  /**
+   * Makes a file the study's catalogue, with nothing cut and no shells. The study takes its name, unless the one that
+   * it has is to be kept.
+   */
+  openCatalogue(file: OpenedFile, keepName: boolean): void;
   /** Finds the file of a study that has just been opened, where that needs no asking. `studyId`: the study's file. */
   locate(study: Study, studyId: string | null): Promise<void>;
   /** The study's source lies at this file. */
   place(file: OpenedFile): void;
 }
 
-export function createStudySource(bridge: Bridge, studyState: StudyState): SourceFiles {
+/** @param onCarried told when what the study remembers of its catalogue changes while it stays that catalogue */
+export function createStudySource(
+  bridge: Bridge,
+  studyState: StudyState,
+  onCarried: (from: FileSource, to: FileSource) => void,
+): SourceFiles {
   const { study } = studyState;
   const atHand = createFilesAtHand();
   const source = computed(() => study.value.source);
@@ -60,17 +68,20 @@ export function createStudySource(bridge: Bridge, studyState: StudyState): Sourc
     noteFingerprint(sha256) {
       const named = source.value;
       if (named?.kind !== 'file') return;
-      atHand.carry(named, { ...named, sha256 });
-      studyState.amend((now) => ({ ...now, source: { ...named, sha256 } }));
+      const known = { ...named, sha256 };
+      atHand.carry(named, known);
+      onCarried(named, known);
+      studyState.amend((now) => ({ ...now, source: known }));
     },
     acceptChanged({ sizeBytes, sha256 }) {
       const named = source.value;
       if (named?.kind !== 'file') return;
       const accepted = { ...named, sizeBytes, sha256 };
       atHand.carry(named, accepted);
+      onCarried(named, accepted);
       studyState.perform(change('Accept the changed catalogue', { source: accepted }));
     },
-    openCatalogue(file) {
+    openCatalogue(file, keepName) {
       const { source: before, look, name } = study.value;
       const fresh = before === null || before.kind === 'demo';
       const { path, sizeBytes } = file;
@@ -83,7 +94,7 @@ export function createStudySource(bridge: Bridge, studyState: StudyState): Sourc
           cuts: [],
           region: null,
           edges: [],
-          name: fresh ? baseName(file.name) : name,
+          name: keepName ? name : catalogueTitle(file.name),
           // The demo's columns are not one's own; another file of one's own may well have the same.
           look: fresh && typeof look.colourBy === 'object' ? { ...look, colourBy: 'redshift' } : look,
         }),
@@ -101,11 +112,13 @@ export function createStudySource(bridge: Bridge, studyState: StudyState): Sourc
       // The place is new, size and fingerprint stay those that the study knows: another file is then told.
       const placed = { ...named, name: file.name, path: file.path };
       atHand.put(placed, file);
+      onCarried(named, placed);
       studyState.perform(change(`Find the catalogue at ${file.name}`, { source: placed }));
     },
   };
 }
 
-function baseName(fileName: string): string {
+/** The name that a study takes from its catalogue. */
+export function catalogueTitle(fileName: string): string {
   return fileName.replace(/(\.(csv|tsv|txt|dat))?(\.gz)?$/i, '').slice(0, 200) || 'Untitled';
 }

@@ -1,0 +1,67 @@
+import { copyFileSync, existsSync, readFileSync } from 'node:fs';
+import { join } from 'node:path';
+import { fileURLToPath } from 'node:url';
+import type { Page } from '@playwright/test';
+import { accessible, expect, ready, test } from './window.ts';
+
+const SHAPLEY = fileURLToPath(new URL('../data/shapley.csv', import.meta.url));
+const OTHER = 'ra,dec,z\n150,2,0.5\n151,3,0.6\n152,2.5,0.7\n';
+
+async function drop(page: Page, name: string, content: string): Promise<void> {
+  const data = await page.evaluateHandle(
+    ([name, content]) => {
+      const transfer = new DataTransfer();
+      transfer.items.add(new File([content!], name!));
+      return transfer;
+    },
+    [name, content],
+  );
+  for (const kind of ['dragenter', 'dragover', 'drop'])
+    await page.dispatchEvent('.frame', kind, { dataTransfer: data });
+}
+
+test('another catalogue in a saved study takes the title, and Save asks before it replaces the study', async ({
+  desk,
+}) => {
+  const catalogue = join(desk.folder, 'shapley.csv');
+  copyFileSync(SHAPLEY, catalogue);
+  const page = await desk.open({ files: [catalogue] });
+  await ready(page);
+  await page.getByRole('button', { name: /^z: shells of equal/ }).click();
+  const title = page.getByLabel('Name of the study');
+  await title.fill('Supercluster');
+  await page.keyboard.press('Enter');
+  await page.keyboard.press('Control+s');
+  await page.getByRole('dialog').getByRole('button', { name: 'Save' }).click();
+  const path = join(desk.folder, 'Supercluster.study.json');
+  await expect.poll(() => existsSync(path)).toBe(true);
+  const saved = readFileSync(path, 'utf8');
+
+  await drop(page, 'other.csv', OTHER);
+  await ready(page);
+  await expect(title).toHaveValue('other');
+  await page.getByRole('button', { name: 'Save', exact: true }).click();
+  const question = page.getByRole('dialog', { name: /holds a study of another catalogue/ });
+  await expect(question).toContainText('other.csv');
+  await accessible(page, '.dialog[open]');
+  await page.keyboard.press('Escape');
+  await expect(question).toHaveCount(0);
+  expect(readFileSync(path, 'utf8')).toBe(saved);
+
+  await page.keyboard.press('Control+s');
+  await question.getByRole('button', { name: 'Save under a new name…' }).click();
+  await expect(page.getByRole('textbox', { name: 'Name', exact: true })).toHaveValue('other');
+  await page.getByRole('dialog').getByRole('button', { name: 'Save' }).click();
+  await expect.poll(() => existsSync(join(desk.folder, 'other.study.json'))).toBe(true);
+  expect(readFileSync(path, 'utf8')).toBe(saved);
+
+  // Taken back, the study of before is whole, and goes into its own file.
+  await page.keyboard.press('Control+z');
+  await ready(page);
+  await expect(title).toHaveValue('Supercluster');
+  await expect(page.locator('.engine-line')).toHaveText(/4.212 kept/);
+  await page.getByRole('button', { name: 'Save', exact: true }).click();
+  await expect(page.getByText('not saved', { exact: true })).toHaveCount(0);
+  await expect(page.getByRole('dialog')).toHaveCount(0);
+  expect(JSON.parse(readFileSync(path, 'utf8')).edges).toEqual(JSON.parse(saved).edges);
+});
