@@ -1,4 +1,6 @@
-import { comovingRulerY, compassOf, PINNED_TOP_PX, paintCone, upperIsPinned } from './coneRulers.ts';
+import { comovingRulerY, PINNED_TOP_PX, upperIsPinned } from './alignedRulers.ts';
+import { compassOf } from './compass.ts';
+import { paintCone } from './coneRulers.ts';
 import { paintMarks } from './marks.ts';
 import type { Pen } from './pen.ts';
 import { paintRings } from './ringRulers.ts';

@@ -1,6 +1,6 @@
 import { project } from '../geometry/projection.ts';
 import type { RadialReading } from '../types.ts';
-import { paintObserver } from './coneRulers.ts';
+import { paintObserver } from './observer.ts';
 import type { Pen, Point } from './pen.ts';
 import { drawRuler } from './ruler.ts';
 import type { OverlayScene } from './scene.ts';

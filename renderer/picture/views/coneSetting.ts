@@ -9,7 +9,7 @@ import {
   project,
   type Viewport,
 } from '../../cone/geometry/projection.ts';
-import { COMOVING_DROP_PX } from '../../cone/overlay/coneRulers.ts';
+import { COMOVING_DROP_PX } from '../../cone/overlay/alignedRulers.ts';
 import type { Point } from '../../cone/overlay/pen.ts';
 import type { OverlayScene, PaintedLane } from '../../cone/overlay/scene.ts';
 import { radiusAt } from '../../cone/points/radiusTable.ts';

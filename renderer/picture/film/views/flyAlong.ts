@@ -4,7 +4,7 @@ import { lookingFrom } from '../../../cone/geometry/poses.ts';
 import type { PreparedField } from '../../../cone/geometry/preparedField.ts';
 import { compose, type Pose, pixelMatrix, project } from '../../../cone/geometry/projection.ts';
 import { dot, intoFrame } from '../../../cone/geometry/vector.ts';
-import { compassOf } from '../../../cone/overlay/coneRulers.ts';
+import { compassOf } from '../../../cone/overlay/compass.ts';
 import type { Pen } from '../../../cone/overlay/pen.ts';
 import type { OverlayScene, PaintedLane } from '../../../cone/overlay/scene.ts';
 import { paintShells } from '../../../cone/overlay/shellPaint.ts';
