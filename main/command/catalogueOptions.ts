@@ -27,7 +27,7 @@ export function addCatalogueOptions(command: Command): Command {
     )
     .option(
       '--cut <column:min..max>',
-      'keep rows whose number lies in the range, an end may be left out; repeat it for several',
+      'keep rows whose number lies in the range, bounds included; an end may be left out; repeat it for several',
       (text: string, before: Cut[] = []) => [...before, parseCut(text)],
     )
     .option('--set-aside <file>', 'write the rows that are not used there, each with its line and reason')

@@ -5,8 +5,11 @@ import {
   type CosmologyParameters,
   parametersWithNeutrinosInside,
 } from '../../shared-core/cosmology/parameters.ts';
-import { findPublishedSet, PUBLISHED_SETS } from '../../shared-core/cosmology/publishedSets.ts';
-import { describeCosmology } from '../../shared-core/report/notes.ts';
+import {
+  findPublishedSet,
+  PUBLISHED_SETS,
+  type PublishedSet,
+} from '../../shared-core/cosmology/publishedSets.ts';
 import { numberList, oneNumber } from './numbers.ts';
 
 export interface CosmologyOptions {
@@ -44,11 +47,11 @@ export function addCosmologyOptions(command: Command): Command {
     .option('--neutrinos-inside', 'the density of --omega-m contains the massive neutrinos');
 }
 
-/** The cosmology asked for, and a line that says which it is. */
+/** The cosmology asked for, and which published set it is. */
 export function cosmologyOf(options: CosmologyOptions): {
   cosmology: Cosmology;
-  name: string | null;
-  line: string;
+  /** Null where a parameter was changed. */
+  set: PublishedSet | null;
 } {
   const set = findPublishedSet(options.cosmology ?? 'planck2018');
   if (options.flat && options.omegaDe !== undefined)
@@ -75,6 +78,5 @@ export function cosmologyOf(options: CosmologyOptions): {
     ['h0', 'omegaM', 'omegaDe', 'w0', 'wa', 'tcmb', 'neff', 'mnu', 'neutrinosInside'].includes(key),
   );
   const cosmology = createCosmology(parameters);
-  const name = changed ? null : set.key;
-  return { cosmology, name, line: describeCosmology(cosmology, changed ? null : set) };
+  return { cosmology, set: changed ? null : set };
 }

@@ -3,7 +3,6 @@ import { Refusal } from '../../shared-core/base/refusal.ts';
 import { compileRegion } from '../../shared-core/sky/compileRegion.ts';
 import type { Footprint, Region, SkyShape } from '../../shared-core/sky/region.ts';
 import {
-  describeRegion,
   parsePolygonText,
   parseRegionShape,
   polygonFileOf,
@@ -34,14 +33,14 @@ export function regionFiles({ region = [], hole = [] }: RegionOptions): string[]
 /** The region asked for, ready to use; null when none was given and the area must be estimated. */
 export async function regionOf(
   options: RegionOptions,
-): Promise<{ footprint: Footprint; words: string } | null> {
+): Promise<{ footprint: Footprint; region: Region } | null> {
   if (options.region === undefined) {
     if (options.hole !== undefined)
       throw new Refusal('--hole came without --region: give the observed sky that the hole is in.', 'use');
     return null;
   }
   const region: Region = { parts: await shapes(options.region), holes: await shapes(options.hole ?? []) };
-  return { footprint: compileRegion(region), words: describeRegion(region) };
+  return { footprint: compileRegion(region), region };
 }
 
 async function shapes(texts: readonly string[]): Promise<SkyShape[]> {

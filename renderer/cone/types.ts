@@ -60,7 +60,7 @@ export interface ShellInput {
   readonly comovingMaxMpc: number;
   /** Short text that names the shell, such as "0.8 – 1.0". */
   readonly label: string;
-  /** A heavier label, shown for the chosen or hovered shell, such as "0.8 < z < 1.0". */
+  /** A heavier label, shown for the chosen or hovered shell, such as "0.8 ≤ z < 1". */
   readonly longLabel?: string;
 }
 

@@ -8,7 +8,7 @@ import { IconButton } from '../ui/IconButton.tsx';
 import { Menu } from '../ui/Menu.tsx';
 import { LedgerTable } from './ledger/LedgerTable.tsx';
 import { NARROW_LEDGER } from './ledger/ledgerColumns.ts';
-import { copyLedger } from './ledger/ledgerFormats.ts';
+import { copyLedger, LEDGER_COPIES } from './ledger/ledgerFormats.ts';
 import type { LedgerOrder } from './ledger/sortShells.ts';
 import { WideLedger } from './ledger/WideLedger.tsx';
 import { ShellSheet } from './sheet/ShellSheet.tsx';
@@ -33,21 +33,12 @@ export function WorthPanel() {
             label="Copy the ledger"
             title="Copy the ledger"
             disabled={count === 0 || !engine.fresh.value}
-            entries={[
-              {
-                kind: 'item',
-                label: 'With tabs',
-                hint: 'every digit',
-                run: () => void copyLedger(app, 'tabs'),
-              },
-              {
-                kind: 'item',
-                label: 'Aligned text',
-                hint: 'rounded',
-                run: () => void copyLedger(app, 'aligned'),
-              },
-              { kind: 'item', label: 'LaTeX', hint: 'rounded', run: () => void copyLedger(app, 'latex') },
-            ]}
+            entries={LEDGER_COPIES.map(({ key, label, hint }) => ({
+              kind: 'item',
+              label,
+              hint,
+              run: () => void copyLedger(app, key),
+            }))}
           >
             Copy
           </Menu>

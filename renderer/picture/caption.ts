@@ -1,4 +1,5 @@
 import { findPublishedSet } from '../../shared-core/cosmology/publishedSets.ts';
+import { cutWords } from '../../shared-core/report/cuts.ts';
 import type { PictureNumbers } from './numbers.ts';
 
 /** A count with its thousands parted by narrow spaces. */
@@ -24,9 +25,7 @@ export function offeredCaption(numbers: PictureNumbers, notes: readonly string[]
   const beyond = (facts.selected?.sample.count ?? 0) - numbers.galaxiesWithin;
   const hidden = beyond > 0 ? `; ${thousands(beyond)} lie beyond the depth shown` : '';
   const parts = [`${galaxiesText(numbers)}${of}${hidden}.`, ...notes.map(sentence)];
-  const cuts = study.cuts.map(
-    ({ column, min, max }) => `${min === null ? '' : `${min} ≤ `}${column}${max === null ? '' : ` ≤ ${max}`}`,
-  );
+  const cuts = study.cuts.map((cut) => cutWords(cut, '≤'));
   if (cuts.length > 0) parts.push(`Selected: ${cuts.join(', ')}.`);
   parts.push(...regionText(numbers), cosmologyText(numbers));
   if (study.source?.kind === 'demo') parts.push('The survey is invented.');

@@ -1,7 +1,12 @@
 import type { PictureOptions } from '../../shared-core/picture/options.ts';
+import { shownColumn, shownUnit } from '../../shared-core/report/quantity.ts';
+import { SHELL_QUANTITIES } from '../../shared-core/report/shellQuantities.ts';
+import { shellRanges } from '../../shared-core/report/shellRange.ts';
 import { galaxiesText } from './caption.ts';
 import type { PictureNumbers } from './numbers.ts';
 import type { ViewDrawing } from './views/view.ts';
+
+const DISTANCES = SHELL_QUANTITIES.filter((q) => q.key === 'comovingMinMpc' || q.key === 'comovingMaxMpc');
 
 const VIEW_WORDS = {
   cone: 'Cone diagram',
@@ -21,7 +26,7 @@ export function describeInWords(
   drawing: Pick<ViewDrawing, 'words' | 'notes'>,
   kind: string = VIEW_WORDS[options.view],
 ): string {
-  const { shells, facts, cosmology } = numbers;
+  const { facts, cosmology } = numbers;
   const out = [`${kind}: ${drawing.words}. ${galaxiesText(numbers)}`];
   const z = facts.selected?.sample.redshift;
   if (z && z.length > 0) {
@@ -29,11 +34,7 @@ export function describeInWords(
     out[0] += ` from redshift ${+low.toFixed(3)} to ${+high.toFixed(3)} (lookback time up to ${cosmology.lookbackGyr(high).toFixed(2)} Gyr)`;
   }
   out[0] += '.';
-  if (options.shells)
-    for (const s of shells)
-      out.push(
-        `Shell ${+s.zMin.toFixed(4)} < z < ${+s.zMax.toFixed(4)}: ${s.count === 0 ? 'no galaxies' : `${s.count} galaxies`}, comoving distance ${s.comovingMinMpc.toFixed(0)} to ${s.comovingMaxMpc.toFixed(0)} Mpc.`,
-      );
+  if (options.shells) out.push(...shellSentences(numbers));
   if (numbers.colours.legend)
     out.push(
       `Colour shows ${numbers.colours.legend.title}, from ${numbers.colours.legend.low} to ${numbers.colours.legend.high}.`,
@@ -42,4 +43,17 @@ export function describeInWords(
     out.push(`Label at RA ${label.raDeg}, Dec ${label.decDeg}, redshift ${label.redshift}: ${label.text}.`);
   if (drawing.notes.length > 0) out.push(`Note: ${drawing.notes.join('; ')}.`);
   return out.join(' ');
+}
+
+/** A sentence for each shell, with the digits and the unit of length of the ledger. */
+function shellSentences({ shells, all, units }: PictureNumbers): string[] {
+  const column = all === null ? shells : [...shells, all];
+  const [near, far] = DISTANCES.map((quantity) => shownColumn(quantity, column, units));
+  const unit = shownUnit(DISTANCES[0]!, units);
+  return shellRanges(shells).map((range, i) => {
+    const shell = shells[i]!;
+    const galaxies =
+      shell.count === 0 ? 'no galaxies' : `${shell.count} ${shell.count === 1 ? 'galaxy' : 'galaxies'}`;
+    return `Shell ${range}: ${galaxies}, comoving distance ${near!(shell)} to ${far!(shell)} ${unit}.`;
+  });
 }

@@ -5,7 +5,7 @@ import type { ShownUnits } from '../../shared-core/report/quantity.ts';
 import { radialAxis } from '../../shared-core/shells/radial.ts';
 import { rankBelow, type SortedSample, sortSample } from '../../shared-core/shells/sample.ts';
 import type { ShellStatistics } from '../../shared-core/shells/shell.ts';
-import { shellStatistics } from '../../shared-core/shells/statistics.ts';
+import { allAsOne, shellStatistics } from '../../shared-core/shells/statistics.ts';
 import { compileRegion } from '../../shared-core/sky/compileRegion.ts';
 import { footprintFields } from '../../shared-core/sky/fields.ts';
 import { colourKey } from '../../shared-core/study/colourBy.ts';
@@ -40,6 +40,8 @@ export interface PictureNumbers {
   readonly galaxiesWithin: number;
   readonly footprint: FootprintPicture | null;
   readonly shells: readonly ShellStatistics[];
+  /** One shell from the first edge to the last; null where there are no shells. */
+  readonly all: ShellStatistics | null;
   readonly shellInputs: readonly ShellInput[];
   readonly colours: Colours;
   readonly light: Light;
@@ -60,14 +62,13 @@ export function pictureNumbers(options: PictureOptions, facts: PictureFacts): Pi
       'The study has no galaxies, and no region with shells either, so there is nothing to draw: open a catalogue, or give a region and shell edges.',
     );
   const sample = selected?.sample ?? sortSample(new Float64Array(0), null);
-  const shells =
-    footprint === null || edges.length < 2
-      ? []
-      : shellStatistics(sample, edges, {
-          cosmology,
-          areaDeg2: footprint.areaDeg2,
-          p0Mpc3PerH3: study.p0Mpc3PerH3,
-        });
+  const conditions = footprint && {
+    cosmology,
+    areaDeg2: footprint.areaDeg2,
+    p0Mpc3PerH3: study.p0Mpc3PerH3,
+  };
+  const measurable = conditions !== null && edges.length >= 2;
+  const shells = measurable ? shellStatistics(sample, edges, conditions) : [];
   const units = { perH: study.look.perH, h: cosmology.h };
   const deepest = depthOf(options, sample, edges);
   const galaxiesWithin = rankBelow(sample, deepest, true);
@@ -82,6 +83,7 @@ export function pictureNumbers(options: PictureOptions, facts: PictureFacts): Pi
     galaxiesWithin,
     footprint,
     shells,
+    all: measurable ? allAsOne(sample, edges, conditions) : null,
     shellInputs: coneShells(shells),
     colours,
     light: lightOf(options, study.look.light),

@@ -116,23 +116,44 @@ export function shownUnit<Row>(quantity: Quantity<Row>, units: ShownUnits): stri
   return UNITS[quantity.unit].plain[units.perH ? 1 : 0];
 }
 
-/** The number rounded for reading, the same in the window, in tables and in LaTeX; an en dash-like '-' for none. */
+/** The number of a row that stands alone, rounded for reading; '-' for none. */
 export function shownText<Row>(quantity: Quantity<Row>, row: Row, units: ShownUnits): string {
-  const value = shownValue(quantity, row, units);
-  if (value === null) return '-';
-  return formatNumber(value, quantity.show);
+  return shownColumn(quantity, [row], units)(row);
 }
 
-/** Plain decimals where they are short, else a mantissa and a power of ten; never loses the sign or NaN. */
-export function formatNumber(
-  value: number,
-  show: { readonly decimals: number } | { readonly significant: number },
-): string {
+/**
+ * The numbers of a column rounded for reading, the same in the window, in tables and in LaTeX; '-' for none. All are
+ * written by powers of ten where one of them has to be: numbers that are read one below the other look alike.
+ * @param rows all that stand in the column, a row of totals too
+ */
+export function shownColumn<Row>(
+  quantity: Quantity<Row>,
+  rows: readonly Row[],
+  units: ShownUnits,
+): (row: Row) => string {
+  const powers = rows.some((row) => needsPower(shownValue(quantity, row, units) ?? 0, quantity.show));
+  return (row) => {
+    const value = shownValue(quantity, row, units);
+    return value === null ? '-' : formatNumber(value, quantity.show, powers);
+  };
+}
+
+type Show = { readonly decimals: number } | { readonly significant: number };
+
+function needsPower(value: number, show: Show): boolean {
+  const size = Math.abs(value);
+  return 'significant' in show && Number.isFinite(value) && value !== 0 && (size < 1e-3 || size >= 1e6);
+}
+
+/**
+ * Plain decimals where they are short, else a mantissa and a power of ten; never loses the sign or NaN.
+ * @param powers a power of ten in any case, but for 0 and for numbers shown by decimals
+ */
+export function formatNumber(value: number, show: Show, powers = false): string {
   if (!Number.isFinite(value)) return String(value);
   if ('decimals' in show) return value.toFixed(show.decimals);
   if (value === 0) return '0';
-  const size = Math.abs(value);
-  if (size >= 1e-3 && size < 1e6)
+  if (!powers && !needsPower(value, show))
     return value.toPrecision(show.significant).includes('e')
       ? value.toFixed(0)
       : value.toPrecision(show.significant);

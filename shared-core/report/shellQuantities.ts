@@ -38,7 +38,7 @@ export const SHELL_QUANTITIES: readonly Quantity<ShellStatistics>[] = [
     value: (s) => s.count,
     show: { decimals: 0 },
     meaning: 'Galaxies in the shell.',
-    formula: 'number of kept rows with z min <= z < z max',
+    formula: 'number of kept rows with z min <= z < z max, and z = z max too in the last shell',
     source: 'the catalogue',
   },
   {
@@ -210,7 +210,7 @@ export const SHELL_QUANTITIES: readonly Quantity<ShellStatistics>[] = [
     key: 'effectiveVolumeUniformMpc3',
     keyPerH: 'effectiveVolumeUniformMpc3PerH3',
     title: 'V eff uniform',
-    latexTitle: '$V_{\\rm eff,u}$',
+    latexTitle: '$V_{\\rm eff,uniform}$',
     unit: 'Mpc3',
     value: (s) => s.effectiveVolumeUniformMpc3,
     show: { significant: 4 },

@@ -1,32 +1,18 @@
-import type { ColumnMapping, RowAccount } from '../catalogue/catalogue.ts';
-import type { Cosmology } from '../cosmology/cosmology.ts';
-import type { ShellStatistics } from '../shells/shell.ts';
-import type { Footprint } from '../sky/region.ts';
-import { asObjects, type Table } from './table.ts';
+import type { ShellsFacts } from './shellsTable.ts';
+import { asObject, asObjects, type Table } from './table.ts';
 
-export interface ShellsResult {
-  readonly table: Table<ShellStatistics>;
-  /** Null for a plan, which has no catalogue; the mapping likewise. */
-  readonly account: RowAccount | null;
-  readonly mapping: ColumnMapping | null;
-  /** Null where neither a region nor a catalogue says which sky it is. */
-  readonly footprint: Pick<Footprint, 'origin' | 'areaDeg2' | 'estimate'> | null;
-  readonly cosmology: Cosmology;
-  readonly p0Mpc3PerH3: number;
-  /** Key of the published set, or null for own parameters. */
-  readonly cosmologyName: string | null;
-}
-
-/** The ledger as a JSON value for scripts: everything that is needed to repeat it, every digit. */
-export function shellsJson({
-  table,
+/** The selection and the conditions of a ledger as plain values: everything that is needed to repeat it but the file. */
+export function shellsMeta({
   account,
   mapping,
+  cuts,
+  region,
   footprint,
   cosmology,
+  set,
   p0Mpc3PerH3,
-  cosmologyName,
-}: ShellsResult): unknown {
+  units,
+}: Omit<ShellsFacts, 'shells' | 'all'>): Record<string, unknown> {
   return {
     catalogue: account && {
       rowsRead: account.rowsRead,
@@ -36,8 +22,10 @@ export function shellsJson({
       repeatedPositions: account.repeatedPositions,
       columns: mapping,
     },
+    // Both bounds are included.
+    cuts: account && cuts.map(({ column, min, max }) => ({ column, min, max })),
     cosmology: {
-      name: cosmologyName,
+      name: set?.key ?? null,
       ...cosmology.parameters,
       omegaDe0: cosmology.omegaDe0,
       omegaK0: cosmology.omegaK0,
@@ -46,9 +34,18 @@ export function shellsJson({
       areaDeg2: footprint.areaDeg2,
       estimated: footprint.origin === 'estimated',
       ...(footprint.estimate === null ? {} : footprint.estimate),
+      ...(region === null ? {} : { parts: region.parts, holes: region.holes }),
     },
     p0Mpc3PerH3,
-    lengthUnit: table.units.perH ? 'Mpc/h' : 'Mpc',
+    lengthUnit: units.perH ? 'Mpc/h' : 'Mpc',
+  };
+}
+
+/** The ledger as a JSON value for scripts: what its metadata say, and every digit of the shells and of all as one. */
+export function shellsJson<Row>(table: Table<Row>): unknown {
+  return {
+    ...table.meta,
     shells: asObjects(table),
+    all: table.all == null ? null : asObject(table, table.all),
   };
 }

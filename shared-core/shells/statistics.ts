@@ -52,6 +52,15 @@ export function shellStatistics(
   });
 }
 
+/** All shells as one, from the first edge to the last: what shellStatistics says of that one shell. */
+export function allAsOne(
+  sample: SortedSample,
+  edges: readonly number[],
+  conditions: ShellConditions,
+): ShellStatistics {
+  return shellStatistics(sample, [edges[0]!, edges.at(-1)!], conditions)[0]!;
+}
+
 function oneShell(
   sample: SortedSample,
   zMin: number,

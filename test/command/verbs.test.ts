@@ -119,14 +119,17 @@ describe('shells', () => {
     expect(holed.catalogue.setAside).toBe(holed.catalogue.reasons.outsideRegion);
     const bright = await json(...REGION, '--cut', 'Mag:..16.5');
     expect(bright.catalogue).toMatchObject({ kept: 120, reasons: { outsideCuts: 180 } });
+    expect(bright).toMatchObject({ cuts: [{ min: null }], region: { parts: [{ kind: 'box' }], holes: [] } });
   });
 
   it('prints CSV, ECSV and LaTeX', async () => {
-    const command = async (format: string) =>
-      (await conewright('shells', file(), ...REGION, '--edges', '0.1,0.2,0.4', format)).out;
+    const command = async (...format: string[]) =>
+      (await conewright('shells', file(), ...REGION, '--edges', '0.1,0.2,0.4', ...format)).out;
     expect((await command('--csv')).split('\r\n')).toHaveLength(4);
     expect(await command('--ecsv')).toMatch(/^# %ECSV 1\.0\n# ---\n/);
-    expect(await command('--latex')).toContain('\\begin{tabular}');
+    expect(await command('--latex')).toContain('\\begin{tabular}{rrrrrrrrrrr}');
+    expect(await command('--latex', '--all-columns')).toContain(`\\begin{tabular}{${'r'.repeat(20)}}`);
+    expect((await conewright('shells', file(), '--csv', '--all-columns')).err).toMatch(/without --latex/);
   });
 });
 

@@ -1,6 +1,6 @@
 import type { Command } from 'commander';
 import { CoordinateWriter } from '../../../shared-core/report/coordinates.ts';
-import { describeAccount, describeColumns } from '../../../shared-core/report/notes.ts';
+import { describeAccount, describeColumns, describeCosmology } from '../../../shared-core/report/notes.ts';
 import { addCatalogueOptions, type CatalogueOptions, readCatalogue } from '../catalogueOptions.ts';
 import { addCosmologyOptions, type CosmologyOptions, cosmologyOf } from '../cosmologyOptions.ts';
 import { outputPlaces } from '../outputPlaces.ts';
@@ -31,7 +31,7 @@ export function addCoordinates(program: Command, say: (text: string) => void): v
       '\nExample:\n  npm run -s conewright -- coordinates survey.csv -o positions.csv --cosmology wmap9',
     )
     .action(async (file: string, options: CoordinatesOptions) => {
-      const { cosmology, line: cosmologyLine } = cosmologyOf(options);
+      const { cosmology, set } = cosmologyOf(options);
       const overwrite = options.overwrite === true;
       const places = await outputPlaces(
         { '--output': options.output, '--set-aside': options.setAside },
@@ -56,7 +56,7 @@ export function addCoordinates(program: Command, say: (text: string) => void): v
         await output.finish();
         say(`${options.output}: ${catalogue.account.kept} rows. ${describeAccount(catalogue.account)}`);
         say(describeColumns(mapping));
-        say(cosmologyLine);
+        say(describeCosmology(cosmology, set));
       } catch (error) {
         await output.abandon();
         throw error;

@@ -6,20 +6,14 @@ import { SET_ASIDE_HEADER, setAsideLine } from '../../../shared-core/catalogue/s
 import { createCosmology } from '../../../shared-core/cosmology/cosmology.ts';
 import { findPublishedSet } from '../../../shared-core/cosmology/publishedSets.ts';
 import { makeDemoSurvey } from '../../../shared-core/demo/demoSurvey.ts';
-import {
-  describeAccount,
-  describeColumns,
-  describeCosmology,
-  describeFootprint,
-  describeMethod,
-} from '../../../shared-core/report/notes.ts';
-import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
+import { LEDGER_QUANTITIES } from '../../../shared-core/report/ledgerQuantities.ts';
 import { shellsJson } from '../../../shared-core/report/shellsJson.ts';
+import { shellsTable } from '../../../shared-core/report/shellsTable.ts';
 import { asCsv, asEcsv, asLatex, asText } from '../../../shared-core/report/table.ts';
 import { sortSample } from '../../../shared-core/shells/sample.ts';
-import { DEFAULT_P0_MPC3_PER_H3, shellStatistics } from '../../../shared-core/shells/statistics.ts';
+import { allAsOne, DEFAULT_P0_MPC3_PER_H3, shellStatistics } from '../../../shared-core/shells/statistics.ts';
 import { compileRegion } from '../../../shared-core/sky/compileRegion.ts';
-import { describeRegion, formatShape } from '../../../shared-core/sky/regionText.ts';
+import { formatShape } from '../../../shared-core/sky/regionText.ts';
 import { fromHere } from '../files.ts';
 import { oneNumber } from '../numbers.ts';
 import { outputPlaces } from '../outputPlaces.ts';
@@ -49,28 +43,20 @@ export function addDemo(program: Command, print: (text: string) => void, say: (t
       });
       const sample = sortSample(catalogue.redshift, catalogue.weight);
       const conditions = { cosmology, areaDeg2: footprint.areaDeg2, p0Mpc3PerH3: DEFAULT_P0_MPC3_PER_H3 };
-      const table = {
-        rows: shellStatistics(sample, survey.edges, conditions),
-        quantities: SHELL_QUANTITIES,
+      const bare = shellsTable({
+        shells: shellStatistics(sample, survey.edges, conditions),
+        all: allAsOne(sample, survey.edges, conditions),
         units: { perH: false, h: cosmology.h },
-        notes: [
-          `${survey.name}. ${survey.description}`,
-          describeAccount(catalogue.account),
-          describeColumns(mapping),
-          describeFootprint(footprint, describeRegion(survey.region)),
-          describeCosmology(cosmology, set),
-          describeMethod(DEFAULT_P0_MPC3_PER_H3),
-        ],
-      };
-      const json = shellsJson({
-        table,
         account: catalogue.account,
         mapping,
+        cuts: [],
+        region: survey.region,
         footprint,
         cosmology,
+        set,
         p0Mpc3PerH3: DEFAULT_P0_MPC3_PER_H3,
-        cosmologyName: set.key,
       });
+      const table = { ...bare, notes: [`${survey.name}. ${survey.description}`, ...bare.notes] };
       const text = asText(table);
       const files: Record<string, string> = {
         'catalogue.csv': survey.csv,
@@ -79,8 +65,8 @@ export function addDemo(program: Command, print: (text: string) => void, say: (t
         'shells.txt': text,
         'shells.csv': asCsv(table),
         'shells.ecsv': asEcsv(table),
-        'shells.tex': asLatex(table),
-        'shells.json': `${JSON.stringify(json, null, 2)}\n`,
+        'shells.tex': asLatex({ ...table, quantities: LEDGER_QUANTITIES }),
+        'shells.json': `${JSON.stringify(shellsJson(table), null, 2)}\n`,
       };
       await writeNew(options.output, files, options.overwrite === true);
       print(text);

@@ -1,5 +1,6 @@
 import type { Command } from 'commander';
 import { DISTANCE_QUANTITIES, distanceRows } from '../../../shared-core/report/distanceQuantities.ts';
+import { describeCosmology } from '../../../shared-core/report/notes.ts';
 import { asObjects } from '../../../shared-core/report/table.ts';
 import { addCosmologyOptions, type CosmologyOptions, cosmologyOf } from '../cosmologyOptions.ts';
 import { numberList } from '../numbers.ts';
@@ -18,12 +19,12 @@ export function addDistances(program: Command, print: (text: string) => void): v
       '\nExample:\n  npm run -s conewright -- distances --z 0.5,1.4 --cosmology planck2018 --w0 -0.9',
     )
     .action((options: { z: number[] } & CosmologyOptions & OutputOptions) => {
-      const { cosmology, line } = cosmologyOf(options);
+      const { cosmology, set } = cosmologyOf(options);
       const table = {
         rows: distanceRows(cosmology, options.z),
         quantities: DISTANCE_QUANTITIES,
         units: { perH: options.hUnits === true, h: cosmology.h },
-        notes: [line],
+        notes: [describeCosmology(cosmology, set)],
       };
       print(render(table, options, () => asObjects(table)));
     });

@@ -1,18 +1,16 @@
 import type { Command } from 'commander';
 import { Refusal } from '../../../shared-core/base/refusal.ts';
 import type { LoadedCatalogue } from '../../../shared-core/catalogue/loadCatalogue.ts';
-import {
-  describeAccount,
-  describeColumns,
-  describeFootprint,
-  describeMethod,
-} from '../../../shared-core/report/notes.ts';
-import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
+import { columnNamed } from '../../../shared-core/catalogue/mapping.ts';
+import { LEDGER_QUANTITIES } from '../../../shared-core/report/ledgerQuantities.ts';
+import { describeAccount } from '../../../shared-core/report/notes.ts';
 import { shellsJson } from '../../../shared-core/report/shellsJson.ts';
+import { shellsTable } from '../../../shared-core/report/shellsTable.ts';
 import { edgesOf } from '../../../shared-core/shells/edges.ts';
 import { sortSample } from '../../../shared-core/shells/sample.ts';
 import type { ShellScheme } from '../../../shared-core/shells/shell.ts';
 import {
+  allAsOne,
   DEFAULT_P0_MPC3_PER_H3,
   type ShellConditions,
   shellStatistics,
@@ -30,6 +28,7 @@ interface ShellsOptions extends CatalogueOptions, RegionOptions, CosmologyOption
   shells?: Exclude<ShellScheme, { kind: 'edges' }>;
   zRange?: number[];
   p0: number;
+  allColumns?: true;
 }
 
 const DEFAULT_SHELLS = { kind: 'redshift', shells: 5, zMin: null, zMax: null } as const;
@@ -60,16 +59,23 @@ export function addShells(program: Command, print: (text: string) => void): void
       oneNumber('--p0'),
       DEFAULT_P0_MPC3_PER_H3,
     );
-  addOutputOptions(addCosmologyOptions(command));
+  addOutputOptions(addCosmologyOptions(command)).option(
+    '--all-columns',
+    'with --latex: every quantity, not only those of the ledger',
+  );
   command
     .addHelpText(
       'after',
       '\nExample:\n  npm run -s conewright -- shells survey.csv --region box:130,230,-2,30 --shells volume:4 --h-units',
     )
     .action(async (file: string, options: ShellsOptions) => {
-      const { cosmology, name, line } = cosmologyOf(options);
+      const { cosmology, set } = cosmologyOf(options);
       const scheme = schemeOf(options);
-      formatOf(options);
+      if (formatOf(options) !== 'latex' && options.allColumns)
+        throw new Refusal(
+          '--all-columns came without --latex, and every other form has all columns anyway: leave it out, or add --latex.',
+          'use',
+        );
       const places = await outputPlaces(
         { '--set-aside': options.setAside },
         [file, ...regionFiles(options)],
@@ -91,31 +97,22 @@ export function addShells(program: Command, print: (text: string) => void): void
       const sample = sortSample(catalogue.redshift, catalogue.weight);
       const edges = edgesOf(scheme, sample, cosmology);
       const conditions = { cosmology, areaDeg2: footprint.areaDeg2, p0Mpc3PerH3: options.p0 };
-      const table = {
-        rows: shellStatistics(sample, edges, conditions),
-        quantities: SHELL_QUANTITIES,
+      const table = shellsTable({
+        shells: shellStatistics(sample, edges, conditions),
+        all: allAsOne(sample, edges, conditions),
         units: { perH: options.hUnits === true, h: cosmology.h },
-        notes: [
-          describeAccount(catalogue.account),
-          describeColumns(loaded.mapping),
-          describeFootprint(footprint, given?.words ?? null),
-          line,
-          describeMethod(options.p0),
-        ],
-      };
-      print(
-        render(table, options, () =>
-          shellsJson({
-            table,
-            account: catalogue.account,
-            mapping: loaded.mapping,
-            footprint,
-            cosmology,
-            p0Mpc3PerH3: options.p0,
-            cosmologyName: name,
-          }),
-        ),
-      );
+        account: catalogue.account,
+        mapping: loaded.mapping,
+        cuts: (options.cut ?? []).map((cut) => ({ ...cut, column: columnNamed(loaded.header, cut.column) })),
+        region: given?.region ?? null,
+        footprint,
+        cosmology,
+        set,
+        p0Mpc3PerH3: options.p0,
+      });
+      const shown =
+        options.latex && !options.allColumns ? { ...table, quantities: LEDGER_QUANTITIES } : table;
+      print(render(shown, options, () => shellsJson(table)));
     });
 }
 

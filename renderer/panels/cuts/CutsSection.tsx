@@ -79,8 +79,8 @@ export function CutsSection() {
       ) : (
         <p class="quiet" role="status">
           {countText(outside)} {outside === 1 ? 'row is' : 'rows are'} set aside by{' '}
-          {cuts.length === 1 ? 'it' : 'them'}. A bound that is left empty is open; rows without a number fail
-          a bound.
+          {cuts.length === 1 ? 'it' : 'them'}. Bounds are included; one that is left empty is open; rows
+          without a number fail a bound.
         </p>
       )}
       <div class="actions">

@@ -1,7 +1,7 @@
 import { useComputed } from '@preact/signals';
 import { useApp } from '../../state/app.ts';
-import { Menu, type MenuEntry } from '../../ui/Menu.tsx';
-import { copyLedger, exportLedger, LEDGER_FORMATS } from '../ledger/ledgerFormats.ts';
+import { Menu } from '../../ui/Menu.tsx';
+import { copyLedger, exportLedger, LEDGER_COPIES, LEDGER_FORMATS } from '../ledger/ledgerFormats.ts';
 import { PictureBench } from '../picture/PictureBench.tsx';
 import { pictureShown } from '../picture/pictureShown.ts';
 
@@ -9,8 +9,6 @@ import { pictureShown } from '../picture/pictureShown.ts';
 export function ExportMenu() {
   const app = useApp();
   const empty = useComputed(() => app.derived.shells.value.length === 0).value;
-  const copy = (label: string, hint: string, as: Parameters<typeof copyLedger>[1]) =>
-    ({ kind: 'item', label, hint, disabled: empty, run: () => void copyLedger(app, as) }) satisfies MenuEntry;
   return (
     <>
       <Menu
@@ -37,11 +35,13 @@ export function ExportMenu() {
           {
             kind: 'group',
             label: 'Ledger to the clipboard',
-            entries: [
-              copy('With tabs', 'every digit', 'tabs'),
-              copy('Aligned text', 'rounded', 'aligned'),
-              copy('LaTeX tabular', 'rounded', 'latex'),
-            ],
+            entries: LEDGER_COPIES.map(({ key, label, hint }) => ({
+              kind: 'item',
+              label,
+              hint,
+              disabled: empty,
+              run: () => void copyLedger(app, key),
+            })),
           },
         ]}
       />

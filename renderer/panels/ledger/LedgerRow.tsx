@@ -1,6 +1,5 @@
 import { useComputed } from '@preact/signals';
 import { useEffect, useRef } from 'preact/hooks';
-import { shownText } from '../../../shared-core/report/quantity.ts';
 import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
 import { useApp } from '../../state/app.ts';
 import { ShellMark } from '../ShellMark.tsx';
@@ -11,11 +10,12 @@ export function LedgerRow(props: {
   readonly index: number | null;
   readonly shell: ShellStatistics;
   readonly columns: readonly LedgerColumn[];
+  /** How each quantity's column is written, by key. */
+  readonly texts: ReadonlyMap<string, (shell: ShellStatistics) => string>;
   readonly reachable: boolean;
 }) {
-  const { index, shell, columns, reachable } = props;
-  const { derived, view } = useApp();
-  const units = derived.units.value;
+  const { index, shell, columns, texts, reachable } = props;
+  const { view } = useApp();
   const selected = useComputed(() => view.selectedShell.value === index).value;
   const hovered = useComputed(() => index !== null && view.hoveredShell.value === index).value;
 
@@ -59,7 +59,7 @@ export function LedgerRow(props: {
               data-quantity={q.key}
               {...(selected ? { title: `${q.meaning} Press for the explanation.` } : {})}
             >
-              {shownText(q, shell, units)}
+              {texts.get(q.key)!(shell)}
             </span>
           ))}
         </td>

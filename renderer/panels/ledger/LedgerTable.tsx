@@ -1,5 +1,5 @@
 import type { Signal } from '@preact/signals';
-import { shownUnit } from '../../../shared-core/report/quantity.ts';
+import { shownColumn, shownUnit } from '../../../shared-core/report/quantity.ts';
 import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
 import { useApp } from '../../state/app.ts';
 import { Icon } from '../../ui/Icon.tsx';
@@ -22,6 +22,9 @@ export function LedgerTable(props: {
   const reading = !engine.fresh.value && engine.failure.value === null;
   const shells = derived.shells.value;
   const total = derived.total.value;
+  const column = total === null ? shells : [...shells, total];
+  const units = derived.units.value;
+  const texts = new Map(SHELL_QUANTITIES.map((q) => [q.key, shownColumn(q, column, units)]));
   const rows = sortShells(shells, order.value, SHELL_QUANTITIES);
   // One row can be reached by Tab: the chosen one, or the first.
   const chosen = view.selectedShell.value;
@@ -73,12 +76,19 @@ export function LedgerTable(props: {
       </thead>
       <tbody>
         {rows.map((i) => (
-          <LedgerRow key={i} index={i} shell={shells[i]!} columns={columns} reachable={i === reachable} />
+          <LedgerRow
+            key={i}
+            index={i}
+            shell={shells[i]!}
+            columns={columns}
+            texts={texts}
+            reachable={i === reachable}
+          />
         ))}
       </tbody>
       {total === null ? null : (
         <tfoot>
-          <LedgerRow index={null} shell={total} columns={columns} reachable={false} />
+          <LedgerRow index={null} shell={total} columns={columns} texts={texts} reachable={false} />
         </tfoot>
       )}
     </table>

@@ -11,6 +11,7 @@ export function currentLedgerFacts({ studyState, engine, derived }: App): Ledger
   return {
     study,
     shells: derived.shells.value,
+    all: derived.total.value,
     units: derived.units.value,
     cosmology: derived.cosmology.value,
     account: selected?.account ?? null,

@@ -1,3 +1,4 @@
+import { LEDGER_GROUPS } from '../../../shared-core/report/ledgerQuantities.ts';
 import type { Quantity } from '../../../shared-core/report/quantity.ts';
 import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
 import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
@@ -13,14 +14,13 @@ export interface LedgerColumn {
 
 const byKey = new Map(SHELL_QUANTITIES.map((q) => [q.key, q]));
 
+const NARROW_CHARACTERS = [7, 8, 9, 9.5, 7];
+
 /** The columns beside the cone. */
-export const NARROW_LEDGER: readonly LedgerColumn[] = [
-  column(7, 'zMin', 'zMax'),
-  column(8, 'count', 'zEffective'),
-  column(9, 'densityPerMpc3', 'densityErrorPerMpc3'),
-  column(9.5, 'volumeMpc3', 'effectiveVolumeMpc3'),
-  { ...column(7, 'lookbackMinGyr', 'lookbackMaxGyr'), headings: ['t_L min', 't_L max'] },
-];
+export const NARROW_LEDGER: readonly LedgerColumn[] = LEDGER_GROUPS.map((keys, i) => ({
+  ...column(NARROW_CHARACTERS[i]!, ...keys),
+  ...(keys[0] === 'lookbackMinGyr' ? { headings: ['t_L min', 't_L max'] } : {}),
+}));
 
 /** Every number of the core, in the room over the cone of the smallest window. */
 export const WHOLE_LEDGER: readonly LedgerColumn[] = [
@@ -31,10 +31,7 @@ export const WHOLE_LEDGER: readonly LedgerColumn[] = [
   { ...column(8, 'lookbackMinGyr', 'lookbackMaxGyr'), headings: ['t_L min', 't_L max'] },
   { ...column(8, 'ageMinGyr', 'ageMaxGyr'), headings: ['age min', 'age max'] },
   column(9.5, 'densityPerMpc3', 'densityErrorPerMpc3'),
-  {
-    ...column(10, 'volumeMpc3', 'effectiveVolumeMpc3', 'effectiveVolumeUniformMpc3'),
-    headings: ['V', 'V eff', 'V eff even'],
-  },
+  column(11, 'volumeMpc3', 'effectiveVolumeMpc3', 'effectiveVolumeUniformMpc3'),
   { ...column(9, 'fundamentalWavenumberPerMpc'), headings: ['k fund'] },
 ];
 

@@ -1,3 +1,4 @@
+import { LEDGER_QUANTITIES } from '../../../shared-core/report/ledgerQuantities.ts';
 import { asCsv, asEcsv, asLatex, asText } from '../../../shared-core/report/table.ts';
 import type { App } from '../../state/app.ts';
 import { copyText } from '../../ui/clipboard.ts';
@@ -6,9 +7,10 @@ import { asTsv, ledgerJson } from './ledgerTable.ts';
 
 /** The forms in which the ledger leaves the program. */
 export const LEDGER_FORMATS = [
-  { key: 'csv', label: 'CSV', hint: 'every digit', suffix: '.csv', mimeType: 'text/csv' },
+  { key: 'csv', label: 'CSV', hint: 'every digit, rows alone', suffix: '.csv', mimeType: 'text/csv' },
   { key: 'ecsv', label: 'ECSV', hint: 'with units and notes', suffix: '.ecsv', mimeType: 'text/plain' },
-  { key: 'latex', label: 'LaTeX', hint: 'tabular, rounded', suffix: '.tex', mimeType: 'text/x-tex' },
+  { key: 'latex', label: 'LaTeX', hint: "the ledger's columns", suffix: '.tex', mimeType: 'text/x-tex' },
+  { key: 'latex-all', label: 'LaTeX, all', hint: 'every column', suffix: '.tex', mimeType: 'text/x-tex' },
   { key: 'json', label: 'JSON', hint: 'every digit', suffix: '.json', mimeType: 'application/json' },
   { key: 'text', label: 'Text', hint: 'aligned, rounded', suffix: '.txt', mimeType: 'text/plain' },
 ] as const;
@@ -21,10 +23,19 @@ export async function exportLedger(app: App, format: LedgerFormat): Promise<void
   await app.files.exportFile(name, format.mimeType, new TextEncoder().encode(text));
 }
 
+/** The forms in which it goes to the clipboard. */
+export const LEDGER_COPIES = [
+  { key: 'tabs', label: 'With tabs', hint: 'every digit' },
+  { key: 'text', label: 'Aligned text', hint: 'rounded' },
+  { key: 'latex', label: 'LaTeX', hint: "the ledger's columns" },
+  { key: 'latex-all', label: 'LaTeX, all', hint: 'every column' },
+] as const;
+type LedgerCopy = (typeof LEDGER_COPIES)[number]['key'];
+
 /** Puts the ledger on the clipboard: tabs and every digit for a spreadsheet, or aligned and rounded for reading. */
-export async function copyLedger(app: App, as: 'tabs' | 'aligned' | 'latex'): Promise<void> {
+export async function copyLedger(app: App, as: LedgerCopy): Promise<void> {
   const table = currentLedgerTable(app);
-  const text = as === 'tabs' ? asTsv(table) : as === 'aligned' ? asText(table) : asLatex(table);
+  const text = as === 'tabs' ? asTsv(table) : ledgerText(app, as);
   const done = await copyText(text);
   app.notices.tell(
     done
@@ -42,6 +53,8 @@ function ledgerText(app: App, key: LedgerFormat['key']): string {
     case 'ecsv':
       return asEcsv(table);
     case 'latex':
+      return asLatex({ ...table, quantities: LEDGER_QUANTITIES });
+    case 'latex-all':
       return asLatex(table);
     case 'text':
       return asText(table);

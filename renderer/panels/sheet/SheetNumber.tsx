@@ -1,5 +1,5 @@
 import { useLayoutEffect, useRef } from 'preact/hooks';
-import { type ShownUnits, shownText, shownUnit, shownValue } from '../../../shared-core/report/quantity.ts';
+import { type ShownUnits, shownColumn, shownUnit, shownValue } from '../../../shared-core/report/quantity.ts';
 import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
 import { useApp } from '../../state/app.ts';
 import { shellQuantity } from './explain.ts';
@@ -8,10 +8,12 @@ import { shellQuantity } from './explain.ts';
 export function SheetNumber(props: {
   readonly quantityKey: string;
   readonly shell: ShellStatistics;
+  /** All rows of the ledger: the number is written as in its column there. */
+  readonly column: readonly ShellStatistics[];
   readonly units: ShownUnits;
   readonly allDigits: boolean;
 }) {
-  const { quantityKey, shell, units, allDigits } = props;
+  const { quantityKey, shell, column, units, allDigits } = props;
   const { explained } = useApp().view;
   const ref = useRef<HTMLButtonElement>(null);
   const quantity = shellQuantity(quantityKey)!;
@@ -21,7 +23,7 @@ export function SheetNumber(props: {
     if (open) ref.current?.closest('.sheet-row')?.scrollIntoView({ block: 'nearest' });
   }, [open]);
   const value = shownValue(quantity, shell, units);
-  const text = allDigits && value !== null ? String(value) : shownText(quantity, shell, units);
+  const text = allDigits && value !== null ? String(value) : shownColumn(quantity, column, units)(shell);
   const unit = shownUnit(quantity, units);
   return (
     <button

@@ -30,8 +30,11 @@ export function ShellSheet() {
   const set = PUBLISHED_SETS.find((one) => one.key === study.value.cosmologySet);
   const units = derived.units.value;
   const estimate = engine.selected.value?.footprint?.estimate ?? null;
+  const total = derived.total.value;
+  const column = total === null ? shells : [...shells, total];
   const of: ExplainedShell = {
     shell,
+    column,
     conditions,
     estimate,
     units,
@@ -46,7 +49,7 @@ export function ShellSheet() {
       Math.min(shells.length - 1, (index ?? (by > 0 ? -1 : shells.length)) + by),
     ));
   const number = (key: string) => (
-    <SheetNumber quantityKey={key} shell={shell} units={units} allDigits={allDigits} />
+    <SheetNumber quantityKey={key} shell={shell} column={column} units={units} allDigits={allDigits} />
   );
   const unit = (key: string) => <span class="unit">{unitText(shownUnit(shellQuantity(key)!, units))}</span>;
 

@@ -2,7 +2,7 @@ import {
   formatNumber,
   type Quantity,
   type ShownUnits,
-  shownText,
+  shownColumn,
   shownUnit,
 } from '../../../shared-core/report/quantity.ts';
 import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
@@ -26,6 +26,8 @@ export interface Explanation {
 /** What the explanation of a shell's number needs to know. */
 export interface ExplainedShell {
   readonly shell: ShellStatistics;
+  /** All rows of the ledger: numbers are written as in their columns there. */
+  readonly column: readonly ShellStatistics[];
   readonly conditions: ShellConditions;
   readonly estimate: FootprintPicture['estimate'];
   readonly units: ShownUnits;
@@ -74,7 +76,7 @@ export function explain(key: string, of: ExplainedShell): Explanation {
 
 function input(
   name: string,
-  { shell, conditions, estimate, units, cosmologyName }: ExplainedShell,
+  { shell, column, conditions, estimate, units, cosmologyName }: ExplainedShell,
 ): ExplainedInput {
   switch (name) {
     case 'cosmology':
@@ -94,14 +96,14 @@ function input(
       const quantity = shellQuantity(name)!;
       return {
         name: quantity.title,
-        text: shownText(quantity, shell, units),
+        text: shownColumn(quantity, column, units)(shell),
         unit: shownUnit(quantity, units),
       };
     }
   }
 }
 
-function uncertainty(key: string, { shell, conditions, estimate, units }: ExplainedShell): string {
+function uncertainty(key: string, { shell, column, conditions, estimate, units }: ExplainedShell): string {
   const share = estimate === null ? null : estimate.areaErrorDeg2 / conditions.areaDeg2;
   const percent = (value: number) => `${formatNumber(100 * value, { significant: 2 })} %`;
   const area = share === null ? 'The area is exact.' : `The estimated area adds ${percent(share)}.`;
@@ -124,7 +126,7 @@ function uncertainty(key: string, { shell, conditions, estimate, units }: Explai
       if (shell.densityPerMpc3 === 0)
         return 'No share can be given: the weights of the galaxies add up to 0, and so the density is 0.';
       const error = shellQuantity('densityErrorPerMpc3')!;
-      const poisson = `Poisson ± ${shownText(error, shell, units)} ${shownUnit(error, units)} (${percent(shell.densityErrorPerMpc3 / shell.densityPerMpc3)}), without clustering.`;
+      const poisson = `Poisson ± ${shownColumn(error, column, units)(shell)} ${shownUnit(error, units)} (${percent(shell.densityErrorPerMpc3 / shell.densityPerMpc3)}), without clustering.`;
       return `${poisson} ${area}`;
     }
     case 'densityErrorPerMpc3':

@@ -49,7 +49,7 @@ export function shellWarnings(
     if (shell.densityPerMpc3 > 0 && Math.abs(ratio - 1) > UNEVEN)
       tell(
         'effectiveVolumeMpc3',
-        `V eff is ${percent(ratio)} of what an even density would give: n(z) changes a good deal inside this shell, narrower shells would show it.`,
+        `V eff is ${percent(ratio)} of V eff uniform, what an even density would give: n(z) changes a good deal inside this shell, narrower shells would show it.`,
       );
   }
   if (estimate !== null)

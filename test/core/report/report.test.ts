@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { createCosmology } from '../../../shared-core/cosmology/cosmology.ts';
 import { findPublishedSet } from '../../../shared-core/cosmology/publishedSets.ts';
 import { DISTANCE_QUANTITIES, distanceRows } from '../../../shared-core/report/distanceQuantities.ts';
-import { formatNumber, shownText, shownValue } from '../../../shared-core/report/quantity.ts';
+import { formatNumber, shownColumn, shownText, shownValue } from '../../../shared-core/report/quantity.ts';
 import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
 import { asCsv, asEcsv, asLatex, asObjects, asText } from '../../../shared-core/report/table.ts';
 import { sortSample } from '../../../shared-core/shells/sample.ts';
@@ -40,8 +40,10 @@ describe('one number in every format', () => {
       const latex = asLatex(t);
       for (const [i, row] of rows.entries())
         for (const q of SHELL_QUANTITIES) {
-          const shown = shownText(q, row, t.units);
-          expect(shown).toBe(formatNumber(Object.values(objects[i]!)[SHELL_QUANTITIES.indexOf(q)]!, q.show));
+          const shown = shownColumn(q, rows, t.units)(row);
+          const power = rows.some((one) => shownText(q, one, t.units).includes('e'));
+          const value = Object.values(objects[i]!)[SHELL_QUANTITIES.indexOf(q)]!;
+          expect(shown).toBe(formatNumber(value, q.show, power));
           expect(text).toContain(shown);
           expect(latex).toContain(`$${shown.split('e')[0]}`);
         }

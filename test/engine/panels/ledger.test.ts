@@ -2,7 +2,8 @@ import { describe, expect, it } from 'vitest';
 import { NARROW_LEDGER, WHOLE_LEDGER } from '../../../renderer/panels/ledger/ledgerColumns.ts';
 import { asTsv, ledgerJson, ledgerTable } from '../../../renderer/panels/ledger/ledgerTable.ts';
 import { nextOrder, sortShells } from '../../../renderer/panels/ledger/sortShells.ts';
-import { SHEET_KEYS } from '../../../renderer/panels/sheet/sheetLayout.ts';
+import { SHEET_GROUPS, SHEET_KEYS } from '../../../renderer/panels/sheet/sheetLayout.ts';
+import { LEDGER_QUANTITIES } from '../../../shared-core/report/ledgerQuantities.ts';
 import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
 import { emptyStudy } from '../../../shared-core/study/document.ts';
 import { cosmology, evenly, shellsOf } from './shellFixture.ts';
@@ -16,11 +17,22 @@ describe('what the panels show of a shell', () => {
     expect(SHEET_KEYS.toSorted()).toEqual(keys.toSorted());
   });
 
-  it('puts only numbers of the core beside the cone', () => {
+  it('puts the numbers of the LaTeX tabular beside the cone', () => {
+    expect(NARROW_LEDGER.flatMap((column) => column.quantities)).toEqual(LEDGER_QUANTITIES);
     for (const { quantities, headings } of NARROW_LEDGER) {
       for (const quantity of quantities) expect(SHELL_QUANTITIES).toContain(quantity);
       expect(headings === undefined || headings.length === quantities.length).toBe(true);
     }
+  });
+});
+
+describe('the names of numbers', () => {
+  it('is one for V eff uniform: ledger, sheet and tables', () => {
+    const key = 'effectiveVolumeUniformMpc3';
+    const { title } = SHELL_QUANTITIES.find((q) => q.key === key)!;
+    const column = WHOLE_LEDGER.find((c) => c.quantities.some((q) => q.key === key))!;
+    expect(column.headings).toBeUndefined();
+    expect(SHEET_GROUPS.flatMap((g) => [...g.rows]).find((row) => row.key === key)?.name).toBe(title);
   });
 });
 
@@ -61,23 +73,23 @@ describe('the ledger on the clipboard', () => {
   const facts = {
     study: { ...emptyStudy('Plan'), cosmologySet: 'flat70' },
     shells: shellsOf(evenly(10, 0.2, 0.3), [0.2, 0.3, 0.4]),
+    all: shellsOf(evenly(10, 0.2, 0.3), [0.2, 0.4])[0]!,
     cosmology,
     account: null,
     mapping: null,
     footprint: { origin: 'given', areaDeg2: 100, estimate: null },
   } as const;
 
-  it('has a column for each quantity, a line for each shell, and every digit', () => {
+  it('has a column for each quantity, a line for each shell and all as one, every digit, and the notes', () => {
     const table = ledgerTable({ ...facts, units: { perH: false, h: cosmology.h } });
-    const lines = asTsv(table)
-      .trimEnd()
-      .split('\n')
-      .map((line) => line.split('\t'));
-    expect(lines[0]).toEqual(keys);
-    expect(lines).toHaveLength(3);
-    for (const [i, shell] of facts.shells.entries())
+    const [rows, notes] = asTsv(table).trimEnd().split('\n\n');
+    const lines = rows!.split('\n').map((line) => line.split('\t'));
+    expect(notes!.split('\n')).toEqual(table.notes);
+    expect(lines[0]).toEqual(['shell', ...keys]);
+    expect(lines.slice(1).map(([label]) => label)).toEqual(['1', '2', 'all']);
+    for (const [i, shell] of [...facts.shells, facts.all].entries())
       for (const [k, quantity] of SHELL_QUANTITIES.entries()) {
-        const cell = lines[i + 1]![k]!;
+        const cell = lines[i + 1]![k + 1]!;
         // An empty cell for no number; else the text reads back to the very number.
         expect(cell === '' ? null : Number(cell)).toBe(quantity.value(shell));
       }
@@ -118,6 +130,24 @@ describe('the ledger on the clipboard', () => {
     } as const;
     const { notes } = ledgerTable({ ...facts, mapping, units: { perH: false, h: cosmology.h } });
     expect(notes.join('\n')).toMatch(/Columns: .*from RA.*z = cz\/c.*from V/);
+  });
+
+  it('tells the cuts that were applied, in the notes and as values', () => {
+    const account = {
+      rowsRead: 12,
+      kept: 10,
+      setAside: 2,
+      reasons: { outsideCuts: 2 },
+      repeatedPositions: 0,
+    };
+    const cuts = [{ column: 'mag', min: null, max: 22.5 }];
+    const read = { ...facts, account, study: { ...facts.study, cuts }, units: { perH: false, h: 0.7 } };
+    expect(ledgerTable(read).notes.join('\n')).toMatch(/^Cuts: mag <= 22\.5\. Bounds are included/m);
+    expect(ledgerJson(read)).toMatchObject({ cuts, all: { zMin: 0.2, zMax: 0.4 } });
+    // Nothing was read, so nothing was cut.
+    const plan = { ...read, account: null };
+    expect(ledgerTable(plan).notes.join('\n')).not.toContain('Cuts:');
+    expect(ledgerJson(plan)).toMatchObject({ cuts: null });
   });
 
   it('notes a plan, the exact area, the cosmology with its name and P0', () => {

@@ -59,7 +59,14 @@ describe('what to beware of in a shell', () => {
     const told = shellWarnings(weightless, conditions, null, false);
     expect(keysOf(told)).toEqual(['weightedCount']);
     expect(told[0]!.sentence).toMatch(/weights of the 25 galaxies add up to 0/);
-    const of = { shell: weightless, conditions, estimate: null, units, cosmologyName: 'Flat 70 / 0.3' };
+    const of = {
+      shell: weightless,
+      column: [weightless],
+      conditions,
+      estimate: null,
+      units,
+      cosmologyName: 'Flat 70 / 0.3',
+    };
     for (const { key } of SHELL_QUANTITIES) expect(explain(key, of).uncertainty).not.toContain('NaN');
     expect(explain('densityPerMpc3', of).uncertainty).toMatch(/weights of the galaxies add up to 0/);
   });
@@ -72,7 +79,7 @@ describe('what to beware of in a shell', () => {
 
 describe('the explanation of a number', () => {
   const shell = shellsOf(evenly(400, 0.5, 0.6), [0.5, 0.6])[0]!;
-  const of = { shell, conditions, estimate: null, units, cosmologyName: 'Flat 70 / 0.3' };
+  const of = { shell, column: [shell], conditions, estimate: null, units, cosmologyName: 'Flat 70 / 0.3' };
 
   it('stands for every quantity, in both units, with inputs that are not the number itself', () => {
     for (const perH of [false, true])

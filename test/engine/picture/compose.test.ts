@@ -66,8 +66,23 @@ describe.each(PICTURE_VIEWS)('view %s', (view) => {
     expect(composePicture(small({ view }), plan).points.count).toBe(0);
     const empty = { ...facts, study: { ...STUDY, edges: [2.5, 3, 3.5] } };
     expect(describePicture(composePicture(small({ view }), empty))).toContain(
-      'Shell 2.5 < z < 3: no galaxies',
+      'Shell 2.5 ≤ z < 3: no galaxies',
     );
+    expect(describePicture(composePicture(small({ view }), empty))).toContain('Shell 3 ≤ z ≤ 3.5: ');
+  });
+
+  it('is told in words with the lengths of the study', () => {
+    const words = (perH: boolean) => {
+      const study = { ...STUDY, look: { ...STUDY.look, perH } };
+      return describePicture(composePicture(small({ view }), { ...facts, study }));
+    };
+    const { h } = createCosmology(STUDY.cosmology);
+    const distance = (perH: boolean) =>
+      Number(/comoving distance ([\d.]+) to [\d.]+ (Mpc(?:\/h)?)\./.exec(words(perH))![1]);
+    expect(words(true)).not.toMatch(/ Mpc[^/]/);
+    expect(words(false)).not.toContain('Mpc/h');
+    // Half of the last digit of each, 0.05.
+    expect(Math.abs(distance(true) - h * distance(false))).toBeLessThan(0.1);
   });
 });
 

@@ -193,7 +193,7 @@ const shells = {
     comovingMinMpc: read(u.z, u.comovingMpc, edges[i]!),
     comovingMaxMpc: read(u.z, u.comovingMpc, z),
     label: `${edges[i]} – ${z}`,
-    longLabel: `${edges[i]} < z < ${z}`,
+    longLabel: `${edges[i]} ≤ z < ${z}`,
   })),
   selected: query.has('selected') ? number('selected', 0) : null,
   hovered: null as number | null,

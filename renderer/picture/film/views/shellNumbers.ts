@@ -1,5 +1,6 @@
-import { shownText, shownUnit } from '../../../../shared-core/report/quantity.ts';
+import { shownColumn, shownUnit } from '../../../../shared-core/report/quantity.ts';
 import { SHELL_QUANTITIES } from '../../../../shared-core/report/shellQuantities.ts';
+import { shellRanges } from '../../../../shared-core/report/shellRange.ts';
 import type { ShellStatistics } from '../../../../shared-core/shells/shell.ts';
 import type { Pen } from '../../../cone/overlay/pen.ts';
 import type { PictureNumbers } from '../../numbers.ts';
@@ -38,16 +39,22 @@ const COLUMNS: readonly { readonly title: string; readonly keys: readonly string
  */
 export function shellNumbersWriter({
   shells,
+  all,
   units,
-}: Pick<PictureNumbers, 'shells' | 'units'>): (pen: Pen, shell: ShellStatistics, colour: string) => void {
-  const text = (shell: ShellStatistics, key: string): string => shownText(byKey.get(key)!, shell, units);
-  const range = (shell: ShellStatistics): string =>
-    `${Number(text(shell, 'zMin'))} < z < ${Number(text(shell, 'zMax'))}`;
+}: Pick<PictureNumbers, 'shells' | 'all' | 'units'>): (
+  pen: Pen,
+  shell: ShellStatistics,
+  colour: string,
+) => void {
+  const column = all === null ? shells : [...shells, all];
+  const ranges = shellRanges(shells);
+  const range = (shell: ShellStatistics): string => ranges[shells.indexOf(shell)]!;
   const columns = COLUMNS.map(({ title, keys }) => {
     const plain = shownUnit(byKey.get(keys[0]!)!, units);
     const unit = plain === '' ? '' : ` ${UNIT_WORDS[plain] ?? plain}`;
+    const texts = keys.map((key) => shownColumn(byKey.get(key)!, column, units));
     const value = (shell: ShellStatistics): string =>
-      `${keys.map((key) => text(shell, key)).join(' – ')}${unit}`;
+      `${texts.map((text) => text(shell)).join(' – ')}${unit}`;
     const widths = shells.map((shell) => textWidth(value(shell), VALUE_SIZE, 600));
     return { title, value, width: Math.max(textWidth(title, TITLE_SIZE), ...widths) };
   });
