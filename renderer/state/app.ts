@@ -9,7 +9,7 @@ import { createFileState, type FileState } from './fileState.ts';
 import { createNotices, type Notices } from './notices.ts';
 import { createQuestions, type Questions } from './questions.ts';
 import { createStudyState, type StudyState } from './studyState.ts';
-import { createViewState, type ViewState } from './viewState.ts';
+import { createViewState, NOTHING_TYPED, type ViewState } from './viewState.ts';
 
 /** All that a panel may ask: it finds this through `useApp()`. */
 export interface App {
@@ -65,6 +65,7 @@ export function createApp(
     void source.value;
     view.selectedShell.value = null;
     view.redshiftWindow.value = null;
+    view.typedRange.value = NOTHING_TYPED;
     view.field.value = 0;
   });
   effect(() => {

@@ -12,6 +12,14 @@ export const CAMERA_VIEWS = [
 ] as const;
 export type CameraView = (typeof CAMERA_VIEWS)[number];
 
+/** Where new shells are to begin and end, as typed, in redshift; empty for where they begin and end now. */
+export interface TypedRange {
+  readonly from: string;
+  readonly to: string;
+}
+
+export const NOTHING_TYPED: TypedRange = { from: '', to: '' };
+
 /** What the person looks at: not part of the study, not undone, not saved. */
 export interface ViewState {
   readonly selectedShell: Signal<number | null>;
@@ -31,6 +39,8 @@ export interface ViewState {
   lookFrom(view: CameraView): void;
   /** What the open picture bench colours by, where that is not the study's choice. */
   readonly pictureColour: Signal<ColourBy | null>;
+  /** The range typed for shells to be laid out in. */
+  readonly typedRange: Signal<TypedRange>;
   /** The quantity, by key, whose explanation is open. */
   readonly explained: Signal<string | null>;
 }
@@ -54,6 +64,7 @@ export function createViewState(theme: 'light' | 'dark'): ViewState {
       });
     },
     pictureColour: signal(null),
+    typedRange: signal(NOTHING_TYPED),
     explained: signal(null),
   };
 }

@@ -3,8 +3,8 @@ import { useApp } from '../state/app.ts';
 import { axisOrder } from './DepthAxes.tsx';
 import type { PlotGestures } from './plotGestures.ts';
 import type { StripRows } from './rows.ts';
-import { Tool } from './StripTools.tsx';
 import type { StripModel } from './stripModel.ts';
+import { Tool } from './Tool.tsx';
 
 /** The names of the three axes; the chosen one is linear. */
 export function AxisNames({ model, rows }: { readonly model: StripModel; readonly rows: StripRows }) {

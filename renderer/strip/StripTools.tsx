@@ -1,10 +1,6 @@
-import { useSignal } from '@preact/signals';
-import { useId } from 'preact/hooks';
 import { changeLook } from '../../shared-core/study/edits.ts';
 import { useApp } from '../state/app.ts';
-import { readNumber } from '../ui/numberText.ts';
-import { StripIcon, type StripIconName } from './StripIcon.tsx';
-import { DIVIDING_SCHEMES, type DividingScheme, divideShells, rangeToDivide } from './schemes.ts';
+import { Divide } from './Divide.tsx';
 import {
   mergeWithNext,
   middleOfShell,
@@ -15,8 +11,7 @@ import {
   widestShell,
 } from './shellActions.ts';
 import type { StripModel } from './stripModel.ts';
-
-const DEFAULT_SHELLS = 5;
+import { Tool } from './Tool.tsx';
 
 /** The row over the strip: what can be done to the shells, and the schemes that lay them out anew. */
 export function StripTools({ model }: { readonly model: StripModel }) {
@@ -87,106 +82,5 @@ export function StripTools({ model }: { readonly model: StripModel }) {
       </div>
       <Divide model={model} />
     </div>
-  );
-}
-
-function Divide({ model }: { readonly model: StripModel }) {
-  const id = useId();
-  const { studyState, derived, view, notices } = useApp();
-  const { edges } = studyState.study.value;
-  const present = Math.max(0, edges.length - 1);
-  /** What was typed, while it was typed over this number of shells. */
-  const typed = useSignal<{ readonly text: string; readonly over: number } | null>(null);
-  const wholeSample = useSignal(false);
-  const galaxies = derived.sample.value.count;
-  const text = typed.value?.over === present ? typed.value.text : String(present || DEFAULT_SHELLS);
-
-  const divide = (kind: DividingScheme): void => {
-    const read = readNumber(text, 'The number of shells');
-    if ('sentence' in read) return void notices.tell(read.sentence);
-    const range = rangeToDivide(edges, galaxies, wholeSample.value, model.window.peek());
-    const edit = divideShells(kind, read.value, range, derived.sample.value, derived.cosmology.value);
-    if (!studyState.perform(edit)) return;
-    view.selectedShell.value = standingShell(studyState.study.peek().edges, view.selectedShell.peek());
-  };
-  const hasChoice = present > 0 && galaxies > 0;
-  return (
-    // biome-ignore lint/a11y/useSemanticElements: a fieldset would bring its own box and legend into the row
-    <div class="strip-group strip-divide" role="group" aria-label="Lay the shells out anew">
-      <input
-        id={id}
-        class="strip-number"
-        type="text"
-        inputMode="numeric"
-        autocomplete="off"
-        value={text}
-        onInput={(event) => void (typed.value = { text: event.currentTarget.value, over: present })}
-        onKeyDown={(event) => {
-          const by = { ArrowUp: 1, ArrowDown: -1 }[event.key];
-          const now = Number(text);
-          if (by === undefined || !Number.isInteger(now)) return;
-          event.preventDefault();
-          typed.value = { text: String(Math.max(1, now + by)), over: present };
-        }}
-      />
-      <label for={id}>
-        <span class="strip-wide">shells of </span>equal
-      </label>
-      <span class="strip-schemes">
-        {DIVIDING_SCHEMES.map(({ kind, label, words }) => (
-          <button
-            key={kind}
-            type="button"
-            class="button"
-            title={`Shells of equal ${words}`}
-            aria-label={`${label}: shells of equal ${words}`}
-            disabled={kind === 'count' && galaxies === 0}
-            onClick={() => divide(kind)}
-          >
-            {label}
-          </button>
-        ))}
-      </span>
-      <Tool
-        icon="all"
-        label="Whole sample"
-        detail={
-          hasChoice
-            ? 'divide from the nearest to the farthest galaxy, not between the present edges'
-            : 'needs galaxies and shells'
-        }
-        pressed={wholeSample.value}
-        disabled={!hasChoice}
-        onClick={() => void (wholeSample.value = !wholeSample.value)}
-      />
-    </div>
-  );
-}
-
-/** A button with a drawing, and with its words where the strip is wide enough. */
-export function Tool(props: {
-  readonly icon: StripIconName;
-  readonly label: string;
-  readonly detail?: string;
-  readonly pressed?: boolean;
-  readonly disabled?: boolean;
-  readonly onClick: () => void;
-}) {
-  const { icon, label, detail, pressed, disabled = false, onClick } = props;
-  return (
-    <button
-      type="button"
-      class="button strip-tool"
-      aria-label={label}
-      title={detail === undefined ? label : `${label}: ${detail}`}
-      disabled={disabled}
-      {...(pressed === undefined ? {} : { 'aria-pressed': pressed })}
-      onClick={onClick}
-    >
-      <StripIcon name={icon} />
-      <span class="strip-wide" aria-hidden="true">
-        {label}
-      </span>
-    </button>
   );
 }

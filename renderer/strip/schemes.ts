@@ -1,8 +1,10 @@
 import type { Cosmology } from '../../shared-core/cosmology/cosmology.ts';
-import { edgesOf } from '../../shared-core/shells/edges.ts';
+import { DEEPEST_REDSHIFT, edgesOf } from '../../shared-core/shells/edges.ts';
 import type { SortedSample } from '../../shared-core/shells/sample.ts';
 import type { ShellScheme } from '../../shared-core/shells/shell.ts';
 import type { Edit } from '../../shared-core/study/edits.ts';
+import type { TypedRange } from '../state/viewState.ts';
+import { readNumber } from '../ui/numberText.ts';
 import type { RedshiftWindow } from './layout.ts';
 
 export type DividingScheme = Exclude<ShellScheme['kind'], 'edges'>;
@@ -39,6 +41,50 @@ export function rangeToDivide(
   const hasShells = first !== undefined && last !== undefined && edges.length > 1;
   if (galaxies > 0 && (wholeSample || !hasShells)) return { zMin: null, zMax: null };
   return hasShells ? { zMin: first, zMax: last } : { zMin: inView[0], zMax: inView[1] };
+}
+
+/** The same in numbers: where the range begins and ends while nothing is typed; null before there is anything. */
+export function rangeInNumbers({ zMin, zMax }: DividedRange, { redshift, count }: SortedSample) {
+  const [least, greatest] = count === 0 ? [null, null] : [redshift[0]!, redshift[count - 1]!];
+  return { from: zMin ?? least, to: zMax ?? greatest };
+}
+
+/**
+ * What was typed as the range of new shells, over the range that stands where a field is empty.
+ * @returns the range, or the sentence that says why there is none and what to do
+ */
+export function typedRange(
+  typed: TypedRange,
+  untyped: DividedRange,
+  sample: SortedSample,
+): DividedRange | { readonly sentence: string } {
+  const ends = { from: untyped.zMin, to: untyped.zMax };
+  for (const end of ['from', 'to'] as const) {
+    if (typed[end].trim() === '') continue;
+    const where = end === 'from' ? 'begins' : 'ends';
+    const read = readNumber(
+      typed[end],
+      `The redshift where the shells are to ${end === 'from' ? 'begin' : 'end'}`,
+    );
+    if ('sentence' in read) return read;
+    if (!(read.value >= 0 && read.value <= DEEPEST_REDSHIFT))
+      return {
+        sentence: `The range ${where} at z ${read.value}: give a redshift from 0 to ${DEEPEST_REDSHIFT}.`,
+      };
+    ends[end] = read.value;
+  }
+  const range = { zMin: ends.from, zMax: ends.to };
+  const { from, to } = rangeInNumbers(range, sample);
+  if (typed.from.trim() + typed.to.trim() !== '' && from !== null && to !== null && from >= to)
+    return {
+      sentence: `The range begins at z ${shortRedshift(from)} and ends at z ${shortRedshift(to)}: give an end behind the beginning.`,
+    };
+  return range;
+}
+
+/** A redshift in a few digits, for a field that has little room. */
+export function shortRedshift(z: number): string {
+  return String(Number(z.toPrecision(4)));
 }
 
 /** Puts n shells of a scheme in place of the present ones. The edit throws a Refusal where the scheme cannot be. */

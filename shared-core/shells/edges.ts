@@ -68,7 +68,7 @@ export function edgesOf(scheme: ShellScheme, sample: SortedSample, cosmology: Co
   const zMax = scheme.zMax ?? sample.redshift[sample.count - 1]!;
   if (zMin === zMax && scheme.zMin === null && scheme.zMax === null)
     throw new Refusal(
-      `All galaxies have the same redshift ${zMin}, so no range can be divided: give the edges yourself.`,
+      `All galaxies have the same redshift ${short(zMin)}, so no range can be divided: give the edges yourself.`,
     );
   checkEdges([zMin, zMax]);
   if (kind === 'count') return checkEdges(equalCountEdges(sample, zMin, zMax, shells));
@@ -98,7 +98,7 @@ function equalCountEdges(sample: SortedSample, zMin: number, zMax: number, shell
   const inside = last - first;
   if (inside < shells)
     throw new Refusal(
-      `${inside} galaxies lie between redshift ${zMin} and ${zMax}, too few for ${shells} shells: ask for fewer shells.`,
+      `${inside} galaxies lie between redshift ${short(zMin)} and ${short(zMax)}, too few for ${shells} shells: ask for fewer shells, or widen the range.`,
     );
   const edges = [zMin];
   for (let i = 1; i < shells; i++) {
@@ -107,10 +107,15 @@ function equalCountEdges(sample: SortedSample, zMin: number, zMax: number, shell
     const edge = below === above ? above : below + (above - below) / 2;
     if (!(edge > edges[i - 1]!))
       throw new Refusal(
-        `Too many galaxies share the redshift ${edge} to make ${shells} shells of equal count: ask for fewer shells.`,
+        `Too many galaxies share the redshift ${short(edge)} to make ${shells} shells of equal count: ask for fewer shells.`,
       );
     edges.push(edge);
   }
   edges.push(zMax);
   return edges;
+}
+
+// Six digits tell a reader which redshift is meant; the rest is rounding.
+function short(z: number): string {
+  return String(Number(z.toPrecision(6)));
 }

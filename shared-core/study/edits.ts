@@ -27,7 +27,37 @@ export function setEdges(edges: readonly number[], label = 'Set the shells'): Ed
   };
 }
 
-/** Moves edge `index` to redshift z; it may not pass its neighbours. `gesture` names the drag it belongs to. */
+/**
+ * The edges in the way of edge `index` on its way to redshift z: those that it would pass, or come to stand on.
+ * @returns index of the first and the last of them, ascending; null when the way is free
+ */
+export function edgesInTheWay(
+  edges: readonly number[],
+  index: number,
+  z: number,
+): readonly [first: number, last: number] | null {
+  const first = edges.findIndex((edge, i) => i < index && edge >= z);
+  if (first >= 0) return [first, index - 1];
+  const last = edges.findLastIndex((edge, i) => i > index && edge <= z);
+  return last >= 0 ? [index + 1, last] : null;
+}
+
+/** Moves edge `index` to redshift z and takes out the edges in its way. */
+export function moveEdgeThrough(index: number, z: number): Edit {
+  return {
+    label: `Move edge ${index + 1}, and remove those in its way`,
+    apply: (study) => {
+      const way = edgesInTheWay(study.edges, index, z);
+      const edges = study.edges.with(index, z).filter((_, i) => way === null || i < way[0] || i > way[1]);
+      return { ...study, edges: [...checkSomeEdges(edges)] };
+    },
+  };
+}
+
+/**
+ * Moves edge `index` to redshift z. `gesture` names the drag it belongs to.
+ * @throws Refusal ('use') for an edge that is not there, a z outside of 0..1100, or one at or beyond another edge
+ */
 export function moveEdge(index: number, z: number, gesture?: string): Edit {
   return {
     label: `Move edge ${index + 1}`,
@@ -35,7 +65,9 @@ export function moveEdge(index: number, z: number, gesture?: string): Edit {
     apply: (study) => {
       if (!(index >= 0 && index < study.edges.length))
         throw new Refusal(`There is no edge ${index + 1}: the study has ${study.edges.length}.`, 'use');
-      return { ...study, edges: [...checkEdges(study.edges.with(index, z))] };
+      const way = edgesInTheWay(study.edges, index, z);
+      if (way !== null) throw new Refusal(wayIsBarred(study.edges, index, z, way), 'use');
+      return { ...study, edges: [...checkSomeEdges(study.edges.with(index, z))] };
     },
   };
 }
@@ -87,4 +119,32 @@ export function removeShell(index: number): Edit {
       return { ...study, edges: edges.toSpliced(index, 2, (edges[index]! + edges[index + 1]!) / 2) };
     },
   };
+}
+
+function wayIsBarred(
+  edges: readonly number[],
+  index: number,
+  z: number,
+  [first, last]: readonly [number, number],
+): string {
+  const back = first < index;
+  const barrier = back ? first : last;
+  const [shown, edge] = toldApart(z, edges[barrier]!);
+  const place = shown === edge ? 'is the place of' : back ? 'lies before' : 'lies behind';
+  const which = first === last ? `edge ${first + 1}` : `edges ${first + 1} to ${last + 1}`;
+  const anew =
+    index === edges.length - 1 && back
+      ? ` or lay the shells out anew up to ${shown},`
+      : index === 0 && !back
+        ? ` or lay the shells out anew from ${shown},`
+        : '';
+  return `${shown} ${place} edge ${barrier + 1} (z ${edge}): remove ${which} first,${anew} or give another place.`;
+}
+
+// Five digits tell a reader which edge is meant; more of them only where two redshifts are nearly the same.
+function toldApart(a: number, b: number): readonly [string, string] {
+  const shown = (z: number, digits: number) => String(Number(z.toPrecision(digits)));
+  let digits = 5;
+  while (digits < 17 && a !== b && shown(a, digits) === shown(b, digits)) digits++;
+  return [shown(a, digits), shown(b, digits)];
 }

@@ -101,7 +101,7 @@ test('the whole main job by keyboard alone, and the focus is seen at every stop'
   await expect(line).toHaveText(/^[1-8]\d\d kept/);
 
   // Shells, and one of their edges: by a step, and typed as a redshift.
-  await reach(page, page.getByRole('textbox', { name: /equal$/ }));
+  await reach(page, page.getByRole('textbox', { name: 'Number of shells' }));
   await page.keyboard.press('Control+a');
   await page.keyboard.type('4');
   await press(page, button(/^z: shells of equal/));

@@ -59,7 +59,7 @@ test("a catalogue of one's own: open, region, drag an edge, undo, save, reopen, 
   await expect(page.getByText(/exact area/)).toBeVisible();
 
   // Four shells of equal count between the data's ends, then one edge dragged.
-  await page.getByRole('textbox', { name: /equal$/ }).fill('4');
+  await page.getByRole('textbox', { name: 'Number of shells' }).fill('4');
   await page.getByRole('button', { name: /^count: shells of equal/ }).click();
   const before = await edgesOf(page);
   expect(before).toHaveLength(5);

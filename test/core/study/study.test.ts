@@ -3,7 +3,9 @@ import { emptyStudy, readStudy, writeStudy } from '../../../shared-core/study/do
 import {
   addEdge,
   change,
+  edgesInTheWay,
   moveEdge,
+  moveEdgeThrough,
   removeEdge,
   removeShell,
   setEdges,
@@ -115,8 +117,36 @@ describe('edits', () => {
     expect(edgesAfter(removeShell(2))).toEqual([0.2, 0.4, 0.6]);
   });
 
+  it('name the edge in the way in few digits, and what to do', () => {
+    const deep = { ...study, edges: [0.0786, 0.5, 0.7, 1.1302810587092593, 1.3] };
+    const why = (edit: ReturnType<typeof setEdges>) => {
+      try {
+        edit.apply(deep);
+        return '';
+      } catch (error) {
+        return (error as Error).message;
+      }
+    };
+    expect(why(moveEdge(4, 0.9))).toBe(
+      '0.9 lies before edge 4 (z 1.1303): remove edge 4 first, or lay the shells out anew up to 0.9, or give another place.',
+    );
+    expect(why(moveEdge(0, 0.7))).toBe(
+      '0.7 is the place of edge 3 (z 0.7): remove edges 2 to 3 first, or lay the shells out anew from 0.7, or give another place.',
+    );
+    expect(why(moveEdge(1, 1.13028106))).toBe(
+      '1.13028106 lies behind edge 4 (z 1.130281059): remove edges 3 to 4 first, or give another place.',
+    );
+    expect(moveEdgeThrough(4, 0.9).apply(deep).edges).toEqual([0.0786, 0.5, 0.7, 0.9]);
+    expect(moveEdgeThrough(1, 1.2).apply(deep).edges).toEqual([0.0786, 1.2, 1.3]);
+    expect(moveEdgeThrough(1, 0.6).apply(deep).edges).toEqual(deep.edges.with(1, 0.6));
+    expect(moveEdgeThrough(4, 0.01).apply(deep).edges).toEqual([0.01]);
+    expect(edgesInTheWay(deep.edges, 4, 0.6)).toEqual([2, 3]);
+    expect(edgesInTheWay(deep.edges, 0, 0.1)).toBeNull();
+  });
+
   it('refuse what cannot be, and leave the study alone', () => {
-    expect(() => moveEdge(1, 0.7).apply(study)).toThrow(/must increase/);
+    expect(() => moveEdge(1, 1200).apply(study)).toThrow(/edge 4 \(z 0.8\)/);
+    expect(() => moveEdge(3, 1200).apply(study)).toThrow(/0 to 1100/);
     expect(() => moveEdge(9, 0.7).apply(study)).toThrow(/no edge 10/);
     expect(() => addEdge(0.4).apply(study)).toThrow(/an edge at redshift 0.4 already/);
     expect(() => removeShell(3).apply(study)).toThrow(/no shell 4/);

@@ -1,5 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { untouchedText } from '../../../renderer/strip/EdgeForm.tsx';
 import { edgeName } from '../../../renderer/strip/EdgeHandles.tsx';
 import {
   draggedTo,
@@ -11,7 +12,7 @@ import {
 } from '../../../renderer/strip/edgeMoves.ts';
 import { radialPixel } from '../../../renderer/strip/layout.ts';
 import { drawnAxis, readingsOf } from '../../../renderer/strip/readings.ts';
-import { divideShells, rangeToDivide } from '../../../renderer/strip/schemes.ts';
+import { divideShells, rangeInNumbers, rangeToDivide, typedRange } from '../../../renderer/strip/schemes.ts';
 import {
   mergeWithNext,
   middleOfShell,
@@ -21,7 +22,7 @@ import {
   takeOut,
   widestShell,
 } from '../../../renderer/strip/shellActions.ts';
-import { typedRedshift } from '../../../renderer/strip/TypedEdge.tsx';
+import { typedRedshift } from '../../../renderer/strip/typedRedshift.ts';
 import { createCosmology } from '../../../shared-core/cosmology/cosmology.ts';
 import { findPublishedSet } from '../../../shared-core/cosmology/publishedSets.ts';
 import { checkEdges, edgesOf } from '../../../shared-core/shells/edges.ts';
@@ -175,6 +176,12 @@ describe('an edge that is typed', () => {
     const gyr = typedRedshift('5', 'lookback', readings);
     expect('z' in gyr && cosmology.lookbackGyr(gyr.z)).toBeCloseTo(5, 11);
   });
+  it('stands in its field in the unit that is shown', () => {
+    expect(untouchedText(0.2, 'redshift', readings)).toBe('0.2');
+    const mpc = Number(untouchedText(0.2, 'comoving', readings));
+    // Six digits are shown.
+    expect(mpc / (cosmology.comovingMpc(0.2) * cosmology.h)).toBeCloseTo(1, 5);
+  });
   it('is answered with a sentence where there is no such place', () => {
     for (const [text, kind] of [
       ['', 'redshift'],
@@ -258,6 +265,30 @@ describe('schemes', () => {
     const one = divideShells('count', 1, { zMin: null, zMax: null }, sample, cosmology);
     expect(one.label).toBe('Divide into 1 shell of equal number of galaxies');
     expect(one.apply(study).edges).toEqual([0.1, 1.4]);
+  });
+  it('take the range that is typed; an empty field is where the shells begin or end now', () => {
+    const now = { zMin: 0.4, zMax: 1.25 };
+    const all = { zMin: null, zMax: null };
+    expect(typedRange({ from: '0.2', to: '0.9' }, now, sample)).toEqual({ zMin: 0.2, zMax: 0.9 });
+    expect(typedRange({ from: '', to: '0.9' }, now, sample)).toEqual({ zMin: 0.4, zMax: 0.9 });
+    expect(typedRange({ from: ' ', to: '' }, all, sample)).toEqual(all);
+    expect(rangeInNumbers(all, sample)).toEqual({ from: 0.1, to: 1.4 });
+    expect(rangeInNumbers(now, sample)).toEqual({ from: 0.4, to: 1.25 });
+    expect(rangeInNumbers(all, sortSample(new Float64Array(0), null))).toEqual({ from: null, to: null });
+  });
+  it('answer a range that cannot be with a sentence', () => {
+    const why = (from: string, to: string, zMin: number | null = null) => {
+      const found = typedRange({ from, to }, { zMin, zMax: null }, sample);
+      return 'sentence' in found ? found.sentence : null;
+    };
+    expect(why('0.9', '0.2')).toBe(
+      'The range begins at z 0.9 and ends at z 0.2: give an end behind the beginning.',
+    );
+    expect(why('', '0.05')).toMatch(/begins at z 0.1 and ends at z 0.05/);
+    expect(why('', '0.4', 0.40000001)).toMatch(/give an end behind/);
+    expect(why('-1', '')).toMatch(/begins at z -1: give a redshift from 0 to 1100/);
+    expect(why('', '1e4')).toMatch(/ends at z 10000: give/);
+    expect(why('near', '')).toMatch(/is "near": give a number/);
   });
   it('refuse in a sentence', () => {
     const range = { zMin: null, zMax: null };
