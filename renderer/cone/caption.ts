@@ -34,6 +34,6 @@ export function captionLines(facts: CaptionFacts): string[] {
   if (facts.reading === 'lookback')
     lines.push('radius is lookback time: lengths and shapes are not to scale');
   if (facts.perspective) lines.push('in perspective');
-  if (facts.estimated) lines.push('outline estimated from the catalogue');
+  if (facts.estimated) lines.push('outline estimated from the catalogue, and smoothed');
   return lines;
 }

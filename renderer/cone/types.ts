@@ -43,6 +43,8 @@ export interface FieldInput {
   /** From north through east to the long axis of the field. */
   readonly positionAngleDeg: number;
   readonly rings: readonly OutlineRing[];
+  /** How far the drawn outline may lie from the rings; a fine tolerance where it is not said. */
+  readonly toleranceDeg?: number;
   readonly name?: string;
 }
 
@@ -51,7 +53,7 @@ export interface FootprintInput {
   readonly fields: readonly FieldInput[];
   /** True for a region over about 70 degrees across, and for the whole sky (which has no rings). */
   readonly wide: boolean;
-  /** True when the outline is an estimate from the catalogue: the caption says so. */
+  /** True when the outline is an estimate from the catalogue, drawn smoothed: the caption says so. */
   readonly estimated?: boolean;
 }
 

@@ -14,7 +14,7 @@ import { readTheme } from './readTheme.ts';
 import { StageBar } from './StageBar.tsx';
 import { separationText } from './separationText.ts';
 
-const NO_FOOTPRINT: FootprintInput = { fields: [], wide: false, estimated: false };
+const NO_FOOTPRINT: FootprintInput = { fields: [], wide: false };
 
 /** Mounts the cone and keeps it in step with the study, the strip and the ledger. */
 export function Stage() {

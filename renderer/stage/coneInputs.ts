@@ -2,6 +2,7 @@ import type { Cosmology } from '../../shared-core/cosmology/cosmology.ts';
 import { formatNumber, type ShownUnits } from '../../shared-core/report/quantity.ts';
 import { shellRanges } from '../../shared-core/report/shellRange.ts';
 import type { ShellStatistics } from '../../shared-core/shells/shell.ts';
+import { mainRings } from '../../shared-core/sky/mainRings.ts';
 import type { ColourBy, ColourMapName, RadialReading } from '../../shared-core/study/schema.ts';
 import type {
   ColouringInput,
@@ -114,11 +115,28 @@ export function coneShells(shells: readonly ShellStatistics[]): ShellInput[] {
   }));
 }
 
-/** The footprint as the cone takes it. */
-export function coneFootprint(footprint: Pick<FootprintPicture, 'fields' | 'origin'>): FootprintInput {
-  const { fields, origin } = footprint;
+/** Parts of an estimated outline below this share of the largest one's area are not drawn: single cells at its rim. */
+const SMALLEST_PART = 0.01;
+/** How far the drawn outline of an estimate may lie from that of its cells: of a cell's side, and of the field's radius. */
+const CELL_SHARE = 0.75;
+const RADIUS_SHARE = 0.02;
+const MOST_RADIUS_DEG = 50;
+
+/** The footprint as the cone takes it. The rim of an estimate is smoothed: where a cell ends says nothing of the sky. */
+export function coneFootprint({
+  fields,
+  estimate,
+}: Pick<FootprintPicture, 'fields' | 'estimate'>): FootprintInput {
   const wide = fields.length === 0 || fields.some((f) => f.wide);
-  return { fields: fields.filter((f) => f.rings.length > 0), wide, estimated: origin === 'estimated' };
+  const drawn = fields.filter((f) => f.rings.length > 0);
+  if (estimate === null) return { fields: drawn, wide };
+  const cellDeg = Math.sqrt(estimate.cellAreaDeg2);
+  const smoothed = drawn.map((f) => ({
+    ...f,
+    rings: mainRings(f.rings, SMALLEST_PART),
+    toleranceDeg: Math.max(CELL_SHARE * cellDeg, RADIUS_SHARE * Math.min(f.radiusDeg, MOST_RADIUS_DEG)),
+  }));
+  return { fields: smoothed, wide, estimated: true };
 }
 
 export interface ColourLegend {

@@ -57,7 +57,9 @@ export function prepareFields({ fields }: FootprintInput): PreparedField[] {
 /** Frame, outline, solid and edges of a field. */
 export function prepareField(field: FieldInput): PreparedField {
   const outline = field.rings.map(ringDirections).filter((ring) => ring.length >= 9);
-  const rings = outline.map((ring) => simplerRing(ring, TOLERANCE_DEG, LONGEST_DEG));
+  const tolerance = field.toleranceDeg ?? TOLERANCE_DEG;
+  const longest = Math.max(LONGEST_DEG, 6 * tolerance);
+  const rings = outline.map((ring) => simplerRing(ring, tolerance, longest));
   const all = rings.flatMap((ring) => Array.from(ring));
   const look = lookAt(field, all);
   const frame = fieldFrame(look.raDeg, look.decDeg, look.positionAngleDeg);
