@@ -30,7 +30,10 @@ export function addCatalogueOptions(command: Command): Command {
       'keep rows whose number lies in the range, bounds included; an end may be left out; repeat it for several',
       (text: string, before: Cut[] = []) => [...before, parseCut(text)],
     )
-    .option('--set-aside <file>', 'write the rows that are not used there, each with its line and reason')
+    .option(
+      '--set-aside <file>',
+      'write the rows that are not used there (CSV), each with its line, name and reason',
+    )
     .option('--overwrite', 'replace output files that exist');
 }
 

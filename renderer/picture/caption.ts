@@ -1,4 +1,5 @@
 import { findPublishedSet } from '../../shared-core/cosmology/publishedSets.ts';
+import { areaText } from '../../shared-core/report/areaWords.ts';
 import { cutWords } from '../../shared-core/report/cuts.ts';
 import type { PictureNumbers } from './numbers.ts';
 
@@ -39,10 +40,9 @@ const digits = (value: number, count: number): string => String(Number(value.toP
 function regionText({ footprint }: PictureNumbers): string[] {
   if (footprint === null) return [];
   const fields = footprint.fields.length > 1 ? ` in ${footprint.fields.length} fields` : '';
-  const area = digits(footprint.areaDeg2, 4);
-  if (footprint.estimate === null) return [`Area ${area} deg²${fields}.`];
-  const error = digits(footprint.estimate.areaErrorDeg2, 2);
-  return [`Area ${area} ± ${error} deg²${fields}, estimated from the galaxies' positions.`];
+  if (footprint.estimate === null) return [`Area ${digits(footprint.areaDeg2, 4)} deg²${fields}.`];
+  const { value, error } = areaText(footprint);
+  return [`Area ${value} ± ${error} deg²${fields}, estimated from the galaxies' positions.`];
 }
 
 /** Enough to repeat every distance: name and parameters. */

@@ -42,6 +42,8 @@ export interface RowAccount {
   readonly reasons: Readonly<Partial<Record<SetAsideReason, number>>>;
   /** Rows that repeat the RA and Dec of an earlier kept row: reported, not dropped. */
   readonly repeatedPositions: number;
+  /** Rows among those that are no numbers where one has a decimal comma (10,5); left out for none. */
+  readonly decimalCommas?: number;
 }
 
 /** The kept rows, in file order; arrays of one length. */
@@ -70,4 +72,6 @@ export interface SetAsideRow {
   readonly column: string | null;
   /** What stood there (its first 200 characters); of a row with the wrong number of fields, what the row says. */
   readonly text: string | null;
+  /** The row's name, as far as the mapping has a column of names and the row is read as text. */
+  readonly name?: string;
 }

@@ -1,4 +1,4 @@
-import type { SetAsideReason } from './catalogue.ts';
+import type { RowAccount, SetAsideReason, SetAsideRow } from './catalogue.ts';
 import { LARGEST_REDSHIFT } from './cleaning.ts';
 
 const TEXTS: Readonly<Record<SetAsideReason, string>> = {
@@ -17,4 +17,19 @@ const TEXTS: Readonly<Record<SetAsideReason, string>> = {
 /** Why rows were set aside, in words that follow a count: "3 with a missing value". */
 export function reasonText(reason: SetAsideReason): string {
   return TEXTS[reason];
+}
+
+/** Why one row was set aside, as a sentence with the column and the value at fault. */
+export function reasonSentence({ reason, column, text }: SetAsideRow): string {
+  const value = text === null || text.trim() === '' ? 'holds no number' : `is ${text}`;
+  return `The row is set aside as one ${reasonText(reason)}${column === null ? '' : `: ${column} ${value}`}.`;
+}
+
+/** What to do where most rows are written with decimal commas; null where they are not. */
+export function decimalCommaAdvice({ rowsRead, decimalCommas = 0 }: RowAccount): string | null {
+  if (decimalCommas * 2 <= rowsRead) return null;
+  return (
+    `${decimalCommas} of ${rowsRead} rows have numbers with a decimal comma, such as 10,5, and only a decimal point is read: ` +
+    'write the table again with decimal points (in a file parted by semicolons or tabs, replace each comma by a point) and open that.'
+  );
 }

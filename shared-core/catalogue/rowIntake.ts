@@ -1,4 +1,4 @@
-import type { Catalogue, ColumnMapping, SetAsideReason, SetAsideRow } from './catalogue.ts';
+import type { Catalogue, ColumnMapping, SetAsideRow } from './catalogue.ts';
 import { DEC, type Fault, judgeNumbers, RA, RADIAL, readText, redshiftOf } from './cleaning.ts';
 import type { RowSink } from './formats/delimited/lineScanner.ts';
 import { isBlank } from './formats/delimited/table.ts';
@@ -17,6 +17,9 @@ export interface KeptRow {
   readonly decDeg: number;
   readonly redshift: number;
 }
+
+/** A number as it is written where the comma parts the decimals. */
+const DECIMAL_COMMA = /^\s*[+-]?\d+,\d+\s*$/;
 
 /** What is wanted of the rows beyond the mapping. */
 export interface IntakeWishes {
@@ -41,7 +44,7 @@ export class RowIntake implements RowSink {
   readonly #choice: Choice;
   readonly #onSetAside: ((row: SetAsideRow) => void) | undefined;
   readonly #onKept: ((row: KeptRow) => void) | undefined;
-  /** -1: nobody asks for names. */
+  /** -1: nobody asks for names. Who lists rows, kept or set aside, is told them. */
   readonly #idCell: number;
   readonly #values: Float64Array;
   readonly #cutPlaces: readonly number[];
@@ -75,7 +78,8 @@ export class RowIntake implements RowSink {
     this.#choice = choice;
     this.#onSetAside = onSetAside;
     this.#onKept = onKept;
-    this.#idCell = onKept === undefined || mapping.id === null ? -1 : header.indexOf(mapping.id);
+    const listed = onKept !== undefined || onSetAside !== undefined;
+    this.#idCell = listed && mapping.id !== null ? header.indexOf(mapping.id) : -1;
     this.#values = new Float64Array(places.length);
     this.#cutValues = new Float64Array(choice.cuts.length);
   }
@@ -116,26 +120,34 @@ export class RowIntake implements RowSink {
       this.#kept.add(line, redshift, values);
       this.#onKept?.({ line, id, raDeg: values[RA]!, decDeg: values[DEC]!, redshift });
     } else if (left === OUTSIDE_REGION) {
-      this.#setAside(line, 'outsideRegion', null, null);
+      this.#setAside({ line, reason: 'outsideRegion', column: null, text: null }, id);
     } else {
-      this.#setAside(line, 'outsideCuts', cuts[left]!.column, cutText(cutValues[left]!));
+      const text = cutText(cutValues[left]!);
+      this.#setAside({ line, reason: 'outsideCuts', column: cuts[left]!.column, text }, id);
     }
   }
 
   #blame(line: number, { reason, place }: Fault, row: readonly string[]): void {
+    if (reason === 'notANumber' && this.#hasDecimalComma(row)) this.#tally.decimalComma();
     // The text is prepared only for somebody who asked for it.
     if (this.#onSetAside === undefined) {
       this.#tally.setAside(reason);
     } else if (place === -1) {
-      this.#setAside(line, reason, null, keptText(row.join(this.#delimiter)));
+      // Which field is the name cannot be told where fields are missing or too many.
+      this.#setAside({ line, reason, column: null, text: keptText(row.join(this.#delimiter)) }, null);
     } else {
       const cell = this.wanted[place]!;
-      this.#setAside(line, reason, this.#header[cell]!, keptText(row[cell]!));
+      const id = row[this.#idCell]?.trim() ?? null;
+      this.#setAside({ line, reason, column: this.#header[cell]!, text: keptText(row[cell]!) }, id);
     }
   }
 
-  #setAside(line: number, reason: SetAsideReason, column: string | null, text: string | null): void {
-    this.#tally.setAside(reason);
-    this.#onSetAside?.({ line, reason, column, text });
+  #hasDecimalComma(row: readonly string[]): boolean {
+    return this.wanted.slice(0, this.required).some((cell) => DECIMAL_COMMA.test(row[cell]!));
+  }
+
+  #setAside(row: SetAsideRow, id: string | null): void {
+    this.#tally.setAside(row.reason);
+    this.#onSetAside?.(id === null ? row : { ...row, name: keptText(id) });
   }
 }

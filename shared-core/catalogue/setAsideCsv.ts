@@ -1,14 +1,17 @@
 import { csvCell } from '../base/cell.ts';
 import type { SetAsideRow } from './catalogue.ts';
+import { reasonSentence } from './reasons.ts';
 
 const PART_CHARACTERS = 65_536;
 
-/** First line of a set-aside file, with its line end. */
-export const SET_ASIDE_HEADER = 'line,reason,column,text\n';
+/** First line of a set-aside file, with its line end (RFC 4180: CR LF). */
+export const SET_ASIDE_HEADER = 'line,reason,column,text,name,explanation\r\n';
 
 /** One row of a set-aside file, with its line end; its text is harmless in a spreadsheet. */
 export function setAsideLine(row: SetAsideRow): string {
-  return `${row.line},${row.reason},${csvCell(row.column ?? '')},${csvCell(row.text ?? '')}\n`;
+  const { line, reason, column, text, name } = row;
+  const cells = [column ?? '', text ?? '', name ?? '', reasonSentence(row)].map(csvCell);
+  return `${line},${reason},${cells.join(',')}\r\n`;
 }
 
 /** A set-aside file in the making. */
@@ -18,7 +21,7 @@ export interface SetAsideCsv {
   parts(): string[];
 }
 
-/** Starts a set-aside file: CSV with the columns line, reason, column and text, and a row for each row added. */
+/** Starts a set-aside file: CSV with a header (line, code of the reason, column and text at fault, the row's name, the reason as a sentence) and a row for each row added. */
 export function setAsideCsv(): SetAsideCsv {
   const full: string[] = [];
   let open = SET_ASIDE_HEADER;

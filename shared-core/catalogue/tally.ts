@@ -4,11 +4,15 @@ import type { RowAccount, SetAsideReason } from './catalogue.ts';
 export class Tally {
   #kept = 0;
   #setAside = 0;
+  #decimalCommas: number;
   readonly #reasons: Partial<Record<SetAsideReason, number>>;
 
   /** `before`: rows already set aside by an earlier pass, which stay so. */
-  constructor(before: Pick<RowAccount, 'setAside' | 'reasons'> = { setAside: 0, reasons: {} }) {
+  constructor(
+    before: Pick<RowAccount, 'setAside' | 'reasons' | 'decimalCommas'> = { setAside: 0, reasons: {} },
+  ) {
     this.#setAside = before.setAside;
+    this.#decimalCommas = before.decimalCommas ?? 0;
     this.#reasons = { ...before.reasons };
   }
 
@@ -21,6 +25,11 @@ export class Tally {
     this.#reasons[reason] = (this.#reasons[reason] ?? 0) + 1;
   }
 
+  /** Notes that a row set aside has a number with a decimal comma. */
+  decimalComma(): void {
+    this.#decimalCommas++;
+  }
+
   account(repeatedPositions: number): RowAccount {
     return {
       rowsRead: this.#kept + this.#setAside,
@@ -28,6 +37,7 @@ export class Tally {
       setAside: this.#setAside,
       reasons: { ...this.#reasons },
       repeatedPositions,
+      ...(this.#decimalCommas === 0 ? {} : { decimalCommas: this.#decimalCommas }),
     };
   }
 }

@@ -5,10 +5,11 @@ import {
   type SetAsideReason,
 } from '../catalogue/catalogue.ts';
 import { describeMapping } from '../catalogue/mapping.ts';
-import { reasonText } from '../catalogue/reasons.ts';
+import { decimalCommaAdvice, reasonText } from '../catalogue/reasons.ts';
 import type { Cosmology } from '../cosmology/cosmology.ts';
 import type { PublishedSet } from '../cosmology/publishedSets.ts';
 import type { Footprint } from '../sky/region.ts';
+import { areaText, estimateWords } from './areaWords.ts';
 
 const trim = (value: number, digits = 6) => String(Number(value.toPrecision(digits)));
 
@@ -38,7 +39,8 @@ export function describeAccount(account: RowAccount): string {
     account.repeatedPositions === 0
       ? ''
       : ` ${account.repeatedPositions} kept rows repeat an earlier position.`;
-  return `Rows: ${account.rowsRead} read = ${account.kept} kept + ${account.setAside} set aside${why}.${repeats}`;
+  const advice = decimalCommaAdvice(account);
+  return `Rows: ${account.rowsRead} read = ${account.kept} kept + ${account.setAside} set aside${why}.${repeats}${advice === null ? '' : ` ${advice}`}`;
 }
 
 /** One line on which column was read as what, and how a velocity becomes a redshift. */
@@ -51,13 +53,10 @@ export function describeFootprint(
   footprint: Pick<Footprint, 'areaDeg2' | 'estimate'>,
   words: string | null,
 ): string {
-  const area = trim(footprint.areaDeg2, 7);
-  if (footprint.estimate === null) return `Region: ${words ?? 'as given'}; area ${area} deg^2.`;
-  const { cells, cellAreaDeg2, nside, areaErrorDeg2 } = footprint.estimate;
-  return (
-    `Region: area ${area} +- ${trim(areaErrorDeg2, 2)} deg^2 is an ESTIMATE from ${cells} occupied equal-area cells of ` +
-    `${trim(cellAreaDeg2, 4)} deg^2 (HEALPix Nside ${nside}); give the region for an exact one.`
-  );
+  const area = areaText(footprint);
+  if (footprint.estimate === null) return `Region: ${words ?? 'as given'}; area ${area.value} deg^2.`;
+  const how = estimateWords(footprint.estimate);
+  return `Region: area ${area.value} +- ${area.error} deg^2 is an ESTIMATE ${how}; give the region for an exact one.`;
 }
 
 /** One line on how the effective numbers were made. */

@@ -54,7 +54,10 @@ function emptyShare(children: OccupiedCells, parents: OccupiedCells): number {
  * of both counts, with the rim's own scatter (clustering included) in place of Poisson's where it is greater.
  * Without a rim nothing is known but that the cells are covered in part: half of them, give or take half.
  */
-function measure({ counts }: OccupiedCells, kinds: Uint8Array): { cells: number; error: number } {
+function measure(
+  { counts }: OccupiedCells,
+  kinds: Uint8Array,
+): { inside: number; border: number; borderAsCells: number; error: number } {
   let border = 0;
   let borderGalaxies = 0;
   let rim = 0;
@@ -72,13 +75,13 @@ function measure({ counts }: OccupiedCells, kinds: Uint8Array): { cells: number;
     }
   }
   const inside = counts.length - border;
-  if (border === 0) return { cells: inside, error: 0 };
-  if (rim === 0) return { cells: border / 2, error: border / 2 };
+  if (border === 0) return { inside, border, borderAsCells: 0, error: 0 };
+  if (rim === 0) return { inside: 0, border, borderAsCells: border / 2, error: border / 2 };
   const mean = rimGalaxies / rim;
   const scatter = Math.max(1, (rimSquares / rim - mean * mean) / mean);
   const covered = borderGalaxies / mean;
   const error = Math.sqrt(scatter * (covered / mean) * (1 + covered / rim));
-  return { cells: inside + Math.min(border, covered), error };
+  return { inside, border, borderAsCells: Math.min(border, covered), error };
 }
 
 /**
@@ -105,11 +108,13 @@ export function estimateFootprint(raDeg: ArrayLike<number>, decDeg: ArrayLike<nu
   let outline: readonly OutlineRing[] | null = null;
   return {
     origin: 'estimated',
-    areaDeg2: area.cells * cellAreaDeg2,
+    areaDeg2: (area.inside + area.borderAsCells) * cellAreaDeg2,
     estimate: {
       nside,
       cellAreaDeg2,
       cells: cells.length,
+      borderCells: area.border,
+      borderAsCells: area.borderAsCells,
       areaErrorDeg2: area.error * cellAreaDeg2,
     },
     contains: (ra, dec) => isPosition(ra, dec) && occupied.has(raDecToNest(nside, ra, dec)),

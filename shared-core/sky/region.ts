@@ -34,11 +34,16 @@ export interface Footprint {
   /** 'given': exact area of a region somebody stated; 'estimated': from occupied cells, never called exact. */
   readonly origin: 'given' | 'estimated';
   readonly areaDeg2: number;
-  /** Only of an estimate: the cell's size and count, and the area's uncertainty from cells on the border. */
+  /**
+   * Only of an estimate: the cell's size and count, how many are on the border and for how many whole cells these
+   * count, and the area's uncertainty from them.
+   */
   readonly estimate: {
     readonly nside: number;
     readonly cellAreaDeg2: number;
     readonly cells: number;
+    readonly borderCells: number;
+    readonly borderAsCells: number;
     readonly areaErrorDeg2: number;
   } | null;
   contains(raDeg: number, decDeg: number): boolean;

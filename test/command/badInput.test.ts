@@ -159,12 +159,12 @@ describe('awkward files that can be used', () => {
       },
     });
     const { readFileSync } = await import('node:fs');
-    const lines = readFileSync(list, 'utf8').trimEnd().split('\n');
+    const lines = readFileSync(list, 'utf8').trimEnd().split('\r\n');
     expect(lines).toHaveLength(14);
     expect(lines.slice(0, 3)).toEqual([
-      'line,reason,column,text',
-      '3,notANumber,ra,12h30m',
-      '4,raOutOfRange,ra,361',
+      'line,reason,column,text,name,explanation',
+      '3,notANumber,ra,12h30m,,The row is set aside as one with a value that is not a number: ra is 12h30m.',
+      '4,raOutOfRange,ra,361,,The row is set aside as one with right ascension outside 0 to 360 degrees: ra is 361.',
     ]);
     // A second run may not take the place of a list that says something else.
     folder.write('aside.csv', 'mine');
@@ -172,6 +172,13 @@ describe('awkward files that can be used', () => {
     expect(again.code).toBe(2);
     expect(again.err).toMatch(/exists already/);
     expect(readFileSync(list, 'utf8')).toBe('mine');
+  });
+
+  it('says of decimal commas what they are and what to do', async () => {
+    const path = folder.write('commas.csv', 'ra;dec;z\n10,5;2,25;0,5\n11,5;2,5;0,25\n');
+    const { code, err } = await conewright('shells', path);
+    expect(code).toBe(1);
+    expect(err).toMatch(/2 of 2 rows have numbers with a decimal comma.*replace each comma by a point/);
   });
 
   it('text that a spreadsheet would run is written harmless', async () => {

@@ -1,6 +1,7 @@
-import { formatNumber } from '../../../shared-core/report/quantity.ts';
+import { areaText, estimateWords } from '../../../shared-core/report/areaWords.ts';
 import type { FootprintPicture } from '../../engine/protocol.ts';
 import { useApp } from '../../state/app.ts';
+import { unitText } from '../../ui/unitText.ts';
 import { regionFootprint } from '../regionReady.ts';
 import { useStudyPart } from '../useStudyPart.ts';
 
@@ -12,14 +13,11 @@ function useArea(): Area | null {
   return useApp().engine.selected.value?.footprint ?? (region === null ? null : regionFootprint(region));
 }
 
-const exact = (deg2: number) => formatNumber(deg2, { significant: 7 });
-const rough = (value: number, significant: number) => formatNumber(value, { significant });
-
 /** The area in a few words. */
 export function useAreaGist(): string {
   const area = useArea();
   if (area === null) return 'none';
-  return area.estimate === null ? `${exact(area.areaDeg2)} deg²` : `≈ ${rough(area.areaDeg2, 4)} deg²`;
+  return `${area.estimate === null ? '' : '≈ '}${areaText(area).value} deg²`;
 }
 
 /** The area with all that a reader must know of it: exact, or an estimate with its cells and error. */
@@ -32,24 +30,24 @@ export function AreaLine() {
         shells have no volume.
       </p>
     );
-  const { areaDeg2, estimate } = area;
+  const { estimate } = area;
+  const { value, error } = areaText(area);
   if (estimate === null)
     return (
       <p class="area">
-        <b>{exact(areaDeg2)}</b> deg² <span class="quiet">exact area</span>
+        <b>{value}</b> deg² <span class="quiet">exact area</span>
       </p>
     );
   return (
     <>
       <p class="area">
         <b>
-          {rough(areaDeg2, 4)} ± {rough(estimate.areaErrorDeg2, 2)}
+          {value} ± {error}
         </b>{' '}
         deg² <span class="estimate-mark">estimate</span>
       </p>
       <p class="quiet">
-        From {estimate.cells} occupied equal-area cells of {rough(estimate.cellAreaDeg2, 4)} deg² (HEALPix
-        Nside {estimate.nside}). It is used as it is; a region makes it exact.
+        An estimate {unitText(estimateWords(estimate))}. It is used as it is; a region makes it exact.
       </p>
     </>
   );

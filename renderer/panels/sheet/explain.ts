@@ -1,3 +1,4 @@
+import { areaText, estimateWords } from '../../../shared-core/report/areaWords.ts';
 import {
   formatNumber,
   type Quantity,
@@ -9,6 +10,7 @@ import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts
 import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
 import type { ShellConditions } from '../../../shared-core/shells/statistics.ts';
 import type { FootprintPicture } from '../../engine/protocol.ts';
+import { unitText } from '../../ui/unitText.ts';
 
 /** One thing that went into a number, as it was for this shell. */
 export interface ExplainedInput {
@@ -84,11 +86,10 @@ function input(
     case 'p0':
       return { name: 'P0', text: String(conditions.p0Mpc3PerH3), unit: '(Mpc/h)^3' };
     case 'area': {
-      const area = formatNumber(conditions.areaDeg2, { significant: 7 });
-      const error = estimate === null ? '' : ` ± ${formatNumber(estimate.areaErrorDeg2, { significant: 2 })}`;
+      const { value, error } = areaText({ areaDeg2: conditions.areaDeg2, estimate });
       return {
         name: estimate === null ? 'area, exact' : 'area, an estimate',
-        text: area + error,
+        text: error === null ? value : `${value} ± ${error}`,
         unit: 'deg^2',
       };
     }
@@ -120,7 +121,9 @@ function uncertainty(key: string, { shell, column, conditions, estimate, units }
     case 'zEffective':
       return 'No error is given. It depends on P0, and a little on how n(z) is cut into slices.';
     case 'volumeMpc3':
-      return share === null ? `${BY_QUADRATURE} ${area}` : `${area} ${BY_QUADRATURE}`;
+      return estimate === null
+        ? `${BY_QUADRATURE} ${area}`
+        : `${area} The area is estimated ${unitText(estimateWords(estimate))}. ${BY_QUADRATURE}`;
     case 'densityPerMpc3': {
       if (shell.count === 0) return 'No galaxy, no error: the density is 0 for want of data.';
       if (shell.densityPerMpc3 === 0)

@@ -1,4 +1,5 @@
 import { useState } from 'preact/hooks';
+import { decimalCommaAdvice } from '../../../shared-core/catalogue/reasons.ts';
 import { useApp } from '../../state/app.ts';
 import { countText } from '../../ui/numberText.ts';
 import { setAsideLines } from './sourceFacts.ts';
@@ -11,6 +12,7 @@ export function RowsAccount() {
   const read = engine.loadedNow.value;
   if (read === null) return null;
   const account = engine.selected.value?.account ?? read.account;
+  const advice = decimalCommaAdvice(account);
   const download = async (): Promise<void> => {
     setBusy(true);
     try {
@@ -44,6 +46,7 @@ export function RowsAccount() {
           </div>
         ))}
       </dl>
+      {advice === null ? null : <p role="status">{advice}</p>}
       {account.repeatedPositions === 0 ? null : (
         <p class="quiet">
           {countText(account.repeatedPositions)} kept{' '}
