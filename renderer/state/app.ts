@@ -58,6 +58,11 @@ export function createApp(
     if (loaded === null || source?.kind !== 'file' || source.sha256 !== null) return;
     if (loaded.sizeBytes === source.sizeBytes) files.noteFingerprint(loaded.sha256);
   });
+  // What cannot be read is nothing to go back to.
+  effect(() => {
+    if (engine.failure.value?.stage === 'load') files.noteReading(false);
+    else if (engine.loadedNow.value !== null) files.noteReading(true);
+  });
   const derived = createDerived(studyState, engine);
   // What was pointed at belongs to the catalogue that was open then.
   const source = computed(() => JSON.stringify(files.engineSource.value));

@@ -82,7 +82,7 @@ export function createQuestions(): Questions {
         field: null,
         answers: [
           { key: 'stay', label: 'Not now' },
-          { key: 'replace', label: `Replace ${file}`, danger: true },
+          { key: 'replace', label: 'Replace it', danger: true },
           { key: 'saveAs', label: 'Save under a new name…' },
         ],
       });

@@ -20,6 +20,30 @@ async function drop(page: Page, name: string, content: string): Promise<void> {
     await page.dispatchEvent('.frame', kind, { dataTransfer: data });
 }
 
+test('a file that is no catalogue has no columns, and the way back leads to the last one that could be read', async ({
+  desk,
+}) => {
+  const page = await desk.open({ files: [SHAPLEY] });
+  await ready(page);
+  await page.getByRole('button', { name: /^Columns/ }).click();
+  const columns = page.locator('#fold-columns');
+  await expect(columns.getByRole('combobox').first()).toBeVisible();
+  // A table whose columns cannot be guessed shows its own; what comes after it must not inherit them.
+  await drop(page, 'odd.csv', 'a,b,c\n1,2,3\n');
+  await expect(columns.locator('option', { hasText: /^b$/ }).first()).toBeAttached();
+  for (const name of ['picture.png', 'second.png']) {
+    // The first bytes of a PNG: its signature and the head of its first chunk (W3C, PNG, section 5.2).
+    await drop(page, name, '\x89PNG\r\n\x1a\n\0\0\0\rIHDR');
+    await expect(page.locator('.source-name')).toContainText(name);
+    await expect(page.locator('.engine-line')).toHaveText('catalogue not read');
+    await expect(columns.getByRole('combobox')).toHaveCount(0);
+  }
+  await page.getByRole('button', { name: 'Back to shapley.csv' }).click();
+  await ready(page);
+  await expect(columns.getByRole('combobox').first()).toBeVisible();
+  await expect(page.locator('.source-name')).toContainText('shapley.csv');
+});
+
 test('another catalogue in a saved study takes the title, and Save asks before it replaces the study', async ({
   desk,
 }) => {
@@ -44,6 +68,9 @@ test('another catalogue in a saved study takes the title, and Save asks before i
   const question = page.getByRole('dialog', { name: /holds a study of another catalogue/ });
   await expect(question).toContainText('other.csv');
   await accessible(page, '.dialog[open]');
+  // Nothing of the question lies outside of its dialog.
+  const overhang = await question.evaluate((dialog) => dialog.scrollWidth - dialog.clientWidth);
+  expect(overhang).toBe(0);
   await page.keyboard.press('Escape');
   await expect(question).toHaveCount(0);
   expect(readFileSync(path, 'utf8')).toBe(saved);

@@ -1,5 +1,5 @@
 import { useEffect, useState } from 'preact/hooks';
-import type { Preview } from '../../engine/protocol.ts';
+import type { EngineSource, Preview } from '../../engine/protocol.ts';
 import { useApp } from '../../state/app.ts';
 
 export type PreviewState =
@@ -12,8 +12,12 @@ export type PreviewState =
 export function usePreview(wanted: boolean): PreviewState {
   const { engine, files } = useApp();
   const source = files.engineSource.value;
-  const [state, setState] = useState<PreviewState>({ kind: 'none' });
+  const [{ state, of }, setKnown] = useState<{ state: PreviewState; of: EngineSource | null }>({
+    state: { kind: 'none' },
+    of: null,
+  });
   useEffect(() => {
+    const setState = (state: PreviewState): void => setKnown({ state, of: source });
     if (!wanted || source === null) {
       setState({ kind: 'none' });
       return;
@@ -33,5 +37,6 @@ export function usePreview(wanted: boolean): PreviewState {
       stale = true;
     };
   }, [wanted, source]);
-  return state;
+  // Until another file is looked into, what is known is of the one before.
+  return of === source ? state : { kind: wanted ? 'reading' : 'none' };
 }

@@ -2,6 +2,7 @@ import type { StudySource } from '../../../shared-core/study/schema.ts';
 import { useApp } from '../../state/app.ts';
 import { sizeText } from '../../ui/numberText.ts';
 import { revealSection } from '../../ui/openSections.ts';
+import { usePreview } from '../columns/usePreview.ts';
 import { useStudyPart } from '../useStudyPart.ts';
 
 /** The study names a file that is not at hand. */
@@ -50,8 +51,9 @@ export function SourceChanged() {
 export function ReadFailure() {
   const { engine, files, studyState } = useApp();
   const failure = engine.failure.value;
+  const head = usePreview(failure?.stage === 'load');
   if (failure === null || files.missingSource.value !== null) return null;
-  const before = failure.stage === 'load' ? files.beforeOpening.value : null;
+  const before = failure.stage === 'load' ? files.lastReadable.value : null;
   return (
     <div class="trouble" role="alert">
       <p>{failure.sentence}</p>
@@ -59,7 +61,7 @@ export function ReadFailure() {
         <button type="button" class="button" onClick={() => engine.readAgain()}>
           Read again
         </button>
-        {failure.stage === 'load' ? (
+        {failure.stage === 'load' && head.kind === 'read' ? (
           <button type="button" class="button" onClick={() => revealSection('columns')}>
             Columns
           </button>

@@ -1,4 +1,4 @@
-import { computed, type ReadonlySignal } from '@preact/signals';
+import { computed, type ReadonlySignal, signal } from '@preact/signals';
 import type { Bridge } from '../../../shared-core/bridge/contract.ts';
 import type { OpenedFile } from '../../../shared-core/bridge/messages.ts';
 import { change } from '../../../shared-core/study/edits.ts';
@@ -16,6 +16,10 @@ export interface StudySourceState {
   readonly missingSource: ReadonlySignal<FileSource | null>;
   /** The study as it was before its present catalogue was opened; null when it came with it. */
   readonly beforeOpening: ReadonlySignal<Study | null>;
+  /** The latest earlier study with another catalogue than the present one, of which none is known to be unreadable. */
+  readonly lastReadable: ReadonlySignal<Study | null>;
+  /** The present catalogue could, or could not, be read. */
+  noteReading(done: boolean): void;
   /** The latest earlier study that asked for a reading with this loadKey; null when none did. */
   askedBefore(readFor: string): Study | null;
   /** The source was read whole for the first time: from now on a change of the file is told. */
@@ -54,15 +58,29 @@ export function createStudySource(
   const missingSource = computed(() =>
     source.value?.kind === 'file' && engineSource.value === null ? source.value : null,
   );
+  const keyOf = (named: StudySource | null): string => JSON.stringify(readable(named));
   const beforeOpening = computed(() => {
-    const now = JSON.stringify(engineSource.value);
-    return studyState.earlier((before) => JSON.stringify(readable(before.source)) !== now);
+    const now = keyOf(source.value);
+    return studyState.earlier((before) => keyOf(before.source) !== now);
   });
+  const unreadable = signal<ReadonlySet<string>>(new Set());
 
   return {
     engineSource,
     missingSource,
     beforeOpening,
+    lastReadable: computed(() => {
+      const now = keyOf(source.value);
+      return studyState.earlier((before) => {
+        const key = keyOf(before.source);
+        return key !== now && !unreadable.value.has(key);
+      });
+    }),
+    noteReading(done) {
+      const key = keyOf(source.peek());
+      const others = [...unreadable.peek()].filter((one) => one !== key);
+      unreadable.value = new Set(done ? others : [...others, key]);
+    },
     askedBefore: (readFor) =>
       studyState.earlier((before) => loadKey({ ...before, source: readable(before.source) }) === readFor),
     noteFingerprint(sha256) {
