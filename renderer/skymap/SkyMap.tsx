@@ -62,13 +62,16 @@ export function SkyMap() {
   return (
     <figure class="sky-map">
       <div class="sky-head">
+        <span class="sky-name" aria-hidden="true">
+          Map
+        </span>
         <Segments
-          label="Part of the sky"
+          label="Map"
           value={look.value}
           disabled={target.value === null}
           choices={[
-            { value: 'whole', label: 'Whole sky' },
-            { value: 'fit', label: 'Fit', title: 'The field that is looked at, as large as it fits' },
+            { value: 'whole', label: 'whole sky', title: 'Show the whole sky' },
+            { value: 'fit', label: 'field', title: 'Show the field that is looked at, as large as it fits' },
           ]}
           onChoose={(next) => void (chosen.value = next)}
         />

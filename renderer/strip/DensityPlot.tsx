@@ -1,10 +1,9 @@
 import { line } from 'd3-shape';
 import { useId } from 'preact/hooks';
-import { markText } from './axisMarks.ts';
 import { commonPower, densityMarks } from './densityScale.ts';
+import { densityText } from './densityText.ts';
 import type { StripRows } from './rows.ts';
 import type { ShownProfile, StripModel } from './stripModel.ts';
-import { powerOfTen } from './words.ts';
 
 const MARK_EVERY_PX = 30;
 
@@ -50,7 +49,7 @@ export function DensityPlot({ model, rows }: { readonly model: StripModel; reado
           y={yAt(value)}
           x={leftPx}
           side="left"
-          text={leftText(value, density.upward, power)}
+          text={densityText(value, density.upward, power)}
           rows={rows}
         />
       ))}
@@ -62,7 +61,7 @@ export function DensityPlot({ model, rows }: { readonly model: StripModel; reado
             y={yAt(perDensity === null ? 0 : value / perDensity)}
             x={rightPx}
             side="right"
-            text={leftText(value, density.upward, 0)}
+            text={densityText(value, density.upward, 0)}
             rows={rows}
             keepFrom={noise?.labelY ?? null}
           />
@@ -137,12 +136,6 @@ function ScaleMark(props: {
       )}
     </g>
   );
-}
-
-function leftText(value: number, upward: 'linear' | 'log', power: number): string {
-  if (upward === 'linear') return markText(Number((value / 10 ** power).toPrecision(8)));
-  const exponent = Math.round(Math.log10(value));
-  return exponent >= -2 && exponent <= 3 ? markText(value) : powerOfTen(exponent);
 }
 
 // All bars are one path, and their tops another, so that two hundred of them cost two elements.

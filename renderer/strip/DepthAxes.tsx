@@ -1,6 +1,6 @@
 import { useComputed } from '@preact/signals';
 import type { RadialReading } from '../../shared-core/study/schema.ts';
-import { axisMarks } from './axisMarks.ts';
+import { axisMarks, DIGIT_WIDTH } from './axisMarks.ts';
 import type { StripRows } from './rows.ts';
 import type { StripModel } from './stripModel.ts';
 
@@ -24,6 +24,7 @@ export function DepthAxes({ model, rows }: { readonly model: StripModel; readonl
   });
   const scale = model.scale.value;
   if (marks.value === null || scale === null) return null;
+  const fontPx = model.size.value?.fontPx ?? 12;
   return (
     <g class="strip-axes">
       {marks.value.map(({ kind, marks: own }, row) => {
@@ -41,7 +42,7 @@ export function DepthAxes({ model, rows }: { readonly model: StripModel; readonl
             />
             {own.map((m) =>
               m.text === null ? null : (
-                <text key={m.value} x={m.px} y={(model.size.value?.fontPx ?? 12) + 5}>
+                <text key={m.value} x={heldIn(m.px, m.text, scale.rightPx, fontPx)} y={fontPx + 5}>
                   {m.text}
                 </text>
               ),
@@ -51,4 +52,12 @@ export function DepthAxes({ model, rows }: { readonly model: StripModel; readonl
       })}
     </g>
   );
+}
+
+/** Room for a number behind the end of the plot, before the tools that stand there. */
+const ROOM_BEHIND_PX = 9;
+
+/** Where the middle of a number stands: at its mark, or so far before it that the number ends before the tools. */
+export function heldIn(px: number, text: string, rightPx: number, fontPx: number): number {
+  return Math.min(px, rightPx + ROOM_BEHIND_PX - (text.length * DIGIT_WIDTH * fontPx) / 2);
 }

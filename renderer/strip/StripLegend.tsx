@@ -1,9 +1,10 @@
 import { useComputed } from '@preact/signals';
 import { UNITS } from '../../shared-core/report/quantity.ts';
 import { useApp } from '../state/app.ts';
-import { countText } from '../ui/numberText.ts';
+import { P0_FIELD_ID, revealField } from '../ui/openSections.ts';
 import { unitText } from '../ui/unitText.ts';
 import { commonPower } from './densityScale.ts';
+import { p0Texts } from './p0Text.ts';
 import type { StripModel } from './stripModel.ts';
 import { powerOfTen } from './words.ts';
 
@@ -16,8 +17,7 @@ export function StripLegend({ model }: { readonly model: StripModel }) {
   const density = model.density.value;
   const log = model.upward.value === 'log';
   const power = profile === null || density.upward === 'log' ? 0 : commonPower(density.high);
-  const p0 = perH3 / (units.perH ? 1 : units.h ** UNITS.Mpc3.lengthPower);
-  const p0Unit = unitText(UNITS.Mpc3.plain[units.perH ? 1 : 0]);
+  const [perH, plain] = p0Texts(perH3, units);
   const counts = profile !== null && profile.power === null;
   return (
     <div class="strip-legend">
@@ -34,9 +34,11 @@ export function StripLegend({ model }: { readonly model: StripModel }) {
         {profile !== null && !profile.hasCurve ? null : (
           <>
             <span class="strip-swatch strip-swatch-line" aria-hidden="true" />
-            <span>smoothed,</span>
+            <span>smoothed</span>
             <span class="strip-swatch strip-swatch-strong" aria-hidden="true" />
-            <span>where nP₀ &gt; 1</span>
+            <span>
+              <span class="strip-wide">where </span>nP₀ &gt; 1
+            </span>
           </>
         )}
       </span>
@@ -51,7 +53,15 @@ export function StripLegend({ model }: { readonly model: StripModel }) {
       </button>
       {counts ? null : (
         <span class="strip-legend-right">
-          nP₀, <span class="strip-wide">with </span>P₀ = {countText(Math.round(p0))} {p0Unit}
+          nP₀, <span class="strip-wide">with </span>
+          <button
+            type="button"
+            class="link-button strip-p0"
+            title="The power at which effective volume and redshift are taken: press to set it"
+            onClick={() => revealField('cosmology', P0_FIELD_ID)}
+          >
+            P₀ = {perH} = {plain}
+          </button>
         </span>
       )}
     </div>

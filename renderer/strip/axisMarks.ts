@@ -10,7 +10,7 @@ interface AxisMark {
 }
 
 /** Width of a digit over the size of the type, of the tabular figures in use. */
-const DIGIT_WIDTH = 0.62;
+export const DIGIT_WIDTH = 0.62;
 const DIGITS_BETWEEN = 2;
 const LEAST_MARK_GAP_PX = 6;
 

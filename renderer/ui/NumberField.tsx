@@ -8,6 +8,8 @@ import './ui.css';
  */
 export function NumberField(props: {
   readonly label: string;
+  /** Of the input, where something leads to it. */
+  readonly inputId?: string;
   readonly unit?: string;
   readonly value: number | null;
   /** Whether the field may be empty; then `onCommit` gets null. */
@@ -17,7 +19,8 @@ export function NumberField(props: {
   readonly onCommit: (value: number | null) => string | null;
 }) {
   const { label, unit, value, optional = false, hint, onCommit } = props;
-  const id = useId();
+  const made = useId();
+  const id = props.inputId ?? made;
   const [draft, setDraft] = useState<{ text: string; of: number | null } | null>(null);
   const [trouble, setTrouble] = useState<{ sentence: string; of: number | null } | null>(null);
   // A draft belongs to the value it was typed over: undo, or another study, makes it stale.

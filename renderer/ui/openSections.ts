@@ -1,5 +1,8 @@
 import { type Signal, signal } from '@preact/signals';
 
+/** The field that sets P0. */
+export const P0_FIELD_ID = 'p0-field';
+
 const PREFIX = 'conewright.section.';
 const sections = new Map<string, Signal<boolean>>();
 
@@ -28,6 +31,17 @@ export function revealSection(id: string): void {
     const heading = document.getElementById(`section-${id}`);
     heading?.scrollIntoView({ block: 'start' });
     heading?.focus({ preventScroll: true });
+  });
+}
+
+/** Opens a section and takes the person to a field in it. */
+export function revealField(sectionId: string, fieldId: string): void {
+  setSectionOpen(sectionId, true);
+  requestAnimationFrame(() => {
+    const field = document.getElementById(fieldId);
+    field?.scrollIntoView({ block: 'center' });
+    field?.focus({ preventScroll: true });
+    if (field instanceof HTMLInputElement) field.select();
   });
 }
 

@@ -68,3 +68,32 @@ test('an edge that others bar the way of: which, and ways to have it there', asy
   await page.getByRole('button', { name: 'Remove edge 5 and move' }).click();
   expect(await edgesOf(page)).toEqual([0.5, 0.7, 0.9, 1.1, 1.3]);
 });
+
+test('an edge is typed where its number stands, and P0 is set from where it is said', async ({ desk }) => {
+  const page = await desk.open();
+  await ready(page);
+  const row = page.locator('tr[data-shell="1"]').first();
+  const field = page.getByRole('textbox', { name: 'Move this edge to' });
+  await row.getByRole('button', { name: /^z max/ }).dblclick();
+  await expect(field).toBeFocused();
+  await expect(field).toHaveValue('0.9');
+  await field.fill('0.95');
+  await field.press('Enter');
+  expect(await edgesOf(page)).toEqual([0.5, 0.7, 0.95, 1.1, 1.4, 2]);
+  await expect(field).toBeFocused();
+  await accessible(page, '.worth-panel');
+  // By keys: along the row, and Enter.
+  await row.focus();
+  await page.keyboard.press('ArrowRight');
+  await expect(row.getByRole('button', { name: /^z min/ })).toBeFocused();
+  await page.keyboard.press('Enter');
+  await expect(field).toBeFocused();
+  await expect(field).toHaveValue('0.7');
+
+  await page.getByRole('button', { name: /^P₀ = 10.000 \(Mpc\/h\)³ = 32.285 Mpc³/ }).click();
+  const p0 = page.getByRole('textbox', { name: 'P₀ of the FKP weight' });
+  await expect(p0).toBeFocused();
+  await page.keyboard.type('20000');
+  await page.keyboard.press('Enter');
+  await expect(page.getByRole('button', { name: /^P₀ = 20.000 \(Mpc\/h\)³ = 64.570 Mpc³/ })).toBeVisible();
+});

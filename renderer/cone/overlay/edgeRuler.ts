@@ -19,9 +19,11 @@ export function paintEdge(
   which: 'lookback' | 'redshift',
   awayFrom: Point = axisMiddle(pen, scene, lane),
 ): void {
+  const ticks = scene.scale.rulers[which];
   drawRuler(pen, {
     title: scene.scale.titles[which],
-    ticks: scene.scale.rulers[which],
+    // In a free view three rulers meet at the observer: the 0 of the comoving one speaks for all.
+    ticks: scene.aligned ? ticks : ticks.filter(({ comovingMpc }) => comovingMpc > 0),
     at: onEdge(scene, lane, edge),
     fromMpc: 0,
     toMpc: scene.farMpc,

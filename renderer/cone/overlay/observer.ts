@@ -2,6 +2,9 @@ import { project } from '../geometry/projection.ts';
 import type { Pen } from './pen.ts';
 import type { OverlayScene } from './scene.ts';
 
+/** Room beside the observer's name, in pixels. */
+const WORD_GAP_PX = 8;
+
 /** The observer: a small eye at the apex. */
 export function paintObserver(
   pen: Pen,
@@ -24,5 +27,11 @@ export function paintObserver(
     [0, 18],
     [0, -18],
   ] as const;
-  for (const [dx, dy] of places) if (pen.text('observer', p[0] + dx, p[1] + dy, pen.theme.inkMuted)) return;
+  for (const [dx, dy] of places) {
+    const [x, y] = [p[0] + dx, p[1] + dy];
+    if (!pen.text('observer', x, y, pen.theme.inkMuted)) continue;
+    // A number right beside the word would read as a part of it.
+    pen.labels.reserve({ x: x - half - WORD_GAP_PX, y: y - 6, width: 2 * (half + WORD_GAP_PX), height: 12 });
+    return;
+  }
 }

@@ -1,8 +1,10 @@
 import { useComputed } from '@preact/signals';
 import { useEffect, useRef } from 'preact/hooks';
 import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
-import { useApp } from '../../state/app.ts';
+import { type App, useApp } from '../../state/app.ts';
+import { focusSoon } from '../../ui/focusSoon.ts';
 import { ShellMark } from '../ShellMark.tsx';
+import { edgeTold, MOVE_EDGE_ID } from '../sheet/sheetLayout.ts';
 import type { LedgerColumn } from './ledgerColumns.ts';
 
 /** One shell's numbers, or (index null) those of one shell from the first edge to the last. */
@@ -15,7 +17,8 @@ export function LedgerRow(props: {
   readonly reachable: boolean;
 }) {
   const { index, shell, columns, texts, reachable } = props;
-  const { view } = useApp();
+  const app = useApp();
+  const { view } = app;
   const selected = useComputed(() => view.selectedShell.value === index).value;
   const hovered = useComputed(() => index !== null && view.hoveredShell.value === index).value;
 
@@ -30,6 +33,10 @@ export function LedgerRow(props: {
     if (selected && number !== null) view.explained.value = number.dataset.quantity ?? null;
     view.selectedShell.value = index;
   };
+  const onDblClick = (event: MouseEvent): void => {
+    const number = (event.target as HTMLElement).closest<HTMLElement>('.ledger-edge');
+    if (number !== null) typeEdge(app, index, number.dataset.quantity!);
+  };
   return (
     <tr
       ref={row}
@@ -38,6 +45,7 @@ export function LedgerRow(props: {
       aria-selected={selected}
       tabIndex={reachable ? 0 : -1}
       onClick={onClick}
+      onDblClick={onDblClick}
       onFocus={() => void (view.hoveredShell.value = index)}
       onBlur={() => void (view.hoveredShell.value = null)}
       onPointerEnter={() => void (view.hoveredShell.value = index)}
@@ -52,18 +60,40 @@ export function LedgerRow(props: {
       </th>
       {columns.map((column) => (
         <td key={column.quantities[0]!.key}>
-          {column.quantities.map((q) => (
-            <span
-              key={q.key}
-              class="ledger-value"
-              data-quantity={q.key}
-              {...(selected ? { title: `${q.meaning} Press for the explanation.` } : {})}
-            >
-              {texts.get(q.key)!(shell)}
-            </span>
-          ))}
+          {column.quantities.map((q) => {
+            const text = texts.get(q.key)?.(shell);
+            return edgeTold(q.key, index, 0) === null ? (
+              <span
+                key={q.key}
+                class="ledger-value"
+                data-quantity={q.key}
+                {...(selected ? { title: `${q.meaning} Press for the explanation.` } : {})}
+              >
+                {text}
+              </span>
+            ) : (
+              <button
+                key={q.key}
+                type="button"
+                tabIndex={-1}
+                class="ledger-value ledger-edge"
+                data-quantity={q.key}
+                aria-label={`${q.title} ${text}: type another place`}
+                title={`${q.meaning} Double-click, or Enter, to type another place.`}
+              >
+                {text}
+              </button>
+            );
+          })}
         </td>
       ))}
     </tr>
   );
+}
+
+/** Opens the explanation of an edge's number, at the field that moves the edge. */
+export function typeEdge({ view }: App, shell: number | null, quantityKey: string): void {
+  view.selectedShell.value = shell;
+  view.explained.value = quantityKey;
+  focusSoon(MOVE_EDGE_ID);
 }

@@ -5,11 +5,14 @@ import { useApp } from '../../state/app.ts';
 import { Icon } from '../../ui/Icon.tsx';
 import { Subscripted } from '../../ui/Subscripted.tsx';
 import { unitText } from '../../ui/unitText.ts';
-import { LedgerRow } from './LedgerRow.tsx';
+import { LedgerRow, typeEdge } from './LedgerRow.tsx';
 import type { LedgerColumn } from './ledgerColumns.ts';
 import { type LedgerOrder, nextOrder, sortShells } from './sortShells.ts';
 
-/** The shells as rows. Arrow keys walk and choose; a heading sorts; a number of the chosen row opens its explanation. */
+/**
+ * The shells as rows. Arrow keys walk and choose; a heading sorts; a number of the chosen row opens its explanation, and
+ * the place of an edge, pressed twice or with Enter, the field that moves it.
+ */
 export function LedgerTable(props: {
   readonly label: string;
   readonly columns: readonly LedgerColumn[];
@@ -17,7 +20,8 @@ export function LedgerTable(props: {
   readonly onEnter: () => void;
 }) {
   const { label, columns, order, onEnter } = props;
-  const { derived, view, engine } = useApp();
+  const app = useApp();
+  const { derived, view, engine } = app;
   // Until the galaxies are those of the study, its numbers are of something else: shown faint.
   const reading = !engine.fresh.value && engine.failure.value === null;
   const shells = derived.shells.value;
@@ -33,9 +37,21 @@ export function LedgerTable(props: {
   const onKeyDown = (event: KeyboardEvent): void => {
     const row = (event.target as HTMLElement).closest<HTMLElement>('tr[data-shell]');
     if (row === null || event.ctrlKey || event.metaKey || event.altKey) return;
+    const edge = (event.target as HTMLElement).closest<HTMLElement>('.ledger-edge');
     if (event.key === 'Enter' || event.key === ' ') {
       event.preventDefault();
-      onEnter();
+      if (edge === null) onEnter();
+      else typeEdge(app, shellOfRow(row), edge.dataset.quantity!);
+      return;
+    }
+    // Across a row, from the row itself to the places of its edges.
+    const across = { ArrowRight: 1, ArrowLeft: -1 }[event.key];
+    if (across !== undefined) {
+      const stops = [row, ...row.querySelectorAll<HTMLElement>('.ledger-edge')];
+      const to = stops[stops.indexOf(edge ?? row) + across];
+      if (to === undefined) return;
+      event.preventDefault();
+      to.focus();
       return;
     }
     const all = [...(row.closest('table')?.querySelectorAll<HTMLElement>('tr[data-shell]') ?? [])];

@@ -118,7 +118,7 @@ export function RegionSection() {
                 focusSoon(ADD_ID);
               }}
             >
-              None
+              Clear region
             </button>
           )}
         </div>

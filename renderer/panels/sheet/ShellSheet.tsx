@@ -11,7 +11,7 @@ import { Explanation } from './Explanation.tsx';
 import { type ExplainedShell, shellQuantity } from './explain.ts';
 import { SheetNumber } from './SheetNumber.tsx';
 import { ShellDrawing } from './ShellDrawing.tsx';
-import { EDGE_ROWS, SHEET_GROUPS } from './sheetLayout.ts';
+import { EDGE_ROWS, edgeTold, SHEET_GROUPS } from './sheetLayout.ts';
 import { shellWarnings } from './warnings.ts';
 
 /** Everything about the chosen shell; about all of them as one while none is chosen. */
@@ -110,7 +110,9 @@ export function ShellSheet() {
             </span>
             {number(near)}
             {number(far)}
-            {explained === near || explained === far ? <Explanation quantityKey={explained} of={of} /> : null}
+            {explained === near || explained === far ? (
+              <Explanation quantityKey={explained} of={of} edge={edgeTold(explained, index, shells.length)} />
+            ) : null}
           </div>
         ))}
       </div>

@@ -10,6 +10,7 @@ import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts
 import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
 import type { ShellConditions } from '../../../shared-core/shells/statistics.ts';
 import type { FootprintPicture } from '../../engine/protocol.ts';
+import { p0Texts } from '../../strip/p0Text.ts';
 import { unitText } from '../../ui/unitText.ts';
 
 /** One thing that went into a number, as it was for this shell. */
@@ -84,7 +85,7 @@ function input(
     case 'cosmology':
       return { name: 'cosmology', text: cosmologyName, unit: '' };
     case 'p0':
-      return { name: 'P0', text: String(conditions.p0Mpc3PerH3), unit: '(Mpc/h)^3' };
+      return { name: 'P0', text: p0Texts(conditions.p0Mpc3PerH3, units).join(' = '), unit: '' };
     case 'area': {
       const { value, error } = areaText({ areaDeg2: conditions.areaDeg2, estimate });
       return {

@@ -1,7 +1,10 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { captionLines, sidewaysText } from '../../../renderer/cone/caption.ts';
+import { paintEdge } from '../../../renderer/cone/overlay/edgeRuler.ts';
 import { LabelPlacer } from '../../../renderer/cone/overlay/labelPlacer.ts';
+import { paintObserver } from '../../../renderer/cone/overlay/observer.ts';
+import { Pen } from '../../../renderer/cone/overlay/pen.ts';
 import { roundLengthMpc } from '../../../renderer/cone/overlay/scaleBar.ts';
 
 describe('labels', () => {
@@ -80,5 +83,48 @@ describe('the caption', () => {
 
   it('tells an estimate from a given outline', () => {
     expect(captionLines({ ...plain, estimated: true }).join()).toMatch(/estimated/);
+  });
+});
+
+describe('texts where rulers meet at the observer', () => {
+  const written: string[] = [];
+  /** A canvas that remembers its texts; each letter is 6 px wide. */
+  const context = new Proxy({} as CanvasRenderingContext2D, {
+    get: (_, name) =>
+      name === 'measureText'
+        ? (text: string) => ({ width: 6 * text.length })
+        : (text: unknown) => void (name === 'fillText' && written.push(String(text))),
+    set: () => true,
+  });
+  const pixels = Float64Array.of(100, 0, 0, 100, 0, 100, 0, 100, 0, 0, 0, 1);
+  const ticks = [0, 0.5, 1].map((comovingMpc) => ({ comovingMpc, text: String(comovingMpc), level: 0 }));
+  const scene = (aligned: boolean) =>
+    ({
+      aligned,
+      pixels,
+      farMpc: 1,
+      radius: (mpc: number) => mpc,
+      scale: { titles: { redshift: '' }, rulers: { redshift: ticks } },
+    }) as unknown as Parameters<typeof paintEdge>[1];
+  const lane = { matrix: pixels, lift: 0, shape: { centre: [0, 1, 0] } } as unknown as Parameters<
+    typeof paintEdge
+  >[2];
+  const newPen = () => {
+    written.length = 0;
+    return new Pen(context, {} as ConstructorParameters<typeof Pen>[1], 400, 400);
+  };
+  it('say the 0 of an edge only side-on, where no other ruler begins there', () => {
+    paintEdge(newPen(), scene(true), lane, [1, 0, 0], 'redshift');
+    expect(written).toEqual(['0', '0.5', '1']);
+    paintEdge(newPen(), scene(false), lane, [1, 0, 0], 'redshift');
+    expect(written).toEqual(['0.5', '1']);
+  });
+  it('keep a number off the name of the observer', () => {
+    const pen = newPen();
+    paintObserver(pen, scene(false), { lift: 0 }, true);
+    expect(written).toEqual(['observer']);
+    // The name is 48 px wide and begins 8 px beside the observer, at 100.
+    expect(pen.text('9', 100 + 8 + 48 + 3 + 6, 76, '')).toBe(false);
+    expect(pen.text('9', 100 + 8 + 48 + 3 + 14, 76, '')).toBe(true);
   });
 });

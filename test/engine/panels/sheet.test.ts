@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { explain } from '../../../renderer/panels/sheet/explain.ts';
+import { edgeTold } from '../../../renderer/panels/sheet/sheetLayout.ts';
 import { roundLength, shellOutline } from '../../../renderer/panels/sheet/shellOutline.ts';
 import { shellWarnings } from '../../../renderer/panels/sheet/warnings.ts';
 import { shownText } from '../../../shared-core/report/quantity.ts';
@@ -163,5 +164,17 @@ describe('the drawing of a shell', () => {
       expect(bar).toBeLessThanOrEqual(most * (1 + 1e-12));
       expect(bar * 2.5).toBeGreaterThanOrEqual(most * (1 - 1e-12));
     }
+  });
+});
+
+describe('a number that tells the place of an edge', () => {
+  it('knows which edge, and in what it is typed', () => {
+    expect(edgeTold('zMin', 1, 5)).toEqual({ index: 1, unit: 'redshift' });
+    expect(edgeTold('zMax', 1, 5)).toEqual({ index: 2, unit: 'redshift' });
+    expect(edgeTold('comovingMaxMpc', null, 5)).toEqual({ index: 5, unit: 'comoving' });
+    expect(edgeTold('lookbackMinGyr', null, 5)).toEqual({ index: 0, unit: 'lookback' });
+    // An age is no reading of the depth: its edge is typed as a redshift.
+    expect(edgeTold('ageMaxGyr', 0, 5)).toEqual({ index: 1, unit: 'redshift' });
+    expect(edgeTold('volumeMpc3', 0, 5)).toBeNull();
   });
 });

@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { binsOf, binsWanted } from '../../../renderer/strip/bins.ts';
+import { heldIn } from '../../../renderer/strip/DepthAxes.tsx';
 import {
   commonPower,
   densityMarks,
@@ -8,7 +9,9 @@ import {
   greatestDensity,
   proposedUpward,
 } from '../../../renderer/strip/densityScale.ts';
+import { densityText } from '../../../renderer/strip/densityText.ts';
 import { radialPixel } from '../../../renderer/strip/layout.ts';
+import { p0Texts } from '../../../renderer/strip/p0Text.ts';
 import { drawnAxis, readingsOf } from '../../../renderer/strip/readings.ts';
 import {
   binTexts,
@@ -185,5 +188,25 @@ describe('words of the strip', () => {
     ).toBe(
       '120 galaxies are in view. The smoothed density is highest near redshift 0.61, 3.00×10⁻⁴ Mpc⁻³. nP₀ is above 1 between 0.4 and 0.9.',
     );
+  });
+});
+
+describe('numbers beside the plot', () => {
+  it('are short, however great or small the density is', () => {
+    expect(densityText(0.5, 'linear', 0)).toBe('0.5');
+    expect(densityText(2e-4, 'linear', -4)).toBe('2');
+    expect(densityText(2_500_000, 'linear', 0)).toBe('2.5×10⁶');
+    expect(densityText(4e-9, 'linear', 0)).toBe('4×10⁻⁹');
+    expect(densityText(1e-6, 'log', 0)).toBe('10⁻⁶');
+    expect(densityText(0.01, 'log', 0)).toBe('0.01');
+  });
+  it('end before the tools behind the plot', () => {
+    expect(heldIn(500, '1000', 528, 12)).toBe(500);
+    // Half of four digits of 0.62 em: 14.88 px before 528 + 9.
+    expect(heldIn(528, '1000', 528, 12)).toBeCloseTo(522.12, 9);
+  });
+  it('say P0 in both units: 10 000 (Mpc/h)³ is 10 000 / h³ Mpc³', () => {
+    expect(p0Texts(10_000, { h: 0.5 })).toEqual(['10\u202f000 (Mpc/h)³', '80\u202f000 Mpc³']);
+    expect(p0Texts(0.125, { h: 0.5 })).toEqual(['0.125 (Mpc/h)³', '1 Mpc³']);
   });
 });
