@@ -18,6 +18,7 @@ export type LedgerFormat = (typeof LEDGER_FORMATS)[number];
 
 /** Writes the ledger to a file that the person names. */
 export async function exportLedger(app: App, format: LedgerFormat): Promise<void> {
+  if (refusedAsStale(app)) return;
   const text = ledgerText(app, format.key);
   const name = `${app.studyState.study.value.name} shells${format.suffix}`;
   await app.files.exportFile(name, format.mimeType, new TextEncoder().encode(text));
@@ -34,6 +35,7 @@ type LedgerCopy = (typeof LEDGER_COPIES)[number]['key'];
 
 /** Puts the ledger on the clipboard: tabs and every digit for a spreadsheet, or aligned and rounded for reading. */
 export async function copyLedger(app: App, as: LedgerCopy): Promise<void> {
+  if (refusedAsStale(app)) return;
   const table = currentLedgerTable(app);
   const text = as === 'tabs' ? asTsv(table) : ledgerText(app, as);
   const done = await copyText(text);
@@ -43,6 +45,13 @@ export async function copyLedger(app: App, as: LedgerCopy): Promise<void> {
       : 'The browser did not let the ledger onto the clipboard: export it to a file instead.',
     { tone: done ? 'fact' : 'problem' },
   );
+}
+
+/** Cuts and region are the study's at once, its galaxies a moment later: between, the notes would not be of the numbers. */
+function refusedAsStale({ engine, notices }: App): boolean {
+  if (engine.fresh.value) return false;
+  notices.tell('The galaxies of the study as it stands are not read yet: give the ledger out once they are.');
+  return true;
 }
 
 function ledgerText(app: App, key: LedgerFormat['key']): string {

@@ -1,8 +1,10 @@
 import { describe, expect, it } from 'vitest';
 import { NARROW_LEDGER, WHOLE_LEDGER } from '../../../renderer/panels/ledger/ledgerColumns.ts';
+import { copyLedger, exportLedger, LEDGER_FORMATS } from '../../../renderer/panels/ledger/ledgerFormats.ts';
 import { asTsv, ledgerJson, ledgerTable } from '../../../renderer/panels/ledger/ledgerTable.ts';
 import { nextOrder, sortShells } from '../../../renderer/panels/ledger/sortShells.ts';
 import { SHEET_GROUPS, SHEET_KEYS } from '../../../renderer/panels/sheet/sheetLayout.ts';
+import type { App } from '../../../renderer/state/app.ts';
 import { LEDGER_QUANTITIES } from '../../../shared-core/report/ledgerQuantities.ts';
 import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
 import { emptyStudy } from '../../../shared-core/study/document.ts';
@@ -93,6 +95,19 @@ describe('the ledger on the clipboard', () => {
         // An empty cell for no number; else the text reads back to the very number.
         expect(cell === '' ? null : Number(cell)).toBe(quantity.value(shell));
       }
+  });
+
+  it('is not given out while its galaxies are of another selection than its notes', async () => {
+    const told: string[] = [];
+    const app = {
+      engine: { fresh: { value: false } },
+      notices: { tell: (sentence: string) => void told.push(sentence) },
+    } as unknown as App;
+    // Anything of the ledger that was asked for would throw: the app has none.
+    await exportLedger(app, LEDGER_FORMATS[0]);
+    await copyLedger(app, 'tabs');
+    expect(told).toHaveLength(2);
+    expect(told[0]).toMatch(/not read yet/);
   });
 
   it('says Mpc/h in its names when lengths are in Mpc/h', () => {
