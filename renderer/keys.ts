@@ -82,7 +82,8 @@ function run(app: App, command: KeyCommand): boolean {
       return stepShell(app, command === 'nextShell' ? 1 : -1);
     case 'noShell':
       if (app.cancelReading()) return true;
-      if (view.explained.value !== null) view.explained.value = null;
+      if (view.measuring.value) view.measuring.value = false;
+      else if (view.explained.value !== null) view.explained.value = null;
       else view.selectedShell.value = null;
       return true;
     case 'nextField': {

@@ -1,10 +1,10 @@
 import { Dialog } from '../ui/Dialog.tsx';
 import { KEY_HELP } from './keyTable.ts';
 
-/** Which key does what. */
+/** Which key, and which hand on the mouse, does what. */
 export function KeysDialog({ onClose }: { readonly onClose: () => void }) {
   return (
-    <Dialog title="Keys" kind="middle" onClose={onClose}>
+    <Dialog title="Keys and mouse" kind="middle" onClose={onClose}>
       <div class="keys">
         {KEY_HELP.map(({ title, rows }) => (
           <section key={title} aria-label={title}>

@@ -15,7 +15,7 @@ export interface KeyHelp {
   readonly does: string;
 }
 
-/** Every key of the window, for the person who asks. */
+/** Every key of the window, and what the mouse does, for the person who asks. */
 export const KEY_HELP: readonly { readonly title: string; readonly rows: readonly KeyHelp[] }[] = [
   {
     title: 'Study',
@@ -36,6 +36,7 @@ export const KEY_HELP: readonly { readonly title: string; readonly rows: readonl
       { keys: ['['], does: 'choose the shell before' },
       { keys: [']'], does: 'choose the shell after' },
       { keys: ['Esc'], does: 'choose none' },
+      { keys: ['→', 'Enter'], does: 'in the ledger, to the edges of the row; type one' },
     ],
   },
   {
@@ -62,6 +63,24 @@ export const KEY_HELP: readonly { readonly title: string; readonly rows: readonl
       { keys: ['R'], does: 'radius as distance, redshift, lookback time' },
       { keys: ['H'], does: 'Mpc or Mpc/h' },
       { keys: ['?'], does: 'these keys' },
+    ],
+  },
+  {
+    title: 'Mouse in the cone',
+    rows: [
+      { keys: ['click'], does: 'pick galaxy and shell' },
+      { keys: ['Shift+click'], does: 'measure to a second galaxy; Esc ends measuring' },
+      { keys: ['drag'], does: 'turn' },
+      { keys: ['Shift+drag'], does: 'shift' },
+      { keys: ['wheel'], does: 'nearer, farther' },
+    ],
+  },
+  {
+    title: 'Mouse in strip and ledger',
+    rows: [
+      { keys: ['drag'], does: 'move an edge; else shift the view' },
+      { keys: ['double-click'], does: 'an edge: type it; elsewhere in the strip: add one' },
+      { keys: ['wheel'], does: 'less depth, more' },
     ],
   },
 ];

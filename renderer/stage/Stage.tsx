@@ -10,6 +10,7 @@ import { readingsOf } from '../strip/readings.ts';
 import { colouring, coneFootprint, coneShells, radialScale, VIEW_NAMES } from './coneInputs.ts';
 import { GalaxyCard } from './GalaxyCard.tsx';
 import { ownColouring } from './ownColouring.ts';
+import { type Picks, picksAfter } from './picking.ts';
 import { readTheme } from './readTheme.ts';
 import { StageBar } from './StageBar.tsx';
 import { separationText } from './separationText.ts';
@@ -30,18 +31,23 @@ export function Stage() {
     null,
   );
 
+  const picks = useSignal<Picks>([]);
+
   useEffect(() => {
     const made = new ConeView(place.current!, {
       onHover: (hit) => (hovered.value = hit),
       onPick: (hit, extend) => {
-        const [first] = view.pickedGalaxies.value;
-        if (hit === null) view.pickedGalaxies.value = [];
-        else
-          view.pickedGalaxies.value =
-            extend && first !== undefined && first !== hit.index ? [first, hit.index] : [hit.index];
+        const measuring = view.measuring.value;
+        // Picks given up elsewhere are none here either.
+        const before = picks.value.filter(({ index }) => view.pickedGalaxies.value.includes(index));
+        picks.value = picksAfter(before, hit, extend || measuring);
+        view.pickedGalaxies.value = picks.value.map(({ index }) => index);
+        if (picks.value.length > 1) view.measuring.value = false;
       },
       onHoverShell: (index) => (view.hoveredShell.value = index),
-      onPickShell: (index) => (view.selectedShell.value = index),
+      onPickShell: (index) => {
+        if (!view.measuring.value) view.selectedShell.value = index;
+      },
       onAxisWindow: ({ min, max }) => {
         const axis = derived.axis.value;
         view.redshiftWindow.value = [axis.redshiftAt(Math.max(0, min)), axis.redshiftAt(max)];
@@ -159,8 +165,8 @@ export function Stage() {
   return (
     <div class="stage-frame">
       <StageBar coneState={coneState} colours={colours} />
-      <div class="stage-cone" ref={place} />
-      <GalaxyCard hovered={hovered} />
+      <div class={view.measuring.value ? 'stage-cone stage-measuring' : 'stage-cone'} ref={place} />
+      <GalaxyCard hovered={hovered} picks={picks} />
       {trouble.value === null ? null : (
         <p class="stage-notice" role="status">
           {trouble.value}

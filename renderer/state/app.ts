@@ -76,6 +76,7 @@ export function createApp(
   effect(() => {
     void engine.selected.value;
     view.pickedGalaxies.value = [];
+    view.measuring.value = false;
   });
   return {
     bridge,

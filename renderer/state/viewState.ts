@@ -26,6 +26,8 @@ export interface ViewState {
   readonly hoveredShell: Signal<number | null>;
   /** Index, by redshift, of the galaxies pointed at: the first, and the one that it is measured to. */
   readonly pickedGalaxies: Signal<readonly number[]>;
+  /** Whether the next click on a galaxy measures to it. */
+  readonly measuring: Signal<boolean>;
   /** The part of the radial axis in view, in redshift; null shows all. Cone and strip share it. */
   readonly redshiftWindow: Signal<readonly [number, number] | null>;
   readonly theme: Signal<'light' | 'dark'>;
@@ -52,6 +54,7 @@ export function createViewState(theme: 'light' | 'dark'): ViewState {
     selectedShell: signal(null),
     hoveredShell: signal(null),
     pickedGalaxies: signal([]),
+    measuring: signal(false),
     redshiftWindow: signal(null),
     theme: signal(theme),
     field: signal(0),

@@ -1,0 +1,14 @@
+import type { GalaxyHit } from '../cone/types.ts';
+
+/** The galaxies pointed out, as they were hit: the first, and the one that it is measured to. */
+export type Picks = readonly GalaxyHit[];
+
+/**
+ * What is pointed out after a click.
+ * @param second whether the click means a second galaxy, to be measured to
+ */
+export function picksAfter(picks: Picks, hit: GalaxyHit | null, second: boolean): Picks {
+  const [first] = picks;
+  if (!second || first === undefined) return hit === null ? [] : [hit];
+  return hit === null || hit.index === first.index ? picks : [first, hit];
+}
