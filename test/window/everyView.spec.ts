@@ -52,7 +52,7 @@ test('axe finds nothing in any view, dark and light: the window and its panels',
   await page.getByRole('textbox', { name: 'from', exact: true }).fill('bright');
   await page.keyboard.press('Enter');
   await expect(page.getByText('from is "bright": give a number such as 0.5 or 1e4.')).toBeVisible();
-  await page.getByText('field', { exact: true }).click();
+  await page.locator('.sky-head').getByText('field', { exact: true }).click();
   await bothThemes(page, '.desk', 'columns, a cut that is refused, the sky map fitted');
   await page.getByRole('button', { name: 'Look at 20 rows…' }).click();
   await expect(page.locator('.preview-table tbody tr')).toHaveCount(20);
