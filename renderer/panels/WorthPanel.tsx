@@ -11,6 +11,7 @@ import { NARROW_LEDGER } from './ledger/ledgerColumns.ts';
 import { copyLedger, LEDGER_COPIES } from './ledger/ledgerFormats.ts';
 import type { LedgerOrder } from './ledger/sortShells.ts';
 import { WideLedger } from './ledger/WideLedger.tsx';
+import { whyWithheld } from './notAtHand.ts';
 import { ShellSheet } from './sheet/ShellSheet.tsx';
 import './panels.css';
 import './ledger/ledger.css';
@@ -19,7 +20,7 @@ import './sheet/sheet.css';
 /** What the shells are worth: the ledger, and the sheet of the chosen shell. */
 export function WorthPanel() {
   const app = useApp();
-  const { engine } = app;
+  const withheld = useComputed(() => whyWithheld(app)).value;
   const [wide, setWide] = useState(false);
   const order = useSignal<LedgerOrder | null>(null);
   const count = useComputed(() => app.derived.shells.value.length).value;
@@ -31,8 +32,8 @@ export function WorthPanel() {
           <h2 id="ledger-title">Shell ledger</h2>
           <Menu
             label="Copy the ledger"
-            title="Copy the ledger"
-            disabled={count === 0 || !engine.fresh.value}
+            title={withheld ?? 'Copy the ledger'}
+            disabled={withheld !== null}
             entries={LEDGER_COPIES.map(({ key, label, hint }) => ({
               kind: 'item',
               label,

@@ -9,6 +9,7 @@ import { radialPixel, STRIP_LEFT_PX, STRIP_RIGHT_PX, shownWindow } from '../stri
 import { readingsOf } from '../strip/readings.ts';
 import { colouring, coneFootprint, coneShells, radialScale, VIEW_NAMES } from './coneInputs.ts';
 import { GalaxyCard } from './GalaxyCard.tsx';
+import { MissingCatalogue } from './MissingCatalogue.tsx';
 import { ownColouring } from './ownColouring.ts';
 import { type Picks, picksAfter } from './picking.ts';
 import { readTheme } from './readTheme.ts';
@@ -20,7 +21,7 @@ const NO_FOOTPRINT: FootprintInput = { fields: [], wide: false };
 /** Mounts the cone and keeps it in step with the study, the strip and the ledger. */
 export function Stage() {
   const app = useApp();
-  const { studyState, derived, engine, view } = app;
+  const { studyState, derived, engine, view, files } = app;
   const place = useRef<HTMLDivElement>(null);
   const cone = useSignal<ConeView | null>(null);
   const coneState = useSignal<ConeState | null>(null);
@@ -177,7 +178,11 @@ export function Stage() {
           Shells cannot be drawn in 3D now ({drawing.value.reason}); everything else goes on working.
         </p>
       ) : null}
-      {footprint.value === null && engine.selected.value === null && engine.progress.value === null ? (
+      <MissingCatalogue />
+      {footprint.value === null &&
+      files.missingSource.value === null &&
+      engine.selected.value === null &&
+      engine.progress.value === null ? (
         <p class="stage-empty">
           {studyState.study.value.source === null
             ? 'Open a catalogue, or drop a file here, and its cone is drawn.'

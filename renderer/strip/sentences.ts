@@ -3,13 +3,19 @@ import type { ShownProfile } from './stripModel.ts';
 import type { ProfileWords } from './words.ts';
 
 /** Why there is no histogram, and what to do while there are no shells; null where there is nothing to say. */
-export function stripSentence({ studyState, engine, derived }: App): {
+export function stripSentence({ studyState, engine, derived, files }: App): {
   readonly empty: string | null;
   readonly hint: string | null;
 } {
   const { source, edges } = studyState.study.value;
+  const missing = files.missingSource.value !== null;
   return {
-    empty: derived.sample.value.count > 0 ? null : emptySentence(source === null, edges.length > 1, engine),
+    empty:
+      derived.sample.value.count > 0
+        ? null
+        : missing
+          ? NOT_AT_HAND
+          : emptySentence(source === null, edges.length > 1, engine),
     hint:
       edges.length === 0
         ? 'No shells yet: double-click to set an edge, or choose equal shells above.'
@@ -18,6 +24,8 @@ export function stripSentence({ studyState, engine, derived }: App): {
           : null,
   };
 }
+
+const NOT_AT_HAND = 'The catalogue is not at hand: no galaxies to count.';
 
 function emptySentence(noSource: boolean, hasShells: boolean, { progress, loaded }: App['engine']): string {
   if (noSource)

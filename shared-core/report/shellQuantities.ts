@@ -232,3 +232,21 @@ export const SHELL_QUANTITIES: readonly Quantity<ShellStatistics>[] = [
     source: PRACTICE,
   },
 ];
+
+const OF_EDGES_AND_AREA: ReadonlySet<string> = new Set([
+  'zMin',
+  'zMax',
+  'comovingMinMpc',
+  'comovingMaxMpc',
+  'lookbackMinGyr',
+  'lookbackMaxGyr',
+  'ageMinGyr',
+  'ageMaxGyr',
+  'volumeMpc3',
+  'fundamentalWavenumberPerMpc',
+]);
+
+/** The same without a catalogue: what follows from edges, area and cosmology has its number, galaxies have none. */
+export const PLAN_QUANTITIES: readonly Quantity<ShellStatistics>[] = SHELL_QUANTITIES.map((quantity) =>
+  OF_EDGES_AND_AREA.has(quantity.key) ? quantity : { ...quantity, value: () => null },
+);

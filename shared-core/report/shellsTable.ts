@@ -13,7 +13,7 @@ import {
   describeMethod,
 } from './notes.ts';
 import type { ShownUnits } from './quantity.ts';
-import { SHELL_QUANTITIES } from './shellQuantities.ts';
+import { PLAN_QUANTITIES, SHELL_QUANTITIES } from './shellQuantities.ts';
 import { shellsMeta } from './shellsJson.ts';
 import type { Table } from './table.ts';
 
@@ -42,7 +42,7 @@ export function shellsTable(facts: ShellsFacts): Table<ShellStatistics> {
   const { shells, all, units, account, mapping, cuts, region, footprint, cosmology, set } = facts;
   return {
     rows: shells,
-    quantities: SHELL_QUANTITIES,
+    quantities: account === null ? PLAN_QUANTITIES : SHELL_QUANTITIES,
     units,
     numbered: 'shell',
     all,

@@ -73,7 +73,7 @@ test('a study whose catalogue is not there asks for it and keeps everything', as
   );
   const again = await desk.open({ files: [moved] });
   await expect(again.getByText(/gone\.csv/).first()).toBeVisible();
-  await expect(again.getByRole('button', { name: /point/i })).toBeVisible();
+  await expect(again.locator('.stage').getByRole('button', { name: 'Point at it…' })).toBeVisible();
   await accessible(again, '.desk');
   // The shells are the study's own; only the galaxies are missing.
   await expect(ledger(again).locator('tbody tr')).toHaveCount(0);

@@ -115,7 +115,7 @@ test("a catalogue of one's own: open, region, drag an edge, undo, save, reopen, 
   await expect(again.getByText(/shapley\.csv/).first()).toBeVisible();
   const [pointed] = await Promise.all([
     again.waitForEvent('filechooser'),
-    again.getByRole('button', { name: /point/i }).click(),
+    again.locator('.stage').getByRole('button', { name: 'Point at it…' }).click(),
   ]);
   await pointed.setFiles(SHAPLEY);
   await ready(again);

@@ -1,4 +1,4 @@
-import { copyFileSync, existsSync, readFileSync } from 'node:fs';
+import { copyFileSync, existsSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import type { Page } from '@playwright/test';
@@ -59,6 +59,7 @@ test('another catalogue in a saved study takes the title, and Save asks before i
   await page.getByRole('dialog').getByRole('button', { name: 'Save' }).click();
   const path = join(desk.folder, 'Supercluster.study.json');
   await expect.poll(() => existsSync(path)).toBe(true);
+  await expect(page.getByText('not saved', { exact: true })).toHaveCount(0);
   const saved = readFileSync(path, 'utf8');
 
   await drop(page, 'other.csv', OTHER);
@@ -91,4 +92,65 @@ test('another catalogue in a saved study takes the title, and Save asks before i
   await expect(page.getByText('not saved', { exact: true })).toHaveCount(0);
   await expect(page.getByRole('dialog')).toHaveCount(0);
   expect(JSON.parse(readFileSync(path, 'utf8')).edges).toEqual(JSON.parse(saved).edges);
+});
+
+test('without its catalogue a study gives no numbers of galaxies, says so in one way, and points the way to it', async ({
+  desk,
+}) => {
+  const page = await desk.open();
+  await ready(page);
+  await drop(page, 'shapley.csv', readFileSync(SHAPLEY, 'utf8'));
+  await expect(page.locator('.engine-line')).toHaveText(/4.212 kept/);
+  await page.getByRole('button', { name: /^z: shells of equal/ }).click();
+  await page.keyboard.press('Control+s');
+  await page.getByRole('dialog').getByRole('button', { name: 'Save' }).click();
+  // A browser does not say where the file lies: told once.
+  const apart = page.getByText(/“shapley\.csv” is not within the study/);
+  await expect(apart).toBeVisible();
+  await apart.locator('..').getByRole('button', { name: 'Dismiss' }).click();
+  const path = join(desk.folder, 'shapley.study.json');
+  await expect(page.getByText('not saved', { exact: true })).toHaveCount(0);
+  const study = JSON.parse(readFileSync(path, 'utf8'));
+  await page.getByLabel('Name of the study').fill('again');
+  await page.keyboard.press('Enter');
+  await page.keyboard.press('Control+s');
+  await expect.poll(() => JSON.parse(readFileSync(path, 'utf8')).name).toBe('again');
+  await expect(apart).toHaveCount(0);
+
+  const box = { kind: 'box', raMinDeg: 190, raMaxDeg: 210, decMinDeg: -38, decMaxDeg: -26 };
+  writeFileSync(path, JSON.stringify({ ...study, region: { parts: [box], holes: [] } }));
+  const bare = await desk.open({
+    files: [path],
+    init: () => localStorage.setItem('conewright.section.source', 'closed'),
+  });
+  const stage = bare.locator('.stage-missing');
+  await expect(stage).toContainText('The catalogue “shapley.csv” is not at hand.');
+  await expect(bare.locator('#fold-source')).toContainText('The catalogue “shapley.csv” is not at hand.');
+  await expect(bare.locator('.engine-line')).toHaveText('catalogue not at hand');
+  await expect(bare.getByText('The catalogue is not at hand: no galaxies to count.')).toBeVisible();
+  const cell = (key: string) => bare.locator(`tr[data-shell="0"] [data-quantity=${key}]`);
+  for (const key of ['count', 'zEffective', 'densityPerMpc3', 'densityErrorPerMpc3', 'effectiveVolumeMpc3'])
+    await expect(cell(key)).toHaveText('-');
+  await expect(cell('volumeMpc3')).toHaveText(/^\d/);
+  await expect(bare.locator('.sheet [data-quantity=count]')).toHaveText('-');
+  const copy = bare.getByRole('button', { name: 'Copy', exact: true });
+  await expect(copy).toBeDisabled();
+  await expect(copy).toHaveAttribute('title', /not at hand\. Point at it/);
+  const menu = bare.getByRole('button', { name: 'Export', exact: true });
+  await expect(menu).toHaveAttribute('title', /not at hand\. Point at it/);
+  await menu.click();
+  await expect(bare.getByRole('menuitem', { name: /^CSV/ })).toBeDisabled();
+  await bare.keyboard.press('Escape');
+  await accessible(bare);
+  await bare.getByRole('button', { name: 'Light theme' }).click();
+
+  const [chooser] = await Promise.all([
+    bare.waitForEvent('filechooser'),
+    stage.getByRole('button', { name: 'Point at it…' }).click(),
+  ]);
+  await chooser.setFiles(SHAPLEY);
+  await ready(bare);
+  await expect(stage).toHaveCount(0);
+  await expect(cell('count')).toHaveText(/^\d+$/);
+  await expect(copy).toBeEnabled();
 });

@@ -1,4 +1,5 @@
 import { useEffect, useState } from 'preact/hooks';
+import type { EngineClient } from '../../engine/client.ts';
 import type { EngineSource, Preview } from '../../engine/protocol.ts';
 import { useApp } from '../../state/app.ts';
 
@@ -24,7 +25,7 @@ export function usePreview(wanted: boolean): PreviewState {
     }
     let stale = false;
     setState({ kind: 'reading' });
-    engine.client.preview(source).then(
+    headOf(engine.client, source).then(
       (preview) => {
         if (!stale) setState({ kind: 'read', preview });
       },
@@ -39,4 +40,15 @@ export function usePreview(wanted: boolean): PreviewState {
   }, [wanted, source]);
   // Until another file is looked into, what is known is of the one before.
   return of === source ? state : { kind: wanted ? 'reading' : 'none' };
+}
+
+const onTheWay = new WeakMap<EngineSource, Promise<Preview>>();
+
+/** Two parts of the window that look into a file at once share one reading. */
+function headOf(client: EngineClient, source: EngineSource): Promise<Preview> {
+  const asked = onTheWay.get(source);
+  if (asked !== undefined) return asked;
+  const reading = client.preview(source).finally(() => onTheWay.delete(source));
+  onTheWay.set(source, reading);
+  return reading;
 }

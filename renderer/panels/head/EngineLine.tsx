@@ -45,9 +45,11 @@ export function EngineLine() {
   return (
     <span class="engine-line">
       {account === null
-        ? engine.failure.value === null
-          ? 'no catalogue'
-          : 'catalogue not read'
+        ? files.missingSource.value !== null
+          ? 'catalogue not at hand'
+          : engine.failure.value === null
+            ? 'no catalogue'
+            : 'catalogue not read'
         : `${countText(account.kept)} kept · ${countText(account.setAside)} set aside`}
     </span>
   );

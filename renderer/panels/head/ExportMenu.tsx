@@ -2,23 +2,20 @@ import { useComputed } from '@preact/signals';
 import { useApp } from '../../state/app.ts';
 import { Menu } from '../../ui/Menu.tsx';
 import { copyLedger, exportLedger, LEDGER_COPIES, LEDGER_FORMATS } from '../ledger/ledgerFormats.ts';
+import { whyWithheld } from '../notAtHand.ts';
 import { PictureBench } from '../picture/PictureBench.tsx';
 import { pictureShown } from '../picture/pictureShown.ts';
 
 /** The picture by way of its bench; the ledger to a file or to the clipboard. */
 export function ExportMenu() {
   const app = useApp();
-  const empty = useComputed(() => app.derived.shells.value.length === 0).value;
+  const withheld = useComputed(() => whyWithheld(app)).value;
   return (
     <>
       <Menu
         label="Export"
         buttonId="export-menu"
-        title={
-          empty
-            ? 'Export the picture; there are no shells for a ledger yet, or the catalogue is still being read'
-            : 'Export picture or ledger'
-        }
+        title={withheld === null ? 'Export picture or ledger' : `No ledger to export: ${withheld}`}
         entries={[
           { kind: 'item', label: 'Picture or film…', hint: 'P', run: () => void (pictureShown.value = true) },
           {
@@ -28,7 +25,7 @@ export function ExportMenu() {
               kind: 'item',
               label: format.label,
               hint: format.hint,
-              disabled: empty,
+              disabled: withheld !== null,
               run: () => void exportLedger(app, format),
             })),
           },
@@ -39,7 +36,7 @@ export function ExportMenu() {
               kind: 'item',
               label,
               hint,
-              disabled: empty,
+              disabled: withheld !== null,
               run: () => void copyLedger(app, key),
             })),
           },

@@ -1,6 +1,6 @@
 import type { Signal } from '@preact/signals';
 import { shownColumn, shownUnit } from '../../../shared-core/report/quantity.ts';
-import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
+import { PLAN_QUANTITIES, SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
 import { useApp } from '../../state/app.ts';
 import { Icon } from '../../ui/Icon.tsx';
 import { Subscripted } from '../../ui/Subscripted.tsx';
@@ -28,8 +28,9 @@ export function LedgerTable(props: {
   const total = derived.total.value;
   const column = total === null ? shells : [...shells, total];
   const units = derived.units.value;
-  const texts = new Map(SHELL_QUANTITIES.map((q) => [q.key, shownColumn(q, column, units)]));
-  const rows = sortShells(shells, order.value, SHELL_QUANTITIES);
+  const quantities = engine.selected.value === null ? PLAN_QUANTITIES : SHELL_QUANTITIES;
+  const texts = new Map(quantities.map((q) => [q.key, shownColumn(q, column, units)]));
+  const rows = sortShells(shells, order.value, quantities);
   // One row can be reached by Tab: the chosen one, or the first.
   const chosen = view.selectedShell.value;
   const reachable = chosen === null || chosen >= shells.length ? (rows[0] ?? null) : chosen;

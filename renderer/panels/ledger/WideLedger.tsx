@@ -2,6 +2,7 @@ import type { Signal } from '@preact/signals';
 import { useLayoutEffect, useRef } from 'preact/hooks';
 import { useApp } from '../../state/app.ts';
 import { IconButton } from '../../ui/IconButton.tsx';
+import { whyWithheld } from '../notAtHand.ts';
 import { currentLedgerTable } from './currentLedger.ts';
 import { LedgerTable } from './LedgerTable.tsx';
 import { WHOLE_LEDGER } from './ledgerColumns.ts';
@@ -19,6 +20,7 @@ export function WideLedger(props: {
 }) {
   const { order, onEnter, onClose } = props;
   const app = useApp();
+  const withheld = whyWithheld(app);
   const ref = useRef<HTMLDivElement>(null);
   useLayoutEffect(() => {
     const before = document.activeElement;
@@ -64,7 +66,8 @@ export function WideLedger(props: {
             type="button"
             class="button quiet-button"
             aria-label={`Export as ${format.label}`}
-            title={format.hint}
+            title={withheld ?? format.hint}
+            disabled={withheld !== null}
             onClick={() => void exportLedger(app, format)}
           >
             {format.label}

@@ -62,7 +62,11 @@ function ledgerText(app: App, key: LedgerFormat['key']): string {
     case 'ecsv':
       return asEcsv(table);
     case 'latex':
-      return asLatex({ ...table, quantities: LEDGER_QUANTITIES });
+      return asLatex({
+        ...table,
+        // In a plan some of them have no number.
+        quantities: LEDGER_QUANTITIES.map(({ key }) => table.quantities.find((q) => q.key === key)!),
+      });
     case 'latex-all':
       return asLatex(table);
     case 'text':

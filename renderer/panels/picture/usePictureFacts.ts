@@ -1,6 +1,7 @@
 import { useLayoutEffect, useMemo } from 'preact/hooks';
 import type { App } from '../../state/app.ts';
 import type { EngineState } from '../../state/engineState.ts';
+import { notAtHand } from '../notAtHand.ts';
 import type { PictureClient } from './pictureClient.ts';
 
 /**
@@ -19,11 +20,12 @@ export function usePictureFacts(
     engine.columns.value,
   ];
   const failure = engine.failure.value;
+  const missing = notAtHand({ files });
   const waiting =
     failure !== null
       ? failureText(failure)
-      : files.missingSource.value !== null
-        ? `The study's catalogue ${files.missingSource.value.name} is not at hand: point at it first.`
+      : missing !== null
+        ? missing
         : engine.progress.value !== null || (selected !== null && background === null)
           ? 'The catalogue is still being read: the picture follows.'
           : null;

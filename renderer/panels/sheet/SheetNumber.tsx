@@ -14,9 +14,10 @@ export function SheetNumber(props: {
   readonly allDigits: boolean;
 }) {
   const { quantityKey, shell, column, units, allDigits } = props;
-  const { explained } = useApp().view;
+  const { view, engine } = useApp();
+  const { explained } = view;
   const ref = useRef<HTMLButtonElement>(null);
-  const quantity = shellQuantity(quantityKey)!;
+  const quantity = shellQuantity(quantityKey, engine.selected.value === null)!;
   const open = explained.value === quantityKey;
   // Opened from the ledger, the explanation may lie below the fold.
   useLayoutEffect(() => {

@@ -30,6 +30,7 @@ export function ShellSheet() {
   const set = PUBLISHED_SETS.find((one) => one.key === study.value.cosmologySet);
   const units = derived.units.value;
   const estimate = engine.selected.value?.footprint?.estimate ?? null;
+  const planned = engine.selected.value === null;
   const total = derived.total.value;
   const column = total === null ? shells : [...shells, total];
   const of: ExplainedShell = {
@@ -39,8 +40,9 @@ export function ShellSheet() {
     estimate,
     units,
     cosmologyName: set?.name ?? 'own parameters',
+    planned,
   };
-  const warnings = shellWarnings(shell, conditions, estimate, engine.selected.value === null);
+  const warnings = shellWarnings(shell, conditions, estimate, planned);
   const explained = view.explained.value;
   const field = fieldsInView(app)[view.field.value] ?? fieldsInView(app)[0];
   const step = (by: number) =>

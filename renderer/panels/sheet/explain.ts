@@ -6,7 +6,7 @@ import {
   shownColumn,
   shownUnit,
 } from '../../../shared-core/report/quantity.ts';
-import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
+import { PLAN_QUANTITIES, SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
 import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
 import type { ShellConditions } from '../../../shared-core/shells/statistics.ts';
 import type { FootprintPicture } from '../../engine/protocol.ts';
@@ -35,10 +35,13 @@ export interface ExplainedShell {
   readonly estimate: FootprintPicture['estimate'];
   readonly units: ShownUnits;
   readonly cosmologyName: string;
+  /** No catalogue is in. */
+  readonly planned: boolean;
 }
 
-export const shellQuantity = (key: string): Quantity<ShellStatistics> | undefined =>
-  SHELL_QUANTITIES.find((q) => q.key === key);
+/** @param planned without a catalogue: what galaxies would say has no number */
+export const shellQuantity = (key: string, planned = false): Quantity<ShellStatistics> | undefined =>
+  (planned ? PLAN_QUANTITIES : SHELL_QUANTITIES).find((q) => q.key === key);
 
 /** The quantities of the shell that each quantity is made of; further inputs are named by a word. */
 const INPUTS: Readonly<Record<string, readonly string[]>> = {
@@ -73,13 +76,16 @@ const COUNTED =
 export function explain(key: string, of: ExplainedShell): Explanation {
   return {
     inputs: (INPUTS[key] ?? []).map((name) => input(name, of)),
-    uncertainty: uncertainty(key, of),
+    uncertainty:
+      shellQuantity(key, of.planned)?.value(of.shell) === null && of.planned
+        ? 'It takes the galaxies of a catalogue: without one it has no number.'
+        : uncertainty(key, of),
   };
 }
 
 function input(
   name: string,
-  { shell, column, conditions, estimate, units, cosmologyName }: ExplainedShell,
+  { shell, column, conditions, estimate, units, cosmologyName, planned }: ExplainedShell,
 ): ExplainedInput {
   switch (name) {
     case 'cosmology':
@@ -95,7 +101,7 @@ function input(
       };
     }
     default: {
-      const quantity = shellQuantity(name)!;
+      const quantity = shellQuantity(name, planned)!;
       return {
         name: quantity.title,
         text: shownColumn(quantity, column, units)(shell),

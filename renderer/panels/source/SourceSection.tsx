@@ -1,5 +1,7 @@
+import { useEffect } from 'preact/hooks';
 import { useApp } from '../../state/app.ts';
 import { sizeText } from '../../ui/numberText.ts';
+import { setSectionOpen } from '../../ui/openSections.ts';
 import { Section } from '../../ui/Section.tsx';
 import { useStudyPart } from '../useStudyPart.ts';
 import { RowsAccount } from './RowsAccount.tsx';
@@ -14,6 +16,10 @@ export function SourceSection() {
   const missing = files.missingSource.value;
   const changed = sourceChanged(source, loaded);
   const trouble = missing !== null || changed || engine.failure.value !== null;
+  // What the study waits for must not wait behind a folded heading.
+  useEffect(() => {
+    if (missing !== null) setSectionOpen('source', true);
+  }, [missing !== null]);
   const gist = source === null ? 'none' : source.kind === 'demo' ? 'invented demo' : source.name;
   return (
     <Section id="source" title="Source" gist={trouble ? 'look here' : gist} alert={trouble} openAtFirst>

@@ -11,9 +11,8 @@ export function SourceMissing({ source }: { readonly source: Extract<StudySource
   return (
     <div class="trouble" role="status">
       <p>
-        The catalogue “{source.name}” ({sizeText(source.sizeBytes)}) that this study was made with is not at
-        hand
-        {source.path === null ? '' : ` at ${source.path}`}. Everything else in the study is as it was.
+        The catalogue “{source.name}” is not at hand.{' '}
+        {source.path === null ? '' : `It was at ${source.path}. `}The study has everything but its galaxies.
       </p>
       <button type="button" class="button" onClick={() => void files.pointAtSource()}>
         Point at it…
@@ -61,7 +60,7 @@ export function ReadFailure() {
         <button type="button" class="button" onClick={() => engine.readAgain()}>
           Read again
         </button>
-        {failure.stage === 'load' && head.kind === 'read' ? (
+        {failure.stage === 'load' && head.kind !== 'refused' ? (
           <button type="button" class="button" onClick={() => revealSection('columns')}>
             Columns
           </button>

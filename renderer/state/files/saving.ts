@@ -62,6 +62,7 @@ export function createSaving(options: SavingOptions): Saving {
         if (openedThen === opened) {
           files.wrote(written, to, outcome.stamp);
           studyState.markSaved(written);
+          tellApart(written, to);
         }
         await onSaved();
         return true;
@@ -79,6 +80,16 @@ export function createSaving(options: SavingOptions): Saving {
         notices.tell(outcome.sentence, { actions: [rescue(written)] });
         return false;
     }
+  };
+  const told = new Set<string>();
+  /** A browser does not say where the catalogue lies, so the study cannot either. */
+  const tellApart = ({ source }: Study, { folder }: SaveTarget): void => {
+    if (source?.kind !== 'file' || source.path !== null || told.has(source.name)) return;
+    told.add(source.name);
+    notices.tell(
+      `“${source.name}” is not within the study: to be found when the study is opened again it must lie in ${folder} too, or be pointed at.`,
+      { tone: 'fact' },
+    );
   };
   // The browser's host saves in one folder only; a download goes elsewhere, and the study stays "not saved".
   const rescue = (written: Study) =>

@@ -82,8 +82,16 @@ describe('the ledger on the clipboard', () => {
     footprint: { origin: 'given', areaDeg2: 100, estimate: null },
   } as const;
 
+  const account = {
+    rowsRead: 12,
+    kept: 10,
+    setAside: 2,
+    reasons: { outsideCuts: 2 },
+    repeatedPositions: 0,
+  };
+
   it('has a column for each quantity, a line for each shell and all as one, every digit, and the notes', () => {
-    const table = ledgerTable({ ...facts, units: { perH: false, h: cosmology.h } });
+    const table = ledgerTable({ ...facts, account, units: { perH: false, h: cosmology.h } });
     const [rows, notes] = asTsv(table).trimEnd().split('\n\n');
     const lines = rows!.split('\n').map((line) => line.split('\t'));
     expect(notes!.split('\n')).toEqual(table.notes);
@@ -108,6 +116,14 @@ describe('the ledger on the clipboard', () => {
     await copyLedger(app, 'tabs');
     expect(told).toHaveLength(2);
     expect(told[0]).toMatch(/not read yet/);
+  });
+
+  it('has no number of galaxies for a plan, where 0 would say that somebody looked', () => {
+    const lines = asTsv(ledgerTable({ ...facts, units: { perH: false, h: cosmology.h } })).split('\n');
+    const cell = (key: string) => lines[1]!.split('\t')[lines[0]!.split('\t').indexOf(key)];
+    for (const key of ['count', 'densityPerMpc3', 'zEffective', 'effectiveVolumeMpc3'])
+      expect(cell(key), key).toBe('');
+    expect(Number(cell('volumeMpc3'))).toBe(facts.shells[0]!.volumeMpc3);
   });
 
   it('says Mpc/h in its names when lengths are in Mpc/h', () => {
@@ -148,13 +164,6 @@ describe('the ledger on the clipboard', () => {
   });
 
   it('tells the cuts that were applied, in the notes and as values', () => {
-    const account = {
-      rowsRead: 12,
-      kept: 10,
-      setAside: 2,
-      reasons: { outsideCuts: 2 },
-      repeatedPositions: 0,
-    };
     const cuts = [{ column: 'mag', min: null, max: 22.5 }];
     const read = { ...facts, account, study: { ...facts.study, cuts }, units: { perH: false, h: 0.7 } };
     expect(ledgerTable(read).notes.join('\n')).toMatch(/^Cuts: mag <= 22\.5\. Bounds are included/m);

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { explain } from '../../../renderer/panels/sheet/explain.ts';
+import { explain, shellQuantity } from '../../../renderer/panels/sheet/explain.ts';
 import { edgeTold } from '../../../renderer/panels/sheet/sheetLayout.ts';
 import { roundLength, shellOutline } from '../../../renderer/panels/sheet/shellOutline.ts';
 import { shellWarnings } from '../../../renderer/panels/sheet/warnings.ts';
@@ -74,6 +74,7 @@ describe('what to beware of in a shell', () => {
       estimate: null,
       units,
       cosmologyName: 'Flat 70 / 0.3',
+      planned: false,
     };
     for (const { key } of SHELL_QUANTITIES) expect(explain(key, of).uncertainty).not.toContain('NaN');
     expect(explain('densityPerMpc3', of).uncertainty).toMatch(/weights of the galaxies add up to 0/);
@@ -87,7 +88,30 @@ describe('what to beware of in a shell', () => {
 
 describe('the explanation of a number', () => {
   const shell = shellsOf(evenly(400, 0.5, 0.6), [0.5, 0.6])[0]!;
-  const of = { shell, column: [shell], conditions, estimate: null, units, cosmologyName: 'Flat 70 / 0.3' };
+  const of = {
+    shell,
+    column: [shell],
+    conditions,
+    estimate: null,
+    units,
+    cosmologyName: 'Flat 70 / 0.3',
+    planned: false,
+  };
+
+  it('gives no number of galaxies without a catalogue, and none that hangs on them', () => {
+    const none = shellsOf(new Float64Array(0), [0.5, 0.6])[0]!;
+    const plan = { ...of, shell: none, column: [none], planned: true };
+    for (const { key, value } of SHELL_QUANTITIES) {
+      // What galaxies change is of them; the rest follows from edges, area and cosmology.
+      const ofGalaxies = value(none) !== value(shell);
+      expect(shellQuantity(key, true)!.value(none), key).toBe(ofGalaxies ? null : value(shell));
+      expect(/takes the galaxies/.test(explain(key, plan).uncertainty), key).toBe(ofGalaxies);
+    }
+    expect(explain('densityPerMpc3', plan).inputs.map(({ text }) => text)).toEqual([
+      '-',
+      shownText(shellQuantity('volumeMpc3')!, none, units),
+    ]);
+  });
 
   it('stands for every quantity, in both units, with inputs that are not the number itself', () => {
     for (const perH of [false, true])

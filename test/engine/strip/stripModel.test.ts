@@ -34,16 +34,18 @@ function stage(redshift: readonly number[], parts: Partial<Study> = {}) {
     progress: signal(null),
   } as unknown as EngineState;
   const view = createViewState('dark');
+  const missingSource = signal<object | null>(null);
   const app = {
     notices,
     studyState,
     engine,
     view,
+    files: { missingSource },
     derived: createDerived(studyState, engine),
   } as unknown as App;
   const model = createStripModel(app);
   model.size.value = { widthPx: 592, heightPx: 200, fontPx: 12 };
-  return { app, model, studyState, view, notices, gestures: createPlotGestures(app, model) };
+  return { app, missingSource, model, studyState, view, notices, gestures: createPlotGestures(app, model) };
 }
 
 /** Redshifts spread over 0.1 to 1.5. */
@@ -202,6 +204,8 @@ describe('sentences', () => {
     expect(stripSentence(stage(galaxies).app)).toEqual({ empty: null, hint: null });
     const lost = stage([], { source: { kind: 'demo', seed: 1 } });
     expect(stripSentence(lost.app).empty).toMatch(/could not be read/);
+    lost.missingSource.value = {};
+    expect(stripSentence(lost.app).empty).toMatch(/not at hand/);
   });
   it('follow the study', () => {
     const { app, studyState } = stage([]);
