@@ -6,7 +6,7 @@ import type { ShownUnits } from '../../shared-core/report/quantity.ts';
 import { type RadialAxis, radialAxis } from '../../shared-core/shells/radial.ts';
 import { type SortedSample, sortSample } from '../../shared-core/shells/sample.ts';
 import type { ShellStatistics } from '../../shared-core/shells/shell.ts';
-import { type ShellConditions, shellStatistics } from '../../shared-core/shells/statistics.ts';
+import { allAsOne, type ShellConditions, shellStatistics } from '../../shared-core/shells/statistics.ts';
 import { compileRegion } from '../../shared-core/sky/compileRegion.ts';
 import type { EngineState } from './engineState.ts';
 import type { StudyState } from './studyState.ts';
@@ -61,13 +61,12 @@ export function createDerived({ study }: StudyState, engine: EngineState): Deriv
   );
   // A strongly closed universe ends: shells beyond it have no volume, and the sentence says so.
   const measured = computed(() => {
-    const [first, last] = [edges.value[0], edges.value.at(-1)];
-    if (conditions.value === null || edges.value.length < 2 || first === undefined || last === undefined)
+    if (conditions.value === null || edges.value.length < 2)
       return { shells: [], total: null, trouble: null };
     try {
       return {
         shells: shellStatistics(sample.value, edges.value, conditions.value),
-        total: shellStatistics(sample.value, [first, last], conditions.value)[0] ?? null,
+        total: allAsOne(sample.value, edges.value, conditions.value),
         trouble: null,
       };
     } catch (error) {
