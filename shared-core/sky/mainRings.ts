@@ -1,4 +1,4 @@
-import { cos, sin } from '../numerics/elementary/elementary.ts';
+import { cos, sin, square } from '../numerics/elementary/elementary.ts';
 import type { OutlineRing } from './region.ts';
 
 const RADIAN = Math.PI / 180;
@@ -35,5 +35,5 @@ function roughSize({ raDeg, decDeg }: OutlineRing): number {
     const k = (i + 1) % n;
     twice += east[i]! * north[k]! - east[k]! * north[i]!;
   }
-  return Math.abs(twice) / 2 / RADIAN ** 2;
+  return Math.abs(twice) / 2 / square(RADIAN);
 }
