@@ -33,7 +33,9 @@ export async function bench() {
       row(`${points}: cone while moving (${speed.drawnWhileMoving} drawn), a frame`, speed.frameSeconds);
       row(`${points}: from input to picture, median`, speed.answerSeconds);
       row(`${points}: until all stand after moving`, speed.restSeconds);
-      row(`${points}: picking a galaxy`, speed.pickSeconds);
+      row(`${points}: picking a galaxy, at once`, speed.pickSeconds);
+      row(`${points}: picking a galaxy, with its index`, speed.pickLaterSeconds);
+      row(`${points}: from input to picture, the worst`, speed.worstAnswerSeconds);
       await page.close();
     }
     return { name: 'Points without a GPU (ratio: plain cloud to this)', rows };

@@ -57,7 +57,7 @@ export function everydayActs(rows: number): Act[] {
       what: 'five shells of equal count',
       settleMs,
       act: async (page) => {
-        const number = page.getByRole('textbox', { name: /equal$/ });
+        const number = page.getByRole('textbox', { name: 'Number of shells' });
         await number.fill('5');
         await number.press('Enter');
         await page.getByRole('button', { name: /^count: shells of equal/ }).click();
