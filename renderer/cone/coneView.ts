@@ -25,7 +25,7 @@ import type {
   ViewName,
   ViewState,
 } from './types.ts';
-import { ConeWork } from './work/coneWork.ts';
+import { ConeWork } from './jobs/coneWork.ts';
 
 const TRANSITION_MS = 520;
 

@@ -2,7 +2,7 @@ import { pickNear } from '../geometry/pickNear.ts';
 import { type PointHit, pickPoint } from '../geometry/pickPoint.ts';
 import type { Viewport } from '../geometry/projection.ts';
 import type { GlStage } from '../graphics/glStage.ts';
-import type { ConeMemory, ConeWork } from '../work/coneWork.ts';
+import type { ConeMemory, ConeWork } from '../jobs/coneWork.ts';
 import { crowding, exposure, NOTHING, pointSizePx } from './exposure.ts';
 import { Galaxies, type GalaxiesChange } from './galaxies.ts';
 import { Pacing } from './pacing.ts';
