@@ -4,6 +4,7 @@ import { ConeLook } from './coneLook.ts';
 import { ConeModel } from './coneModel.ts';
 import { ConePictures } from './conePictures.ts';
 import { GlStage } from './graphics/glStage.ts';
+import { ConeWork } from './jobs/coneWork.ts';
 import { listen } from './navigation.ts';
 import { PictureLoop } from './pictureLoop.ts';
 import { Pointing } from './pointing.ts';
@@ -25,7 +26,6 @@ import type {
   ViewName,
   ViewState,
 } from './types.ts';
-import { ConeWork } from './jobs/coneWork.ts';
 
 const TRANSITION_MS = 520;
 

@@ -1,7 +1,7 @@
 import type { PreparedField } from './geometry/preparedField.ts';
+import type { ConeWork } from './jobs/coneWork.ts';
 import type { Galaxies } from './points/galaxies.ts';
 import type { FootprintInput, GalaxyInput } from './types.ts';
-import type { ConeWork } from './jobs/coneWork.ts';
 
 /**
  * Takes region and galaxies together: the old picture stands while a region is made ready, and galaxies that come

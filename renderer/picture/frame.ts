@@ -4,6 +4,7 @@ import { cssColour, shellColours } from '../colour/shellColours.ts';
 import type { Pen, Point } from '../cone/overlay/pen.ts';
 import type { PictureNumbers } from './numbers.ts';
 import { fitText, textWidth, wrapText } from './text/measure.ts';
+import { writeLeft } from './text/writeLeft.ts';
 import type { PictureTheme } from './themes.ts';
 import type { ViewBox } from './views/view.ts';
 
@@ -53,7 +54,7 @@ export function paintFrame(pen: Pen, frame: PictureFrame): void {
   let y = MARGIN;
   for (const line of lines) {
     y += size;
-    left(pen, line, MARGIN, y, size, theme.ink, 600);
+    writeLeft(pen, line, MARGIN, y, size, theme.ink, 600);
     y += size * 0.22;
   }
   paintLegend(pen, frame);
@@ -62,31 +63,13 @@ export function paintFrame(pen: Pen, frame: PictureFrame): void {
   let at = frame.height - MARGIN - captionHeight(frame) + 18;
   for (const line of caption) {
     at += CAPTION_LEADING;
-    left(pen, line, MARGIN, at - 5, CAPTION_SIZE, theme.inkMuted);
+    writeLeft(pen, line, MARGIN, at - 5, CAPTION_SIZE, theme.inkMuted);
   }
   const { credit } = frame.options;
   if (credit === '') return;
   const text = fitText(credit, frame.width - 2 * MARGIN, CREDIT_SIZE);
   const x = frame.width - MARGIN - textWidth(text, CREDIT_SIZE);
-  left(pen, text, x, frame.height - MARGIN + 14, CREDIT_SIZE, theme.inkMuted);
-}
-
-/** Text from its left end on its baseline, without a halo. */
-function left(
-  pen: Pen,
-  text: string,
-  x: number,
-  y: number,
-  size: number,
-  colour: string,
-  weight = 400,
-): void {
-  const { context } = pen;
-  pen.font(size, weight);
-  context.textAlign = 'left';
-  context.textBaseline = 'alphabetic';
-  context.fillStyle = colour;
-  context.fillText(text, x, y);
+  writeLeft(pen, text, x, frame.height - MARGIN + 14, CREDIT_SIZE, theme.inkMuted);
 }
 
 function heading(frame: PictureFrame): Heading {
@@ -134,7 +117,7 @@ function paintKey(pen: Pen, frame: PictureFrame, y: number): void {
   const room = frame.width - 2 * MARGIN - (numbers.colours.legend ? LEGEND_WIDTH + 40 : 0);
   const title = 'shells, z';
   let x = MARGIN;
-  left(pen, title, x, y, KEY_SIZE, theme.inkMuted);
+  writeLeft(pen, title, x, y, KEY_SIZE, theme.inkMuted);
   x += textWidth(title, KEY_SIZE) + 16;
   const texts = numbers.shellInputs.map((shell) => shell.label);
   const widths = texts.map((text) => 9 + 6 + textWidth(text, KEY_SIZE) + 18);
@@ -145,12 +128,12 @@ function paintKey(pen: Pen, frame: PictureFrame, y: number): void {
       swatch(pen, [x, y], cssColour(colour));
       x += 9;
     }
-    left(pen, `${texts.length} from ${first.zMin} to ${last.zMax}`, x + 8, y, KEY_SIZE, theme.ink);
+    writeLeft(pen, `${texts.length} from ${first.zMin} to ${last.zMax}`, x + 8, y, KEY_SIZE, theme.ink);
     return;
   }
   for (const [i, text] of texts.entries()) {
     swatch(pen, [x, y], cssColour(colours[i]!));
-    left(pen, text, x + 15, y, KEY_SIZE, theme.ink);
+    writeLeft(pen, text, x + 15, y, KEY_SIZE, theme.ink);
     x += widths[i]!;
   }
 }
@@ -179,7 +162,7 @@ function paintLegend(pen: Pen, frame: PictureFrame): void {
   const { bytes } = colourMap(legend.map, theme.mode);
   const x = frame.width - MARGIN - LEGEND_WIDTH;
   const y = MARGIN + 13;
-  left(pen, fitText(legend.title, LEGEND_WIDTH, KEY_SIZE), x, MARGIN + 7, KEY_SIZE, theme.inkMuted);
+  writeLeft(pen, fitText(legend.title, LEGEND_WIDTH, KEY_SIZE), x, MARGIN + 7, KEY_SIZE, theme.inkMuted);
   for (let i = 0; i < LEGEND_STEPS; i++) {
     const t = (i + 0.5) / LEGEND_STEPS;
     const at = 3 * Math.round(255 * (legend.reversed ? 1 - t : t));
@@ -187,6 +170,13 @@ function paintLegend(pen: Pen, frame: PictureFrame): void {
     const from = (LEGEND_WIDTH * i) / LEGEND_STEPS;
     box(pen, x + from, y, LEGEND_WIDTH - from, 7, cssColour([bytes[at]!, bytes[at + 1]!, bytes[at + 2]!]));
   }
-  left(pen, legend.low, x, y + 20, KEY_SIZE, theme.ink);
-  left(pen, legend.high, x + LEGEND_WIDTH - textWidth(legend.high, KEY_SIZE), y + 20, KEY_SIZE, theme.ink);
+  writeLeft(pen, legend.low, x, y + 20, KEY_SIZE, theme.ink);
+  writeLeft(
+    pen,
+    legend.high,
+    x + LEGEND_WIDTH - textWidth(legend.high, KEY_SIZE),
+    y + 20,
+    KEY_SIZE,
+    theme.ink,
+  );
 }

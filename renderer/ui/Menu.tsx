@@ -1,6 +1,7 @@
 import type { ComponentChildren, TargetedToggleEvent } from 'preact';
 import { useId, useRef } from 'preact/hooks';
 import { Icon } from './Icon.tsx';
+import { placeUnder } from './placeUnder.ts';
 import './ui.css';
 
 export type MenuEntry =
@@ -17,10 +18,6 @@ export type MenuEntry =
       readonly label: string;
       readonly entries: readonly Extract<MenuEntry, { kind: 'item' }>[];
     };
-
-/** Between a menu and its button, and between it and the edge of the window. */
-const GAP_PX = 4;
-const EDGE_PX = 8;
 
 /** A button that opens a list of commands under it. Arrow keys walk, Escape closes, focus comes back to the button. */
 export function Menu(props: {
@@ -39,25 +36,11 @@ export function Menu(props: {
     ...(list.current?.querySelectorAll<HTMLButtonElement>('[role=menuitem]:not(:disabled)') ?? []),
   ];
 
-  const place = (): void => {
-    const [menu, from] = [list.current, button.current?.getBoundingClientRect()];
-    if (menu === null || from === undefined) return;
-    const { clientWidth, clientHeight } = document.documentElement;
-    const room = clientWidth - menu.offsetWidth - EDGE_PX;
-    menu.style.left = `${Math.max(EDGE_PX, Math.min(from.left, room))}px`;
-    // Under its button, or over it where the foot of the window leaves less room.
-    const [above, below] = [from.top - GAP_PX - EDGE_PX, clientHeight - from.bottom - GAP_PX - EDGE_PX];
-    menu.style.maxHeight = 'none';
-    const height = menu.offsetHeight;
-    const upward = height > below && above > below;
-    menu.style.maxHeight = `${upward ? above : below}px`;
-    menu.style.top = `${upward ? from.top - GAP_PX - Math.min(height, above) : from.bottom + GAP_PX}px`;
-  };
   const onToggle = (event: TargetedToggleEvent<HTMLDivElement>): void => {
     const open = event.newState === 'open';
     button.current?.setAttribute('aria-expanded', String(open));
     if (!open) return;
-    place();
+    if (button.current !== null) placeUnder(button.current, event.currentTarget);
     items()[0]?.focus();
   };
   const onKeyDown = (event: KeyboardEvent): void => {

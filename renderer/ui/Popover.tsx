@@ -1,6 +1,7 @@
 import type { ComponentChildren, TargetedToggleEvent } from 'preact';
 import { useId, useRef, useState } from 'preact/hooks';
 import { Icon } from './Icon.tsx';
+import { placeUnder } from './placeUnder.ts';
 import './ui.css';
 
 /** A button that opens a few controls under it. Escape and a click elsewhere close; focus comes back to the button. */
@@ -17,15 +18,15 @@ export function Popover(props: {
   const onToggle = (event: TargetedToggleEvent<HTMLDivElement>): void => {
     const opened = event.newState === 'open';
     setOpen(opened);
-    const [panel, from] = [event.currentTarget, button.current?.getBoundingClientRect()];
-    if (!opened || from === undefined) return;
-    panel.style.top = `${from.bottom + 4}px`;
-    panel.style.left = `${from.left}px`;
-    panel.style.maxHeight = `${document.documentElement.clientHeight - from.bottom - 12}px`;
-    // The content is there after the next drawing: then its width is known, and its first control can be focused.
+    const panel = event.currentTarget;
+    const place = (): void => {
+      if (button.current !== null) placeUnder(button.current, panel);
+    };
+    if (!opened) return;
+    place();
+    // The content is there after the next drawing: then its size is known, and its first control can be focused.
     requestAnimationFrame(() => {
-      const room = document.documentElement.clientWidth - panel.offsetWidth - 8;
-      panel.style.left = `${Math.max(8, Math.min(from.left, room))}px`;
+      place();
       panel.querySelector<HTMLElement>('select, input, button')?.focus();
     });
   };

@@ -7,6 +7,7 @@ test('a real disk that is full, or can only be read: told on saving, nothing los
   desk,
 }) => {
   const disk = mountSmallDisk(join(desk.folder, 'disk'));
+  // Reason: a real full disk needs a mount, which only root may make; test/hosts/atomicSave.test.ts plays one for others.
   test.skip(disk === null, 'not run: only root on Linux can mount a disk for this; test/hosts plays one');
   try {
     const page = await desk.open({ folder: disk!.folder });

@@ -178,6 +178,7 @@ test('a disk that fills in the middle of a picture is told, and no half file sta
   desk,
 }) => {
   const disk = mountSmallDisk(join(desk.folder, 'disk'));
+  // Reason: a real full disk needs a mount, which only root may make.
   test.skip(disk === null, 'not run: only root on Linux can mount a disk for this');
   try {
     const wishes = ['picture', 'demo', '-o', 'disk/cone.png', '--size', '2400x1600'];

@@ -1,5 +1,5 @@
-import type { ColouringInput, GalaxyInput, ShellInput } from '../types.ts';
 import type { ConeMemory, ConeWork } from '../jobs/coneWork.ts';
+import type { ColouringInput, GalaxyInput, ShellInput } from '../types.ts';
 import type { PickIndex } from './pickIndex.ts';
 import type { PointStore } from './pointStore.ts';
 import { fillRadius, type RadiusTable, radiusTable } from './radiusTable.ts';

@@ -1,5 +1,6 @@
 import { ChoiceField } from '../../ui/ChoiceField.tsx';
 import { BenchField } from './BenchField.tsx';
+import { OwnSize } from './OwnSize.tsx';
 import { FILM_KIND_CHOICES, FILM_SIZE_CHOICES, type PictureChoices } from './pictureChoices.ts';
 import type { Troubles } from './readChoices.ts';
 
@@ -60,24 +61,7 @@ export function FilmChoice(props: {
         onChoose={(filmSize) => onChange({ filmSize })}
       />
       {choices.filmSize === 'own' ? (
-        <div class="bench-row">
-          <BenchField
-            label="Width"
-            unit="px"
-            value={choices.ownWidthPx}
-            field="ownWidthPx"
-            troubles={troubles}
-            onInput={(ownWidthPx) => onChange({ ownWidthPx })}
-          />
-          <BenchField
-            label="Height"
-            unit="px"
-            value={choices.ownHeightPx}
-            field="ownHeightPx"
-            troubles={troubles}
-            onInput={(ownHeightPx) => onChange({ ownHeightPx })}
-          />
-        </div>
+        <OwnSize choices={choices} troubles={troubles} onChange={onChange} />
       ) : null}
     </>
   );

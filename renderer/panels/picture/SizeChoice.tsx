@@ -1,6 +1,7 @@
 import { ChoiceField } from '../../ui/ChoiceField.tsx';
 import { Switch } from '../../ui/Switch.tsx';
 import { BenchField } from './BenchField.tsx';
+import { OwnSize } from './OwnSize.tsx';
 import { isSheet, type PictureChoices, SIZE_CHOICES } from './pictureChoices.ts';
 import type { Troubles } from './readChoices.ts';
 
@@ -27,23 +28,7 @@ export function SizeChoice(props: {
         />
       ) : null}
       {choices.size === 'own' ? (
-        <div class="bench-row">
-          <BenchField
-            label="Width"
-            unit="px"
-            value={choices.ownWidthPx}
-            field="ownWidthPx"
-            troubles={troubles}
-            onInput={(ownWidthPx) => onChange({ ownWidthPx })}
-          />
-          <BenchField
-            label="Height"
-            unit="px"
-            value={choices.ownHeightPx}
-            field="ownHeightPx"
-            troubles={troubles}
-            onInput={(ownHeightPx) => onChange({ ownHeightPx })}
-          />
+        <OwnSize choices={choices} troubles={troubles} onChange={onChange}>
           <BenchField
             label="On paper"
             unit="dpi"
@@ -52,7 +37,7 @@ export function SizeChoice(props: {
             troubles={troubles}
             onInput={(dpi) => onChange({ dpi })}
           />
-        </div>
+        </OwnSize>
       ) : null}
     </>
   );

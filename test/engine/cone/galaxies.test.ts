@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
+import { ConeWork } from '../../../renderer/cone/jobs/coneWork.ts';
 import { Galaxies } from '../../../renderer/cone/points/galaxies.ts';
 import type { GalaxyInput } from '../../../renderer/cone/types.ts';
-import { ConeWork } from '../../../renderer/cone/jobs/coneWork.ts';
 
 /** Galaxies around the equator, so that each half of the sky has its own. */
 function around(count: number): GalaxyInput {

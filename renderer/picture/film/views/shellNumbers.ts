@@ -5,6 +5,7 @@ import type { ShellStatistics } from '../../../../shared-core/shells/shell.ts';
 import type { Pen } from '../../../cone/overlay/pen.ts';
 import type { PictureNumbers } from '../../numbers.ts';
 import { textWidth } from '../../text/measure.ts';
+import { writeLeft } from '../../text/writeLeft.ts';
 
 /** Room that the numbers take above the cone. */
 export const SHELL_NUMBERS_HEIGHT = 62;
@@ -60,30 +61,13 @@ export function shellNumbersWriter({
   });
   const first = Math.max(...shells.map((shell) => textWidth(range(shell), RANGE_SIZE, 600)));
   return (pen, shell, colour) => {
-    write(pen, range(shell), 0, 34, RANGE_SIZE, colour, 600);
+    writeLeft(pen, range(shell), 0, 34, RANGE_SIZE, colour, 600);
     let x = first + COLUMN_GAP;
     for (const { title, value, width } of columns) {
       if (x + width > pen.width) return;
-      write(pen, title, x, 18, TITLE_SIZE, pen.theme.inkMuted, 400);
-      write(pen, value(shell), x, 36, VALUE_SIZE, pen.theme.ink, 600);
+      writeLeft(pen, title, x, 18, TITLE_SIZE, pen.theme.inkMuted, 400);
+      writeLeft(pen, value(shell), x, 36, VALUE_SIZE, pen.theme.ink, 600);
       x += width + COLUMN_GAP;
     }
   };
-}
-
-function write(
-  pen: Pen,
-  text: string,
-  x: number,
-  y: number,
-  size: number,
-  colour: string,
-  weight: number,
-): void {
-  const { context } = pen;
-  pen.font(size, weight);
-  context.textAlign = 'left';
-  context.textBaseline = 'alphabetic';
-  context.fillStyle = colour;
-  context.fillText(text, x, y);
 }
