@@ -39,6 +39,8 @@ export class EngineDesk {
   #reading = new AbortController();
   /** Of columns alone. */
   #lookingUp = new AbortController();
+  /** Of one row's name. */
+  #naming = new AbortController();
   #keys: Partial<Record<Stage, string>> = {};
   #catalogue: Catalogue | null = null;
   /** Of the bytes that the catalogue was read from. */
@@ -213,11 +215,14 @@ export class EngineDesk {
     return galaxyRow(catalogue, row, this.#columns);
   }
 
-  /** What the name column says in the row at a line: the file is read up to there. */
+  /** What the name column says in the row at a line: the file is read up to there. A newer question ends an older one. */
   async name(line: number): Promise<string | null> {
     const wish = this.#wanted;
     if (wish?.source == null) return null;
-    return rowName(await this.#bytes(wish.source), wish.mapping ?? undefined, line);
+    this.#naming.abort();
+    this.#naming = new AbortController();
+    const { signal } = this.#naming;
+    return rowName(await this.#bytes(wish.source, signal), wish.mapping ?? undefined, line, { signal });
   }
 
   /** The head of a file, for choosing its columns. */

@@ -24,10 +24,11 @@ export function ColourSelect(props: {
   const { id, value, unsaid, onChoose } = props;
   const { engine } = useApp();
   const hasMagnitude = engine.selected.value?.magnitude != null;
-  const columns = engine.loaded.value?.header ?? [];
+  // A heading may be missing: such a column has no name to be chosen by.
+  const columns = (engine.loadedNow.value?.header ?? []).filter((name) => name !== '');
   // A study may name a column that its catalogue has no more: it stays to be seen, and the engine says why it fails.
-  const known = value !== null && typeof value === 'object' && !columns.includes(value.column);
-  const offered = known ? [value.column, ...columns] : columns;
+  const absent = value !== null && typeof value === 'object' && !columns.includes(value.column);
+  const offered = absent ? [value.column, ...columns] : columns;
   return (
     <select
       {...(id === undefined ? {} : { id })}

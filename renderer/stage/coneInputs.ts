@@ -1,6 +1,6 @@
 import type { Cosmology } from '../../shared-core/cosmology/cosmology.ts';
 import { formatNumber, type ShownUnits } from '../../shared-core/report/quantity.ts';
-import { shellRanges } from '../../shared-core/report/shellRange.ts';
+import { edgeText, shellRanges } from '../../shared-core/report/shellRange.ts';
 import type { ShellStatistics } from '../../shared-core/shells/shell.ts';
 import { mainRings } from '../../shared-core/sky/mainRings.ts';
 import type { ColourBy, ColourMapName, RadialReading } from '../../shared-core/study/schema.ts';
@@ -105,12 +105,11 @@ function rulerTicks(
 
 /** Shells as the cone takes them. */
 export function coneShells(shells: readonly ShellStatistics[]): ShellInput[] {
-  const text = (z: number) => String(Number(z.toFixed(4)));
   const ranges = shellRanges(shells);
   return shells.map((s, i) => ({
     comovingMinMpc: s.comovingMinMpc,
     comovingMaxMpc: s.comovingMaxMpc,
-    label: `${text(s.zMin)} – ${text(s.zMax)}`,
+    label: `${edgeText(s.zMin)} – ${edgeText(s.zMax)}`,
     longLabel: ranges[i]!,
   }));
 }

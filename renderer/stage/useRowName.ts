@@ -5,17 +5,21 @@ import { useApp } from '../state/app.ts';
 /** The name of a picked galaxy, once its row has been looked up in the file; null where it has none. */
 export function useRowName(row: ReadonlySignal<GalaxyRow | null>): string | null {
   const { engine, view } = useApp();
-  const named = useSignal<{ readonly line: number; readonly name: string | null } | null>(null);
+  /** The name found last, with the reading of the file that it is of. */
+  const named = useSignal<{ of: unknown; line: number; name: string | null } | null>(null);
   useSignalEffect(() => {
     const line = row.value?.line;
-    const hasNames = engine.loaded.value?.mapping.id != null;
+    const of = engine.loaded.value;
+    const hasNames = of?.mapping.id != null;
     // Not for each galaxy that the pointer passes: a large file takes a moment to be read up to its row.
     if (line === undefined || !hasNames || view.pickedGalaxies.value.length === 0) return;
-    if (named.peek()?.line === line) return;
+    if (named.peek()?.line === line && named.peek()?.of === of) return;
     engine.client.name(line).then(
-      (name) => (named.value = { line, name }),
+      (name) => (named.value = { of, line, name }),
       () => undefined,
     );
   });
-  return named.value !== null && named.value.line === row.value?.line ? named.value.name : null;
+  const found = named.value;
+  const isIts = found !== null && found.line === row.value?.line && found.of === engine.loaded.value;
+  return isIts ? found.name : null;
 }

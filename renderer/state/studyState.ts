@@ -12,8 +12,12 @@ export interface StudyState {
   /** What undo and redo would take back or do again; null when there is nothing. */
   readonly undoLabel: ReadonlySignal<string | null>;
   readonly redoLabel: ReadonlySignal<string | null>;
-  /** Applies an edit; a Refusal becomes a notice and the study stays. @returns whether it was applied */
-  perform(edit: Edit): boolean;
+  /**
+   * Applies an edit; where it is refused the study stays.
+   * @param onRefused takes the refusal's sentence; a notice if not given
+   * @returns whether it was applied
+   */
+  perform(edit: Edit, onRefused?: (sentence: string) => void): boolean;
   /** The latest earlier state that fits; null when none does. */
   earlier(fits: (study: Study) => boolean): Study | null;
   /** Takes back every step since that state; redo brings them again. */
@@ -37,13 +41,13 @@ export function createStudyState(initial: Study, notices: Notices): StudyState {
     unsaved: computed(() => study.value !== saved.value),
     undoLabel: computed(() => history.value.past.at(-1)?.label ?? null),
     redoLabel: computed(() => history.value.future.at(-1)?.label ?? null),
-    perform(edit) {
+    perform(edit, onRefused = (sentence) => notices.tell(sentence)) {
       try {
         history.value = perform(history.value, edit);
         return true;
       } catch (error) {
         if (!(error instanceof Refusal)) throw error;
-        notices.tell(error.message);
+        onRefused(error.message);
         return false;
       }
     },

@@ -1,6 +1,5 @@
 import { useSignal } from '@preact/signals';
 import { useId } from 'preact/hooks';
-import { Refusal } from '../../shared-core/base/refusal.ts';
 import { useApp } from '../state/app.ts';
 import { NOTHING_TYPED } from '../state/viewState.ts';
 import { readNumber } from '../ui/numberText.ts';
@@ -52,15 +51,9 @@ export function Divide({ model }: { readonly model: StripModel }) {
     trouble.value = 'sentence' in found ? found.sentence : null;
     if ('sentence' in found) return;
     const edit = divideShells(kind, found.shells, found.range, sample, derived.cosmology.value);
-    try {
-      edit.apply(studyState.study.peek());
-    } catch (error) {
-      // A refusal belongs beside the fields that caused it, not among the notices.
-      if (!(error instanceof Refusal)) throw error;
-      trouble.value = error.message;
-      return;
-    }
-    studyState.perform(edit);
+    // A refusal belongs beside the fields that caused it, not among the notices.
+    const refused = (sentence: string): void => void (trouble.value = sentence);
+    if (!studyState.perform(edit, refused)) return;
     // From now on the range is that of the edges.
     view.typedRange.value = NOTHING_TYPED;
     view.selectedShell.value = standingShell(studyState.study.peek().edges, view.selectedShell.peek());

@@ -1,6 +1,5 @@
 import { signal } from '@preact/signals';
 import { useId, useLayoutEffect, useRef, useState } from 'preact/hooks';
-import { Refusal } from '../../shared-core/base/refusal.ts';
 import {
   addEdge,
   type Edit,
@@ -56,11 +55,10 @@ export function EdgeForm(props: {
   }, []);
 
   const perform = (edit: Edit, z: number): void => {
-    const sentence = refusalOf(edit, studyState.study.peek());
-    setTrouble(sentence === null ? null : { sentence, z });
-    if (sentence !== null) return;
+    // The sentence stands under the field, not among the notices.
+    if (!studyState.perform(edit, (sentence) => setTrouble({ sentence, z }))) return;
+    setTrouble(null);
     lastUnit.value = kind;
-    studyState.perform(edit);
     onDone();
   };
   const submit = (event: Event): void => {
@@ -152,14 +150,4 @@ function endOfAll(index: number, edges: number, back: boolean): 'from' | 'to' | 
 /** An edge's own value in a unit, in the digits that a field has room for. */
 export function untouchedText(z: number, kind: RadialReading, readings: Readings): string {
   return fieldText(Number(readings[kind].shownAt(z).toPrecision(6)));
-}
-
-function refusalOf(edit: Edit, study: Parameters<Edit['apply']>[0]): string | null {
-  try {
-    edit.apply(study);
-    return null;
-  } catch (error) {
-    if (error instanceof Refusal) return error.message;
-    throw error;
-  }
 }

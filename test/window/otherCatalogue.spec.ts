@@ -2,7 +2,7 @@ import { copyFileSync, existsSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import type { Page } from '@playwright/test';
-import { accessible, expect, ready, test } from './window.ts';
+import { accessible, expect, legible, ready, test } from './window.ts';
 
 const SHAPLEY = fileURLToPath(new URL('../data/shapley.csv', import.meta.url));
 const OTHER = 'ra,dec,z\n150,2,0.5\n151,3,0.6\n152,2.5,0.7\n';
@@ -143,6 +143,7 @@ test('without its catalogue a study gives no numbers of galaxies, says so in one
   await bare.keyboard.press('Escape');
   await accessible(bare);
   await bare.getByRole('button', { name: 'Light theme' }).click();
+  await legible(bare);
 
   const [chooser] = await Promise.all([
     bare.waitForEvent('filechooser'),

@@ -64,7 +64,11 @@ export const addPictureOptions = (command: Command): Command =>
       "brighter (above 0) or fainter than the data's own",
       oneNumber('--exposure'),
     )
-    .option('--glow <share>', 'how far the brightest places turn to white, 0 to 1', oneNumber('--glow'))
+    .option(
+      '--glow <share>',
+      "how far the brightest places turn to the glow's colour (white; ink on paper), 0 to 1",
+      oneNumber('--glow'),
+    )
     .option(
       '--depth-cue <share>',
       'how much fainter the farthest galaxies are than the nearest, 0 to 1',

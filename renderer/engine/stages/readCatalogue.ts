@@ -1,6 +1,6 @@
 import type { Catalogue } from '../../../shared-core/catalogue/catalogue.ts';
 import { loadCatalogue } from '../../../shared-core/catalogue/loadCatalogue.ts';
-import { loadKey } from '../loadKey.ts';
+import { cutColumns, loadKey } from '../loadKey.ts';
 import type { EngineSource, Loaded, Wanted } from '../protocol.ts';
 import { startSha256 } from '../sourceBytes.ts';
 
@@ -29,7 +29,7 @@ export async function readCatalogue(
   onFraction(0);
   const { catalogue, header, mapping } = await loadCatalogue(await open(source), {
     ...(wish.mapping === null ? {} : { mapping: wish.mapping }),
-    extras: [...new Set(wish.cuts.map((c) => c.column))],
+    extras: cutColumns(wish.cuts),
     contains: null,
     cuts: [],
     signal,

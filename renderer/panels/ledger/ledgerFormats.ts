@@ -2,6 +2,7 @@ import { LEDGER_QUANTITIES } from '../../../shared-core/report/ledgerQuantities.
 import { asCsv, asEcsv, asLatex, asText } from '../../../shared-core/report/table.ts';
 import type { App } from '../../state/app.ts';
 import { copyText } from '../../ui/clipboard.ts';
+import { whyWithheld } from '../notAtHand.ts';
 import { currentLedgerFacts, currentLedgerTable } from './currentLedger.ts';
 import { asTsv, ledgerJson } from './ledgerTable.ts';
 
@@ -18,7 +19,7 @@ export type LedgerFormat = (typeof LEDGER_FORMATS)[number];
 
 /** Writes the ledger to a file that the person names. */
 export async function exportLedger(app: App, format: LedgerFormat): Promise<void> {
-  if (refusedAsStale(app)) return;
+  if (refused(app)) return;
   const text = ledgerText(app, format.key);
   const name = `${app.studyState.study.value.name} shells${format.suffix}`;
   await app.files.exportFile(name, format.mimeType, new TextEncoder().encode(text));
@@ -35,7 +36,7 @@ type LedgerCopy = (typeof LEDGER_COPIES)[number]['key'];
 
 /** Puts the ledger on the clipboard: tabs and every digit for a spreadsheet, or aligned and rounded for reading. */
 export async function copyLedger(app: App, as: LedgerCopy): Promise<void> {
-  if (refusedAsStale(app)) return;
+  if (refused(app)) return;
   const table = currentLedgerTable(app);
   const text = as === 'tabs' ? asTsv(table) : ledgerText(app, as);
   const done = await copyText(text);
@@ -48,10 +49,10 @@ export async function copyLedger(app: App, as: LedgerCopy): Promise<void> {
 }
 
 /** Cuts and region are the study's at once, its galaxies a moment later: between, the notes would not be of the numbers. */
-function refusedAsStale({ engine, notices }: App): boolean {
-  if (engine.fresh.value) return false;
-  notices.tell('The galaxies of the study as it stands are not read yet: give the ledger out once they are.');
-  return true;
+function refused(app: App): boolean {
+  const why = whyWithheld(app);
+  if (why !== null) app.notices.tell(why);
+  return why !== null;
 }
 
 function ledgerText(app: App, key: LedgerFormat['key']): string {

@@ -3,7 +3,10 @@ import {
   checkFilmSize,
   type FilmOptions,
   filmOptions,
+  LEAST_SECONDS,
   MOST_FILM_SIDE_PX,
+  MOST_FRAMES_A_SECOND,
+  MOST_SECONDS,
 } from '../../../shared-core/picture/film.ts';
 import {
   LEAST_SIDE_PX,
@@ -44,9 +47,11 @@ export function readChoices(choices: PictureChoices, screenPx: readonly [number,
   };
   const isFilm = choices.what === 'film';
   const size = isFilm ? filmSizeOf(choices, number) : sizeOf(choices, screenPx, number);
-  const seconds = isFilm ? number('seconds', choices.seconds, 'The length in seconds', 0.1, 600) : 0;
+  const seconds = isFilm
+    ? number('seconds', choices.seconds, 'The length in seconds', LEAST_SECONDS, MOST_SECONDS)
+    : 0;
   const framesPerSecond = isFilm
-    ? number('framesPerSecond', choices.framesPerSecond, 'Frames a second', 1, 60)
+    ? number('framesPerSecond', choices.framesPerSecond, 'Frames a second', 1, MOST_FRAMES_A_SECOND)
     : 0;
   const slab = slabOf(choices, number);
   const depthRedshift =
