@@ -29,7 +29,7 @@ export function coneFrame(model: ConeModel, viewport: Viewport, now: number, cue
   const shown = model.shown(now);
   const lanes = model.lanes(shown.factors);
   const pixels = pixelMatrix(shown.pose, viewport);
-  const range = cue > 0 ? model.depth(shown) : { near: 0, far: 0 };
+  const range = cue > 0 ? model.depth(shown, lanes) : { near: 0, far: 0 };
   return {
     fields: model.fields,
     shown,

@@ -169,8 +169,7 @@ export class ConeModel {
   }
 
   /** How far what is shown reaches along the line of sight. */
-  depth({ pose }: Shown): DepthRange {
-    const lanes = this.lanes(this.factors());
+  depth({ pose }: Pick<Shown, 'pose'>, lanes: readonly Lane[]): DepthRange {
     const { near, far } = depthRange(pose, cornersOf(lanes, this.fields));
     // What lies on all sides reaches toward the viewer as far as away, wherever its outline runs.
     const around = lanes.length === 0 || lanes.some((lane) => this.fields[lane.field]!.surrounds);

@@ -156,7 +156,7 @@ export class Galaxies {
     this.radiusJob = null;
     const { input, table, colouring, shells } = this;
     if (!input || input.count === 0) {
-      this.store = null;
+      this.takeStore(null);
       this.current = true;
       this.takeCentres();
       this.changed('store');
@@ -167,7 +167,7 @@ export class Galaxies {
     const basis = { galaxies: input, centres: this.nextCentres, table, colouring, shells };
     const failed = (): void => {
       if (job.signal.aborted) return;
-      this.store = null;
+      this.takeStore(null);
       this.current = !this.held;
       this.takeCentres();
       this.changed('store');
@@ -178,12 +178,11 @@ export class Galaxies {
     void this.work.store(basis, this.memory, job.signal).then((store) => {
       if (!store || job.signal.aborted) return;
       this.trouble(null);
-      this.store = store;
+      this.takeStore(store);
       this.current = !this.held;
       this.ready = 1;
       this.takeCentres();
       this.changed('store');
-      this.index = null;
       if (store.count >= INDEXED) {
         void this.work.index(store, job.signal).then((index) => {
           if (this.store === store) this.index = index;
@@ -197,6 +196,12 @@ export class Galaxies {
         colouring === this.colouring && (shells === this.shells || colouring.kind !== 'shell');
       if (!asColoured) this.recolour();
     }, failed);
+  }
+
+  /** The index for pointing is of one store alone. */
+  private takeStore(store: PointStore | null): void {
+    this.store = store;
+    this.index = null;
   }
 
   private recolour(): void {

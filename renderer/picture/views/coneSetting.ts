@@ -78,21 +78,29 @@ export function coneSetting(input: ViewInput, arrange: (model: ConeModel) => voi
     caption: [],
     marks: { hovered: null, picked: [], pairText: '' },
   };
-  return { model, viewport, pose: shown.pose, range: model.depth(shown), pixels, lanes, radius, scene };
+  return {
+    model,
+    viewport,
+    pose: shown.pose,
+    range: model.depth(shown, lanes),
+    pixels,
+    lanes,
+    radius,
+    scene,
+  };
 }
 
 /** What is seen of a setting at one moment. */
-export type ConeMoment = Pick<ConeSetting, 'pixels' | 'lanes' | 'pose' | 'range'>;
+export type ConeMoment = Pick<ConeSetting, 'lanes' | 'pose' | 'range'>;
 
 /** Where things of the sky stand in a setting, its lanes and its viewer perhaps moved. */
 export function conePlaces(
   { model, radius }: ConeSetting,
-  { pixels, lanes, pose, range }: ConeMoment,
+  { lanes, pose, range }: ConeMoment,
   { box, numbers }: ViewInput,
 ): Pick<ViewDrawing, 'place' | 'placeAll'> {
   const laneOf = (field: number): PaintedLane | undefined => lanes.find((lane) => lane.field === field);
-  const matrixFor = (field: number): Float64Array | null =>
-    model.fields.length === 0 ? pixels : (laneOf(field)?.matrix ?? null);
+  const matrixFor = (field: number): Float64Array | null => laneOf(field)?.matrix ?? null;
   const fieldsOf = fieldOfAll(model.fields.map((field) => field.centre));
   return {
     place: ([x, y, z], mpc): Point | null => {
@@ -103,7 +111,7 @@ export function conePlaces(
       const { selected, background } = numbers.facts;
       if (!selected || !background) return;
       const { x, y, z } = selected.directions;
-      const matrices = model.fields.length === 0 ? [pixels] : model.fields.map((_, f) => matrixFor(f));
+      const matrices = model.fields.map((_, f) => matrixFor(f));
       const cues = model.fields.map((_, f) => {
         const lane = laneOf(f);
         return lane ? depthCue(pose, lane.model, range, numbers.light.depthCue) : null;

@@ -2,6 +2,7 @@ import { project } from '../../cone/geometry/projection.ts';
 import { add, scale, unit } from '../../cone/geometry/vector.ts';
 import type { Pen, Point } from '../../cone/overlay/pen.ts';
 import type { PaintedLane } from '../../cone/overlay/scene.ts';
+import type { ShellInput } from '../../cone/types.ts';
 import { fillRuns } from './view.ts';
 
 const ARC_STEPS = 48;
@@ -19,6 +20,21 @@ export function paintBodies(
   else {
     fillRuns(pen, capAt(lane, outer), css);
     for (const wall of walls(lane, inner, outer)) fillRuns(pen, [wall], css);
+  }
+}
+
+/** The bodies of shells over all lanes. @param colourOf of the i-th shell, as CSS */
+export function paintAllBodies(
+  pen: Pen,
+  shells: readonly ShellInput[],
+  lanes: readonly PaintedLane[],
+  aligned: boolean,
+  radius: (comovingMpc: number) => number,
+  colourOf: (i: number) => string,
+): void {
+  for (const [i, shell] of shells.entries()) {
+    const ends = [radius(shell.comovingMinMpc), radius(shell.comovingMaxMpc)] as const;
+    for (const lane of lanes) paintBodies(pen, lane, aligned, ends, colourOf(i));
   }
 }
 

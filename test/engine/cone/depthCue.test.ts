@@ -46,7 +46,8 @@ it('reaches through the whole of a sky without an outline, from wherever it is s
     [0.1, 0, 0.995],
   ] as const) {
     const axes = lookingFrom(from, from[2] > 0.9 ? [0, 1, 0] : [0, 0, 1]);
-    const { near, far } = model.depth({ ...model.shown(0), pose: { ...pose, axes } });
+    const shown = { pose: { ...pose, axes } };
+    const { near, far } = model.depth(shown, model.lanes(model.shown(0).factors));
     // A sphere of radius 1 around the observer.
     expect(near).toBeCloseTo(-1, 9);
     expect(far).toBeCloseTo(1, 9);

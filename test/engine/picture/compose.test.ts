@@ -132,6 +132,17 @@ it('says in the offered caption what a reader must know', () => {
   expect(words).toMatch(/3\u202f?000 galaxies/);
 });
 
+it('says of a whole sky that it is one, and from where it is seen', () => {
+  const selected = {
+    ...facts.selected!,
+    footprint: { ...facts.selected!.footprint!, fields: [], rings: [] },
+  };
+  const sky = { ...facts, study: { ...STUDY, region: null, edges: [] }, selected };
+  const words = describePicture(composePicture(small(), sky));
+  expect(words).toMatch(/^Cone diagram: a survey of the whole sky seen around the observer, depth outward\./);
+  expect(describePicture(composePicture(small(), facts))).toMatch(/a survey of 3 fields seen from the side/);
+});
+
 it('sets the wedge by its numbers: radius by distance, angle by right ascension', () => {
   const scene = composePicture(
     small({ view: 'wedge', slab: { kind: 'declination', decMinDeg: 7, decMaxDeg: 17 } }),

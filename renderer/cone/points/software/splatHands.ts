@@ -33,6 +33,7 @@ export class SplatHands {
 
   /** Asks one worker. @throws Error when the workers fail or are ended before it answers */
   ask(worker: number, message: Unsent, transfer: Transferable[] = []): Promise<FromWorker> {
+    if (this.ended) return Promise.reject(new Error('the drawing workers were ended'));
     const id = this.nextId++;
     return new Promise((resolve, reject) => {
       // A worker that is ended for want of memory says nothing.

@@ -3,14 +3,16 @@ import { formatNumber, shownUnit, shownValue } from '../../../../shared-core/rep
 import type { Pen, Point } from '../../../cone/overlay/pen.ts';
 import { drawRuler } from '../../../cone/overlay/ruler.ts';
 import { type PictureNumbers, pictureScale } from '../../numbers.ts';
+import { writeLeft } from '../../text/writeLeft.ts';
 import type { ConeSetting } from '../../views/coneSetting.ts';
 import type { ViewInput } from '../../views/view.ts';
 
 /** Room of the ruler and of the numbers above it. */
-export const DEPTH_RULER_HEIGHT = 100;
+export const DEPTH_RULER_HEIGHT = 110;
 const SIDE = 12;
-const RULER_UP = 46;
-const READING_UP = 88;
+const RULER_UP = 56;
+const READING_UP = 98;
+const READING_SIZE = 12.5;
 
 /**
  * Where the camera is: a radial ruler that holds still below the stage, redshift above and comoving distance below its
@@ -31,9 +33,11 @@ export function depthRuler(
     // Gates that reach out of the stage end at it.
     pen.context.fillStyle = pen.theme.background;
     pen.context.fillRect(0, box.height - height, box.width, height);
-    const common = { at: place, fromMpc: 0, toMpc: scene.farMpc, title: '' } as const;
-    drawRuler(pen, { ...common, ticks: scale.rulers.redshift, awayFrom: [box.width / 2, y + 100] });
-    drawRuler(pen, { ...common, ticks: scale.rulers.comoving, awayFrom: [box.width / 2, y - 100] });
+    const common = { at: place, fromMpc: 0, toMpc: scene.farMpc, inline: true } as const;
+    const { rulers, titles } = scale;
+    const [above, below] = [[box.width / 2, y + 100] as const, [box.width / 2, y - 100] as const];
+    drawRuler(pen, { ...common, title: titles.redshift, ticks: rulers.redshift, awayFrom: above });
+    drawRuler(pen, { ...common, title: titles.comoving, ticks: rulers.comoving, awayFrom: below });
     const x = xOf(at);
     pen.line(
       [
@@ -59,17 +63,13 @@ const byKey = new Map(DISTANCE_QUANTITIES.map((quantity) => [quantity.key, quant
 
 function paintReading(pen: Pen, z: number, { cosmology, units }: PictureNumbers): void {
   const row = distanceRows(cosmology, [z])[0]!;
-  const { context } = pen;
   let x = SIDE;
   for (const { words, key, room, decimals } of READINGS) {
     const quantity = byKey.get(key)!;
     const value = formatNumber(shownValue(quantity, row, units)!, { decimals });
     const text = `${words} ${value} ${shownUnit(quantity, units)}`.trimEnd();
-    pen.font(12.5, key === 'z' ? 600 : 400);
-    context.textAlign = 'left';
-    context.textBaseline = 'alphabetic';
-    context.fillStyle = key === 'z' ? pen.theme.ink : pen.theme.inkMuted;
-    context.fillText(text, x, pen.height - READING_UP);
+    const [colour, weight] = key === 'z' ? [pen.theme.ink, 600] : [pen.theme.inkMuted, 400];
+    writeLeft(pen, text, x, pen.height - READING_UP, READING_SIZE, colour, weight);
     x += room;
   }
 }

@@ -1,4 +1,5 @@
 import { Refusal } from '../../../../shared-core/base/refusal.ts';
+import { edgeText } from '../../../../shared-core/report/shellRange.ts';
 import { cssColour } from '../../../colour/shellColours.ts';
 import { lookingFrom } from '../../../cone/geometry/poses.ts';
 import type { PreparedField } from '../../../cone/geometry/preparedField.ts';
@@ -82,7 +83,7 @@ export function flyAlongView(whole: ViewInput, fieldNumber: number): FilmView {
         nameGates(over.pen, moved, setting, whole, at);
       }
       // What fades with depth does so from the camera on.
-      const places = conePlaces(setting, { pixels, lanes, pose, range: { near: at, far: 1 } }, input);
+      const places = conePlaces(setting, { lanes, pose, range: { near: at, far: 1 } }, input);
       const instruments = penOn(whole);
       ruler(instruments.pen, at);
       return {
@@ -159,7 +160,7 @@ function nameGates(
     if (clear === 0) continue;
     const colour = cssColour(scene.shellColours[Math.max(0, i - 1)]!, clear);
     pen.font(11.5, 600);
-    pen.write(`z ${Number(z.toFixed(4))}`, top[0], top[1] - 9, colour);
+    pen.write(`z ${edgeText(z)}`, top[0], top[1] - 9, colour);
   }
 }
 

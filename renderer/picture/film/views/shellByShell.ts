@@ -3,9 +3,9 @@ import { rankBelow } from '../../../../shared-core/shells/sample.ts';
 import { cssColour } from '../../../colour/shellColours.ts';
 import { paintOverlay } from '../../../cone/overlay/paintOverlay.ts';
 import { paintShells } from '../../../cone/overlay/shellPaint.ts';
-import { countText } from '../../views/cone.ts';
+import { sideText, surveyText } from '../../views/cone.ts';
 import { conePlaces, coneSetting, ensureComovingTitle } from '../../views/coneSetting.ts';
-import { paintBodies } from '../../views/shellBodies.ts';
+import { paintAllBodies } from '../../views/shellBodies.ts';
 import { penOn, type ViewInput } from '../../views/view.ts';
 import { shellLights } from '../paths.ts';
 import type { FilmView } from './filmView.ts';
@@ -45,18 +45,18 @@ export function shellByShellView(whole: ViewInput): FilmView {
   const places = conePlaces(setting, setting, input);
   return {
     notes: [...model.state().caption, 'each shell is lit in turn'],
-    words: `a survey of ${countText(lanes.length)} seen from the side, each of its ${count} shells lit in turn with its numbers`,
+    words: `${surveyText(lanes)} ${sideText(model)}, each of its ${count} shells lit in turn with its numbers`,
     drawingAt(share) {
       const lights = shellLights(share, count);
       /** 0 dim, 1 as in a picture or lit alone. */
       const lit = (i: number): number => lights.all + lights.shells[i]!;
       const under = penOn(input);
       const over = penOn(input);
-      for (const [i, shell] of numbers.shellInputs.entries()) {
-        const ends = [radius(shell.comovingMinMpc), radius(shell.comovingMaxMpc)] as const;
+      paintAllBodies(under.pen, numbers.shellInputs, lanes, model.aligned, radius, (i) => {
         const body = lights.all + LIT_BODY * lights.shells[i]! + DIM_BODY * (1 - lit(i));
-        const css = cssColour(scene.shellColours[i]!, theme.shellAlpha * body);
-        for (const lane of lanes) paintBodies(under.pen, lane, model.aligned, ends, css);
+        return cssColour(scene.shellColours[i]!, theme.shellAlpha * body);
+      });
+      for (const [i, shell] of numbers.shellInputs.entries()) {
         over.pen.context.globalAlpha = DIM_LINE + (1 - DIM_LINE) * lit(i);
         paintShells(over.pen, {
           ...scene,

@@ -6,9 +6,9 @@ import { add, intoFrame, scale, type Vec3 } from '../../../cone/geometry/vector.
 import { paintOverlay } from '../../../cone/overlay/paintOverlay.ts';
 import type { OverlayScene, PaintedLane } from '../../../cone/overlay/scene.ts';
 import { paintShells } from '../../../cone/overlay/shellPaint.ts';
-import { countText } from '../../views/cone.ts';
+import { surveyText } from '../../views/cone.ts';
 import { type ConeSetting, conePlaces, coneSetting, ensureComovingTitle } from '../../views/coneSetting.ts';
-import { paintBodies } from '../../views/shellBodies.ts';
+import { paintAllBodies } from '../../views/shellBodies.ts';
 import { penOn, type ViewInput } from '../../views/view.ts';
 import { turnRadians } from '../paths.ts';
 import type { FilmView } from './filmView.ts';
@@ -47,7 +47,7 @@ export function turntableView(input: ViewInput): FilmView {
     ],
     words: around
       ? 'the sky around the observer, turning once about its poles'
-      : `a survey of ${countText(setting.lanes.length)} seen from the side, each cone turning once about its line of sight, the observer at the left and depth to the right`,
+      : `${surveyText(setting.lanes)} seen from the side, each cone turning once about its line of sight, the observer at the left and depth to the right`,
     drawingAt(share) {
       const angle = turnRadians(share);
       const lanes = setting.lanes.map((lane): PaintedLane => {
@@ -56,18 +56,16 @@ export function turntableView(input: ViewInput): FilmView {
       });
       const moved: OverlayScene = { ...scene, lanes, aligned: false };
       const under = penOn(input);
-      for (const [i, shell] of scene.shells.shells.entries()) {
-        const ends = [radius(shell.comovingMinMpc), radius(shell.comovingMaxMpc)] as const;
-        const css = cssColour(scene.shellColours[i]!, theme.shellAlpha);
-        for (const lane of lanes) paintBodies(under.pen, lane, false, ends, css);
-      }
+      paintAllBodies(under.pen, scene.shells.shells, lanes, false, radius, (i) =>
+        cssColour(scene.shellColours[i]!, theme.shellAlpha),
+      );
       const over = penOn(input);
       paintShells(over.pen, moved);
       return {
         under: under.items,
         over: [...over.items, ...rulers.items],
         dim: null,
-        ...conePlaces(setting, { pixels: scene.pixels, lanes, pose, range }, input),
+        ...conePlaces(setting, { lanes, pose, range }, input),
       };
     },
   };
