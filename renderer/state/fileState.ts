@@ -132,8 +132,9 @@ export function createFileState(options: FileStateOptions): FileState {
       }, undefined),
     takeOffered: (id) =>
       guarded(async () => {
-        const next = await unsavedWork.read(id);
-        if (await mayLeave()) await unsavedWork.takeOver(id, next, () => show(next, false));
+        // It stays on offer until the person agreed to leave what is open: whoever stays has claimed nothing.
+        await unsavedWork.look(id);
+        if (await mayLeave()) await unsavedWork.takeOver(id, (next) => show(next, false));
       }, undefined),
     dropOffered: (id) => guarded(() => unsavedWork.dropOffered(id), undefined),
     exportFile,

@@ -16,7 +16,12 @@ function deskOf() {
   let saves = 0;
   let release = () => {};
   const gate = { slow: false };
-  const person = { name: 'a', other: 'stay' as 'stay' | 'replace' | 'saveAs' };
+  const person = {
+    name: 'a',
+    other: 'stay' as 'stay' | 'replace' | 'saveAs',
+    leave: 'leave' as 'leave' | 'stay',
+  };
+  const lost = new TextEncoder().encode(writeStudy(emptyStudy('found again')));
   const bridge = {
     hostKind: 'local',
     saveFolder: '/',
@@ -32,9 +37,13 @@ function deskOf() {
       return { kind: 'saved', stamp: stamp(++saves) };
     },
     recentStudies: async () => [],
-    listUnsaved: async () => [],
+    listUnsaved: async () => [{ workId: 'old', title: 'found again', keptMs: 0, sizeBytes: lost.length }],
     keepUnsaved: async (_: string, title: string) => void log.push(`keep ${title}`),
-    takeUnsaved: async () => new TextEncoder().encode(writeStudy(emptyStudy('found again'))),
+    lookAtUnsaved: async () => lost,
+    takeUnsaved: async (id: string) => {
+      log.push(`take ${id}`);
+      return lost;
+    },
     dropUnsaved: async (id: string) => void log.push(id === 'old' ? 'drop old' : 'drop mine'),
     setWindowState: async () => undefined,
     onCloseRequest: () => () => undefined,
@@ -45,7 +54,7 @@ function deskOf() {
     bridge,
     notices,
     studyState,
-    askLeave: async () => 'leave',
+    askLeave: async () => person.leave,
     askReplace: async () => 'stay',
     askOther: async ({ file, catalogue }) => {
       log.push(`ask ${file} ${catalogue}`);
@@ -287,6 +296,20 @@ describe('work that is not saved', () => {
     const { log, files, studyState } = deskOf();
     await files.takeOffered('old');
     expect(studyState.study.value.name).toBe('found again');
-    expect(log).toEqual(['keep found again', 'drop old']);
+    expect(log).toEqual(['take old', 'keep found again', 'drop old']);
+    expect(files.offered.value).toEqual([]);
+  });
+
+  it('stays on offer to every window while the person stays with what is open', async () => {
+    const { log, files, studyState, rename, person } = deskOf();
+    rename('mine');
+    person.leave = 'stay';
+    await files.takeOffered('old');
+    expect(studyState.study.value.name).toBe('mine');
+    expect(log).toEqual([]);
+    expect(files.offered.value.map(({ workId }) => workId)).toEqual(['old']);
+    person.leave = 'leave';
+    await files.takeOffered('old');
+    expect(studyState.study.value.name).toBe('found again');
   });
 });

@@ -14,10 +14,10 @@ const KEEP_AT_LEAST_MS = 5000;
 interface UnsavedWorkState {
   /** Work from a window that ended without saving. */
   readonly offered: ReadonlySignal<readonly UnsavedWork[]>;
-  /** The study of an offer. */
-  read(workId: string): Promise<Study>;
+  /** Reads an offer, which stays one: a Refusal where it holds no study. */
+  look(workId: string): Promise<Study>;
   /** Opens the study of an offer: from then on it is this window's work. */
-  takeOver(workId: string, next: Study, open: () => Promise<void>): Promise<void>;
+  takeOver(workId: string, open: (next: Study) => Promise<void>): Promise<void>;
   dropOffered(workId: string): Promise<void>;
   /** This window's work is saved or given up: nothing is to be offered back. */
   forget(): Promise<void>;
@@ -69,10 +69,11 @@ export function keepUnsavedWork(
 
   return {
     offered,
-    read: async (id) => readStudy(new TextDecoder().decode(await bridge.takeUnsaved(id))),
-    async takeOver(id, next, open) {
+    look: async (id) => studyIn(await bridge.lookAtUnsaved(id)),
+    async takeOver(id, open) {
+      const next = studyIn(await bridge.takeUnsaved(id));
       withdraw(id);
-      await open();
+      await open(next);
       // Kept under this window's name before the old copy goes: at no moment is there none.
       await keep(next);
       kept = true;
@@ -88,6 +89,8 @@ export function keepUnsavedWork(
     },
   };
 }
+
+const studyIn = (bytes: Uint8Array): Study => readStudy(new TextDecoder().decode(bytes));
 
 function newWorkId(): string {
   const bytes = crypto.getRandomValues(new Uint8Array(18));
