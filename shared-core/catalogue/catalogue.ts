@@ -1,3 +1,5 @@
+import type { Decimals } from './formats/delimited/decimals.ts';
+
 /** Where the radial information comes from: a redshift, or a velocity cz in km/s (z = v/c, the optical convention). */
 export type RadialKind = 'redshift' | 'czKmS';
 
@@ -42,7 +44,9 @@ export interface RowAccount {
   readonly reasons: Readonly<Partial<Record<SetAsideReason, number>>>;
   /** Rows that repeat the RA and Dec of an earlier kept row: reported, not dropped. */
   readonly repeatedPositions: number;
-  /** Rows among those that are no numbers where one has a decimal comma (10,5); left out for none. */
+  /** How the file's numbers are written. */
+  readonly decimals: Decimals;
+  /** Of a file read with decimal points, rows that are no numbers where one has a comma (10,5); left out for none. */
   readonly decimalCommas?: number;
 }
 

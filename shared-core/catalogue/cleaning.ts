@@ -1,6 +1,7 @@
 import { SPEED_OF_LIGHT_KM_S } from '../base/light.ts';
 import type { RadialKind, SetAsideReason } from './catalogue.ts';
-import { isMissing, parseNumber } from './numbers.ts';
+import type { DecimalMark } from './formats/delimited/decimals.ts';
+import { isMissing, parseCommaNumber, parseNumber } from './numbers.ts';
 
 /** Largest redshift taken: tables of distance end here, at about the time the universe became transparent. */
 export const LARGEST_REDSHIFT = 1100;
@@ -57,11 +58,13 @@ export function readText(
   wanted: readonly number[],
   required: number,
   values: Float64Array,
+  mark: DecimalMark,
 ): Fault | null {
   if (row.length !== width) return WRONG_FIELD_COUNT;
+  const parse = mark === ',' ? parseCommaNumber : parseNumber;
   let unread = -1;
   for (let place = wanted.length - 1; place >= 0; place--) {
-    values[place] = parseNumber(row[wanted[place]!]!);
+    values[place] = parse(row[wanted[place]!]!);
     if (place < required && Number.isNaN(values[place])) unread = place;
   }
   if (unread === -1) return null;
@@ -81,6 +84,7 @@ export interface RowLayout {
   readonly radialKind: RadialKind;
   /** -1: no weight column, every galaxy weighs 1. */
   readonly weight: number;
+  readonly decimalMark: DecimalMark;
 }
 
 /** Judges single rows of text, for showing: all that loading does but region and cuts. */
@@ -101,9 +105,10 @@ export class RowCleaner {
   /** Why the row cannot be used, or null for a usable one. */
   judge(row: readonly string[]): SetAsideReason | null {
     const required = this.#wanted.length;
+    const { cells, radialKind, decimalMark } = this.#layout;
     const fault =
-      readText(row, this.#layout.cells, this.#wanted, required, this.#values) ??
-      judgeNumbers(this.#values, required, this.#layout.radialKind);
+      readText(row, cells, this.#wanted, required, this.#values, decimalMark) ??
+      judgeNumbers(this.#values, required, radialKind);
     this.blamedCell = fault === null ? -1 : (this.#wanted[fault.place] ?? -1);
     return fault === null ? null : fault.reason;
   }

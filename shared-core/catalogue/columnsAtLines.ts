@@ -20,7 +20,7 @@ export async function columnsAtLines(
 ): Promise<Map<string, Float64Array>> {
   const table = await openTable(bytes, watch);
   try {
-    const { header } = table;
+    const { header, decimals } = table;
     const cells = columns.map((column) => header.indexOf(columnNamed(header, column)));
     const wanted = [...new Set(cells)];
     const out = wanted.map(() => new Float64Array(lines.length).fill(Number.NaN));
@@ -33,7 +33,7 @@ export async function columnsAtLines(
         return true;
       },
       text(line, row) {
-        if (readText(row, header.length, wanted, 0, read) === null) sink.numbers(line, read);
+        if (readText(row, header.length, wanted, 0, read, decimals.mark) === null) sink.numbers(line, read);
       },
     };
     await table.numbers(wanted, 0, sink);

@@ -1,4 +1,5 @@
 const DECIMAL = /^[+-]?(\d+\.?\d*|\.\d+)([eE][+-]?\d+)?$/;
+const DECIMAL_COMMA = /^[+-]?(\d+,\d*|,\d+)([eE][+-]?\d+)?$/;
 /** How tables spell "no value". NaN is not among them: it says that a computation failed. */
 const MISSING = new Set(['', 'na', 'n/a', 'null', 'none', '-', '--', '\\n']);
 
@@ -28,6 +29,17 @@ function parseCarefully(text: string): number {
   const value = +trimmed;
   // Adding 0 turns -0 into 0, so that equal positions are equal to the bit.
   return Number.isFinite(value) ? value + 0 : Number.NaN;
+}
+
+/** As parseNumber, of a file with decimal commas: 1,5 is one and a half, and 1.5 is no number. */
+export function parseCommaNumber(text: string): number {
+  return text.includes('.') ? Number.NaN : parseNumber(text.replace(',', '.'));
+}
+
+/** What parts the decimals of a number, white space around it allowed: '' for a whole one, null for no number. */
+export function markOf(text: string): '.' | ',' | '' | null {
+  if (!Number.isNaN(parseNumber(text))) return text.includes('.') ? '.' : '';
+  return DECIMAL_COMMA.test(text.trim()) ? ',' : null;
 }
 
 /** True of a cell that says there is no value: empty, NA, null, none, a dash (case-insensitive). */

@@ -1,5 +1,6 @@
 import { Refusal } from '../base/refusal.ts';
 import type { ColumnMapping } from './catalogue.ts';
+import type { Decimals } from './formats/delimited/decimals.ts';
 import type { Delimiter } from './formats/delimited/delimiter.ts';
 import { openTable } from './formats/delimited/openTable.ts';
 import { isBlank } from './formats/delimited/table.ts';
@@ -11,6 +12,7 @@ import type { ColumnChoice } from './spellings.ts';
 export interface Preview {
   readonly header: readonly string[];
   readonly delimiter: Delimiter;
+  readonly decimals: Decimals;
   /** First rows as text, cells trimmed and no longer than 200 characters; a row may have more or fewer cells than the header. */
   readonly rows: readonly (readonly string[])[];
   /** Line of each row in the file. */
@@ -50,8 +52,16 @@ export async function previewCatalogue(
   } finally {
     await table.close();
   }
-  const { header, delimiter } = table;
-  return { header, delimiter, rows, lines, suggestion: suggestMapping(header), ...mappingOf(header) };
+  const { header, delimiter, decimals } = table;
+  return {
+    header,
+    delimiter,
+    decimals,
+    rows,
+    lines,
+    suggestion: suggestMapping(header),
+    ...mappingOf(header),
+  };
 }
 
 function mappingOf(header: readonly string[]): Pick<Preview, 'mapping' | 'problem'> {

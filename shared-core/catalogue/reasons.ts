@@ -25,11 +25,13 @@ export function reasonSentence({ reason, column, text }: SetAsideRow): string {
   return `The row is set aside as one ${reasonText(reason)}${column === null ? '' : `: ${column} ${value}`}.`;
 }
 
-/** What to do where most rows are written with decimal commas; null where they are not. */
-export function decimalCommaAdvice({ rowsRead, decimalCommas = 0 }: RowAccount): string | null {
+/** How numbers are read where that is not plain: that commas part the decimals, or why they do not and what to do. Else null. */
+export function decimalsSentence({ rowsRead, decimals, decimalCommas = 0 }: RowAccount): string | null {
+  if (decimals.mark === ',') return 'The file has decimal commas: 10,5 is read as 10.5.';
   if (decimalCommas * 2 <= rowsRead) return null;
+  const why = decimals.doubt ?? 'in a file parted by commas only a decimal point is read';
   return (
-    `${decimalCommas} of ${rowsRead} rows have numbers with a decimal comma, such as 10,5, and only a decimal point is read: ` +
-    'write the table again with decimal points (in a file parted by semicolons or tabs, replace each comma by a point) and open that.'
+    `${decimalCommas} of ${rowsRead} rows have numbers with a comma inside, such as 10,5, and ${why}: ` +
+    'write the table again with decimal points, or with decimal commas alone and semicolons between the columns, and open that.'
   );
 }

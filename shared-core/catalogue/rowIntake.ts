@@ -1,10 +1,13 @@
 import type { Catalogue, ColumnMapping, SetAsideRow } from './catalogue.ts';
 import { DEC, type Fault, judgeNumbers, RA, RADIAL, readText, redshiftOf } from './cleaning.ts';
+import type { Decimals } from './formats/delimited/decimals.ts';
 import type { RowSink } from './formats/delimited/lineScanner.ts';
+import type { DelimitedTable } from './formats/delimited/table.ts';
 import { isBlank } from './formats/delimited/table.ts';
 import { KeptRows } from './keptRows.ts';
 import { keptText } from './keptText.ts';
 import { columnNamed } from './mapping.ts';
+import { markOf } from './numbers.ts';
 import { type Choice, cutText, OUTSIDE_REGION, STAYS, whyLeftOut } from './selection.ts';
 import { Tally } from './tally.ts';
 
@@ -17,9 +20,6 @@ export interface KeptRow {
   readonly decDeg: number;
   readonly redshift: number;
 }
-
-/** A number as it is written where the comma parts the decimals. */
-const DECIMAL_COMMA = /^\s*[+-]?\d+,\d+\s*$/;
 
 /** What is wanted of the rows beyond the mapping. */
 export interface IntakeWishes {
@@ -49,11 +49,12 @@ export class RowIntake implements RowSink {
   readonly #values: Float64Array;
   readonly #cutPlaces: readonly number[];
   readonly #cutValues: Float64Array;
-  readonly #tally = new Tally();
+  readonly #decimals: Decimals;
+  readonly #tally: Tally;
   readonly #kept: KeptRows;
 
   constructor(
-    { header, delimiter }: { readonly header: readonly string[]; readonly delimiter: string },
+    { header, delimiter, decimals }: Pick<DelimitedTable, 'header' | 'delimiter' | 'decimals'>,
     mapping: ColumnMapping,
     wishes: IntakeWishes,
   ) {
@@ -74,6 +75,8 @@ export class RowIntake implements RowSink {
     this.wanted = places.map((name) => header.indexOf(name));
     this.#header = header;
     this.#delimiter = delimiter;
+    this.#decimals = decimals;
+    this.#tally = new Tally({ setAside: 0, reasons: {}, decimals });
     this.#mapping = mapping;
     this.#choice = choice;
     this.#onSetAside = onSetAside;
@@ -97,7 +100,7 @@ export class RowIntake implements RowSink {
   text(line: number, row: string[]): void {
     const values = this.#values;
     const fault =
-      readText(row, this.#header.length, this.wanted, this.required, values) ??
+      readText(row, this.#header.length, this.wanted, this.required, values, this.#decimals.mark) ??
       judgeNumbers(values, this.required, this.#mapping.radial.kind);
     if (fault === null) this.#choose(line, values, row[this.#idCell]?.trim() ?? null);
     else if (!isBlank(row)) this.#blame(line, fault, row);
@@ -142,8 +145,10 @@ export class RowIntake implements RowSink {
     }
   }
 
+  /** Of a file whose commas are not taken for decimal ones. */
   #hasDecimalComma(row: readonly string[]): boolean {
-    return this.wanted.slice(0, this.required).some((cell) => DECIMAL_COMMA.test(row[cell]!));
+    if (this.#decimals.mark === ',') return false;
+    return this.wanted.slice(0, this.required).some((cell) => markOf(row[cell]!) === ',');
   }
 
   #setAside(row: SetAsideRow, id: string | null): void {

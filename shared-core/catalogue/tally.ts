@@ -1,16 +1,17 @@
 import type { RowAccount, SetAsideReason } from './catalogue.ts';
+import type { Decimals } from './formats/delimited/decimals.ts';
 
 /** Counts rows as they are judged; the account it gives always has rowsRead = kept + setAside. */
 export class Tally {
   #kept = 0;
   #setAside = 0;
   #decimalCommas: number;
+  readonly #decimals: Decimals;
   readonly #reasons: Partial<Record<SetAsideReason, number>>;
 
-  /** `before`: rows already set aside by an earlier pass, which stay so. */
-  constructor(
-    before: Pick<RowAccount, 'setAside' | 'reasons' | 'decimalCommas'> = { setAside: 0, reasons: {} },
-  ) {
+  /** `before`: rows already set aside by an earlier pass, which stay so, and how the file's numbers are read. */
+  constructor(before: Pick<RowAccount, 'setAside' | 'reasons' | 'decimalCommas' | 'decimals'>) {
+    this.#decimals = before.decimals;
     this.#setAside = before.setAside;
     this.#decimalCommas = before.decimalCommas ?? 0;
     this.#reasons = { ...before.reasons };
@@ -37,6 +38,7 @@ export class Tally {
       setAside: this.#setAside,
       reasons: { ...this.#reasons },
       repeatedPositions,
+      decimals: this.#decimals,
       ...(this.#decimalCommas === 0 ? {} : { decimalCommas: this.#decimalCommas }),
     };
   }

@@ -1,4 +1,5 @@
 import type { ColumnMapping, RowAccount, SetAsideReason } from '../catalogue/catalogue.ts';
+import { DECIMAL_POINTS } from '../catalogue/formats/delimited/decimals.ts';
 import type { Random } from '../numerics/random.ts';
 import type { Region } from '../sky/region.ts';
 import { createGalaxyColumns, type GalaxyColumns } from './galaxyColumns.ts';
@@ -63,6 +64,7 @@ export function makeDemoSurvey(seed: number = DEFAULT_SEED): DemoSurvey {
       setAside: spoiled,
       reasons: countReasons(),
       repeatedPositions: REPEATED,
+      decimals: DECIMAL_POINTS,
     },
   };
 }

@@ -5,7 +5,7 @@ import {
   type SetAsideReason,
 } from '../catalogue/catalogue.ts';
 import { describeMapping } from '../catalogue/mapping.ts';
-import { decimalCommaAdvice, reasonText } from '../catalogue/reasons.ts';
+import { decimalsSentence, reasonText } from '../catalogue/reasons.ts';
 import type { Cosmology } from '../cosmology/cosmology.ts';
 import type { PublishedSet } from '../cosmology/publishedSets.ts';
 import type { Footprint } from '../sky/region.ts';
@@ -39,8 +39,8 @@ export function describeAccount(account: RowAccount): string {
     account.repeatedPositions === 0
       ? ''
       : ` ${account.repeatedPositions} kept rows repeat an earlier position.`;
-  const advice = decimalCommaAdvice(account);
-  return `Rows: ${account.rowsRead} read = ${account.kept} kept + ${account.setAside} set aside${why}.${repeats}${advice === null ? '' : ` ${advice}`}`;
+  const decimals = decimalsSentence(account);
+  return `Rows: ${account.rowsRead} read = ${account.kept} kept + ${account.setAside} set aside${why}.${repeats}${decimals === null ? '' : ` ${decimals}`}`;
 }
 
 /** One line on which column was read as what, and how a velocity becomes a redshift. */

@@ -175,10 +175,10 @@ describe('awkward files that can be used', () => {
   });
 
   it('says of decimal commas what they are and what to do', async () => {
-    const path = folder.write('commas.csv', 'ra;dec;z\n10,5;2,25;0,5\n11,5;2,5;0,25\n');
+    const path = folder.write('commas.csv', 'ra,dec,z\n"10,5","2,25","0,5"\n"11,5","2,5","0,25"\n');
     const { code, err } = await conewright('shells', path);
     expect(code).toBe(1);
-    expect(err).toMatch(/2 of 2 rows have numbers with a decimal comma.*replace each comma by a point/);
+    expect(err).toMatch(/2 of 2 rows have numbers with a comma inside.*write the table again/);
   });
 
   it('text that a spreadsheet would run is written harmless', async () => {

@@ -1,3 +1,4 @@
+import type { Preview } from '../../../shared-core/catalogue/preview.ts';
 import { useApp } from '../../state/app.ts';
 import { Dialog } from '../../ui/Dialog.tsx';
 import { countText } from '../../ui/numberText.ts';
@@ -36,7 +37,7 @@ export function PreviewDialog(props: {
                   : `${countText(account.kept)} rows kept, ${countText(account.setAside)} set aside.`}
             </p>
           </div>
-          <PreviewTable header={state.preview.header} rows={state.preview.rows} draft={draft} />
+          <PreviewTable preview={state.preview} draft={draft} />
         </div>
       ) : (
         <p class="quiet">{state.kind === 'refused' ? state.sentence : 'Reading the head of the file…'}</p>
@@ -45,13 +46,10 @@ export function PreviewDialog(props: {
   );
 }
 
-function PreviewTable(props: {
-  readonly header: readonly string[];
-  readonly rows: readonly (readonly string[])[];
-  readonly draft: MappingDraft;
-}) {
-  const { header, rows, draft } = props;
-  const judged = judgeRows(rows, header, draft);
+function PreviewTable(props: { readonly preview: Preview; readonly draft: MappingDraft }) {
+  const { preview, draft } = props;
+  const { header, rows, decimals } = preview;
+  const judged = judgeRows(rows, header, draft, decimals.mark);
   if (rows.length === 0) return <p class="quiet">The file has a header and no rows.</p>;
   return (
     // biome-ignore lint/a11y/noNoninteractiveTabindex: a part that scrolls must be reachable by keyboard

@@ -1,4 +1,5 @@
 import { RowCleaner } from '../../../shared-core/catalogue/cleaning.ts';
+import type { DecimalMark } from '../../../shared-core/catalogue/formats/delimited/decimals.ts';
 import { reasonText } from '../../../shared-core/catalogue/reasons.ts';
 import type { MappingDraft } from './mappingDraft.ts';
 
@@ -15,6 +16,7 @@ export function judgeRows(
   rows: readonly (readonly string[])[],
   header: readonly string[],
   draft: MappingDraft,
+  decimalMark: DecimalMark,
 ): JudgedRow[] | null {
   const at = (name: string | null) => (name === null ? -1 : header.indexOf(name));
   const [ra, dec, radial] = [at(draft.ra), at(draft.dec), at(draft.radialColumn)];
@@ -26,6 +28,7 @@ export function judgeRows(
     radial,
     radialKind: draft.radialKind,
     weight: at(draft.weight),
+    decimalMark,
   });
   return rows.map((row) => {
     const reason = cleaner.judge(row);

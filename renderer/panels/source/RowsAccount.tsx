@@ -1,5 +1,5 @@
 import { useState } from 'preact/hooks';
-import { decimalCommaAdvice } from '../../../shared-core/catalogue/reasons.ts';
+import { decimalsSentence } from '../../../shared-core/catalogue/reasons.ts';
 import { useApp } from '../../state/app.ts';
 import { countText } from '../../ui/numberText.ts';
 import { setAsideLines } from './sourceFacts.ts';
@@ -12,7 +12,7 @@ export function RowsAccount() {
   const read = engine.loadedNow.value;
   if (read === null) return null;
   const account = engine.selected.value?.account ?? read.account;
-  const advice = decimalCommaAdvice(account);
+  const decimals = decimalsSentence(account);
   const download = async (): Promise<void> => {
     setBusy(true);
     try {
@@ -46,7 +46,7 @@ export function RowsAccount() {
           </div>
         ))}
       </dl>
-      {advice === null ? null : <p role="status">{advice}</p>}
+      {decimals === null ? null : <p role="status">{decimals}</p>}
       {account.repeatedPositions === 0 ? null : (
         <p class="quiet">
           {countText(account.repeatedPositions)} kept{' '}

@@ -10,7 +10,14 @@ import { bytesOf, utf8 } from './support.ts';
 
 /** What the scanner makes of one cell: a number, or null where it hands the row over as text. */
 function scanned(cell: string, required: number): number | null {
-  const plan = { width: 3, wanted: [1], required, delimiter: ',', lineBreak: LF } as const;
+  const plan = {
+    width: 3,
+    wanted: [1],
+    required,
+    delimiter: ',',
+    lineBreak: LF,
+    decimalMark: '.',
+  } as const;
   let result: number | null = null;
   const sink: RowSink = {
     numbers: (_line, values) => {
@@ -65,7 +72,14 @@ describe('LineScanner', () => {
   });
 
   it('stops before a line whose quotes are not simple, and says how far it came', () => {
-    const plan = { width: 2, wanted: [0], required: 1, delimiter: ';', lineBreak: LF } as const;
+    const plan = {
+      width: 2,
+      wanted: [0],
+      required: 1,
+      delimiter: ';',
+      lineBreak: LF,
+      decimalMark: '.',
+    } as const;
     for (const odd of ['1;"two\nlines"\n', '1;"a""b"\n', '1;"a" \n', '"1"x;2\n', '"1\n;2\n']) {
       const lines: number[] = [];
       const sink: RowSink = {
@@ -110,7 +124,7 @@ describe('LineScanner', () => {
         const text = `a,b,c\n${cells.map((row) => row.join(',')).join(lineEnd)}`;
         const told = (row: string[], line: number) => {
           const values = new Float64Array(2);
-          const fault = readText(row, 3, wanted, 1, values);
+          const fault = readText(row, 3, wanted, 1, values, '.');
           return [line, fault, ...(fault === null ? values : [])];
         };
         const slow: unknown[] = [];

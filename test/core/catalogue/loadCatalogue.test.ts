@@ -4,6 +4,7 @@ import Papa from 'papaparse';
 import { describe, expect, it } from 'vitest';
 import { Cancelled } from '../../../shared-core/base/cancelled.ts';
 import { SET_ASIDE_REASONS } from '../../../shared-core/catalogue/catalogue.ts';
+import { DECIMAL_POINTS } from '../../../shared-core/catalogue/formats/delimited/decimals.ts';
 import { loadCatalogue } from '../../../shared-core/catalogue/loadCatalogue.ts';
 import { createRandom } from '../../../shared-core/numerics/random.ts';
 import { inPieces, load, refusalOf, utf8, utf16 } from './support.ts';
@@ -25,6 +26,7 @@ describe('loadCatalogue', () => {
       setAside: 0,
       reasons: {},
       repeatedPositions: 0,
+      decimals: DECIMAL_POINTS,
     });
     expect(mapping.radial).toEqual({ column: 'z', kind: 'redshift' });
     expect(delimiter).toBe(',');
@@ -156,6 +158,7 @@ describe('loadCatalogue', () => {
         setAside: 0,
         reasons: {},
         repeatedPositions: 0,
+        decimals: DECIMAL_POINTS,
       });
       expect(catalogue.raDeg).toHaveLength(0);
     }

@@ -2,9 +2,8 @@ import Papa from 'papaparse';
 import { describe, expect, it } from 'vitest';
 import { SET_ASIDE_REASONS, type SetAsideRow } from '../../../shared-core/catalogue/catalogue.ts';
 import { loadCatalogue } from '../../../shared-core/catalogue/loadCatalogue.ts';
-import { decimalCommaAdvice, reasonSentence, reasonText } from '../../../shared-core/catalogue/reasons.ts';
+import { reasonSentence, reasonText } from '../../../shared-core/catalogue/reasons.ts';
 import { setAsideCsv } from '../../../shared-core/catalogue/setAsideCsv.ts';
-import { describeAccount } from '../../../shared-core/report/notes.ts';
 import { bytesOf } from './support.ts';
 
 describe('setAsideCsv', () => {
@@ -76,25 +75,6 @@ describe('a row set aside', () => {
       ['wrongFieldCount', undefined],
     ]);
     expect(reasonSentence(rows[3]!)).toBe('The row is set aside as one outside the cuts: mag is 25.');
-  });
-});
-
-describe('a table with decimal commas', () => {
-  const account = async (rows: readonly string[]) =>
-    (await loadCatalogue(bytesOf(`ra;dec;z\n${rows.join('\n')}\n`))).catalogue.account;
-
-  it('is told, with what to do, when most rows are so; and the counts still add up', async () => {
-    const read = await account(['10,5;2,25;0,5', '11,5;2,5;0,25', '10.5;2.25;0.5']);
-    expect(read).toMatchObject({ rowsRead: 3, kept: 1, reasons: { notANumber: 2 }, decimalCommas: 2 });
-    expect(decimalCommaAdvice(read)).toMatch(/2 of 3 rows .*decimal comma.*replace each comma by a point/);
-    expect(describeAccount(read)).toContain(decimalCommaAdvice(read)!);
-    // Also where one column alone is written so.
-    expect(await account(['10;2;0,5'])).toMatchObject({ decimalCommas: 1 });
-  });
-
-  it('is not told of other text, nor of a few rows', async () => {
-    expect(decimalCommaAdvice(await account(['12h;2;0.5', '1,2,3;1;1']))).toBeNull();
-    expect(decimalCommaAdvice(await account(['10,5;2;0.5', '10.5;2;0.5']))).toBeNull();
   });
 });
 

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { DECIMAL_POINTS } from '../../../shared-core/catalogue/formats/delimited/decimals.ts';
 import { createCosmology } from '../../../shared-core/cosmology/cosmology.ts';
 import { findPublishedSet } from '../../../shared-core/cosmology/publishedSets.ts';
 import { cutWords, describeCuts } from '../../../shared-core/report/cuts.ts';
@@ -38,6 +39,7 @@ const account = {
   setAside: 834,
   reasons: { outsideCuts: 834 },
   repeatedPositions: 0,
+  decimals: DECIMAL_POINTS,
 };
 const mapping = {
   ra: 'ra',

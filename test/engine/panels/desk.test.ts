@@ -12,6 +12,7 @@ import { parameterTrouble, readMasses } from '../../../renderer/panels/cosmology
 import { withoutShape, withShapes } from '../../../renderer/panels/region/regionParts.ts';
 import { draftOfShape, finishShape, newDraft } from '../../../renderer/panels/region/shapeDraft.ts';
 import { setAsideLines, sourceChanged } from '../../../renderer/panels/source/sourceFacts.ts';
+import { DECIMAL_POINTS } from '../../../shared-core/catalogue/formats/delimited/decimals.ts';
 import {
   findPublishedSet,
   PUBLISHED_SETS,
@@ -79,13 +80,27 @@ describe('rows of the preview', () => {
       ],
       header,
       draft,
+      '.',
     );
     expect(judged?.map((row) => row.blamedCell)).toEqual([-1, 1, 2, 2, -1]);
     expect(judged?.map((row) => row.reason !== null)).toEqual([false, true, true, true, true]);
   });
 
   it('wait until the three columns are chosen', () => {
-    expect(judgeRows([['1', '2', '3']], header, { ...draft, dec: null })).toBeNull();
+    expect(judgeRows([['1', '2', '3']], header, { ...draft, dec: null }, '.')).toBeNull();
+  });
+
+  it('have decimal commas where the file has', () => {
+    const judged = judgeRows(
+      [
+        ['10,5', '-1', '0,5'],
+        ['10.5', '-1', '0,5'],
+      ],
+      header,
+      draft,
+      ',',
+    );
+    expect(judged?.map((row) => row.blamedCell)).toEqual([-1, 0]);
   });
 });
 
@@ -202,6 +217,7 @@ describe('the source', () => {
       setAside: 10,
       reasons: { outsideCuts: 4, missingValue: 6 },
       repeatedPositions: 0,
+      decimals: DECIMAL_POINTS,
     };
     const lines = setAsideLines(account);
     expect(lines.map((line) => line.count)).toEqual([6, 4]);

@@ -5,6 +5,7 @@ import { asTsv, ledgerJson, ledgerTable } from '../../../renderer/panels/ledger/
 import { nextOrder, sortShells } from '../../../renderer/panels/ledger/sortShells.ts';
 import { SHEET_GROUPS, SHEET_KEYS } from '../../../renderer/panels/sheet/sheetLayout.ts';
 import type { App } from '../../../renderer/state/app.ts';
+import { DECIMAL_POINTS } from '../../../shared-core/catalogue/formats/delimited/decimals.ts';
 import { LEDGER_QUANTITIES } from '../../../shared-core/report/ledgerQuantities.ts';
 import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
 import { emptyStudy } from '../../../shared-core/study/document.ts';
@@ -88,6 +89,7 @@ describe('the ledger on the clipboard', () => {
     setAside: 2,
     reasons: { outsideCuts: 2 },
     repeatedPositions: 0,
+    decimals: DECIMAL_POINTS,
   };
 
   it('has a column for each quantity, a line for each shell and all as one, every digit, and the notes', () => {

@@ -1,5 +1,6 @@
 import { Refusal } from '../../../base/refusal.ts';
-import { isMissing, parseNumber } from '../../numbers.ts';
+import { isMissing, parseCommaNumber, parseNumber } from '../../numbers.ts';
+import type { DecimalMark } from './decimals.ts';
 import type { Delimiter } from './delimiter.ts';
 
 /** More columns than any catalogue has: beyond it the first line is no header. */
@@ -23,15 +24,16 @@ export function readHeader(
   firstRow: readonly string[],
   comment: string | null,
   delimiter: Delimiter,
+  mark: DecimalMark,
 ): Header {
   if (firstRow.length > MOST_COLUMNS) {
     throw new Refusal(
       `The header has ${firstRow.length} columns, where at most ${MOST_COLUMNS} were expected: give a table with a few columns and one galaxy a line.`,
     );
   }
-  if (!isAllNumbers(firstRow)) return { names: distinct(firstRow), isFirstRow: true };
+  if (!isAllNumbers(firstRow, mark)) return { names: distinct(firstRow), isFirstRow: true };
   const commented = comment?.replace(/^[\s#]*/, '').split(delimiter) ?? [];
-  if (commented.length === firstRow.length && !isAllNumbers(commented)) {
+  if (commented.length === firstRow.length && !isAllNumbers(commented, mark)) {
     return { names: distinct(commented), isFirstRow: false };
   }
   throw new Refusal(
@@ -44,9 +46,10 @@ export function readHeader(
   );
 }
 
-function isAllNumbers(row: readonly string[]): boolean {
+function isAllNumbers(row: readonly string[], mark: DecimalMark): boolean {
+  const parse = mark === ',' ? parseCommaNumber : parseNumber;
   const filled = row.filter((cell) => !isMissing(cell));
-  return filled.length > 0 && filled.every((cell) => !Number.isNaN(parseNumber(cell)));
+  return filled.length > 0 && filled.every((cell) => !Number.isNaN(parse(cell)));
 }
 
 function distinct(row: readonly string[]): string[] {

@@ -1,4 +1,5 @@
 import { type Decoder, textDecoder } from '../../../base/textCoding.ts';
+import type { DecimalMark } from './decimals.ts';
 import type { Delimiter } from './delimiter.ts';
 import { CR, LF, type LineBreak } from './wholeLines.ts';
 
@@ -6,7 +7,6 @@ const SPACE = 32;
 const QUOTE = 34;
 const PLUS = 43;
 const MINUS = 45;
-const POINT = 46;
 const ZERO = 48;
 const NINE = 57;
 const LOWER_E = 101;
@@ -35,6 +35,7 @@ export interface ScanPlan {
   readonly required: number;
   readonly delimiter: Delimiter;
   readonly lineBreak: LineBreak;
+  readonly decimalMark: DecimalMark;
 }
 
 /**
@@ -73,6 +74,7 @@ export class LineScanner {
   scan(bytes: Uint8Array, firstLine: number, sink: RowSink): number {
     const { width, required, lineBreak } = this.#plan;
     const delimiter = this.#plan.delimiter.charCodeAt(0);
+    const decimalMark = this.#plan.decimalMark.charCodeAt(0);
     const slotOfCell = this.#slotOfCell;
     const values = this.#values;
     // What may stand after a number: spaces, and the CR of CRLF.
@@ -103,7 +105,7 @@ export class LineScanner {
           }
           let digits = at - wholeStart;
           let power = 0;
-          if (c === POINT) {
+          if (c === decimalMark) {
             c = bytes[++at]!;
             const fractionStart = at;
             while (c >= ZERO && c <= NINE) {
@@ -138,7 +140,8 @@ export class LineScanner {
               if (isNegative) value = -value;
             } else {
               asText ??= this.#latin1.decode(bytes);
-              value = +asText.slice(numberStart, numberEnd);
+              // Commas of another kind are none of this number's: it has one mark at most.
+              value = +asText.slice(numberStart, numberEnd).replace(',', '.');
             }
             // Adding 0 turns -0 into 0; a difference that is not 0 tells an infinite value.
             values[slot] = value + 0;

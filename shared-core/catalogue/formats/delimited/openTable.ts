@@ -1,5 +1,6 @@
 import { textDecoder } from '../../../base/textCoding.ts';
 import type { ReadWatch } from './byteStream.ts';
+import { detectDecimals } from './decimals.ts';
 import { type Delimiter, detectDelimiter } from './delimiter.ts';
 import { asUtf8 } from './encoding.ts';
 import { type Head, nothingThere, readHead } from './head.ts';
@@ -10,8 +11,8 @@ import { resumed, unpacked } from './unpack.ts';
 import { detectLineBreak, joined, LF, type LineBreak, wholeLines } from './wholeLines.ts';
 
 /**
- * Opens CSV, TSV or text with semicolons or bars, also gzip of it: finds encoding, line breaks and delimiter, passes
- * comment lines (#) and blank lines before the header, and reads the header. Memory is bounded by the longest row.
+ * Opens CSV, TSV or text with semicolons or bars, also gzip of it: finds encoding, line breaks, delimiter and decimal
+ * mark, passes comment lines (#) and blank lines before the header, and reads the header. Memory is bounded by the longest row.
  *
  * Throws Refusal for an empty file, one with comments only, binary data, and a first line that is no header. Reading
  * on may throw Refusal as well (damaged gzip, a quote left open, a line without end).
@@ -32,16 +33,20 @@ export async function openTable(
     let nextLine = () => place.line;
     const blocks = wholeLines(resumed(first.value, utf8), lineBreak, () => nextLine());
     const head = await readHead(blocks, lineBreak, place);
-    const delimiter =
-      options.delimiter ?? detectDelimiter(textDecoder('utf-8').decode(head.bytes), lineBreak);
+    const headText = textDecoder('utf-8').decode(head.bytes);
+    const delimiter = options.delimiter ?? detectDelimiter(headText, lineBreak);
+    const decimals = detectDecimals(headText, delimiter, lineBreak, head.line);
     const probe = new RecordCutter(delimiter, lineBreak, head.line);
     nextLine = () => probe.nextLine;
     const { row, lines, rest } = await firstRow(blocks, head, probe, lineBreak);
-    const header = readHeader(row, head.comment, delimiter);
+    const header = readHeader(row, head.comment, delimiter, decimals.mark);
     const cutter = new RecordCutter(delimiter, lineBreak, head.line + (header.isFirstRow ? lines : 0));
     nextLine = () => cutter.nextLine;
     const body = resumed(header.isFirstRow ? rest : head.bytes, blocks);
-    return new DelimitedTable(header.names, delimiter, { cutter, blocks: body, lineBreak, close });
+    return new DelimitedTable(
+      { header: header.names, delimiter, decimals },
+      { cutter, blocks: body, lineBreak, close },
+    );
   } catch (fault) {
     await close();
     throw fault;

@@ -1,4 +1,5 @@
 import { textDecoder } from '../../../base/textCoding.ts';
+import type { Decimals } from './decimals.ts';
 import type { Delimiter } from './delimiter.ts';
 import { LineScanner, type RowSink } from './lineScanner.ts';
 import type { RecordCutter, Records } from './records.ts';
@@ -22,12 +23,17 @@ export interface TableSource {
 export class DelimitedTable {
   readonly header: readonly string[];
   readonly delimiter: Delimiter;
+  readonly decimals: Decimals;
   readonly #source: TableSource;
   readonly #utf8 = textDecoder('utf-8');
 
-  constructor(header: readonly string[], delimiter: Delimiter, source: TableSource) {
+  constructor(
+    { header, delimiter, decimals }: Pick<DelimitedTable, 'header' | 'delimiter' | 'decimals'>,
+    source: TableSource,
+  ) {
     this.header = header;
     this.delimiter = delimiter;
+    this.decimals = decimals;
     this.#source = source;
   }
 
@@ -45,7 +51,15 @@ export class DelimitedTable {
    */
   async numbers(wanted: readonly number[], required: number, sink: RowSink): Promise<void> {
     const { cutter, blocks, lineBreak } = this.#source;
-    const plan = { width: this.header.length, wanted, required, delimiter: this.delimiter, lineBreak };
+    const { header, delimiter, decimals } = this;
+    const plan = {
+      width: header.length,
+      wanted,
+      required,
+      delimiter,
+      lineBreak,
+      decimalMark: decimals.mark,
+    };
     const scanner = new LineScanner(plan, (line) => cutter.rowOf(line));
     for await (const block of blocks) {
       let at = 0;
