@@ -3,6 +3,8 @@ import type { Cut, SetAsideRow } from '../../shared-core/catalogue/catalogue.ts'
 import { parseColumnMap } from '../../shared-core/catalogue/columnMap.ts';
 import type { LoadedCatalogue, LoadOptions } from '../../shared-core/catalogue/loadCatalogue.ts';
 import { loadCatalogue } from '../../shared-core/catalogue/loadCatalogue.ts';
+import { findRepeats } from '../../shared-core/catalogue/positions.ts';
+import { REPEATS_HEADER, repeatLines } from '../../shared-core/catalogue/repeatsCsv.ts';
 import { checkCuts } from '../../shared-core/catalogue/selection.ts';
 import { SET_ASIDE_HEADER, setAsideLine } from '../../shared-core/catalogue/setAsideCsv.ts';
 import type { Footprint } from '../../shared-core/sky/region.ts';
@@ -15,6 +17,7 @@ export interface CatalogueOptions {
   columns?: string;
   cut?: Cut[];
   setAside?: string;
+  repeats?: string;
   overwrite?: true;
 }
 
@@ -34,20 +37,29 @@ export function addCatalogueOptions(command: Command): Command {
       '--set-aside <file>',
       'write the rows that are not used there (CSV), each with its line, name and reason',
     )
+    .option(
+      '--repeats <file>',
+      'write the kept rows that repeat the position of an earlier one there (CSV), each with its line, name and the line it repeats',
+    )
     .option('--overwrite', 'replace output files that exist');
 }
 
 export interface CatalogueReading extends Pick<LoadOptions, 'onKept'> {
   readonly footprint: Footprint | null;
-  /** Absolute path for the list of rows not used, as outputPlaces gives it. */
-  readonly setAsidePath: string | undefined;
+  /** Absolute paths of the lists that are asked for, as outputPlaces gives them. */
+  readonly places: Readonly<Partial<Record<keyof ReturnType<typeof listPlaces>, string>>>;
 }
 
-/** Reads a catalogue file under the options, with a progress bar, and writes the set-aside list if asked. */
+/** Where the lists of rows are to be written, by option. */
+export function listPlaces({ setAside, repeats }: CatalogueOptions) {
+  return { '--set-aside': setAside, '--repeats': repeats };
+}
+
+/** Reads a catalogue file under the options, with a progress bar, and writes the lists that are asked for. */
 export async function readCatalogue(
   file: string,
   options: CatalogueOptions,
-  { footprint, setAsidePath, onKept }: CatalogueReading,
+  { footprint, places, onKept }: CatalogueReading,
 ): Promise<LoadedCatalogue> {
   const path = fromHere(file);
   const mapping = options.columns === undefined ? undefined : parseColumnMap(options.columns);
@@ -55,11 +67,12 @@ export async function readCatalogue(
   checkCuts(cuts);
   const size = await readableSize(path);
   const bar = progressBar(`Reading ${file}`);
-  const list =
-    setAsidePath === undefined
-      ? null
-      : await OutputFile.begin(setAsidePath, { overwrite: options.overwrite === true });
+  const begin = async (place: string | undefined): Promise<OutputFile | null> =>
+    place === undefined ? null : OutputFile.begin(place, { overwrite: options.overwrite === true });
+  const list = await begin(places['--set-aside']);
+  let repeats: OutputFile | null = null;
   try {
+    repeats = await begin(places['--repeats']);
     list?.addText(SET_ASIDE_HEADER);
     const loaded = await loadCatalogue(fileBytes(path), {
       mapping,
@@ -69,12 +82,25 @@ export async function readCatalogue(
       onSetAside: list === null ? undefined : (row: SetAsideRow) => list.addText(setAsideLine(row)),
       onKept,
     });
+    if (repeats !== null) await addRepeats(repeats, loaded, async () => fileBytes(path));
     await list?.finish();
+    await repeats?.finish();
     return loaded;
   } catch (error) {
     await list?.abandon();
+    await repeats?.abandon();
     throw error;
   } finally {
     bar.end();
   }
+}
+
+async function addRepeats(
+  output: OutputFile,
+  { catalogue, mapping }: LoadedCatalogue,
+  open: () => Promise<AsyncIterable<Uint8Array>>,
+): Promise<void> {
+  output.addText(REPEATS_HEADER);
+  const found = findRepeats(catalogue.raDeg, catalogue.decDeg);
+  for await (const line of repeatLines(catalogue, found, { mapping, open })) output.addText(line);
 }

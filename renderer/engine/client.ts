@@ -51,6 +51,10 @@ export class EngineClient {
     return this.#ask<Blob>((id) => ({ kind: 'setAsideList', id }));
   }
 
+  repeatsList(): Promise<Blob> {
+    return this.#ask<Blob>((id) => ({ kind: 'repeatsList', id }));
+  }
+
   /** Ends the worker; the next wish starts a new one, which does all its stages again. */
   stop(): void {
     this.#worker?.terminate();

@@ -6,6 +6,7 @@ import type { SortedSample } from '../../shared-core/shells/sample.ts';
 import { galaxyRow } from './galaxyRow.ts';
 import { loadKey } from './loadKey.ts';
 import type { EngineSource, GalaxyRow, Stage, Wanted } from './protocol.ts';
+import { repeatsList } from './repeatsList.ts';
 import { sentenceOf } from './sentenceOf.ts';
 import { setAsideList } from './setAsideList.ts';
 import { sourceBytes } from './sourceBytes.ts';
@@ -236,5 +237,15 @@ export class EngineDesk {
     if (wish?.source == null)
       throw new Refusal('No catalogue is open, so nothing was set aside: open one first.');
     return setAsideList(await this.#bytes(wish.source), wish);
+  }
+
+  /** Every galaxy of the sample that repeats an earlier one's position, as CSV text in parts. */
+  async repeatsList(): Promise<string[]> {
+    const [wish, sample, catalogue] = [this.#wanted, this.#sample, this.#catalogue];
+    const isCurrent = wish !== null && new Map(stageKeys(wish)).get('select') === this.#keys.select;
+    if (!isCurrent || wish.source === null || sample === null || catalogue === null)
+      throw new Refusal('The galaxies are being read: ask for their list again once they are there.');
+    const { source, mapping } = wish;
+    return repeatsList(catalogue, sample.order, { mapping, open: () => this.#bytes(source) });
   }
 }

@@ -66,5 +66,8 @@ scope.onmessage = ({ data }: MessageEvent<EngineRequest>) => {
     case 'setAsideList':
       void answer(data.id, async () => new Blob(await desk.setAsideList(), { type: 'text/csv' }));
       break;
+    case 'repeatsList':
+      void answer(data.id, async () => new Blob(await desk.repeatsList(), { type: 'text/csv' }));
+      break;
   }
 };

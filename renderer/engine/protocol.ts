@@ -101,7 +101,8 @@ export type EngineRequest =
   | { readonly kind: 'row'; readonly id: number; readonly index: number }
   | { readonly kind: 'name'; readonly id: number; readonly line: number }
   | { readonly kind: 'preview'; readonly id: number; readonly source: EngineSource }
-  | { readonly kind: 'setAsideList'; readonly id: number };
+  | { readonly kind: 'setAsideList'; readonly id: number }
+  | { readonly kind: 'repeatsList'; readonly id: number };
 
 export type EngineAnswer =
   | {

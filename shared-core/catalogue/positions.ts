@@ -1,4 +1,5 @@
 import { powerOfTwoFrom } from '../numerics/tableSize.ts';
+
 /** Rows at a position where an earlier row stands already: `row[k]` repeats `first[k]`. Ascending in row. */
 export interface Repeats {
   readonly row: Uint32Array;
@@ -20,21 +21,27 @@ export function findRepeats(raDeg: Float64Array, decDeg: Float64Array): Repeats 
   return repeats;
 }
 
-/** How many of the kept rows repeat the position of an earlier kept row. `keep` has 1 for a kept row, else 0. */
-export function countKeptRepeats(repeats: Repeats, keep: Uint8Array): number {
-  // Over the positions with a kept repeat: (rows kept there) - 1.
-  const isCounted = new Uint8Array(repeats.row.length === 0 ? 0 : keep.length);
-  let repeated = 0;
+/**
+ * The kept rows that repeat the position of an earlier kept row. `keep` has 1 for a kept row, else 0. Where the first
+ * row of a position is not kept, the earliest that is takes its place.
+ */
+export function keptRepeats(repeats: Repeats, keep: Uint8Array): Repeats {
+  const row: number[] = [];
+  const first: number[] = [];
+  const earliest = new Map<number, number>();
   for (let k = 0; k < repeats.row.length; k++) {
-    if (keep[repeats.row[k]!] === 0) continue;
-    const first = repeats.first[k]!;
-    repeated++;
-    if (isCounted[first] === 0) {
-      isCounted[first] = 1;
-      if (keep[first] === 0) repeated--;
+    const at = repeats.row[k]!;
+    if (keep[at] === 0) continue;
+    const start = repeats.first[k]!;
+    const repeated = keep[start] === 1 ? start : earliest.get(start);
+    if (repeated === undefined) {
+      earliest.set(start, at);
+    } else {
+      row.push(at);
+      first.push(repeated);
     }
   }
-  return repeated;
+  return { row: Uint32Array.from(row), first: Uint32Array.from(first) };
 }
 
 /** Parts of so many rows on average: their tables stay in the processor's cache. */

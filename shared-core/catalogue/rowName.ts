@@ -4,35 +4,41 @@ import { openTable } from './formats/delimited/openTable.ts';
 import { resolveMapping } from './mapping.ts';
 import type { ColumnChoice } from './spellings.ts';
 
-/** The row was read: the rest of the file is not asked for. */
+/** The last row was read: the rest of the file is not asked for. */
 class Found extends Error {}
 
 /**
- * What stands in the name column (the mapping's id) of the row at a line: names are not kept in memory, since they are
- * asked for one by one. Reads no further than the row.
+ * What stands in the name column (the mapping's id) of the rows at some lines: names are not kept in memory, since they
+ * are asked for of few. Reads no further than the last of the rows.
  *
  * @param mapping as for loadCatalogue
- * @returns the trimmed text; null where it is empty, where no column has names, and for a line that has no row
+ * @param lines in increasing order
+ * @returns for each line the trimmed text; null where it is empty, where no column has names, and for a line that has
+ *   no row
  * @throws Refusal as loadCatalogue does; Cancelled when the signal was raised
  */
-export async function rowName(
+export async function namesAtLines(
   bytes: AsyncIterable<Uint8Array>,
   mapping: ColumnChoice | undefined,
-  line: number,
+  lines: ArrayLike<number>,
   watch: ReadWatch = {},
-): Promise<string | null> {
+): Promise<(string | null)[]> {
   const table = await openTable(bytes, watch);
   try {
+    const names = Array.from(lines, (): string | null => null);
     const { id } = resolveMapping(table.header, mapping);
-    if (id === null) return null;
+    if (id === null) return names;
     const cell = table.header.indexOf(id);
-    let name: string | null = null;
+    let next = 0;
+    const isNext = (line: number): boolean => {
+      while (lines[next]! < line) next++;
+      return lines[next] === line;
+    };
     const sink: RowSink = {
-      numbers: (at) => at !== line,
-      text(at, row) {
-        if (at < line) return;
-        if (at === line) name = row[cell]?.trim() || null;
-        throw new Found();
+      numbers: (line) => next < lines.length && !isNext(line),
+      text(line, row) {
+        if (isNext(line)) names[next++] = row[cell]?.trim() || null;
+        if (next >= lines.length) throw new Found();
       },
     };
     try {
@@ -40,8 +46,18 @@ export async function rowName(
     } catch (error) {
       if (!(error instanceof Found)) throw error;
     }
-    return name;
+    return names;
   } finally {
     await table.close();
   }
+}
+
+/** The name in one row, as namesAtLines gives it. */
+export async function rowName(
+  bytes: AsyncIterable<Uint8Array>,
+  mapping: ColumnChoice | undefined,
+  line: number,
+  watch: ReadWatch = {},
+): Promise<string | null> {
+  return (await namesAtLines(bytes, mapping, [line], watch))[0]!;
 }

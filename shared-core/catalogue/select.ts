@@ -1,7 +1,7 @@
 import { Refusal } from '../base/refusal.ts';
 import type { Catalogue, Cut, RowAccount, SetAsideRow } from './catalogue.ts';
 import { findColumn, listColumns } from './columnNames.ts';
-import { countKeptRepeats, findRepeats } from './positions.ts';
+import { findRepeats, keptRepeats } from './positions.ts';
 import { type Contains, checkCuts, cutText, OUTSIDE_REGION, STAYS, whyLeftOut } from './selection.ts';
 import { Tally } from './tally.ts';
 
@@ -57,7 +57,8 @@ export function select(
   }
   const indices = new Uint32Array(kept);
   for (let i = 0, next = 0; i < keep.length; i++) if (keep[i] === 1) indices[next++] = i;
-  return { indices, account: tally.account(countKeptRepeats(findRepeats(raDeg, decDeg), keep)), cutCounts };
+  const repeats = keptRepeats(findRepeats(raDeg, decDeg), keep);
+  return { indices, account: tally.account(repeats.row.length), cutCounts };
 }
 
 /** The selected rows as a catalogue of their own, with the selection's account. Arrays are copies. */

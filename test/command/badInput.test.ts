@@ -174,6 +174,20 @@ describe('awkward files that can be used', () => {
     expect(readFileSync(list, 'utf8')).toBe('mine');
   });
 
+  it('the kept rows that repeat a position can be listed, with the line that each repeats', async () => {
+    const rows = 'ra,dec,z,id\n150,2,0.1,a\n151,2,0.1,b\n150,2,0.2,"c, again"\n150,2,x,d\n151.0,2,0.3,\n';
+    const list = folder.path('repeats.csv');
+    const { catalogue } = await shells('repeats.in.csv', rows, '--repeats', list);
+    expect(catalogue).toMatchObject({ rowsRead: 5, kept: 4, setAside: 1, repeatedPositions: 2 });
+    const { readFileSync } = await import('node:fs');
+    expect(readFileSync(list, 'utf8')).toBe(
+      'line,name,ra_deg,dec_deg,repeats_line\r\n4,"c, again",150,2,2\r\n6,,151,2,3\r\n',
+    );
+    const { code, err } = await conewright('shells', folder.path('repeats.in.csv'), '--repeats', list);
+    expect(code).toBe(2);
+    expect(err).toMatch(/exists already/);
+  });
+
   it('says of decimal commas what they are and what to do', async () => {
     const path = folder.write('commas.csv', 'ra,dec,z\n"10,5","2,25","0,5"\n"11,5","2,5","0,25"\n');
     const { code, err } = await conewright('shells', path);

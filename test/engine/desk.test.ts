@@ -15,6 +15,8 @@ const FILES: Record<string, string> = {
   'blob:a': `ra,dec,z,mag\n${rows.join('\n')}\nbad,1,0.5,15\n`,
   'blob:broken': 'nothing here that is a table of galaxies\n1\n',
   'blob:one': 'ra,dec,z\n10,10,0.5\n',
+  'blob:twice':
+    'id,ra,dec,z\na,10,10,0.05\nb,11,10,0.6\nc,10,10,0.7\n" d, ",10,10,0.5\nc2,x,10,0.7\n=e,11,10,0.2\n',
   'blob:none': 'ra,dec,z\n',
   'blob:stalled': 'ra,dec,z\n',
   'blob:same-z': 'ra,dec,z\n10,10,0.5\n11,10,0.5\n12,10,0.5\n',
@@ -249,6 +251,33 @@ describe('the engine does what the study asks, and nothing twice', () => {
     expect(lines[0]).toBe('line,reason,column,text,name,explanation');
     expect(lines.filter((l) => l.includes('outsideCuts'))).toHaveLength(500 - Math.ceil(500 / 7));
     expect(lines.at(-1)).toMatch(/^502,notANumber,ra,bad,,The row is set aside as one with a value/);
+  });
+});
+
+describe('the list of repeated positions', () => {
+  it('has line, name, position and the line repeated, among the galaxies that are in', async () => {
+    const { desk, last } = deskOf();
+    const twice = { ...wanted, source: source('blob:twice') };
+    await desk.want(twice);
+    expect((await desk.repeatsList()).join('')).toBe(
+      'line,name,ra_deg,dec_deg,repeats_line\r\n4,c,10,10,2\r\n5,"d,",10,10,2\r\n7,\'=e,11,10,3\r\n',
+    );
+    // Without the row of line 2, what repeated it repeats the next that did.
+    await desk.want({ ...twice, cuts: [{ column: 'z', min: 0.1, max: null }] });
+    expect((await desk.repeatsList()).join('').split('\r\n').slice(1)).toEqual([
+      '5,"d,",10,10,4',
+      "7,'=e,11,10,3",
+      '',
+    ]);
+    expect(last('selected')!.selected!.account).toMatchObject({ rowsRead: 6, kept: 4, repeatedPositions: 2 });
+  });
+
+  it('is refused while other galaxies are being read', async () => {
+    const { desk } = deskOf();
+    await desk.want(wanted);
+    const wanting = desk.want({ ...wanted, source: source('blob:twice') });
+    await expect(desk.repeatsList()).rejects.toThrow(/being read: ask for their list again/);
+    await wanting;
   });
 });
 

@@ -1,6 +1,6 @@
 import { fileURLToPath } from 'node:url';
 import type { Page } from '@playwright/test';
-import { expect, ready, test } from './window.ts';
+import { downloaded, expect, ready, test } from './window.ts';
 
 const SHAPLEY = fileURLToPath(new URL('../data/shapley.csv', import.meta.url));
 const line = (page: Page) => page.locator('.engine-line');
@@ -118,4 +118,21 @@ test('memory that is too short for a catalogue is told, and the one before comes
   await expect(source(page)).toContainText(/Memory ran short while working on the catalogue: /);
   await page.getByRole('button', { name: 'Back to shapley.csv' }).click();
   await expect(line(page)).toHaveText(/4.212 kept/);
+});
+
+test('decimal commas are told, and repeated positions are listed as the command lists them', async ({
+  desk,
+}) => {
+  const text = 'id;ra;dec;z\na;150,25;2,5;0,1\nb;151,5;2,5;0,2\nc;150,25;2,5;0,3\n';
+  const page = await desk.open();
+  await ready(page);
+  await pick(page, csv('halves.csv', text));
+  const account = source(page).locator('.account');
+  await expect(account).toContainText('The file has decimal commas: 10,5 is read as 10.5.');
+  await expect(account).toContainText('1 kept row repeats an earlier position.');
+  const list = await downloaded(page, () =>
+    account.getByRole('button', { name: 'Save the list of repeated positions…' }).click(),
+  );
+  expect(list.name).toBe('halves repeated positions.csv');
+  expect(list.text).toBe('line,name,ra_deg,dec_deg,repeats_line\r\n4,c,150.25,2.5,2\r\n');
 });

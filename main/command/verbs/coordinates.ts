@@ -1,7 +1,12 @@
 import type { Command } from 'commander';
 import { CoordinateWriter } from '../../../shared-core/report/coordinates.ts';
 import { describeAccount, describeColumns, describeCosmology } from '../../../shared-core/report/notes.ts';
-import { addCatalogueOptions, type CatalogueOptions, readCatalogue } from '../catalogueOptions.ts';
+import {
+  addCatalogueOptions,
+  type CatalogueOptions,
+  listPlaces,
+  readCatalogue,
+} from '../catalogueOptions.ts';
 import { addCosmologyOptions, type CosmologyOptions, cosmologyOf } from '../cosmologyOptions.ts';
 import { outputPlaces } from '../outputPlaces.ts';
 import { addRegionOptions, type RegionOptions, regionFiles, regionOf } from '../region.ts';
@@ -34,7 +39,7 @@ export function addCoordinates(program: Command, say: (text: string) => void): v
       const { cosmology, set } = cosmologyOf(options);
       const overwrite = options.overwrite === true;
       const places = await outputPlaces(
-        { '--output': options.output, '--set-aside': options.setAside },
+        { '--output': options.output, ...listPlaces(options) },
         [file, ...regionFiles(options)],
         { overwrite },
       );
@@ -45,7 +50,7 @@ export function addCoordinates(program: Command, say: (text: string) => void): v
       try {
         const { catalogue, mapping } = await readCatalogue(file, options, {
           footprint: given?.footprint ?? null,
-          setAsidePath: places['--set-aside'],
+          places,
           onKept: (row) => {
             if (!begun) output.addText(writer.header(row.id !== null));
             begun = true;

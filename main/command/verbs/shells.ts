@@ -16,7 +16,12 @@ import {
   shellStatistics,
 } from '../../../shared-core/shells/statistics.ts';
 import { estimateFootprint } from '../../../shared-core/sky/estimate.ts';
-import { addCatalogueOptions, type CatalogueOptions, readCatalogue } from '../catalogueOptions.ts';
+import {
+  addCatalogueOptions,
+  type CatalogueOptions,
+  listPlaces,
+  readCatalogue,
+} from '../catalogueOptions.ts';
 import { addCosmologyOptions, type CosmologyOptions, cosmologyOf } from '../cosmologyOptions.ts';
 import { numberList, oneNumber } from '../numbers.ts';
 import { outputPlaces } from '../outputPlaces.ts';
@@ -76,11 +81,9 @@ export function addShells(program: Command, print: (text: string) => void): void
           '--all-columns came without --latex, and every other form has all columns anyway: leave it out, or add --latex.',
           'use',
         );
-      const places = await outputPlaces(
-        { '--set-aside': options.setAside },
-        [file, ...regionFiles(options)],
-        { overwrite: options.overwrite === true },
-      );
+      const places = await outputPlaces(listPlaces(options), [file, ...regionFiles(options)], {
+        overwrite: options.overwrite === true,
+      });
       const given = await regionOf(options);
       tryOnNothing(scheme, {
         cosmology,
@@ -89,7 +92,7 @@ export function addShells(program: Command, print: (text: string) => void): void
       });
       const loaded = await readCatalogue(file, options, {
         footprint: given?.footprint ?? null,
-        setAsidePath: places['--set-aside'],
+        places,
       });
       const { catalogue } = loaded;
       if (catalogue.account.kept === 0) throw new Refusal(nothingLeft(loaded));
