@@ -30,6 +30,8 @@ export interface EngineState {
    * there before, shown faint, and not given out.
    */
   readonly fresh: ReadonlySignal<boolean>;
+  /** False while any result may still be of an earlier study, distances and colours included. */
+  readonly settled: ReadonlySignal<boolean>;
   /** Why a stage could not be done; results before it stand. */
   readonly failure: ReadonlySignal<{ readonly stage: Stage | 'worker'; readonly sentence: string } | null>;
   readonly client: EngineClient;
@@ -63,6 +65,7 @@ export function createEngineState(
   const failure = signal<{ stage: Stage | 'worker'; sentence: string } | null>(null);
 
   const fresh = signal(false);
+  const settled = signal(false);
   let serial = 0;
 
   const receive = (event: EngineEvent): void => {
@@ -109,6 +112,7 @@ export function createEngineState(
         if (event.serial !== serial) return;
         progress.value = null;
         fresh.value = true;
+        settled.value = true;
     }
   };
   const client = new EngineClient({
@@ -142,6 +146,7 @@ export function createEngineState(
     givenUp = null;
     if (sent !== null && sameParts(sent, wish, EVERYTHING)) return;
     if (sent === null || !sameParts(sent, wish, GALAXIES)) fresh.value = false;
+    settled.value = false;
     sent = wish;
     client.want(wish, ++serial);
   };
@@ -154,6 +159,7 @@ export function createEngineState(
     columns,
     progress,
     fresh,
+    settled,
     failure,
     client,
     loadedNow: computed(() => {

@@ -1,9 +1,12 @@
 import { effect, signal } from '@preact/signals';
 import { describe, expect, it } from 'vitest';
 import type { EngineSource } from '../../renderer/engine/protocol.ts';
+import { whyNoPicture } from '../../renderer/panels/picture/usePictureFacts.ts';
+import type { App } from '../../renderer/state/app.ts';
 import { createEngineState } from '../../renderer/state/engineState.ts';
 import { createNotices } from '../../renderer/state/notices.ts';
 import { createStudyState } from '../../renderer/state/studyState.ts';
+import { createCosmology } from '../../shared-core/cosmology/cosmology.ts';
 import { findPublishedSet } from '../../shared-core/cosmology/publishedSets.ts';
 import { emptyStudy } from '../../shared-core/study/document.ts';
 import { change, changeLook } from '../../shared-core/study/edits.ts';
@@ -11,6 +14,8 @@ import type { ColourBy } from '../../shared-core/study/schema.ts';
 import { deskWorker } from './deskWorker.ts';
 
 const FILE = `ra,dec,z,mag,name\n${Array.from({ length: 40 }, (_, i) => `${150 + i / 20},3,${0.5 + i / 50},${15 + i},g${i}`).join('\n')}\n`;
+/** Rows within a degree of RA 150, Dec 3: dRA cos 3 deg <= 1, so i / 20 <= 1.0014. */
+const rowsInside = 21;
 
 async function* bytes(): AsyncIterable<Uint8Array> {
   yield new TextEncoder().encode(FILE);
@@ -48,6 +53,34 @@ describe('what the page keeps of the engine', () => {
     await expect.poll(() => engine.progress.value).toBeNull();
     expect(engine.failure.value).toBeNull();
     expect(engine.columns.value).toEqual([mag]);
+  });
+
+  it('a picture is made only of what belongs to the study as it is, from the very edit on', async () => {
+    const { studyState, engine } = stateOf();
+    const files = { missingSource: signal(null) } as unknown as App['files'];
+    const seen: string[] = [];
+    const stop = effect(() => {
+      if (whyNoPicture({ engine, files }) !== null) return;
+      const { region, cosmology } = studyState.study.value;
+      const [selected, background] = [engine.selected.value!, engine.background.value!];
+      const farthest = background.comovingMpc.at(-1)!;
+      const distance = createCosmology(cosmology).comovingMpc(selected.sample.redshift.at(-1)!);
+      // Kept as 32-bit numbers: 24 bits, so 6e-8 of each.
+      expect(Math.abs(farthest / distance - 1)).toBeLessThan(1e-6);
+      seen.push(`${selected.sample.count} ${region === null ? 'everywhere' : 'inside'}`);
+    });
+    await expect.poll(() => seen.at(-1)).toBe('40 everywhere');
+    const region = { parts: [{ kind: 'cap', raDeg: 150, decDeg: 3, radiusDeg: 1 }], holes: [] } as const;
+    const inside = `${rowsInside} inside`;
+    studyState.perform(change('Observe less', { region }));
+    expect(whyNoPicture({ engine, files })).toMatch(/picture follows/);
+    await expect.poll(() => seen.at(-1)).toBe(inside);
+    const before = seen.length;
+    studyState.perform(change('Other distances', { cosmology: findPublishedSet('wmap9').parameters }));
+    expect(whyNoPicture({ engine, files })).toMatch(/picture follows/);
+    await expect.poll(() => seen.length).toBeGreaterThan(before);
+    stop();
+    expect([...new Set(seen)]).toEqual(['40 everywhere', inside]);
   });
 
   it('galaxies never stand beside what belongs to others, between one event and the next either', async () => {

@@ -19,22 +19,22 @@ export function usePictureFacts(
     engine.density.value,
     engine.columns.value,
   ];
-  const failure = engine.failure.value;
-  const missing = notAtHand({ files });
-  const waiting =
-    failure !== null
-      ? failureText(failure)
-      : missing !== null
-        ? missing
-        : engine.progress.value !== null || (selected !== null && background === null)
-          ? 'The catalogue is still being read: the picture follows.'
-          : null;
+  const waiting = whyNoPicture({ engine, files });
   useLayoutEffect(() => {
     if (waiting === null) client.setFacts({ study, selected, background, density, columns });
   }, [client, study, selected, background, density, columns, waiting]);
   // A picture depends on the study whole: its name stands over it, its fingerprint within.
   const facts = useMemo(() => ({}), [study, selected, background, density, columns]);
   return { facts: waiting === null ? facts : null, waiting };
+}
+
+/** Why nothing can be drawn of the study as it is now: galaxies of an earlier one must never stand under its numbers. */
+export function whyNoPicture({ engine, files }: Pick<App, 'engine' | 'files'>): string | null {
+  const failure = engine.failure.value;
+  if (failure !== null) return failureText(failure);
+  const missing = notAtHand({ files });
+  if (missing !== null) return missing;
+  return engine.settled.value ? null : 'The catalogue is still being read: the picture follows.';
 }
 
 /** A colour that cannot be made is no fault of the catalogue: its sentence says all. */
