@@ -8,10 +8,10 @@ import type { ShellStatistics } from '../../shared-core/shells/shell.ts';
 import { allAsOne, shellStatistics } from '../../shared-core/shells/statistics.ts';
 import { compileRegion } from '../../shared-core/sky/compileRegion.ts';
 import { footprintFields } from '../../shared-core/sky/fields.ts';
-import { colourKey } from '../../shared-core/study/colourBy.ts';
 import type { Light, Study } from '../../shared-core/study/schema.ts';
 import type { ShellInput } from '../cone/types.ts';
 import type { Background, ColumnValues, FootprintPicture, Selected } from '../engine/protocol.ts';
+import { colourWords } from '../stage/colourWords.ts';
 import { type Colours, colouring, coneShells, radialScale } from '../stage/coneInputs.ts';
 import { radialPixel, wholeWindow } from '../strip/layout.ts';
 import { type Readings, readingsOf } from '../strip/readings.ts';
@@ -131,6 +131,19 @@ function givenFootprint(study: Study): FootprintPicture | null {
   return { origin, areaDeg2, estimate, rings: made.outline(), fields: footprintFields(made) };
 }
 
+/** That a picture has not the colours of its study, in a sentence for whoever makes it; null where it has. */
+export function colourRemark(
+  options: PictureOptions,
+  facts: Omit<PictureFacts, 'fingerprint'>,
+): string | null {
+  const { selected, background, density, columns, study } = facts;
+  if (options.colourBy !== null || selected === null || background === null) return null;
+  const { colourBy, colourMap } = study.look;
+  const { lookbackGyr } = background;
+  if (colouring(colourBy, colourMap, selected, { lookbackGyr, density, columns }) !== null) return null;
+  return `Galaxies are coloured by redshift, since the catalogue has no values for ${colourWords(colourBy)}, by which the study colours them.`;
+}
+
 function coloursOf(options: PictureOptions, facts: PictureFacts, within: number): Colours {
   const { selected, background, density, columns, study } = facts;
   const byShell: Colours = { input: { kind: 'shell' }, legend: null };
@@ -149,7 +162,7 @@ function coloursOf(options: PictureOptions, facts: PictureFacts, within: number)
   if (found !== null) return found;
   if (options.colourBy !== null)
     throw new Refusal(
-      `Galaxies were to be coloured by ${colourKey(wanted)}, which this catalogue has no values for: choose redshift, lookback or shell.`,
+      `Galaxies were to be coloured by ${colourWords(wanted)}, which this catalogue has no values for: choose redshift, lookback or shell.`,
       'use',
     );
   return colouring('redshift', map, shown, { lookbackGyr, density: null, columns: [] }) ?? byShell;

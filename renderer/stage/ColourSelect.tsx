@@ -1,17 +1,7 @@
 import { colourKey, colourOfKey } from '../../shared-core/study/colourBy.ts';
-import { COLOUR_CHOICES, type ColourBy, type ColourChoice } from '../../shared-core/study/schema.ts';
+import { COLOUR_CHOICES, type ColourBy } from '../../shared-core/study/schema.ts';
 import { useApp } from '../state/app.ts';
-
-const COLOUR_WORDS: Readonly<Record<ColourChoice, string>> = {
-  redshift: 'redshift',
-  lookback: 'lookback time',
-  shell: 'shell',
-  magnitude: 'magnitude',
-  density: 'local density',
-};
-
-export const colourWords = (by: ColourBy): string =>
-  typeof by === 'object' ? `column ${by.column}` : COLOUR_WORDS[by];
+import { colourWords } from './colourWords.ts';
 
 /** What galaxies are coloured by: the program's choices, and any column of the catalogue. */
 export function ColourSelect(props: {
@@ -38,7 +28,7 @@ export function ColourSelect(props: {
       {unsaid === undefined ? null : <option value="">{unsaid}</option>}
       {COLOUR_CHOICES.map((choice) => (
         <option key={choice} value={choice} disabled={choice === 'magnitude' && !hasMagnitude}>
-          {COLOUR_WORDS[choice]}
+          {colourWords(choice)}
           {choice === 'magnitude' && !hasMagnitude ? ' (no such column chosen)' : ''}
         </option>
       ))}

@@ -7,6 +7,7 @@ import { regionFields, regionFootprint } from '../panels/regionReady.ts';
 import { useApp } from '../state/app.ts';
 import { radialPixel, STRIP_LEFT_PX, STRIP_RIGHT_PX, shownWindow } from '../strip/layout.ts';
 import { readingsOf } from '../strip/readings.ts';
+import { colourTrouble } from './colourTrouble.ts';
 import { colouring, coneFootprint, coneShells, radialScale, VIEW_NAMES } from './coneInputs.ts';
 import { GalaxyCard } from './GalaxyCard.tsx';
 import { MissingCatalogue } from './MissingCatalogue.tsx';
@@ -86,6 +87,9 @@ export function Stage() {
       columns: engine.columns.value,
     });
   });
+  const colourless = useComputed(() =>
+    colourTrouble(colourBy.value, engine.selected.value, engine.failure.value),
+  );
   const radial = useComputed(() => studyState.study.value.look.radial);
   const sideways = useComputed(() => studyState.study.value.look.sideways);
 
@@ -178,6 +182,11 @@ export function Stage() {
           Shells cannot be drawn in 3D now ({drawing.value.reason}); everything else goes on working.
         </p>
       ) : null}
+      {colourless.value === null ? null : (
+        <p class="stage-notice" role="status">
+          {colourless.value}
+        </p>
+      )}
       <MissingCatalogue />
       {footprint.value === null &&
       files.missingSource.value === null &&

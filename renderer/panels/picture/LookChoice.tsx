@@ -1,7 +1,8 @@
 import { useEffect, useId } from 'preact/hooks';
 import type { ColourMapName } from '../../../shared-core/study/schema.ts';
 import { COLOUR_MAPS } from '../../colour/colourMap.ts';
-import { ColourSelect, colourWords } from '../../stage/ColourSelect.tsx';
+import { ColourSelect } from '../../stage/ColourSelect.tsx';
+import { colourWords } from '../../stage/colourWords.ts';
 import { LightFields } from '../../stage/LightFields.tsx';
 import { useApp } from '../../state/app.ts';
 import { ChoiceField } from '../../ui/ChoiceField.tsx';

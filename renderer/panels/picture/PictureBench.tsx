@@ -1,6 +1,7 @@
 import { useEffect, useMemo, useState } from 'preact/hooks';
 import { filmFrames, filmMemoryBytes, waitText } from '../../../shared-core/picture/film.ts';
 import type { DrawnFormat } from '../../../shared-core/picture/job.ts';
+import { colourRemark } from '../../picture/numbers.ts';
 import { useApp } from '../../state/app.ts';
 import { ChoiceField } from '../../ui/ChoiceField.tsx';
 import { Dialog } from '../../ui/Dialog.tsx';
@@ -50,6 +51,11 @@ export function PictureBench({ onClose }: { readonly onClose: () => void }) {
   const exporting = usePictureExport(app, client);
   useEffect(() => () => client.stop(), [client]);
 
+  const remarks = useMemo(() => {
+    const colour = options && facts && colourRemark(options, facts);
+    const others = options === null ? [] : pictureRemarks(options, app.derived.shells.value);
+    return colour === null ? others : [colour, ...others];
+  }, [JSON.stringify(options), facts, app.derived.shells.value]);
   const galaxies = app.engine.selected.value?.sample.count ?? 0;
   const needed = neededBytes(read, galaxies);
   const general =
@@ -129,7 +135,7 @@ export function PictureBench({ onClose }: { readonly onClose: () => void }) {
           <ExportRow
             state={exporting.state}
             hindered={hindered}
-            remarks={options === null ? [] : pictureRemarks(options, app.derived.shells.value)}
+            remarks={remarks}
             said={said}
             onExport={(format) => {
               if (options !== null) void exporting.start(format, options, film);

@@ -1,4 +1,5 @@
 import { useLayoutEffect, useMemo } from 'preact/hooks';
+import type { PictureFacts } from '../../picture/numbers.ts';
 import type { App } from '../../state/app.ts';
 import type { EngineState } from '../../state/engineState.ts';
 import { notAtHand } from '../notAtHand.ts';
@@ -6,12 +7,12 @@ import type { PictureClient } from './pictureClient.ts';
 
 /**
  * Gives the worker what the window has made of the study.
- * @returns `facts`: something that changes with them, null while they are being made; `waiting`: what is waited for
+ * @returns `facts`: new ones whenever they change, null while they are being made; `waiting`: what is waited for
  */
 export function usePictureFacts(
   { engine, studyState, files }: App,
   client: PictureClient,
-): { readonly facts: object | null; readonly waiting: string | null } {
+): { readonly facts: Omit<PictureFacts, 'fingerprint'> | null; readonly waiting: string | null } {
   const study = studyState.study.value;
   const [selected, background, density, columns] = [
     engine.selected.value,
@@ -20,11 +21,14 @@ export function usePictureFacts(
     engine.columns.value,
   ];
   const waiting = whyNoPicture({ engine, files });
-  useLayoutEffect(() => {
-    if (waiting === null) client.setFacts({ study, selected, background, density, columns });
-  }, [client, study, selected, background, density, columns, waiting]);
   // A picture depends on the study whole: its name stands over it, its fingerprint within.
-  const facts = useMemo(() => ({}), [study, selected, background, density, columns]);
+  const facts = useMemo(
+    () => ({ study, selected, background, density, columns }),
+    [study, selected, background, density, columns],
+  );
+  useLayoutEffect(() => {
+    if (waiting === null) client.setFacts(facts);
+  }, [client, facts, waiting]);
   return { facts: waiting === null ? facts : null, waiting };
 }
 

@@ -15,7 +15,7 @@ import { demoStudy } from '../../state/demoStudy.ts';
 import { composePicture } from '../composePicture.ts';
 import { composeFilm } from '../film/composeFilm.ts';
 import { renderFilm } from '../film/renderFilm.ts';
-import type { PictureFacts } from '../numbers.ts';
+import { colourRemark, type PictureFacts } from '../numbers.ts';
 import { renderPng } from '../renderPng.ts';
 import { sceneToPdf } from '../sceneToPdf.ts';
 import { sceneToSvg } from '../sceneToSvg.ts';
@@ -40,6 +40,8 @@ async function work(): Promise<void> {
     onProgress: (fraction) => void tell({ kind: 'progress', stage: 'catalogue', fraction }),
     onRemark: (sentence) => void tell({ kind: 'remark', sentence }),
   });
+  const remark = colourRemark(options, facts);
+  if (remark !== null) await tell({ kind: 'remark', sentence: remark });
   const sender = new PieceSender((bytes) => asked(PICTURE_PATHS.piece, bytes));
   await write(job, options, facts, sender, {
     onProgress: (fraction) => void tell({ kind: 'progress', stage: 'picture', fraction }),

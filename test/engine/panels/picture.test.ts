@@ -177,7 +177,7 @@ describe('the worker', () => {
     expect((await exported({}, 0)).at(-1)).toEqual({ kind: 'cancelled', id: 7 });
     expect((await exported({ colourBy: 'density' })).at(-1)).toMatchObject({
       kind: 'refused',
-      sentence: expect.stringMatching(/coloured by density/),
+      sentence: expect.stringMatching(/coloured by local density/),
     });
   });
 });

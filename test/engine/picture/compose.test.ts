@@ -1,10 +1,11 @@
 import { beforeAll, describe, expect, it } from 'vitest';
 import { composePicture, describePicture } from '../../../renderer/picture/composePicture.ts';
-import type { PictureFacts } from '../../../renderer/picture/numbers.ts';
+import { colourRemark, type PictureFacts, pictureNumbers } from '../../../renderer/picture/numbers.ts';
 import type { Scene, TextItem } from '../../../renderer/picture/scene.ts';
 import { textWidth } from '../../../renderer/picture/text/measure.ts';
 import { createCosmology } from '../../../shared-core/cosmology/cosmology.ts';
 import { PICTURE_STYLES, PICTURE_VIEWS } from '../../../shared-core/picture/options.ts';
+import { changeLook } from '../../../shared-core/study/edits.ts';
 import { factsOf, STUDY, small } from './facts.ts';
 
 let facts: PictureFacts;
@@ -98,6 +99,13 @@ it('refuses to draw nothing, and colours without values', () => {
   expect(() => composePicture(small({ colourBy: 'magnitude' }), noMagnitudes)).toThrow(
     /coloured by magnitude/,
   );
+  // The study's own wish is no option that came: the picture is drawn, and what became of the wish is told.
+  const own = changeLook('Colour', { colourBy: 'magnitude' }).apply(STUDY);
+  const remarked = { ...noMagnitudes, study: own };
+  expect(colourRemark(small(), remarked)).toMatch(/by redshift, since .* no values for magnitude/);
+  expect(pictureNumbers(small(), remarked).colours.legend!.title).toBe('redshift');
+  expect(colourRemark(small(), { ...facts, study: own })).toBeNull();
+  expect(colourRemark(small({ colourBy: 'shell' }), remarked)).toBeNull();
 });
 
 it('keeps a label of 500 characters and one from right to left on the paper, and whole in the description', () => {
