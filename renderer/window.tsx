@@ -2,19 +2,19 @@ import './theme.css';
 import './frame.css';
 import { render } from 'preact';
 import { nextTask } from './cone/points/slices.ts';
-import { Frame } from './frame.tsx';
-import { connectHost } from './host/connect.ts';
-import { AppContext, createApp } from './state/app.ts';
 import { createQuestions } from './state/questions.ts';
 
+/** Each part is loaded, and then does its work, in a task of its own: all at once would block the page. */
 async function start(): Promise<void> {
   const place = document.getElementById('window')!;
   const questions = createQuestions();
+  const { connectHost } = await import('./host/connect.ts');
   const bridge = await connectHost(questions);
-  // What follows is a task of its own, and the frame another.
+  const { AppContext, createApp } = await import('./state/app.ts');
   await nextTask();
   const theme = matchMedia('(prefers-color-scheme: light)').matches ? 'light' : 'dark';
   const app = createApp(bridge, { theme, questions });
+  const { Frame } = await import('./frame.tsx');
   await nextTask();
   render(
     <AppContext.Provider value={app}>

@@ -1,8 +1,8 @@
-import { Color } from 'three';
 import type { Triple } from '../colour/oklab.ts';
 import { type ConeFrame, pixelOf } from './coneFrame.ts';
 import type { ConeModel } from './coneModel.ts';
 import { compose } from './geometry/projection.ts';
+import type { ShellMesh } from './geometry/shellMesh.ts';
 import type { GlStage } from './graphics/glStage.ts';
 import { MergedCanvas } from './merged.ts';
 import { paintOverlay } from './overlay/paintOverlay.ts';
@@ -10,7 +10,7 @@ import { Pen } from './overlay/pen.ts';
 import type { Galaxies } from './points/galaxies.ts';
 import { radiusAt } from './points/radiusTable.ts';
 import { type FlatPlace, paintFlatSolids } from './solids/flatSolids.ts';
-import { ShellSolids, type SolidLook } from './solids/shellSolids.ts';
+import type { SolidLook } from './solids/solidLook.ts';
 import type { Stage } from './stage.ts';
 import type { ConeTheme, RadialScaleInput, ShellsInput } from './types.ts';
 
@@ -33,7 +33,8 @@ const GLASS = { dark: 0.045, light: 0.06 } as const;
  * points, the solids by three.js; without one all is drawn into one canvas.
  */
 export class ConeLayers {
-  readonly solids = new ShellSolids();
+  /** The solids' shapes, one for each field. */
+  meshes: readonly ShellMesh[] = [];
   private readonly stage: Stage;
   private readonly gl: GlStage;
   private readonly merged: MergedCanvas;
@@ -46,18 +47,7 @@ export class ConeLayers {
 
   /** Clears the WebGL canvas: to the ground where it carries the points, else to nothing. */
   clear(ground: Triple | null): void {
-    const { renderer } = this.gl;
-    if (!renderer || !this.gl.usable) return;
-    const { widthPx, heightPx, pixelRatio } = this.stage;
-    const width = Math.max(1, Math.round(widthPx * pixelRatio));
-    const height = Math.max(1, Math.round(heightPx * pixelRatio));
-    if (renderer.domElement.width !== width || renderer.domElement.height !== height) {
-      renderer.setPixelRatio(1);
-      renderer.setSize(width, height, false);
-    }
-    const [r, g, b] = ground ?? [0, 0, 0];
-    renderer.setClearColor(new Color(r / 255, g / 255, b / 255), ground ? 1 : 0);
-    renderer.clear();
+    this.gl.layers?.clear(this.stage, this.stage.pixelRatio, ground);
   }
 
   /** Over points that WebGL has drawn. */
@@ -90,20 +80,16 @@ export class ConeLayers {
     this.stage.show(this.stage.points);
   }
 
-  dispose(): void {
-    this.solids.dispose();
-  }
-
   private drawSolids(frame: ConeFrame, look: LayerLook): void {
-    const { renderer } = this.gl;
-    if (!renderer || !this.gl.usable) return;
+    const { layers } = this.gl;
+    if (!layers) return;
     const seen = viewRows(frame);
     const places = frame.lanes.map((lane, i) => ({
       field: lane.field,
       pixels: frame.laneMatrices[i]!,
       seen: compose(seen, lane.model),
     }));
-    this.solids.draw(renderer, this.stage, places, solidLooks(frame, look));
+    layers.solids.draw(this.stage, this.meshes, places, solidLooks(frame, look));
   }
 
   private paint(

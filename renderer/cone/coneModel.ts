@@ -4,7 +4,7 @@ import { type DepthRange, depthRange } from './geometry/depthCue.ts';
 import { SKY_FRAME } from './geometry/fieldFrame.ts';
 import { cornersOf, freePose } from './geometry/freePose.ts';
 import { axisWindowOf, FRONT, orbited, panned, sideOnPose, zoomed } from './geometry/poses.ts';
-import { type PreparedField, prepareFields } from './geometry/preparedField.ts';
+import type { PreparedField } from './geometry/preparedField.ts';
 import type { Pose, Viewport } from './geometry/projection.ts';
 import { laneHeightsOf, restingHeight, type SideOn, sidewaysFactors } from './geometry/sideOn.ts';
 import type { Vec3 } from './geometry/vector.ts';
@@ -65,10 +65,6 @@ export class ConeModel {
   setViewport(viewport: Viewport): void {
     this.viewport = viewport;
     if (this.exact) this.takePose();
-  }
-
-  setFootprint(input: FootprintInput): void {
-    this.setFields(prepareFields(input), input);
   }
 
   /** @param fields made of the footprint by `prepareFields` */

@@ -68,7 +68,7 @@ export class ConeView {
     this.layers = new ConeLayers(this.stage, this.gl);
     this.region = new RegionInTurn(this.work, this.painter.galaxies, (fields, footprint, views) => {
       this.change(0, () => this.model.setFields(fields, footprint));
-      this.layers.solids.setMeshes(fields.map((field) => field.mesh));
+      this.layers.meshes = fields.map((field) => field.mesh);
       for (const change of views) this.change(0, change);
     });
     this.pointing = new Pointing({
@@ -221,7 +221,6 @@ export class ConeView {
     this.stopListening();
     this.painter.dispose();
     this.work.dispose();
-    this.layers.dispose();
     this.pointing.dispose();
     this.gl.dispose();
     this.stage.dispose();

@@ -1,19 +1,19 @@
-import { WebGLRenderer } from 'three';
 import type { DrawingState } from '../types.ts';
+import type { GpuLayers } from './gpuLayers.ts';
 import { findGpu } from './probe.ts';
-import { rendererOf } from './rendererName.ts';
 
 /**
  * WebGL where a GPU stands behind it: made once it is known, told when it is lost, taken up again when it is restored.
  * Until then, and without a GPU, the processor draws.
  */
 export class GlStage {
-  renderer: WebGLRenderer | null = null;
   state: DrawingState = { webgl: 'unused' };
+  private made: GpuLayers | null = null;
   private readonly canvas: HTMLCanvasElement;
   private readonly changed: (state: DrawingState) => void;
   private readonly end = new AbortController();
   private looked = false;
+  private started = false;
 
   constructor(canvas: HTMLCanvasElement, changed: (state: DrawingState) => void) {
     this.canvas = canvas;
@@ -31,11 +31,12 @@ export class GlStage {
       },
       { signal },
     );
-    canvas.addEventListener('webglcontextrestored', () => this.tell(this.describe()), { signal });
+    canvas.addEventListener('webglcontextrestored', () => this.tellReady(), { signal });
   }
 
-  get usable(): boolean {
-    return this.state.webgl === 'ready' && this.renderer !== null;
+  /** What three.js draws; null while it cannot. */
+  get layers(): GpuLayers | null {
+    return this.state.webgl === 'ready' ? this.made : null;
   }
 
   /** Looks for a GPU, once. While one is looked for the browser may keep other canvases waiting: not before a picture. */
@@ -50,29 +51,28 @@ export class GlStage {
 
   /** Makes the context if there is none yet, whatever stands behind it: without a GPU the page waits for that. */
   start(): void {
-    if (this.renderer) return;
-    try {
-      this.renderer = new WebGLRenderer({
-        canvas: this.canvas,
-        alpha: true,
-        antialias: false,
-        depth: false,
-        stencil: false,
-        premultipliedAlpha: true,
-        powerPreference: 'high-performance',
-      });
-      this.renderer.autoClear = false;
-      this.tell(this.describe());
-    } catch {
-      this.tell({ webgl: 'absent', reason: 'this machine offers no WebGL; they are drawn flat' });
-    }
+    if (this.started) return;
+    this.started = true;
+    void this.make().then(
+      (made) => {
+        if (made === null) return;
+        this.made = made;
+        this.tellReady();
+      },
+      () => this.tell({ webgl: 'absent', reason: 'this machine offers no WebGL; they are drawn flat' }),
+    );
   }
 
   dispose(): void {
     this.end.abort();
-    this.renderer?.dispose();
-    this.renderer?.forceContextLoss();
-    this.renderer = null;
+    this.made?.dispose();
+    this.made = null;
+  }
+
+  /** Three.js is large, and not needed where there is no GPU: it comes with the first use. */
+  private async make(): Promise<GpuLayers | null> {
+    const { GpuLayers } = await import('./gpuLayers.ts');
+    return this.end.signal.aborted ? null : new GpuLayers(this.canvas);
   }
 
   private tell(state: DrawingState): void {
@@ -80,8 +80,8 @@ export class GlStage {
     this.changed(state);
   }
 
-  private describe(): DrawingState {
-    const { name, software } = rendererOf(this.renderer!.getContext() as WebGL2RenderingContext);
-    return { webgl: 'ready', renderer: name, software };
+  private tellReady(): void {
+    const { name, software } = this.made!.describe();
+    this.tell({ webgl: 'ready', renderer: name, software });
   }
 }

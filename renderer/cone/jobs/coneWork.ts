@@ -1,4 +1,4 @@
-import { type PreparedField, prepareFields } from '../geometry/preparedField.ts';
+import type { PreparedField } from '../geometry/preparedField.ts';
 import { indexer } from '../points/colouring.ts';
 import type { PickIndex } from '../points/pickIndex.ts';
 import { PointStore, type StoreMemory } from '../points/pointStore.ts';
@@ -32,7 +32,9 @@ export class ConeWork {
   async fields(footprint: FootprintInput): Promise<readonly PreparedField[]> {
     const task = { kind: 'fields', footprint } as const;
     const fields = await this.ask<'fields'>(task, null).catch(() => null);
-    return fields ?? prepareFields(footprint);
+    if (fields) return fields;
+    const { prepareFields } = await import('../geometry/preparedField.ts');
+    return prepareFields(footprint);
   }
 
   async store(basis: StoreBasis, memory: ConeMemory, signal: AbortSignal): Promise<PointStore | null> {

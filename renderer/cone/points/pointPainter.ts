@@ -2,6 +2,7 @@ import { pickNear } from '../geometry/pickNear.ts';
 import { type PointHit, pickPoint } from '../geometry/pickPoint.ts';
 import type { Viewport } from '../geometry/projection.ts';
 import type { GlStage } from '../graphics/glStage.ts';
+import type { WebglPoints } from '../graphics/webglPoints.ts';
 import type { ConeMemory, ConeWork } from '../jobs/coneWork.ts';
 import { crowding, exposure, NOTHING, pointSizePx } from './exposure.ts';
 import { Galaxies, type GalaxiesChange } from './galaxies.ts';
@@ -11,7 +12,6 @@ import { RESERVED_BYTES } from './software/messages.ts';
 import { SoftwarePoints } from './software/softwarePoints.ts';
 import { SplatPool } from './software/splatPool.ts';
 import { type ToneLook, ToneSource } from './toneSource.ts';
-import { WebglPoints } from './webglPoints.ts';
 
 /** How points are drawn: as the machine suggests, or as one says. */
 export type LayerChoice = 'auto' | 'software' | 'webgl';
@@ -57,9 +57,9 @@ export class PointPainter {
     const state = this.gl.state;
     const hardware = state.webgl === 'ready' && !state.software;
     const wanted = this.choice === 'auto' ? (hardware ? 'webgl' : 'software') : this.choice;
-    if (wanted === 'webgl' && this.gl.usable && this.webgl) return 'webgl';
+    if (wanted === 'webgl' && this.gl.layers && this.webgl) return 'webgl';
     if (this.software) return 'software';
-    return this.gl.usable && this.webgl ? 'webgl' : 'none';
+    return this.gl.layers && this.webgl ? 'webgl' : 'none';
   }
 
   /** The software layer's picture of the points; null when it is not the one in use. */
@@ -76,14 +76,10 @@ export class PointPainter {
 
   /** WebGL came, went or came back. */
   takeGl(): void {
-    if (this.gl.usable && this.gl.renderer && !this.webgl) {
-      try {
-        this.webgl = new WebglPoints(this.gl.renderer);
-        this.webgl.setStore(this.galaxies.store);
-      } catch {
-        // No float target to sum light in: the software layer draws the points.
-        this.webgl = null;
-      }
+    const points = this.gl.layers?.points ?? null;
+    if (points && !this.webgl) {
+      this.webgl = points;
+      points.setStore(this.galaxies.store);
     }
     this.version++;
   }
@@ -160,7 +156,6 @@ export class PointPainter {
   dispose(): void {
     this.galaxies.dispose();
     this.software?.dispose();
-    this.webgl?.dispose();
     this.pool?.dispose();
   }
 

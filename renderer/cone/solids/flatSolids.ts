@@ -3,7 +3,7 @@ import { NEAREST_W } from '../geometry/projection.ts';
 import type { ShellMesh } from '../geometry/shellMesh.ts';
 import { cross, dot, norm, type Vec3 } from '../geometry/vector.ts';
 import { type CapPart, capParts } from './capParts.ts';
-import { RIM, type SolidLook } from './shellSolids.ts';
+import { RIM, type SolidLook } from './solidLook.ts';
 
 /** What is drawn of a field: its rings, and its matrices of this frame. */
 export interface FlatPlace {

@@ -9,6 +9,7 @@ import {
   project,
   type Viewport,
 } from '../../cone/geometry/projection.ts';
+import { prepareFields } from '../../cone/geometry/preparedField.ts';
 import { COMOVING_DROP_PX } from '../../cone/overlay/alignedRulers.ts';
 import type { Point } from '../../cone/overlay/pen.ts';
 import type { OverlayScene, PaintedLane } from '../../cone/overlay/scene.ts';
@@ -48,9 +49,9 @@ export function coneSetting(input: ViewInput, arrange: (model: ConeModel) => voi
   const viewport = { widthPx: box.width, heightPx: box.height - TITLE_ROOM };
   const extent = { min: 0, max: axis.at(window[1]) };
   model.setViewport(viewport);
-  model.setFootprint(
-    numbers.footprint === null ? { fields: [], wide: true } : coneFootprint(numbers.footprint),
-  );
+  const footprint =
+    numbers.footprint === null ? { fields: [], wide: true } : coneFootprint(numbers.footprint);
+  model.setFields(prepareFields(footprint), footprint);
   model.setScale(scale, extent);
   model.setAxis(extent, INSETS);
   arrange(model);

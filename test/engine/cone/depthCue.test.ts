@@ -3,6 +3,7 @@ import { ConeModel } from '../../../renderer/cone/coneModel.ts';
 import { depthCue, depthRange, lightAt } from '../../../renderer/cone/geometry/depthCue.ts';
 import { SKY_FRAME } from '../../../renderer/cone/geometry/fieldFrame.ts';
 import { lookingFrom } from '../../../renderer/cone/geometry/poses.ts';
+import { prepareFields } from '../../../renderer/cone/geometry/preparedField.ts';
 import { modelMatrix, type Pose } from '../../../renderer/cone/geometry/projection.ts';
 
 /** From the end of the x axis, toward the origin: what has a large x is near. */
@@ -39,7 +40,8 @@ it('is nothing where it is off, and where there is no depth', () => {
 it('reaches through the whole of a sky without an outline, from wherever it is seen', () => {
   const model = new ConeModel();
   model.setViewport({ widthPx: 600, heightPx: 400 });
-  model.setFootprint({ fields: [], wide: true });
+  const sky = { fields: [], wide: true };
+  model.setFields(prepareFields(sky), sky);
   for (const from of [
     [1, 0, 0],
     [0, 0, 1],

@@ -1,4 +1,4 @@
-import { LIGHT_STEPS, VALUE_STEPS } from './tone.ts';
+import { LIGHT_STEPS, VALUE_STEPS } from '../points/tone.ts';
 
 /** A galaxy: light and light times value, to be summed. */
 export const POINT_VERTEX = `

@@ -16,9 +16,9 @@ import {
   Vector2,
   type WebGLRenderer,
 } from 'three';
-import type { Triple } from '../../colour/oklab.ts';
 import { clipMatrix, type Viewport } from '../geometry/projection.ts';
 import type { ShellMesh } from '../geometry/shellMesh.ts';
+import { RIM, type SolidLook } from '../solids/solidLook.ts';
 
 const VERTEX = `
 precision highp float;
@@ -49,17 +49,6 @@ void main() {
   pixel = vec4(colour * a, a);
 }`;
 
-/** How much stronger a wall looks that is seen edge on. */
-export const RIM = 2.5;
-
-/** How one shell is drawn: radii on the display scale, colour as sRGB bytes, strength 0..1. */
-export interface SolidLook {
-  readonly inner: number;
-  readonly outer: number;
-  readonly colour: Triple;
-  readonly alpha: number;
-}
-
 /** Where a field's solids stand in this frame. */
 export interface SolidPlace {
   readonly field: number;
@@ -73,14 +62,32 @@ type Solid = Mesh<BufferGeometry, RawShaderMaterial>;
 
 /** Translucent shells; one geometry for each field, shared by all its shells. */
 export class ShellSolids {
+  private readonly renderer: WebGLRenderer;
   private readonly scene = new Scene();
   private readonly camera = new Camera();
   private geometries: BufferGeometry[] = [];
   private solids: Solid[][] = [];
+  private meshes: readonly ShellMesh[] = [];
 
-  /** The solids' shapes, one for each field. */
-  setMeshes(meshes: readonly ShellMesh[]): void {
+  constructor(renderer: WebGLRenderer) {
+    this.renderer = renderer;
+  }
+
+  /** Draws over what the canvas holds. @param meshes the solids' shapes, one for each field */
+  draw(
+    viewport: Viewport,
+    meshes: readonly ShellMesh[],
+    places: readonly SolidPlace[],
+    looks: readonly SolidLook[],
+  ): void {
+    if (meshes !== this.meshes) this.setMeshes(meshes);
+    this.place(viewport, places, looks);
+    this.renderer.render(this.scene, this.camera);
+  }
+
+  private setMeshes(meshes: readonly ShellMesh[]): void {
     this.dispose();
+    this.meshes = meshes;
     this.geometries = meshes.map((mesh) => {
       const geometry = new BufferGeometry();
       geometry.setAttribute('position', new BufferAttribute(mesh.directions, 3));
@@ -91,13 +98,7 @@ export class ShellSolids {
     this.solids = meshes.map(() => []);
   }
 
-  /** Draws over what the renderer's canvas holds. */
-  draw(
-    renderer: WebGLRenderer,
-    viewport: Viewport,
-    places: readonly SolidPlace[],
-    looks: readonly SolidLook[],
-  ): void {
+  private place(viewport: Viewport, places: readonly SolidPlace[], looks: readonly SolidLook[]): void {
     for (const solid of this.solids.flat()) solid.visible = false;
     for (const place of places) {
       const clip = new Matrix4().fromArray(clipMatrix(place.pixels, viewport));
@@ -133,7 +134,6 @@ export class ShellSolids {
         uniforms.alpha!.value = look.alpha;
       }
     }
-    renderer.render(this.scene, this.camera);
   }
 
   dispose(): void {
