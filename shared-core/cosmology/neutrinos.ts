@@ -25,9 +25,9 @@ export function massiveNeutrinoRatioExact(y: number): number {
 }
 
 /*
- * f(y) is tabulated in ln y, once for all cosmologies: within 1e-12 of the integral. Below the table
- * f = 1 + 5 y^2/(7 pi^2) + O(y^4 ln y), above it the expansion of the square root for x << y, whose terms are
- * integrals of x^(2k)/(e^x + 1) = (2k)! (1 - 2^-2k) zeta(2k+1).
+ * f(y) is tabulated in ln y, once for all cosmologies, each cell when it is first asked for: within 1e-12 of the
+ * integral. Below the table f = 1 + 5 y^2/(7 pi^2) + O(y^4 ln y), above it the expansion of the square root for
+ * x << y, whose terms are integrals of x^(2k)/(e^x + 1) = (2k)! (1 - 2^-2k) zeta(2k+1).
  */
 const LOW = log(1e-3);
 const HIGH = log(300);
@@ -36,20 +36,13 @@ const WIDTH = (HIGH - LOW) / CELLS;
 const LARGE_Y = [1.803085354739391, 23.33087449072582, 714.667550344438, 40243.162076878].map(
   (integral, k) => (120 / (7 * powerOf(Math.PI, 4))) * integral * [1, 1 / 2, -1 / 8, 1 / 16][k]!,
 );
-let table: Float64Array | null = null;
+const table = new Float64Array(CELLS * COEFFICIENTS);
+const fitted = new Uint8Array(CELLS);
 
-function buildTable(): Float64Array {
-  const coefficients = new Float64Array(CELLS * COEFFICIENTS);
-  for (let i = 0; i < CELLS; i++) {
-    fitCell(
-      (lnY) => massiveNeutrinoRatioExact(exp(lnY)),
-      LOW + i * WIDTH,
-      WIDTH,
-      coefficients,
-      i * COEFFICIENTS,
-    );
-  }
-  return coefficients;
+function fitAt(cell: number): void {
+  const ratio = (lnY: number) => massiveNeutrinoRatioExact(exp(lnY));
+  fitCell(ratio, LOW + cell * WIDTH, WIDTH, table, cell * COEFFICIENTS);
+  fitted[cell] = 1;
 }
 
 /** massiveNeutrinoRatioExact from a table, at ln y. */
@@ -60,9 +53,9 @@ export function massiveNeutrinoRatio(lnY: number): number {
     const q = 1 / (y * y);
     return y * (LARGE_Y[0]! + q * (LARGE_Y[1]! + q * (LARGE_Y[2]! + q * LARGE_Y[3]!)));
   }
-  table ??= buildTable();
   const at = (lnY - LOW) / WIDTH;
   const cell = Math.min(Math.floor(at), CELLS - 1);
+  if (fitted[cell] === 0) fitAt(cell);
   return evaluateCell(table, cell * COEFFICIENTS, at - cell);
 }
 

@@ -73,6 +73,10 @@ function validateMasses({ neutrinoMassesEv, nEff, tCmbK }: CosmologyParameters):
 /** The redshift at which H^2 falls too low, or null. */
 function findTurn(parameters: CosmologyParameters): number | null {
   const expansion = createExpansion(parameters);
+  const { omegaM0, omegaGamma0, omegaK0, omegaDe0, early } = expansion;
+  const never = early.coefficient > 0 ? null : MAX_REDSHIFT;
+  // Where no term of E^2 is negative, it is never less than what grows with (1+z) is today.
+  if (omegaK0 >= 0 && omegaDe0 >= 0 && omegaM0 + omegaGamma0 + omegaK0 > LEAST_E_SQUARED) return never;
   const end = log1p(MAX_REDSHIFT);
   const steps = 2000;
   const step = end / steps;
@@ -89,7 +93,7 @@ function findTurn(parameters: CosmologyParameters): number | null {
     before = here;
     here = after;
   }
-  return expansion.early.coefficient > 0 ? null : MAX_REDSHIFT;
+  return never;
 }
 
 /** Where E^2 is least in [low, high]: golden section (Kiefer 1953), to 1e-9 in ln(1+z). */
