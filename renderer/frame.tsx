@@ -31,7 +31,8 @@ export function Frame() {
       </aside>
       <main class="centre">
         <section class="stage" aria-label="The cone">
-          <InTurn>
+          {/* The cone's first picture follows in the frame after its place. */}
+          <InTurn frames={3}>
             <Stage />
           </InTurn>
         </section>

@@ -14,6 +14,12 @@ async function start(): Promise<void> {
   await nextTask();
   const theme = matchMedia('(prefers-color-scheme: light)').matches ? 'light' : 'dark';
   const app = createApp(bridge, { theme, questions });
+  // What every panel will ask for, worked out before them.
+  const { cosmology, axis, deepestRedshift } = app.derived;
+  await nextTask();
+  cosmology.value.table();
+  await nextTask();
+  axis.value.redshiftAt(axis.value.at(deepestRedshift.value));
   const { Frame } = await import('./frame.tsx');
   await nextTask();
   render(

@@ -17,17 +17,18 @@ export class Stage {
   constructor(container: HTMLElement, changed: () => void) {
     this.container = container;
     this.changed = changed;
+    // Before anything is put in: the page is laid out now, and would have to be once more after it.
+    this.measure(false);
+    if (getComputedStyle(container).position === 'static') container.style.position = 'relative';
     this.points = this.layer('canvas');
     this.solids = this.layer('canvas');
     this.overlay = this.layer('canvas');
     this.surface = this.layer('div');
     this.surface.style.touchAction = 'none';
     this.surface.style.pointerEvents = 'auto';
-    if (getComputedStyle(container).position === 'static') container.style.position = 'relative';
     container.append(this.points, this.solids, this.overlay, this.surface);
     this.observer = new ResizeObserver(() => this.measure());
     this.observer.observe(container);
-    this.measure(false);
   }
 
   /** Gives a canvas the size of the stage in device pixels; says whether that changed it (and emptied it). */

@@ -1,3 +1,4 @@
+import { InTurn } from '../ui/InTurn.tsx';
 import { ColumnsSection } from './columns/ColumnsSection.tsx';
 import { CosmologySection } from './cosmology/CosmologySection.tsx';
 import { CutsSection } from './cuts/CutsSection.tsx';
@@ -11,11 +12,19 @@ import './columns/preview.css';
 export function DeskPanel() {
   return (
     <div class="desk-panel">
-      <SourceSection />
-      <ColumnsSection />
-      <CutsSection />
-      <RegionSection />
-      <CosmologySection />
+      <InTurn>
+        <SourceSection />
+      </InTurn>
+      <InTurn>
+        <ColumnsSection />
+        <CutsSection />
+      </InTurn>
+      <InTurn>
+        <RegionSection />
+      </InTurn>
+      <InTurn>
+        <CosmologySection />
+      </InTurn>
     </div>
   );
 }

@@ -1,5 +1,7 @@
-import { useEffect, useLayoutEffect, useMemo, useRef } from 'preact/hooks';
+import { useEffect, useMemo, useRef } from 'preact/hooks';
 import { useApp } from '../state/app.ts';
+import { smallTypePx } from '../ui/smallType.ts';
+import { useBoxSize } from '../ui/useBoxSize.ts';
 import { DensityPlot } from './DensityPlot.tsx';
 import { DepthAxes } from './DepthAxes.tsx';
 import { EdgeHandles } from './EdgeHandles.tsx';
@@ -15,9 +17,6 @@ import { EdgeBubble, ProfileText, Sentence, Tip } from './StripNotes.tsx';
 import { StripTools } from './StripTools.tsx';
 import { createStripModel, type StripModel } from './stripModel.ts';
 import { TypedEdge } from './TypedEdge.tsx';
-
-/** Text of the strip over the size of the page's type; the same as --text-s. */
-const SMALL_TYPE = 0.75;
 
 /** Density along the line of sight, the shells as bands, and their edges to take hold of. */
 export function DepthStrip() {
@@ -40,18 +39,9 @@ interface PartProps {
 
 function StripDrawing({ model, gestures }: PartProps) {
   const box = useRef<HTMLDivElement>(null);
-  useLayoutEffect(() => {
-    const element = box.current!;
-    const measure = (): void => {
-      const { width, height } = element.getBoundingClientRect();
-      const rem = Number.parseFloat(getComputedStyle(document.documentElement).fontSize);
-      model.size.value = { widthPx: width, heightPx: height, fontPx: rem * SMALL_TYPE };
-    };
-    measure();
-    const watch = new ResizeObserver(measure);
-    watch.observe(element);
-    return () => watch.disconnect();
-  }, [model]);
+  useBoxSize(box, (widthPx, heightPx) => {
+    model.size.value = { widthPx, heightPx, fontPx: smallTypePx() };
+  });
   useEffect(() => {
     const element = box.current!;
     // The page must not scroll under a wheel that zooms, and only an active listener may say so.

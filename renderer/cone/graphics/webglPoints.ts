@@ -25,9 +25,9 @@ import {
 } from 'three';
 import { clipMatrix } from '../geometry/projection.ts';
 import type { PointFrame, PointLayer, PointPart } from '../points/pointLayer.ts';
-import { POINT_FRAGMENT, POINT_VERTEX, TONE_FRAGMENT, TONE_VERTEX } from './pointShaders.ts';
 import type { PointStore } from '../points/pointStore.ts';
 import { LIGHT_STEPS, type Tone, toneTable, VALUE_STEPS } from '../points/tone.ts';
+import { POINT_FRAGMENT, POINT_VERTEX, TONE_FRAGMENT, TONE_VERTEX } from './pointShaders.ts';
 
 /** Points by WebGL: light is summed in a float target and then toned by the same table as the software layer's. */
 export class WebglPoints implements PointLayer {

@@ -1,5 +1,5 @@
 import type { Light } from '../../../shared-core/study/schema.ts';
-import { parseCssColour } from '../cssColour.ts';
+import { hexColour } from '../hexColour.ts';
 import type { ColouringInput, ConeTheme } from '../types.ts';
 import { palette } from './colouring.ts';
 import type { Tone } from './tone.ts';
@@ -30,7 +30,7 @@ export class ToneSource {
     const key = [theme.mode, theme.background, map, stretch, glow, full, single].join(' ');
     if (this.last?.key === key) return this.last.tone;
     const tone: Tone = {
-      background: parseCssColour(theme.background),
+      background: hexColour(theme.background),
       colours: palette(colouring, shellCount, theme.mode),
       stretch,
       full,

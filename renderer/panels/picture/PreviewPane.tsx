@@ -1,5 +1,6 @@
-import { useLayoutEffect, useRef } from 'preact/hooks';
+import { useRef } from 'preact/hooks';
 import { copyText } from '../../ui/clipboard.ts';
+import { useBoxSize } from '../../ui/useBoxSize.ts';
 import type { FilmMoment } from './benchMessages.ts';
 import { MomentField } from './MomentField.tsx';
 import type { ShownPreview } from './usePicturePreview.ts';
@@ -19,19 +20,10 @@ export function PreviewPane(props: {
 }) {
   const { shown, sizeText, waiting, ground, moment, onFrame, onRoom, onCopied } = props;
   const pane = useRef<HTMLDivElement>(null);
-  useLayoutEffect(() => {
-    const { current } = pane;
-    if (current === null) return;
-    const measure = (): void => {
-      const { clientWidth, clientHeight } = current;
-      const px = (css: number): number => Math.max(1, Math.round(css * devicePixelRatio));
-      onRoom([px(clientWidth), px(clientHeight)]);
-    };
-    measure();
-    const watch = new ResizeObserver(measure);
-    watch.observe(current);
-    return () => watch.disconnect();
-  }, []);
+  useBoxSize(pane, (widthPx, heightPx) => {
+    const px = (css: number): number => Math.max(1, Math.round(css * devicePixelRatio));
+    onRoom([px(widthPx), px(heightPx)]);
+  });
   const description = shown.preview?.description ?? '';
   const copy = async (): Promise<void> =>
     onCopied(
