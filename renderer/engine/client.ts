@@ -1,4 +1,5 @@
 import type { Preview } from '../../shared-core/catalogue/preview.ts';
+import type { Region } from '../../shared-core/sky/region.ts';
 import type {
   EngineAnswer,
   EngineEvent,
@@ -45,6 +46,11 @@ export class EngineClient {
 
   preview(source: EngineSource): Promise<Preview> {
     return this.#ask<Preview>((id) => ({ kind: 'preview', id, source }));
+  }
+
+  /** Why one of the regions cannot be; null when each can. */
+  checkRegions(regions: readonly Region[]): Promise<string | null> {
+    return this.#ask<string | null>((id) => ({ kind: 'checkRegions', id, regions }));
   }
 
   setAsideList(): Promise<Blob> {

@@ -3,9 +3,11 @@ import type { Catalogue } from '../../shared-core/catalogue/catalogue.ts';
 import { type Preview, previewCatalogue } from '../../shared-core/catalogue/preview.ts';
 import { rowName } from '../../shared-core/catalogue/rowName.ts';
 import type { SortedSample } from '../../shared-core/shells/sample.ts';
+import type { Region } from '../../shared-core/sky/region.ts';
 import { galaxyRow } from './galaxyRow.ts';
 import { loadKey } from './loadKey.ts';
-import type { EngineSource, GalaxyRow, Stage, Wanted } from './protocol.ts';
+import type { EngineSource, FootprintPicture, GalaxyRow, Stage, Wanted } from './protocol.ts';
+import { type ReadyRegion, readyRegion } from './regionReady.ts';
 import { repeatsList } from './repeatsList.ts';
 import { sentenceOf } from './sentenceOf.ts';
 import { setAsideList } from './setAsideList.ts';
@@ -30,7 +32,8 @@ class Superseded extends Error {}
 /**
  * Catalogue work in stages, each redone only when what it depends on changed:
  * load (source, mapping, cut columns) -> select (region, cuts) -> background (cosmology) -> density (cosmology);
- * columns (of the colours) rests on select alone.
+ * columns (of the colours) rests on select alone. The region is made ready before them, whatever stage runs: a plan
+ * has nothing else, and who draws one does not wait for a catalogue.
  */
 export class EngineDesk {
   readonly #around: Surroundings;
@@ -43,6 +46,8 @@ export class EngineDesk {
   /** Of one row's name. */
   #naming = new AbortController();
   #keys: Partial<Record<Stage, string>> = {};
+  /** The region of the newest wish; asking for it throws where it cannot be made ready. */
+  #region: { readonly key: string; ready(): ReadyRegion | null } | null = null;
   #catalogue: Catalogue | null = null;
   /** Of the bytes that the catalogue was read from. */
   #sha256 = '';
@@ -63,6 +68,7 @@ export class EngineDesk {
     if (this.#wanted !== wanted) this.#lookingUp.abort();
     this.#wanted = wanted;
     this.#serial = serial;
+    this.#takeRegion(wanted.region);
     if (this.#running) return;
     this.#running = true;
     try {
@@ -136,7 +142,8 @@ export class EngineDesk {
       this.#sample = null;
       const catalogue = this.#catalogue;
       if (catalogue !== null) this.#begin('select');
-      const selected = catalogue && (await selectGalaxies(catalogue, wish, this.#tools(wish)));
+      const region = this.#region?.ready() ?? null;
+      const selected = catalogue && (await selectGalaxies(catalogue, region, wish.cuts, this.#tools(wish)));
       this.#sample = selected?.sample ?? null;
       this.#around.emit({ kind: 'selected', selected });
     },
@@ -181,6 +188,24 @@ export class EngineDesk {
       emit({ kind: 'columns', columns: inSampleOrder(this.#columns, sample, floats) });
     },
   };
+
+  #takeRegion(region: Region | null): void {
+    const key = JSON.stringify(region);
+    if (this.#region?.key === key) return;
+    let picture: FootprintPicture | null = null;
+    try {
+      const ready = region === null ? null : readyRegion(region);
+      picture = ready?.picture ?? null;
+      this.#region = { key, ready: () => ready };
+    } catch (error) {
+      // Told by the stage that needs it.
+      const ready = (): never => {
+        throw error;
+      };
+      this.#region = { key, ready };
+    }
+    this.#around.emit({ kind: 'region', region: picture });
+  }
 
   #begin(stage: Stage): void {
     this.#around.emit({ kind: 'progress', stage, fraction: null });

@@ -1,6 +1,7 @@
 import { Refusal } from '../../shared-core/base/refusal.ts';
 import { EngineDesk } from './desk.ts';
 import type { EngineAnswer, EngineEvent, EngineRequest } from './protocol.ts';
+import { regionTrouble } from './regionReady.ts';
 import { sentenceOf } from './sentenceOf.ts';
 import { sharedSample } from './sharedSample.ts';
 
@@ -62,6 +63,9 @@ scope.onmessage = ({ data }: MessageEvent<EngineRequest>) => {
       break;
     case 'preview':
       void answer(data.id, () => desk.preview(data.source));
+      break;
+    case 'checkRegions':
+      void answer(data.id, () => regionTrouble(data.regions));
       break;
     case 'setAsideList':
       void answer(data.id, async () => new Blob(await desk.setAsideList(), { type: 'text/csv' }));

@@ -74,6 +74,8 @@ export const STAGES = ['load', 'select', 'background', 'density', 'columns'] as 
 export type Stage = (typeof STAGES)[number];
 
 export type EngineEvent =
+  /** The region of the newest wish made ready, before any galaxy is looked at; null where none is given. */
+  | { readonly kind: 'region'; readonly region: FootprintPicture | null }
   | { readonly kind: 'progress'; readonly stage: Stage; readonly fraction: number | null }
   | { readonly kind: 'loaded'; readonly loaded: Loaded | null }
   | { readonly kind: 'selected'; readonly selected: Selected | null }
@@ -101,6 +103,7 @@ export type EngineRequest =
   | { readonly kind: 'row'; readonly id: number; readonly index: number }
   | { readonly kind: 'name'; readonly id: number; readonly line: number }
   | { readonly kind: 'preview'; readonly id: number; readonly source: EngineSource }
+  | { readonly kind: 'checkRegions'; readonly id: number; readonly regions: readonly Region[] }
   | { readonly kind: 'setAsideList'; readonly id: number }
   | { readonly kind: 'repeatsList'; readonly id: number };
 

@@ -6,11 +6,10 @@ import { radialAxis } from '../../shared-core/shells/radial.ts';
 import { rankBelow, type SortedSample, sortSample } from '../../shared-core/shells/sample.ts';
 import type { ShellStatistics } from '../../shared-core/shells/shell.ts';
 import { allAsOne, shellStatistics } from '../../shared-core/shells/statistics.ts';
-import { compileRegion } from '../../shared-core/sky/compileRegion.ts';
-import { footprintFields } from '../../shared-core/sky/fields.ts';
 import type { Light, Study } from '../../shared-core/study/schema.ts';
 import type { ShellInput } from '../cone/types.ts';
 import type { Background, ColumnValues, FootprintPicture, Selected } from '../engine/protocol.ts';
+import { readyRegion } from '../engine/regionReady.ts';
 import { colourWords } from '../stage/colourWords.ts';
 import { type Colours, colouring, coneShells, radialScale } from '../stage/coneInputs.ts';
 import { radialPixel, wholeWindow } from '../strip/layout.ts';
@@ -55,7 +54,7 @@ export interface PictureNumbers {
 export function pictureNumbers(options: PictureOptions, facts: PictureFacts): PictureNumbers {
   const { study, selected } = facts;
   const cosmology = createCosmology(study.cosmology);
-  const footprint = selected?.footprint ?? givenFootprint(study);
+  const footprint = selected?.footprint ?? (study.region && readyRegion(study.region).picture);
   const { edges } = study;
   if ((selected?.sample.count ?? 0) === 0 && (footprint === null || edges.length < 2))
     throw new Refusal(
@@ -122,13 +121,6 @@ function depthOf(options: PictureOptions, sample: SortedSample, edges: readonly 
   }
   const deepest = Math.max(sample.count === 0 ? 0 : sample.redshift[sample.count - 1]!, edges.at(-1) ?? 0);
   return deepest > 0 ? deepest : 1;
-}
-
-function givenFootprint(study: Study): FootprintPicture | null {
-  if (study.region === null) return null;
-  const made = compileRegion(study.region);
-  const { origin, areaDeg2, estimate } = made;
-  return { origin, areaDeg2, estimate, rings: made.outline(), fields: footprintFields(made) };
 }
 
 /** That a picture has not the colours of its study, in a sentence for whoever makes it; null where it has. */

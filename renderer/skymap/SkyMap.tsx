@@ -1,8 +1,10 @@
 import { useComputed, useSignal } from '@preact/signals';
 import { geoPath } from 'd3-geo';
-import { useLayoutEffect, useRef } from 'preact/hooks';
+import { useRef } from 'preact/hooks';
 import { useApp } from '../state/app.ts';
 import { Segments } from '../ui/Segments.tsx';
+import { smallTypePx } from '../ui/smallType.ts';
+import { useBoxSize } from '../ui/useBoxSize.ts';
 import { graticule } from './graticule.ts';
 import { outlineArea, outlineLines } from './outlines.ts';
 import { SkyFields } from './SkyFields.tsx';
@@ -12,37 +14,26 @@ import { closeFrame, type MapBox, wholeSkyFrame } from './skyFrames.ts';
 import { outlineProjection, type SkyFrame, skyAt } from './skyProjection.ts';
 import './skymap.css';
 
-const HEIGHT_SHARE = 0.6;
-const SMALL_TYPE = 0.75;
-
 type Look = 'whole' | 'fit';
 
 /** The sample and its region on the sky, in projections that keep areas; right ascension grows to the left. */
 export function SkyMap() {
-  const { engine, studyState, view } = useApp();
+  const { engine, view } = useApp();
   const box = useRef<HTMLDivElement>(null);
   const size = useSignal<{ widthPx: number; heightPx: number; fontPx: number } | null>(null);
   const chosen = useSignal<Look | null>(null);
   const pointed = useSignal<string | null>(null);
-  const region = useComputed(() => studyState.study.value.region);
-  const content = useComputed(() => skyContent(engine.selected.value, region.value));
+  const content = useComputed(() =>
+    skyContent(engine.footprint.value, engine.selected.value?.raDeg.length ?? 0),
+  );
   const target = useComputed(() => closeTarget(content.value, view.field.value, engine.selected.value));
   const look = useComputed<Look>(() => {
     if (target.value === null) return 'whole';
     return chosen.value ?? (content.value.fields.length > 1 ? 'whole' : 'fit');
   });
-  useLayoutEffect(() => {
-    const element = box.current!;
-    const measure = (): void => {
-      const widthPx = element.getBoundingClientRect().width;
-      const rem = Number.parseFloat(getComputedStyle(document.documentElement).fontSize);
-      size.value = { widthPx, heightPx: Math.round(widthPx * HEIGHT_SHARE), fontPx: rem * SMALL_TYPE };
-    };
-    measure();
-    const watch = new ResizeObserver(measure);
-    watch.observe(element);
-    return () => watch.disconnect();
-  }, [size]);
+  useBoxSize(box, (widthPx, heightPx) => {
+    size.value = { widthPx, heightPx: Math.round(heightPx), fontPx: smallTypePx() };
+  });
 
   const map = useComputed(() => {
     if (size.value === null) return null;
@@ -79,7 +70,7 @@ export function SkyMap() {
           {fields.length > 1 ? `field ${fieldIndex(fields, view.field.value) + 1} of ${fields.length}` : null}
         </span>
       </div>
-      <div class="sky-box" ref={box} style={{ height: `${size.value?.heightPx ?? 0}px` }}>
+      <div class="sky-box" ref={box}>
         {shown === null || size.value === null ? null : (
           <>
             <svg aria-hidden="true" focusable="false" width={size.value.widthPx} height={size.value.heightPx}>

@@ -1,8 +1,6 @@
-import { Refusal } from '../../shared-core/base/refusal.ts';
-import { compileRegion } from '../../shared-core/sky/compileRegion.ts';
-import { footprintFields, type SkyField } from '../../shared-core/sky/fields.ts';
-import type { OutlineRing, Region } from '../../shared-core/sky/region.ts';
-import type { Selected } from '../engine/protocol.ts';
+import type { SkyField } from '../../shared-core/sky/fields.ts';
+import type { OutlineRing } from '../../shared-core/sky/region.ts';
+import type { FootprintPicture, Selected } from '../engine/protocol.ts';
 import { countText } from '../ui/numberText.ts';
 import { decText, raText } from './graticule.ts';
 import { middleRaDeg, type SkyTarget, targetOfPoints, WIDEST_CLOSE_LOOK_DEG } from './skyFrames.ts';
@@ -17,30 +15,11 @@ export interface SkyContent {
   readonly galaxies: number;
 }
 
-/** From the engine where it has a footprint; a plan's region is compiled here. */
-export function skyContent(selected: Selected | null, region: Region | null): SkyContent {
-  const galaxies = selected?.raDeg.length ?? 0;
-  const footprint = selected?.footprint ?? null;
-  if (footprint !== null) {
-    const { rings, fields, origin, areaDeg2 } = footprint;
-    return { rings, fields, origin, areaDeg2, galaxies };
-  }
-  const nothing = { rings: [], fields: [], origin: null, areaDeg2: null, galaxies };
-  if (region === null) return nothing;
-  try {
-    const compiled = compileRegion(region);
-    return {
-      rings: compiled.outline(),
-      fields: footprintFields(compiled),
-      origin: 'given',
-      areaDeg2: compiled.areaDeg2,
-      galaxies,
-    };
-  } catch (error) {
-    // The region editor says what is wrong with it.
-    if (error instanceof Refusal) return nothing;
-    throw error;
-  }
+/** @param galaxies how many there are */
+export function skyContent(footprint: FootprintPicture | null, galaxies: number): SkyContent {
+  if (footprint === null) return { rings: [], fields: [], origin: null, areaDeg2: null, galaxies };
+  const { rings, fields, origin, areaDeg2 } = footprint;
+  return { rings, fields, origin, areaDeg2, galaxies };
 }
 
 /** What a close look would show: the field looked at, or else the galaxies; null where that is too wide. */

@@ -3,10 +3,10 @@ import { useComputed, useSignal, useSignalEffect } from '@preact/signals';
 import { useEffect, useMemo, useRef } from 'preact/hooks';
 import { ConeView } from '../cone/coneView.ts';
 import type { ViewState as ConeState, DrawingState, FootprintInput } from '../cone/types.ts';
-import { regionFields, regionFootprint } from '../panels/regionReady.ts';
 import { useApp } from '../state/app.ts';
 import { radialPixel, STRIP_LEFT_PX, STRIP_RIGHT_PX, shownWindow } from '../strip/layout.ts';
 import { readingsOf } from '../strip/readings.ts';
+import { useBoxSize } from '../ui/useBoxSize.ts';
 import { colourTrouble } from './colourTrouble.ts';
 import { colouring, coneFootprint, coneShells, radialScale, VIEW_NAMES } from './coneInputs.ts';
 import { GalaxyCard } from './GalaxyCard.tsx';
@@ -59,15 +59,9 @@ export function Stage() {
       onTrouble: (sentence) => (trouble.value = sentence),
     });
     cone.value = made;
-    const watch = new ResizeObserver(([entry]) => {
-      if (entry !== undefined) widthPx.value = entry.contentRect.width;
-    });
-    watch.observe(place.current!);
-    return () => {
-      watch.disconnect();
-      made.dispose();
-    };
+    return () => made.dispose();
   }, []);
+  useBoxSize(place, (width) => void (widthPx.value = width));
 
   const window = useComputed(() =>
     shownWindow(view.redshiftWindow.value, derived.axis.value, derived.deepestRedshift.value),
@@ -108,12 +102,13 @@ export function Stage() {
     else cone.value.setGalaxies(null);
   });
   // Before the catalogue is in, and in a plan without one, the region alone says what the cone looks like.
-  const region = useComputed(() => studyState.study.value.region);
-  const footprint = useComputed(() => {
-    if (region.value === null) return engine.selected.value?.footprint ?? null;
-    return { ...regionFootprint(region.value), fields: regionFields(region.value) };
-  });
+  const footprint = useComputed(() => engine.region.value ?? engine.selected.value?.footprint ?? null);
+  // It is on its way: the old picture stays, and at the start there is none.
+  const unknown = useComputed(
+    () => footprint.value === null && !engine.fresh.value && engine.failure.value === null,
+  );
   useSignalEffect(() => {
+    if (unknown.value) return;
     // Nothing is left of the study before once there is neither region nor catalogue.
     const fitting = footprint.value === null ? NO_FOOTPRINT : coneFootprint(footprint.value);
     cone.value?.setFootprint(fitting);
@@ -134,7 +129,7 @@ export function Stage() {
   });
   useSignalEffect(() => {
     const scale = pixel.value;
-    if (cone.value === null) return;
+    if (cone.value === null || unknown.value) return;
     const deepest = Math.max(derived.deepestRedshift.value, window.value[1]);
     const shown = { min: scale.low, max: scale.high };
     cone.value.setAxisWindow(shown, { leftPx: STRIP_LEFT_PX, rightPx: STRIP_RIGHT_PX });

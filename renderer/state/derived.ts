@@ -7,7 +7,6 @@ import { type RadialAxis, radialAxis } from '../../shared-core/shells/radial.ts'
 import { type SortedSample, sortSample } from '../../shared-core/shells/sample.ts';
 import type { ShellStatistics } from '../../shared-core/shells/shell.ts';
 import { allAsOne, type ShellConditions, shellStatistics } from '../../shared-core/shells/statistics.ts';
-import { compileRegion } from '../../shared-core/sky/compileRegion.ts';
 import type { EngineState } from './engineState.ts';
 import type { StudyState } from './studyState.ts';
 
@@ -32,9 +31,8 @@ export interface Derived {
 const NOTHING = sortSample(new Float64Array(0), null);
 
 export function createDerived({ study }: StudyState, engine: EngineState): Derived {
-  // The parts are looked at one by one, so that an edge moved does not make a cosmology or a region again.
+  // The parts are looked at one by one, so that an edge moved does not make a cosmology again.
   const parameters = computed(() => study.value.cosmology);
-  const region = computed(() => study.value.region);
   const edges = computed(() => study.value.edges);
   const p0 = computed(() => study.value.p0Mpc3PerH3);
   const radial = computed(() => study.value.look.radial);
@@ -51,11 +49,7 @@ export function createDerived({ study }: StudyState, engine: EngineState): Deriv
     }
   });
   const sample = computed(() => engine.selected.value?.sample ?? NOTHING);
-  const area = computed(() => {
-    const found = engine.selected.value?.footprint?.areaDeg2;
-    if (found !== undefined) return found;
-    return region.value === null ? null : compileRegion(region.value).areaDeg2;
-  });
+  const area = computed(() => engine.footprint.value?.areaDeg2 ?? null);
   const conditions = computed<ShellConditions | null>(() =>
     area.value === null ? null : { cosmology: cosmology.value, areaDeg2: area.value, p0Mpc3PerH3: p0.value },
   );

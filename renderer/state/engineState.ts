@@ -7,6 +7,7 @@ import type {
   ColumnValues,
   EngineEvent,
   EngineSource,
+  FootprintPicture,
   Loaded,
   Selected,
   Stage,
@@ -17,7 +18,11 @@ import type { StudyState } from './studyState.ts';
 /** What the engine has made of the study so far. */
 export interface EngineState {
   readonly loaded: ReadonlySignal<Loaded | null>;
+  /** The region of the study made ready, galaxies or none; null where none is given. */
+  readonly region: ReadonlySignal<FootprintPicture | null>;
   readonly selected: ReadonlySignal<Selected | null>;
+  /** What the numbers stand on: the region that the galaxies are in, given or estimated; without them that of a plan. */
+  readonly footprint: ReadonlySignal<FootprintPicture | null>;
   readonly background: ReadonlySignal<Background | null>;
   /** Local density (log10, relative to the typical at that depth), sorted by redshift; made on demand. */
   readonly density: ReadonlySignal<Float32Array | null>;
@@ -57,6 +62,7 @@ export function createEngineState(
   makeWorker?: () => Worker,
 ): EngineState {
   const loaded = signal<Loaded | null>(null);
+  const region = signal<FootprintPicture | null>(null);
   const selected = signal<Selected | null>(null);
   const background = signal<Background | null>(null);
   const density = signal<Float32Array | null>(null);
@@ -72,6 +78,9 @@ export function createEngineState(
     switch (event.kind) {
       case 'progress':
         progress.value = { stage: event.stage, fraction: event.fraction };
+        return;
+      case 'region':
+        region.value = event.region;
         return;
       case 'loaded':
         loaded.value = event.loaded;
@@ -153,7 +162,9 @@ export function createEngineState(
   const stopFollowing = effect(send);
   return {
     loaded,
+    region,
     selected,
+    footprint: computed(() => selected.value?.footprint ?? region.value),
     background,
     density,
     columns,

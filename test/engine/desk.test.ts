@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { EngineDesk } from '../../renderer/engine/desk.ts';
 import type { EngineEvent, Wanted } from '../../renderer/engine/protocol.ts';
+import { regionTrouble } from '../../renderer/engine/regionReady.ts';
 import { sharedSample } from '../../renderer/engine/sharedSample.ts';
 import { findPublishedSet } from '../../shared-core/cosmology/publishedSets.ts';
 import { sortSample } from '../../shared-core/shells/sample.ts';
@@ -90,6 +91,39 @@ describe('the engine does what the study asks, and nothing twice', () => {
     expect(events.slice(before).map((e) => e.kind)).toEqual(['progress', 'idle']);
     expect(last('idle')!.serial).toBe(3);
     expect(desk.row(0)).toMatchObject({ redshift: 0.1, line: 2 });
+  });
+
+  it('makes the region ready while a file is still being read, once, and in a plan without a catalogue', async () => {
+    const { desk, events, last } = deskOf();
+    const region = { parts: [{ kind: 'cap', raDeg: 152, decDeg: 4, radiusDeg: 2 }], holes: [] } as const;
+    // A cap of radius r covers 2 pi (1 - cos r) steradians.
+    const areaDeg2 = 2 * Math.PI * (1 - Math.cos(Math.PI / 90)) * (180 / Math.PI) ** 2;
+    const reading = desk.want({ ...wanted, source: source('blob:stalled') }, 1);
+    await new Promise((resume) => setTimeout(resume, 0));
+    void desk.want({ ...wanted, source: source('blob:stalled'), region }, 2);
+    expect(last('region')!.region!.areaDeg2).toBeCloseTo(areaDeg2, 9);
+    expect(last('region')!.region!.fields).toHaveLength(1);
+    expect(last('selected')).toBeUndefined();
+    await desk.want({ ...wanted, source: null, region: structuredClone(region) }, 3);
+    await reading;
+    expect(last('selected')!.selected).toBeNull();
+    expect(events.filter((e) => e.kind === 'region' && e.region !== null)).toHaveLength(1);
+    await desk.want(wanted, 4);
+    expect(last('region')!.region).toBeNull();
+  });
+
+  it('tells a region that cannot be, with or without a catalogue, and goes on with the next', async () => {
+    const { desk, last } = deskOf();
+    const nowhere = { parts: [{ kind: 'cap', raDeg: 152, decDeg: 4, radiusDeg: 0 }], holes: [] } as const;
+    for (const from of [wanted.source, null]) {
+      await desk.want({ ...wanted, source: from, region: nowhere }, 1);
+      expect(last('region')!.region).toBeNull();
+      expect(last('failed')).toMatchObject({ stage: 'select', sentence: expect.stringContaining('radius') });
+    }
+    await desk.want(wanted, 2);
+    expect(last('selected')!.selected!.account.kept).toBe(500);
+    expect(regionTrouble([nowhere])).toBe(last('failed')!.sentence);
+    expect(regionTrouble([])).toBeNull();
   });
 
   it('reading a file goes on while what does not concern it changes', async () => {

@@ -2,28 +2,29 @@ import type { Catalogue } from '../../../shared-core/catalogue/catalogue.ts';
 import { select } from '../../../shared-core/catalogue/select.ts';
 import { cos, sin } from '../../../shared-core/numerics/elementary/elementary.ts';
 import { type SortedSample, sortSample } from '../../../shared-core/shells/sample.ts';
-import { compileRegion } from '../../../shared-core/sky/compileRegion.ts';
 import { estimateFootprint } from '../../../shared-core/sky/estimate.ts';
-import { footprintFields } from '../../../shared-core/sky/fields.ts';
-import type { Footprint } from '../../../shared-core/sky/region.ts';
 import type { FootprintPicture, Selected, Wanted } from '../protocol.ts';
+import { footprintPicture, type ReadyRegion } from '../regionReady.ts';
 import type { StageTools } from '../surroundings.ts';
 
-/** The galaxies of the catalogue inside region and cuts, sorted by redshift, with the footprint they are in. */
+/**
+ * The galaxies of the catalogue inside region and cuts, sorted by redshift, with the footprint they are in.
+ *
+ * @param given null where the region is to be estimated
+ */
 export async function selectGalaxies(
   catalogue: Catalogue,
-  { region, cuts }: Pick<Wanted, 'region' | 'cuts'>,
+  given: ReadyRegion | null,
+  cuts: Wanted['cuts'],
   { floats, share, pause }: StageTools,
 ): Promise<Selected> {
-  const given = region === null ? null : compileRegion(region);
   const { indices, account, cutCounts } = select(
     catalogue,
-    given === null ? null : (ra, dec) => given.contains(ra, dec),
+    given === null ? null : (ra, dec) => given.footprint.contains(ra, dec),
     cuts,
   );
   await pause();
-  const estimated = given ?? estimateOf(catalogue, indices);
-  const footprint = estimated === null ? null : picture(estimated);
+  const footprint = given === null ? estimateOf(catalogue, indices) : given.picture;
   await pause();
   const sample = share(sortSample(catalogue.redshift, catalogue.weight, indices));
   await pause();
@@ -55,20 +56,11 @@ function places(
   return { directions, raDeg, decDeg, magnitude };
 }
 
-function estimateOf(catalogue: Catalogue, indices: Uint32Array): Footprint | null {
+function estimateOf(catalogue: Catalogue, indices: Uint32Array): FootprintPicture | null {
   if (indices.length === 0) return null;
-  return estimateFootprint(
+  const estimate = estimateFootprint(
     Float64Array.from(indices, (i) => catalogue.raDeg[i]!),
     Float64Array.from(indices, (i) => catalogue.decDeg[i]!),
   );
-}
-
-function picture(footprint: Footprint): FootprintPicture {
-  return {
-    origin: footprint.origin,
-    areaDeg2: footprint.areaDeg2,
-    estimate: footprint.estimate,
-    rings: footprint.outline(),
-    fields: footprintFields(footprint),
-  };
+  return footprintPicture(estimate);
 }

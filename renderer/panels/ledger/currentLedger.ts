@@ -1,7 +1,6 @@
 import type { Table } from '../../../shared-core/report/table.ts';
 import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
 import type { App } from '../../state/app.ts';
-import { regionFootprint } from '../regionReady.ts';
 import { type LedgerFacts, ledgerTable } from './ledgerTable.ts';
 
 /** What the ledger of the app is made of as it stands now. */
@@ -16,7 +15,7 @@ export function currentLedgerFacts({ studyState, engine, derived }: App): Ledger
     cosmology: derived.cosmology.value,
     account: selected?.account ?? null,
     mapping: selected === null ? null : (engine.loaded.value?.mapping ?? null),
-    footprint: selected?.footprint ?? (study.region === null ? null : regionFootprint(study.region)),
+    footprint: engine.footprint.value,
   };
 }
 

@@ -2,16 +2,9 @@ import { areaText, estimateWords } from '../../../shared-core/report/areaWords.t
 import type { FootprintPicture } from '../../engine/protocol.ts';
 import { useApp } from '../../state/app.ts';
 import { unitText } from '../../ui/unitText.ts';
-import { regionFootprint } from '../regionReady.ts';
-import { useStudyPart } from '../useStudyPart.ts';
-
-type Area = Pick<FootprintPicture, 'areaDeg2' | 'estimate'>;
 
 /** The area that the numbers stand on; null while there is neither a region nor a catalogue. */
-function useArea(): Area | null {
-  const region = useStudyPart('region');
-  return useApp().engine.selected.value?.footprint ?? (region === null ? null : regionFootprint(region));
-}
+const useArea = (): FootprintPicture | null => useApp().engine.footprint.value;
 
 /** The area in a few words. */
 export function useAreaGist(): string {

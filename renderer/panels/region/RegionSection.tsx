@@ -1,6 +1,4 @@
 import { useState } from 'preact/hooks';
-import { Refusal } from '../../../shared-core/base/refusal.ts';
-import { compileRegion } from '../../../shared-core/sky/compileRegion.ts';
 import type { Region, SkyShape } from '../../../shared-core/sky/region.ts';
 import { describeRegion } from '../../../shared-core/sky/regionText.ts';
 import { change } from '../../../shared-core/study/edits.ts';
@@ -25,39 +23,42 @@ interface Editing {
   readonly of: Region | null;
 }
 
+/** Takes a region into the study. Answers why it cannot be, or null when it did. */
+type PutRegion = (next: Region | null, label: string) => Promise<string | null>;
+
 const ADD_ID = 'add-shape';
+const CHANGED_MEANWHILE = 'The region was changed in the meantime: look at it and do this again.';
+
+const sentence = (error: unknown): string => (error instanceof Error ? error.message : String(error));
 
 /** The observed sky: its map, its area, and its shapes by numbers or text. */
 export function RegionSection() {
-  const { studyState } = useApp();
+  const { studyState, engine } = useApp();
   const region = useStudyPart('region');
   const [kept, setEditing] = useState<Editing | null>(null);
   const editing = kept !== null && (kept.inPlaceOf === null || kept.of === region) ? kept : null;
 
-  const put = (next: Region | null, label: string): string | null => {
-    try {
-      if (next !== null) compileRegion(next);
-    } catch (error) {
-      if (error instanceof Refusal) return error.message;
-      throw error;
-    }
-    studyState.perform(change(label, { region: next as Study['region'] }));
-    return null;
+  const put: PutRegion = async (next, label) => {
+    const why = next === null ? null : await engine.client.checkRegions([next]).catch(sentence);
+    // Another region has come in the meantime: these shapes are not of it.
+    if (studyState.study.peek().region !== region) return CHANGED_MEANWHILE;
+    if (why === null) studyState.perform(change(label, { region: next as Study['region'] }));
+    return why;
   };
   const start = (kind: ShapeKind): void => {
     if (kind === 'wholeSky' && region === null)
-      put({ parts: [{ kind }], holes: [] }, 'Observe the whole sky');
+      void put({ parts: [{ kind }], holes: [] }, 'Observe the whole sky');
     else setEditing({ draft: newDraft(kind), list: 'parts', inPlaceOf: null, of: region });
   };
   const finish = (): void => {
     setEditing(null);
     focusSoon(ADD_ID);
   };
-  const apply = (shapes: readonly SkyShape[]): string | null => {
+  const apply = async (shapes: readonly SkyShape[]): Promise<string | null> => {
     if (editing === null) return null;
     const { list, inPlaceOf } = editing;
     const what = list === 'parts' ? 'observed shape' : 'hole';
-    const why = put(
+    const why = await put(
       withShapes(region, list, shapes, inPlaceOf),
       inPlaceOf === null
         ? `Add an ${what}`.replace('an hole', 'a hole')
@@ -114,7 +115,7 @@ export function RegionSection() {
               class="button"
               title="Give the region up: the area is estimated from the catalogue"
               onClick={() => {
-                put(null, 'Give the region up');
+                void put(null, 'Give the region up');
                 focusSoon(ADD_ID);
               }}
             >
@@ -140,16 +141,16 @@ export function RegionSection() {
 function ShapeList(props: {
   readonly region: Region;
   readonly list: 'parts' | 'holes';
-  readonly put: (next: Region | null, label: string) => string | null;
+  readonly put: PutRegion;
   readonly onEdit: (place: ShapePlace, shape: SkyShape) => void;
 }) {
   const { region, list, put, onEdit } = props;
   const { notices } = useApp();
   const shapes = region[list];
   if (shapes.length === 0) return null;
-  const remove = (place: ShapePlace): void => {
+  const remove = async (place: ShapePlace): Promise<void> => {
     const next = withoutShape(region, place);
-    const why = put(
+    const why = await put(
       next,
       next === null ? 'Give the region up' : list === 'parts' ? 'Remove an observed shape' : 'Remove a hole',
     );
@@ -173,7 +174,11 @@ function ShapeList(props: {
                 onClick={() => onEdit({ list, index }, shape)}
               />
             )}
-            <IconButton icon="close" label={`Remove: ${words}`} onClick={() => remove({ list, index })} />
+            <IconButton
+              icon="close"
+              label={`Remove: ${words}`}
+              onClick={() => void remove({ list, index })}
+            />
           </li>
         );
       })}

@@ -16,8 +16,8 @@ export function ShapeEditor(props: {
   readonly holePossible: boolean;
   readonly isNew: boolean;
   readonly onChange: (draft: ShapeDraft, list: 'parts' | 'holes') => void;
-  /** @returns why the region cannot take the shapes, or null when it did */
-  readonly onApply: (shapes: readonly SkyShape[]) => string | null;
+  /** Answers why the region cannot take the shapes, or null when it did. */
+  readonly onApply: (shapes: readonly SkyShape[]) => Promise<string | null>;
   readonly onCancel: () => void;
 }) {
   const { draft, list, holePossible, isNew, onChange, onApply, onCancel } = props;
@@ -31,14 +31,25 @@ export function ShapeEditor(props: {
     setTrouble(null);
     onChange(next, list);
   };
-  const apply = (): void => {
-    const done = finishShape(draft);
-    if ('sentence' in done) {
-      setTrouble(done);
-      return;
+  const { engine } = useApp();
+  const asked = useRef<ShapeDraft | null>(null);
+  const apply = async (): Promise<void> => {
+    // Once is enough: a second press while the engine looks at the shapes would add them twice.
+    if (asked.current === draft) return;
+    asked.current = draft;
+    const trouble = await troubleOf(draft);
+    asked.current = null;
+    if (trouble !== null) setTrouble(trouble);
+  };
+  const troubleOf = async (finished: ShapeDraft): Promise<DraftTrouble | null> => {
+    try {
+      const done = await finishShape(finished, (regions) => engine.client.checkRegions(regions));
+      if ('sentence' in done) return done;
+      const why = await onApply(done.shapes);
+      return why === null ? null : { sentence: why, field: null };
+    } catch (error) {
+      return { sentence: error instanceof Error ? error.message : String(error), field: null };
     }
-    const why = onApply(done.shapes);
-    if (why !== null) setTrouble({ sentence: why, field: null });
   };
   return (
     <form
@@ -47,7 +58,7 @@ export function ShapeEditor(props: {
       aria-label={`${TITLES[draft.kind]} of the region`}
       onSubmit={(e) => {
         e.preventDefault();
-        apply();
+        void apply();
       }}
       onKeyDown={(e) => {
         if (e.key !== 'Escape') return;

@@ -1,6 +1,5 @@
 import { Refusal } from '../../../shared-core/base/refusal.ts';
-import { compileRegion } from '../../../shared-core/sky/compileRegion.ts';
-import type { SkyShape } from '../../../shared-core/sky/region.ts';
+import type { Region, SkyShape } from '../../../shared-core/sky/region.ts';
 import { parsePolygonText } from '../../../shared-core/sky/regionText.ts';
 import { fieldText, readNumber } from '../../ui/numberText.ts';
 
@@ -91,24 +90,32 @@ export interface DraftTrouble {
   readonly field: DraftName | 'vertices' | null;
 }
 
-/** The shapes of a finished draft (a text may hold several polygons), each checked; or what is wrong. */
-export function finishShape(draft: ShapeDraft): { readonly shapes: readonly SkyShape[] } | DraftTrouble {
+/**
+ * The shapes of a finished draft (a text may hold several polygons), each checked; or what is wrong.
+ *
+ * @param check why one of the regions cannot be; null when each can
+ */
+export async function finishShape(
+  draft: ShapeDraft,
+  check: (regions: readonly Region[]) => Promise<string | null>,
+): Promise<{ readonly shapes: readonly SkyShape[] } | DraftTrouble> {
   const numbers: Partial<Record<DraftName, number>> = {};
   for (const { name, label } of DRAFT_FIELDS[draft.kind]) {
     const read = readNumber(draft.fields[name], label);
     if ('sentence' in read) return { sentence: read.sentence, field: name };
     numbers[name] = read.value;
   }
+  const blamed = (sentence: string): DraftTrouble => ({
+    sentence,
+    field: draft.kind === 'polygon' ? 'vertices' : blamedField(draft, numbers),
+  });
   try {
     const shapes = shapesOf(draft, numbers as Record<DraftName, number>);
-    for (const shape of shapes) compileRegion({ parts: [shape], holes: [] });
-    return { shapes };
+    const why = await check(shapes.map((shape) => ({ parts: [shape], holes: [] })));
+    return why === null ? { shapes } : blamed(why);
   } catch (error) {
-    if (!(error instanceof Refusal)) throw error;
-    return {
-      sentence: error.message,
-      field: draft.kind === 'polygon' ? 'vertices' : blamedField(draft, numbers),
-    };
+    if (error instanceof Refusal) return blamed(error.message);
+    throw error;
   }
 }
 

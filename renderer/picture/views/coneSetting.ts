@@ -1,6 +1,7 @@
 import { shellColours } from '../../colour/shellColours.ts';
 import { ConeModel } from '../../cone/coneModel.ts';
 import { type DepthRange, depthCue, lightAt } from '../../cone/geometry/depthCue.ts';
+import { prepareFields } from '../../cone/geometry/preparedField.ts';
 import {
   compose,
   type PixelMatrix,
@@ -9,7 +10,6 @@ import {
   project,
   type Viewport,
 } from '../../cone/geometry/projection.ts';
-import { prepareFields } from '../../cone/geometry/preparedField.ts';
 import { COMOVING_DROP_PX } from '../../cone/overlay/alignedRulers.ts';
 import type { Point } from '../../cone/overlay/pen.ts';
 import type { OverlayScene, PaintedLane } from '../../cone/overlay/scene.ts';

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { regionTrouble } from '../../../renderer/engine/regionReady.ts';
 import { judgeRows } from '../../../renderer/panels/columns/judgeRows.ts';
 import {
   draftOf,
@@ -10,7 +11,12 @@ import {
 } from '../../../renderer/panels/columns/mappingDraft.ts';
 import { parameterTrouble, readMasses } from '../../../renderer/panels/cosmology/parameterFields.ts';
 import { withoutShape, withShapes } from '../../../renderer/panels/region/regionParts.ts';
-import { draftOfShape, finishShape, newDraft } from '../../../renderer/panels/region/shapeDraft.ts';
+import {
+  draftOfShape,
+  finishShape,
+  newDraft,
+  type ShapeDraft,
+} from '../../../renderer/panels/region/shapeDraft.ts';
 import { setAsideLines, sourceChanged } from '../../../renderer/panels/source/sourceFacts.ts';
 import { DECIMAL_POINTS } from '../../../shared-core/catalogue/formats/delimited/decimals.ts';
 import {
@@ -105,6 +111,7 @@ describe('rows of the preview', () => {
 });
 
 describe('a shape by numbers and text', () => {
+  const finish = (draft: ShapeDraft) => finishShape(draft, async (regions) => regionTrouble(regions));
   const box: SkyShape = { kind: 'box', raMinDeg: 350, raMaxDeg: 10, decMinDeg: -5, decMaxDeg: 5 };
   const cap: SkyShape = { kind: 'cap', raDeg: 10.5, decDeg: -20, radiusDeg: 1.25 };
   const polygon: SkyShape = {
@@ -117,33 +124,39 @@ describe('a shape by numbers and text', () => {
     side: 'smaller',
   };
 
-  it('survives being changed without a change', () => {
+  it('survives being changed without a change', async () => {
     for (const shape of [box, cap, polygon, { kind: 'wholeSky' } as const])
-      expect(finishShape(draftOfShape(shape))).toEqual({ shapes: [shape] });
+      expect(await finish(draftOfShape(shape))).toEqual({ shapes: [shape] });
   });
 
-  it('puts the sentence under the field at fault', () => {
+  it('puts the sentence under the field at fault', async () => {
     const draft = draftOfShape(box);
     const put = (fields: Partial<typeof draft.fields>) =>
-      finishShape({ ...draft, fields: { ...draft.fields, ...fields } });
-    expect(put({ raMax: 'ten' })).toEqual({ field: 'raMax', sentence: expect.stringContaining('"ten"') });
-    expect(put({ decMin: '' })).toEqual({ field: 'decMin', sentence: expect.stringContaining('empty') });
-    expect(put({ decMin: '-91' })).toMatchObject({ field: 'decMin' });
-    expect(put({ decMin: '6' })).toMatchObject({ field: 'decMax' });
+      finish({ ...draft, fields: { ...draft.fields, ...fields } });
+    expect(await put({ raMax: 'ten' })).toEqual({
+      field: 'raMax',
+      sentence: expect.stringContaining('"ten"'),
+    });
+    expect(await put({ decMin: '' })).toEqual({
+      field: 'decMin',
+      sentence: expect.stringContaining('empty'),
+    });
+    expect(await put({ decMin: '-91' })).toMatchObject({ field: 'decMin' });
+    expect(await put({ decMin: '6' })).toMatchObject({ field: 'decMax' });
     expect(
-      finishShape({ ...draftOfShape(cap), fields: { ...draftOfShape(cap).fields, radius: '0' } }),
+      await finish({ ...draftOfShape(cap), fields: { ...draftOfShape(cap).fields, radius: '0' } }),
     ).toMatchObject({
       field: 'radius',
     });
-    expect(finishShape(newDraft('polygon'))).toMatchObject({ field: 'vertices' });
+    expect(await finish(newDraft('polygon'))).toMatchObject({ field: 'vertices' });
     // A bow tie.
-    expect(finishShape({ ...newDraft('polygon'), vertices: '0 0\n10 10\n10 0\n0 10' })).toMatchObject({
+    expect(await finish({ ...newDraft('polygon'), vertices: '0 0\n10 10\n10 0\n0 10' })).toMatchObject({
       field: 'vertices',
     });
   });
 
-  it('may be several polygons in one text', () => {
-    const done = finishShape({ ...newDraft('polygon'), vertices: '0 0\n10 0\n5 8\n\n30 0\n40 0\n35 8\n' });
+  it('may be several polygons in one text', async () => {
+    const done = await finish({ ...newDraft('polygon'), vertices: '0 0\n10 0\n5 8\n\n30 0\n40 0\n35 8\n' });
     expect(done).toMatchObject({ shapes: [{ kind: 'polygon' }, { kind: 'polygon' }] });
   });
 

@@ -1,6 +1,7 @@
 import { geoContains } from 'd3-geo';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { readyRegion } from '../../../renderer/engine/regionReady.ts';
 import { decText, graticule, raText } from '../../../renderer/skymap/graticule.ts';
 import { outlineArea, outlineLines } from '../../../renderer/skymap/outlines.ts';
 import {
@@ -255,7 +256,7 @@ describe('points', () => {
 
 describe('what the map shows', () => {
   it('takes a plan without a catalogue', () => {
-    const content = skyContent(null, REGIONS['three fields']!);
+    const content = skyContent(readyRegion(REGIONS['three fields']!).picture, 0);
     expect(content.fields).toHaveLength(3);
     expect(content.origin).toBe('given');
     expect(closeTarget(content, 4, null)!.centreRaDeg).toBeCloseTo(content.fields[1]!.centreRaDeg, 9);
@@ -264,13 +265,11 @@ describe('what the map shows', () => {
     );
   });
   it('stays with the whole sky for wide regions, and without anything', () => {
-    expect(closeTarget(skyContent(null, { parts: [{ kind: 'wholeSky' }], holes: [] }), 0, null)).toBeNull();
-    expect(closeTarget(skyContent(null, null), 0, null)).toBeNull();
-    expect(skySentence(skyContent(null, null))).toBe('No galaxies. No region yet.');
-    expect(middleOf(skyContent(null, null), null)).toBeNull();
-  });
-  it('survives a region that cannot be: the editor tells why', () => {
-    expect(skyContent(null, { parts: [box(0, 10, 5, 5)], holes: [] }).origin).toBeNull();
+    const wholeSky = readyRegion({ parts: [{ kind: 'wholeSky' }], holes: [] }).picture;
+    expect(closeTarget(skyContent(wholeSky, 0), 0, null)).toBeNull();
+    expect(closeTarget(skyContent(null, 0), 0, null)).toBeNull();
+    expect(skySentence(skyContent(null, 0))).toBe('No galaxies. No region yet.');
+    expect(middleOf(skyContent(null, 0), null)).toBeNull();
   });
   it('steps around the fields in both directions', () => {
     expect([fieldIndex([1, 2, 3], 3), fieldIndex([1, 2, 3], -1), fieldIndex([], 2)]).toEqual([0, 2, 0]);

@@ -1,6 +1,7 @@
-import { signal } from '@preact/signals';
+import { computed, signal } from '@preact/signals';
 import { describe, expect, it } from 'vitest';
 import type { Selected } from '../../../renderer/engine/protocol.ts';
+import { readyRegion } from '../../../renderer/engine/regionReady.ts';
 import type { App } from '../../../renderer/state/app.ts';
 import { createDerived } from '../../../renderer/state/derived.ts';
 import type { EngineState } from '../../../renderer/state/engineState.ts';
@@ -31,6 +32,10 @@ function stage(redshift: readonly number[], parts: Partial<Study> = {}) {
   const engine = {
     selected,
     loaded: signal(null),
+    footprint: computed(() => {
+      const { region } = studyState.study.value;
+      return region && readyRegion(region).picture;
+    }),
     progress: signal(null),
   } as unknown as EngineState;
   const view = createViewState('dark');
