@@ -1,4 +1,4 @@
-import { type ConeFrame, coneFrame, emphasisOf, partsOf } from './coneFrame.ts';
+import { type ConeFrame, coneFrame, emphasisOf, partsOf, pixelOf } from './coneFrame.ts';
 import type { ConeLayers } from './coneLayers.ts';
 import type { ConeLook } from './coneLook.ts';
 import type { ConeModel } from './coneModel.ts';
@@ -26,6 +26,7 @@ export class ConePictures {
   private readonly sources: Sources;
   private drawnKey = '';
   private toldState = '';
+  private toldMarks = '';
 
   constructor(sources: Sources) {
     this.sources = sources;
@@ -98,6 +99,7 @@ export class ConePictures {
     if (image) layers.drawTogether(image, points.pixelRatio, frame, model, over, galaxies);
     else layers.drawAbove(frame, model, over, galaxies);
     this.tellState();
+    if (atRest) this.tellMarks(frame);
     if (galaxies.store) gl.look();
     events.onFrame?.({
       drawn: Math.round(points.parts.reduce((sum, part) => sum + part.range.count, 0) * points.fraction),
@@ -106,6 +108,18 @@ export class ConePictures {
       layer: painter.layer,
       atRest,
     });
+  }
+
+  private tellMarks(frame: ConeFrame): void {
+    const { look, painter, events } = this.sources;
+    const places = look.picked.flatMap((index) => {
+      const place = pixelOf(index, frame, painter.galaxies);
+      return place === null ? [] : [{ index, xPx: place[0], yPx: place[1] }];
+    });
+    const text = JSON.stringify(places);
+    if (text === this.toldMarks) return;
+    this.toldMarks = text;
+    events.onMarksMoved?.(places);
   }
 
   private tellState(): void {

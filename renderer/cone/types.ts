@@ -155,6 +155,8 @@ export type DrawingState =
 export interface ConeEvents {
   readonly onHover?: (hit: GalaxyHit | null) => void;
   readonly onPick?: (hit: GalaxyHit | null, extend: boolean) => void;
+  /** Where the marked galaxies stand once the view has come to rest elsewhere; those out of sight are left out. */
+  readonly onMarksMoved?: (places: readonly GalaxyHit[]) => void;
   readonly onHoverShell?: (index: number | null) => void;
   readonly onPickShell?: (index: number | null) => void;
   readonly onAxisWindow?: (window: AxisWindow) => void;

@@ -49,13 +49,14 @@ export function GalaxyCard({
   });
   const name = useRowName(row);
   const picked = view.pickedGalaxies.value.length;
+  const marked = picks.value;
   const card = useRef<HTMLElement>(null);
   const corner = useSignal<Corner>('bottom-right');
   useLayoutEffect(() => {
     const stage = card.current?.parentElement?.querySelector('.stage-cone');
     if (card.current === null || stage == null) return;
     // With a galaxy picked the card stays for the pointer that comes to it; without, it makes way for the pointer.
-    const points = picked > 0 ? pairPoints(picks.value) : hovered.value === null ? [] : [hovered.value];
+    const points = picked > 0 ? pairPoints(marked) : hovered.value === null ? [] : [hovered.value];
     corner.value = cardCorner(points, sizeOf(stage), sizeOf(card.current, MARGIN_PX), corner.value);
   });
   const galaxy = row.value;

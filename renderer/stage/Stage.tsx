@@ -12,7 +12,7 @@ import { colouring, coneFootprint, coneShells, radialScale, VIEW_NAMES } from '.
 import { GalaxyCard } from './GalaxyCard.tsx';
 import { MissingCatalogue } from './MissingCatalogue.tsx';
 import { ownColouring } from './ownColouring.ts';
-import { type Picks, picksAfter } from './picking.ts';
+import { type Picks, picksAfter, picksMoved } from './picking.ts';
 import { readTheme } from './readTheme.ts';
 import { StageBar } from './StageBar.tsx';
 import { separationText } from './separationText.ts';
@@ -46,6 +46,7 @@ export function Stage() {
         view.pickedGalaxies.value = picks.value.map(({ index }) => index);
         if (picks.value.length > 1) view.measuring.value = false;
       },
+      onMarksMoved: (places) => (picks.value = picksMoved(picks.peek(), places)),
       onHoverShell: (index) => (view.hoveredShell.value = index),
       onPickShell: (index) => {
         if (!view.measuring.value) view.selectedShell.value = index;

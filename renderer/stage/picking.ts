@@ -1,7 +1,12 @@
 import type { GalaxyHit } from '../cone/types.ts';
 
-/** The galaxies pointed out, as they were hit: the first, and the one that it is measured to. */
+/** The galaxies pointed out, where they stand: the first, and the one that it is measured to. */
 export type Picks = readonly GalaxyHit[];
+
+/** The same galaxies where they stand by now; one that is out of sight is left where it was. */
+export function picksMoved(picks: Picks, places: readonly GalaxyHit[]): Picks {
+  return picks.map((pick) => places.find(({ index }) => index === pick.index) ?? pick);
+}
 
 /**
  * What is pointed out after a click.

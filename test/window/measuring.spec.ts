@@ -22,6 +22,17 @@ test('from one galaxy to another: a button, the next click, and a card that cove
   const box = (await card.boundingBox())!;
   for (const [x, y] of [at(0.45, 0.46), at(0.6, 0.48)])
     expect(x >= box.x && x <= box.x + box.width && y >= box.y && y <= box.y + box.height).toBe(false);
+  // The view is moved until the first of them stands where the card is: at rest the card has made way.
+  const [x, y] = [box.x + box.width / 2, box.y + box.height / 2];
+  await page.mouse.move(...at(0.45, 0.46));
+  await page.mouse.down({ button: 'right' });
+  await page.mouse.move(x, y, { steps: 4 });
+  await page.mouse.up({ button: 'right' });
+  const covers = async () => {
+    const now = (await card.boundingBox())!;
+    return x >= now.x && x <= now.x + now.width && y >= now.y && y <= now.y + now.height;
+  };
+  await expect.poll(covers).toBe(false);
   // One line of small type.
   for (const value of await card.locator('dd').all())
     expect((await value.boundingBox())!.height).toBeLessThan(24);
