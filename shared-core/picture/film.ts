@@ -102,16 +102,6 @@ export function checkFilmSize(widthPx: number, heightPx: number): void {
     );
 }
 
-/** Bytes that a film takes while it is made: measured generously. */
-const BASE_BYTES = 300e6;
-/** Sums of light, the canvases and the encoder's own frames. */
-const BYTES_A_PIXEL = 110;
-const BYTES_A_GALAXY = 110;
-
-/** Memory for a film of so many pixels a frame, whatever its length: frames are written as they are made. */
-export const filmMemoryBytes = (widthPx: number, heightPx: number, galaxies: number): number =>
-  BASE_BYTES + BYTES_A_PIXEL * widthPx * heightPx + BYTES_A_GALAXY * galaxies;
-
 /** A time as a person is told of it before waiting: seconds up to a hundred, else minutes. */
 export function waitText(seconds: number): string {
   if (seconds < 2) return 'a second or two';

@@ -1,7 +1,7 @@
 import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
-import { sayFilm } from '../../main/command/picture/filmWishes.ts';
-import { checkMemory, obtainableBytes } from '../../main/command/picture/memory.ts';
+import { filmWork } from '../../main/command/picture/filmWishes.ts';
+import { checkMemory, neededBytes, obtainableBytes } from '../../main/command/picture/memory.ts';
 import { filmOptions } from '../../shared-core/picture/film.ts';
 import { pictureOptions } from '../../shared-core/picture/options.ts';
 import { emptyStudy, writeStudy } from '../../shared-core/study/document.ts';
@@ -63,20 +63,27 @@ describe('picture refuses before it starts', () => {
     expect(readFileSync(study, 'utf8')).toBe(writeStudy(emptyStudy('Mine')));
   });
 
-  it('a film that memory will not be enough for; else it says how much work it is', () => {
+  it('of a film how much work it is is said', () => {
     const wanted = filmOptions({ kind: 'turntable', seconds: 2, framesPerSecond: 25 });
-    const said: string[] = [];
     const size = pictureOptions({ widthPx: 1280, heightPx: 720 });
-    sayFilm(wanted, size, 0, 8e9, (text) => void said.push(text));
-    expect(said).toEqual(['50 frames of 1280 x 720 pixels, with about 0.4 GB of memory.']);
-    expect(() => sayFilm(wanted, size, 8e9, 4e9, () => undefined)).toThrow(
-      /needs about .* GB of memory and 4\.0 GB/,
+    expect(filmWork(wanted, size, neededBytes(0, size))).toBe(
+      '50 frames of 1280 x 720 pixels, with about 0.6 GB of memory.',
     );
   });
 
   it('memory that will not be enough', () => {
-    expect(() => checkMemory(10e9, 4e9)).toThrow(/needs about 40\.5 GB of memory and 4\.0 GB can be had/);
-    expect(() => checkMemory(1e6, 4e9)).not.toThrow();
+    const refused = () => checkMemory('picture', neededBytes(10e9, null), 4e9);
+    expect(refused).toThrow(/picture needs about 40\.5 GB of memory and 4\.0 GB can be had: close other/);
+    expect(() => checkMemory('picture', neededBytes(1e6, null), 4e9)).not.toThrow();
+    // A film is read like a picture, and its frames come on top: 8.3 million pixels of 110 bytes.
+    const size = { widthPx: 3840, heightPx: 2160 };
+    expect(neededBytes(0, size) - neededBytes(0, null)).toBe(110 * 3840 * 2160);
+    expect(neededBytes(1e9, size) - neededBytes(0, size)).toBeGreaterThan(
+      neededBytes(1e9, null) - neededBytes(0, null),
+    );
+    expect(() => checkMemory('film', neededBytes(500e6, size), 3e9)).toThrow(
+      /film needs about .* a smaller size/,
+    );
     // macOS calls little free, since it keeps memory that it can give back.
     expect(obtainableBytes('darwin', 0.1e9, 16e9)).toBe(12e9);
     expect(obtainableBytes('linux', 0.1e9, 16e9)).toBe(0.1e9);

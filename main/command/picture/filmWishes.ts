@@ -1,14 +1,8 @@
 import type { Command } from 'commander';
 import { Refusal } from '../../../shared-core/base/refusal.ts';
-import {
-  checkFilmSize,
-  FILM_KINDS,
-  type FilmOptions,
-  filmFrames,
-  filmMemoryBytes,
-  filmOptions,
-} from '../../../shared-core/picture/film.ts';
+import { FILM_KINDS, type FilmOptions, filmFrames, filmOptions } from '../../../shared-core/picture/film.ts';
 import { isFilmFormat, type PictureJob } from '../../../shared-core/picture/job.ts';
+import { memoryText } from '../../../shared-core/picture/memory.ts';
 import type { PictureOptions } from '../../../shared-core/picture/options.ts';
 import { oneNumber } from '../numbers.ts';
 
@@ -56,24 +50,10 @@ export function filmOf(format: PictureJob['format'], wishes: FilmWishes): FilmOp
   return filmOptions({ kind: film, seconds, framesPerSecond: fps, field });
 }
 
-/**
- * Says how much work a film is before it is begun. Reading takes memory for each byte of a catalogue (checkMemory).
- * @throws Refusal for a size that films cannot have, and where memory will not be enough
- */
-export function sayFilm(
+/** How much work a film is, in a sentence. */
+export const filmWork = (
   film: FilmOptions,
   { widthPx, heightPx }: PictureOptions,
-  catalogueBytes: number,
-  obtainable: number,
-  say: (text: string) => void,
-): void {
-  checkFilmSize(widthPx, heightPx);
-  // A galaxy takes some 40 bytes of a catalogue, or more.
-  const needed = filmMemoryBytes(widthPx, heightPx, catalogueBytes / 40);
-  const gb = (bytes: number): string => `${(bytes / 1e9).toFixed(1)} GB`;
-  if (needed > obtainable)
-    throw new Refusal(
-      `The film needs about ${gb(needed)} of memory and ${gb(obtainable)} can be had: close other programs, or choose a smaller size.`,
-    );
-  say(`${filmFrames(film)} frames of ${widthPx} x ${heightPx} pixels, with about ${gb(needed)} of memory.`);
-}
+  neededBytes: number,
+): string =>
+  `${filmFrames(film)} frames of ${widthPx} x ${heightPx} pixels, with about ${memoryText(neededBytes)} of memory.`;

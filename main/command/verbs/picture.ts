@@ -2,6 +2,7 @@ import { freemem, homedir, totalmem } from 'node:os';
 import { basename, extname, join } from 'node:path';
 import type { Command } from 'commander';
 import { Refusal } from '../../../shared-core/base/refusal.ts';
+import { checkFilmSize } from '../../../shared-core/picture/film.ts';
 import { FILM_FORMATS, PICTURE_FORMATS, type PictureJob } from '../../../shared-core/picture/job.ts';
 import { readStudy } from '../../../shared-core/study/document.ts';
 import type { Study } from '../../../shared-core/study/schema.ts';
@@ -11,9 +12,9 @@ import { userFolder } from '../../files/userFolder.ts';
 import { findBrowser } from '../../launch/findBrowser.ts';
 import { fromHere, readableSize, readTextFile } from '../files.ts';
 import { outputPlaces } from '../outputPlaces.ts';
-import { addFilmOptions, type FilmWishes, filmOf, sayFilm } from '../picture/filmWishes.ts';
+import { addFilmOptions, type FilmWishes, filmOf, filmWork } from '../picture/filmWishes.ts';
 import { makePicture } from '../picture/makePicture.ts';
-import { checkMemory, obtainableBytes } from '../picture/memory.ts';
+import { checkMemory, neededBytes, obtainableBytes } from '../picture/memory.ts';
 import { addPictureOptions, type PictureWishes, pictureOf } from '../picture/pictureWishes.ts';
 
 interface PictureVerbOptions extends PictureWishes, FilmWishes {
@@ -55,8 +56,10 @@ export function addPicture(program: Command, say: (text: string) => void, window
         { overwrite: options.overwrite === true },
       );
       const obtainable = obtainableBytes(process.platform, freemem(), totalmem());
-      checkMemory(catalogue?.sizeBytes ?? 0, obtainable);
-      if (film !== null) sayFilm(film, wanted, catalogue?.sizeBytes ?? 0, obtainable, say);
+      if (film !== null) checkFilmSize(wanted.widthPx, wanted.heightPx);
+      const needed = neededBytes(catalogue?.sizeBytes ?? 0, film === null ? null : wanted);
+      checkMemory(film === null ? 'picture' : 'film', needed, obtainable);
+      if (film !== null) say(filmWork(film, wanted, needed));
       const browser = findBrowser({ platform: process.platform, env: process.env, homeFolder: homedir() });
       if (browser === null)
         throw new Refusal(

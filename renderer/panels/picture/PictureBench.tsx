@@ -1,6 +1,7 @@
 import { useEffect, useMemo, useState } from 'preact/hooks';
-import { filmFrames, filmMemoryBytes, waitText } from '../../../shared-core/picture/film.ts';
+import { filmFrames, waitText } from '../../../shared-core/picture/film.ts';
 import type { DrawnFormat } from '../../../shared-core/picture/job.ts';
+import { drawingBytes, memoryText } from '../../../shared-core/picture/memory.ts';
 import { colourRemark } from '../../picture/numbers.ts';
 import { useApp } from '../../state/app.ts';
 import { ChoiceField } from '../../ui/ChoiceField.tsx';
@@ -17,7 +18,7 @@ import { LookChoice } from './LookChoice.tsx';
 import { PreviewPane } from './PreviewPane.tsx';
 import { type PictureChoices, VIEW_CHOICES } from './pictureChoices.ts';
 import { PictureClient } from './pictureClient.ts';
-import { memoryTrouble, pictureMemoryBytes, pictureRemarks } from './pictureRemarks.ts';
+import { memoryTrouble, pictureRemarks } from './pictureRemarks.ts';
 import { type ReadPicture, readChoices } from './readChoices.ts';
 import { SizeChoice } from './SizeChoice.tsx';
 import { SlabChoice } from './SlabChoice.tsx';
@@ -57,7 +58,7 @@ export function PictureBench({ onClose }: { readonly onClose: () => void }) {
     return colour === null ? others : [colour, ...others];
   }, [JSON.stringify(options), facts, app.derived.shells.value]);
   const galaxies = app.engine.selected.value?.sample.count ?? 0;
-  const needed = neededBytes(read, galaxies);
+  const needed = drawingBytes(galaxies, film === null ? null : options);
   const general =
     troubles.get('') ??
     [...troubles.values()][0] ??
@@ -148,11 +149,6 @@ export function PictureBench({ onClose }: { readonly onClose: () => void }) {
   );
 }
 
-const neededBytes = ({ options, film }: ReadPicture, galaxies: number): number =>
-  options === null || film === null
-    ? pictureMemoryBytes(galaxies)
-    : filmMemoryBytes(options.widthPx, options.heightPx, galaxies);
-
 /** How large it becomes; of a film also how much work it is. */
 function sizeText(
   { options, film }: ReadPicture,
@@ -164,7 +160,7 @@ function sizeText(
   if (film === null) return pixels;
   const frames = filmFrames(film);
   const time = forecast === null ? '' : ` · takes ${waitText(frames * forecast.secondsAFrame)}`;
-  return `${pixels} · ${frames} frames${time} · ${(neededBytes / 1e9).toFixed(1)} GB of memory`;
+  return `${pixels} · ${frames} frames${time} · ${memoryText(neededBytes)} of memory`;
 }
 
 const windowPx = (): readonly [number, number] => [

@@ -1,13 +1,10 @@
 import type { DrawnFormat } from '../../../shared-core/picture/job.ts';
+import { memoryText } from '../../../shared-core/picture/memory.ts';
 import type { PictureOptions } from '../../../shared-core/picture/options.ts';
 import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
 
 /** Labels have three lines of some thirty letters each. */
 const LONG_LABEL = 80;
-/** Bytes that drawing takes beside the galaxies, and for each of them: their copy, places and colours. */
-const BASE_BYTES = 300e6;
-const BYTES_A_GALAXY = 90;
-
 /** What the person should know before a picture is exported, though nothing hinders it. */
 export function pictureRemarks(options: PictureOptions, shells: readonly ShellStatistics[]): string[] {
   const out: string[] = [];
@@ -27,9 +24,6 @@ export function pictureRemarks(options: PictureOptions, shells: readonly ShellSt
   return out;
 }
 
-/** Memory that drawing takes, whatever the size of a picture: it is drawn band by band. */
-export const pictureMemoryBytes = (galaxies: number): number => BASE_BYTES + BYTES_A_GALAXY * galaxies;
-
 /**
  * Why drawing is not begun for want of memory; null when there is enough, or nobody knows.
  * @param what is drawn, as a sentence begins
@@ -42,7 +36,7 @@ export function memoryTrouble(
 ): string | null {
   // Half of a machine's memory belongs to what else runs on it.
   if (deviceGb === undefined || neededBytes <= (deviceGb * 1e9) / 2) return null;
-  return `${what} needs about ${(neededBytes / 1e9).toFixed(1)} GB of memory, and this machine has ${deviceGb} GB in all: cut the catalogue to fewer galaxies, or use a larger machine.`;
+  return `${what} needs about ${memoryText(neededBytes)} of memory, and this machine has ${deviceGb} GB in all: cut the catalogue to fewer galaxies, or use a larger machine.`;
 }
 
 export const MIME_TYPES: Readonly<Record<DrawnFormat, string>> = {

@@ -3,13 +3,13 @@ import {
   checkFilmSize,
   FILM_KINDS,
   filmFrames,
-  filmMemoryBytes,
   filmOptions,
   filmShare,
   frameStartUs,
   MOST_FILM_PIXELS,
   waitText,
 } from '../../../shared-core/picture/film.ts';
+import { drawingBytes } from '../../../shared-core/picture/memory.ts';
 
 describe('what a film is', () => {
   it('is filled in where nothing is said', () => {
@@ -66,9 +66,11 @@ describe('the size of a film', () => {
   });
 
   it('asks for memory by its pixels and galaxies, and says times in words', () => {
-    const small = filmMemoryBytes(1280, 720, 0);
-    expect(filmMemoryBytes(2560, 1440, 0) - small).toBe(3 * (small - filmMemoryBytes(0, 0, 0)));
-    expect(filmMemoryBytes(1280, 720, 1e6)).toBeGreaterThan(small);
+    const size = { widthPx: 1280, heightPx: 720 };
+    const small = drawingBytes(0, size);
+    const large = drawingBytes(0, { widthPx: 2560, heightPx: 1440 });
+    expect(large - small).toBe(3 * (small - drawingBytes(0, null)));
+    expect(drawingBytes(1e6, size) - small).toBeGreaterThan(drawingBytes(1e6, null) - drawingBytes(0, null));
     expect([0.5, 31, 99, 100, 3000].map(waitText)).toEqual([
       'a second or two',
       'about 35 seconds',

@@ -2,11 +2,7 @@ import { beforeAll, describe, expect, it } from 'vitest';
 import type { BenchAnswer } from '../../../renderer/panels/picture/benchMessages.ts';
 import { FIRST_CHOICES, type PictureChoices } from '../../../renderer/panels/picture/pictureChoices.ts';
 import { PictureDesk } from '../../../renderer/panels/picture/pictureDesk.ts';
-import {
-  memoryTrouble,
-  pictureMemoryBytes,
-  pictureRemarks,
-} from '../../../renderer/panels/picture/pictureRemarks.ts';
+import { memoryTrouble, pictureRemarks } from '../../../renderer/panels/picture/pictureRemarks.ts';
 import { previewScene } from '../../../renderer/panels/picture/previewScene.ts';
 import { readChoices } from '../../../renderer/panels/picture/readChoices.ts';
 import { captionOffer, composePicture } from '../../../renderer/picture/composePicture.ts';
@@ -14,6 +10,7 @@ import { type PictureFacts, pictureNumbers } from '../../../renderer/picture/num
 import { fingerprintOf } from '../../../renderer/picture/page/gatherFacts.ts';
 import { sceneToSvg } from '../../../renderer/picture/sceneToSvg.ts';
 import { MemorySink } from '../../../renderer/picture/write/sink.ts';
+import { drawingBytes } from '../../../shared-core/picture/memory.ts';
 import { PICTURE_VIEWS, pictureOptions } from '../../../shared-core/picture/options.ts';
 import { factsOf, small } from '../picture/facts.ts';
 
@@ -117,7 +114,7 @@ describe('remarks', () => {
   });
 
   it('tell of memory that is short before anything is begun', () => {
-    const needed = pictureMemoryBytes(10_000_000);
+    const needed = drawingBytes(10_000_000, null);
     expect(memoryTrouble('The picture', needed, 2)).toMatch(
       /needs about 1\.2 GB of memory, and this machine has 2 GB/,
     );
