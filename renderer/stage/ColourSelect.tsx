@@ -14,8 +14,7 @@ export function ColourSelect(props: {
   const { id, value, unsaid, onChoose } = props;
   const { engine } = useApp();
   const hasMagnitude = engine.selected.value?.magnitude != null;
-  // A heading may be missing: such a column has no name to be chosen by.
-  const columns = (engine.loadedNow.value?.header ?? []).filter((name) => name !== '');
+  const columns = engine.loadedNow.value?.header ?? [];
   // A study may name a column that its catalogue has no more: it stays to be seen, and the engine says why it fails.
   const absent = value !== null && typeof value === 'object' && !columns.includes(value.column);
   const offered = absent ? [value.column, ...columns] : columns;
