@@ -1,11 +1,10 @@
 import { Cancelled } from '../../../shared-core/base/cancelled.ts';
 import { Refusal } from '../../../shared-core/base/refusal.ts';
 import type { FilmOptions } from '../../../shared-core/picture/film.ts';
-import { type FilmFormat, isFilmFormat } from '../../../shared-core/picture/job.ts';
+import { isFilmFormat } from '../../../shared-core/picture/job.ts';
 import type { PictureOptions } from '../../../shared-core/picture/options.ts';
 import { captionOffer, composePicture, describePicture } from '../../picture/composePicture.ts';
 import { composeFilm, type Film } from '../../picture/film/composeFilm.ts';
-import { filmEncoding } from '../../picture/film/encoding.ts';
 import { renderFilm } from '../../picture/film/renderFilm.ts';
 import type { PictureFacts } from '../../picture/numbers.ts';
 import { PieceSender } from '../../picture/page/pieceSender.ts';
@@ -14,7 +13,8 @@ import type { Scene } from '../../picture/scene.ts';
 import { sceneToPdf } from '../../picture/sceneToPdf.ts';
 import { sceneToSvg } from '../../picture/sceneToSvg.ts';
 import { type ByteSink, MemorySink, type WriteOptions } from '../../picture/write/sink.ts';
-import type { BenchAnswer, BenchRequest, FilmForecast, PicturePreview } from './benchMessages.ts';
+import type { BenchAnswer, BenchRequest, PicturePreview } from './benchMessages.ts';
+import { askEncoders } from './filmTroubles.ts';
 import { previewScene } from './previewScene.ts';
 
 const WRITERS = { png: renderPng, svg: sceneToSvg, pdf: sceneToPdf } as const;
@@ -34,6 +34,7 @@ export class PictureDesk {
   #facts: PictureFacts | null = null;
   #newest = 0;
   #film: { readonly facts: PictureFacts; readonly key: string; readonly film: Film } | null = null;
+  readonly #encoderTroubles = askEncoders(sentenceFor);
   #offer: { readonly facts: PictureFacts; readonly key: string; readonly caption: string } | null = null;
   readonly #running = new Map<number, Running>();
 
@@ -102,7 +103,13 @@ export class PictureDesk {
       description: describePicture(scene),
       offeredCaption: film?.offeredCaption ?? this.#captionFor(options, facts),
       pdfTrouble: film === null ? await pdfTrouble(scene) : null,
-      forecast: film === null ? null : await forecast(film, (performance.now() - began) / 1000 / share),
+      forecast:
+        film === null
+          ? null
+          : {
+              troubles: await this.#encoderTroubles(film, film.options.framesPerSecond),
+              secondsAFrame: (performance.now() - began) / 1000 / share,
+            },
     };
     this.#post({ kind: 'preview', id, preview });
   }
@@ -177,14 +184,6 @@ function listening(sink: ByteSink): ByteSink {
       last = performance.now();
     },
   };
-}
-
-/** What the browser can write, and how long a frame takes. */
-async function forecast(film: Film, secondsAFrame: number): Promise<FilmForecast> {
-  const { widthPx, heightPx, options } = film;
-  const size = { widthPx, heightPx, framesPerSecond: options.framesPerSecond };
-  const trouble = (format: FilmFormat) => filmEncoding(format, size).then(() => null, sentenceFor);
-  return { troubles: { webm: await trouble('webm'), mp4: await trouble('mp4') }, secondsAFrame };
 }
 
 class Begun extends Error {}

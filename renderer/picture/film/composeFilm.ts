@@ -11,7 +11,7 @@ import type { Scene, SceneItem, SceneMetadata } from '../scene.ts';
 import { groundOf } from '../themes.ts';
 import { penOn, type ViewBox, type ViewInput } from '../views/view.ts';
 import { steadyLook } from './steadyLook.ts';
-import type { FilmView } from './views/filmView.ts';
+import type { FilmDrawing, FilmView } from './views/filmView.ts';
 import { flyAlongView } from './views/flyAlong.ts';
 import { shellByShellView } from './views/shellByShell.ts';
 import { turntableView } from './views/turntable.ts';
@@ -58,7 +58,9 @@ export function composeFilm(picture: PictureOptions, film: FilmOptions, facts: P
   );
   const around = frameItems(frame, box);
   const colours = pointColours(numbers, theme);
-  const lookAt = steadyLook((share) => pointLook(pointPlaces(view.drawingAt(share), numbers), box, numbers));
+  const placesOf = latest((placeAll: FilmDrawing['placeAll']) => pointPlaces({ placeAll }, numbers));
+  const lookOf = latest((places: ReturnType<typeof placesOf>) => pointLook(places, box, numbers));
+  const lookAt = steadyLook((share) => lookOf(placesOf(view.drawingAt(share).placeAll)));
   return {
     options: film,
     widthPx,
@@ -68,10 +70,8 @@ export function composeFilm(picture: PictureOptions, film: FilmOptions, facts: P
     sceneAt(index) {
       const share = filmShare(film, index);
       const drawing = view.drawingAt(share);
-      const places = pointPlaces(drawing, numbers);
-      const light =
-        drawing.dim === null ? places.light : (places.light ?? new Float32Array(places.count).fill(1));
-      if (light !== null) drawing.dim?.(light);
+      const places = placesOf(drawing.placeAll);
+      const light = drawing.dim === null ? places.light : dimmed(places, drawing.dim);
       const marked = penOn({ box, theme });
       paintLabels(marked.pen, picture, numbers, drawing, true);
       return {
@@ -88,6 +88,31 @@ export function composeFilm(picture: PictureOptions, film: FilmOptions, facts: P
       };
     },
   };
+}
+
+/**
+ * The same work, not done again while it is asked of the same thing: a cone that holds still places its galaxies by one
+ * function. No more than one result is kept, and none while the next is made.
+ */
+function latest<In, Out>(work: (of: In) => Out): (of: In) => Out {
+  let kept: { readonly of: In; readonly out: Out } | null = null;
+  return (of) => {
+    if (kept?.of === of) return kept.out;
+    kept = null;
+    const out = work(of);
+    kept = { of, out };
+    return out;
+  };
+}
+
+/** The light that galaxies keep, in an array of its own. */
+function dimmed(
+  { count, light }: ReturnType<typeof pointPlaces>,
+  dim: NonNullable<FilmDrawing['dim']>,
+): Float32Array {
+  const out = light?.slice() ?? new Float32Array(count).fill(1);
+  dim(out);
+  return out;
 }
 
 /** What stands around the stage, on a ground that covers what reaches out of it. */

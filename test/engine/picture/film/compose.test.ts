@@ -137,6 +137,11 @@ describe('shell by shell', () => {
       );
     }
     expect(made.sceneAt(0).points.light!.every((light) => light === 1)).toBe(true);
+    // The cone holds still, so its galaxies are placed once; each frame has a light of its own.
+    const [a, b] = [made.sceneAt(3).points, made.sceneAt(9).points];
+    expect(b.x).toBe(a.x);
+    expect(b.y).toBe(a.y);
+    expect(b.light).not.toBe(a.light);
   });
 
   it('is refused where there are no shells', () => {
