@@ -6,6 +6,19 @@ import { encodeSrgb, greatestChroma, oklabToLinear, oklch, type Triple } from '.
  * alternates a little, so that neighbours differ without any hue and the order along the radius is kept.
  */
 export function shellColours(count: number, ground: Ground): readonly Triple[] {
+  if (last.count !== count || last.ground !== ground)
+    last = { count, ground, colours: madeColours(count, ground) };
+  return last.colours;
+}
+
+/** Asked for in every frame while an edge is dragged. */
+let last: { count: number; ground: Ground; colours: readonly Triple[] } = {
+  count: 0,
+  ground: 'dark',
+  colours: [],
+};
+
+function madeColours(count: number, ground: Ground): readonly Triple[] {
   const out: Triple[] = [];
   for (let i = 0; i < count; i++) {
     const t = count > 1 ? i / (count - 1) : 0.5;

@@ -9,6 +9,7 @@ import { paintOverlay } from './overlay/paintOverlay.ts';
 import { Pen } from './overlay/pen.ts';
 import type { Galaxies } from './points/galaxies.ts';
 import { radiusAt } from './points/radiusTable.ts';
+import { nextTask } from './points/slices.ts';
 import { type FlatPlace, paintFlatSolids } from './solids/flatSolids.ts';
 import type { SolidLook } from './solids/solidLook.ts';
 import type { Stage } from './stage.ts';
@@ -78,6 +79,14 @@ export class ConeLayers {
       this.paint(context, frame, model, look, galaxies);
     });
     this.stage.show(this.stage.points);
+  }
+
+  /** Takes what the first picture would take besides, in a task of its own. */
+  async warmUp(): Promise<void> {
+    await nextTask();
+    const { widthPx, heightPx, pixelRatio, container } = this.stage;
+    const { fontFamily } = getComputedStyle(container);
+    this.merged.warmUp(Math.round(widthPx * pixelRatio), Math.round(heightPx * pixelRatio), fontFamily);
   }
 
   private drawSolids(frame: ConeFrame, look: LayerLook): void {

@@ -66,6 +66,7 @@ export class ConeView {
       (sentence) => events.onTrouble?.(sentence),
     );
     this.layers = new ConeLayers(this.stage, this.gl);
+    void this.layers.warmUp();
     this.region = new RegionInTurn(this.work, this.painter.galaxies, (fields, footprint, views) => {
       this.change(0, () => this.model.setFields(fields, footprint));
       this.layers.meshes = fields.map((field) => field.mesh);

@@ -15,6 +15,19 @@ export class MergedCanvas {
     this.memory = canvas.getContext('2d', { alpha: false, willReadFrequently: true });
   }
 
+  /** The first pixels and letters on a canvas take the browser many times what the next do: not in a picture's task. */
+  warmUp(width: number, height: number, fontFamily: string): void {
+    const { memory } = this;
+    if (!memory) return;
+    this.fit(memory.canvas, width, height);
+    memory.putImageData(new ImageData(1, 1), 0, 0);
+    memory.getImageData(0, 0, 1, 1);
+    for (const weight of [400, 600]) {
+      memory.font = `${weight} 12px ${fontFamily}`;
+      memory.measureText('0.5 Gyr');
+    }
+  }
+
   /**
    * Shows the image with what is painted over it.
    *
@@ -24,20 +37,20 @@ export class MergedCanvas {
     const { memory, output, shown } = this;
     if (!memory || !output) return;
     const { width, height } = image;
-    if (memory.canvas.width !== width || memory.canvas.height !== height) {
-      memory.canvas.width = width;
-      memory.canvas.height = height;
-    }
+    this.fit(memory.canvas, width, height);
     memory.setTransform(1, 0, 0, 1, 0, 0);
     memory.putImageData(image, 0, 0);
     memory.setTransform(ratio, 0, 0, ratio, 0, 0);
     paint(memory);
     const finished = memory.getImageData(0, 0, width, height);
     // A change of size empties the canvas: only now, when the new picture follows at once.
-    if (shown.width !== width || shown.height !== height) {
-      shown.width = width;
-      shown.height = height;
-    }
+    this.fit(shown, width, height);
     output.putImageData(finished, 0, 0);
+  }
+
+  private fit(canvas: HTMLCanvasElement, width: number, height: number): void {
+    if (canvas.width === width && canvas.height === height) return;
+    canvas.width = width;
+    canvas.height = height;
   }
 }

@@ -1,4 +1,4 @@
-import { effect, type ReadonlySignal, signal } from '@preact/signals';
+import { computed, effect, type ReadonlySignal, signal } from '@preact/signals';
 import type { OpenedFile, RecentStudy, UnsavedWork } from '../../shared-core/bridge/messages.ts';
 import { emptyStudy, readStudy } from '../../shared-core/study/document.ts';
 import type { Study } from '../../shared-core/study/schema.ts';
@@ -102,8 +102,10 @@ export function createFileState(options: FileStateOptions): FileState {
       );
   };
 
+  // Of all edits, the host is told only those that it shows.
+  const name = computed(() => study.value.name);
   effect(() => {
-    const title = `${study.value.name}${unsaved.value ? ' (not saved)' : ''} - Conewright`;
+    const title = `${name.value}${unsaved.value ? ' (not saved)' : ''} - Conewright`;
     void guarded(() => bridge.setWindowState({ title, unsaved: unsaved.value }), undefined);
   });
   bridge.onCloseRequest(async () => {
