@@ -6,7 +6,7 @@ import { chromium } from '@playwright/test';
 import { build as bundle } from 'vite';
 import { build } from '../../main/launch/build.mjs';
 import { findBrowser } from '../../main/launch/findBrowser.ts';
-import { FLAGS } from '../window/chromiumFlags.ts';
+import { browserArguments } from '../../main/local/open.ts';
 import { writeInventedField } from './inventedField.ts';
 import { traceTasks } from './longTasks.ts';
 import { type Act, everydayActs, opening, ready } from './windowActs.ts';
@@ -59,7 +59,10 @@ export async function bench(words: readonly string[] = []) {
       baseFolder: folder,
       programFolder: windowFolder,
     });
-    const browser = await chromium.launch({ executablePath: found.path, args: FLAGS });
+    // As the program starts it, but for the page and its folder, which are the driver's.
+    const own = browserArguments(host.address, folder, process.getuid?.() === 0);
+    const args = own.filter((arg) => !/^--(app|user-data-dir)=/.test(arg));
+    const browser = await chromium.launch({ executablePath: found.path, args });
     try {
       const page = await browser.newPage({ viewport: { width: 1280, height: 800 } });
       const start: Act = {
