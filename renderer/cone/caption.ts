@@ -1,3 +1,4 @@
+import { roundTo } from '../../shared-core/base/roundTo.ts';
 import type { RadialReading, ViewName } from './types.ts';
 
 export interface CaptionFacts {
@@ -13,7 +14,7 @@ export interface CaptionFacts {
 }
 
 /** A factor as it is said: "sideways × 12". */
-export const sidewaysText = (factor: number): string => `sideways × ${+factor.toPrecision(3)}`;
+export const sidewaysText = (factor: number): string => `sideways × ${roundTo(factor, 3)}`;
 
 /** What a reader must know to judge the picture: what is stretched, what is not to scale, what is left out. */
 export function captionLines(facts: CaptionFacts): string[] {

@@ -1,3 +1,4 @@
+import { roundTo } from '../../shared-core/base/roundTo.ts';
 import { findPublishedSet } from '../../shared-core/cosmology/publishedSets.ts';
 import { areaText } from '../../shared-core/report/areaWords.ts';
 import { cutWords } from '../../shared-core/report/cuts.ts';
@@ -35,7 +36,7 @@ export function offeredCaption(numbers: PictureNumbers, notes: readonly string[]
 
 const sentence = (note: string): string => `${note.charAt(0).toUpperCase()}${note.slice(1)}.`;
 
-const digits = (value: number, count: number): string => String(Number(value.toPrecision(count)));
+const digits = (value: number, count: number): string => String(roundTo(value, count));
 
 function regionText({ footprint }: PictureNumbers): string[] {
   if (footprint === null) return [];

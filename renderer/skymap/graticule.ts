@@ -1,3 +1,4 @@
+import { roundTo } from '../../shared-core/base/roundTo.ts';
 import { roundStepAbove } from '../strip/roundValues.ts';
 import type { Place, SkyLines } from './outlines.ts';
 import type { MapBox } from './skyFrames.ts';
@@ -199,5 +200,5 @@ export function decText(decDeg: number): string {
 }
 
 function clean(value: number): number {
-  return Number(value.toPrecision(10));
+  return roundTo(value, 10);
 }

@@ -1,6 +1,7 @@
 import { type ReadonlySignal, useComputed, useSignal, useSignalEffect } from '@preact/signals';
 import { useLayoutEffect, useRef } from 'preact/hooks';
 import { Refusal } from '../../shared-core/base/refusal.ts';
+import { roundTo } from '../../shared-core/base/roundTo.ts';
 import type { Cosmology } from '../../shared-core/cosmology/cosmology.ts';
 import {
   DISTANCE_QUANTITIES,
@@ -113,7 +114,7 @@ export function GalaxyCard({
             {galaxy.raDeg.toFixed(5)}°, {galaxy.decDeg.toFixed(5)}°
           </dd>
           <dt>z</dt>
-          <dd>{String(Number(galaxy.redshift.toPrecision(8)))}</dd>
+          <dd>{String(roundTo(galaxy.redshift, 8))}</dd>
           {DISTANCE_QUANTITIES.filter((q) => distances !== null && SHOWN.includes(q.key)).map((q) => (
             <>
               <dt>{q.title}</dt>

@@ -1,4 +1,5 @@
-import { type Light, STRETCHES, type Stretch } from '../../shared-core/study/schema.ts';
+import { roundTo } from '../../shared-core/base/roundTo.ts';
+import { LIGHT_RANGES, type Light, STRETCHES, type Stretch } from '../../shared-core/study/schema.ts';
 import { ChoiceField } from '../ui/ChoiceField.tsx';
 import { SliderField } from '../ui/SliderField.tsx';
 
@@ -8,9 +9,6 @@ const STRETCH_WORDS: Readonly<Record<Stretch, string>> = {
   squareRoot: 'Square root',
   linear: 'Linear',
 };
-const MOST_STOPS = 8;
-/** The slider of sizes runs evenly in octaves. */
-const MOST_OCTAVES = 2;
 
 const percent = (share: number): string => `${Math.round(100 * share)} %`;
 function stopsText(stops: number): string {
@@ -39,8 +37,7 @@ export function LightFields(props: {
       />
       <SliderField
         label="Exposure"
-        min={-MOST_STOPS}
-        max={MOST_STOPS}
+        {...LIGHT_RANGES.exposureStops}
         step={0.25}
         value={light.exposureStops}
         words={stopsText(light.exposureStops)}
@@ -49,8 +46,7 @@ export function LightFields(props: {
       />
       <SliderField
         label="Glow"
-        min={0}
-        max={1}
+        {...LIGHT_RANGES.glow}
         step={0.05}
         value={light.glow}
         words={percent(light.glow)}
@@ -59,8 +55,7 @@ export function LightFields(props: {
       />
       <SliderField
         label="Depth cue"
-        min={0}
-        max={1}
+        {...LIGHT_RANGES.depthCue}
         step={0.05}
         value={light.depthCue}
         words={percent(light.depthCue)}
@@ -69,11 +64,12 @@ export function LightFields(props: {
       />
       <SliderField
         label="Point size"
-        min={-MOST_OCTAVES}
-        max={MOST_OCTAVES}
+        // The slider of sizes runs evenly in octaves.
+        min={Math.log2(LIGHT_RANGES.pointSize.min)}
+        max={Math.log2(LIGHT_RANGES.pointSize.max)}
         step={0.25}
         value={Math.log2(light.pointSize)}
-        words={`× ${Number(light.pointSize.toPrecision(2))}`}
+        words={`× ${roundTo(light.pointSize, 2)}`}
         onInput={(octaves) => onChange({ pointSize: 2 ** octaves })}
         {...done}
       />

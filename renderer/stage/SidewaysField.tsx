@@ -1,5 +1,6 @@
 import type { ReadonlySignal } from '@preact/signals';
 import { Refusal } from '../../shared-core/base/refusal.ts';
+import { roundTo } from '../../shared-core/base/roundTo.ts';
 import { changeLook } from '../../shared-core/study/edits.ts';
 import type { ViewState as ConeState } from '../cone/types.ts';
 import { useApp } from '../state/app.ts';
@@ -31,7 +32,7 @@ export function SidewaysField({ coneState }: { readonly coneState: ReadonlySigna
         inputMode="decimal"
         size={4}
         value={sideways === null ? '' : String(sideways)}
-        placeholder={String(Number(state.sidewaysFactor.toPrecision(3)))}
+        placeholder={String(roundTo(state.sidewaysFactor, 3))}
         onBlur={(e) => commit(e.currentTarget.value)}
         onKeyDown={(e) => {
           if (e.key === 'Enter') commit(e.currentTarget.value);

@@ -1,3 +1,4 @@
+import { roundTo } from '../../shared-core/base/roundTo.ts';
 import type { Cosmology } from '../../shared-core/cosmology/cosmology.ts';
 import { formatNumber, type ShownUnits } from '../../shared-core/report/quantity.ts';
 import { edgeText, shellRanges } from '../../shared-core/report/shellRange.ts';
@@ -66,7 +67,7 @@ export function radialScale(
     rulerTicks(r, scale, deepest, distance.at, r.kind === 'lookback' ? withAge : () => '');
   const mpcText = (mpc: number) => {
     const shown = units.perH ? mpc * units.h : mpc;
-    return `${markText(Number(shown.toPrecision(3)))} ${readings.comoving.unit}`;
+    return `${markText(roundTo(shown, 3))} ${readings.comoving.unit}`;
   };
   return {
     reading,
@@ -170,7 +171,7 @@ export function colouring(
   if (typeof by === 'object') {
     const values = columns.find((c) => c.column === by.column)?.values;
     if (values === undefined) return null;
-    return valued(values, by.column, map, middlePart(values), (v) => String(Number(v.toPrecision(3))));
+    return valued(values, by.column, map, middlePart(values), (v) => String(roundTo(v, 3)));
   }
   switch (by) {
     case 'shell':
@@ -199,7 +200,7 @@ export function colouring(
         'local density, relative to its depth',
         map,
         middlePart(density),
-        (v) => `× ${Number((10 ** v).toPrecision(2))}`,
+        (v) => `× ${roundTo(10 ** v, 2)}`,
       );
   }
 }

@@ -1,5 +1,6 @@
 import { signal } from '@preact/signals';
 import { useId, useLayoutEffect, useRef, useState } from 'preact/hooks';
+import { roundTo } from '../../shared-core/base/roundTo.ts';
 import {
   addEdge,
   type Edit,
@@ -149,5 +150,5 @@ function endOfAll(index: number, edges: number, back: boolean): 'from' | 'to' | 
 
 /** An edge's own value in a unit, in the digits that a field has room for. */
 export function untouchedText(z: number, kind: RadialReading, readings: Readings): string {
-  return fieldText(Number(readings[kind].shownAt(z).toPrecision(6)));
+  return fieldText(roundTo(readings[kind].shownAt(z), 6));
 }

@@ -1,3 +1,4 @@
+import { roundTo } from '../../shared-core/base/roundTo.ts';
 import type { RadialPixel } from './layout.ts';
 import type { Reading } from './readings.ts';
 import { roundValues } from './roundValues.ts';
@@ -41,7 +42,7 @@ export function axisMarks(
 
 /** A round number on an axis: no digits beyond its own, thousands parted by a narrow space from 10 000 on. */
 export function markText(value: number): string {
-  const text = String(Number(value.toPrecision(10)));
+  const text = String(roundTo(value, 10));
   if (Math.abs(value) < 10_000 || text.includes('e')) return text;
   return text.replace(/\B(?=(\d{3})+$)/g, '\u202f');
 }

@@ -1,3 +1,4 @@
+import { roundTo } from '../../shared-core/base/roundTo.ts';
 import { DEEPEST_REDSHIFT } from '../../shared-core/shells/edges.ts';
 import { rankBelow, type SortedSample } from '../../shared-core/shells/sample.ts';
 import type { RadialPixel, RedshiftWindow } from './layout.ts';
@@ -50,7 +51,7 @@ export function binsOf(
   const shownEdges = new Float64Array(count + 1);
   const zEdges = new Float64Array(count + 1);
   for (let i = 0; i <= count; i++) {
-    const shown = Number(((from + i) * step).toPrecision(12));
+    const shown = roundTo((from + i) * step, 12);
     const isDeepest = shown >= deepest;
     shownEdges[i] = isDeepest ? deepest : shown;
     zEdges[i] = isDeepest ? DEEPEST_REDSHIFT : axis.redshiftAt(shown / factor);

@@ -1,3 +1,4 @@
+import { roundTo } from '../../shared-core/base/roundTo.ts';
 import { roundStepAbove } from './roundValues.ts';
 
 /** How density is read upward: evenly, or by powers of ten. */
@@ -84,7 +85,7 @@ export function densityMarks(scale: DensityScale, times: number, most: number): 
   if (scale.upward === 'linear') {
     const step = roundStepAbove(high / Math.max(1, most));
     const count = Math.floor(high / step + 1e-9);
-    return Array.from({ length: count + 1 }, (_, i) => Number((i * step).toPrecision(12)));
+    return Array.from({ length: count + 1 }, (_, i) => roundTo(i * step, 12));
   }
   const [from, to] = [Math.ceil(Math.log10(low) - 1e-9), Math.floor(Math.log10(high) + 1e-9)];
   const every = Math.max(1, Math.ceil((to - from + 1) / Math.max(1, most)));

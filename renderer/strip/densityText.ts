@@ -1,3 +1,4 @@
+import { roundTo } from '../../shared-core/base/roundTo.ts';
 import { markText } from './axisMarks.ts';
 import type { Upward } from './densityScale.ts';
 import { powerOfTen } from './words.ts';
@@ -11,7 +12,7 @@ const MOST_CHARACTERS = 6;
  */
 export function densityText(value: number, upward: Upward, power: number): string {
   if (upward === 'linear') {
-    const plain = markText(Number((value / 10 ** power).toPrecision(8)));
+    const plain = markText(roundTo(value / 10 ** power, 8));
     return plain.length <= MOST_CHARACTERS && !plain.includes('e') ? plain : powersShown(value / 10 ** power);
   }
   const exponent = Math.round(Math.log10(value));
@@ -21,5 +22,5 @@ export function densityText(value: number, upward: Upward, power: number): strin
 // 2.5×10⁶: the digits of a round number only.
 function powersShown(value: number): string {
   const [mantissa, power] = value.toExponential().split('e');
-  return `${Number(Number(mantissa).toPrecision(3))}×${powerOfTen(Number(power))}`;
+  return `${roundTo(Number(mantissa), 3)}×${powerOfTen(Number(power))}`;
 }

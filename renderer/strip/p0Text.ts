@@ -1,3 +1,4 @@
+import { roundTo } from '../../shared-core/base/roundTo.ts';
 import { type ShownUnits, UNITS } from '../../shared-core/report/quantity.ts';
 import { countText } from '../ui/numberText.ts';
 import { unitText } from '../ui/unitText.ts';
@@ -16,5 +17,5 @@ export function p0Texts(
 
 // A power below a hundred would lose its digits as a whole number.
 function powerText(power: number): string {
-  return power >= 100 ? countText(Math.round(power)) : String(Number(power.toPrecision(3)));
+  return power >= 100 ? countText(Math.round(power)) : String(roundTo(power, 3));
 }

@@ -1,3 +1,5 @@
+import { roundTo } from '../../shared-core/base/roundTo.ts';
+
 /** Round numbers are 1, 2 or 5 times a power of ten. */
 const LEADING = [1, 2, 5] as const;
 /** Distances that differ by less are equal: else an even axis would be marked unevenly. */
@@ -106,5 +108,5 @@ function roundNumber(lead: number, power: number): number {
 }
 
 function clean(value: number): number {
-  return Number(value.toPrecision(12));
+  return roundTo(value, 12);
 }

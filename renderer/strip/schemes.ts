@@ -1,3 +1,4 @@
+import { roundTo } from '../../shared-core/base/roundTo.ts';
 import type { Cosmology } from '../../shared-core/cosmology/cosmology.ts';
 import { DEEPEST_REDSHIFT, edgesOf } from '../../shared-core/shells/edges.ts';
 import type { SortedSample } from '../../shared-core/shells/sample.ts';
@@ -84,7 +85,7 @@ export function typedRange(
 
 /** A redshift in a few digits, for a field that has little room. */
 export function shortRedshift(z: number): string {
-  return String(Number(z.toPrecision(4)));
+  return String(roundTo(z, 4));
 }
 
 /** Puts n shells of a scheme in place of the present ones. The edit throws a Refusal where the scheme cannot be. */

@@ -1,3 +1,4 @@
+import { roundTo } from '../../shared-core/base/roundTo.ts';
 import type { App } from '../state/app.ts';
 import type { ShownProfile } from './stripModel.ts';
 import type { ProfileWords } from './words.ts';
@@ -56,7 +57,7 @@ export function profileWords({ bins, count, smooth, power }: ShownProfile): Prof
   const middle = (i: number) => (bins.shownEdges[i]! + bins.shownEdges[i + 1]!) / 2;
   return {
     galaxies,
-    peak: best < 0 ? null : { at: Number(middle(best).toPrecision(10)), density: smooth[best]! },
+    peak: best < 0 ? null : { at: roundTo(middle(best), 10), density: smooth[best]! },
     above: power === null ? 'unknown' : above,
   };
 }

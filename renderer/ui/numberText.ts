@@ -1,3 +1,4 @@
+import { roundTo } from '../../shared-core/base/roundTo.ts';
 import { parseNumber } from '../../shared-core/catalogue/numbers.ts';
 
 /** What a person typed, as a number; or the sentence that says why it is none. */
@@ -13,7 +14,7 @@ export function readNumber(text: string, name: string): ReadNumber {
 
 /** A number in a field: at most ten digits, so that 0.1 + 0.2 reads 0.3. Empty for none. */
 export function fieldText(value: number | null): string {
-  return value === null ? '' : String(Number(value.toPrecision(10)));
+  return value === null ? '' : String(roundTo(value, 10));
 }
 
 /** A count for reading: digits in threes, parted by narrow spaces. */

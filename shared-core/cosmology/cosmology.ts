@@ -1,4 +1,5 @@
 import { Refusal } from '../base/refusal.ts';
+import { roundTo } from '../base/roundTo.ts';
 import { cbrt, log1p, log10, square } from '../numerics/elementary/elementary.ts';
 import { createBackgroundTable } from './backgroundTable.ts';
 import { KM_PER_MPC, SECONDS_PER_GYR, SPEED_OF_LIGHT_KM_S } from './constants.ts';
@@ -96,7 +97,7 @@ export function createCosmology(parameters: CosmologyParameters): Cosmology {
   const withinAntipode = (z: number, comoving: number): number => {
     if (comoving <= geometry.antipode) return comoving;
     throw new Refusal(
-      `Redshift ${Number(z.toPrecision(6))} lies beyond the antipode of this closed universe (comoving distance ${comoving.toPrecision(6)} Mpc, antipode ${geometry.antipode.toPrecision(6)} Mpc); choose a lower redshift or less curvature.`,
+      `Redshift ${roundTo(z, 6)} lies beyond the antipode of this closed universe (comoving distance ${comoving.toPrecision(6)} Mpc, antipode ${geometry.antipode.toPrecision(6)} Mpc); choose a lower redshift or less curvature.`,
       'use',
     );
   };

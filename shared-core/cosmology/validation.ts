@@ -1,4 +1,5 @@
 import { Refusal } from '../base/refusal.ts';
+import { roundTo } from '../base/roundTo.ts';
 import { expm1, log1p } from '../numerics/elementary/elementary.ts';
 import { findRoot } from '../numerics/roots.ts';
 import { createExpansion, type Expansion } from './expansion.ts';
@@ -113,7 +114,7 @@ function descend(expansion: Expansion, low: number, high: number): number {
 /** Finds the parameter to blame: the first whose neutral value cures the fault, and how far it may go. */
 function noBigBang(parameters: CosmologyParameters, turn: number): string {
   const neutral = { omegaDe0: 0, wa: 0, w0: -1 } as const;
-  const came = `H^2 falls to 0 or nearly so at z = ${Number(turn.toPrecision(4))}, so there is no big bang`;
+  const came = `H^2 falls to 0 or nearly so at z = ${roundTo(turn, 4)}, so there is no big bang`;
   for (const name of ['omegaDe0', 'wa', 'w0'] as const) {
     const value = parameters[name];
     if (value === 'flat' || value === neutral[name]) continue;

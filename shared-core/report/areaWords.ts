@@ -1,3 +1,4 @@
+import { roundTo } from '../base/roundTo.ts';
 import type { Footprint } from '../sky/region.ts';
 
 type Area = Pick<Footprint, 'areaDeg2' | 'estimate'>;
@@ -7,8 +8,7 @@ type Area = Pick<Footprint, 'areaDeg2' | 'estimate'>;
  * @param error above or equal to 0; a value without error has seven digits
  */
 export function withError(value: number, error: number): { readonly value: string; readonly error: string } {
-  if (!(error > 0 && Number.isFinite(error)))
-    return { value: String(Number(value.toPrecision(7))), error: '0' };
+  if (!(error > 0 && Number.isFinite(error))) return { value: String(roundTo(value, 7)), error: '0' };
   const decimals = Math.max(0, 1 - Number(error.toExponential(1).split('e')[1]));
   return { value: value.toFixed(decimals), error: error.toFixed(decimals) };
 }
@@ -18,14 +18,14 @@ export function areaText({ areaDeg2, estimate }: Area): {
   readonly value: string;
   readonly error: string | null;
 } {
-  if (estimate === null) return { value: String(Number(areaDeg2.toPrecision(7))), error: null };
+  if (estimate === null) return { value: String(roundTo(areaDeg2, 7)), error: null };
   return withError(areaDeg2, estimate.areaErrorDeg2);
 }
 
 /** How an estimated area follows from its cells, with the numbers that add up to it. */
 export function estimateWords(estimate: NonNullable<Footprint['estimate']>): string {
   const { cells, cellAreaDeg2, nside, borderCells, borderAsCells } = estimate;
-  const from = `from ${cells} occupied equal-area cells of ${Number(cellAreaDeg2.toPrecision(4))} deg^2 (HEALPix Nside ${nside})`;
+  const from = `from ${cells} occupied equal-area cells of ${roundTo(cellAreaDeg2, 4)} deg^2 (HEALPix Nside ${nside})`;
   const inside = cells - borderCells;
   if (borderCells === 0) return `${from}, all counted whole`;
   const share = borderAsCells.toFixed(1);

@@ -1,3 +1,4 @@
+import { roundTo } from '../base/roundTo.ts';
 import {
   type ColumnMapping,
   type RowAccount,
@@ -11,7 +12,7 @@ import type { PublishedSet } from '../cosmology/publishedSets.ts';
 import type { Footprint } from '../sky/region.ts';
 import { areaText, estimateWords } from './areaWords.ts';
 
-const trim = (value: number, digits = 6) => String(Number(value.toPrecision(digits)));
+const trim = (value: number, digits = 6) => String(roundTo(value, digits));
 
 /** One line that lets a reader repeat the cosmology: its name and paper, or every parameter. */
 export function describeCosmology(cosmology: Cosmology, set: PublishedSet | null): string {

@@ -1,4 +1,5 @@
 import { Refusal } from '../base/refusal.ts';
+import { roundTo } from '../base/roundTo.ts';
 import type { Cosmology } from '../cosmology/cosmology.ts';
 import { type RadialAxis, radialAxis } from './radial.ts';
 import { rankBelow, type SortedSample } from './sample.ts';
@@ -117,5 +118,5 @@ function equalCountEdges(sample: SortedSample, zMin: number, zMax: number, shell
 
 // Six digits tell a reader which redshift is meant; the rest is rounding.
 function short(z: number): string {
-  return String(Number(z.toPrecision(6)));
+  return String(roundTo(z, 6));
 }

@@ -1,4 +1,5 @@
 import { Refusal } from '../base/refusal.ts';
+import { roundTo } from '../base/roundTo.ts';
 import { checkEdges, checkSomeEdges } from '../shells/edges.ts';
 import type { Study } from './schema.ts';
 
@@ -143,7 +144,7 @@ function wayIsBarred(
 
 // Five digits tell a reader which edge is meant; more of them only where two redshifts are nearly the same.
 function toldApart(a: number, b: number): readonly [string, string] {
-  const shown = (z: number, digits: number) => String(Number(z.toPrecision(digits)));
+  const shown = (z: number, digits: number) => String(roundTo(z, digits));
   let digits = 5;
   while (digits < 17 && a !== b && shown(a, digits) === shown(b, digits)) digits++;
   return [shown(a, digits), shown(b, digits)];

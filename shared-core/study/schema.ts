@@ -90,17 +90,26 @@ export type ColourMapName = (typeof COLOUR_MAP_NAMES)[number];
 export const STRETCHES = ['asinh', 'logarithmic', 'squareRoot', 'linear'] as const;
 export type Stretch = (typeof STRETCHES)[number];
 
+/** What the parts of the light may be. */
+export const LIGHT_RANGES = {
+  exposureStops: { min: -8, max: 8 },
+  glow: { min: 0, max: 1 },
+  depthCue: { min: 0, max: 1 },
+  pointSize: { min: 0.25, max: 4 },
+} as const;
+const inRange = ({ min, max }: { readonly min: number; readonly max: number }) => finite.min(min).max(max);
+
 /** How the galaxies' light is shown, on the stage and in pictures. */
 export const lightParts = {
   stretch: z.enum(STRETCHES),
   /** Stops brighter (above 0) or fainter than the data's own exposure. */
-  exposureStops: finite.min(-8).max(8),
+  exposureStops: inRange(LIGHT_RANGES.exposureStops),
   /** How far the brightest places turn toward the glow's colour. */
-  glow: finite.min(0).max(1),
+  glow: inRange(LIGHT_RANGES.glow),
   /** How much fainter the farthest galaxies are than the nearest, where the cone is seen from outside. */
-  depthCue: finite.min(0).max(1),
+  depthCue: inRange(LIGHT_RANGES.depthCue),
   /** Diameter of a galaxy over the one that suits how crowded they are. */
-  pointSize: finite.min(0.25).max(4),
+  pointSize: inRange(LIGHT_RANGES.pointSize),
 } as const;
 const light = z.strictObject(lightParts);
 export type Light = DeepReadonly<z.infer<typeof light>>;

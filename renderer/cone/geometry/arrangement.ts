@@ -1,3 +1,4 @@
+import { roundTo } from '../../../shared-core/base/roundTo.ts';
 import type { ViewName } from '../types.ts';
 import { type LateralExtent, SKY_FRAME } from './fieldFrame.ts';
 import { modelMatrix } from './projection.ts';
@@ -28,7 +29,7 @@ export function niceFactor(x: number): number {
   const lead = x / power;
   let best = 1;
   for (const nice of NICE) if (nice <= lead * (1 + 1e-9)) best = nice;
-  return +(best * power).toPrecision(3);
+  return roundTo(best * power, 3);
 }
 
 /**

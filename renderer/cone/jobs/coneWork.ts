@@ -12,6 +12,7 @@ import type {
   StoreBasis,
   ToConeWorker,
 } from './messages.ts';
+import { storeSteps } from './storeSteps.ts';
 
 /** Memory for stores made on the page, and for those made by the worker. */
 export interface ConeMemory extends StoreMemory {
@@ -125,13 +126,6 @@ export class ConeWork {
     for (const { reject } of this.waiting.values()) reject(new Error("the cone's worker ended"));
     this.waiting.clear();
   }
-}
-
-function* storeSteps(basis: StoreBasis, memory: StoreMemory): Generator<void, PointStore> {
-  const { galaxies, centres, table, colouring, shells } = basis;
-  const store = yield* PointStore.build(galaxies, centres, table, memory);
-  yield* store.colour(indexer(colouring, shells, table));
-  return store;
 }
 
 const inSharedMemory = ({ buffer }: { readonly buffer: ArrayBufferLike }): boolean =>

@@ -5,6 +5,7 @@ import { PointStore } from '../points/pointStore.ts';
 import { runSliced } from '../points/slices.ts';
 import { sharedMemory } from '../points/software/sharedMemory.ts';
 import type { ConeResults, ConeTask, FromConeWorker, ToConeWorker } from './messages.ts';
+import { storeSteps } from './storeSteps.ts';
 
 const sharedWords = (length: number) => new Uint32Array(new SharedArrayBuffer(4 * length));
 
@@ -15,9 +16,8 @@ function* steps(task: ConeTask): Generator<void, ConeResults[keyof ConeResults]>
     case 'fields':
       return prepareFields(task.footprint);
     case 'store': {
-      const { galaxies, centres, table, colouring, shells } = task.basis;
       let memory: WebAssembly.Memory | null = null;
-      const store = yield* PointStore.build(galaxies, centres, table, {
+      const store = yield* storeSteps(task.basis, {
         base: task.base,
         allocate: (layout) => {
           memory = sharedMemory(layout.end);
@@ -25,7 +25,6 @@ function* steps(task: ConeTask): Generator<void, ConeResults[keyof ConeResults]>
         },
         rows: sharedWords,
       });
-      yield* store.colour(indexer(colouring, shells, table));
       const { count, ranges, layout, rows } = store;
       return { parts: { count, ranges, layout, rows }, memory: memory! };
     }

@@ -1,4 +1,5 @@
 import { useState } from 'preact/hooks';
+import { roundTo } from '../../../shared-core/base/roundTo.ts';
 import type { CosmologyParameters } from '../../../shared-core/cosmology/parameters.ts';
 import { useApp } from '../../state/app.ts';
 import { DraftField } from '../../ui/DraftField.tsx';
@@ -61,7 +62,7 @@ export function OwnParameters(props: {
           label="flat: dark energy closes the sum"
           checked={flat}
           onChange={(on) => {
-            const omegaDe0 = on ? ('flat' as const) : Number(derived.cosmology.value.omegaDe0.toPrecision(6));
+            const omegaDe0 = on ? ('flat' as const) : roundTo(derived.cosmology.value.omegaDe0, 6);
             put('omegaDe0', { ...parameters, omegaDe0 }, on ? 'Flat' : 'Not flat');
           }}
         />

@@ -3,6 +3,7 @@ import { useApp } from '../../state/app.ts';
 import { sizeText } from '../../ui/numberText.ts';
 import { revealSection } from '../../ui/openSections.ts';
 import { usePreview } from '../columns/usePreview.ts';
+import { notAtHand } from '../notAtHand.ts';
 import { useStudyPart } from '../useStudyPart.ts';
 
 /** The study names a file that is not at hand. */
@@ -11,8 +12,8 @@ export function SourceMissing({ source }: { readonly source: Extract<StudySource
   return (
     <div class="trouble" role="status">
       <p>
-        The catalogue “{source.name}” is not at hand.{' '}
-        {source.path === null ? '' : `It was at ${source.path}. `}The study has everything but its galaxies.
+        {notAtHand({ files })} {source.path === null ? '' : `It was at ${source.path}. `}The study has
+        everything but its galaxies.
       </p>
       <button type="button" class="button" onClick={() => void files.pointAtSource()}>
         Point at it…

@@ -1,4 +1,5 @@
-const PAGE = 65536;
+/** Bytes of a page of WebAssembly memory. */
+export const PAGE_BYTES = 65536;
 /** Addresses are 32 bits wide. */
 const MOST_PAGES = 65536;
 
@@ -9,7 +10,7 @@ const MOST_PAGES = 65536;
  * @throws RangeError where there is none
  */
 export function sharedMemory(bytes: number): WebAssembly.Memory {
-  const initial = Math.ceil(bytes / PAGE);
+  const initial = Math.ceil(bytes / PAGE_BYTES);
   for (const maximum of [MOST_PAGES, MOST_PAGES / 2, MOST_PAGES / 4, initial + 8192]) {
     if (maximum < initial) continue;
     try {

@@ -3,12 +3,11 @@ import type { PointStore } from '../pointStore.ts';
 import { nextTask } from '../slices.ts';
 import type { Tone } from '../tone.ts';
 import { BARRIER_AT, MOST_WORKERS, type Run, SCRATCH_AT } from './messages.ts';
-import { sharedMemory } from './sharedMemory.ts';
+import { PAGE_BYTES, sharedMemory } from './sharedMemory.ts';
 import { sumsLength } from './splat.ts';
 import { SplatHands } from './splatHands.ts';
 import { SCRATCH_BYTES } from './wideKernel.ts';
 
-const PAGE = 65536;
 /** So many single points are one worker's work: more hands would only bring more sums to add. */
 const WORK_OF_ONE = 300_000;
 /** Slots sent at once to a worker with its own memory. */
@@ -179,7 +178,7 @@ export class SplatPool {
     const sumsAt = Array.from({ length: this.size }, (_, i) => this.layout!.end + i * bytes);
     const imageAt = this.layout.end + this.size * bytes;
     const missing = imageAt + 4 * width * height - this.memory.buffer.byteLength;
-    if (missing > 0) this.memory.grow(Math.ceil(missing / PAGE));
+    if (missing > 0) this.memory.grow(Math.ceil(missing / PAGE_BYTES));
     return { sumsAt, imageAt };
   }
 }

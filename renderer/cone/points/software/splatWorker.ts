@@ -10,11 +10,11 @@ import {
   TABLE_AT,
   type ToWorker,
 } from './messages.ts';
+import { PAGE_BYTES } from './sharedMemory.ts';
 import { softDiscs, splat, sumsLength } from './splat.ts';
 import { toneRows } from './toneRows.ts';
 import { type WideKernel, wideKernel } from './wideKernel.ts';
 
-const PAGE = 65536;
 const LONGEST_WAIT_MS = 5000;
 
 type Draw = Extract<ToWorker, { kind: 'draw' }>;
@@ -45,11 +45,11 @@ async function take(
 
 /** Room behind the points in the worker's own memory: the sums, then the picture. */
 function ownRoom(width: number, height: number): { sumsAt: number; imageAt: number } {
-  const sumsAt = Math.ceil(layout!.end / PAGE) * PAGE;
+  const sumsAt = Math.ceil(layout!.end / PAGE_BYTES) * PAGE_BYTES;
   const imageAt = sumsAt + Math.ceil((4 * sumsLength(width, height)) / 64) * 64;
   const missing = imageAt + 4 * width * height - memory!.buffer.byteLength;
   if (missing > 0) {
-    memory!.grow(Math.ceil(missing / PAGE));
+    memory!.grow(Math.ceil(missing / PAGE_BYTES));
     // Growing an unshared memory takes its old buffer away.
     points = pointViews(memory!.buffer, layout!);
   }
@@ -145,7 +145,7 @@ async function handle(message: ToWorker): Promise<void> {
       return;
     case 'own': {
       const at = pointLayout(message.slots, RESERVED_BYTES);
-      const own = new WebAssembly.Memory({ initial: Math.ceil(at.end / PAGE) });
+      const own = new WebAssembly.Memory({ initial: Math.ceil(at.end / PAGE_BYTES) });
       await take(own, false, at, SCRATCH_AT, message.wide);
       points!.radius.fill(Number.NaN);
       answer({ kind: 'done', id, wide: kernel !== null });

@@ -1,4 +1,3 @@
-import { utf8Bytes } from '../../../../shared-core/base/textCoding.ts';
 import { joined } from './filmFile.ts';
 
 /* Boxes of the ISO base media file format (ISO/IEC 14496-12): length, four letters, content. */
@@ -41,5 +40,4 @@ export function u64(...values: readonly number[]): Uint8Array {
   return out;
 }
 
-export const text8 = (text: string): Uint8Array => utf8Bytes(text);
 export const zeros = (count: number): Uint8Array => new Uint8Array(count);

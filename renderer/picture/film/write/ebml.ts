@@ -1,4 +1,3 @@
-import { utf8Bytes } from '../../../../shared-core/base/textCoding.ts';
 import { joined } from './filmFile.ts';
 
 /*
@@ -8,14 +7,14 @@ import { joined } from './filmFile.ts';
 /** An element with what it holds. @param id with its own length marker, as standards write it, such as 0x1a45dfa3 */
 export const element = (id: number, ...content: readonly Uint8Array[]): Uint8Array<ArrayBuffer> => {
   const length = content.reduce((sum, part) => sum + part.length, 0);
-  return joined([idBytes(id), sizeBytes(length), ...content]);
+  return joined([unsigned(id), sizeBytes(length), ...content]);
 };
 
 /** Length that is not known before the end (RFC 8794, section 6.2), in eight bytes. */
 const UNKNOWN_SIZE = Uint8Array.of(0x01, 0xff, 0xff, 0xff, 0xff, 0xff, 0xff, 0xff);
 
 /** The beginning of an element that ends with the file. */
-export const openElement = (id: number): Uint8Array<ArrayBuffer> => joined([idBytes(id), UNKNOWN_SIZE]);
+export const openElement = (id: number): Uint8Array<ArrayBuffer> => joined([unsigned(id), UNKNOWN_SIZE]);
 
 /** An unsigned whole number below 2^53, in as few bytes as it takes (section 7.2). */
 export function unsigned(value: number): Uint8Array<ArrayBuffer> {
@@ -30,12 +29,6 @@ export function float64(value: number): Uint8Array<ArrayBuffer> {
   const out = new Uint8Array(8);
   new DataView(out.buffer).setFloat64(0, value);
   return out;
-}
-
-export const utf8 = (text: string): Uint8Array => utf8Bytes(text);
-
-function idBytes(id: number): Uint8Array {
-  return unsigned(id);
 }
 
 /** A length as a number of variable size (section 4): as many bytes as there are zeros before the first one, and one. */

@@ -1,4 +1,5 @@
-import { box, fullBox, letters, text8, u16, u32, u64, zeros } from './boxes.ts';
+import { utf8Bytes } from '../../../../shared-core/base/textCoding.ts';
+import { box, fullBox, letters, u16, u32, u64, zeros } from './boxes.ts';
 import { type FilmFacts, studyText } from './filmFile.ts';
 
 /** Where the frames of a track lie in its file, in the order of showing. */
@@ -57,7 +58,7 @@ function track(
     box(
       'mdia',
       fullBox('mdhd', 0, 0, u32(0, 0, timescale, duration), u16(UNDETERMINED_LANGUAGE, 0)),
-      fullBox('hdlr', 0, 0, u32(0), letters('vide'), zeros(12), text8('Film\0')),
+      fullBox('hdlr', 0, 0, u32(0), letters('vide'), zeros(12), utf8Bytes('Film\0')),
       box(
         'minf',
         fullBox('vmhd', 0, 1, zeros(8)),
@@ -106,7 +107,7 @@ function sampleEntry({ widthPx, heightPx }: FilmFacts, avcC: Uint8Array): Uint8A
 /** What the film is, as the common players show it: a list of named texts in a metadata box (QuickTime File Format). */
 function userData({ metadata }: FilmFacts): Uint8Array<ArrayBuffer> {
   const utf8Text = 1;
-  const item = (name: string, text: string) => box(name, box('data', u32(utf8Text, 0), text8(text)));
+  const item = (name: string, text: string) => box(name, box('data', u32(utf8Text, 0), utf8Bytes(text)));
   const items = [
     item('©nam', metadata.title),
     item('desc', metadata.description),

@@ -1,5 +1,6 @@
+import { utf8Bytes } from '../../../../shared-core/base/textCoding.ts';
 import type { ByteSink } from '../../write/sink.ts';
-import { element, float64, openElement, unsigned, utf8 } from './ebml.ts';
+import { element, float64, openElement, unsigned } from './ebml.ts';
 import { type EncodedFrame, type FilmFacts, type FilmFile, joined, studyText } from './filmFile.ts';
 
 /** Identifiers of Matroska (RFC 9559, section 5.1), of which WebM is a part. */
@@ -112,7 +113,7 @@ const header = (): Uint8Array =>
     element(ID.ebmlReadVersion, unsigned(1)),
     element(ID.maxIdLength, unsigned(4)),
     element(ID.maxSizeLength, unsigned(8)),
-    element(ID.docType, utf8('webm')),
+    element(ID.docType, utf8Bytes('webm')),
     element(ID.docTypeVersion, unsigned(4)),
     element(ID.docTypeReadVersion, unsigned(2)),
   );
@@ -122,9 +123,9 @@ const info = ({ frames, framesPerSecond, metadata }: FilmFacts): Uint8Array =>
     ID.info,
     element(ID.timestampScale, unsigned(NS_PER_MS)),
     element(ID.duration, float64((frames * 1000) / framesPerSecond)),
-    element(ID.title, utf8(metadata.title)),
-    element(ID.muxingApp, utf8(metadata.software)),
-    element(ID.writingApp, utf8(metadata.software)),
+    element(ID.title, utf8Bytes(metadata.title)),
+    element(ID.muxingApp, utf8Bytes(metadata.software)),
+    element(ID.writingApp, utf8Bytes(metadata.software)),
   );
 
 const tracks = ({ widthPx, heightPx, framesPerSecond }: FilmFacts): Uint8Array =>
@@ -137,7 +138,7 @@ const tracks = ({ widthPx, heightPx, framesPerSecond }: FilmFacts): Uint8Array =
       element(ID.trackType, unsigned(1)),
       element(ID.flagLacing, unsigned(0)),
       element(ID.defaultDuration, unsigned(Math.round(1e9 / framesPerSecond))),
-      element(ID.codecId, utf8('V_VP9')),
+      element(ID.codecId, utf8Bytes('V_VP9')),
       element(
         ID.video,
         element(ID.pixelWidth, unsigned(widthPx)),
@@ -165,7 +166,7 @@ function tags({ metadata }: FilmFacts): Uint8Array {
   ];
   if (metadata.credit !== '') texts.push(['COPYRIGHT', metadata.credit]);
   const simple = texts.map(([name, text]) =>
-    element(ID.simpleTag, element(ID.tagName, utf8(name)), element(ID.tagString, utf8(text))),
+    element(ID.simpleTag, element(ID.tagName, utf8Bytes(name)), element(ID.tagString, utf8Bytes(text))),
   );
   return element(ID.tags, element(ID.tag, element(ID.targets), ...simple));
 }
