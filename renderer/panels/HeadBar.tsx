@@ -35,7 +35,7 @@ export function HeadBar() {
         aria-label={`Cosmology: ${set?.name ?? 'own parameters'}`}
         onClick={() => revealSection('cosmology')}
       >
-        {set?.name ?? 'Own cosmology'}
+        {set?.name ?? 'Own parameters'}
       </button>
       <Segments
         label="Unit of length"

@@ -8,12 +8,11 @@ import {
   writeFileSync,
 } from 'node:fs';
 import { join } from 'node:path';
-import { fileURLToPath } from 'node:url';
 import type { Page } from '@playwright/test';
 import { emptyStudy, writeStudy } from '../../shared-core/study/document.ts';
+import { drop, SHAPLEY } from './files.ts';
 import { accessible, expect, ready, test } from './window.ts';
 
-const SHAPLEY = fileURLToPath(new URL('../data/shapley.csv', import.meta.url));
 const ledger = (page: Page) => page.getByRole('grid', { name: 'Shell ledger' });
 
 /** Opens a file through the dialog of the Study menu. */
@@ -83,13 +82,7 @@ test('a study whose catalogue is not there asks for it and keeps everything', as
 test('a file that is no catalogue says so, and the one before comes back with undo', async ({ desk }) => {
   const page = await desk.open({ files: [SHAPLEY] });
   await expect(page.locator('.engine-line')).toHaveText(/4.212 kept/);
-  const data = await page.evaluateHandle(() => {
-    const transfer = new DataTransfer();
-    transfer.items.add(new File(['nothing of a table\njust words\n'], 'letter.txt', { type: 'text/plain' }));
-    return transfer;
-  });
-  for (const kind of ['dragenter', 'dragover', 'drop'])
-    await page.dispatchEvent('.frame', kind, { dataTransfer: data });
+  await drop(page, 'letter.txt', 'nothing of a table\njust words\n');
   await expect(page.getByText(/is a single column/).first()).toBeVisible();
   await page.keyboard.press('Control+z');
   await expect(page.locator('.engine-line')).toHaveText(/4.212 kept/);

@@ -1,14 +1,12 @@
-import { fileURLToPath } from 'node:url';
 import type { Page } from '@playwright/test';
 import { conewright } from './command.ts';
+import { SHAPLEY } from './files.ts';
 import { accessible, downloaded, expect, ready, test } from './window.ts';
 
 const edgesOf = async (page: Page): Promise<number[]> => {
   const handles = page.getByRole('slider', { name: /^Edge \d+ of/ });
   return Promise.all((await handles.all()).map(async (h) => Number(await h.getAttribute('aria-valuenow'))));
 };
-
-const SHAPLEY = fileURLToPath(new URL('../data/shapley.csv', import.meta.url));
 
 test("four shells of equal volume between two redshifts are the command's", async ({ desk }) => {
   const page = await desk.open({ files: [SHAPLEY] });

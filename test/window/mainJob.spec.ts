@@ -1,13 +1,9 @@
 import { appendFileSync, copyFileSync, existsSync, readFileSync } from 'node:fs';
 import { join } from 'node:path';
-import { fileURLToPath } from 'node:url';
 import type { Page } from '@playwright/test';
 import { conewright } from './command.ts';
+import { SHAPLEY, SHAPLEY_WINDOW } from './files.ts';
 import { accessible, downloaded, expect, ready, test } from './window.ts';
-
-const data = fileURLToPath(new URL('../data', import.meta.url));
-const SHAPLEY = join(data, 'shapley.csv');
-const WINDOW = join(data, 'shapley-window.txt');
 
 const edgesOf = async (page: Page): Promise<number[]> => {
   const handles = page.getByRole('slider', { name: /^Edge \d+ of/ });
@@ -54,7 +50,7 @@ test("a catalogue of one's own: open, region, drag an edge, undo, save, reopen, 
   // The published window, pasted.
   await page.getByRole('button', { name: /Add a shape/ }).click();
   await page.getByRole('menuitem', { name: /Polygon/ }).click();
-  await page.getByLabel(/vertices/).fill(readFileSync(WINDOW, 'utf8'));
+  await page.getByLabel(/vertices/).fill(readFileSync(SHAPLEY_WINDOW, 'utf8'));
   await page.getByRole('button', { name: 'Add', exact: true }).click();
   await expect(page.getByText(/exact area/)).toBeVisible();
 
@@ -83,7 +79,7 @@ test("a catalogue of one's own: open, region, drag an edge, undo, save, reopen, 
         'shells',
         SHAPLEY,
         '--region',
-        `polygon:${WINDOW}`,
+        `polygon:${SHAPLEY_WINDOW}`,
         '--edges',
         dragged.join(','),
         '--json',

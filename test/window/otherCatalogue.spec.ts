@@ -1,24 +1,9 @@
 import { copyFileSync, existsSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
-import { fileURLToPath } from 'node:url';
-import type { Page } from '@playwright/test';
-import { accessible, expect, legible, ready, test } from './window.ts';
+import { drop, SHAPLEY } from './files.ts';
+import { accessible, expect, ready, test } from './window.ts';
 
-const SHAPLEY = fileURLToPath(new URL('../data/shapley.csv', import.meta.url));
 const OTHER = 'ra,dec,z\n150,2,0.5\n151,3,0.6\n152,2.5,0.7\n';
-
-async function drop(page: Page, name: string, content: string): Promise<void> {
-  const data = await page.evaluateHandle(
-    ([name, content]) => {
-      const transfer = new DataTransfer();
-      transfer.items.add(new File([content!], name!));
-      return transfer;
-    },
-    [name, content],
-  );
-  for (const kind of ['dragenter', 'dragover', 'drop'])
-    await page.dispatchEvent('.frame', kind, { dataTransfer: data });
-}
 
 test('a file that is no catalogue has no columns, and the way back leads to the last one that could be read', async ({
   desk,
@@ -143,7 +128,7 @@ test('without its catalogue a study gives no numbers of galaxies, says so in one
   await bare.keyboard.press('Escape');
   await accessible(bare);
   await bare.getByRole('button', { name: 'Light theme' }).click();
-  await legible(bare);
+  await accessible(bare);
 
   const [chooser] = await Promise.all([
     bare.waitForEvent('filechooser'),

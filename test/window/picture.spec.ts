@@ -7,9 +7,8 @@ import { PICTURE_VIEWS } from '../../shared-core/picture/options.ts';
 import { emptyStudy, writeStudy } from '../../shared-core/study/document.ts';
 import { mountSmallDisk } from '../hosts/smallDisk.ts';
 import { conewright, conewrightIn } from './command.ts';
+import { SHAPLEY } from './files.ts';
 import { expect, test } from './window.ts';
-
-const SHAPLEY = fileURLToPath(new URL('../data/shapley.csv', import.meta.url));
 
 /** A study of the Shapley galaxies with its catalogue beside it; answers the study's name. */
 function shapleyStudy(folder: string): string {

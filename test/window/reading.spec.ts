@@ -1,63 +1,10 @@
-import { fileURLToPath } from 'node:url';
 import type { Page } from '@playwright/test';
+import { engineWith, shortMemory, stallingDisk } from './engineFaults.ts';
+import { csv, pick, SHAPLEY, table } from './files.ts';
 import { downloaded, expect, ready, test } from './window.ts';
 
-const SHAPLEY = fileURLToPath(new URL('../data/shapley.csv', import.meta.url));
 const line = (page: Page) => page.locator('.engine-line');
 const source = (page: Page) => page.getByRole('region', { name: /^Source/ });
-
-const csv = (name: string, text: string) => ({ name, mimeType: 'text/csv', buffer: Buffer.from(text) });
-const table = (rows: number) =>
-  `ra,dec,z\n${Array.from({ length: rows }, (_, i) => `${150 + (i % 977) / 100},${(i % 991) / 100},${(0.1 + (i % 1000) / 1000).toFixed(4)}`).join('\n')}\n`;
-
-/** Opens a file that is picked, as a browser gives it: by name and contents, without a path. */
-async function pick(page: Page, file: ReturnType<typeof csv>): Promise<void> {
-  const [chooser] = await Promise.all([
-    page.waitForEvent('filechooser'),
-    page.getByRole('button', { name: /^Open (your catalogue|another)/ }).click(),
-  ]);
-  await chooser.setFiles(file);
-}
-
-/**
- * Puts code before the engine's own, in its worker: what a disk or a memory does at its limits, made to happen every
- * time. Everything behind that code is the program's own.
- */
-async function engineWith(page: Page, code: () => void): Promise<void> {
-  await page.route(/engine\.worker/, async (route) => {
-    const response = await route.fetch();
-    await route.fulfill({ response, body: `(${code})();\n${await response.text()}` });
-  });
-}
-
-/** Of a file above 1 MB the first half comes, and then nothing more until the reading is given up. */
-function stallingDisk(): void {
-  const own = self.fetch;
-  self.fetch = async (url, options) => {
-    const whole = await (await own(url)).blob();
-    if (whole.size < 1e6) return new Response(whole);
-    const half = new Uint8Array(await whole.slice(0, whole.size / 2).arrayBuffer());
-    return new Response(
-      new ReadableStream({
-        start(controller) {
-          controller.enqueue(half);
-          options?.signal?.addEventListener('abort', () => controller.error(new Error('aborted')));
-        },
-      }),
-    );
-  };
-}
-
-/** Columns of more than 100 000 rows find no memory, with the error that a browser throws then. */
-function shortMemory(): void {
-  self.Float64Array = new Proxy(Float64Array, {
-    construct(Original, [first, ...rest], target) {
-      if (typeof first === 'number' && first > 100_000)
-        throw new RangeError('Array buffer allocation failed');
-      return Reflect.construct(Original, [first, ...rest], target === self.Float64Array ? Original : target);
-    },
-  });
-}
 
 test('reading shows how far it is and can be cancelled: what was open before is open again', async ({
   desk,

@@ -21,9 +21,9 @@ export function LedgerTable(props: {
 }) {
   const { label, columns, order, onEnter } = props;
   const app = useApp();
-  const { derived, view, engine } = app;
-  // Until the galaxies are those of the study, its numbers are of something else: shown faint.
-  const reading = !engine.fresh.value && engine.failure.value === null;
+  const { derived, view, engine, files } = app;
+  // Until the galaxies are those of the study, its numbers are of something else: shown quiet.
+  const reading = !engine.fresh.value && engine.failure.value === null && files.missingSource.value === null;
   const shells = derived.shells.value;
   const total = derived.total.value;
   const column = total === null ? shells : [...shells, total];
