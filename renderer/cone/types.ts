@@ -115,6 +115,8 @@ export interface ConeTheme {
   readonly line: string;
   readonly accent: string;
   readonly fontFamily: string;
+  /** How much larger texts, lines and rulers are than on a usual screen; 1 if not given. */
+  readonly enlarged?: number;
 }
 
 export interface GalaxyHit {

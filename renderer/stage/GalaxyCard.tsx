@@ -13,6 +13,7 @@ import type { GalaxyHit } from '../cone/types.ts';
 import type { GalaxyRow } from '../engine/protocol.ts';
 import { useApp } from '../state/app.ts';
 import { IconButton } from '../ui/IconButton.tsx';
+import { Subscripted } from '../ui/Subscripted.tsx';
 import { unitText } from '../ui/unitText.ts';
 import { type Corner, cardCorner, pairPoints } from './cardCorner.ts';
 import type { Picks } from './picking.ts';
@@ -117,7 +118,9 @@ export function GalaxyCard({
           <dd>{String(roundTo(galaxy.redshift, 8))}</dd>
           {DISTANCE_QUANTITIES.filter((q) => distances !== null && SHOWN.includes(q.key)).map((q) => (
             <>
-              <dt>{q.title}</dt>
+              <dt>
+                <Subscripted text={q.title} />
+              </dt>
               <dd>
                 {shownText(q, distances!, units)} {unitText(shownUnit(q, units))}
               </dd>

@@ -13,7 +13,7 @@ import { GalaxyCard } from './GalaxyCard.tsx';
 import { MissingCatalogue } from './MissingCatalogue.tsx';
 import { ownColouring } from './ownColouring.ts';
 import { type Picks, picksAfter, picksMoved } from './picking.ts';
-import { readTheme } from './readTheme.ts';
+import { pageEnlarged, readTheme } from './readTheme.ts';
 import { StageBar } from './StageBar.tsx';
 import { separationText } from './separationText.ts';
 
@@ -29,6 +29,7 @@ export function Stage() {
   const drawing = useSignal<DrawingState | null>(null);
   const trouble = useSignal<string | null>(null);
   const widthPx = useSignal(640);
+  const enlarged = useSignal(1);
   const hovered = useSignal<{ readonly index: number; readonly xPx: number; readonly yPx: number } | null>(
     null,
   );
@@ -62,7 +63,10 @@ export function Stage() {
     cone.value = made;
     return () => made.dispose();
   }, []);
-  useBoxSize(place, (width) => void (widthPx.value = width));
+  useBoxSize(place, (width) => {
+    widthPx.value = width;
+    enlarged.value = pageEnlarged();
+  });
 
   const window = useComputed(() =>
     shownWindow(view.redshiftWindow.value, derived.axis.value, derived.deepestRedshift.value),
@@ -148,7 +152,8 @@ export function Stage() {
     );
   });
   useSignalEffect(() => {
-    // Read again when the theme changes: the colours themselves stand in theme.css.
+    // Read again when theme or size of type change: both stand in theme.css.
+    void enlarged.value;
     const mode = view.theme.value;
     document.documentElement.dataset.theme = mode;
     cone.value?.setTheme(readTheme(mode));

@@ -180,8 +180,12 @@ export function colouring(
       return valued(redshift, 'redshift', map, ends(redshift), (v) => formatNumber(v, { decimals: 2 }));
     case 'lookback':
       if (lookbackGyr === null) return null;
-      return valued(lookbackGyr, 'lookback time, Gyr', map, ends(lookbackGyr), (v) =>
-        formatNumber(v, { decimals: 1 }),
+      return valued(
+        lookbackGyr,
+        'lookback time',
+        map,
+        ends(lookbackGyr),
+        (v) => `${formatNumber(v, { decimals: 1 })} Gyr`,
       );
     case 'magnitude':
       if (selected.magnitude === null) return null;

@@ -12,5 +12,13 @@ export function readTheme(mode: 'light' | 'dark'): ConeTheme {
     line: colour('--line-strong'),
     accent: colour('--accent'),
     fontFamily: getComputedStyle(document.body).fontFamily,
+    enlarged: pageEnlarged(),
   };
 }
+
+/** A browser's own size of type, for which the rulers of the cone are made. */
+const USUAL_TYPE_PX = 16;
+
+/** How much larger the page's type is than usual: theme.css sets it by the size of the window. */
+export const pageEnlarged = (): number =>
+  Number.parseFloat(getComputedStyle(document.documentElement).fontSize) / USUAL_TYPE_PX;

@@ -5,7 +5,7 @@ import { fitPose, lookingFrom, type Margins, viewPose } from './poses.ts';
 import type { PreparedField } from './preparedField.ts';
 import type { Pose, Viewport } from './projection.ts';
 
-const FREE_ROOM: Margins = { left: 60, right: 60, top: 44, bottom: 76 };
+const FREE_ROOM: Margins = { left: 60, right: 60, top: 58, bottom: 76 };
 const RING_ROOM: Margins = { left: 30, right: 30, top: 26, bottom: 26 };
 const SEAT_ROOM: Margins = { left: 60, right: 60, top: 30, bottom: 30 };
 

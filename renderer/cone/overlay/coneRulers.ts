@@ -1,11 +1,15 @@
 import { sidewaysText } from '../caption.ts';
 import { project } from '../geometry/projection.ts';
+import type { Vec3 } from '../geometry/vector.ts';
 import { paintAlignedRulers } from './alignedRulers.ts';
 import { onEdge } from './edgeRuler.ts';
 import { paintFreeRulers } from './freeRulers.ts';
 import { paintObserver } from './observer.ts';
 import type { Pen } from './pen.ts';
 import type { OverlayScene, PaintedLane } from './scene.ts';
+
+/** From the edge of a cone to the middle of its name. */
+const NAME_ROOM_PX = 11;
 
 /** Rulers along the edges of cones, the observer, and the names of lanes. */
 export function paintCone(pen: Pen, scene: OverlayScene): void {
@@ -31,19 +35,24 @@ function paintPlainEdges(pen: Pen, scene: OverlayScene): void {
 }
 
 function paintLaneName(pen: Pen, scene: OverlayScene, lane: PaintedLane): void {
-  const { name } = lane.shape;
+  const name = lane.shape.name === '' ? `field ${lane.field + 1}` : lane.shape.name;
   if (scene.view !== 'parallel') {
     const [x, y, z] = lane.shape.centre;
     const p = project(lane.matrix, x, y, z, 1.06);
-    if (p && name !== '') pen.text(name, p[0], p[1], pen.theme.ink);
+    if (p) pen.text(name, p[0], p[1], pen.theme.ink);
     return;
   }
   const start = project(scene.pixels, 0, lane.lift, 0);
-  const factor = lane.sidewaysFactor === 1 ? '' : sidewaysText(lane.sidewaysFactor);
-  const text = [name, factor].filter((part) => part !== '').join(' · ');
-  if (!start || text === '') return;
-  const x = Math.max(start[0], 10) + pen.measure(text) / 2 + 12;
-  for (const dy of [-20, 20, -34, 34]) {
-    if (pen.text(text, x, start[1] + dy, pen.theme.ink)) return;
-  }
+  if (!start) return;
+  const text = lane.sidewaysFactor === 1 ? name : `${name} · ${sidewaysText(lane.sidewaysFactor)}`;
+  const left = Math.max(start[0], 10) + 12;
+  const width = pen.measure(text);
+  // Clear of the edge that opens away under the text: what counts is the text's far end.
+  const beside = (edge: Vec3, outward: number): number => {
+    const end = onEdge(scene, lane, edge)(scene.farMpc) ?? start;
+    const slope = end[0] > start[0] ? (end[1] - start[1]) / (end[0] - start[0]) : 0;
+    return start[1] + slope * (left + width - start[0]) + outward * NAME_ROOM_PX;
+  };
+  for (const y of [beside(lane.shape.upper, -1), beside(lane.shape.lower, 1)])
+    if (pen.text(text, left + width / 2, y, pen.theme.ink)) return;
 }

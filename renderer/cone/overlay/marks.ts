@@ -1,6 +1,25 @@
 import type { Pen, Point } from './pen.ts';
 import type { Marks } from './scene.ts';
 
+/** Room around a galaxy's ring. */
+const RING_ROOM_PX = 11;
+
+/** Keeps later labels off the galaxies pointed out, and off the line between two. */
+export function keepClearOfMarks(pen: Pen, { hovered, picked }: Marks): void {
+  const [a, b] = picked;
+  const between = a && b ? [0.2, 0.4, 0.6, 0.8].map((t): Point => mixed(a, b, t)) : [];
+  for (const p of [hovered, ...picked, ...between])
+    if (p)
+      pen.labels.reserve({
+        x: p[0] - RING_ROOM_PX,
+        y: p[1] - RING_ROOM_PX,
+        width: 2 * RING_ROOM_PX,
+        height: 2 * RING_ROOM_PX,
+      });
+}
+
+const mixed = (a: Point, b: Point, t: number): Point => [a[0] + t * (b[0] - a[0]), a[1] + t * (b[1] - a[1])];
+
 /** Rings around the galaxies pointed out, and the line between a picked pair with its text. */
 export function paintMarks(pen: Pen, { hovered, picked, pairText }: Marks): void {
   const [a, b] = picked;

@@ -1,7 +1,8 @@
 import { comovingRulerY, PINNED_TOP_PX, upperIsPinned } from './alignedRulers.ts';
 import { compassOf } from './compass.ts';
 import { paintCone } from './coneRulers.ts';
-import { paintMarks } from './marks.ts';
+import { inLargerPixels } from './enlarged.ts';
+import { keepClearOfMarks, paintMarks } from './marks.ts';
 import type { Pen } from './pen.ts';
 import { paintRings } from './ringRulers.ts';
 import { drawScaleBar } from './scaleBar.ts';
@@ -10,6 +11,18 @@ import { paintShellLabels, paintShells } from './shellPaint.ts';
 
 /** Paints lines, rulers, labels and marks over points and solids. */
 export function paintOverlay(pen: Pen, scene: OverlayScene): void {
+  const { enlarged = 1 } = pen.theme;
+  if (enlarged === 1) {
+    paint(pen, scene);
+    return;
+  }
+  pen.context.save();
+  pen.context.scale(enlarged, enlarged);
+  paint(...inLargerPixels(pen, scene, enlarged));
+  pen.context.restore();
+}
+
+function paint(pen: Pen, scene: OverlayScene): void {
   paintShells(pen, scene);
   const top = 20 + (upperIsPinned(pen, scene) ? PINNED_TOP_PX + 4 : 0);
   for (const [i, line] of scene.caption.entries()) {
@@ -21,6 +34,7 @@ export function paintOverlay(pen: Pen, scene: OverlayScene): void {
   paintScaleBar(pen, scene);
   if (rings || scene.lanes.length === 0) paintRings(pen, scene);
   else paintCone(pen, scene);
+  keepClearOfMarks(pen, scene.marks);
   paintShellLabels(pen, scene);
   if (scene.view === 'downTheCone') compassOf(pen);
   paintMarks(pen, scene.marks);
@@ -33,7 +47,8 @@ function paintScaleBar(pen: Pen, scene: OverlayScene): void {
   if (scene.aligned) {
     // Clear of the comoving ruler: at the bottom where there is room below it, else above it.
     const ruler = comovingRulerY(pen, scene);
-    if (pen.height - ruler < 66) y = ruler - (ruler > pen.height - 40 ? 44 : 34);
+    const room = pen.height - ruler;
+    if (room < 66) y = room >= 56 ? pen.height - 12 : ruler - (room < 40 ? 44 : 34);
   }
   drawScaleBar(pen, y, mpcPerPixel, scene.scale.lengthUnitMpc, (mpc) => scene.scale.formatLength(mpc));
 }

@@ -95,7 +95,7 @@ function drawTitle(
     const halfY = (Math.abs(along[1]) * width) / 2 + Math.abs(along[0]) * 7;
     const boxes = slices(x, y, along, width, sizePx);
     const inStage = x - halfX > 4 && x + halfX < pen.width - 4 && y - halfY > 4 && y + halfY < pen.height - 4;
-    if (!inStage || !boxes.every((box) => pen.labels.isFree(box, ruler.inline ? 6 : -2))) continue;
+    if (!inStage || !boxes.every((box) => pen.labels.isFree(box, out === NUMBER_OUT_PX ? 6 : -2))) continue;
     for (const box of boxes) pen.labels.reserve(box);
     const { context } = pen;
     let angle = Math.atan2(along[1], along[0]);

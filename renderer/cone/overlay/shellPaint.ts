@@ -87,6 +87,9 @@ export function paintShells(pen: Pen, scene: OverlayScene): void {
   }
 }
 
+/** Heights for a shell's name over the cone's upper edge: above its ruler where there is room, else over its galaxies. */
+const LABEL_PLACES_PX = [-54, -70, -36, -88, 20, 38, 60, 90];
+
 /** Names of the chosen and the hovered shell, above the first lane. */
 export function paintShellLabels(pen: Pen, scene: OverlayScene): void {
   const { shells, selected, hovered } = scene.shells;
@@ -101,7 +104,7 @@ export function paintShellLabels(pen: Pen, scene: OverlayScene): void {
     if (!p) continue;
     const text = shell.longLabel ?? shell.label;
     const colour = cssColour(scene.shellColours[index]!);
-    for (const dy of [-54, -70, -36, 20, 38, 60, 90]) {
+    for (const dy of LABEL_PLACES_PX) {
       if (pen.text(text, p[0], p[1] + dy, colour, { sizePx: 12.5, weight: 600 })) break;
     }
   }

@@ -36,7 +36,7 @@ export function StudyMenu() {
             ]),
         {
           kind: 'group',
-          label: 'Save',
+          label: 'This study',
           entries: [
             item('Save', shortcut('S'), () => files.save()),
             item('Save as…', shortcut('S', true), () => files.saveAs()),
