@@ -3,7 +3,7 @@ import type { PreparedField } from './preparedField.ts';
 import type { Viewport } from './projection.ts';
 
 /** Room for rulers above and below a cone seen side-on. */
-const SIDE_ROOM = { top: 46, bottom: 100 };
+const SIDE_ROOM = { top: 46, bottom: 104 };
 /** A lane's cone leaves a part of the lane free. */
 const LANE_SHARE = 0.86;
 

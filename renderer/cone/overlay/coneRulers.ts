@@ -5,11 +5,12 @@ import { paintAlignedRulers } from './alignedRulers.ts';
 import { onEdge } from './edgeRuler.ts';
 import { paintFreeRulers } from './freeRulers.ts';
 import { paintObserver } from './observer.ts';
-import type { Pen } from './pen.ts';
+import type { Pen, Point } from './pen.ts';
 import type { OverlayScene, PaintedLane } from './scene.ts';
 
 /** From the edge of a cone to the middle of its name. */
 const NAME_ROOM_PX = 11;
+const NAME_GAP_PX = 4;
 
 /** Rulers along the edges of cones, the observer, and the names of lanes. */
 export function paintCone(pen: Pen, scene: OverlayScene): void {
@@ -37,8 +38,7 @@ function paintPlainEdges(pen: Pen, scene: OverlayScene): void {
 function paintLaneName(pen: Pen, scene: OverlayScene, lane: PaintedLane): void {
   const name = lane.shape.name === '' ? `field ${lane.field + 1}` : lane.shape.name;
   if (scene.view !== 'parallel') {
-    const [x, y, z] = lane.shape.centre;
-    const p = project(lane.matrix, x, y, z, 1.06);
+    const p = behindEnd(pen, lane, name);
     if (p) pen.text(name, p[0], p[1], pen.theme.ink);
     return;
   }
@@ -55,4 +55,18 @@ function paintLaneName(pen: Pen, scene: OverlayScene, lane: PaintedLane): void {
   };
   for (const y of [beside(lane.shape.upper, -1), beside(lane.shape.lower, 1)])
     if (pen.text(text, left + width / 2, y, pen.theme.ink)) return;
+}
+
+/** Where a cone's name stands clear behind its far end, seen from the observer. */
+function behindEnd(pen: Pen, lane: PaintedLane, name: string): Point | null {
+  const [x, y, z] = lane.shape.centre;
+  const apex = project(lane.matrix, 0, 0, 0);
+  const end = project(lane.matrix, x, y, z, 1.04);
+  if (!apex || !end) return null;
+  const [dx, dy] = [end[0] - apex[0], end[1] - apex[1]];
+  const length = Math.hypot(dx, dy);
+  if (!(length > 0)) return end;
+  const room = (Math.abs(dx) * pen.measure(name)) / 2 + Math.abs(dy) * NAME_ROOM_PX;
+  const share = 1 + (room / length + NAME_GAP_PX) / length;
+  return [apex[0] + share * dx, apex[1] + share * dy];
 }
