@@ -92,7 +92,15 @@ function closeLook(frame: SkyFrame, box: MapBox, fontPx: number): Graticule {
       continue;
     }
     if (y < box.top + fontPx * 0.3 || y > box.bottom - fontPx * 0.3) continue;
-    labels.push({ text: decText(dec), x: box.left - 4, y: y + fontPx * 0.35, anchor: 'end' });
+    const text = decText(dec);
+    // What is too long for the room at the left stands inside.
+    const fits = text.length * 0.6 * fontPx < box.left - 4;
+    labels.push({
+      text,
+      x: fits ? box.left - 4 : box.left + 4,
+      y: y + fontPx * 0.35,
+      anchor: fits ? 'end' : 'start',
+    });
   }
   for (let i = Math.ceil(raMin / raStep); i * raStep <= raMax && i * raStep < raMin + 360; i++) {
     const ra = clean(i * raStep);

@@ -191,12 +191,14 @@ export function Stage() {
       <MissingCatalogue />
       {footprint.value === null &&
       files.missingSource.value === null &&
-      engine.selected.value === null &&
+      derived.sample.value.count === 0 &&
       engine.progress.value === null ? (
         <p class="stage-empty">
           {studyState.study.value.source === null
             ? 'Open a catalogue, or drop a file here, and its cone is drawn.'
-            : 'The cone is drawn once the catalogue can be read: see Source.'}
+            : engine.selected.value === null
+              ? 'The cone is drawn once the catalogue can be read: see Source.'
+              : 'There is no galaxy to draw: see Source.'}
         </p>
       ) : null}
     </div>

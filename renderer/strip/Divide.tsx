@@ -7,6 +7,7 @@ import {
   DIVIDING_SCHEMES,
   type DividingScheme,
   divideShells,
+  fieldRedshift,
   rangeInNumbers,
   rangeToDivide,
   shortRedshift,
@@ -68,8 +69,8 @@ export function Divide({ model }: { readonly model: StripModel }) {
       autocomplete="off"
       spellcheck={false}
       aria-label={label}
-      title={`${label}; empty for where they ${which === 'from' ? 'begin' : 'end'} now`}
-      placeholder={ends[which] === null ? '' : shortRedshift(ends[which])}
+      title={`${label}; empty for where they ${which === 'from' ? 'begin' : 'end'} now${ends[which] === null ? '' : `: ${shortRedshift(ends[which])}`}`}
+      placeholder={ends[which] === null ? '' : fieldRedshift(ends[which])}
       value={view.typedRange.value[which]}
       {...described}
       onInput={(event) => {

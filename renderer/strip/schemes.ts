@@ -83,9 +83,14 @@ export function typedRange(
   return range;
 }
 
-/** A redshift in a few digits, for a field that has little room. */
+/** A redshift in a few digits, for a sentence. */
 export function shortRedshift(z: number): string {
   return String(roundTo(z, 4));
+}
+
+/** A redshift in six characters, for a field that has little room. */
+export function fieldRedshift(z: number): string {
+  return z !== 0 && Math.abs(z) < 0.001 ? z.toExponential(1) : String(Number(z.toPrecision(3)));
 }
 
 /** Puts n shells of a scheme in place of the present ones. The edit throws a Refusal where the scheme cannot be. */

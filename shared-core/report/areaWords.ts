@@ -25,7 +25,7 @@ export function areaText({ areaDeg2, estimate }: Area): {
 /** How an estimated area follows from its cells, with the numbers that add up to it. */
 export function estimateWords(estimate: NonNullable<Footprint['estimate']>): string {
   const { cells, cellAreaDeg2, nside, borderCells, borderAsCells } = estimate;
-  const from = `from ${cells} occupied equal-area cells of ${roundTo(cellAreaDeg2, 4)} deg^2 (HEALPix Nside ${nside})`;
+  const from = `from ${cells} occupied equal-area ${cells === 1 ? 'cell' : 'cells'} of ${roundTo(cellAreaDeg2, 4)} deg^2 (HEALPix Nside ${nside})`;
   const inside = cells - borderCells;
   if (borderCells === 0) return `${from}, all counted whole`;
   const share = borderAsCells.toFixed(1);

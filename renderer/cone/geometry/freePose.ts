@@ -44,7 +44,12 @@ export function cornersOf(lanes: readonly Lane[], fields: readonly PreparedField
     }
   }
   if (out.length === 3) {
-    for (let i = 0; i < 36; i++) out.push(Math.cos((i * Math.PI) / 18), Math.sin((i * Math.PI) / 18), 0);
+    // All of a sphere: in perspective its outline is none of its great circles.
+    for (let lat = -80; lat <= 80; lat += 10) {
+      const [across, up] = [Math.cos((lat * Math.PI) / 180), Math.sin((lat * Math.PI) / 180)];
+      for (let lon = 0; lon < 360; lon += 10)
+        out.push(across * Math.cos((lon * Math.PI) / 180), across * Math.sin((lon * Math.PI) / 180), up);
+    }
   }
   return Float64Array.from(out);
 }

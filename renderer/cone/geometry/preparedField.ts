@@ -65,8 +65,9 @@ export function prepareField(field: FieldInput): PreparedField {
   const frame = fieldFrame(look.raDeg, look.decDeg, look.positionAngleDeg);
   const [low, high] = angles(frame, all);
   const inPlane = (angle: number): Vec3 => outOfFrame(frame, [Math.cos(angle), Math.sin(angle), 0]);
-  // Before points are left out: a small circle of few points would have a corner at each.
-  const corners = outline.flatMap(cornersOf);
+  // Before points are left out: a small circle of few points would have a corner at each. The corners of an estimate
+  // are those of its cells, which the smoothed outline cuts off.
+  const corners = field.toleranceDeg === undefined ? outline.flatMap(cornersOf) : [];
   const surrounds =
     rings.length === 0 || all.some((_, i) => i % 3 === 0 && facing(frame, all, i) < SIDEWAYS_COSINE);
   const cap = triangulateRings(rings, field.radiusDeg < 40 ? FINE_DEG : COARSE_DEG);

@@ -48,7 +48,7 @@ function paintScaleBar(pen: Pen, scene: OverlayScene): void {
     // Clear of the comoving ruler: at the bottom where there is room below it, else above it.
     const ruler = comovingRulerY(pen, scene);
     const room = pen.height - ruler;
-    if (room < 66) y = room >= 56 ? pen.height - 13 : ruler - (room < 40 ? 44 : 34);
+    if (room < 72) y = room >= 61 ? pen.height - 13 : ruler - (room < 40 ? 44 : 34);
   }
   drawScaleBar(pen, y, mpcPerPixel, scene.scale.lengthUnitMpc, (mpc) => scene.scale.formatLength(mpc));
 }

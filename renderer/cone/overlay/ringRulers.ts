@@ -45,14 +45,15 @@ export function paintRings(pen: Pen, scene: OverlayScene): void {
     drawRuler(pen, { title: '', ticks, at, fromMpc: 0, toMpc: scene.farMpc, awayFrom });
     const half = pen.measure(titles[which], 11) / 2;
     const away = half * Math.abs(c) + 14;
-    pen.text(
-      titles[which],
-      end[0] + c * away + (c > 0.1 && c < 0.9 ? half * 0.5 : 0),
-      end[1] - s * 14,
-      pen.theme.inkMuted,
-      {
-        sizePx: 11,
-      },
-    );
+    const x = end[0] + c * away + (c > 0.1 && c < 0.9 ? half * 0.5 : 0);
+    const y = end[1] - s * 14;
+    const inside = Math.min(pen.width - half - 6, Math.max(half + 6, x));
+    // Behind the end of its spoke, or where the stage is too narrow for that, below its numbers or above it.
+    for (const [px, py] of [
+      [x, y],
+      [inside, y + 36],
+      [inside, y - 20],
+    ] as const)
+      if (pen.text(titles[which], px, py, pen.theme.inkMuted, { sizePx: 11 })) break;
   }
 }

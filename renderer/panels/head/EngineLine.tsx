@@ -16,7 +16,8 @@ export function EngineLine() {
   const { engine, files } = app;
   const progress = engine.progress.value;
   const account = engine.selected.value?.account ?? engine.loaded.value?.account ?? null;
-  if (progress !== null) {
+  // A file that was found missing in the midst of it is not being read any more.
+  if (progress !== null && files.missingSource.value === null) {
     const { stage, fraction } = progress;
     const percent = fraction === null ? null : Math.floor(100 * fraction);
     return (

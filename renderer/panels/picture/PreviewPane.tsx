@@ -35,7 +35,7 @@ export function PreviewPane(props: {
     <div class="bench-left">
       <div class="bench-pane" ref={pane} data-drawing={shown.drawing}>
         {shown.url === null ? (
-          <p class="quiet">{waiting ?? 'Drawing…'}</p>
+          <p class="quiet">{waiting ?? (shown.trouble === null ? 'Drawing…' : 'Nothing to show')}</p>
         ) : (
           <img src={shown.url} alt={description} data-ground={ground} />
         )}
