@@ -108,7 +108,7 @@ export class ConeLayers {
     look: LayerLook,
     galaxies: Galaxies,
   ): void {
-    if (!look.scale) return;
+    if (!look.scale || !model.ready) return;
     paintOverlay(new Pen(context, look.theme, this.stage.widthPx, this.stage.heightPx), {
       view: model.view,
       reading: model.reading,

@@ -28,6 +28,8 @@ const ORBIT_RADIANS_PER_PIXEL = 0.0075;
 /** What is looked at and from where: everything about the picture but the drawing. Times in milliseconds. */
 export class ConeModel {
   fields: readonly PreparedField[] = [];
+  /** The first region has come, or it is known that there is none: until then there is nothing to show. */
+  ready = false;
   wide = false;
   estimated = false;
   view: ViewName = 'sideOn';
@@ -70,6 +72,7 @@ export class ConeModel {
   /** @param fields made of the footprint by `prepareFields` */
   setFields(fields: readonly PreparedField[], input: FootprintInput): void {
     this.fields = fields;
+    this.ready = true;
     this.wide = input.wide;
     this.estimated = input.estimated ?? false;
     this.chosenFactors.clear();

@@ -159,8 +159,8 @@ export function Stage() {
     cone.value?.setTheme(readTheme(mode));
   });
   useSignalEffect(() => {
-    void view.cameraAsked.value;
-    cone.value?.setView(VIEW_NAMES[view.cameraView.value]);
+    // Until somebody asks, each region has the view that fits it.
+    if (view.cameraAsked.value > 0) cone.value?.setView(VIEW_NAMES[view.cameraView.value]);
   });
   useSignalEffect(() => cone.value?.setField(view.field.value));
   useSignalEffect(() => cone.value?.setSidewaysFactor(sideways.value));

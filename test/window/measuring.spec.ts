@@ -5,6 +5,9 @@ test('from one galaxy to another: a button, the next click, and a card that cove
 }) => {
   const page = await desk.open();
   await ready(page);
+  // One field alone, as large as it fits.
+  await page.keyboard.press('1');
+  await page.waitForTimeout(600);
   const stage = (await page.locator('.stage-cone').boundingBox())!;
   const card = page.getByRole('region', { name: 'Galaxy pointed at' });
   const at = (x: number, y: number) => [stage.x + x * stage.width, stage.y + y * stage.height] as const;
