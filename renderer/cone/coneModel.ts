@@ -76,7 +76,8 @@ export class ConeModel {
     this.wide = input.wide;
     this.estimated = input.estimated ?? false;
     this.chosenFactors.clear();
-    this.current = 0;
+    // The field looked at stays in view while its region is worked on.
+    this.current %= Math.max(1, fields.length);
     this.panUp = 0;
     this.view = fittingView(this.fields.length, this.wide);
     this.exact = true;
@@ -121,7 +122,9 @@ export class ConeModel {
   setCurrent(field: number): void {
     const n = this.fields.length;
     if (n === 0) return;
-    this.current = ((field % n) + n) % n;
+    const next = ((field % n) + n) % n;
+    if (next === this.current) return;
+    this.current = next;
     if (this.view === 'parallel') this.view = 'sideOn';
     this.panUp = 0;
     this.exact = true;

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { ConeModel } from '../../../renderer/cone/coneModel.ts';
 import {
   fittingView,
   laneHeights,
@@ -309,6 +310,22 @@ describe('a prepared field', () => {
     const belt = field([capRing(0, 90, 70, true), capRing(0, -90, 70, true)], 180);
     expect(belt.surrounds).toBe(true);
     expect(field([], 180).surrounds).toBe(true);
+  });
+
+  it('stays looked at while its region is worked on; to look at it again changes no view', () => {
+    const model = new ConeModel();
+    const three = [20, 40, 60].map((ra) => field([capRing(ra, 30, 5)], 5, ra, 30));
+    model.setFields(three, { fields: [], wide: false });
+    model.setCurrent(0);
+    expect(model.view).toBe('parallel');
+    model.setCurrent(-1);
+    expect([model.view, model.current]).toEqual(['sideOn', 2]);
+    model.setFields([...three], { fields: [], wide: false });
+    expect([model.view, model.current]).toEqual(['parallel', 2]);
+    model.setFields(three.slice(0, 2), { fields: [], wide: false });
+    expect(model.current).toBe(0);
+    model.setFields([], { fields: [], wide: true });
+    expect([model.view, model.current]).toEqual(['aroundTheObserver', 0]);
   });
 
   it('keeps north where it is on the sky', () => {
