@@ -149,7 +149,9 @@ export class ConeView {
   }
 
   setTheme(theme: ConeTheme): void {
+    const before = this.look.theme.enlarged;
     this.look.setTheme(theme);
+    if (theme.enlarged !== before) this.resized();
     this.loop.invalidate();
   }
 
@@ -251,7 +253,8 @@ export class ConeView {
   }
 
   private resized(): void {
-    this.model.setViewport({ widthPx: this.stage.widthPx, heightPx: this.stage.heightPx });
+    const { widthPx, heightPx } = this.stage;
+    this.model.setViewport({ widthPx, heightPx, enlarged: this.look.theme.enlarged ?? 1 });
     this.loop.invalidate();
   }
 

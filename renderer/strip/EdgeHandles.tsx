@@ -146,7 +146,7 @@ export function EdgeHandles({ model, rows }: { readonly model: StripModel; reado
             <line class="strip-edge-line" x1={x} x2={x} y1={plotTop - 3} y2={plotBottom + 2} />
             <path
               class="strip-edge-grip"
-              d={gripPath(x, plotBottom, Math.min(4.5, Math.max(1.5, Math.min(from, to) - 0.75)))}
+              d={gripPath(x, plotBottom, railBottom - 1, Math.max(1.5, Math.min(from, to) - 0.75))}
             />
           </g>
         );
@@ -168,9 +168,13 @@ export function edgeName(index: number, edges: number): string {
   return `Edge ${index + 1} of ${edges}, ${between}`;
 }
 
+/** Half of a grip's width over its height. */
+const GRIP_SHAPE = 4.5 / 13;
+
 // A small house: its tip points at the edge, its body is taken hold of.
-function gripPath(x: number, top: number, half: number): string {
-  return `M${x} ${top}l${half} ${half}V${top + 13}h${-2 * half}V${top + half}z`;
+function gripPath(x: number, top: number, bottom: number, mostHalf: number): string {
+  const half = Math.min(mostHalf, (bottom - top) * GRIP_SHAPE);
+  return `M${x} ${top}l${half} ${half}V${bottom}h${-2 * half}V${top + half}z`;
 }
 
 function pointerPx(event: PointerEvent, target: SVGGElement): number {

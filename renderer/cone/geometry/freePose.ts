@@ -26,7 +26,14 @@ export function freePose(
   if (view === 'downTheCone') start = { ...start, axes: skyAxes(fields[current]) };
   const rings = fields.every((field) => field.surrounds);
   const room = view === 'downTheCone' ? SEAT_ROOM : rings ? RING_ROOM : FREE_ROOM;
-  return fitPose(start, corners, viewport, room);
+  const { enlarged = 1 } = viewport;
+  const { left, right, top, bottom } = room;
+  return fitPose(start, corners, viewport, {
+    left: left * enlarged,
+    right: right * enlarged,
+    top: top * enlarged,
+    bottom: bottom * enlarged,
+  });
 }
 
 /** Points that a view must hold: observer and outlines at the far end, in display space. */

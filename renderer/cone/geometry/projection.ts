@@ -17,6 +17,8 @@ export interface Pose {
 export interface Viewport {
   readonly widthPx: number;
   readonly heightPx: number;
+  /** How much larger rulers are, and the room that they need; 1 if not given. */
+  readonly enlarged?: number;
 }
 
 /**

@@ -33,7 +33,8 @@ export function laneHeightsOf(side: SideOn): number[] {
 
 /** Display height at the middle of the stage for cones at rest in their room between the rulers. */
 export function restingHeight(side: SideOn, current: number, unitsPerPixel: number): number {
-  const shift = ((SIDE_ROOM.bottom - SIDE_ROOM.top) / 2) * unitsPerPixel;
+  const { enlarged = 1 } = side.viewport;
+  const shift = ((SIDE_ROOM.bottom - SIDE_ROOM.top) / 2) * enlarged * unitsPerPixel;
   const field = side.fields[current];
   if (side.parallel || !field) return -shift;
   const factor = sidewaysFactors(side)[current]!;
@@ -46,7 +47,8 @@ function fullScale({ viewport, insets }: SideOn): number {
 }
 
 function roomPx({ viewport }: SideOn): number {
-  return Math.max(60, viewport.heightPx - SIDE_ROOM.top - SIDE_ROOM.bottom);
+  const { heightPx, enlarged = 1 } = viewport;
+  return Math.max(60, heightPx - (SIDE_ROOM.top + SIDE_ROOM.bottom) * enlarged);
 }
 
 /** Heights of the cones at true scale. */
