@@ -4,9 +4,14 @@ import type { Marks } from './scene.ts';
 /** Room around a galaxy's ring. */
 const RING_ROOM_PX = 11;
 
-/** Keeps later labels off the galaxies pointed out, and off the line between two. */
-export function keepClearOfMarks(pen: Pen, { hovered, picked }: Marks): void {
+/** Keeps later labels off the galaxies pointed out, and off the line between two and its text. */
+export function keepClearOfMarks(pen: Pen, { hovered, picked, pairText }: Marks): void {
   const [a, b] = picked;
+  if (a && b && pairText !== '') {
+    const [x, y] = pairTextPlace(pen, a, b, pairText);
+    const width = pen.measure(pairText, PAIR_SIZE_PX, PAIR_WEIGHT);
+    pen.labels.reserve({ x: x - width / 2, y: y - 8, width, height: 16 });
+  }
   const between = a && b ? [0.2, 0.4, 0.6, 0.8].map((t): Point => mixed(a, b, t)) : [];
   for (const p of [hovered, ...picked, ...between])
     if (p)
@@ -26,7 +31,12 @@ export function paintMarks(pen: Pen, { hovered, picked, pairText }: Marks): void
   if (a && b) {
     pen.line([a, b], pen.theme.background, 4);
     pen.line([a, b], pen.theme.accent, 1.5);
-    if (pairText !== '') paintPairText(pen, a, b, pairText);
+    if (pairText !== '')
+      pen.text(pairText, ...pairTextPlace(pen, a, b, pairText), pen.theme.ink, {
+        sizePx: PAIR_SIZE_PX,
+        weight: PAIR_WEIGHT,
+        must: true,
+      });
   }
   for (const p of picked) {
     if (!p) continue;
@@ -39,19 +49,14 @@ export function paintMarks(pen: Pen, { hovered, picked, pairText }: Marks): void
   }
 }
 
+const PAIR_SIZE_PX = 12;
+const PAIR_WEIGHT = 600;
+
 /** Above a flat line, beside a steep one; on the stage whatever the line does. */
-function paintPairText(pen: Pen, a: Point, b: Point, text: string): void {
-  const half = pen.measure(text, 12, 600) / 2 + 8;
+function pairTextPlace(pen: Pen, a: Point, b: Point, text: string): Point {
+  const half = pen.measure(text, PAIR_SIZE_PX, PAIR_WEIGHT) / 2 + 8;
   const flat = Math.abs(b[0] - a[0]) > Math.abs(b[1] - a[1]);
-  const middleX = (a[0] + b[0]) / 2;
-  const middleY = (a[1] + b[1]) / 2;
-  const x = flat ? middleX : middleX + half + 10;
-  const y = flat ? Math.min(a[1], b[1]) - 20 : middleY;
-  pen.text(
-    text,
-    Math.min(pen.width - half, Math.max(half, x)),
-    Math.min(pen.height - 14, Math.max(14, y)),
-    pen.theme.ink,
-    { sizePx: 12, weight: 600, must: true },
-  );
+  const x = (a[0] + b[0]) / 2 + (flat ? 0 : half + 10);
+  const y = flat ? Math.min(a[1], b[1]) - 20 : (a[1] + b[1]) / 2;
+  return [Math.min(pen.width - half, Math.max(half, x)), Math.min(pen.height - 14, Math.max(14, y))];
 }

@@ -1,6 +1,7 @@
 import type { DrawnFormat } from '../../../shared-core/picture/job.ts';
 import { memoryText } from '../../../shared-core/picture/memory.ts';
 import type { PictureOptions } from '../../../shared-core/picture/options.ts';
+import { shellRanges } from '../../../shared-core/report/shellRange.ts';
 import type { ShellStatistics } from '../../../shared-core/shells/shell.ts';
 
 /** Labels have three lines of some thirty letters each. */
@@ -15,10 +16,12 @@ export function pictureRemarks(options: PictureOptions, shells: readonly ShellSt
       );
   }
   if (options.shells) {
-    const empty = shells.filter((shell) => shell.count === 0);
-    if (empty.length > 0)
+    const ranges = shellRanges(shells);
+    const empty = ranges.filter((_, i) => shells[i]!.count === 0);
+    // A plan has no galaxies, and nobody needs to be told.
+    if (empty.length > 0 && empty.length < shells.length)
       out.push(
-        `${empty.length === 1 ? 'The shell' : 'The shells'} ${empty.map((s) => `${s.zMin}–${s.zMax}`).join(', ')} ${empty.length === 1 ? 'holds' : 'hold'} no galaxies and ${empty.length === 1 ? 'is' : 'are'} drawn empty.`,
+        `${empty.length === 1 ? 'The shell' : 'The shells'} ${empty.join(', ')} ${empty.length === 1 ? 'holds' : 'hold'} no galaxies and ${empty.length === 1 ? 'is' : 'are'} drawn empty.`,
       );
   }
   return out;

@@ -109,7 +109,9 @@ describe('remarks', () => {
     const some = [{ ...shells[0]!, count: 0 }, shells[1]!];
     const remarks = pictureRemarks(options, some);
     expect(remarks[0]).toMatch(/has 500 letters/);
-    expect(remarks[1]).toContain(`${shells[0]!.zMin}–${shells[0]!.zMax} holds no galaxies`);
+    expect(remarks[1]).toContain(`${shells[0]!.zMin} ≤ z < ${shells[0]!.zMax} holds no galaxies`);
+    // A plan has none anywhere, which is no news.
+    expect(pictureRemarks(small({}), [{ ...shells[0]!, count: 0 }])).toEqual([]);
     expect(pictureRemarks(small({ shells: false }), some)).toEqual([]);
   });
 
