@@ -76,6 +76,8 @@ export const test = base.extend<{ desk: Desk }, { chrome: Browser }>({
           acceptDownloads: true,
         });
         const page = await context.newPage();
+        // From the first listener on choosers are caught, which takes a busy browser a while: not while one is awaited.
+        page.on('filechooser', () => undefined);
         page.on('pageerror', (error) => complaints.push(String(error)));
         page.on('console', (message) => {
           if (message.type() === 'error') complaints.push(message.text());
