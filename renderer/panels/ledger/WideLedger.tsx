@@ -34,6 +34,8 @@ export function WideLedger(props: {
       style.width = `${width}px`;
       style.height = `${height}px`;
     };
+    // In the top layer: the panel that it belongs to is laid out by itself, and would hold and clip it.
+    ref.current?.showPopover();
     cover();
     const watch = new ResizeObserver(cover);
     watch.observe(stage);
@@ -49,6 +51,7 @@ export function WideLedger(props: {
       ref={ref}
       class="wide-ledger"
       role="dialog"
+      popover="manual"
       tabIndex={-1}
       aria-labelledby="wide-ledger-title"
       onKeyDown={(e) => {

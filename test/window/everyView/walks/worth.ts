@@ -1,5 +1,5 @@
-import { ready } from '../../window.ts';
-import { clickButton, press, pressEscape } from '../acts.ts';
+import { expect, ready } from '../../window.ts';
+import { press, pressEscape } from '../acts.ts';
 import type { Walk } from '../view.ts';
 
 /** Ledger, whole ledger and sheet of the demo. */
@@ -46,7 +46,12 @@ export const worth: Walk = {
     {
       name: 'whole ledger',
       within: '.wide-ledger',
-      reach: clickButton('Whole ledger'),
+      async reach(page) {
+        await page.getByRole('button', { name: 'Whole ledger', exact: true }).click();
+        // It lies over the cone, and nothing of it is cut off.
+        const [ledger, stage] = [page.locator('.wide-ledger'), page.locator('.stage')];
+        expect(await ledger.boundingBox()).toEqual(await stage.boundingBox());
+      },
       shows: (page) => page.locator('.wide-ledger'),
       leave: pressEscape,
     },
