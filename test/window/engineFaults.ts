@@ -39,3 +39,19 @@ export function shortMemory(): void {
     },
   });
 }
+
+/** What is asked about regions waits for a word on the channel "regions"; "asked" is said there of each. */
+export function regionsWait(): void {
+  const channel = new BroadcastChannel('regions');
+  const waiting: unknown[] = [];
+  self.addEventListener('message', (event) => {
+    const { data, isTrusted } = event;
+    if (!isTrusted || data.kind !== 'checkRegions') return;
+    event.stopImmediatePropagation();
+    waiting.push(data);
+    channel.postMessage('asked');
+  });
+  channel.onmessage = () => {
+    for (const data of waiting.splice(0)) self.dispatchEvent(new MessageEvent('message', { data }));
+  };
+}

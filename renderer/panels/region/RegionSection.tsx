@@ -1,8 +1,6 @@
 import { useState } from 'preact/hooks';
 import type { Region, SkyShape } from '../../../shared-core/sky/region.ts';
 import { describeRegion } from '../../../shared-core/sky/regionText.ts';
-import { change } from '../../../shared-core/study/edits.ts';
-import type { Study } from '../../../shared-core/study/schema.ts';
 import { SkyMap } from '../../skymap/SkyMap.tsx';
 import { useApp } from '../../state/app.ts';
 import { focusSoon } from '../../ui/focusSoon.ts';
@@ -11,6 +9,7 @@ import { Menu } from '../../ui/Menu.tsx';
 import { Section } from '../../ui/Section.tsx';
 import { useStudyPart } from '../useStudyPart.ts';
 import { AreaLine, useAreaGist } from './AreaLine.tsx';
+import { putRegion } from './putRegion.ts';
 import { type ShapePlace, withoutShape, withShapes } from './regionParts.ts';
 import { ShapeEditor } from './ShapeEditor.tsx';
 import { draftOfShape, newDraft, type ShapeDraft, type ShapeKind } from './shapeDraft.ts';
@@ -23,38 +22,31 @@ interface Editing {
   readonly of: Region | null;
 }
 
-/** Takes a region into the study. Answers why it cannot be, or null when it did. */
-type PutRegion = (next: Region | null, label: string) => Promise<string | null>;
-
 const ADD_ID = 'add-shape';
-const CHANGED_MEANWHILE = 'The region was changed in the meantime: look at it and do this again.';
-
-const sentence = (error: unknown): string => (error instanceof Error ? error.message : String(error));
 
 /** The observed sky: its map, its area, and its shapes by numbers or text. */
 export function RegionSection() {
-  const { studyState, engine } = useApp();
+  const app = useApp();
   const region = useStudyPart('region');
   const [kept, setEditing] = useState<Editing | null>(null);
   const editing = kept !== null && (kept.inPlaceOf === null || kept.of === region) ? kept : null;
 
-  const put: PutRegion = async (next, label) => {
-    const why = next === null ? null : await engine.client.checkRegions([next]).catch(sentence);
-    // Another region has come in the meantime: these shapes are not of it.
-    if (studyState.study.peek().region !== region) return CHANGED_MEANWHILE;
-    if (why === null) studyState.perform(change(label, { region: next as Study['region'] }));
-    return why;
+  const put = (next: Region | null, label: string, signal?: AbortSignal): Promise<string | null> =>
+    putRegion(app, { from: region, next, label }, signal);
+  const putOrTell = async (next: Region | null, label: string): Promise<void> => {
+    const why = await put(next, label);
+    if (why !== null) app.notices.tell(why);
   };
   const start = (kind: ShapeKind): void => {
     if (kind === 'wholeSky' && region === null)
-      void put({ parts: [{ kind }], holes: [] }, 'Observe the whole sky');
+      void putOrTell({ parts: [{ kind }], holes: [] }, 'Observe the whole sky');
     else setEditing({ draft: newDraft(kind), list: 'parts', inPlaceOf: null, of: region });
   };
   const finish = (): void => {
     setEditing(null);
     focusSoon(ADD_ID);
   };
-  const apply = async (shapes: readonly SkyShape[]): Promise<string | null> => {
+  const apply = async (shapes: readonly SkyShape[], signal: AbortSignal): Promise<string | null> => {
     if (editing === null) return null;
     const { list, inPlaceOf } = editing;
     const what = list === 'parts' ? 'observed shape' : 'hole';
@@ -63,8 +55,9 @@ export function RegionSection() {
       inPlaceOf === null
         ? `Add an ${what}`.replace('an hole', 'a hole')
         : `Change an ${what}`.replace('an hole', 'a hole'),
+      signal,
     );
-    if (why === null) finish();
+    if (why === null && !signal.aborted) finish();
     return why;
   };
   const partsLeft = (region?.parts.length ?? 0) - (editing?.inPlaceOf?.list === 'parts' ? 1 : 0);
@@ -77,7 +70,7 @@ export function RegionSection() {
           <ShapeList
             region={region}
             list="parts"
-            put={put}
+            put={putOrTell}
             onEdit={(place, shape) =>
               setEditing({ draft: draftOfShape(shape), list: 'parts', inPlaceOf: place, of: region })
             }
@@ -85,7 +78,7 @@ export function RegionSection() {
           <ShapeList
             region={region}
             list="holes"
-            put={put}
+            put={putOrTell}
             onEdit={(place, shape) =>
               setEditing({ draft: draftOfShape(shape), list: 'holes', inPlaceOf: place, of: region })
             }
@@ -115,7 +108,7 @@ export function RegionSection() {
               class="button"
               title="Give the region up: the area is estimated from the catalogue"
               onClick={() => {
-                void put(null, 'Give the region up');
+                void putOrTell(null, 'Give the region up');
                 focusSoon(ADD_ID);
               }}
             >
@@ -141,20 +134,18 @@ export function RegionSection() {
 function ShapeList(props: {
   readonly region: Region;
   readonly list: 'parts' | 'holes';
-  readonly put: PutRegion;
+  readonly put: (next: Region | null, label: string) => Promise<void>;
   readonly onEdit: (place: ShapePlace, shape: SkyShape) => void;
 }) {
   const { region, list, put, onEdit } = props;
-  const { notices } = useApp();
   const shapes = region[list];
   if (shapes.length === 0) return null;
   const remove = async (place: ShapePlace): Promise<void> => {
     const next = withoutShape(region, place);
-    const why = await put(
+    await put(
       next,
       next === null ? 'Give the region up' : list === 'parts' ? 'Remove an observed shape' : 'Remove a hole',
     );
-    if (why !== null) notices.tell(why);
     focusSoon(ADD_ID);
   };
   return (

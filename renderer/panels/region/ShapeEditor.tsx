@@ -16,8 +16,8 @@ export function ShapeEditor(props: {
   readonly holePossible: boolean;
   readonly isNew: boolean;
   readonly onChange: (draft: ShapeDraft, list: 'parts' | 'holes') => void;
-  /** Answers why the region cannot take the shapes, or null when it did. */
-  readonly onApply: (shapes: readonly SkyShape[]) => Promise<string | null>;
+  /** Answers why the region cannot take the shapes; null when it did, or when the signal was raised. */
+  readonly onApply: (shapes: readonly SkyShape[], signal: AbortSignal) => Promise<string | null>;
   readonly onCancel: () => void;
 }) {
   const { draft, list, holePossible, isNew, onChange, onApply, onCancel } = props;
@@ -27,25 +27,42 @@ export function ShapeEditor(props: {
     form.current?.querySelector<HTMLElement>('input:not([type=radio]), textarea, button')?.focus();
     form.current?.scrollIntoView({ block: 'nearest' });
   }, []);
-  const put = (next: ShapeDraft): void => {
-    setTrouble(null);
-    onChange(next, list);
+  const { engine, notices } = useApp();
+  /** What the engine is being asked; null while it is not. */
+  const asking = useRef<AbortController | null>(null);
+  const giveUpAsking = (): void => {
+    asking.current?.abort();
+    asking.current = null;
   };
-  const { engine } = useApp();
-  const asked = useRef<ShapeDraft | null>(null);
+  const put = (next: ShapeDraft, to = list): void => {
+    // The answer on its way is about the draft of before.
+    giveUpAsking();
+    setTrouble(null);
+    onChange(next, to);
+  };
+  const cancel = (): void => {
+    giveUpAsking();
+    onCancel();
+  };
   const apply = async (): Promise<void> => {
     // Once is enough: a second press while the engine looks at the shapes would add them twice.
-    if (asked.current === draft) return;
-    asked.current = draft;
-    const trouble = await troubleOf(draft);
-    asked.current = null;
-    if (trouble !== null) setTrouble(trouble);
+    if (asking.current !== null) return;
+    const asked = new AbortController();
+    asking.current = asked;
+    const trouble = await troubleOf(asked.signal);
+    if (asked.signal.aborted) return;
+    asking.current = null;
+    if (trouble === null) return;
+    // An undo may have taken the form away meanwhile.
+    if (form.current === null) notices.tell(trouble.sentence);
+    else setTrouble(trouble);
   };
-  const troubleOf = async (finished: ShapeDraft): Promise<DraftTrouble | null> => {
+  const troubleOf = async (signal: AbortSignal): Promise<DraftTrouble | null> => {
     try {
-      const done = await finishShape(finished, (regions) => engine.client.checkRegions(regions));
+      const done = await finishShape(draft, (regions) => engine.client.checkRegions(regions));
+      if (signal.aborted) return null;
       if ('sentence' in done) return done;
-      const why = await onApply(done.shapes);
+      const why = await onApply(done.shapes, signal);
       return why === null ? null : { sentence: why, field: null };
     } catch (error) {
       return { sentence: error instanceof Error ? error.message : String(error), field: null };
@@ -64,7 +81,7 @@ export function ShapeEditor(props: {
         if (e.key !== 'Escape') return;
         e.stopPropagation();
         e.preventDefault();
-        onCancel();
+        cancel();
       }}
     >
       <div class="shape-head">
@@ -77,7 +94,7 @@ export function ShapeEditor(props: {
             { value: 'parts', label: 'observed' },
             { value: 'holes', label: 'hole', title: 'Sky that is left out of the observed part' },
           ]}
-          onChoose={(to) => onChange(draft, to)}
+          onChoose={(to) => put(draft, to)}
         />
       </div>
       <div class="shape-fields">
@@ -108,7 +125,7 @@ export function ShapeEditor(props: {
         <button type="submit" class="button accent-button">
           {isNew ? 'Add' : 'Change'}
         </button>
-        <button type="button" class="button" onClick={onCancel}>
+        <button type="button" class="button" onClick={cancel}>
           Cancel
         </button>
       </div>
