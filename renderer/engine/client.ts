@@ -65,7 +65,8 @@ export class EngineClient {
   stop(): void {
     this.#worker?.terminate();
     this.#worker = null;
-    for (const { reject } of this.#waiting.values()) reject(new Error('The engine was stopped.'));
+    const why = 'The part of Conewright that reads catalogues was stopped before it answered: ask again.';
+    for (const { reject } of this.#waiting.values()) reject(new Error(why));
     this.#waiting.clear();
   }
 

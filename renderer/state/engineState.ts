@@ -15,6 +15,11 @@ import type {
 } from '../engine/protocol.ts';
 import type { StudyState } from './studyState.ts';
 
+interface Failure {
+  readonly stage: Stage | 'worker';
+  readonly sentence: string;
+}
+
 /** What the engine has made of the study so far. */
 export interface EngineState {
   readonly loaded: ReadonlySignal<Loaded | null>;
@@ -38,7 +43,7 @@ export interface EngineState {
   /** False while any result may still be of an earlier study, distances and colours included. */
   readonly settled: ReadonlySignal<boolean>;
   /** Why a stage could not be done; results before it stand. */
-  readonly failure: ReadonlySignal<{ readonly stage: Stage | 'worker'; readonly sentence: string } | null>;
+  readonly failure: ReadonlySignal<Failure | null>;
   readonly client: EngineClient;
   /** What was read of the source that the study has now; null while it is being read. */
   readonly loadedNow: ReadonlySignal<Loaded | null>;
@@ -68,11 +73,13 @@ export function createEngineState(
   const density = signal<Float32Array | null>(null);
   const columns = signal<readonly ColumnValues[]>([]);
   const progress = signal<{ stage: Stage; fraction: number | null } | null>(null);
-  const failure = signal<{ stage: Stage | 'worker'; sentence: string } | null>(null);
+  const failure = signal<Failure | null>(null);
 
   const fresh = signal(false);
   const settled = signal(false);
   let serial = 0;
+  /** The source that is not read until it is asked for again, with what is said of that. */
+  let givenUp: { readonly source: string; readonly failure: Failure } | null = null;
 
   const receive = (event: EngineEvent): void => {
     switch (event.kind) {
@@ -84,7 +91,7 @@ export function createEngineState(
         return;
       case 'loaded':
         loaded.value = event.loaded;
-        failure.value = null;
+        failure.value = givenUp?.failure ?? null;
         return;
       case 'selected':
         // The old background belongs to other galaxies: they must never be drawn together.
@@ -92,7 +99,7 @@ export function createEngineState(
         density.value = null;
         columns.value = [];
         selected.value = event.selected;
-        failure.value = null;
+        failure.value = givenUp?.failure ?? null;
         return;
       case 'background':
         background.value = event.background;
@@ -148,11 +155,10 @@ export function createEngineState(
     };
   });
   let sent: Wanted | null = null;
-  let givenUp: string | null = null;
   const send = (): void => {
-    const wish = wanted.value;
-    if (givenUp === JSON.stringify(wish.source)) return;
-    givenUp = null;
+    if (givenUp?.source !== JSON.stringify(wanted.value.source)) givenUp = null;
+    // A plan has its region and volumes also while its catalogue is not read.
+    const wish = givenUp === null ? wanted.value : { ...wanted.value, source: null };
     if (sent !== null && sameParts(sent, wish, EVERYTHING)) return;
     if (sent === null || !sameParts(sent, wish, GALAXIES)) fresh.value = false;
     settled.value = false;
@@ -180,8 +186,9 @@ export function createEngineState(
     giveUpReading(sentence) {
       client.stop();
       sent = null;
-      givenUp = JSON.stringify(source.peek());
-      receive({ kind: 'failed', stage: 'load', sentence });
+      givenUp = { source: JSON.stringify(source.peek()), failure: { stage: 'load', sentence } };
+      batch(() => receive({ kind: 'failed', stage: 'load', sentence }));
+      send();
     },
     readAgain() {
       client.stop();

@@ -20,6 +20,7 @@ export function deskWorker(
     const postMessage = (request: EngineRequest) => {
       if (request.kind === 'want') void desk.want(request.wanted, request.serial);
     };
-    return Object.assign(worker, { postMessage, terminate: () => undefined }) as unknown as Worker;
+    const terminate = () => void (worker.onmessage = null);
+    return Object.assign(worker, { postMessage, terminate }) as unknown as Worker;
   };
 }

@@ -105,4 +105,35 @@ describe('what the page keeps of the engine', () => {
       [few, few],
     ]);
   });
+
+  it('a source that was given up stays so, told, while region and its area follow the study', async () => {
+    const { studyState, engine } = stateOf();
+    engine.giveUpReading('It was given up.');
+    const failure = { stage: 'load', sentence: 'It was given up.' };
+    // 2 pi (1 - cos r) sr, in square degrees.
+    for (const radiusDeg of [1, 2]) {
+      const region = { parts: [{ kind: 'cap', raDeg: 150, decDeg: 3, radiusDeg }], holes: [] } as const;
+      studyState.perform(change('Observe', { region }));
+      const areaDeg2 = 2 * Math.PI * (1 - Math.cos((radiusDeg * Math.PI) / 180)) * (180 / Math.PI) ** 2;
+      await expect.poll(() => engine.footprint.value?.areaDeg2).toBeCloseTo(areaDeg2, 9);
+      await expect.poll(() => engine.settled.value).toBe(true);
+      expect(engine.failure.value).toEqual(failure);
+    }
+    const nowhere = { parts: [{ kind: 'cap', raDeg: 150, decDeg: 3, radiusDeg: 200 }], holes: [] } as const;
+    studyState.perform(change('Observe nothing', { region: nowhere }));
+    await expect.poll(() => engine.failure.value?.stage).toBe('select');
+    studyState.perform(change('Observe what there is', { region: null }));
+    await expect.poll(() => engine.failure.value).toEqual(failure);
+    expect(engine.footprint.value).toBeNull();
+    engine.readAgain();
+    await expect.poll(() => engine.selected.value?.sample.count).toBe(40);
+    expect(engine.failure.value).toBeNull();
+  });
+
+  it('what is asked of an engine that is stopped is answered with what to do', async () => {
+    const { engine } = stateOf();
+    const asked = engine.client.checkRegions([]);
+    engine.readAgain();
+    await expect(asked).rejects.toThrow(/was stopped before it answered: ask again\.$/);
+  });
 });
