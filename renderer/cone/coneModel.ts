@@ -35,6 +35,8 @@ export class ConeModel {
   view: ViewName = 'sideOn';
   exact = true;
   current = 0;
+  /** As it was asked for: where there are fewer fields for a while, it is looked at again once it is back. */
+  private fieldAsked = 0;
   reading: RadialReading = 'comoving';
   /** Displayed radius of the far end, in the unit of the reading. */
   farRadius = 1;
@@ -76,8 +78,7 @@ export class ConeModel {
     this.wide = input.wide;
     this.estimated = input.estimated ?? false;
     this.chosenFactors.clear();
-    // The field looked at stays in view while its region is worked on.
-    this.current %= Math.max(1, fields.length);
+    this.current = this.fieldAt(this.fieldAsked);
     this.panUp = 0;
     this.view = fittingView(this.fields.length, this.wide);
     this.exact = true;
@@ -120,9 +121,8 @@ export class ConeModel {
   }
 
   setCurrent(field: number): void {
-    const n = this.fields.length;
-    if (n === 0) return;
-    const next = ((field % n) + n) % n;
+    this.fieldAsked = field;
+    const next = this.fieldAt(field);
     if (next === this.current) return;
     this.current = next;
     if (this.view === 'parallel') this.view = 'sideOn';
@@ -158,6 +158,12 @@ export class ConeModel {
     if (next < NEAREST_SCALE || next > FARTHEST_SCALE) return null;
     this.pose = zoomed(this.pose, factor, xPx, yPx, this.viewport);
     return this.followPose();
+  }
+
+  /** Steps past the last field come to the first. */
+  private fieldAt(field: number): number {
+    const n = Math.max(1, this.fields.length);
+    return ((field % n) + n) % n;
   }
 
   /** True when the picture's x axis is the strip's. */

@@ -165,11 +165,7 @@ export class ConeView {
     this.changeView(() => this.model.setView(view));
   }
 
-  /** One field of several, seen by itself; steps wrap around. */
-  stepField(step: number): void {
-    this.changeView(() => this.model.setCurrent(this.model.current + step));
-  }
-
+  /** One field of several, seen by itself. */
   setField(field: number): void {
     this.changeView(() => this.model.setCurrent(field));
   }

@@ -5,7 +5,7 @@ import { useApp } from '../../state/app.ts';
 import { IconButton } from '../../ui/IconButton.tsx';
 import { Switch } from '../../ui/Switch.tsx';
 import { unitText } from '../../ui/unitText.ts';
-import { fieldsInView } from '../fieldsInView.ts';
+import { fieldInView } from '../fieldsInView.ts';
 import { ShellMark } from '../ShellMark.tsx';
 import { Explanation } from './Explanation.tsx';
 import { type ExplainedShell, shellQuantity } from './explain.ts';
@@ -44,7 +44,7 @@ export function ShellSheet() {
   };
   const warnings = shellWarnings(shell, conditions, estimate, planned);
   const explained = view.explained.value;
-  const field = fieldsInView(app)[view.field.value] ?? fieldsInView(app)[0];
+  const field = fieldInView(app);
   const step = (by: number) =>
     void (view.selectedShell.value = Math.max(
       0,

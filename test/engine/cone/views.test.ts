@@ -322,10 +322,14 @@ describe('a prepared field', () => {
     expect([model.view, model.current]).toEqual(['sideOn', 2]);
     model.setFields([...three], { fields: [], wide: false });
     expect([model.view, model.current]).toEqual(['parallel', 2]);
+    model.setCurrent(2);
     model.setFields(three.slice(0, 2), { fields: [], wide: false });
     expect(model.current).toBe(0);
     model.setFields([], { fields: [], wide: true });
     expect([model.view, model.current]).toEqual(['aroundTheObserver', 0]);
+    // As a shape taken out, and back by an undo: the map and the sheet look at the third again.
+    model.setFields(three, { fields: [], wide: false });
+    expect(model.current).toBe(2);
   });
 
   it('keeps north where it is on the sky', () => {

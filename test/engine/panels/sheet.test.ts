@@ -1,8 +1,11 @@
 import { describe, expect, it } from 'vitest';
+import { fieldInView } from '../../../renderer/panels/fieldsInView.ts';
 import { explain, shellQuantity } from '../../../renderer/panels/sheet/explain.ts';
 import { edgeTold } from '../../../renderer/panels/sheet/sheetLayout.ts';
 import { roundLength, shellOutline } from '../../../renderer/panels/sheet/shellOutline.ts';
 import { shellWarnings } from '../../../renderer/panels/sheet/warnings.ts';
+import { fieldIndex } from '../../../renderer/skymap/skyContent.ts';
+import type { App } from '../../../renderer/state/app.ts';
 import { shownText } from '../../../shared-core/report/quantity.ts';
 import { SHELL_QUANTITIES } from '../../../shared-core/report/shellQuantities.ts';
 import { sortSample } from '../../../shared-core/shells/sample.ts';
@@ -201,4 +204,13 @@ describe('a number that tells the place of an edge', () => {
     expect(edgeTold('ageMaxGyr', 0, 5)).toEqual({ index: 1, unit: 'redshift' });
     expect(edgeTold('volumeMpc3', 0, 5)).toBeNull();
   });
+});
+
+it("the sheet's drawing is of the field that the map looks at, also where there are fewer than before", () => {
+  for (const fields of [['a', 'b', 'c', 'd'], ['a', 'b'], ['a'], []])
+    for (const field of [0, 1, 3]) {
+      const app = { engine: { footprint: { value: { fields } } }, view: { field: { value: field } } };
+      expect(fieldInView(app as unknown as App)).toBe(fields[fieldIndex(fields, field)]);
+    }
+  expect(fieldIndex(['a', 'b'], 3)).toBe(1);
 });
