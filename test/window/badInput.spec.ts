@@ -212,3 +212,31 @@ function killableWorkers(): void {
     },
   });
 }
+
+test('a window that cannot start says why, in letters that can be read', async ({ desk }) => {
+  for (const theme of ['dark', 'light'] as const) {
+    const page = await desk.open({
+      theme,
+      init: () => {
+        globalThis.matchMedia = () => {
+          throw new Error('the screen is unknown');
+        };
+      },
+    });
+    await expect(page.getByText('Conewright could not start: the screen is unknown')).toBeVisible();
+    const [ink, ground] = await page.evaluate(() => {
+      const { color, backgroundColor } = getComputedStyle(document.body);
+      return [color, backgroundColor].map((colour) => {
+        // Relative luminance by WCAG 2.2.
+        const [r, g, b] = (colour.match(/\d+/g) ?? []).map((byte) => {
+          const value = Number(byte) / 255;
+          return value <= 0.04045 ? value / 12.92 : ((value + 0.055) / 1.055) ** 2.4;
+        });
+        return 0.2126 * r! + 0.7152 * g! + 0.0722 * b!;
+      });
+    });
+    const [dark, light] = [ink!, ground!].sort((a, b) => a - b);
+    expect((light! + 0.05) / (dark! + 0.05), theme).toBeGreaterThan(4.5);
+    expect(ground! > 0.5, theme).toBe(theme === 'light');
+  }
+});
