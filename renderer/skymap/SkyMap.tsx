@@ -23,9 +23,8 @@ export function SkyMap() {
   const size = useSignal<{ widthPx: number; heightPx: number; fontPx: number } | null>(null);
   const chosen = useSignal<Look | null>(null);
   const pointed = useSignal<string | null>(null);
-  const content = useComputed(() =>
-    skyContent(engine.footprint.value, engine.selected.value?.raDeg.length ?? 0),
-  );
+  const content = useComputed(() => skyContent(engine.footprint.value));
+  const middle = useComputed(() => middleOf(content.value, engine.selected.value));
   const target = useComputed(() => closeTarget(content.value, view.field.value, engine.selected.value));
   const look = useComputed<Look>(() => {
     if (target.value === null) return 'whole';
@@ -42,9 +41,7 @@ export function SkyMap() {
     const inner: MapBox = whole
       ? { left: 3 * fontPx, top: 2, right: widthPx - 2, bottom: heightPx - 2 }
       : { left: 3.3 * fontPx, top: 2, right: widthPx - 2, bottom: heightPx - 1.5 * fontPx };
-    const frame = whole
-      ? wholeSkyFrame(inner, middleOf(content.value, engine.selected.value))
-      : closeFrame(inner, target.value!);
+    const frame = whole ? wholeSkyFrame(inner, middle.value) : closeFrame(inner, target.value!);
     return { frame, box: inner, whole, ...drawn(frame, inner, fontPx, content.value) };
   });
   const { fields, origin } = content.value;
@@ -93,7 +90,7 @@ export function SkyMap() {
         )}
       </div>
       <figcaption>
-        <span class="unseen">{skySentence(content.value)}</span>
+        <span class="unseen">{skySentence(content.value, engine.selected.value?.raDeg.length ?? 0)}</span>
         <span class="sky-key">
           {where === null ? null : (
             <>

@@ -5,22 +5,18 @@ import { countText } from '../ui/numberText.ts';
 import { decText, raText } from './graticule.ts';
 import { middleRaDeg, type SkyTarget, targetOfPoints, WIDEST_CLOSE_LOOK_DEG } from './skyFrames.ts';
 
-/** What the sky map shows. */
+/** What the sky map shows under the galaxies. */
 export interface SkyContent {
   readonly rings: readonly OutlineRing[];
   readonly fields: readonly SkyField[];
   /** Null while there is neither region nor estimate. */
   readonly origin: 'given' | 'estimated' | null;
   readonly areaDeg2: number | null;
-  readonly galaxies: number;
 }
 
-/** @param galaxies how many there are */
-export function skyContent(footprint: FootprintPicture | null, galaxies: number): SkyContent {
-  if (footprint === null) return { rings: [], fields: [], origin: null, areaDeg2: null, galaxies };
-  const { rings, fields, origin, areaDeg2 } = footprint;
-  return { rings, fields, origin, areaDeg2, galaxies };
-}
+const NOTHING: SkyContent = { rings: [], fields: [], origin: null, areaDeg2: null };
+
+export const skyContent = (footprint: FootprintPicture | null): SkyContent => footprint ?? NOTHING;
 
 /** What a close look would show: the field looked at, or else the galaxies; null where that is too wide. */
 export function closeTarget(content: SkyContent, field: number, selected: Selected | null): SkyTarget | null {
@@ -36,11 +32,14 @@ export function fieldIndex(fields: readonly unknown[], field: number): number {
   return fields.length === 0 ? 0 : ((field % fields.length) + fields.length) % fields.length;
 }
 
-/** Where the map of the whole sky is centred, so that it is not cut through what is shown. */
+/**
+ * Where the map of the whole sky is centred, so that it is not cut through what is shown: by the fields, so that it
+ * does not turn when the galaxies come, and by these where no field says it.
+ */
 export function middleOf({ fields }: SkyContent, selected: Selected | null): number | null {
-  if (selected !== null && selected.raDeg.length > 0) return middleRaDeg(selected.raDeg);
   const narrow = fields.filter((field) => field.radiusDeg < WIDEST_CLOSE_LOOK_DEG);
-  return middleRaDeg(narrow.map((field) => field.centreRaDeg));
+  if (narrow.length > 0 || selected === null) return middleRaDeg(narrow.map((field) => field.centreRaDeg));
+  return middleRaDeg(selected.raDeg);
 }
 
 export function placeText(raDeg: number, decDeg: number, decimals: number): string {
@@ -48,7 +47,7 @@ export function placeText(raDeg: number, decDeg: number, decimals: number): stri
 }
 
 /** The map in words, for those who do not see it. */
-export function skySentence({ galaxies, origin, areaDeg2, fields }: SkyContent): string {
+export function skySentence({ origin, areaDeg2, fields }: SkyContent, galaxies: number): string {
   const points =
     galaxies === 0 ? 'No galaxies.' : `${countText(galaxies)} ${galaxies === 1 ? 'galaxy' : 'galaxies'}.`;
   if (origin === null || areaDeg2 === null) return `${points} No region yet.`;

@@ -98,7 +98,7 @@ export function createEngineState(
         background.value = null;
         density.value = null;
         columns.value = [];
-        selected.value = event.selected;
+        selected.value = event.selected && standingOn(event.selected, region.peek());
         failure.value = givenUp?.failure ?? null;
         return;
       case 'background':
@@ -211,3 +211,7 @@ const EVERYTHING = [...GALAXIES, 'cosmology', 'density', 'columns'] as const;
 function sameParts(a: Wanted, b: Wanted, parts: readonly (keyof Wanted)[]): boolean {
   return parts.every((part) => a[part] === b[part] || JSON.stringify(a[part]) === JSON.stringify(b[part]));
 }
+
+/** A given region is the same before and after its galaxies have come: what is drawn of it need not be drawn again. */
+const standingOn = (selected: Selected, region: FootprintPicture | null): Selected =>
+  region !== null && selected.footprint?.origin === 'given' ? { ...selected, footprint: region } : selected;

@@ -83,6 +83,17 @@ describe('what the page keeps of the engine', () => {
     expect([...new Set(seen)]).toEqual(['40 everywhere', inside]);
   });
 
+  it('a given region is the same before and after its galaxies have come', async () => {
+    const { studyState, engine } = stateOf();
+    const region = { parts: [{ kind: 'cap', raDeg: 150, decDeg: 3, radiusDeg: 5 }], holes: [] } as const;
+    studyState.perform(change('Observe a cap', { region }));
+    await expect.poll(() => engine.fresh.value && engine.selected.value?.footprint?.origin).toBe('given');
+    expect(engine.selected.value!.footprint).toBe(engine.region.value);
+    studyState.undo();
+    await expect.poll(() => engine.footprint.value?.origin).toBe('estimated');
+    expect(engine.region.value).toBeNull();
+  });
+
   it('galaxies never stand beside what belongs to others, between one event and the next either', async () => {
     const { studyState, engine } = stateOf();
     await expect.poll(() => engine.fresh.value).toBe(true);

@@ -1,6 +1,7 @@
 import { geoContains } from 'd3-geo';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import type { Selected } from '../../../renderer/engine/protocol.ts';
 import { readyRegion } from '../../../renderer/engine/regionReady.ts';
 import { decText, graticule, raText } from '../../../renderer/skymap/graticule.ts';
 import { outlineArea, outlineLines } from '../../../renderer/skymap/outlines.ts';
@@ -256,20 +257,26 @@ describe('points', () => {
 
 describe('what the map shows', () => {
   it('takes a plan without a catalogue', () => {
-    const content = skyContent(readyRegion(REGIONS['three fields']!).picture, 0);
+    const content = skyContent(readyRegion(REGIONS['three fields']!).picture);
     expect(content.fields).toHaveLength(3);
     expect(content.origin).toBe('given');
     expect(closeTarget(content, 4, null)!.centreRaDeg).toBeCloseTo(content.fields[1]!.centreRaDeg, 9);
-    expect(skySentence(content)).toMatch(
+    expect(skySentence(content, 0)).toMatch(
       /^No galaxies\. Region as given, \d+(\.\d+)? square degrees, in 3 fields: RA /,
     );
   });
   it('stays with the whole sky for wide regions, and without anything', () => {
     const wholeSky = readyRegion({ parts: [{ kind: 'wholeSky' }], holes: [] }).picture;
-    expect(closeTarget(skyContent(wholeSky, 0), 0, null)).toBeNull();
-    expect(closeTarget(skyContent(null, 0), 0, null)).toBeNull();
-    expect(skySentence(skyContent(null, 0))).toBe('No galaxies. No region yet.');
-    expect(middleOf(skyContent(null, 0), null)).toBeNull();
+    expect(closeTarget(skyContent(wholeSky), 0, null)).toBeNull();
+    expect(closeTarget(skyContent(null), 0, null)).toBeNull();
+    expect(skySentence(skyContent(null), 0)).toBe('No galaxies. No region yet.');
+    expect(middleOf(skyContent(null), null)).toBeNull();
+  });
+  it('is centred by the fields, so that it does not turn when galaxies come, and else by these', () => {
+    const fields = skyContent(readyRegion(REGIONS['three fields']!).picture);
+    const elsewhere = { raDeg: Float32Array.of(301, 299) } as unknown as Selected;
+    expect(middleOf(fields, elsewhere)).toBe(middleOf(fields, null));
+    expect(middleOf(skyContent(null), elsewhere)).toBeCloseTo(300, 4);
   });
   it('steps around the fields in both directions', () => {
     expect([fieldIndex([1, 2, 3], 3), fieldIndex([1, 2, 3], -1), fieldIndex([], 2)]).toEqual([0, 2, 0]);
