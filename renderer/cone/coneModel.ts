@@ -44,7 +44,7 @@ export class ConeModel {
   private viewport: Viewport = { widthPx: 1, heightPx: 1 };
   private insets: AxisInsets = { leftPx: 48, rightPx: 48 };
   private window: AxisWindow = { min: 0, max: 1 };
-  private chosenFactors = new Map<number, number>();
+  private chosenFactor: number | null = null;
   private panUp = 0;
   private table: RadiusTable = radiusTable([0, 1], [0, 1]);
   private pose: Pose = { axes: FRONT, target: [0.5, 0, 0], unitsPerPixel: 0.001, perspective: 0 };
@@ -77,7 +77,6 @@ export class ConeModel {
     this.ready = true;
     this.wide = input.wide;
     this.estimated = input.estimated ?? false;
-    this.chosenFactors.clear();
     this.current = this.fieldAt(this.fieldAsked);
     this.panUp = 0;
     this.view = fittingView(this.fields.length, this.wide);
@@ -131,10 +130,9 @@ export class ConeModel {
     this.takePose();
   }
 
-  /** null takes the proposal again. */
+  /** Of the field looked at, whichever it is; null takes the proposal again. */
   setSidewaysFactor(factor: number | null): void {
-    if (factor === null) this.chosenFactors.delete(this.current);
-    else this.chosenFactors.set(this.current, factor);
+    this.chosenFactor = factor;
     if (this.exact) this.takePose();
   }
 
@@ -219,13 +217,13 @@ export class ConeModel {
     }
     const [min, max] = axisWindowOf(this.pose, this.viewport, this.insets);
     this.window = { min: min * this.farRadius, max: max * this.farRadius };
-    this.panUp = this.pose.target[1] - restingHeight(this.side(), this.current, this.pose.unitsPerPixel);
+    this.panUp = this.pose.target[1] - restingHeight(this.side(), this.pose.unitsPerPixel);
     return this.window;
   }
 
   private side(): SideOn {
-    const { fields, viewport, insets, chosenFactors } = this;
-    return { fields, parallel: this.view === 'parallel', viewport, insets, chosenFactors };
+    const { fields, viewport, insets, current, chosenFactor } = this;
+    return { fields, parallel: this.view === 'parallel', viewport, insets, current, chosenFactor };
   }
 
   private factors(): number[] {
@@ -242,7 +240,7 @@ export class ConeModel {
       const { min, max } = this.window;
       const [low, high] = [min / this.farRadius, max / this.farRadius];
       const pose = sideOnPose(low, high, this.viewport, this.insets, 0);
-      const height = restingHeight(this.side(), this.current, pose.unitsPerPixel) + this.panUp;
+      const height = restingHeight(this.side(), pose.unitsPerPixel) + this.panUp;
       this.pose = { ...pose, target: [pose.target[0], height, 0] };
       return;
     }

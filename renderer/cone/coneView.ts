@@ -170,7 +170,7 @@ export class ConeView {
     this.changeView(() => this.model.setCurrent(field));
   }
 
-  /** null takes the proposal for the field. */
+  /** How much the field looked at is widened; null takes the proposal for it. */
   setSidewaysFactor(factor: number | null): void {
     this.changeView(() => this.model.setSidewaysFactor(factor));
   }

@@ -13,8 +13,10 @@ export interface SideOn {
   readonly parallel: boolean;
   readonly viewport: Viewport;
   readonly insets: { readonly leftPx: number; readonly rightPx: number };
-  /** Sideways factors that were chosen, by field; the others are proposed. */
-  readonly chosenFactors: ReadonlyMap<number, number>;
+  /** The field looked at. */
+  readonly current: number;
+  /** Its sideways factor, where one was chosen; those of the others are proposed. */
+  readonly chosenFactor: number | null;
 }
 
 /** One sideways factor a field. */
@@ -23,7 +25,9 @@ export function sidewaysFactors(side: SideOn): number[] {
   const rooms = side.parallel ? lanesPx(side).map((h) => h * LANE_SHARE) : natural.map(() => roomPx(side));
   // A lane of several is opened as soon as it can be; a cone alone keeps its true shape where that fills the stage.
   const slack = side.parallel ? 1.2 : 2.5;
-  return natural.map((px, i) => side.chosenFactors.get(i) ?? proposeSidewaysFactor(px, rooms[i]!, slack));
+  const proposed = natural.map((px, i) => proposeSidewaysFactor(px, rooms[i]!, slack));
+  const { current, chosenFactor } = side;
+  return proposed.map((factor, i) => (i === current ? (chosenFactor ?? factor) : factor));
 }
 
 /** Heights of the parallel lanes in display units, gaps included. */
@@ -32,12 +36,12 @@ export function laneHeightsOf(side: SideOn): number[] {
 }
 
 /** Display height at the middle of the stage for cones at rest in their room between the rulers. */
-export function restingHeight(side: SideOn, current: number, unitsPerPixel: number): number {
+export function restingHeight(side: SideOn, unitsPerPixel: number): number {
   const { enlarged = 1 } = side.viewport;
   const shift = ((SIDE_ROOM.bottom - SIDE_ROOM.top) / 2) * enlarged * unitsPerPixel;
-  const field = side.fields[current];
+  const field = side.fields[side.current];
   if (side.parallel || !field) return -shift;
-  const factor = sidewaysFactors(side)[current]!;
+  const factor = sidewaysFactors(side)[side.current]!;
   return ((field.extent.alongMax + field.extent.alongMin) / 2) * factor - shift;
 }
 

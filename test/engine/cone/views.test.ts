@@ -332,6 +332,25 @@ describe('a prepared field', () => {
     expect(model.current).toBe(2);
   });
 
+  it('is widened as it was asked for, also where that was before the region came, or was for another', () => {
+    const model = new ConeModel();
+    model.setViewport(VIEWPORT);
+    model.setSidewaysFactor(7);
+    const two = [20, 40].map((ra) => field([capRing(ra, 30, 1)], 1, ra, 30));
+    for (const fields of [two.slice(1), two]) {
+      model.setFields(fields, { fields: [], wide: false });
+      expect(model.state().sidewaysFactor).toBe(7);
+    }
+    model.setCurrent(1);
+    expect([model.view, model.state().sidewaysFactor]).toEqual(['sideOn', 7]);
+    expect(model.state().caption.join(' ')).toContain('7');
+    model.setSidewaysFactor(null);
+    const proposed = model.state().sidewaysFactor;
+    expect(proposed).not.toBe(7);
+    model.setSidewaysFactor(proposed + 1);
+    expect(model.state().sidewaysFactor).toBe(proposed + 1);
+  });
+
   it('keeps north where it is on the sky', () => {
     for (const angle of [0, 30, 90, 137]) {
       const prepared = prepareField({
