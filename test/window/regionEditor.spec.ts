@@ -65,7 +65,28 @@ test('a shape changed while the engine looked at it is taken as it is now, and o
   await answer(page);
   await expect(shapes(page)).toHaveCount(1);
   await expect(shapes(page)).toContainText('1.5');
+  await expect(page.getByRole('button', { name: 'Add a shape' })).toBeFocused();
   // One step back and there is no region.
   await page.keyboard.press('Control+z');
   await expect(shapes(page)).toHaveCount(0);
+});
+
+test('whoever goes on elsewhere while the engine looks at a shape stays there', async ({ desk }) => {
+  const page = await editorWith(desk, '2');
+  await add(page).click();
+  await asked(page, 1);
+  const name = page.getByLabel('Name of the study');
+  await name.focus();
+  await answer(page);
+  await asked(page, 2);
+  await answer(page);
+  await expect(shapes(page)).toHaveCount(1);
+  await page.evaluate(
+    () => new Promise((drawn) => requestAnimationFrame(() => requestAnimationFrame(drawn))),
+  );
+  await expect(name).toBeFocused();
+  // Who waits comes to the button that the form came from.
+  await page.getByRole('button', { name: /^Remove: cap/ }).click();
+  await expect(shapes(page)).toHaveCount(0);
+  await expect(page.getByRole('button', { name: 'Add a shape' })).toBeFocused();
 });

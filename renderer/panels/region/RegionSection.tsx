@@ -42,7 +42,7 @@ export function RegionSection() {
       void putOrTell({ parts: [{ kind }], holes: [] }, 'Observe the whole sky');
     else setEditing({ draft: newDraft(kind), list: 'parts', inPlaceOf: null, of: region });
   };
-  const finish = (): void => {
+  const cancel = (): void => {
     setEditing(null);
     focusSoon(ADD_ID);
   };
@@ -57,7 +57,10 @@ export function RegionSection() {
         : `Change an ${what}`.replace('an hole', 'a hole'),
       signal,
     );
-    if (why === null && !signal.aborted) finish();
+    if (why === null && !signal.aborted) {
+      setEditing(null);
+      focusSoon(ADD_ID, null);
+    }
     return why;
   };
   const partsLeft = (region?.parts.length ?? 0) - (editing?.inPlaceOf?.list === 'parts' ? 1 : 0);
@@ -124,7 +127,7 @@ export function RegionSection() {
           isNew={editing.inPlaceOf === null}
           onChange={(draft, list) => setEditing({ ...editing, draft, list })}
           onApply={apply}
-          onCancel={finish}
+          onCancel={cancel}
         />
       )}
     </Section>
@@ -142,11 +145,12 @@ function ShapeList(props: {
   if (shapes.length === 0) return null;
   const remove = async (place: ShapePlace): Promise<void> => {
     const next = withoutShape(region, place);
+    const had = document.activeElement;
     await put(
       next,
       next === null ? 'Give the region up' : list === 'parts' ? 'Remove an observed shape' : 'Remove a hole',
     );
-    focusSoon(ADD_ID);
+    focusSoon(ADD_ID, had);
   };
   return (
     <ul class="shapes" aria-label={list === 'parts' ? 'Observed shapes' : 'Holes'}>
