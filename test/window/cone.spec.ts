@@ -146,3 +146,38 @@ test('WebGL by choice: it draws, its loss is told and drawn around, and it is ta
     await server.close();
   }
 });
+
+test('WebGL that cannot be had is told with its reason, and drawn around', async ({ chrome }) => {
+  const server = await serveCone();
+  const page = await chrome.newPage({ viewport: { width: 900, height: 600 } });
+  const reason = () =>
+    page.evaluate(() => {
+      const { log, cone } = globalThis as unknown as Harness;
+      const state = cone.drawingState();
+      cone.orbitBy(2, 0);
+      return state.webgl === 'absent' ? `${state.reason}, ${log.at(-1)?.layer}` : '';
+    });
+  try {
+    await page.route(/gpuLayers/, (route) => route.abort());
+    await page.goto(`${server.address}?n=5000&layer=webgl&view=whole`);
+    await expect
+      .poll(reason)
+      .toBe('the part of Conewright that draws them could not be loaded; they are drawn flat, software');
+    await page.unroute(/gpuLayers/);
+    await page.addInitScript(() => {
+      const own = HTMLCanvasElement.prototype.getContext as (kind: string, ...more: unknown[]) => unknown;
+      HTMLCanvasElement.prototype.getContext = function (
+        this: HTMLCanvasElement,
+        kind: string,
+        ...more: unknown[]
+      ) {
+        return kind === '2d' ? own.call(this, kind, ...more) : null;
+      } as typeof HTMLCanvasElement.prototype.getContext;
+    });
+    await page.reload();
+    await expect.poll(reason).toBe('this machine offers no WebGL; they are drawn flat, software');
+  } finally {
+    await page.close();
+    await server.close();
+  }
+});

@@ -2,6 +2,13 @@ import type { DrawingState } from '../types.ts';
 import type { GpuLayers } from './gpuLayers.ts';
 import { findGpu } from './probe.ts';
 
+class NotLoaded extends Error {}
+
+const whyAbsent = (error: unknown): string =>
+  error instanceof NotLoaded
+    ? 'the part of Conewright that draws them could not be loaded'
+    : 'this machine offers no WebGL';
+
 /**
  * WebGL where a GPU stands behind it: made once it is known, told when it is lost, taken up again when it is restored.
  * Until then, and without a GPU, the processor draws.
@@ -59,7 +66,7 @@ export class GlStage {
         this.made = made;
         this.tellReady();
       },
-      () => this.tell({ webgl: 'absent', reason: 'this machine offers no WebGL; they are drawn flat' }),
+      (error: unknown) => this.tell({ webgl: 'absent', reason: `${whyAbsent(error)}; they are drawn flat` }),
     );
   }
 
@@ -71,7 +78,9 @@ export class GlStage {
 
   /** Three.js is large, and not needed where there is no GPU: it comes with the first use. */
   private async make(): Promise<GpuLayers | null> {
-    const { GpuLayers } = await import('./gpuLayers.ts');
+    const { GpuLayers } = await import('./gpuLayers.ts').catch(() => {
+      throw new NotLoaded();
+    });
     return this.end.signal.aborted ? null : new GpuLayers(this.canvas);
   }
 
