@@ -137,6 +137,8 @@ test('the whole main job by keyboard alone, and the focus is seen at every stop'
   await expect.poll(() => existsSync(saved)).toBe(true);
   expect(JSON.parse(readFileSync(saved, 'utf8')).edges[1]).toBe(0.044);
   await expect(edge).toBeFocused();
+  // The file is there before the page knows of it, and would ask about work that is not saved.
+  await expect(page).not.toHaveTitle(/not saved/);
   await page.keyboard.press('Control+n');
   await expect(line).toHaveText('no catalogue');
   await choose(page, saved, () => page.keyboard.press('Control+o'));
