@@ -262,6 +262,17 @@ describe('files of one name, as a browser gives them', () => {
     expect(studyState.study.value.look.colourBy).toEqual({ column: 'Mag' });
   });
 
+  it('a catalogue keeps the region and shells of a plan, not those of another catalogue', async () => {
+    const { files, studyState } = deskOf();
+    const cap = { kind: 'cap' as const, raDeg: 150.1, decDeg: 2.2, radiusDeg: 1.5 };
+    const plan = { region: { parts: [cap], holes: [] }, edges: [0.8, 1.2, 1.6] };
+    studyState.perform(change('Plan', plan));
+    await files.openFiles([picked('blob:first', 10)]);
+    expect(studyState.study.value).toMatchObject(plan);
+    await files.openFiles([picked('blob:second', 20)]);
+    expect(studyState.study.value).toMatchObject({ region: null, edges: [] });
+  });
+
   it('what was open before the present catalogue is known, with all that was done to it', async () => {
     const { files, studyState, rename } = deskOf();
     expect(files.beforeOpening.value).toBeNull();

@@ -30,8 +30,9 @@ export interface StudySourceState {
 
 interface SourceFiles extends StudySourceState {
   /**
-   * Makes a file the study's catalogue, with nothing cut and no shells. The study takes its name, unless the one that
-   * it has is to be kept.
+   * Makes a file the study's catalogue, with nothing cut. The region and shells of another catalogue go; those of a
+   * plan stay, for it is the plan that the catalogue is held against. The study takes its name, unless the one that it
+   * has is to be kept.
    */
   openCatalogue(file: OpenedFile, keepName: boolean): void;
   /** Finds the file of a study that has just been opened, where that needs no asking. `studyId`: the study's file. */
@@ -100,7 +101,7 @@ export function createStudySource(
       studyState.perform(change('Accept the changed catalogue', { source: accepted }));
     },
     openCatalogue(file, keepName) {
-      const { source: before, look, name } = study.value;
+      const { source: before, region, edges, look, name } = study.value;
       const fresh = before === null || before.kind === 'demo';
       const { path, sizeBytes } = file;
       const named: FileSource = { kind: 'file', name: file.name, path, sizeBytes, sha256: null };
@@ -110,8 +111,8 @@ export function createStudySource(
           source: named,
           mapping: null,
           cuts: [],
-          region: null,
-          edges: [],
+          region: before === null ? region : null,
+          edges: before === null ? edges : [],
           name: keepName ? name : catalogueTitle(file.name),
           // The demo's columns are not one's own; another file of one's own may well have the same.
           look: fresh && typeof look.colourBy === 'object' ? { ...look, colourBy: 'redshift' } : look,
