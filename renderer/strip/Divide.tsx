@@ -18,6 +18,13 @@ import type { StripModel } from './stripModel.ts';
 import { Tool } from './Tool.tsx';
 
 const DEFAULT_SHELLS = 5;
+const FIELDS = ['count', 'from', 'to'] as const;
+type Field = (typeof FIELDS)[number];
+/** Why nothing was laid out, and the fields that are to be mended. */
+interface Trouble {
+  readonly sentence: string;
+  readonly at: readonly Field[];
+}
 /** Where a person is taken to choose a scheme. */
 export const FIRST_SCHEME_ID = 'first-scheme';
 
@@ -31,7 +38,7 @@ export function Divide({ model }: { readonly model: StripModel }) {
   const typed = useSignal<{ readonly text: string; readonly over: number } | null>(null);
   const wholeSample = useSignal(false);
   /** Why nothing was laid out, while that stands. */
-  const trouble = useSignal<string | null>(null);
+  const trouble = useSignal<Trouble | null>(null);
   const sample = derived.sample.value;
   const text = typed.value?.over === present ? typed.value.text : String(present || DEFAULT_SHELLS);
   const untyped = rangeToDivide(edges, sample.count, wholeSample.value, model.window.value);
@@ -39,28 +46,29 @@ export function Divide({ model }: { readonly model: StripModel }) {
 
   const asked = () => {
     const count = readNumber(text, 'The number of shells');
-    if ('sentence' in count) return count;
+    if ('sentence' in count) return { ...count, at: ['count' as const] };
     const range = typedRange(view.typedRange.peek(), untyped, sample);
     return 'sentence' in range ? range : { shells: count.value, range };
   };
   const judge = (): void => {
     const found = asked();
-    trouble.value = 'sentence' in found ? found.sentence : null;
+    trouble.value = 'sentence' in found ? found : null;
   };
   const divide = (kind: DividingScheme): void => {
     const found = asked();
-    trouble.value = 'sentence' in found ? found.sentence : null;
+    trouble.value = 'sentence' in found ? found : null;
     if ('sentence' in found) return;
     const edit = divideShells(kind, found.shells, found.range, sample, derived.cosmology.value);
     // A refusal belongs beside the fields that caused it, not among the notices.
-    const refused = (sentence: string): void => void (trouble.value = sentence);
+    const refused = (sentence: string): void => void (trouble.value = { sentence, at: FIELDS });
     if (!studyState.perform(edit, refused)) return;
     // From now on the range is that of the edges.
     view.typedRange.value = NOTHING_TYPED;
     view.selectedShell.value = standingShell(studyState.study.peek().edges, view.selectedShell.peek());
   };
   const hasChoice = present > 0 && sample.count > 0;
-  const described = trouble.value === null ? {} : { 'aria-describedby': `${id}-trouble` };
+  const described = (field: Field) =>
+    trouble.value?.at.includes(field) ? { 'aria-describedby': `${id}-trouble` } : {};
   const end = (which: 'from' | 'to', label: string) => (
     <input
       class="strip-number strip-end"
@@ -72,7 +80,7 @@ export function Divide({ model }: { readonly model: StripModel }) {
       title={`${label}; empty for where they ${which === 'from' ? 'begin' : 'end'} now${ends[which] === null ? '' : `: ${shortRedshift(ends[which])}`}`}
       placeholder={ends[which] === null ? '' : fieldRedshift(ends[which])}
       value={view.typedRange.value[which]}
-      {...described}
+      {...described(which)}
       onInput={(event) => {
         view.typedRange.value = { ...view.typedRange.value, [which]: event.currentTarget.value };
         trouble.value = null;
@@ -94,7 +102,7 @@ export function Divide({ model }: { readonly model: StripModel }) {
         aria-label="Number of shells"
         title="Number of shells"
         value={text}
-        {...described}
+        {...described('count')}
         onInput={(event) => {
           typed.value = { text: event.currentTarget.value, over: present };
           trouble.value = null;
@@ -149,7 +157,7 @@ export function Divide({ model }: { readonly model: StripModel }) {
       />
       {trouble.value === null ? null : (
         <p id={`${id}-trouble`} class="strip-trouble" role="alert">
-          {trouble.value}
+          {trouble.value.sentence}
         </p>
       )}
     </div>

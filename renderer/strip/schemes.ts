@@ -50,6 +50,12 @@ export function rangeInNumbers({ zMin, zMax }: DividedRange, { redshift, count }
   return { from: zMin ?? least, to: zMax ?? greatest };
 }
 
+/** Why a range cannot be, and the ends that are to be mended. */
+interface RangeTrouble {
+  readonly sentence: string;
+  readonly at: readonly ('from' | 'to')[];
+}
+
 /**
  * What was typed as the range of new shells, over the range that stands where a field is empty.
  * @returns the range, or the sentence that says why there is none and what to do
@@ -58,7 +64,7 @@ export function typedRange(
   typed: TypedRange,
   untyped: DividedRange,
   sample: SortedSample,
-): DividedRange | { readonly sentence: string } {
+): DividedRange | RangeTrouble {
   const ends = { from: untyped.zMin, to: untyped.zMax };
   for (const end of ['from', 'to'] as const) {
     if (typed[end].trim() === '') continue;
@@ -67,10 +73,11 @@ export function typedRange(
       typed[end],
       `The redshift where the shells are to ${end === 'from' ? 'begin' : 'end'}`,
     );
-    if ('sentence' in read) return read;
+    if ('sentence' in read) return { ...read, at: [end] };
     if (!(read.value >= 0 && read.value <= DEEPEST_REDSHIFT))
       return {
         sentence: `The range ${where} at z ${read.value}: give a redshift from 0 to ${DEEPEST_REDSHIFT}.`,
+        at: [end],
       };
     ends[end] = read.value;
   }
@@ -79,6 +86,7 @@ export function typedRange(
   if (typed.from.trim() + typed.to.trim() !== '' && from !== null && to !== null && from >= to)
     return {
       sentence: `The range begins at z ${shortRedshift(from)} and ends at z ${shortRedshift(to)}: give an end behind the beginning.`,
+      at: ['from', 'to'],
     };
   return range;
 }

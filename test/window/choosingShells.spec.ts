@@ -1,6 +1,6 @@
 import type { Page } from '@playwright/test';
 import { conewright } from './command.ts';
-import { SHAPLEY } from './files.ts';
+import { drop, SHAPLEY } from './files.ts';
 import { accessible, downloaded, expect, ready, test } from './window.ts';
 
 const edgesOf = async (page: Page): Promise<number[]> => {
@@ -15,7 +15,22 @@ test("four shells of equal volume between two redshifts are the command's", asyn
     page.getByRole('textbox', { name: 'Shells from redshift' }),
     page.getByRole('textbox', { name: 'Shells up to redshift' }),
   ];
-  await page.getByRole('textbox', { name: 'Number of shells' }).fill('4');
+  const number = page.getByRole('textbox', { name: 'Number of shells' });
+  await number.fill('4');
+  // The one field that cannot be read is marked, and a notice of before does not lie over the sentence.
+  await drop(page, 'torn.study.json', '{');
+  const notice = page.locator('.notice').last();
+  await expect(notice).toBeVisible();
+  await to.fill('0,06');
+  await to.press('Enter');
+  await expect(page.getByRole('alert')).toHaveText(/is "0,06": give a number/);
+  await expect(to).toHaveAttribute('aria-describedby');
+  for (const sound of [number, from]) await expect(sound).not.toHaveAttribute('aria-describedby');
+  const [over, under] = [await page.getByRole('alert').boundingBox(), await notice.boundingBox()];
+  const [x, y] = [Math.max(over!.x, under!.x) + 2, Math.max(over!.y, under!.y) + 2];
+  expect(x).toBeLessThan(Math.min(over!.x + over!.width, under!.x + under!.width));
+  expect(y).toBeLessThan(Math.min(over!.y + over!.height, under!.y + under!.height));
+  expect(await page.evaluate(([a, b]) => document.elementFromPoint(a!, b!)?.role, [x, y])).toBe('alert');
   await from.fill('0.06');
   await to.fill('0.03');
   await to.press('Enter');

@@ -290,6 +290,15 @@ describe('schemes', () => {
     expect(why('', '1e4')).toMatch(/ends at z 10000: give/);
     expect(why('near', '')).toMatch(/is "near": give a number/);
   });
+  it('name the ends that are to be mended', () => {
+    const at = (from: string, to: string) => {
+      const found = typedRange({ from, to }, { zMin: null, zMax: null }, sample);
+      return 'sentence' in found ? found.at : null;
+    };
+    expect(at('0.2', '0,9')).toEqual(['to']);
+    expect(at('-1', '0.9')).toEqual(['from']);
+    expect(at('0.9', '0.2')).toEqual(['from', 'to']);
+  });
   it('refuse in a sentence', () => {
     const range = { zMin: null, zMax: null };
     const empty = sortSample(new Float64Array(0), null);
