@@ -195,7 +195,7 @@ export function Stage() {
       engine.progress.value === null ? (
         <p class="stage-empty">
           {studyState.study.value.source === null
-            ? 'Open a catalogue, or drop a file here, and its cone is drawn.'
+            ? 'Open a catalogue, or drop a file here, and its cone is drawn. A region alone is drawn too.'
             : engine.selected.value === null
               ? 'The cone is drawn once the catalogue can be read: see Source.'
               : 'There is no galaxy to draw: see Source.'}

@@ -83,7 +83,8 @@ export const SHELL_QUANTITIES: readonly Quantity<ShellStatistics>[] = [
     show: { decimals: 4 },
     meaning:
       'Effective redshift: the mean with the weights that a clustering measurement at P0 gives each galaxy.',
-    formula: 'sum of w z / sum of w, w = weight / (1 + n(z) P0), n(z) in slices of equal dz inside the shell',
+    formula:
+      'sum of f z / sum of f, f = w / (1 + n(z) P0), w the weight, n(z) in slices of equal dz inside the shell',
     source: `weights: ${FKP}, eq. 2.3.4; the mean: ${PRACTICE}`,
   },
   {
