@@ -29,8 +29,10 @@ export function estimateWords(estimate: NonNullable<Footprint['estimate']>): str
   const inside = cells - borderCells;
   if (borderCells === 0) return `${from}, all counted whole`;
   const share = borderAsCells.toFixed(1);
+  if (inside === 0 && cells === 1)
+    return `${from}: it is on the border, covered in a part that nobody knows, and counts as half a cell`;
   if (inside === 0)
-    return `${from}: all are on the border and covered in part nobody knows, so that they count as half of them, ${share}`;
+    return `${from}: all are on the border, each covered in a part that nobody knows, and count as half of them, ${share}`;
   return (
     `${from}: ${inside} inside the field count whole, and ${borderCells} on its border count as ${share}, as many as would ` +
     `hold their galaxies at the density just inside, which makes ${(inside + borderAsCells).toFixed(1)} cells`

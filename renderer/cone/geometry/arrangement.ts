@@ -73,6 +73,11 @@ export function laneHeights(naturalPx: readonly number[], availablePx: number): 
   return above.map((h) => least + (aboveTotal > 0 ? (h * room) / aboveTotal : 0));
 }
 
+/** How much of a lane is above its axis. The lane's middle is that of the cone at its far end, which need not be the axis. */
+export function laneShare({ alongMin, alongMax }: LateralExtent): number {
+  return alongMax - alongMin > 0 ? alongMax / (alongMax - alongMin) : 0.5;
+}
+
 /** The frame in which all fields are shown in their true directions: a single field's own, else that of the sky. */
 export function commonFrame(fields: readonly ArrangedField[]): Frame {
   const only = fields.length === 1 ? fields[0]! : undefined;
@@ -106,10 +111,7 @@ export function lanes(
     return fields.map((field, i) => {
       const factor = factors[i]!;
       const height = heights[i]!;
-      const { alongMin, alongMax } = field.extent;
-      // The lane's middle is the middle of the cone at its far end, which need not be the axis.
-      const share = alongMax - alongMin > 0 ? alongMax / (alongMax - alongMin) : 0.5;
-      const lift = top - height * share;
+      const lift = top - height * laneShare(field.extent);
       top -= height;
       return lane(i, field.frame, factor, lift);
     });

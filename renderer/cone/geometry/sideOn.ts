@@ -1,4 +1,4 @@
-import { laneHeights, proposeSidewaysFactor } from './arrangement.ts';
+import { laneHeights, laneShare, proposeSidewaysFactor } from './arrangement.ts';
 import type { PreparedField } from './preparedField.ts';
 import type { Viewport } from './projection.ts';
 
@@ -40,9 +40,26 @@ export function restingHeight(side: SideOn, unitsPerPixel: number): number {
   const { enlarged = 1 } = side.viewport;
   const shift = ((SIDE_ROOM.bottom - SIDE_ROOM.top) / 2) * enlarged * unitsPerPixel;
   const field = side.fields[side.current];
-  if (side.parallel || !field) return -shift;
-  const factor = sidewaysFactors(side)[side.current]!;
+  if (!field) return -shift;
+  const factors = sidewaysFactors(side);
+  if (side.parallel) return middleOfLanes(side, factors) - shift;
+  const factor = factors[side.current]!;
   return ((field.extent.alongMax + field.extent.alongMin) / 2) * factor - shift;
+}
+
+/** Half way from the top of the first cone to the foot of the last: a cone need not fill its lane. */
+function middleOfLanes(side: SideOn, factors: readonly number[]): number {
+  const heights = laneHeightsOf(side);
+  const end = side.fields.length - 1;
+  const free = (i: number): { above: number; below: number } => {
+    const { alongMin, alongMax } = side.fields[i]!.extent;
+    const share = laneShare(side.fields[i]!.extent);
+    return {
+      above: heights[i]! * share - alongMax * factors[i]!,
+      below: heights[i]! * (1 - share) + alongMin * factors[i]!,
+    };
+  };
+  return (free(end).below - free(0).above) / 2;
 }
 
 /** Display units of a pixel when the whole radial scale lies between the insets. */

@@ -29,13 +29,18 @@ export function paintAlignedRulers(
   const lower = shareOnStage(pen, scene, last, last.shape.lower) > 0.4;
   const comovingAt = comovingRulerY(pen, scene);
   const below = comovingAt < pen.height - PINNED_COMOVING_PX;
-  if (!upper) pen.veil(0, PINNED_TOP_PX + 6);
-  if (!below) pen.veil(pen.height - (lower ? PINNED_COMOVING_PX : PINNED_REDSHIFT_PX) - 6, pen.height);
+  const veilTo = PINNED_TOP_PX + 6;
+  const veilFrom = pen.height - (lower ? PINNED_COMOVING_PX : PINNED_REDSHIFT_PX) - 6;
+  if (!upper) pen.veil(0, veilTo);
+  if (!below) pen.veil(veilFrom, pen.height);
   straight(pen, scene, last, 'comoving', comovingAt, pen.height / 2);
   if (upper) paintEdge(pen, scene, first, first.shape.upper, 'lookback');
   else straight(pen, scene, first, 'lookback', PINNED_TOP_PX, pen.height / 2);
+  if (!lower) straight(pen, scene, last, 'redshift', pen.height - PINNED_REDSHIFT_PX, pen.height / 2);
+  // Texts that are still to come keep off the veils.
+  if (!upper) pen.labels.reserve({ x: 0, y: 0, width: pen.width, height: veilTo });
+  if (!below) pen.labels.reserve({ x: 0, y: veilFrom - 4, width: pen.width, height: pen.height });
   if (lower) paintEdge(pen, scene, last, last.shape.lower, 'redshift');
-  else straight(pen, scene, last, 'redshift', pen.height - PINNED_REDSHIFT_PX, pen.height / 2);
 }
 
 /** Height of the straight comoving ruler, side-on: below the cone, or along the border when the cone has left the stage. */

@@ -51,6 +51,10 @@ export function drawRuler(pen: Pen, ruler: Ruler): void {
     )
     .map((tick) => ({ tick, p: ruler.at(tick.comovingMpc) }))
     .filter((entry) => entry.p !== null);
+  // Neither between the numbers nor outside of them is room: some numbers give way to the title.
+  const gaps = ruler.inline === true && !fitsOutside(pen, middle, normal, outside);
+  const first = gaps && widestGap(shown, along) < pen.measure(ruler.title) + 2 * widest + 4 * NUMBER_GAP_PX;
+  if (first) drawTitle(pen, ruler, start, end, along, normal, length, NUMBER_OUT_PX);
   const marks = new Float64Array(shown.length);
   shown.sort((a, b) => a.tick.level - b.tick.level);
   for (const [i, { tick, p }] of shown.entries()) {
@@ -66,9 +70,31 @@ export function drawRuler(pen: Pen, ruler: Ruler): void {
     pen.text(tick.text, p![0] + normal[0] * out, p![1] + normal[1] * out, pen.theme.inkMuted, { gap: 4 });
   }
   // Where no gap between numbers is wide enough the title goes outside after all.
-  if (ruler.inline && !drawTitle(pen, ruler, start, end, along, normal, length, NUMBER_OUT_PX)) {
+  if (ruler.inline && !first && !drawTitle(pen, ruler, start, end, along, normal, length, NUMBER_OUT_PX)) {
     drawTitle(pen, ruler, start, end, along, normal, length, outside);
   }
+}
+
+const fitsOutside = (pen: Pen, [x, y]: Point, normal: Point, out: number): boolean => {
+  const [px, py] = [x + normal[0] * out, y + normal[1] * out];
+  return Math.abs(normal[0]) > Math.abs(normal[1])
+    ? px > 8 && px < pen.width - 8
+    : py > 8 && py < pen.height - 8;
+};
+
+/** The widest gap between neighbouring numbers, in pixels. */
+function widestGap(
+  shown: readonly { readonly tick: Tick; readonly p: Point | null }[],
+  along: Point,
+): number {
+  const places = shown
+    .filter(({ tick }) => tick.text !== '')
+    .map(({ p }) => p![0] * along[0] + p![1] * along[1])
+    .sort((a, b) => a - b);
+  return places.reduce(
+    (widest, place, i) => (i === 0 ? widest : Math.max(widest, place - places[i - 1]!)),
+    0,
+  );
 }
 
 /** The title runs along the ruler where the ruler is on the stage; says whether there was room. */

@@ -59,14 +59,13 @@ export function LookChoice(props: {
         light={{ ...look.light, ...choices.light }}
         onChange={(part) => onChange({ light: { ...choices.light, ...part } })}
       />
-      <button
-        type="button"
-        class="link-button"
-        disabled={Object.keys(choices.light).length === 0}
-        onClick={() => onChange({ light: {} })}
-      >
-        Take the study's light
-      </button>
+      {Object.keys(choices.light).length === 0 ? (
+        <p class="field-hint">The light is the study's until you change it.</p>
+      ) : (
+        <button type="button" class="link-button" onClick={() => onChange({ light: {} })}>
+          Take the study's light
+        </button>
+      )}
       <div class="bench-switches">
         <Switch label="Rulers" checked={choices.rulers} onChange={(rulers) => onChange({ rulers })} />
         <Switch label="Shells" checked={choices.shells} onChange={(shells) => onChange({ shells })} />

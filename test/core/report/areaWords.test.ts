@@ -42,5 +42,8 @@ describe('an estimated area in words', () => {
     const estimate = { nside: 1, cellAreaDeg2: 3437.7, cells: 12, areaErrorDeg2: 0 };
     expect(estimateWords({ ...estimate, borderCells: 0, borderAsCells: 0 })).toMatch(/all counted whole$/);
     expect(estimateWords({ ...estimate, borderCells: 12, borderAsCells: 6 })).toMatch(/half of them, 6\.0$/);
+    expect(estimateWords({ ...estimate, cells: 1, borderCells: 1, borderAsCells: 0.5 })).toMatch(
+      /: it is on the border, .* counts as half a cell$/,
+    );
   });
 });
