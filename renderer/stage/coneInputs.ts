@@ -120,6 +120,8 @@ const SMALLEST_PART = 0.01;
 /** How far the drawn outline of an estimate may lie from that of its cells: of a cell's side, and of the field's radius. */
 const CELL_SHARE = 0.75;
 const RADIUS_SHARE = 0.02;
+/** And never farther than this of the radius: smoothed by its cells, a field of a few of them would be a sliver. */
+const MOST_RADIUS_SHARE = 0.15;
 const MOST_RADIUS_DEG = 50;
 
 /** The footprint as the cone takes it. The rim of an estimate is smoothed: where a cell ends says nothing of the sky. */
@@ -134,7 +136,10 @@ export function coneFootprint({
   const smoothed = drawn.map((f) => ({
     ...f,
     rings: mainRings(f.rings, SMALLEST_PART),
-    toleranceDeg: Math.max(CELL_SHARE * cellDeg, RADIUS_SHARE * Math.min(f.radiusDeg, MOST_RADIUS_DEG)),
+    toleranceDeg: Math.min(
+      MOST_RADIUS_SHARE * f.radiusDeg,
+      Math.max(CELL_SHARE * cellDeg, RADIUS_SHARE * Math.min(f.radiusDeg, MOST_RADIUS_DEG)),
+    ),
   }));
   return { fields: smoothed, wide, estimated: true };
 }

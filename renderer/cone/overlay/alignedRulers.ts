@@ -14,6 +14,10 @@ const PINNED_REDSHIFT_PX = 62;
 const PINNED_COMOVING_PX = 30;
 /** Room beside a ruler for its numbers. */
 const NUMBERS_PX = 24;
+/** Above a veil's ruler, its own line and marks. */
+const VEIL_PX = 6;
+/** What an edge with numbers keeps free at the bottom: the comoving ruler's veil and the room of its own numbers. */
+const ROOM_BELOW_PX = PINNED_COMOVING_PX + VEIL_PX + NUMBERS_PX;
 
 /**
  * Side-on: lookback on the upper edge, redshift on the lower one, comoving distance straight below everything, parallel
@@ -29,8 +33,8 @@ export function paintAlignedRulers(
   const lower = shareOnStage(pen, scene, last, last.shape.lower) > 0.4;
   const comovingAt = comovingRulerY(pen, scene);
   const below = comovingAt < pen.height - PINNED_COMOVING_PX;
-  const veilTo = PINNED_TOP_PX + 6;
-  const veilFrom = pen.height - (lower ? PINNED_COMOVING_PX : PINNED_REDSHIFT_PX) - 6;
+  const veilTo = PINNED_TOP_PX + VEIL_PX;
+  const veilFrom = pen.height - (lower ? PINNED_COMOVING_PX : PINNED_REDSHIFT_PX) - VEIL_PX;
   if (!upper) pen.veil(0, veilTo);
   if (!below) pen.veil(veilFrom, pen.height);
   straight(pen, scene, last, 'comoving', comovingAt, pen.height / 2);
@@ -59,7 +63,7 @@ export function upperIsPinned(pen: Pen, scene: OverlayScene): boolean {
   return scene.aligned && first !== undefined && shareOnStage(pen, scene, first, first.shape.upper) <= 0.4;
 }
 
-/** How much of an edge that lies between the sides of the stage also lies between its top and bottom. */
+/** How much of an edge that lies between the sides of the stage also lies where its numbers have room. */
 function shareOnStage(pen: Pen, scene: OverlayScene, lane: PaintedLane, edge: Vec3): number {
   const at = onEdge(scene, lane, edge);
   const [start, end] = [at(0), at(scene.farMpc)];
@@ -72,13 +76,15 @@ function shareOnStage(pen: Pen, scene: OverlayScene, lane: PaintedLane, edge: Ve
     if (x < 0 || x > pen.width) continue;
     between++;
     const y = start[1] + ((end[1] - start[1]) * i) / steps;
-    if (y > NUMBERS_PX && y < pen.height - NUMBERS_PX) shown++;
+    if (hasRoom(pen, y)) shown++;
   }
   if (between > 0) return shown / between;
   // Zoomed in between two steps: the middle of the stage decides.
   const y = start[1] + ((end[1] - start[1]) * (pen.width / 2 - start[0])) / (end[0] - start[0]);
-  return y > NUMBERS_PX && y < pen.height - NUMBERS_PX ? 1 : 0;
+  return hasRoom(pen, y) ? 1 : 0;
 }
+
+const hasRoom = (pen: Pen, y: number): boolean => y > NUMBERS_PX && y < pen.height - ROOM_BELOW_PX;
 
 /** A ruler parallel to the axis at a height of the stage, its marks away from another height. */
 function straight(

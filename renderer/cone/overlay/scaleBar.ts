@@ -55,10 +55,6 @@ export function drawScaleBar(
     pen.theme.ink,
     1,
   );
-  const { context } = pen;
   pen.font(11.5);
-  context.textAlign = 'center';
-  context.textBaseline = 'alphabetic';
-  context.fillStyle = pen.theme.ink;
-  context.fillText(text, x + Math.max(widthPx, textWidth) / 2, y - 9);
+  pen.write(text, x + Math.max(widthPx, textWidth) / 2, y - 13, pen.theme.ink);
 }
