@@ -18,6 +18,8 @@ const NUMBERS_PX = 24;
 const VEIL_PX = 6;
 /** What an edge with numbers keeps free at the bottom: the comoving ruler's veil and the room of its own numbers. */
 const ROOM_BELOW_PX = PINNED_COMOVING_PX + VEIL_PX + NUMBERS_PX;
+/** So much of the lower edge must have room, or redshift is told along the border. */
+const LOWER_SHARE = 0.7;
 
 /**
  * Side-on: lookback on the upper edge, redshift on the lower one, comoving distance straight below everything, parallel
@@ -30,7 +32,7 @@ export function paintAlignedRulers(
   last: PaintedLane,
 ): void {
   const upper = !upperIsPinned(pen, scene);
-  const lower = shareOnStage(pen, scene, last, last.shape.lower) > 0.4;
+  const lower = shareOnStage(pen, scene, last, last.shape.lower) > LOWER_SHARE;
   const comovingAt = comovingRulerY(pen, scene);
   const below = comovingAt < pen.height - PINNED_COMOVING_PX;
   const veilTo = PINNED_TOP_PX + VEIL_PX;
@@ -51,7 +53,7 @@ export function paintAlignedRulers(
 export function comovingRulerY(pen: Pen, scene: OverlayScene): number {
   const pinned = pen.height - PINNED_COMOVING_PX;
   const last = scene.lanes.at(-1);
-  if (!last || shareOnStage(pen, scene, last, last.shape.lower) <= 0.4) return pinned;
+  if (!last || shareOnStage(pen, scene, last, last.shape.lower) <= LOWER_SHARE) return pinned;
   const low = last.lift + last.shape.extent.alongMin * last.sidewaysFactor;
   const y = project(scene.pixels, 0, low, 0)?.[1] ?? pen.height;
   return Math.min(pinned, y + COMOVING_DROP_PX);

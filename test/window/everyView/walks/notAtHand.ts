@@ -51,8 +51,8 @@ export const beyondTheAntipode: Walk = {
       ],
     });
     await expect(page.locator('.stage-cone canvas').first()).toBeVisible();
-    // The demo's three fields stand until the region of the study is ready.
-    await expect(page.locator('.stage-bar').getByText('field 1 of 3')).toBeHidden();
+    // The demo's three fields stand until the study's own region is ready.
+    await expect(page.locator('.engine-line')).toHaveText('no catalogue');
     return page;
   },
   views: [
