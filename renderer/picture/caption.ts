@@ -2,6 +2,7 @@ import { roundTo } from '../../shared-core/base/roundTo.ts';
 import { findPublishedSet } from '../../shared-core/cosmology/publishedSets.ts';
 import { areaText } from '../../shared-core/report/areaWords.ts';
 import { cutWords } from '../../shared-core/report/cuts.ts';
+import { UNNAMED } from '../../shared-core/study/document.ts';
 import type { PictureNumbers } from './numbers.ts';
 
 /** A count with its thousands parted by narrow spaces. */
@@ -64,3 +65,6 @@ function cosmologyText({ study, cosmology }: PictureNumbers): string {
 
 /** A name and its number stay on one line. */
 const unbroken = (text: string): string => text.replace(' ', '\u00a0');
+
+/** The title of a picture that was given none: its study's name, once somebody has named it. */
+export const offeredTitle = ({ name }: { readonly name: string }): string => (name === UNNAMED ? '' : name);

@@ -1,5 +1,5 @@
 import type { PictureOptions, PictureView } from '../../shared-core/picture/options.ts';
-import { offeredCaption } from './caption.ts';
+import { offeredCaption, offeredTitle } from './caption.ts';
 import { describeInWords } from './describe.ts';
 import { type PictureFrame, paintFrame, viewBox } from './frame.ts';
 import { placePoints } from './galaxies/placePoints.ts';
@@ -42,7 +42,7 @@ export function laidOut<View extends { readonly notes: readonly string[] }>(
   let frame: PictureFrame = {
     width: options.widthPx / pxPerUnit,
     height: options.heightPx / pxPerUnit,
-    title: options.title ?? numbers.study.name,
+    title: options.title ?? offeredTitle(numbers.study),
     caption: options.caption ?? '',
     options,
     numbers,

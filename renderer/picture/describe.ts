@@ -46,14 +46,17 @@ export function describeInWords(
 }
 
 /** A sentence for each shell, with the digits and the unit of length of the ledger. */
-function shellSentences({ shells, all, units }: PictureNumbers): string[] {
+function shellSentences({ shells, all, units, facts }: PictureNumbers): string[] {
   const column = all === null ? shells : [...shells, all];
   const [near, far] = DISTANCES.map((quantity) => shownColumn(quantity, column, units));
   const unit = shownUnit(DISTANCES[0]!, units);
   return shellRanges(shells).map((range, i) => {
     const shell = shells[i]!;
-    const galaxies =
-      shell.count === 0 ? 'no galaxies' : `${shell.count} ${shell.count === 1 ? 'galaxy' : 'galaxies'}`;
-    return `Shell ${range}: ${galaxies}, comoving distance ${near!(shell)} to ${far!(shell)} ${unit}.`;
+    // A plan has none to count.
+    const galaxies = facts.selected === null ? '' : `${held(shell.count)}, `;
+    return `Shell ${range}: ${galaxies}comoving distance ${near!(shell)} to ${far!(shell)} ${unit}.`;
   });
 }
+
+const held = (count: number): string =>
+  count === 0 ? 'no galaxies' : `${count} ${count === 1 ? 'galaxy' : 'galaxies'}`;

@@ -7,8 +7,11 @@ import { compileRegion } from '../sky/compileRegion.ts';
 import { MIGRATIONS, type Migrations } from './migrations.ts';
 import { STUDY_FORMAT, STUDY_VERSION, type Study, studySchema, USUAL_LIGHT } from './schema.ts';
 
+/** What a study is called before anybody has named it: no title for a picture. */
+export const UNNAMED = 'Untitled';
+
 /** A study with nothing in it yet: Planck 2018, no catalogue, no shells. */
-export function emptyStudy(name = 'Untitled'): Study {
+export function emptyStudy(name = UNNAMED): Study {
   const set = findPublishedSet('planck2018');
   return {
     format: STUDY_FORMAT,

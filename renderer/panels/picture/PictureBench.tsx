@@ -2,6 +2,7 @@ import { useEffect, useMemo, useState } from 'preact/hooks';
 import { filmFrames, waitText } from '../../../shared-core/picture/film.ts';
 import type { DrawnFormat } from '../../../shared-core/picture/job.ts';
 import { drawingBytes, memoryText } from '../../../shared-core/picture/memory.ts';
+import { offeredTitle } from '../../picture/caption.ts';
 import { colourRemark } from '../../picture/numbers.ts';
 import { useApp } from '../../state/app.ts';
 import { ChoiceField } from '../../ui/ChoiceField.tsx';
@@ -127,7 +128,7 @@ export function PictureBench({ onClose }: { readonly onClose: () => void }) {
             <LookChoice choices={choices} onChange={change} />
             <WordsChoice
               choices={choices}
-              studyName={app.studyState.study.value.name}
+              studyName={offeredTitle(app.studyState.study.value)}
               offeredCaption={shown.preview?.offeredCaption ?? ''}
               onChange={change}
             />

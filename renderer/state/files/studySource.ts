@@ -1,6 +1,7 @@
 import { computed, type ReadonlySignal, signal } from '@preact/signals';
 import type { Bridge } from '../../../shared-core/bridge/contract.ts';
 import type { OpenedFile } from '../../../shared-core/bridge/messages.ts';
+import { UNNAMED } from '../../../shared-core/study/document.ts';
 import { change } from '../../../shared-core/study/edits.ts';
 import type { Study, StudySource } from '../../../shared-core/study/schema.ts';
 import { loadKey } from '../../engine/loadKey.ts';
@@ -139,5 +140,5 @@ export function createStudySource(
 
 /** The name that a study takes from its catalogue. */
 export function catalogueTitle(fileName: string): string {
-  return fileName.replace(/(\.(csv|tsv|txt|dat))?(\.gz)?$/i, '').slice(0, 200) || 'Untitled';
+  return fileName.replace(/(\.(csv|tsv|txt|dat))?(\.gz)?$/i, '').slice(0, 200) || UNNAMED;
 }

@@ -5,6 +5,7 @@ import type { Scene, TextItem } from '../../../renderer/picture/scene.ts';
 import { textWidth } from '../../../renderer/picture/text/measure.ts';
 import { createCosmology } from '../../../shared-core/cosmology/cosmology.ts';
 import { PICTURE_STYLES, PICTURE_VIEWS } from '../../../shared-core/picture/options.ts';
+import { UNNAMED } from '../../../shared-core/study/document.ts';
 import { changeLook } from '../../../shared-core/study/edits.ts';
 import { factsOf, STUDY, small } from './facts.ts';
 
@@ -64,7 +65,14 @@ describe.each(PICTURE_VIEWS)('view %s', (view) => {
 
   it('is drawn for a plan without galaxies, and for a shell that holds none', () => {
     const plan = { ...facts, selected: null, background: null };
-    expect(composePicture(small({ view }), plan).points.count).toBe(0);
+    const drawn = composePicture(small({ view }), plan);
+    expect(drawn.points.count).toBe(0);
+    // Its shells are told by their distances alone.
+    expect(describePicture(drawn)).not.toContain('no galaxies,');
+    expect(describePicture(drawn)).toMatch(/Shell [^:]+: comoving distance/);
+    const unnamed = composePicture(small({ view }), { ...plan, study: { ...STUDY, name: UNNAMED } });
+    expect(texts(unnamed).some((item) => item.text === UNNAMED)).toBe(false);
+    expect(texts(drawn).some((item) => item.text === STUDY.name)).toBe(true);
     const empty = { ...facts, study: { ...STUDY, edges: [2.5, 3, 3.5] } };
     expect(describePicture(composePicture(small({ view }), empty))).toContain(
       'Shell 2.5 ≤ z < 3: no galaxies',
