@@ -1,5 +1,5 @@
 import type { ConeTheme } from '../types.ts';
-import { LabelPlacer } from './labelPlacer.ts';
+import { type Box, LabelPlacer } from './labelPlacer.ts';
 
 export type Point = readonly [x: number, y: number];
 
@@ -50,14 +50,15 @@ export class Pen {
 
   /**
    * Text with its middle at a point, on a halo of the ground so that it reads over galaxies. Not drawn where it would
-   * touch an earlier text or leave the stage; says whether it was drawn.
+   * touch an earlier text or leave the stage; says whether it was drawn. A plate of the ground makes it read over a
+   * crowd of galaxies too.
    */
   text(
     text: string,
     x: number,
     y: number,
     colour: string,
-    options: { sizePx?: number; weight?: number; gap?: number; must?: boolean } = {},
+    options: { sizePx?: number; weight?: number; gap?: number; must?: boolean; plate?: boolean } = {},
   ): boolean {
     const { context } = this;
     const size = options.sizePx ?? 11.5;
@@ -66,8 +67,17 @@ export class Pen {
     const box = { x: x - width / 2, y: y - size * 0.62, width, height: size * 1.24 };
     if (options.must) this.labels.reserve(box);
     else if (!this.labels.place(box, options.gap)) return false;
+    if (options.plate) this.plate(box);
     this.write(text, x, y, colour);
     return true;
+  }
+
+  private plate({ x, y, width, height }: Box): void {
+    const { context } = this;
+    context.globalAlpha = 0.82;
+    context.fillStyle = this.theme.background;
+    context.fillRect(x - 4, y - 1, width + 8, height + 2);
+    context.globalAlpha = 1;
   }
 
   /** A band of the ground over the picture, from one height to another, so that rulers on it read well. */

@@ -105,7 +105,7 @@ export function paintShellLabels(pen: Pen, scene: OverlayScene): void {
     const text = shell.longLabel ?? shell.label;
     const colour = cssColour(scene.shellColours[index]!);
     for (const dy of LABEL_PLACES_PX) {
-      if (pen.text(text, p[0], p[1] + dy, colour, { sizePx: 12.5, weight: 600 })) break;
+      if (pen.text(text, p[0], p[1] + dy, colour, { sizePx: 12.5, weight: 600, plate: dy > 0 })) break;
     }
   }
 }
