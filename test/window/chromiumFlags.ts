@@ -1,9 +1,7 @@
-/** Software WebGL, and no calls to the outside. */
+/** As the program starts it, software WebGL permitted: the processor puts the page together. No calls to the outside. */
 export const FLAGS = [
   '--no-sandbox',
-  '--use-angle=swiftshader',
   '--enable-unsafe-swiftshader',
-  '--ignore-gpu-blocklist',
   '--disable-background-networking',
   '--disable-component-update',
   '--disable-sync',
