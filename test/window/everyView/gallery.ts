@@ -1,9 +1,9 @@
 import { mkdirSync, writeFileSync } from 'node:fs';
 import { join, resolve } from 'node:path';
 import type { Page } from '@playwright/test';
-import { test } from '../window.ts';
+import { accessible, test } from '../window.ts';
 import { goThrough, inBothThemes } from './view.ts';
-import { WALKS } from './walks.ts';
+import { LONG_WALKS, WALKS } from './walks.ts';
 
 const SIZES = [
   { width: 1280, height: 800 },
@@ -20,7 +20,7 @@ if (folder === undefined || folder === '')
 const into = resolve(process.env.INIT_CWD ?? '.', folder);
 
 for (const size of SIZES)
-  for (const walk of WALKS)
+  for (const walk of [...WALKS, ...LONG_WALKS])
     test(`${walk.name} at ${size.width} by ${size.height}`, async ({ desk }) => {
       const here = join(into, walk.name);
       mkdirSync(here, { recursive: true });
@@ -28,6 +28,7 @@ for (const size of SIZES)
         inBothThemes(page, async (theme) => {
           const name = `${String(number).padStart(2, '0')} ${view.name}`;
           writeFileSync(join(here, `${name} ${size.width} ${theme}.png`), await atRest(page));
+          if (LONG_WALKS.includes(walk)) await accessible(page, view.within);
         }),
       );
     });
