@@ -132,15 +132,19 @@ export async function ready(page: Page): Promise<void> {
   await expect(page.locator('.engine-line')).toHaveText(/kept · .* set aside/, { timeout: 90_000 });
 }
 
-/** No violation of WCAG that axe can find, in the window or the parts of it that a selector names. */
-export async function accessible(page: Page, within = 'body'): Promise<void> {
+/**
+ * No violation of WCAG that axe can find, in the window or the parts of it that a selector names.
+ *
+ * @param rules those of axe; all if not given
+ */
+export async function accessible(page: Page, within = 'body', rules: readonly string[] = []): Promise<void> {
   // Half a megabyte of axe is brought into a page once.
   const isThere = await page.evaluate(() => 'axe' in globalThis);
-  const { violations } = await new AxeBuilder({ page, ...(isThere ? { axeSource: 'null' } : {}) })
+  const axe = new AxeBuilder({ page, ...(isThere ? { axeSource: 'null' } : {}) })
     .setLegacyMode(true)
     .options({ resultTypes: ['violations'] })
-    .include(within)
-    .analyze();
+    .include(within);
+  const { violations } = await (rules.length === 0 ? axe : axe.withRules([...rules])).analyze();
   expect(
     violations.map(
       (v) => `${v.id}: ${v.nodes.map((n) => `${n.target.join(' ')} (${n.failureSummary})`).join('; ')}`,
